@@ -1,0 +1,1 @@
+export default defineNuxtConfig({ srcDir: '.', ssr: false, compatibilityDate: '2026-12-01', telemetry: false })

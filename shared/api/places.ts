@@ -1,0 +1,97 @@
+import { z } from 'zod'
+import { axisFlags, axisKinds } from '../settings/types'
+import { nameplateSchema } from '../settings/nameplate'
+import { idSchema, idText, instantSchema, nameSchema, reasonSchema, serialSchema, tagSchema } from './common'
+
+const rev = { rev: z.int().optional().describe('the rev that was read; 428 without, 409 edited-meanwhile when stale') }
+const text = (most: number) => z.string().max(most)
+
+export const siteBody = z.strictObject({ name: nameSchema, timeZone: z.string().min(1).max(64).describe('IANA name') })
+export const sitePatch = z.strictObject({
+  ...rev, name: nameSchema.optional(), timeZone: z.string().min(1).max(64).optional(),
+  fourEyes: z.boolean().optional(), releaseHours: z.int().min(1).max(720).optional(), knownGoodMonths: z.int().min(1).max(120).optional(),
+  watched: z.array(z.string().max(80)).max(200).optional().describe('field names watched besides the usual ones'),
+})
+export const siteSchema = z.object({
+  id: idSchema, rev: z.int(), name: z.string(), timeZone: z.string(), fourEyes: z.boolean(), releaseHours: z.int(),
+  knownGoodMonths: z.int(), watched: z.array(z.string()),
+})
+export type Site = z.infer<typeof siteSchema>
+
+export const lineBody = z.strictObject({ siteId: idSchema, name: nameSchema })
+export const linePatch = z.strictObject({ ...rev, name: nameSchema.optional(), siteId: idSchema.optional() })
+export const lineSchema = z.object({ id: idSchema, rev: z.int(), siteId: idSchema, name: z.string() })
+export type Line = z.infer<typeof lineSchema>
+
+export const machineBody = z.strictObject({ lineId: idSchema, name: nameSchema })
+export const machinePatch = z.strictObject({ ...rev, name: nameSchema.optional(), lineId: idSchema.optional() })
+export const machineSchema = z.object({ id: idSchema, rev: z.int(), lineId: idSchema, name: z.string() })
+export type Machine = z.infer<typeof machineSchema>
+
+export const dutySchema = z.strictObject({ moves: z.array(z.int().min(0).max(1023)).min(1).max(256), cycleTime: z.number().positive().describe('ms') })
+const axisFields = {
+  machineId: idSchema, tag: tagSchema, axisKind: z.enum(axisKinds),
+  role: text(80).optional(), flags: z.array(z.enum(axisFlags)).max(3).optional(), bus: text(80).optional(),
+  uploadEveryHours: z.int().min(1).max(8760).nullable().optional().describe('how often an upload is due; null = never'),
+  duty: dutySchema.nullable().optional(),
+}
+export const axisBody = z.strictObject(axisFields)
+export const axisPatch = z.strictObject({
+  ...rev, machineId: idSchema.optional(), tag: tagSchema.optional(), role: axisFields.role, flags: axisFields.flags, bus: axisFields.bus,
+  uploadEveryHours: axisFields.uploadEveryHours, duty: axisFields.duty,
+})
+
+export const unitStates = ['spare', 'fitted', 'failed', 'repair', 'scrapped'] as const
+const unitFields = {
+  serial: serialSchema, channel: z.int().min(1).max(64).optional(), model: z.string().min(1).max(64), firmware: text(32).optional(),
+  actuatorSerial: text(64).optional(), actuatorModel: text(64).optional(), location: text(200).optional(), state: z.enum(unitStates).optional(),
+  siteId: idSchema.optional().describe('where it lies'),
+}
+export const unitBody = z.strictObject(unitFields)
+export const unitPatch = z.strictObject({
+  ...rev, model: unitFields.model.optional(), firmware: unitFields.firmware, actuatorSerial: unitFields.actuatorSerial,
+  actuatorModel: unitFields.actuatorModel, location: unitFields.location, state: unitFields.state, siteId: unitFields.siteId.nullable(),
+})
+export const unitSchema = z.object({
+  id: idSchema, rev: z.int(), serial: z.string(), channel: z.int().nullable(), model: z.string(), firmware: z.string().nullable(),
+  actuatorSerial: z.string().nullable(), actuatorModel: z.string().nullable(), location: z.string(), state: z.enum(unitStates),
+  siteId: idSchema.nullable(), /** Where it sits now. */ axis: z.object({ id: idSchema, tag: z.string() }).nullable(),
+  /** A nameplate of its model is registered. */ modelKnown: z.boolean(),
+})
+export type Unit = z.infer<typeof unitSchema>
+export const unitQuery = z.strictObject({
+  limit: z.coerce.number().int().min(1).max(200).optional(), cursor: z.string().max(200).optional(),
+  search: z.string().max(80).optional(), state: z.enum(unitStates).optional(), model: z.string().max(64).optional(),
+})
+
+export const fittingBody = z.strictObject({ axisId: idSchema, unitId: idSchema, at: instantSchema })
+export const fittingEndBody = z.strictObject({ at: instantSchema, unitState: z.enum(['spare', 'failed', 'repair', 'scrapped']) })
+export const fittingSchema = z.object({
+  id: idSchema, axisId: idSchema, axisTag: z.string(), unitId: idSchema, serial: z.string(), from: instantSchema, to: instantSchema.nullable(),
+})
+export type Fitting = z.infer<typeof fittingSchema>
+
+/** POST adds a revision; PATCH adds one that differs in the named fields (rev = the revision read). */
+export const nameplateBody = nameplateSchema
+export const nameplatePatch = z.strictObject({ ...rev, ...nameplateSchema.partial().shape })
+export const nameplateRecord = z.object({
+  id: idSchema.describe('of the newest revision'), model: z.string(), revision: z.int(), rev: z.int(), madeAt: instantSchema, madeBy: z.string(),
+  nameplate: nameplateSchema, units: z.int().describe('registered units of the model'),
+})
+export type NameplateRecord = z.infer<typeof nameplateRecord>
+export const nameplateRevision = z.object({ id: idSchema, revision: z.int(), madeAt: instantSchema, madeBy: z.string(), nameplate: nameplateSchema })
+export type NameplateRevision = z.infer<typeof nameplateRevision>
+
+export const ruleScopes = ['site', 'machine', 'axis'] as const
+const ruleValue = z.union([z.number(), z.boolean(), z.string().max(256)])
+export const ruleBody = z.strictObject({
+  scope: z.enum(ruleScopes), scopeId: idSchema, field: z.string().min(1).max(80),
+  min: z.number().optional(), max: z.number().optional(), fixed: ruleValue.optional(), reason: reasonSchema,
+})
+export const ruleEndBody = z.strictObject({ reason: reasonSchema })
+export const ruleSchema = z.object({
+  id: idSchema, scope: z.enum(ruleScopes), scopeId: idSchema, scopeName: z.string(), field: z.string(), min: z.number().nullable(), max: z.number().nullable(),
+  fixed: ruleValue.nullable(), reason: z.string(), madeAt: instantSchema, madeBy: z.string(), endedAt: instantSchema.nullable(), endedBy: z.string().nullable(), endReason: z.string().nullable(),
+})
+export type Rule = z.infer<typeof ruleSchema>
+export const placeQuery = z.strictObject({ limit: z.coerce.number().int().min(1).max(200).optional(), cursor: z.string().max(200).optional(), siteId: idText.optional(), lineId: idText.optional(), machineId: idText.optional() })

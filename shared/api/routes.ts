@@ -1,0 +1,116 @@
+import { z } from 'zod'
+import * as board from './board'
+import { axisParams, created, idParams, listQuery, pageOf, roles, type Role } from './common'
+import * as people from './people'
+import * as places from './places'
+import * as uploads from './uploads'
+import * as versions from './versions'
+
+/*
+ * The one table of routes: who may call, what goes in, what comes out. A handler that is not in it does not build, a call
+ * that it does not allow does not reach a handler.
+ */
+
+/** Whose site must be among the caller's: found from `params.id`. Others answer 404, as if they were not there. */
+export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray'
+
+export interface RouteDeclaration {
+  /** 'anyone' needs no sign-in; 'signed-in' any role. */
+  readonly may: 'anyone' | 'signed-in' | readonly Role[]
+  /** A script's token with this scope may call it, whatever roles its owner has. */
+  readonly token?: 'upload' | 'read'
+  /** The body carries the password again; a token or a shared account never signs. */
+  readonly sign?: true
+  readonly scope?: Scope
+  readonly params?: z.ZodType
+  readonly query?: z.ZodType
+  /** JSON body; 'file' = a settings file, raw or multipart, streamed. */
+  readonly body?: z.ZodType | 'file'
+  readonly answers: Readonly<Record<number, z.ZodType | 'file'>>
+  /** One line for the interface page. */
+  readonly says: string
+}
+
+const all = [...roles] as const
+const uploaders = ['technician', 'planner'] as const
+const planner = ['planner'] as const
+const admin = ['admin'] as const
+const none = z.object({})
+
+export const routes = {
+  'GET /api/health': { may: 'anyone', answers: { 200: board.healthSchema, 503: board.healthSchema }, says: 'Whether the vault answers and can be written.' },
+  'GET /api/openapi.json': { may: 'anyone', answers: { 200: z.unknown() }, says: 'This table as OpenAPI 3.1.' },
+  'GET /api/format/schema.json': { may: 'anyone', answers: { 200: z.unknown() }, says: 'The settings format as JSON Schema (draft 2020-12).' },
+  'POST /api/set-up': { may: 'anyone', body: people.setUpBody, answers: { 200: people.meSchema }, says: 'Makes the first administrator, once, with the address printed at the first start.' },
+  'POST /api/sign-in': { may: 'anyone', body: people.signInBody, answers: { 200: people.meSchema }, says: 'Begins a session; 429 after 10 failures an account or 60 an address in 15 minutes.' },
+  'POST /api/sign-out': { may: 'signed-in', answers: { 204: none }, says: 'Ends this session at once.' },
+  'GET /api/me': { may: 'signed-in', token: 'read', answers: { 200: people.meSchema }, says: 'Who is asking, and for which sites.' },
+  'POST /api/me/password': { may: 'signed-in', body: people.ownPasswordBody, answers: { 204: none }, says: 'A new password of one’s own; ends all other sessions.' },
+
+  'GET /api/people': { may: admin, query: listQuery, answers: { 200: pageOf(people.personSchema) }, says: 'All people, those who left too.' },
+  'POST /api/people': { may: admin, body: people.personBody, answers: { 201: created }, says: 'Registers a person.' },
+  'PATCH /api/people/:id': { may: admin, params: idParams, body: people.personPatch, answers: { 200: people.personSchema }, says: 'Changes a person; holds at once.' },
+  'GET /api/people/names': { may: uploaders, answers: { 200: z.object({ items: z.array(z.object({ id: z.int(), name: z.string() })) }) }, says: 'Names to choose from for changed by and allowed by.' },
+  'GET /api/tokens': { may: admin, query: listQuery, answers: { 200: pageOf(people.tokenSchema) }, says: 'Tokens of scripts, without their secrets.' },
+  'POST /api/tokens': { may: admin, body: people.tokenBody, answers: { 201: people.tokenMade }, says: 'Makes a token; it is shown once.' },
+  'POST /api/tokens/:id/end': { may: admin, params: idParams, answers: { 200: people.tokenSchema }, says: 'Ends a token at once.' },
+
+  'GET /api/sites': { may: all, token: 'read', query: listQuery, answers: { 200: pageOf(places.siteSchema) }, says: 'Sites.' },
+  'POST /api/sites': { may: planner, body: places.siteBody, answers: { 201: created }, says: 'Registers a site; only by people without site bounds.' },
+  'GET /api/sites/:id': { may: all, token: 'read', scope: 'site', params: idParams, answers: { 200: places.siteSchema }, says: 'One site.' },
+  'PATCH /api/sites/:id': { may: planner, scope: 'site', params: idParams, body: places.sitePatch, answers: { 200: places.siteSchema }, says: 'Changes a site and its terms.' },
+  'GET /api/lines': { may: all, token: 'read', query: places.placeQuery, answers: { 200: pageOf(places.lineSchema) }, says: 'Lines.' },
+  'POST /api/lines': { may: planner, body: places.lineBody, answers: { 201: created }, says: 'Registers a line.' },
+  'GET /api/lines/:id': { may: all, token: 'read', scope: 'line', params: idParams, answers: { 200: places.lineSchema }, says: 'One line.' },
+  'PATCH /api/lines/:id': { may: planner, scope: 'line', params: idParams, body: places.linePatch, answers: { 200: places.lineSchema }, says: 'Changes a line.' },
+  'GET /api/machines': { may: all, token: 'read', query: places.placeQuery, answers: { 200: pageOf(places.machineSchema) }, says: 'Machines.' },
+  'POST /api/machines': { may: planner, body: places.machineBody, answers: { 201: created }, says: 'Registers a machine.' },
+  'GET /api/machines/:id': { may: all, token: 'read', scope: 'machine', params: idParams, answers: { 200: places.machineSchema }, says: 'One machine.' },
+  'PATCH /api/machines/:id': { may: planner, scope: 'machine', params: idParams, body: places.machinePatch, answers: { 200: places.machineSchema }, says: 'Changes a machine.' },
+
+  'GET /api/axes': { may: all, token: 'read', query: places.placeQuery, answers: { 200: pageOf(versions.axisSchema) }, says: 'Axes with their state.' },
+  'POST /api/axes': { may: planner, body: places.axisBody, answers: { 201: created }, says: 'Registers an axis.' },
+  'GET /api/axes/:id': { may: all, token: 'read', scope: 'axis', params: axisParams, answers: { 200: versions.axisSchema }, says: 'One axis, by id or tag:TAG.' },
+  'PATCH /api/axes/:id': { may: planner, scope: 'axis', params: axisParams, body: places.axisPatch, answers: { 200: versions.axisSchema }, says: 'Changes an axis; its history stays under a new tag.' },
+  'GET /api/axes/:id/versions': { may: all, token: 'read', scope: 'axis', params: axisParams, query: listQuery, answers: { 200: pageOf(versions.versionSchema) }, says: 'Its versions, newest number first.' },
+  'GET /api/axes/:id/versions/:number': { may: all, token: 'read', scope: 'axis', params: versions.versionRef, answers: { 200: versions.versionOne }, says: 'One version by its number on the axis.' },
+  'GET /api/axes/:id/life': { may: all, token: 'read', scope: 'axis', params: axisParams, query: listQuery, answers: { 200: pageOf(versions.lifeEvent) }, says: 'What happened to it, newest first.' },
+  'GET /api/axes/:id/as-of': { may: all, token: 'read', scope: 'axis', params: axisParams, query: versions.asOfQuery, answers: { 200: z.object({ version: versions.versionSchema.nullable() }) }, says: 'What was current at an instant, by what had been received by then.' },
+  'GET /api/axes/:id/fittings': { may: all, token: 'read', scope: 'axis', params: axisParams, answers: { 200: z.object({ items: z.array(places.fittingSchema) }) }, says: 'Which units sat there, newest first.' },
+  'POST /api/axes/:id/known-good/none': { may: planner, scope: 'axis', sign: true, params: axisParams, body: versions.knownGoodBody, answers: { 201: created }, says: 'Says that no version is known-good; signed.' },
+  'POST /api/axes/:id/kit': { may: uploaders, scope: 'axis', params: axisParams, body: versions.kitBody, answers: { 200: 'file' }, says: 'The known-good values as a file for a replacement unit; logged.' },
+
+  'GET /api/units': { may: all, token: 'read', query: places.unitQuery, answers: { 200: pageOf(places.unitSchema) }, says: 'Units and spares.' },
+  'POST /api/units': { may: planner, body: places.unitBody, answers: { 201: created }, says: 'Registers a unit.' },
+  'GET /api/units/:id': { may: all, token: 'read', scope: 'unit', params: idParams, answers: { 200: places.unitSchema }, says: 'One unit.' },
+  'PATCH /api/units/:id': { may: planner, scope: 'unit', params: idParams, body: places.unitPatch, answers: { 200: places.unitSchema }, says: 'Changes a unit; its state moves are logged.' },
+  'POST /api/fittings': { may: planner, body: places.fittingBody, answers: { 201: created }, says: 'A unit sits at an axis since; 409 overlaps.' },
+  'POST /api/fittings/:id/end': { may: planner, scope: 'fitting', params: idParams, body: places.fittingEndBody, answers: { 200: places.fittingSchema }, says: 'The unit was taken out, and what it is now.' },
+  'GET /api/nameplates': { may: all, token: 'read', query: listQuery, answers: { 200: pageOf(places.nameplateRecord) }, says: 'Models, each with its newest revision.' },
+  'POST /api/nameplates': { may: planner, body: places.nameplateBody, answers: { 201: created }, says: 'Registers a model.' },
+  'GET /api/nameplates/:id': { may: all, token: 'read', params: idParams, answers: { 200: places.nameplateRecord }, says: 'The model of that revision, newest revision.' },
+  'PATCH /api/nameplates/:id': { may: planner, params: idParams, body: places.nameplatePatch, answers: { 200: places.nameplateRecord }, says: 'Adds a revision that differs in what is named; null clears.' },
+  'GET /api/nameplates/:id/revisions': { may: all, token: 'read', params: idParams, answers: { 200: z.object({ items: z.array(places.nameplateRevision) }) }, says: 'All revisions, newest first.' },
+  'GET /api/rules': { may: all, token: 'read', query: listQuery, answers: { 200: pageOf(places.ruleSchema) }, says: 'Site rules, ended ones too.' },
+  'POST /api/rules': { may: planner, body: places.ruleBody, answers: { 201: created }, says: 'Narrows a field for a site, a machine or an axis.' },
+  'POST /api/rules/:id/end': { may: planner, scope: 'rule', params: idParams, body: places.ruleEndBody, answers: { 200: places.ruleSchema }, says: 'The rule holds no more.' },
+
+  'GET /api/judging-context': { may: all, token: 'read', query: uploads.judgingQuery, answers: { 200: uploads.judgingContext }, says: 'What a file of this serial is read against.' },
+  'POST /api/uploads/preview': { may: uploaders, token: 'upload', query: uploads.uploadFields, body: 'file', answers: { 200: uploads.previewAnswer }, says: 'As an upload, and writes nothing.' },
+  'POST /api/uploads': { may: uploaders, token: 'upload', query: uploads.uploadFields, body: 'file', answers: { 200: uploads.uploadSeen, 201: uploads.uploadStored, 202: uploads.uploadTray }, says: 'Stores a settings file: a version, a sighting, or the tray.' },
+  'GET /api/tray': { may: uploaders, query: listQuery, answers: { 200: pageOf(uploads.trayItem) }, says: 'Files that wait for a person, oldest first.' },
+  'GET /api/tray/:id/file': { may: uploaders, scope: 'tray', params: idParams, answers: { 200: 'file' }, says: 'The file as it came.' },
+  'POST /api/tray/:id/assign': { may: uploaders, scope: 'tray', params: idParams, body: uploads.trayAssignBody, answers: { 200: uploads.trayAssigned, 201: uploads.trayAssigned }, says: 'Says where it belongs; a unit not fitted there is fitted, which takes a planner.' },
+  'POST /api/tray/:id/discard': { may: uploaders, scope: 'tray', params: idParams, body: uploads.trayDiscardBody, answers: { 204: none }, says: 'Sets it aside with a reason; the bytes stay.' },
+
+  'GET /api/versions/:id': { may: all, token: 'read', scope: 'version', params: idParams, answers: { 200: versions.versionOne }, says: 'One version, whole.' },
+  'GET /api/versions/:id/file': { may: all, token: 'read', scope: 'version', params: idParams, query: versions.fileQuery, answers: { 200: 'file' }, says: 'Its file in either form, or byte for byte as it came.' },
+  'GET /api/versions/:id/changes': { may: all, token: 'read', scope: 'version', params: idParams, query: versions.changesQuery, answers: { 200: versions.changesAnswer }, says: 'against = before, the path = after; as a list, JSON Patch or text.' },
+  'POST /api/versions/:id/known-good': { may: planner, scope: 'version', sign: true, params: idParams, body: versions.knownGoodBody, answers: { 201: created }, says: 'What this axis is restored to from now on; signed, four eyes.' },
+  'POST /api/versions/:id/void': { may: planner, scope: 'version', sign: true, params: idParams, body: versions.voidBody, answers: { 201: created }, says: 'A wrong upload; stays readable. Signed.' },
+
+  'GET /api/board': { may: all, token: 'read', answers: { 200: board.boardAnswer }, says: 'Every axis with its state, and what needs someone.' },
+  'GET /api/log': { may: ['planner', 'auditor', 'admin'], token: 'read', query: listQuery, answers: { 200: pageOf(board.logEntrySchema) }, says: 'The log, entry by entry; only without site bounds.' },
+} as const satisfies Readonly<Record<string, RouteDeclaration>>
+
+export type RouteName = keyof typeof routes

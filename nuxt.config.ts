@@ -1,1 +1,65 @@
-export default defineNuxtConfig({ srcDir: '.', ssr: false, compatibilityDate: '2026-12-01', telemetry: false })
+/*
+ * No component islands, no `.server.vue`, no authorisation in route rules or route middleware, no runtime compiler:
+ * later fixes of the framework concern those features, and the application does without them (tests/architecture).
+ */
+export default defineNuxtConfig({
+  modules: [
+    '@nuxt/eslint',
+    '@nuxtjs/tailwindcss',
+    '@nuxtjs/color-mode',
+    '@pinia/nuxt',
+    '@vueuse/nuxt',
+    'nuxt-auth-utils',
+    'nuxt-security',
+  ],
+  // Everything stands behind sign-in, and a page once open must work on where there is no reception.
+  ssr: false,
+  devtools: { enabled: false },
+  app: {
+    head: {
+      title: 'Witnessmark',
+      htmlAttrs: { lang: 'en' },
+      meta: [{ name: 'viewport', content: 'width=device-width, initial-scale=1' }, { name: 'color-scheme', content: 'light dark' }],
+      link: [{ rel: 'icon', type: 'image/svg+xml', href: '/favicon.svg' }],
+    },
+  },
+  css: ['~/assets/css/main.css'],
+  spaLoadingTemplate: 'spa-loading-template.html',
+  colorMode: { classSuffix: '', dataValue: 'theme', preference: 'system', fallback: 'light', storageKey: 'witnessmark-theme' },
+  srcDir: '.',
+  compatibilityDate: '2026-12-01',
+  nitro: { esbuild: { options: { target: 'node20' } } },
+  typescript: {
+    tsConfig: { exclude: ['../tests', '../fixtures', '../shared', '../bench', '../scripts', '../drizzle.config.ts'] },
+    sharedTsConfig: { include: ['../tests/unit/shared/**/*', '../tests/support/arbitrary-content.ts'] },
+    strict: true,
+  },
+  telemetry: false,
+  auth: { hash: { scrypt: { cost: 131072, maxMemory: 268435456 } } },
+  eslint: { config: { stylistic: true } },
+  security: {
+    strict: true,
+    // The origin rule of the route wrapper covers cross-site requests, scripts with a token included.
+    csrf: false,
+    // Measured to misbehave: CORS *, evaded by a forged header, refuses honest text, trusts Content-Length. Ours stand in the wrapper.
+    corsHandler: false,
+    rateLimiter: false,
+    xssValidator: false,
+    requestSizeLimiter: false,
+    headers: {
+      contentSecurityPolicy: {
+        'default-src': ['\'self\''],
+        'style-src': ['\'self\'', '\'nonce-{{nonce}}\''],
+        'font-src': ['\'self\''],
+        'img-src': ['\'self\'', 'data:', 'blob:'],
+        'connect-src': ['\'self\''],
+        'form-action': ['\'self\''],
+        'frame-ancestors': ['\'none\''],
+        // A plant's own network often has no certificate; PUBLIC_URL with https sets Secure cookies instead.
+        'upgrade-insecure-requests': false,
+      },
+      strictTransportSecurity: false,
+      crossOriginEmbedderPolicy: 'require-corp',
+    },
+  },
+})

@@ -36,7 +36,7 @@ export async function readFileBody(request: IncomingMessage): Promise<FileBody> 
 }
 
 function acceptedMediaType(request: IncomingMessage): string {
-  const mediaType = (request.headers['content-type'] ?? '').split(';')[0]!.trim().toLowerCase()
+  const mediaType = (request.headers['content-type'] ?? '').replace(/;.*$/s, '').trim().toLowerCase()
   if (!['application/json', 'text/csv', 'multipart/form-data'].includes(mediaType)) {
     throw new FileBodyError('content-type', `Send the file as application/json, text/csv or multipart/form-data; this came as ${mediaType === '' ? 'nothing named' : mediaType.slice(0, 80)}.`)
   }
@@ -108,8 +108,9 @@ function parseForm(raw: Buffer, contentType: string): Promise<Form> {
     }
     parser.on('error', broken)
     parser.on('close', () => {
-      if (files.length === 1) resolve({ ...files[0]!, fields: Object.fromEntries(fields) })
-      else if (files.length === 0) broken(new FileBodyError('file-missing', 'The form holds no part named file.'))
+      const [file, second] = files
+      if (!file) broken(new FileBodyError('file-missing', 'The form holds no part named file.'))
+      else if (!second) resolve({ ...file, fields: Object.fromEntries(fields) })
       else broken(new FileBodyError('file-twice', 'The form holds two files. Send each file on its own.'))
     })
     parser.end(raw)

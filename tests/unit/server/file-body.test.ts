@@ -99,9 +99,8 @@ describe('a form', () => {
   })
 
   it('has the same digest under another boundary and another order of fields, another with another byte', async () => {
-    const parts = [fieldPart('a', '1'), fieldPart('b', '2'), filePart('{}')]
-    const first = await form(parts)
-    expect((await form([parts[1]!, parts[0]!, parts[2]!], 'QQ')).digest).toBe(first.digest)
+    const first = await form([fieldPart('a', '1'), fieldPart('b', '2'), filePart('{}')])
+    expect((await form([fieldPart('b', '2'), fieldPart('a', '1'), filePart('{}')], 'QQ')).digest).toBe(first.digest)
     expect((await form([fieldPart('a', '1'), fieldPart('b', '3'), filePart('{}')])).digest).not.toBe(first.digest)
     expect((await form([fieldPart('a', '1'), fieldPart('b', '2'), filePart('{ }')])).digest).not.toBe(first.digest)
   })

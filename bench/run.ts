@@ -1,0 +1,19 @@
+import { writeFileSync } from 'node:fs'
+import { parseArgs } from 'node:util'
+import { measureDiff } from './diff'
+import type { Figure } from './figure'
+import { measureRead } from './read'
+import { measureUpload } from './upload'
+
+/*
+ * `npm run bench` prints every figure with its target; `-- --json FILE` writes them too. Peers are measured in the same run.
+ */
+
+const { values } = parseArgs({ options: { json: { type: 'string' } } })
+
+const figures: Figure[] = [...await measureDiff(), ...await measureRead(), ...await measureUpload()]
+const width = Math.max(...figures.map(figure => figure.name.length))
+for (const figure of figures) {
+  console.log(`${figure.name.padEnd(width)}  ${figure.value.toPrecision(3).padStart(8)} ${figure.unit.padEnd(8)} at most ${figure.target}  ${figure.holds ? 'holds' : 'does not hold'}`)
+}
+if (values.json) writeFileSync(values.json, `${JSON.stringify(figures, null, 2)}\n`)

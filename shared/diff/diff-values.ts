@@ -1,0 +1,49 @@
+import { setupFieldNames } from '../settings/fields'
+import { step } from '../settings/reading'
+import type { Move } from '../settings/types'
+import { changeOf } from './change'
+import { goByPressSpeed, sameMotionInSetup } from './defaults'
+import { sameValue } from './measure'
+import type { Sides } from './sides'
+import type { FieldChange } from './types'
+
+/** Adds the change of the axis kind, if any. */
+export function pushFileChanges(out: FieldChange[], { before, after, is }: Sides): void {
+  if (before.axisKind === after.axisKind) return
+  out.push(changeOf(is.axisKind, { at: '/axisKind', section: 'file', row: undefined }, before.axisKind, after.axisKind, false))
+}
+
+/**
+ * Adds the changes of setup values in the order of the table. `partners` are the moves that stand on both sides: a changed
+ * press speed names those, by their number in the second content, that go by it.
+ */
+export function pushSetupChanges(out: FieldChange[], sides: Sides, partners: () => Iterable<readonly [Move, Move]>): void {
+  const before = sides.before.setup
+  const after = sides.after.setup
+  for (const name of setupFieldNames) {
+    const was = before[name]
+    const is = after[name]
+    if (was === is) continue
+    const sameMotion = (was === undefined || is === undefined) && sameMotionInSetup(name, before, after)
+    const rule = (is === undefined ? sides.was : sides.is).setup(name)
+    const change = changeOf(rule, { at: `/setup/${name}`, section: 'setup', row: undefined }, was, is, sameMotion)
+    const affects = name === 'pressSpeed' ? movesByPressSpeed(partners()) : []
+    out.push(affects.length > 0 ? { ...change, affects } : change)
+  }
+}
+
+function movesByPressSpeed(partners: Iterable<readonly [Move, Move]>): number[] {
+  return [...partners].filter(([was, is]) => goByPressSpeed(was, is)).map(([, is]) => is.move).sort((a, b) => a - b)
+}
+
+/** Adds the changes of the drive's own values, keys by code unit. */
+export function pushExtraChanges(out: FieldChange[], { before, after, was, is }: Sides): void {
+  const keys = Object.keys(after.extra).filter((key) => !Object.hasOwn(before.extra, key) || !sameValue(before.extra[key], after.extra[key]))
+  for (const key of Object.keys(before.extra)) if (!Object.hasOwn(after.extra, key)) keys.push(key)
+  for (const key of keys.sort()) {
+    const from = Object.hasOwn(before.extra, key) ? before.extra[key] : undefined
+    const to = Object.hasOwn(after.extra, key) ? after.extra[key] : undefined
+    const place = { at: `/extra${step(key)}`, section: 'extra', row: undefined } as const
+    out.push(changeOf((to === undefined ? was : is).extra(key), place, from, to, false))
+  }
+}

@@ -1,4 +1,5 @@
 import type { Occasion } from '#shared/api/versions'
+import { counted } from '../format'
 import type { ListedFile, Placed, Reading } from './model'
 
 /** A routine file that holds what is current already is a sighting; on any other occasion it is a version of its own. */
@@ -42,19 +43,16 @@ export function forecast(files: readonly ListedFile[], occasion: Occasion): Fore
   return count
 }
 
-/** 1 file, 2 files. */
-export const counted = (count: number, noun: string, nouns = `${noun}s`): string => `${count} ${count === 1 ? noun : nouns}`
-
 /** “9 files read. 6 new versions, 1 seen again, 2 for the tray”. */
 export function headline(files: readonly ListedFile[], occasion: Occasion): string {
   const { versions, seen, tray, open, twins, waits } = forecast(files, occasion)
-  if (waits > 0) return `Reading ${counted(files.length, 'file')}. ${files.length - waits} read`
+  if (waits > 0) return `Reading ${counted(files.length, 'file', 'files')}. ${files.length - waits} read`
   const parts = [
-    versions > 0 ? counted(versions, 'new version') : '',
+    versions > 0 ? counted(versions, 'new version', 'new versions') : '',
     seen > 0 ? `${seen} seen again` : '',
     tray > 0 ? `${tray} for the tray` : '',
     open > 0 ? `${open} for the vault to judge` : '',
     twins > 0 ? `${twins} twice in the list` : '',
   ].filter(text => text !== '')
-  return `${counted(files.length, 'file')} read. ${parts.join(', ')}`
+  return `${counted(files.length, 'file', 'files')} read. ${parts.join(', ')}`
 }

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { problemSchema } from '#shared/api/common'
+import type { Problem } from '#shared/api/common'
 import { uploadStored, uploadTray } from '#shared/api/uploads'
 import { versionSchema } from '#shared/api/versions'
 
@@ -13,13 +13,20 @@ export type Outcome =
   | { readonly kind: 'refused', readonly why: string, readonly again: boolean }
 
 const storedVersion = versionSchema.pick({ id: true, axisTag: true, number: true })
+const seenAnswer = z.object({ sighting: z.object({ id: z.int() }), version: storedVersion })
 const storedAnswer = uploadStored.pick({ findings: true }).extend({ version: storedVersion })
-const seenAnswer = z.object({ version: storedVersion })
+const answer = z.union([seenAnswer, storedAnswer, uploadTray])
 
-/** The network, or no reception: the file is still here. */
-export const notReached: Outcome = { kind: 'refused', why: 'The vault did not answer. Nothing is half-written; the file is still in this page', again: true }
+/** Reads the answer of POST /api/uploads: a sighting, a version, or the tray. Any other shape is an error. */
+export function outcomeOf(body: unknown): Outcome {
+  const read = answer.parse(body)
+  if ('sighting' in read) return { kind: 'seen', tag: read.version.axisTag, number: read.version.number }
+  if ('tray' in read) return { kind: 'tray', trayId: read.tray, detail: read.detail }
+  return { kind: 'version', versionId: read.version.id, tag: read.version.axisTag, number: read.version.number, findings: read.findings.length }
+}
 
 const refusals: Readonly<Record<number, string>> = {
+  0: 'The vault did not answer. The file is still in this page',
   401: 'You are signed out. Sign in again, then send it again',
   403: 'Your role does not allow it',
   413: 'Too large. A settings file has at most 2 MiB',
@@ -27,33 +34,12 @@ const refusals: Readonly<Record<number, string>> = {
   429: 'Too many at once. Send it again in a minute',
   507: 'The vault’s disk is full. Nothing is half-written; the file is still in this page',
 }
-const mayComeAgain = new Set([401, 408, 425, 429, 500, 502, 503, 504, 507])
+const mayComeAgain = new Set([0, 401, 408, 425, 429, 500, 502, 503, 504, 507])
 
-function refusal(status: number, body: unknown): Outcome {
-  const problem = problemSchema.partial().safeParse(body)
-  const said = problem.success ? problem.data : {}
-  if (status === 422 && said.code === 'settings-unreadable') {
-    return { kind: 'unreadable', trayId: said.tray ?? null, detail: said.detail ?? 'Not readable' }
-  }
-  const why = refusals[status] ?? said.detail ?? said.title ?? `The vault refused it (${status})`
-  return { kind: 'refused', why: refusals[status] && said.detail ? `${why}. ${said.detail}` : why, again: mayComeAgain.has(status) }
-}
-
-/** Reads the answer to POST /api/uploads by its status. */
-export function outcomeOf(status: number, body: unknown): Outcome {
-  if (status === 201) {
-    const { version, findings } = storedAnswer.parse(body)
-    return { kind: 'version', versionId: version.id, tag: version.axisTag, number: version.number, findings: findings.length }
-  }
-  if (status === 200) {
-    const { version } = seenAnswer.parse(body)
-    return { kind: 'seen', tag: version.axisTag, number: version.number }
-  }
-  if (status === 202) {
-    const { tray, detail } = uploadTray.parse(body)
-    return { kind: 'tray', trayId: tray, detail }
-  }
-  return refusal(status, body)
+/** What a refused upload means for the file. */
+export function refusedOutcome(problem: Problem): Outcome {
+  if (problem.code === 'settings-unreadable') return { kind: 'unreadable', trayId: problem.tray ?? null, detail: problem.detail }
+  return { kind: 'refused', why: refusals[problem.status] ?? problem.detail, again: mayComeAgain.has(problem.status) }
 }
 
 export const isKept = (outcome: Outcome): boolean => outcome.kind !== 'refused'

@@ -1,5 +1,5 @@
 import type { Outcome } from './outcome'
-import { counted } from './becomes'
+import { counted } from '../format'
 
 export interface Sent { readonly name: string, readonly outcome: Outcome, readonly forecast: number | null }
 
@@ -46,5 +46,5 @@ export function receipt(sent: readonly Sent[]): ReceiptLine[] {
 /** How many findings the sent files opened. */
 export function findingsOpened(sent: readonly Sent[]): string | null {
   const count = sent.reduce((sum, { outcome }) => sum + (outcome.kind === 'version' ? outcome.findings : 0), 0)
-  return count === 0 ? null : `${counted(count, 'finding')} opened`
+  return count === 0 ? null : `${counted(count, 'finding', 'findings')} opened`
 }

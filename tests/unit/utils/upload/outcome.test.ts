@@ -1,32 +1,37 @@
 import { describe, expect, it } from 'vitest'
-import { isKept, outcomeOf } from '../../../../utils/upload/outcome'
+import type { Problem } from '../../../../shared/api/common'
+import { isKept, outcomeOf, refusedOutcome } from '../../../../utils/upload/outcome'
 import { findingsOpened, receipt, type Sent } from '../../../../utils/upload/receipt'
 
 const version = { id: 412, axisTag: 'CAS-01.Z', number: 9 }
+const problem = (status: number, over: Partial<Problem> = {}): Problem => ({ type: 'about:blank', title: '', status, detail: 'said by the vault', code: 'x', ...over })
 
 describe('the answer to an upload', () => {
-  it('201 is a version with its findings', () => {
-    expect(outcomeOf(201, { version, findings: [{ id: 33, state: 'open' }] })).toEqual({ kind: 'version', versionId: 412, tag: 'CAS-01.Z', number: 9, findings: 1 })
+  it('with findings is a version', () => {
+    expect(outcomeOf({ version, findings: [{ id: 33, state: 'open' }] })).toEqual({ kind: 'version', versionId: 412, tag: 'CAS-01.Z', number: 9, findings: 1 })
   })
-  it('200 is a sighting', () => {
-    expect(outcomeOf(200, { version, sighting: { id: 1, at: '2026-12-01T07:00:00.000Z' } })).toEqual({ kind: 'seen', tag: 'CAS-01.Z', number: 9 })
+  it('with a sighting is one', () => {
+    expect(outcomeOf({ version, sighting: { id: 1, at: '2026-12-01T07:00:00.000Z' } })).toEqual({ kind: 'seen', tag: 'CAS-01.Z', number: 9 })
   })
-  it('202 is the tray', () => {
-    expect(outcomeOf(202, { tray: 5, problem: 'serial-unknown', detail: 'Not registered' })).toEqual({ kind: 'tray', trayId: 5, detail: 'Not registered' })
+  it('with a tray is kept there', () => {
+    expect(outcomeOf({ tray: 5, problem: 'serial-unknown', detail: 'Not registered' })).toEqual({ kind: 'tray', trayId: 5, detail: 'Not registered' })
   })
-  it('422 with the tray is kept, unreadable', () => {
-    expect(outcomeOf(422, { code: 'settings-unreadable', tray: 6, detail: '3 errors' })).toEqual({ kind: 'unreadable', trayId: 6, detail: '3 errors' })
+  it('of another shape is an error, not a version', () => {
+    expect(() => outcomeOf({ version: { id: 'x' } })).toThrow()
   })
-  it('another 422 is refused', () => {
-    expect(outcomeOf(422, { code: 'input', detail: 'occasion: not known' })).toMatchObject({ kind: 'refused', why: 'occasion: not known', again: false })
+})
+
+describe('a refusal', () => {
+  it('of an unreadable file is kept in the tray', () => {
+    expect(refusedOutcome(problem(422, { code: 'settings-unreadable', tray: 6 }))).toEqual({ kind: 'unreadable', trayId: 6, detail: 'said by the vault' })
   })
-  it.each([[413, false], [415, false], [403, false], [401, true], [429, true], [503, true], [507, true]])('%i keeps nothing; worth another try: %s', (status, again) => {
-    const outcome = outcomeOf(status, null)
+  it('of another kind says what the vault said', () => {
+    expect(refusedOutcome(problem(422))).toEqual({ kind: 'refused', why: 'said by the vault', again: false })
+  })
+  it.each([[0, true], [413, false], [415, false], [403, false], [401, true], [429, true], [503, true], [507, true]])('%i keeps nothing; worth another try: %s', (status, again) => {
+    const outcome = refusedOutcome(problem(status))
     expect(outcome).toMatchObject({ kind: 'refused', again })
     expect(isKept(outcome)).toBe(false)
-  })
-  it('an answer of another shape is an error, not a version', () => {
-    expect(() => outcomeOf(201, { version: { id: 'x' } })).toThrow()
   })
 })
 

@@ -1,0 +1,115 @@
+import fc from 'fast-check'
+import { describe, expect, it } from 'vitest'
+import type { Content, Move } from '../../../../shared/settings/types'
+import { layoutRail, type RailText } from '../../../../utils/pictures/rail'
+import { railInputOf, railSideOf } from '../../../../utils/pictures/rail-input'
+import { railSentence } from '../../../../utils/pictures/rail-words'
+import { extentOf } from '../../../../utils/pictures/scale'
+
+const absolute = (move: number, target: number, rest: Partial<Move> = {}): Move => ({ move, kind: 'absolute', target, speed: 200, acceleration: 2000, ...rest })
+const press = (move: number, approach: number, target: number): Move => ({ move, kind: 'press', approach, target, speed: 100, acceleration: 1000, forceLimit: 30 })
+
+const lid = (moves: readonly Move[], setup: Content['setup'] = {}): Content => ({
+  axisKind: 'linear', extra: {}, zones: [{ zone: 0, from: 0, to: 12 }], moves,
+  setup: { softLimitMin: 2, softLimitMax: 185, homingMethod: 'hard-stop', homingDirection: 'negative', homeOffset: 0, ...setup },
+})
+const plate = { model: 'HL40-200V', axisKind: 'linear' as const, stroke: 200 }
+const usual = [absolute(0, 5), absolute(1, 70), press(2, 88, 104), press(3, 98, 104), absolute(4, 96.5, { next: 5, dwell: 120 }), absolute(5, 62), { ...absolute(8, -2), kind: 'relative' as const }]
+
+const inputOf = (content: Content, nameplate?: typeof plate) => railInputOf({ upper: content }, { upper: railSideOf(content, 'today, v15') }, nameplate)
+
+describe('railInputOf', () => {
+  it('reaches from hard stop to hard stop where homing tells where they are', () => {
+    expect(inputOf(lid(usual), plate)).toMatchObject({ low: 0, high: 200, stops: { low: 0, high: 200 } })
+    expect(inputOf(lid(usual, { homeOffset: -1.35 }), plate)).toMatchObject({ low: 0, high: 201.35, stops: { low: 1.35, high: 201.35 } })
+  })
+
+  it('is broken off over all that stands on it where they are not known', () => {
+    const input = inputOf(lid(usual))
+    expect(input.stops).toBeUndefined()
+    expect(input.low).toBeLessThan(0)
+    expect(input.high).toBeGreaterThan(185)
+  })
+
+  it('shows one turn of a rotary axis', () => {
+    const table: Content = { axisKind: 'rotary', extra: {}, zones: [], moves: [absolute(0, 90)], setup: { modulo: 360 } }
+    expect(inputOf(table)).toMatchObject({ low: 0, high: 360, wraps: true, axisKind: 'rotary' })
+  })
+
+  it('draws the bare rule of an axis without moves, limits or nameplate', () => {
+    expect(inputOf({ axisKind: 'linear', extra: {}, zones: [], moves: [], setup: {} })).toMatchObject({ low: 0, high: 100, wraps: false })
+  })
+
+  it('leaves unused rows out and tells steps apart', () => {
+    const side = railSideOf(lid([...usual, absolute(9, 50, { speed: 0, acceleration: 0 })]), 'today')
+    expect(side.moves.map(move => move.move)).toEqual([0, 1, 2, 3, 4, 5])
+    expect(side.steps).toEqual([{ move: 8, by: -2 }])
+  })
+
+  it('takes the direction from the row that names a move, else from the row before it', () => {
+    const side = railSideOf(lid(usual), 'today')
+    expect(Object.fromEntries(side.moves.map(move => [move.move, move.direction]))).toEqual({ 0: 0, 1: 1, 2: 1, 3: 1, 4: -1, 5: -1 })
+  })
+})
+
+const textsOverlap = (texts: readonly RailText[]) => texts.some((one, index) => texts.slice(index + 1).some((other) => {
+  const [a, b] = [extentOf(one), extentOf(other)]
+  return Math.abs(one.y - other.y) < 9 && a[0] < b[1] - 1 && b[0] < a[1] - 1
+}))
+
+describe('layoutRail', () => {
+  it('stands to scale: a target lies where its number says', () => {
+    const layout = layoutRail(inputOf(lid(usual), plate), 1376)
+    const one = layout.halves[0]?.balloons.find(balloon => balloon.move === 1)
+    expect(one?.x).toBeCloseTo(84 + 70 * (1376 - 40 - 84) / 200, -0.5)
+  })
+
+  it('lets no balloons and no texts meet, at any width', () => {
+    const moves = fc.array(fc.double({ min: 0, max: 200, noNaN: true }), { maxLength: 40 })
+    fc.assert(fc.property(moves, fc.integer({ min: 280, max: 2400 }), (targets, width) => {
+      const layout = layoutRail(inputOf(lid(targets.map((target, move) => absolute(move, target))), plate), width)
+      const balloons = layout.halves[0]?.balloons ?? []
+      for (const [index, one] of balloons.entries()) {
+        for (const other of balloons.slice(index + 1)) {
+          expect(Math.hypot(one.x - other.x, one.y - other.y)).toBeGreaterThanOrEqual(2 * layout.radius)
+        }
+      }
+      const named = balloons.length + (layout.halves[0]?.crowds ?? []).reduce((sum, crowd) => sum + crowd.moves.length, 0)
+      expect(named).toBe(targets.length)
+      expect(textsOverlap(layout.halves[0]?.texts ?? [])).toBe(false)
+    }), { numRuns: 60 })
+  })
+
+  it('folds the fifth press in one place to a count', () => {
+    const many = [0, 1, 2, 3, 4].map(move => press(move, 88 + move, 104))
+    const half = layoutRail(inputOf(lid(many), plate), 360).halves[0]
+    expect(half?.folds).toEqual([{ from: 88, to: 104, moves: [0, 1, 2, 3, 4] }])
+    expect(half?.texts.some(text => text.text === '5×')).toBe(true)
+    expect(half?.presses).toHaveLength(1)
+  })
+
+  it('ends a press too short for an arrow in a bar, to scale', () => {
+    const half = layoutRail(inputOf(lid([press(3, 98, 104)]), plate), 350).halves[0]
+    expect(half?.presses[0]?.head).toBeNull()
+    expect(half?.presses[0]?.bar).toContain('v10')
+  })
+
+  it('stands before above and after below, changed balloons filled below', () => {
+    const before = lid(usual)
+    const after = lid([absolute(0, 5), absolute(1, 75), ...usual.slice(2)])
+    const changed = new Set([1])
+    const input = railInputOf({ upper: before, lower: after }, { upper: railSideOf(before, 'v14', changed), lower: railSideOf(after, 'v15', changed) }, plate)
+    const [upper, lower] = layoutRail(input, 1376).halves
+    expect(upper?.balloons.find(balloon => balloon.move === 1)).toMatchObject({ tone: 'before', filled: false })
+    expect(lower?.balloons.find(balloon => balloon.move === 1)).toMatchObject({ tone: 'after', filled: true })
+    expect(Math.max(...(upper?.balloons.map(balloon => balloon.y) ?? []))).toBeLessThan(Math.min(...(lower?.balloons.map(balloon => balloon.y) ?? [])))
+  })
+})
+
+describe('railSentence', () => {
+  it('says with numbers what the picture shows', () => {
+    expect(railSentence(inputOf(lid(usual), plate))).toBe(
+      'Rail between hard stops at 0 and 200 mm, soft limits 2 and 185. Moves: 0 at 5, 5 at 62, 1 at 70, 4 at 96.5, press 2 from 88 to 104, press 3 from 98 to 104. Move 8 steps by −2 mm. Zones 0 from 0 to 12.',
+    )
+  })
+})

@@ -1,0 +1,24 @@
+import Database from 'better-sqlite3'
+import { join } from 'node:path'
+import { StartError } from './start-error'
+
+/**
+ * Holds the folder for this process until `release` or the end of the process, however it ends: the lock is the operating
+ * system's own on a file beside the vault, so that kill -9 leaves nothing behind to clear away.
+ */
+export function lockFolder(folder: string): { release: () => void } {
+  const path = join(folder, 'vault.lock')
+  const lock = new Database(path, { timeout: 0 })
+  try {
+    lock.pragma('locking_mode = EXCLUSIVE')
+    lock.exec('BEGIN EXCLUSIVE')
+  }
+  catch (error) {
+    lock.close()
+    if (error instanceof Database.SqliteError && error.code.startsWith('SQLITE_BUSY')) {
+      throw new StartError('in-use', `Another process has this vault open (${path} is locked). Stop it first: two at once would number the log twice.`)
+    }
+    throw error
+  }
+  return { release: () => { lock.close() } }
+}

@@ -1,0 +1,78 @@
+import { z } from 'zod'
+import { CodedError } from '../errors/coded'
+import { canonicalJson } from '../settings/canonical'
+import { acts, isAct, type Act } from './acts'
+
+/*
+ * A log entry as it is stored and hashed. The leaf is the UTF-8 of the RFC 8785 form of one object:
+ *
+ *   {"act":"site-changed","actor":{"id":3,"kind":"person","name":"Runa Haldersen"},"at":"2026-03-09T14:32:00.000Z",
+ *    "note":null,"seq":41,"state":{"fourEyes":true,…},"subject":{"id":1,"kind":"site"},"v":1}
+ *
+ * state is the whole new state of the subject, never a difference and never a secret. A v of 2 would mean another set of
+ * keys; entries of v 1 stay as they are and are read by their own v for good.
+ */
+
+export type Json = string | number | boolean | null | readonly Json[] | { readonly [key: string]: Json }
+
+const subjectKinds = [...new Set(Object.values(acts))] as [string, ...string[]]
+const jsonSchema: z.ZodType<Json> = z.lazy(() => z.union([z.string(), z.number(), z.boolean(), z.null(), z.array(jsonSchema), z.record(z.string(), jsonSchema)]))
+
+export const actorSchema = z.discriminatedUnion('kind', [
+  z.strictObject({ kind: z.literal('person'), id: z.int().positive(), name: z.string() }),
+  z.strictObject({ kind: z.literal('token'), id: z.int().positive(), name: z.string(), ownerId: z.int().positive() }),
+  /** The vault itself: set-up and work that nobody asked for. */
+  z.strictObject({ kind: z.literal('vault'), name: z.string() }),
+])
+export type EntryActor = z.infer<typeof actorSchema>
+
+export const entrySchema = z.strictObject({
+  v: z.literal(1),
+  seq: z.int().nonnegative(),
+  at: z.string().length(24),
+  actor: actorSchema,
+  act: z.string().refine(isAct, 'an act of the list'),
+  subject: z.strictObject({ kind: z.enum(subjectKinds), id: z.union([z.int().positive(), z.string()]) }),
+  state: z.record(z.string(), jsonSchema),
+  note: z.string().nullable(),
+})
+export interface Entry {
+  readonly v: 1
+  /** Counts from 0 without gaps. */
+  readonly seq: number
+  readonly at: string
+  readonly actor: EntryActor
+  readonly act: Act
+  readonly subject: { readonly kind: (typeof acts)[Act], readonly id: number | string }
+  readonly state: Readonly<Record<string, Json>>
+  readonly note: string | null
+}
+
+export type EntryErrorCode = 'entry-unreadable' | 'entry-not-canonical' | 'entry-subject'
+export class EntryError extends CodedError<EntryErrorCode> {}
+
+/** The leaf text of an entry; `parseLeaf` is its inverse. Throws `not-canonical` on undefined and on numbers that JSON cannot hold. */
+export function formatLeaf(entry: Entry): string {
+  return canonicalJson(entry)
+}
+
+/** Accepts only what `formatLeaf` would print; throws EntryError, and names what is wrong. */
+export function parseLeaf(leaf: string): Entry {
+  const entry = read(leaf)
+  if (acts[entry.act] !== entry.subject.kind) throw new EntryError('entry-subject', `${entry.act} is about a ${acts[entry.act]}, not a ${entry.subject.kind}.`)
+  if (formatLeaf(entry) !== leaf) throw new EntryError('entry-not-canonical', `Entry ${entry.seq} is not in its canonical form.`, { seq: entry.seq })
+  return entry
+}
+
+function read(leaf: string): Entry {
+  let value: unknown
+  try {
+    value = JSON.parse(leaf)
+  }
+  catch {
+    throw new EntryError('entry-unreadable', 'The entry is not JSON.')
+  }
+  const parsed = entrySchema.safeParse(value)
+  if (!parsed.success) throw new EntryError('entry-unreadable', z.prettifyError(parsed.error))
+  return parsed.data as Entry
+}

@@ -1,0 +1,28 @@
+/** Every address of the application is made here, so that none is spelt twice. */
+export const addressOf = {
+  board: () => '/',
+  signIn: (back?: string) => (back && back !== '/' ? `/sign-in?to=${encodeURIComponent(back)}` : '/sign-in'),
+  machine: (id: number) => `/machines/${id}`,
+  axis: (tag: string) => `/axes/${encodeURIComponent(tag)}`,
+  version: (tag: string, number: number) => `/axes/${encodeURIComponent(tag)}/versions/${number}`,
+  label: (tag: string) => `/axes/${encodeURIComponent(tag)}/label`,
+  /** a stands before, b after; both are ids of versions. */
+  changes: (before: number, after: number) => `/changes?a=${before}&b=${after}`,
+  upload: () => '/upload',
+  tray: () => '/tray',
+  places: () => '/places',
+  units: () => '/units',
+  nameplates: () => '/nameplates',
+  nameplate: (id: number) => `/nameplates/${id}`,
+  rules: () => '/rules',
+  people: () => '/people',
+  admin: () => '/admin',
+  trail: () => '/trail',
+  format: () => '/format',
+  help: () => '/help',
+}
+
+/** Only an address of this application is gone back to after signing in. */
+export function safeBack(wanted: unknown): string {
+  return typeof wanted === 'string' && /^\/(?![/\\])/.test(wanted) && !wanted.startsWith('/sign-in') ? wanted : addressOf.board()
+}

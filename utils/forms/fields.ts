@@ -1,3 +1,5 @@
+import { toInstant, toLocal } from './zoned'
+
 /*
  * A form is a list of fields. What stands in the inputs is a draft of texts, flags and lists; the body that travels is
  * made of it, and the schema of the route judges that body, so that page and server can never disagree.
@@ -24,8 +26,8 @@ export type FormField = Common & (
   | { readonly type: 'many', readonly options: readonly Option[], readonly as?: 'number' }
   /** Texts cut at commas and line ends. */
   | { readonly type: 'list', readonly as?: 'number' }
-  /** An instant, given in local time of the site. */
-  | { readonly type: 'time' }
+  /** An instant, written in the local time of a zone. */
+  | { readonly type: 'time', readonly zone: string }
   | { readonly type: 'password' }
 )
 
@@ -51,6 +53,7 @@ function valueOf(field: FormField, value: DraftValue | undefined): unknown {
   const text = typeof value === 'string' ? value : ''
   if (text.trim() === '') return field.empty
   if (field.type === 'list') return listOf(field, cut(text))
+  if (field.type === 'time') return toInstant(text, field.zone)
   if (field.type === 'number' || (field.type === 'choice' && field.as === 'number')) return numberOrText(text)
   return text
 }
@@ -65,7 +68,8 @@ function draftValue(field: FormField, value: unknown): DraftValue {
   if (field.type === 'many') return Array.isArray(value) ? value.map(String) : []
   if (field.type === 'flag') return value === true ? 'yes' : value === false ? 'no' : ''
   if (field.type === 'list') return Array.isArray(value) ? value.join(', ') : ''
-  return value === null || value === undefined ? '' : String(value)
+  if (value === null || value === undefined) return ''
+  return field.type === 'time' ? toLocal(String(value), field.zone) : String(value)
 }
 
 /** The draft that shows a record: the inverse of `bodyOf` for values that a form can hold. */

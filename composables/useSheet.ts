@@ -1,0 +1,77 @@
+import type { z } from 'zod'
+import { conflicts, onTop } from '~/utils/forms/conflict'
+import { bodyOf, draftOf, editedBody, type Body, type Draft, type FormField } from '~/utils/forms/fields'
+import { issuesOf, issuesOfProblem, type Issues } from '~/utils/forms/issues'
+
+export interface SheetOptions<Answer> {
+  readonly fields: () => readonly FormField[]
+  readonly schema: () => z.ZodType
+  /** What is edited; absent = something new is made. */
+  readonly record: () => Readonly<Body> | undefined
+  /** Goes along with what stands in the fields: ids of the place, the step. */
+  readonly fixed: () => Readonly<Body>
+  readonly send: (body: Body) => Promise<Answer>
+}
+
+/** The state of one form: its draft, what is wrong where, and what somebody else changed meanwhile. */
+export function useSheet<Answer>(options: SheetOptions<Answer>) {
+  const before = shallowRef<Draft>(draftOf(options.fields(), options.record()))
+  const draft = ref<Draft>({ ...before.value })
+  const issues = shallowRef<Issues>({})
+  const problem = shallowRef<ApiProblem>()
+  const theirs = shallowRef<Body>()
+  const rev = ref(options.record()?.rev)
+  const busy = ref(false)
+
+  const met = computed(() => theirs.value ? conflicts(options.fields(), before.value, draft.value, theirs.value) : [])
+  const edited = computed(() => JSON.stringify(before.value) !== JSON.stringify(draft.value))
+
+  function body(): Body {
+    return options.record() ? { ...editedBody(options.fields(), before.value, draft.value), rev: rev.value } : { ...bodyOf(options.fields(), draft.value), ...options.fixed() }
+  }
+
+  function failed(failure: unknown): void {
+    const found = toProblem(failure)
+    const { code, current } = found.problem
+    if (code === 'edited-meanwhile' && current !== null && typeof current === 'object') {
+      theirs.value = current as Body
+      return
+    }
+    const names = options.fields().map(field => field.name)
+    issues.value = issuesOfProblem(found.problem, names)
+    problem.value = names.some(name => issues.value[name]) && !issues.value[''] ? undefined : found
+  }
+
+  /** Answers what the vault answered, or undefined where the form needs another look. */
+  async function submit(): Promise<Answer | undefined> {
+    problem.value = undefined
+    const candidate = body()
+    const parsed = options.schema().safeParse(candidate, { reportInput: true })
+    issues.value = parsed.success ? {} : issuesOf(parsed.error)
+    if (!parsed.success) return undefined
+    busy.value = true
+    try {
+      return await options.send(candidate)
+    }
+    catch (failure) {
+      failed(failure)
+      return undefined
+    }
+    finally {
+      busy.value = false
+    }
+  }
+
+  /** Goes on from what stands in the vault now: with what was written here on top, or without it. */
+  function settle(keepMine: boolean): void {
+    const now = theirs.value
+    if (!now) return
+    const mine = keepMine ? onTop(options.fields(), before.value, draft.value, now) : draftOf(options.fields(), now)
+    before.value = draftOf(options.fields(), now)
+    draft.value = { ...mine }
+    rev.value = now.rev
+    theirs.value = undefined
+  }
+
+  return { draft, issues, problem, busy, met, theirs, edited, submit, settle }
+}

@@ -10,7 +10,7 @@ export type Outcome =
   | { readonly kind: 'tray', readonly trayId: number, readonly detail: string }
   | { readonly kind: 'unreadable', readonly trayId: number | null, readonly detail: string }
   /** Nothing was kept. `again`: the same file may go through later. */
-  | { readonly kind: 'refused', readonly why: string, readonly again: boolean }
+  | { readonly kind: 'refused', readonly status: number, readonly why: string, readonly again: boolean }
 
 const storedVersion = versionSchema.pick({ id: true, axisTag: true, number: true })
 const seenAnswer = z.object({ sighting: z.object({ id: z.int() }), version: storedVersion })
@@ -39,7 +39,7 @@ const mayComeAgain = new Set([0, 401, 408, 425, 429, 500, 502, 503, 504, 507])
 /** What a refused upload means for the file. */
 export function refusedOutcome(problem: Problem): Outcome {
   if (problem.code === 'settings-unreadable') return { kind: 'unreadable', trayId: problem.tray ?? null, detail: problem.detail }
-  return { kind: 'refused', why: refusals[problem.status] ?? problem.detail, again: mayComeAgain.has(problem.status) }
+  return { kind: 'refused', status: problem.status, why: refusals[problem.status] ?? problem.detail, again: mayComeAgain.has(problem.status) }
 }
 
 export const isKept = (outcome: Outcome): boolean => outcome.kind !== 'refused'

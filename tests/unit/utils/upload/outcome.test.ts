@@ -26,7 +26,7 @@ describe('a refusal', () => {
     expect(refusedOutcome(problem(422, { code: 'settings-unreadable', tray: 6 }))).toEqual({ kind: 'unreadable', trayId: 6, detail: 'said by the vault' })
   })
   it('of another kind says what the vault said', () => {
-    expect(refusedOutcome(problem(422))).toEqual({ kind: 'refused', why: 'said by the vault', again: false })
+    expect(refusedOutcome(problem(422))).toEqual({ kind: 'refused', status: 422, why: 'said by the vault', again: false })
   })
   it.each([[0, true], [413, false], [415, false], [403, false], [401, true], [429, true], [503, true], [507, true]])('%i keeps nothing; worth another try: %s', (status, again) => {
     const outcome = refusedOutcome(problem(status))
@@ -41,7 +41,7 @@ describe('the receipt', () => {
     { name: 'lid-01-z.json', forecast: 12, outcome: { kind: 'version', versionId: 413, tag: 'LID-01.Z', number: 13, findings: 1 } },
     { name: 'lid-02-c.json', forecast: 8, outcome: { kind: 'seen', tag: 'LID-02.C', number: 7 } },
     { name: 'new-unit.json', forecast: null, outcome: { kind: 'tray', trayId: 5, detail: 'Not registered' } },
-    { name: 'big.json', forecast: null, outcome: { kind: 'refused', why: 'Too large', again: false } },
+    { name: 'big.json', forecast: null, outcome: { kind: 'refused', status: 413, why: 'Too large', again: false } },
   ]
 
   it('has one line a kind, in order, and says where to go on', () => {

@@ -1,0 +1,127 @@
+import type { JudgingContext } from '#shared/api/uploads'
+import { readSettings } from '#shared/settings/read'
+import type { ReadSettings } from '#shared/settings/types'
+import { bytesInWords, mostBytesOfAll, mostBytesOfFile, mostFiles } from '~/utils/upload/limits'
+import type { ListedFile } from '~/utils/upload/model'
+import { examine, placeAxis, type Examined } from '~/utils/upload/place'
+import { runQueue } from '~/utils/upload/queue'
+import { isZip, unpack, type NamedBytes } from '~/utils/upload/unpack'
+
+const contextsAtOnce = 6
+let lastId = 0
+
+const sameBytes = (a: Uint8Array, b: Uint8Array) => a.length === b.length && a.every((byte, index) => byte === b[index])
+
+/** Takes files into the list and reads each one here, against what the vault says to its serial. Nothing is sent. */
+export function useUploadList() {
+  const store = useUploads()
+  const api = useApi()
+  const contexts = new Map<string, Promise<JudgingContext>>()
+  const examined = new Map<number, Examined>()
+
+  function contextFor({ unit, exportedAt }: ReadSettings['file']): Promise<JudgingContext> {
+    const query = { serial: unit.serial, channel: unit.channel, capturedAt: exportedAt }
+    const key = JSON.stringify(query)
+    const known = contexts.get(key)
+    if (known) return known
+    const asked = api.get<JudgingContext>('/api/judging-context', { query })
+    contexts.set(key, asked)
+    return asked
+  }
+
+  /** All files of this axis again: one more or less in the list changes what the others are compared with. */
+  function placeAgain(axisId: number): void {
+    const listed = new Set(store.files.map(file => file.id))
+    const ofAxis = [...examined.values()].filter(one => one.context.axis?.id === axisId && listed.has(one.id))
+    for (const [id, reading] of placeAxis(ofAxis, store.words.occasion)) store.setReading(id, reading)
+  }
+
+  async function readOne(file: ListedFile): Promise<void> {
+    const outcome = readSettings(file.bytes, file.decimal ? { decimal: file.decimal } : {})
+    if (!outcome.ok) return store.setReading(file.id, { state: 'unreadable', errors: outcome.errors, more: outcome.more })
+    try {
+      const context = await contextFor(outcome.value.file)
+      const reading = examine(file.id, file.name, outcome.value, context, new Date())
+      if ('state' in reading) return store.setReading(file.id, reading)
+      examined.set(file.id, reading)
+      if (context.axis) placeAgain(context.axis.id)
+    }
+    catch (failure) {
+      contexts.clear()
+      store.setReading(file.id, { state: 'unjudged', read: outcome.value, why: toProblem(failure).problem.detail })
+    }
+  }
+
+  const readAll = (files: readonly ListedFile[]) => runQueue(files.filter(file => file.reading.state !== 'twin'), contextsAtOnce, readOne)
+
+  async function bytesOf(picked: readonly File[]): Promise<NamedBytes[]> {
+    const out: NamedBytes[] = []
+    for (const file of picked) {
+      if (file.size > mostBytesOfAll) {
+        store.left = [...store.left, { name: file.name, why: `larger than ${bytesInWords(mostBytesOfAll)}` }]
+        continue
+      }
+      const bytes = new Uint8Array(await file.arrayBuffer())
+      if (!isZip(bytes)) {
+        out.push({ name: file.name, bytes })
+        continue
+      }
+      const { files, left } = unpack(bytes, { files: mostFiles, bytes: mostBytesOfAll })
+      out.push(...files)
+      store.left = [...store.left, ...left]
+    }
+    return out
+  }
+
+  function refusal({ bytes }: NamedBytes, held: readonly ListedFile[]): string | undefined {
+    if (held.length >= mostFiles) return `beyond ${mostFiles} files`
+    if (bytes.length > mostBytesOfFile) return `larger than ${bytesInWords(mostBytesOfFile)}`
+    const total = held.reduce((sum, file) => sum + file.bytes.length, bytes.length)
+    return total > mostBytesOfAll ? `beyond ${bytesInWords(mostBytesOfAll)} in all` : undefined
+  }
+
+  async function add(picked: readonly File[]): Promise<void> {
+    const fresh: ListedFile[] = []
+    for (const one of await bytesOf(picked)) {
+      const held = [...store.files, ...fresh]
+      const why = refusal(one, held)
+      if (why) {
+        store.left = [...store.left, { name: one.name, why }]
+        continue
+      }
+      const twin = held.find(file => file.reading.state !== 'twin' && sameBytes(file.bytes, one.bytes))
+      fresh.push({ id: lastId += 1, ...one, reading: twin ? { state: 'twin', of: twin.name } : { state: 'waits' } })
+    }
+    store.files = [...store.files, ...fresh]
+    await readAll(fresh)
+  }
+
+  function leaveOut(id: number): void {
+    const gone = store.files.find(file => file.id === id)
+    store.files = store.files.filter(file => file.id !== id)
+    const axisId = examined.get(id)?.context.axis?.id
+    examined.delete(id)
+    if (axisId !== undefined) placeAgain(axisId)
+    const twin = gone && store.files.find(file => file.reading.state === 'twin' && sameBytes(file.bytes, gone.bytes))
+    if (twin) void readAgain(twin.id)
+  }
+
+  /** Reads a file anew: with the answer to its decimal sign, or because there was no reception before. */
+  async function readAgain(id: number, decimal?: 'point' | 'comma'): Promise<void> {
+    store.files = store.files.map(file => file.id === id ? { ...file, ...(decimal ? { decimal } : {}), reading: { state: 'waits' } } : file)
+    await readAll(store.files.filter(file => file.id === id))
+  }
+
+  /** The mended file takes the place of the one that could not be read. */
+  async function replace(id: number, picked: File): Promise<void> {
+    store.files = store.files.filter(file => file.id !== id)
+    await add([picked])
+  }
+
+  watch(() => store.words.occasion, () => {
+    for (const axisId of new Set([...examined.values()].map(one => one.context.axis?.id))) if (axisId !== undefined) placeAgain(axisId)
+  })
+  onMounted(() => readAll(store.files.filter(file => !store.sendings.get(file.id)?.outcome)))
+
+  return { add, leaveOut, readAgain, replace }
+}

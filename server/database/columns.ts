@@ -1,4 +1,4 @@
-import { integer, text } from 'drizzle-orm/sqlite-core'
+import { customType, integer, text } from 'drizzle-orm/sqlite-core'
 
 /** RFC 3339 UTC with milliseconds: `2026-03-09T14:32:00.000Z`. Comparing two as text compares the times. */
 export type Instant = string
@@ -6,4 +6,9 @@ export type Instant = string
 export const id = () => integer('id').primaryKey()
 export const instant = (name: string) => text(name).$type<Instant>()
 export const flag = (name: string) => integer(name, { mode: 'boolean' })
-export const json = <Value>(name: string) => text(name, { mode: 'json' }).$type<Value>()
+/** JSON text; null goes in as NULL through placeholders too, where the library's own JSON mode would write the text `null`. */
+export const json = <Value>(name: string) => customType<{ data: Value, driverData: string | null }>({
+  dataType: () => 'text',
+  toDriver: value => (value === null ? null : JSON.stringify(value)),
+  fromDriver: text => JSON.parse(text ?? 'null') as Value,
+})(name)

@@ -231,6 +231,7 @@ CREATE TABLE version (
   ${instant('captured_at')},
   ${instant('received_at')},
   ${flag('clock_doubtful')},
+  order_at TEXT NOT NULL GENERATED ALWAYS AS (iif(clock_doubtful = 1, received_at, captured_at)) VIRTUAL,
   ${flag('late')},
   reason TEXT,
   work_order TEXT,
@@ -249,7 +250,7 @@ CREATE TABLE version (
   file TEXT NOT NULL,
   UNIQUE (axis_id, number)
 ) STRICT;
-CREATE INDEX version_captured ON version (axis_id, captured_at, number);
+CREATE INDEX version_order ON version (axis_id, order_at, number);
 CREATE INDEX version_content ON version (content_id);
 ${immutable('version', ['id'], ['axis_id', 'number'])}
 

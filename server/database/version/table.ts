@@ -1,3 +1,4 @@
+import { sql } from 'drizzle-orm'
 import { integer, sqliteTable, text } from 'drizzle-orm/sqlite-core'
 import type { Occasion } from '#shared/api/versions'
 import type { ExtraValue, Normalised, UnitIdentity } from '#shared/settings/types'
@@ -26,6 +27,8 @@ export const version = sqliteTable('version', {
   capturedAt: instant('captured_at').notNull(),
   receivedAt: instant('received_at').notNull(),
   clockDoubtful: flag('clock_doubtful').notNull(),
+  /** What order, late and base go by: received-at where the clock is doubtful. */
+  orderAt: instant('order_at').notNull().generatedAlwaysAs(sql`iif(clock_doubtful = 1, received_at, captured_at)`),
   late: flag('late').notNull(),
   reason: text('reason'),
   workOrder: text('work_order'),

@@ -115,7 +115,7 @@ export function arbitraryContent(options: { kind?: AxisKind, alike?: boolean, mo
     moves: arbitraryMoves(setup.modulo !== undefined, alike, most),
     setup: fc.constant(setup),
     zones: arbitraryZones,
-  })))
+  }, { noNullPrototype: true })))
 }
 
 type Edit = { readonly at: number, readonly to: number, readonly act: 'insert' | 'delete' | 'move' | 'edit' | 'renumber', readonly body: Omit<Move, 'move'> }

@@ -1,21 +1,69 @@
 import fc from 'fast-check'
-import jsonpatch from 'fast-json-patch'
 import { describe, expect, it } from 'vitest'
 import { applyFlat } from '../../../../shared/diff/apply'
+import { applyRenumbered } from '../../../../shared/diff/apply-renumbered'
 import { diffContents } from '../../../../shared/diff/diff'
-import { jsonPatchOf } from '../../../../shared/diff/json-patch'
+import { invertFlat, invertRenumbered } from '../../../../shared/diff/invert'
+import { diffRenumbered } from '../../../../shared/diff/renumber'
+import { weights } from '../../../../shared/settings/types'
 import { arbitraryContent, arbitraryPair } from '../../../support/arbitrary-content'
 
 const anyTwo = fc.oneof(arbitraryPair(), fc.tuple(arbitraryContent(), arbitraryContent()))
+const many = { numRuns: 400 }
 
 describe('the flat reading', () => {
   it('leads from the first content to the second', () => {
-    fc.assert(fc.property(anyTwo, ([a, b]) => { expect(applyFlat(a, diffContents(a, b))).toEqual(b) }), { numRuns: 300 })
-  })
-  it('as a JSON Patch leads a general library there', () => {
     fc.assert(fc.property(anyTwo, ([a, b]) => {
-      const patched = jsonpatch.applyPatch(structuredClone(a), structuredClone(jsonPatchOf(a, b)) as jsonpatch.Operation[], true).newDocument
-      expect(patched).toEqual(b)
-    }), { numRuns: 300 })
+      expect(applyFlat(a, diffContents(a, b))).toStrictEqual(b)
+    }), many)
+  })
+
+  it('is empty between equal contents', () => {
+    fc.assert(fc.property(arbitraryContent(), (a) => {
+      expect(diffContents(a, structuredClone(a))).toEqual([])
+    }), many)
+  })
+
+  it('is its own inverse when the contents are exchanged', () => {
+    fc.assert(fc.property(anyTwo, ([a, b]) => {
+      expect(invertFlat(diffContents(a, b))).toStrictEqual(diffContents(b, a))
+    }), many)
+  })
+
+  it('comes sorted by weight', () => {
+    fc.assert(fc.property(anyTwo, ([a, b]) => {
+      const ranks = diffContents(a, b).map((change) => weights.indexOf(change.weight))
+      expect(ranks).toEqual([...ranks].sort((x, y) => x - y))
+    }), many)
+  })
+})
+
+describe('the renumbered reading', () => {
+  it('leads from the first content to the second', () => {
+    let told = 0
+    fc.assert(fc.property(arbitraryPair({ most: 14 }), ([a, b]) => {
+      const reading = diffRenumbered(a, b)
+      if (!reading) return
+      told += 1
+      expect(applyRenumbered(a, reading)).toStrictEqual(b)
+    }), { numRuns: 1500 })
+    expect(told).toBeGreaterThan(300)
+  })
+
+  it('says less than the flat one, or nothing', () => {
+    fc.assert(fc.property(arbitraryPair(), ([a, b]) => {
+      const reading = diffRenumbered(a, b)
+      if (reading) expect(reading.renumbered.length + reading.changes.length).toBeLessThan(diffContents(a, b).length)
+    }), many)
+    fc.assert(fc.property(arbitraryContent(), (a) => {
+      expect(diffRenumbered(a, a)).toBeUndefined()
+    }))
+  })
+
+  it('is its own inverse when the contents are exchanged', () => {
+    fc.assert(fc.property(arbitraryPair({ most: 14 }), ([a, b]) => {
+      const reading = diffRenumbered(a, b)
+      expect(reading && invertRenumbered(reading)).toStrictEqual(diffRenumbered(b, a))
+    }), { numRuns: 1500 })
   })
 })

@@ -1,7 +1,7 @@
 import { setupField } from './fields'
 import { moveFields, zoneFieldNames } from './move-fields'
 import { type DecimalSign, bothReadings, surveyDecimals, proves, withPoint } from './csv-decimal'
-import { type Delimiter } from './csv-header'
+import type { Delimiter } from './csv-header'
 import type { CellMaker, Entry } from './csv-tree'
 import { type Problems, cutText } from './problems'
 import type { CsvRecord } from './csv-records'
@@ -51,7 +51,8 @@ export function cellMaker(delimiter: Delimiter, decimal: DecimalSign | 'mixed' |
     const text = withPoint(value, decimal)
     if (text !== undefined) return { ...asItIs, text }
     const [one, other] = bothReadings(value)
-    const advice = numeric === 'maybe' ? `, or text: write ${textMark} beside it if so`
+    const advice = numeric === 'maybe'
+      ? `, or text: write ${textMark} beside it if so`
       : decimal === undefined ? ': say which sign is the decimal one' : `: the decimal ${decimal} is the sign of this file`
     problems.addValue('number-unclear', at, spot, `"${cutText(value)}" could be ${cutText(one)} or ${cutText(other)}${advice}.`)
     return { kind: 'refused', ...spot }

@@ -7,9 +7,9 @@ import Papa from 'papaparse'
 
 export interface CsvRecord { readonly cells: readonly string[], readonly offset: number }
 
-export type CsvRecords =
-  | { readonly ok: true, readonly records: readonly CsvRecord[] }
-  | { readonly ok: false, readonly offset: number, readonly message: string }
+export type CsvRecords
+  = | { readonly ok: true, readonly records: readonly CsvRecord[] }
+    | { readonly ok: false, readonly offset: number, readonly message: string }
 
 const quote = '"'
 

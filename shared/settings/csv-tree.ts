@@ -68,7 +68,8 @@ export class CsvTree {
       at = `${at}/${list.length}`
       list.push(node)
       put(node, section, { kind: 'cell', offset, end: offset, cell: rowCell, text: row, unit: '' }, offset)
-    } else {
+    }
+    else {
       put(this.root, at.slice(1), node, offset)
     }
     const owner = { node, at }
@@ -86,13 +87,13 @@ export class CsvTree {
   }
 
   private refuseSection(section: string, offset: number): void {
-    const meant = nearestKey(section, sections)
+    const meant = this.problems.full ? undefined : nearestKey(section, sections)
     this.problems.add('key-unknown', step(section), { offset, end: offset, cell: 0 },
       `"${cutText(section)}" is no section; one of ${sections.join(', ')} belongs here.`, { value: section, ...(meant === undefined ? {} : { meant }) })
   }
 
   private refuseField(section: Section, field: string, at: string, spot: Spot): void {
-    const meant = section === 'file' ? nearestKey(field, fileFields) : undefined
+    const meant = section === 'file' && !this.problems.full ? nearestKey(field, fileFields) : undefined
     const right = section === 'file' ? `one of ${fileFields.join(', ')} belongs here` : 'the number stands in the row column'
     this.problems.add('key-unknown', at, spot, `"${cutText(field)}" is no field of ${section}: ${right}.`, { value: field, ...(meant === undefined ? {} : { meant }) })
   }

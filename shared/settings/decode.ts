@@ -4,9 +4,9 @@ import { decodeWindows1252 } from './windows-1252'
 export type Encoding = Normalised['encoding']
 
 /** The text without its byte-order mark, or where and why it cannot be read. */
-export type Decoded =
-  | { readonly ok: true, readonly text: string, readonly encoding: Encoding }
-  | { readonly ok: false, readonly byte: number | undefined, readonly message: string }
+export type Decoded
+  = | { readonly ok: true, readonly text: string, readonly encoding: Encoding }
+    | { readonly ok: false, readonly byte: number | undefined, readonly message: string }
 
 const startsWith = (bytes: Uint8Array, ...start: number[]) => start.every((byte, index) => bytes[index] === byte)
 const small = 0x73, capital = 0x53
@@ -24,7 +24,8 @@ function markedEncoding(bytes: Uint8Array): { readonly encoding: Encoding, reado
 function strictly(bytes: Uint8Array, label: string): string | undefined {
   try {
     return new TextDecoder(label, { fatal: true, ignoreBOM: true }).decode(bytes)
-  } catch (error) {
+  }
+  catch (error) {
     if (error instanceof TypeError) return undefined
     throw error
   }

@@ -29,7 +29,8 @@ export function readJson(text: string, encoding: Normalised['encoding'] = 'utf-8
 function treeOf(text: string, problems: Problems) {
   try {
     return jsonTree(text)
-  } catch (error) {
+  }
+  catch (error) {
     if (!(error instanceof TokenError)) throw error
     problems.add(error.code, '', { offset: error.offset, end: error.offset }, error.message)
     return undefined

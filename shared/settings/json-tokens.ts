@@ -18,7 +18,7 @@ export class TokenError extends Error {
 
 const powersOfTen = [1, 10, 100, 1e3, 1e4, 1e5, 1e6]
 const escapes: Readonly<Record<string, string>> = {
-  '"': '"', '\\': '\\', '/': '/', b: '\b', f: '\f', n: '\n', r: '\r', t: '\t',
+  '"': '"', '\\': '\\', '/': '/', 'b': '\b', 'f': '\f', 'n': '\n', 'r': '\r', 't': '\t',
 }
 const quote = 34, minus = 45, point = 46, zero = 48, nine = 57, backslash = 92, colon = 58, comma = 44
 const openBrace = 123, closeBrace = 125, openBracket = 91, closeBracket = 93
@@ -129,7 +129,8 @@ class Tokens {
     for (let code = text.charCodeAt(this.at); code !== quote; code = text.charCodeAt(this.at)) {
       if (code === backslash) {
         result += this.escape()
-      } else {
+      }
+      else {
         if (!(code >= 32)) this.failInString(code)
         result += text[this.at]
         this.at += 1

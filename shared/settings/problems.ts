@@ -16,7 +16,7 @@ export class Problems {
   /** A value that stands in the file is shown with it, unless the hints give another. `spot` is absent where nothing stands. */
   add(code: FormatErrorCode, at: string, spot: Spot | undefined, message: string, hints: Hints = {}): void {
     this.count += 1
-    if (this.kept.length >= maxErrors) return
+    if (this.full) return
     const error = { at, ...(spot ? this.source.place(spot) : {}), code, message, ...cutHints(hints) }
     this.kept.push({ error, offset: spot?.offset ?? 0 })
   }
@@ -26,8 +26,14 @@ export class Problems {
     this.add(code, at, spot, message, { value: this.source.shown(spot), ...(meant === undefined ? {} : { meant }) })
   }
 
-  get any(): boolean {
-    return this.count > 0
+  /** All that were added, kept or not. */
+  get total(): number {
+    return this.count
+  }
+
+  /** Whether what is added from now on is only counted: hints that cost time need not be looked for. */
+  get full(): boolean {
+    return this.kept.length >= maxErrors
   }
 
   /** In the order of the file; 'more' says how many were not kept. */

@@ -40,7 +40,7 @@ export function readFile(reading: Reading, root: RawObject): Omit<ReadSettings, 
   const moves = movesNode ? readMoves(reading, movesNode, context) : []
   const extra = readOwn(reading, slot('extra'), '/extra', maxExtra)
   const readings = readOwn(reading, slot('readings'), '/readings', maxReadings)
-  if (reading.problems.any || unit === undefined || exportedAt === undefined || axisKind === undefined) return undefined
+  if (reading.problems.total > 0 || unit === undefined || exportedAt === undefined || axisKind === undefined) return undefined
   const file: SettingsFile = {
     schema: schemaName, unit, exportedAt, ...given('exportedBy', exportedBy), ...given('note', note), axisKind, setup, zones, moves, extra, readings,
   }

@@ -1,4 +1,4 @@
-import { type MoveFieldName, isUnused, moveFields } from './move-fields'
+import { type MoveFieldName, moveFields } from './move-fields'
 import { type Move, moveKinds, turns } from './types'
 import type { RawNode, RawObject } from './raw'
 import { type Reading, type Slots, keyTable, sortIntoSlots } from './reading'
@@ -6,11 +6,13 @@ import { cutText } from './problems'
 import { type RowContext, maxMoves, readRowNumber, readRows } from './read-rows'
 import { readChoice, readNumber, readText, readWhole } from './read-value'
 import { sortedMoveKeys } from './sorted-keys'
+import { largestNumber } from '../units/number'
 import { textRules } from './text-rules'
 
 const table = keyTable(sortedMoveKeys)
 const slotOf = (name: string) => table.index.get(name) as number
 const numberSlot = slotOf('move')
+const isNumber = sortedMoveKeys.map(key => key !== 'move' && moveFields[key].type === 'number')
 
 /** The moves, by move. */
 export function readMoves(reading: Reading, node: RawNode, context: RowContext): Move[] {
@@ -28,16 +30,23 @@ function readMove(reading: Reading, row: RawObject, at: string, context: RowCont
     const node = slots[slot]
     if (node === undefined && slot !== numberSlot) continue
     const name = sortedMoveKeys[slot] as MoveFieldName | 'move'
-    const value = name === 'move'
-      ? readRowNumber(reading, node, row, `${at}/move`, 0, maxMoves - 1, taken)
-      : readField(reading, node as RawNode, `${at}/${name}`, name, context)
+    // Most values are plain numbers: they need no pointer and no further look.
+    const value = node?.kind === 'number' && isNumber[slot] && Math.abs(node.value) <= largestNumber
+      ? node.value
+      : name === 'move'
+        ? readRowNumber(reading, node, row, `${at}/move`, 0, maxMoves - 1, taken)
+        : readField(reading, node as RawNode, `${at}/${name}`, name, context)
     if (value === undefined) sound = false
     else draft[name] = value
   }
   const move = draft as Draft
-  const fits = [needs(reading, row, at, slots, move), refuses(reading, at, slots, move, context), ranges(reading, at, slots, move)]
+  const { problems } = reading
+  const before = problems.total
+  needs(reading, row, at, slots, move)
+  refuses(reading, at, slots, move, context)
+  ranges(reading, at, slots, move)
   // Sound: every key that was sent was read by its field, and the needed ones are there.
-  return sound && fits.every(Boolean) ? move as Move : undefined
+  return sound && problems.total === before ? move as Move : undefined
 }
 
 function readField(reading: Reading, node: RawNode, at: string, name: MoveFieldName, { axisKind }: RowContext): string | number | undefined {
@@ -51,54 +60,56 @@ function readField(reading: Reading, node: RawNode, at: string, name: MoveFieldN
   }
 }
 
-const always: readonly MoveFieldName[] = ['kind', 'target', 'speed', 'acceleration']
-const ofPress: readonly MoveFieldName[] = ['forceLimit', 'approach']
-const pressOnly: readonly MoveFieldName[] = ['approach', 'pressSpeed']
+const slotted = (...names: MoveFieldName[]) => names.map(name => ({ name, slot: slotOf(name) }))
+const always = slotted('kind', 'target', 'speed', 'acceleration')
+const ofPress = slotted('forceLimit', 'approach')
+const pressOnly = slotted('approach', 'pressSpeed')
+const turn = slotted('turn')
+const dwell = slotted('dwell')
+const positive = slotted('speed', 'acceleration', 'deceleration', 'forceLimit', 'pressSpeed')
+const notNegative = slotted('window', 'dwell')
+const nextSlot = slotOf('next')
 
-function needs(reading: Reading, row: RawObject, at: string, slots: Slots, move: Draft): boolean {
-  const missing = [...always, ...(move.kind === 'press' ? ofPress : [])].filter(name => slots[slotOf(name)] === undefined)
-  for (const name of missing) {
-    const who = always.includes(name) ? 'Every move' : 'A press'
-    reading.problems.add('missing', `${at}/${name}`, row, `${name} is missing. ${who} needs it: ${moveFields[name].help}`)
-  }
-  return missing.length === 0
+type Named = readonly { readonly name: MoveFieldName, readonly slot: number }[]
+
+function needs(reading: Reading, row: RawObject, at: string, slots: Slots, move: Draft): void {
+  need(reading, row, at, slots, always, 'Every move')
+  if (move.kind === 'press') need(reading, row, at, slots, ofPress, 'A press')
 }
 
-function refuses(reading: Reading, at: string, slots: Slots, move: Draft, context: RowContext): boolean {
-  let fits = true
-  const refuse = (name: MoveFieldName, why: string) => {
-    const node = slots[slotOf(name)]
-    if (node === undefined) return
-    fits = false
-    reading.problems.addValue('not-allowed-here', `${at}/${name}`, node, why)
+function need(reading: Reading, row: RawObject, at: string, slots: Slots, fields: Named, who: string): void {
+  for (const { name, slot } of fields) {
+    if (slots[slot] === undefined) reading.problems.add('missing', `${at}/${name}`, row, `${name} is missing. ${who} needs it: ${moveFields[name].help}`)
   }
-  if (move.kind !== undefined && move.kind !== 'press') {
-    for (const name of pressOnly) refuse(name, `${name} belongs to a press; this move is ${move.kind}. Take it out.`)
-  }
-  if (context.axisKind !== undefined && !context.wraps) refuse('turn', 'turn belongs to a rotary axis with a modulo in its setup. Take it out.')
-  if (slots[slotOf('next')] === undefined) refuse('dwell', 'dwell waits before the move that follows; this one has no next. Take it out, or give next.')
-  return fits
 }
 
-const positive: readonly MoveFieldName[] = ['speed', 'acceleration', 'deceleration', 'forceLimit', 'pressSpeed']
-const notNegative: readonly MoveFieldName[] = ['window', 'dwell']
+function refuses(reading: Reading, at: string, slots: Slots, move: Draft, context: RowContext): void {
+  if (move.kind !== undefined && move.kind !== 'press') refuse(reading, at, slots, pressOnly, `belongs to a press; this move is ${move.kind}. Take it out.`)
+  if (context.axisKind !== undefined && !context.wraps) refuse(reading, at, slots, turn, 'belongs to a rotary axis with a modulo in its setup. Take it out.')
+  if (slots[nextSlot] === undefined) refuse(reading, at, slots, dwell, 'waits before the move that follows; this one has no next. Take it out, or give next.')
+}
+
+function refuse(reading: Reading, at: string, slots: Slots, fields: Named, why: string): void {
+  for (const { name, slot } of fields) {
+    const node = slots[slot]
+    if (node !== undefined) reading.problems.addValue('not-allowed-here', `${at}/${name}`, node, `${name} ${why}`)
+  }
+}
 
 /** An unused row keeps its zeros, so that its emptiness is restored. */
-function ranges(reading: Reading, at: string, slots: Slots, move: Draft): boolean {
-  const unused = move.speed !== undefined && move.acceleration !== undefined && isUnused({ speed: move.speed, acceleration: move.acceleration })
-  let fits = true
-  const check = (name: MoveFieldName, least: number, orEqual: boolean) => {
-    const value = move[name]
-    if (typeof value !== 'number' || value > least || (orEqual && value === least)) return
-    fits = false
-    const node = slots[slotOf(name)] as RawNode
-    reading.problems.addValue('number-range', `${at}/${name}`, node, `${cutText(reading.source.shown(node))} will not do for ${moveFields[name].label}: it must be ${orEqual ? '0 or more' : 'more than 0'}${unit(name)}.`)
-  }
-  for (const name of positive) check(name, 0, unused)
-  for (const name of notNegative) check(name, 0, true)
-  return fits
+function ranges(reading: Reading, at: string, slots: Slots, move: Draft): void {
+  const unused = move.speed === 0 && move.acceleration === 0
+  atLeastZero(reading, at, slots, move, positive, unused)
+  atLeastZero(reading, at, slots, move, notNegative, true)
 }
 
-function unit(name: MoveFieldName): string {
-  return name === 'speed' || name === 'acceleration' ? '; 0 in both speed and acceleration marks an unused row' : ''
+function atLeastZero(reading: Reading, at: string, slots: Slots, move: Draft, fields: Named, orZero: boolean): void {
+  for (const { name, slot } of fields) {
+    const value = move[name]
+    if (typeof value !== 'number' || value > 0 || (orZero && value === 0)) continue
+    const node = slots[slot] as RawNode
+    const right = orZero ? '0 or more' : 'more than 0'
+    const unused = name === 'speed' || name === 'acceleration' ? '; 0 in both speed and acceleration marks an unused row' : ''
+    reading.problems.addValue('number-range', `${at}/${name}`, node, `${cutText(reading.source.shown(node))} will not do for ${moveFields[name].label}: it must be ${right}${unused}.`)
+  }
 }

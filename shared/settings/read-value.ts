@@ -2,8 +2,8 @@ import type { FormatErrorCode } from './types'
 import type { RawCell, RawNode } from './raw'
 import type { Reading } from './reading'
 import { toCanonical } from '../units/convert'
-import { Exact } from '../units/exact'
-import { type NumberProblem, largestNumber, parseDecimalText, parseOwnNumber, roundToMillionths } from '../units/number'
+import type { Exact } from '../units/exact'
+import { type NumberProblem, largestNumber, parseDecimalText, parseOwnNumber, plainNumber, roundToMillionths } from '../units/number'
 import { type Unit, findUnit, unitNames, unitsFor } from '../units/units'
 import { nearestKey } from './nearest-key'
 import { cutText } from './problems'
@@ -23,6 +23,8 @@ export function readNumber(reading: Reading, node: RawNode, at: string, canonica
   if (node.kind === 'number' && Math.abs(node.value) <= largestNumber) return node.value
   const unit = node.kind === 'cell' ? unitOf(reading, node, at, canonical) : undefined
   if (unit === null) return undefined
+  const easy = node.kind === 'cell' && (unit === undefined || unit.name === canonical) ? plainNumber(node.text) : undefined
+  if (easy !== undefined) return easy
   const exact = exactOf(reading, node, at)
   if (exact === undefined) return undefined
   const rounded = roundToMillionths(unit ? toCanonical(exact, unit) : exact)
@@ -43,7 +45,7 @@ function unitOf(reading: Reading, cell: RawCell, at: string, canonical: string |
   const fitting = unitsFor(canonical).map(each => each.name).join(', ')
   const right = fitting === '' ? 'this value takes no unit; leave the cell empty' : `here fit ${fitting}`
   const fault = found === 'unit-unknown' ? 'is not a unit that is read' : 'does not fit this value'
-  const meant = found === 'unit-unknown' ? nearestKey(cell.unit, fitting === '' ? unitNames() : fitting.split(', ')) : undefined
+  const meant = found === 'unit-unknown' && !reading.problems.full ? nearestKey(cell.unit, fitting === '' ? unitNames() : fitting.split(', ')) : undefined
   reading.problems.add(found, at, { ...cell, cell: unitCell }, `Unit "${cutText(cell.unit)}" ${fault}: ${right}.`,
     meant === undefined ? { value: cell.unit } : { value: cell.unit, meant })
   return null
@@ -119,7 +121,7 @@ export function readChoice<Choice extends string>(reading: Reading, node: RawNod
   const text = node.kind === 'text' || node.kind === 'cell' ? node.text : undefined
   const choice = choices.find(each => each === text)
   if (choice !== undefined) return choice
-  const meant = text === undefined ? undefined : nearestKey(text, choices)
+  const meant = text === undefined || reading.problems.full ? undefined : nearestKey(text, choices)
   reading.problems.addValue('enum', at, node, `${shown(reading, node)} is not one of ${choices.join(', ')}.`, meant)
   return undefined
 }

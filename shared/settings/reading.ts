@@ -61,7 +61,7 @@ function keySpot(node: RawObject, index: number) {
 
 function reportUnknown(reading: Reading, node: RawObject, index: number, table: KeyTable, at: string): void {
   const key = node.keys[index] as string
-  const meant = nearestKey(key, table.names)
+  const meant = reading.problems.full ? undefined : nearestKey(key, table.names)
   const advice = meant === undefined ? 'take it out, or put it under extra' : `${meant} is probably meant`
   reading.problems.add('key-unknown', at + step(key), keySpot(node, index), `"${cutText(key)}" is no key of this place: ${advice}.`,
     meant === undefined ? { value: key } : { value: key, meant })

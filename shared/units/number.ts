@@ -31,6 +31,16 @@ export function parseDecimalText(text: string): Exact | NumberProblem {
   return new Exact(text)
 }
 
+const plain = /^-?(?:0|[1-9]\d{0,8})(?:\.\d{1,6})?$/
+
+/**
+ * The number of a text that is canonical as it stands: at most 9 digits before and 6 after the point, so that 15 digits go
+ * through the nearest double and back. Undefined where decimal arithmetic has to look at it.
+ */
+export function plainNumber(text: string): number | undefined {
+  return plain.test(text) ? Number(text) + 0 : undefined
+}
+
 /** A canonical number: a whole number of millionths, at most 1e9 either way, and whether rounding changed the value. */
 export interface Rounded { readonly value: number, readonly rounded: boolean }
 
@@ -46,6 +56,8 @@ export function roundToMillionths(exact: Exact): Rounded | 'number-range' {
  * 'number-digits' where there is none, as for 9007199254740993.
  */
 export function parseOwnNumber(text: string): number | NumberProblem {
+  const easy = plainNumber(text)
+  if (easy !== undefined) return easy
   const exact = parseDecimalText(text)
   if (typeof exact === 'string') return exact
   const double = exact.toNumber() + 0

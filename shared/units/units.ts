@@ -57,8 +57,10 @@ export function unitsFor(canonical: string): readonly Unit[] {
 
 /** The unit by any of its spellings, if it fits the canonical one; `g` is gravity for mm/s² and gram for kg. */
 export function findUnit(text: string, canonical: string): Unit | 'unit-unknown' | 'unit-unfit' {
+  const fitting = unitsFor(canonical)
+  if (fitting[0]?.name === text) return fitting[0]
   const name = spellUnit(text)
-  return unitsFor(canonical).find(each => each.name === name) ?? (names.has(name) ? 'unit-unfit' : 'unit-unknown')
+  return fitting.find(each => each.name === name) ?? (names.has(name) ? 'unit-unfit' : 'unit-unknown')
 }
 
 /** Every name of a unit, in its one spelling. */

@@ -19,7 +19,7 @@ export interface LifeInput {
 
 export interface LifeStroke { readonly x: number, readonly length: number, readonly tone: 'version' | 'off', readonly numbers: readonly number[] }
 export interface LifeRun { readonly from: number, readonly to: number, readonly label: string | null }
-export interface LifeText { readonly x: number, readonly y: number, readonly text: string, readonly anchor: Anchor, readonly tone: 'line' | 'ink' | 'after' | 'harm' }
+export interface LifeText { readonly x: number, readonly y: number, readonly text: string, readonly anchor: Anchor, readonly tone: 'line' | 'off' }
 export interface LifeLayout {
   readonly width: number
   readonly height: number
@@ -99,7 +99,7 @@ export function layoutLife(input: LifeInput, width: number): LifeLayout {
     strokes, runs: runsOf(marks, right, x), cuts,
     texts: [
       ...unitTexts(fitted, x, left, right),
-      ...(offStroke && input.off ? [{ x: offStroke.x - 5, y: lifeLines.rule + 34, text: `v${input.off.number} off`, anchor: 'end' as const, tone: 'harm' as const }] : []),
+      ...(offStroke && input.off ? [{ x: offStroke.x - 5, y: lifeLines.rule + 34, text: `v${input.off.number} off`, anchor: 'end' as const, tone: 'off' as const }] : []),
     ],
   }
 }

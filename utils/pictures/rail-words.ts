@@ -1,7 +1,6 @@
 import type { RailInput, RailMove, RailSide } from './rail-input'
+import { listWords } from '../words/lists'
 import { figure } from './scale'
-
-const list = (words: readonly string[]) => words.length < 2 ? words.join('') : `${words.slice(0, -1).join(', ')} and ${words[words.length - 1]}`
 
 /** Moves by where they end, for people who read the picture instead of seeing it: "0 and 6 at 5, press 2 from 88 to 104". */
 function placesOf(moves: readonly RailMove[]): string {
@@ -10,12 +9,12 @@ function placesOf(moves: readonly RailMove[]): string {
     const place = move.approach === undefined ? `at ${figure(move.target)}` : `from ${figure(move.approach)} to ${figure(move.target)}`
     keys.set(place, [...(keys.get(place) ?? []), move.move])
   }
-  return [...keys].map(([place, numbers]) => `${place.startsWith('from') ? 'press ' : ''}${list(numbers.map(String))} ${place}`).join(', ')
+  return [...keys].map(([place, numbers]) => `${place.startsWith('from') ? 'press ' : ''}${listWords(numbers.map(String))} ${place}`).join(', ')
 }
 
 const limitsOf = (side: RailSide) => {
   if (side.softMin === undefined && side.softMax === undefined) return 'no soft limits'
-  const named = list([side.softMin, side.softMax].filter(limit => limit !== undefined).map(figure))
+  const named = listWords([side.softMin, side.softMax].filter(limit => limit !== undefined).map(figure))
   return `soft limits ${named}${side.limitsHeld ? '' : ', not held'}`
 }
 

@@ -21,9 +21,19 @@ function midnight(date: Day, zone: string): number {
   return utc - offsetAt(first, zone)
 }
 
+/** Making a formatter takes a thousand times as long as using it, and a page has one zone, hardly ever two. */
+const clocks = new Map<string, Intl.DateTimeFormat>()
+
+function clockOf(zone: string): Intl.DateTimeFormat {
+  const known = clocks.get(zone)
+  if (known) return known
+  const made = new Intl.DateTimeFormat('en-GB', { timeZone: zone, hourCycle: 'h23', year: 'numeric', month: '2-digit', day: '2-digit', hour: '2-digit', minute: '2-digit', second: '2-digit' })
+  clocks.set(zone, made)
+  return made
+}
+
 function partsAt(instant: number, zone: string): Record<string, number> {
-  const format = new Intl.DateTimeFormat('en-GB', { timeZone: zone, hourCycle: 'h23', year: 'numeric', month: '2-digit', day: '2-digit', hour: '2-digit', minute: '2-digit', second: '2-digit' })
-  return Object.fromEntries(format.formatToParts(instant).map(part => [part.type, Number(part.value)]))
+  return Object.fromEntries(clockOf(zone).formatToParts(instant).map(part => [part.type, Number(part.value)]))
 }
 
 function offsetAt(instant: number, zone: string): number {

@@ -1,0 +1,21 @@
+import { useEventListener, useResizeObserver } from '@vueuse/core'
+import type { Ref } from 'vue'
+
+/** A4 landscape between its margins, at 96 px an inch. */
+const printWidth = 1030
+
+/** The width that a picture is drawn for: what its box has on the screen, the sheet's own in print. 0 until it is known. */
+export function useMeasuredWidth(box: Ref<HTMLElement | null>): Ref<number> {
+  const measured = ref(0)
+  const printing = ref(false)
+  useResizeObserver(box, ([entry]) => {
+    measured.value = Math.round(entry?.contentRect.width ?? 0)
+  })
+  useEventListener(window, 'beforeprint', () => {
+    printing.value = true
+  })
+  useEventListener(window, 'afterprint', () => {
+    printing.value = false
+  })
+  return computed(() => printing.value ? printWidth : measured.value)
+}

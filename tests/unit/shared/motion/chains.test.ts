@@ -1,0 +1,76 @@
+import fc from 'fast-check'
+import { describe, expect, it } from 'vitest'
+import { endlessChains, followers, knownStarts, usedRows } from '../../../../shared/motion/chains'
+import type { Move } from '../../../../shared/settings/types'
+import { arbitraryContent } from '../../../support/arbitrary-content'
+import { absolute, press, relative, unused } from '../../../support/check-input'
+
+const startsOf = (moves: Move[], number: number) => knownStarts(usedRows(moves)).get(number)
+const loops = (moves: Move[]) => endlessChains(usedRows(moves)).map(loop => loop.map(row => row.move.move))
+
+describe('rows', () => {
+  it('leave unused ones out and keep their place in the table', () => {
+    expect(usedRows([absolute(0, 0), unused(1), absolute(2, 0)]).map(({ move, index }) => [move.move, index])).toEqual([[0, 0], [2, 2]])
+  })
+
+  it('follow where a used row names them', () => {
+    expect([...followers(usedRows([absolute(0, 0, { next: 4 }), { ...unused(1), next: 9 }, absolute(2, 0, { next: 4 })]))]).toEqual([4])
+  })
+})
+
+describe('knownStarts', () => {
+  it('is the end of each row that names the row: 50, and the target 150 of a press', () => {
+    expect(startsOf([absolute(0, 50, { next: 2 }), press(1, 100, 150, { next: 2 }), absolute(2, 0)], 2)).toEqual({ positions: [50, 150], open: false })
+  })
+
+  it('adds up relative moves: 10 + 0.1 + 0.2 = 10.3', () => {
+    const moves = [absolute(0, 10, { next: 1 }), relative(1, 0.1, { next: 2 }), relative(2, 0.2, { next: 3 }), relative(3, 5)]
+    expect(startsOf(moves, 3)).toEqual({ positions: [10.3], open: false })
+  })
+
+  it('stays open behind a relative move that anybody may call', () => {
+    const moves = [relative(0, 5, { next: 2 }), absolute(1, 50, { next: 2 }), relative(2, 5, { next: 3 }), absolute(3, 0, { next: 4 }), absolute(4, 0)]
+    expect(startsOf(moves, 2)).toEqual({ positions: [50], open: true })
+    expect(startsOf(moves, 3)).toEqual({ positions: [55], open: true })
+    expect(startsOf(moves, 4)).toEqual({ positions: [0], open: false })
+  })
+
+  it('has none for a row that nobody names, and no place for a loop of relative moves', () => {
+    expect(startsOf([absolute(0, 0)], 0)).toBeUndefined()
+    expect(startsOf([relative(0, 5, { next: 1 }), relative(1, -5, { next: 0 })], 0)).toEqual({ positions: [], open: false })
+  })
+
+  it('goes round a loop once', () => {
+    expect(startsOf([absolute(0, 100, { next: 1 }), relative(1, 10, { next: 1 })], 1)).toEqual({ positions: [100], open: false })
+    expect(startsOf([absolute(3, 50, { next: 3 })], 3)).toEqual({ positions: [50], open: false })
+  })
+})
+
+describe('endlessChains', () => {
+  it('finds each loop once, from its lowest number on, without what leads in', () => {
+    expect(loops([absolute(0, 0, { next: 6 }), absolute(5, 0, { next: 7 }), absolute(6, 0, { next: 5 }), absolute(7, 0, { next: 6 }), relative(9, 1, { next: 9 })]))
+      .toEqual([[5, 7, 6], [9]])
+  })
+
+  it('finds none where a chain ends, at a missing or unused row too', () => {
+    expect(loops([absolute(0, 0, { next: 1 }), absolute(1, 0)])).toEqual([])
+    expect(loops([absolute(0, 0, { next: 7 })])).toEqual([])
+    expect(loops([absolute(0, 0, { next: 1 }), { ...unused(1), next: 0 }])).toEqual([])
+  })
+
+  it('holds just the rows that come back to themselves', () => {
+    fc.assert(fc.property(arbitraryContent({ most: 14 }), ({ moves }) => {
+      const rows = usedRows(moves)
+      const byNumber = new Map(rows.map(({ move }) => [move.move, move]))
+      const returning = rows.filter(({ move }) => {
+        let at: Move | undefined = move
+        for (let step = 0; step < rows.length && at; step++) {
+          at = at.next === undefined ? undefined : byNumber.get(at.next)
+          if (at === move) return true
+        }
+        return false
+      }).map(({ move }) => move.move)
+      expect(loops([...moves]).flat().sort((a, b) => a - b)).toEqual(returning)
+    }))
+  })
+})

@@ -1,0 +1,24 @@
+import fc from 'fast-check'
+import { describe, expect, it } from 'vitest'
+import { minus, plus } from '../../../../shared/motion/exact'
+import { canonicalNumber } from '../../../support/arbitrary-content'
+
+describe('exact sums', () => {
+  it('gives what decimals give where doubles do not', () => {
+    expect([plus(0.1, 0.2), minus(212.4, 198), minus(0.3, 0.1), minus(1.1, -0.2)]).toEqual([0.3, 14.4, 0.2, 1.3])
+    expect([0.1 + 0.2, 212.4 - 198, 0.3 - 0.1, 1.1 + 0.2]).not.toContain(0.3)
+  })
+
+  it('is exact over the whole range, as whole numbers of millionths show', () => {
+    const value = canonicalNumber(-1e9, 1e9)
+    const millionths = (x: number) => BigInt(x.toFixed(6).replace('.', ''))
+    fc.assert(fc.property(value, value, (a, b) => {
+      expect(millionths(plus(a, b))).toBe(millionths(a) + millionths(b))
+      expect(millionths(minus(a, b))).toBe(millionths(a) - millionths(b))
+    }))
+  })
+
+  it('takes a number with more decimals for the nearest millionth', () => {
+    expect(minus(200.00000049, 0)).toBe(200)
+  })
+})

@@ -1,0 +1,13 @@
+import { usedRows, type Row } from '../motion/chains'
+import type { Move } from '../settings/types'
+
+/** The press rows that are in use. */
+export function pressRows(moves: readonly Move[]): Row[] {
+  return usedRows(moves).filter(({ move }) => move.kind === 'press')
+}
+
+/** The way a press pushes: from its approach towards its target; undefined where the two are one place. */
+export function pushOf({ approach, target }: Move): 1 | -1 | undefined {
+  if (approach === undefined || target === approach) return undefined
+  return target > approach ? 1 : -1
+}

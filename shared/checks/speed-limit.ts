@@ -1,0 +1,55 @@
+import { usedRows } from '../motion/chains'
+import type { Content } from '../settings/types'
+import { answers } from './answers'
+import { aboveNameplate, aboveSetup, type Asked } from './ceiling'
+import { axisUnits } from './format'
+import { atMove, atSetup } from './pointers'
+import type { CheckResult, JudgeInput, Rule } from './types'
+
+const say = answers('speed-limit')
+
+const setupSpeeds = {
+  homingSpeed: 'The homing speed', homingCreepSpeed: 'The homing creep speed', speedLimit: 'The speed limit',
+  jogSpeed: 'The jog speed', pressSpeed: 'The press speed',
+} as const
+
+export const speedLimit: Rule = {
+  id: 'speed-limit',
+  title: 'Speeds',
+  reason: 'A speed beyond the unit ends in an error or in wear; one beyond the setup is clipped, and the cycle takes longer than it says.',
+  formula: 'speeds of moves, presses, homing and jog, and speedLimit, <= maxSpeed; speeds of moves and presses <= speedLimit',
+  levels: ['stop', 'warn', 'unknown'],
+  applies: ({ content }) => inMoves(content).length + inSetup(content).length > 0,
+  judge,
+}
+
+function judge({ content, nameplate }: JudgeInput): CheckResult[] {
+  const { speed } = axisUnits(content.axisKind)
+  const moves = inMoves(content)
+  return [
+    ...aboveNameplate(say, 'Speeds', [...moves, ...inSetup(content)], speed, 'maxSpeed', nameplate?.maxSpeed),
+    ...aboveSetup(say, [...moves, ...pressesAtSetupSpeed(content)], speed, atSetup('speedLimit'), content.setup.speedLimit),
+  ]
+}
+
+function inMoves({ moves }: Content): Asked[] {
+  return usedRows(moves).flatMap((row): Asked[] => {
+    const { move, speed, pressSpeed } = row.move
+    const asked = [{ at: atMove(row, 'speed'), words: `Move ${move}: a speed`, value: speed, move }]
+    return pressSpeed === undefined ? asked : [...asked, { at: atMove(row, 'pressSpeed'), words: `Press ${move}: a press speed`, value: pressSpeed, move }]
+  })
+}
+
+/** Presses without a press speed of their own: the setup's counts against the setup's limit, once for each such move. */
+function pressesAtSetupSpeed({ moves, setup: { pressSpeed } }: Content): Asked[] {
+  if (pressSpeed === undefined) return []
+  return usedRows(moves).filter(({ move }) => move.kind === 'press' && move.pressSpeed === undefined)
+    .map(({ move: { move } }) => ({ at: atSetup('pressSpeed'), words: `Press ${move}: a press speed`, value: pressSpeed, move }))
+}
+
+function inSetup({ setup }: Content): Asked[] {
+  return (Object.keys(setupSpeeds) as (keyof typeof setupSpeeds)[]).flatMap((field) => {
+    const value = setup[field]
+    return value === undefined ? [] : [{ at: atSetup(field), words: setupSpeeds[field], value }]
+  })
+}

@@ -4,7 +4,7 @@ import { CodedError } from './coded'
 export const refusalCodes = [
   'sign-in-needed', 'role', 'token-scope', 'origin', 'not-found', 'input', 'json-syntax', 'media-type', 'too-large', 'no-route', 'method',
   'signature', 'signing-password', 'four-eyes', 'throttled', 'sign-in-failed', 'set-up-done', 'set-up-token', 'password-weak', 'password-wrong',
-  'rev-missing', 'edited-meanwhile', 'key-reused', 'key-missing', 'taken', 'overlaps', 'site-bounds', 'last-admin', 'time-order', 'already-ended',
+  'rev-missing', 'edited-meanwhile', 'key-reused', 'taken', 'overlaps', 'site-bounds', 'last-admin', 'time-order', 'already-ended',
   'settings-unreadable', 'tray-full', 'tray-settled', 'stop-checks', 'already-void', 'marked', 'cautions-unread', 'no-known-good', 'axis-kind',
   'not-fitted', 'serial-unknown', 'time-zone', 'disk-full', 'fault',
 ] as const

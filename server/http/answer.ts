@@ -1,0 +1,21 @@
+/** What a handler answers where the table lists more than one status: `answer(201, body)`. */
+export class Answer {
+  constructor(readonly status: number, readonly body: unknown) {}
+}
+export const answer = (status: number, body: unknown): Answer => new Answer(status, body)
+
+/** A body that is no JSON: a download, a text. Built by `file`. */
+export class FileAnswer {
+  constructor(
+    readonly body: Buffer,
+    readonly mediaType: string,
+    /** Offered for download under this name; null = shown in place. */
+    readonly name: string | null = null,
+    /** Strong validator of an immutable body; null = never kept by the browser. */
+    readonly etag: string | null = null,
+  ) {}
+}
+
+export function file(body: Buffer | string, mediaType: string, { name = null, etag = null }: { name?: string | null, etag?: string | null } = {}): FileAnswer {
+  return new FileAnswer(typeof body === 'string' ? Buffer.from(body, 'utf8') : body, mediaType, name, etag)
+}

@@ -1,4 +1,4 @@
-import { endlessChains, knownStarts, usedRows, type Row } from '../motion/chains'
+import { endlessChains, knownStarts, turned, usedRows, type Row } from '../motion/chains'
 import { minus } from '../motion/exact'
 import { lapThatLeaves, lapTravel } from '../motion/lap'
 import { answers } from './answers'
@@ -48,7 +48,8 @@ function runaways(rows: readonly Row[], length: string, min?: number, max?: numb
   const starts = knownStarts(rows)
   const results: CheckResult[] = []
   for (const loop of endlessChains(rows)) {
-    const chain = fromKnownStart(loop, row => (starts.get(row.move.move)?.positions.length ?? 0) > 0)
+    // Laps are counted from where the chain is known to be entered, else from its lowest number.
+    const chain = turned(loop, Math.max(0, loop.findIndex(row => (starts.get(row.move.move)?.positions.length ?? 0) > 0)))
     const lap = lapTravel(chain.map(row => row.move))
     if (!lap || lap.net === 0) continue
     const moves = loop.map(row => row.move.move)
@@ -66,10 +67,4 @@ function runaways(rows: readonly Row[], length: string, min?: number, max?: numb
       { moves, net: lap.net, lap: leaves, span: minus(max, min) }))
   }
   return results
-}
-
-/** Laps are counted from where the chain is known to be entered, else from its lowest number. */
-function fromKnownStart(loop: readonly Row[], known: (row: Row) => boolean): readonly Row[] {
-  const first = Math.max(0, loop.findIndex(known))
-  return [...loop.slice(first), ...loop.slice(0, first)]
 }

@@ -16,7 +16,8 @@ export const targetInside: Rule = {
   reason: 'The drive refuses or cuts short a move that ends beyond its soft limits, and the machine waits.',
   formula: 'softLimitMin <= end <= softLimitMax; end = target, of a relative move with a known start: start + target',
   levels: ['stop', 'unknown'],
-  applies: ({ content }) => !turnsFreely(content) && ends(content.moves).length > 0,
+  // Relative moves alone have no known start.
+  applies: ({ content }) => !turnsFreely(content) && usedRows(content.moves).some(({ move }) => move.kind !== 'relative'),
   judge,
 }
 

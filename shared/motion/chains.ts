@@ -17,45 +17,66 @@ export function followers(rows: readonly Row[]): ReadonlySet<number> {
 
 /** Where a row starts, as far as the rows that name it tell. */
 export interface Starts {
-  /** In mm or deg, without doubles. */
+  /** Lowest and highest start in mm or deg; one where they are the same, none where no row tells. */
   readonly positions: readonly number[]
   /** A row that names it ends nobody knows where. */
   readonly open: boolean
 }
 
+interface Reach { low: number, high: number, open: boolean }
+
 /**
  * Starts by move number: the end of each row that names the row in `next`; a press ends at its target, the furthest it
- * can get. A row that nobody names has none. Relative rows pass on start + distance, once round a loop.
+ * can get. A row that nobody names has no entry. Relative rows pass on start + distance, and a loop that does not come
+ * back to its place is gone round once.
  */
 export function knownStarts(rows: readonly Row[]): ReadonlyMap<number, Starts> {
-  const byNumber = new Map(rows.map(({ move }) => [move.move, move]))
-  const named = followers(rows)
-  const positions = new Map<number, Set<number>>()
-  const open = new Set<number>()
-  for (const { move } of rows) {
-    if (move.kind === 'relative') {
-      if (!named.has(move.move)) walk(move, byNumber, follower => open.add(follower.move))
-      continue
-    }
-    let end = move.target
-    walk(move, byNumber, (follower) => {
-      const starts = positions.get(follower.move) ?? new Set()
-      positions.set(follower.move, starts.add(end))
-      end = plus(end, follower.target)
-    })
-  }
-  return new Map([...named].map(number => [number, { positions: [...positions.get(number) ?? []], open: open.has(number) }]))
+  const reached = new Map<number, Reach>([...followers(rows)].map(number => [number, { low: Infinity, high: -Infinity, open: false }]))
+  const loops = endlessChains(rows)
+  for (const { move } of leadingIn(rows, new Set(loops.flat()))) passOn(move, reached)
+  for (const loop of loops) for (const { move } of onceRound(loop, reached)) passOn(move, reached)
+  return new Map([...reached].map(([number, { low, high, open }]) =>
+    [number, { positions: low > high ? [] : low === high ? [low] : [low, high], open }]))
 }
 
-/** Visits what follows `from`, up to the first row that goes to a place of its own or that was visited before. */
-function walk(from: Move, byNumber: ReadonlyMap<number, Move>, visit: (follower: Move) => void): void {
-  const visited = new Set<number>()
-  let follower = next(from, byNumber)
-  while (follower !== undefined && !visited.has(follower.move)) {
-    visit(follower)
-    visited.add(follower.move)
-    follower = follower.kind === 'relative' ? next(follower, byNumber) : undefined
+/** Tells the row that follows `move` where it starts. */
+function passOn(move: Move, reached: ReadonlyMap<number, Reach>): void {
+  const follower = move.next === undefined ? undefined : reached.get(move.next)
+  if (!follower) return
+  const from = move.kind === 'relative' ? reached.get(move.move) : { low: 0, high: 0, open: false }
+  if (!from || from.open) follower.open = true
+  if (!from || from.low > from.high) return
+  follower.low = Math.min(follower.low, plus(from.low, move.target))
+  follower.high = Math.max(follower.high, plus(from.high, move.target))
+}
+
+/** Rows outside loops, each behind all rows that name it. */
+function leadingIn(rows: readonly Row[], looping: ReadonlySet<Row>): Row[] {
+  const byNumber = new Map(rows.map(row => [row.move.move, row]))
+  const waitingFor = new Map<number, number>()
+  for (const { move: { next } } of rows) if (next !== undefined) waitingFor.set(next, (waitingFor.get(next) ?? 0) + 1)
+  const ready = rows.filter(row => !waitingFor.has(row.move.move))
+  for (const { move: { next } } of ready) {
+    const follower = next === undefined ? undefined : byNumber.get(next)
+    if (!follower || looping.has(follower)) continue
+    const left = waitingFor.get(follower.move.move)! - 1
+    waitingFor.set(follower.move.move, left)
+    if (left === 0) ready.push(follower)
   }
+  return ready
+}
+
+/** The order in which rows of a loop tell their followers: from a place of its own all round, else from where it is entered. */
+function onceRound(loop: readonly Row[], reached: ReadonlyMap<number, Reach>): readonly Row[] {
+  const fixed = loop.findIndex(({ move }) => move.kind !== 'relative')
+  if (fixed >= 0) return turned(loop, fixed)
+  const entered = loop.findIndex(({ move }) => {
+    const start = reached.get(move.move)!
+    return start.open || start.low <= start.high
+  })
+  const round = turned(loop, Math.max(0, entered))
+  const comesBack = loop.reduce((net, { move }) => plus(net, move.target), 0) === 0
+  return comesBack ? [...round, ...round] : round.slice(0, -1)
 }
 
 /** Rows that follow each other without end, each loop once, from its lowest number on. */
@@ -80,10 +101,10 @@ export function endlessChains(rows: readonly Row[]): Row[][] {
 
 function fromLowest(loop: readonly Row[]): Row[] {
   const lowest = Math.min(...loop.map(row => row.move.move))
-  const first = loop.findIndex(row => row.move.move === lowest)
-  return [...loop.slice(first), ...loop.slice(0, first)]
+  return turned(loop, loop.findIndex(row => row.move.move === lowest))
 }
 
-function next(move: Move, byNumber: ReadonlyMap<number, Move>): Move | undefined {
-  return move.next === undefined ? undefined : byNumber.get(move.next)
+/** The same loop, told from its row at `first` on. */
+export function turned(loop: readonly Row[], first: number): Row[] {
+  return [...loop.slice(first), ...loop.slice(0, first)]
 }

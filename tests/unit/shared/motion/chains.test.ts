@@ -40,6 +40,45 @@ describe('knownStarts', () => {
     expect(startsOf([relative(0, 5, { next: 1 }), relative(1, -5, { next: 0 })], 0)).toEqual({ positions: [], open: false })
   })
 
+  it('keeps the lowest and the highest of many', () => {
+    const moves = [absolute(0, 30, { next: 3 }), absolute(1, 10, { next: 3 }), absolute(2, 20, { next: 3 }), relative(3, -5, { next: 4 }), absolute(4, 0)]
+    expect(startsOf(moves, 3)).toEqual({ positions: [10, 30], open: false })
+    expect(startsOf(moves, 4)).toEqual({ positions: [5, 25], open: false })
+  })
+
+  it('carries every way into a loop that comes back all round it: in at 100 and, one step on, at 7', () => {
+    const moves = [absolute(0, 100, { next: 2 }), absolute(1, 7, { next: 3 }), relative(2, 10, { next: 3 }), relative(3, -10, { next: 2 })]
+    expect(startsOf(moves, 2)).toEqual({ positions: [-3, 100], open: false })
+    expect(startsOf(moves, 3)).toEqual({ positions: [7, 110], open: false })
+  })
+
+  it('agrees with following the chain from each row that goes to a place of its own', () => {
+    fc.assert(fc.property(arbitraryContent({ most: 14 }), ({ moves }) => {
+      const rows = usedRows(moves)
+      const byNumber = new Map(rows.map(({ move }) => [move.move, move]))
+      const walked = new Map<number, number[]>()
+      for (const { move } of rows.filter(row => row.move.kind !== 'relative')) {
+        let end = BigInt(move.target.toFixed(6).replace('.', ''))
+        const seen = new Set<number>()
+        let follower = byNumber.get(move.next ?? -1)
+        while (follower && !seen.has(follower.move)) {
+          walked.set(follower.move, [...walked.get(follower.move) ?? [], Number(end) / 1e6])
+          seen.add(follower.move)
+          if (follower.kind !== 'relative') break
+          end += BigInt(follower.target.toFixed(6).replace('.', ''))
+          follower = byNumber.get(follower.next ?? -1)
+        }
+      }
+      // Several ways into one runaway loop: only the first counts all round.
+      const runaway = endlessChains(rows).filter(loop => loop.every(row => row.move.kind === 'relative')).flat().map(row => row.move.move)
+      for (const [number, { positions }] of knownStarts(rows)) {
+        if (!byNumber.has(number) || runaway.includes(number)) continue
+        const all = walked.get(number) ?? []
+        expect(positions).toEqual(all.length === 0 ? [] : [...new Set([Math.min(...all), Math.max(...all)])])
+      }
+    }))
+  })
+
   it('goes round a loop once', () => {
     expect(startsOf([absolute(0, 100, { next: 1 }), relative(1, 10, { next: 1 })], 1)).toEqual({ positions: [100], open: false })
     expect(startsOf([absolute(3, 50, { next: 3 })], 3)).toEqual({ positions: [50], open: false })

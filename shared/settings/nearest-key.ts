@@ -14,17 +14,16 @@ export function editDistance(from: string, to: string): number {
   return row[to.length] ?? 0
 }
 
-/** The known key that was probably meant: nearest without regard to case, at most a third of it wrong; the first of equals. */
+/** The known key that was probably meant: nearest without regard to case, at most a third of it wrong; none where two are equally near. */
 export function nearestKey(key: string, known: Iterable<string>): string | undefined {
   if (key.length > longestKey) return undefined
   let best: string | undefined
   let bestDistance = Infinity
   for (const each of known) {
     const distance = editDistance(key.toLowerCase(), each.toLowerCase())
-    if (distance < bestDistance && distance * 3 <= Math.max(each.length, 3)) {
-      best = each
-      bestDistance = distance
-    }
+    if (distance > bestDistance || distance * 3 > Math.max(each.length, 3)) continue
+    best = distance === bestDistance ? undefined : each
+    bestDistance = distance
   }
   return best
 }

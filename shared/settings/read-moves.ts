@@ -73,13 +73,13 @@ const nextSlot = slotOf('next')
 type Named = readonly { readonly name: MoveFieldName, readonly slot: number }[]
 
 function needs(reading: Reading, row: RawObject, at: string, slots: Slots, move: Draft): void {
-  need(reading, row, at, slots, always, 'Every move')
-  if (move.kind === 'press') need(reading, row, at, slots, ofPress, 'A press')
+  need(reading, row, at, slots, always, 'move')
+  if (move.kind === 'press') need(reading, row, at, slots, ofPress, 'press')
 }
 
-function need(reading: Reading, row: RawObject, at: string, slots: Slots, fields: Named, who: string): void {
+function need(reading: Reading, row: RawObject, at: string, slots: Slots, fields: Named, what: string): void {
   for (const { name, slot } of fields) {
-    if (slots[slot] === undefined) reading.problems.add('missing', `${at}/${name}`, row, `${name} is missing. ${who} needs it: ${moveFields[name].help}`)
+    if (slots[slot] === undefined) reading.problems.add('missing', `${at}/${name}`, row, `This ${what} has no ${name}: ${moveFields[name].help}`)
   }
 }
 

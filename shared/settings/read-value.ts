@@ -74,7 +74,7 @@ function parsedBy<Parsed extends number | Exact>(
 /** A number that is the drive's own: kept as the double with the same decimal value, never converted or rounded. */
 export function readOwnNumber(reading: Reading, node: RawNode, at: string): number | undefined {
   if (node.kind === 'number' && !Number.isNaN(node.value)) return node.value
-  return parsedBy(reading, node, at, parseOwnNumber)
+  return refusesUnit(reading, node, at) ? undefined : parsedBy(reading, node, at, parseOwnNumber)
 }
 
 /** A whole number from `min` to `max`; the code names what it is for: a row number or a value. */

@@ -1,13 +1,16 @@
 import { and, asc, desc, eq, isNull, or, sql } from 'drizzle-orm'
+import type { AxisKind } from '#shared/settings/types'
 import { axis } from '../axis/table'
+import { axisState } from '../axis-state/table'
 import { fitting } from '../fitting/table'
 import { line } from '../line/table'
 import { machine } from '../machine/table'
 import { nameplateRevision } from '../nameplate/table'
-import { prepared } from '../prepared'
+import { prepared, type VaultDb } from '../prepared'
 import { rule, ruleEnd } from '../rule/table'
 import { site } from '../site/table'
 import { unit } from '../unit/table'
+import { version } from '../version/table'
 
 const place = sql.placeholder
 
@@ -35,3 +38,18 @@ export const judgingQueries = prepared((db) => {
 })
 
 export type AxisPlace = NonNullable<ReturnType<ReturnType<typeof judgingQueries>['axis']['get']>>
+
+export interface GuessCandidate { readonly axisId: number, readonly tag: string, readonly siteId: number, readonly contentId: number }
+
+/** At how many axes a guess looks, those read last first: enough for a plant's axes of one model, and soon done. */
+const mostCandidates = 400
+
+const guessQueries = prepared(db => ({
+  ofModel: db.select({ axisId: axis.id, tag: axis.tag, siteId: line.siteId, contentId: version.contentId }).from(axisState)
+    .innerJoin(version, eq(version.id, axisState.currentVersionId)).innerJoin(axis, eq(axis.id, axisState.axisId))
+    .innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId))
+    .where(and(eq(version.model, place('model')), eq(axis.axisKind, place('axisKind')))).orderBy(desc(version.id)).limit(mostCandidates).prepare(),
+}))
+
+/** Axes whose current version was read from a unit of this model. */
+export const axesOfModel = (db: VaultDb, model: string, axisKind: AxisKind): GuessCandidate[] => guessQueries(db).ofModel.all({ model, axisKind })

@@ -1,0 +1,62 @@
+import { compareContents } from '#shared/diff/compare'
+import { countByWeight } from '#shared/diff/summary'
+import type { Comparison } from '#shared/diff/types'
+import { countReceived, readAxisState, replaceAxisState } from '#server/database/axis-state/queries'
+import { readJudgement } from '#server/database/check/queries'
+import { judgingQueries } from '#server/database/judging/queries'
+import { knownGoodQueries } from '#server/database/known-good/queries'
+import type { VaultDb } from '#server/database/prepared'
+import type { AxisStateRow, KnownGoodRow, VersionRow } from '#server/database/schema'
+import { versionQueries } from '#server/database/version/queries'
+import { diffContextOf, readAgainst, type ReadAgainst } from '../uploads/read-against'
+
+/** Derives the state row of an axis anew; called after every act that touches the axis, within the same write. */
+export function refreshAxisState(db: VaultDb, axisId: number): void {
+  const mark = knownGoodQueries(db).inForce.get({ axisId })?.mark ?? null
+  const current = versionQueries(db).current.get({ axisId }) ?? null
+  const open = judgingQueries(db).openAtAxis.get({ axisId })
+  const { versions, sightings, lastUploadAt } = countReceived(db, axisId)
+  const { stop, warn, note, unknown } = current ? readJudgement(db, current.id).counts : { stop: 0, warn: 0, note: 0, unknown: 0 }
+  replaceAxisState(db, {
+    axisId, ...statusOf(db, axisId, current, mark), versions, sightings, lastUploadAt, stop, warn, note, unknown,
+    knownGoodId: mark?.id ?? null, knownGoodVersionId: mark?.versionId ?? null,
+    currentVersionId: current?.id ?? null, fittingId: open?.fitting.id ?? null,
+  })
+}
+
+type Status = Pick<AxisStateRow, 'status' | 'offHarm' | 'offMotion' | 'offText' | 'offSince' | 'sense'>
+const nothingOff = { offHarm: 0, offMotion: 0, offText: 0, offSince: null, sense: null } as const
+
+function statusOf(db: VaultDb, axisId: number, current: VersionRow | null, mark: KnownGoodRow | null): Status {
+  if (!current) return { status: 'never-read', ...nothingOff }
+  if (!mark?.versionId) return { status: 'unmarked', ...nothingOff }
+  if (mark.versionId === current.id) return { status: 'in-line', ...nothingOff }
+  const comparison = againstKnownGood(db, axisId, current)
+  if (comparison?.verdict !== 'differs') return { status: 'in-line', ...nothingOff }
+  const off = countByWeight(comparison.differences)
+  const earlier = readAxisState(db, axisId)
+  const stays = earlier?.status === 'off' && earlier.knownGoodId === mark.id
+  const since = mark.at > current.receivedAt ? mark.at : current.receivedAt
+  return { status: 'off', offHarm: off.harm, offMotion: off.motion, offText: off.text, offSince: stays ? earlier.offSince : since, sense: senseOf(comparison) }
+}
+
+function againstKnownGood(db: VaultDb, axisId: number, current: VersionRow): Comparison | null {
+  const place = judgingQueries(db).axis.get({ id: axisId })
+  const unit = judgingQueries(db).unitById.get({ id: current.unitId })
+  return place && unit ? compareWithKnownGood(readAgainst(db, place, unit)) : null
+}
+
+/** The current version of an axis, against its known-good in force; null where either is missing. */
+export function compareWithKnownGood(against: ReadAgainst): Comparison | null {
+  const { knownGood, current, nameplate } = against
+  if (!knownGood || !current) return null
+  return compareContents(knownGood.content, current.content, {
+    sameUnit: knownGood.version.unitId === current.version.unitId, context: diffContextOf(against), ...(nameplate ? { nameplate: nameplate.nameplate } : {}),
+  })
+}
+
+/** Whether the weightiest numeric difference goes up or down; differences come sorted by weight. */
+function senseOf({ differences }: Comparison): 'more' | 'less' | null {
+  const first = differences.find(({ delta }) => delta !== undefined && delta !== 0)
+  return first?.delta === undefined ? null : first.delta > 0 ? 'more' : 'less'
+}

@@ -1,0 +1,75 @@
+import type { UploadFields } from '#shared/api/uploads'
+import { judge } from '#shared/checks/judge'
+import type { Judgement } from '#shared/checks/types'
+import { diffContents } from '#shared/diff/diff'
+import { diffRenumbered } from '#shared/diff/renumber'
+import type { FieldChange, Renumbering } from '#shared/diff/types'
+import { readSettings } from '#shared/settings/read'
+import type { FormatError, ReadOutcome } from '#shared/settings/types'
+import type { Actor } from '#server/database/actor'
+import { readContent } from '#server/database/content/queries'
+import type { VaultDb } from '#server/database/prepared'
+import type { VersionRow } from '#server/database/schema'
+import { versionQueries } from '#server/database/version/queries'
+import { ingest, type Ingested } from './ingest'
+import { placeFile, type PlacedFile, type UnplacedFile } from './place-file'
+import { diffContextOf, judgeInputOf, readAgainst, type ReadAgainst } from './read-against'
+
+export interface PlannedVersion {
+  readonly outcome: 'version'
+  readonly placed: PlacedFile
+  readonly against: ReadAgainst
+  readonly ingested: Ingested
+  readonly number: number
+  readonly late: boolean
+  readonly base: VersionRow | null
+  readonly changes: readonly FieldChange[]
+  readonly renumbered: readonly Renumbering[]
+  readonly judgement: Judgement
+}
+export interface PlannedSighting {
+  readonly outcome: 'sighting'
+  readonly placed: PlacedFile
+  readonly current: VersionRow
+  readonly ingested: Ingested
+}
+export type UploadPlan =
+  | { readonly outcome: 'unreadable', readonly errors: readonly FormatError[], readonly more: number }
+  | { readonly outcome: 'unplaced', readonly unplaced: UnplacedFile, readonly ingested: Ingested }
+  | PlannedSighting
+  | PlannedVersion
+
+/** Reading needs nothing of the vault, so that it can be done before the write begins. */
+export function readSent(bytes: Uint8Array, { decimal }: Pick<UploadFields, 'decimal'>): ReadOutcome {
+  return readSettings(bytes, decimal === undefined ? {} : { decimal })
+}
+
+/** What becomes of a file that came in at `receivedAt`; reads the vault and writes nothing. */
+export function planUpload(db: VaultDb, actor: Actor, read: ReadOutcome, fields: UploadFields, receivedAt: number): UploadPlan {
+  if (!read.ok) return { outcome: 'unreadable', errors: read.errors, more: read.more }
+  const placed = placeFile(db, actor, read.value.file, receivedAt, fields.capturedAt)
+  if (!placed.ok) return { outcome: 'unplaced', unplaced: placed, ingested: ingest(read.value) }
+  const against = readAgainst(db, placed.place, placed.unit)
+  const ingested = ingest(read.value, against.nameplate?.nameplate.dictionary)
+  const routine = (fields.occasion ?? 'routine') === 'routine'
+  if (routine && against.current && against.current.text === ingested.text) return { outcome: 'sighting', placed, current: against.current.version, ingested }
+  return planVersion(db, placed, against, ingested)
+}
+
+function planVersion(db: VaultDb, placed: PlacedFile, against: ReadAgainst, ingested: Ingested): PlannedVersion {
+  const queries = versionQueries(db)
+  const axisId = placed.place.axis.id
+  const at = new Date(placed.times.orderAt).toISOString()
+  const current = against.current?.version
+  const late = current !== undefined && at < current.orderAt
+  const base = late ? queries.base.get({ axisId, at }) ?? null : current ?? null
+  const before = base === null ? null : base.id === current?.id && against.current ? against.current.content : readContent(db, base.contentId)
+  const context = diffContextOf(against)
+  const changes = before ? diffContents(before, ingested.content, context) : []
+  return {
+    outcome: 'version', placed, against, ingested, late, base, changes,
+    number: (queries.highestNumber.get({ axisId })?.number ?? 0) + 1,
+    renumbered: (before && changes.length > 1 ? diffRenumbered(before, ingested.content, context)?.renumbered : undefined) ?? [],
+    judgement: judge(judgeInputOf(against, ingested.content, ingested.file.unit)),
+  }
+}

@@ -1,0 +1,38 @@
+import { createHash } from 'node:crypto'
+import { Refusal } from '#shared/errors/refusal'
+import { formOf } from '#shared/settings/read'
+import { personOf, tokenOf } from '#server/database/actor'
+import type { Write } from '#server/database/client'
+import { contentIdOf, insertContent } from '#server/database/content/queries'
+import type { VaultDb } from '#server/database/prepared'
+import { insertUpload } from '#server/database/upload/queries'
+import type { Ingested } from './ingest'
+
+/** The file as it came. */
+export interface SentFile { readonly bytes: Uint8Array, readonly name: string | null }
+
+export const fileHash = ({ bytes }: SentFile) => createHash('sha256').update(bytes).digest('hex')
+
+/** Who answers for what the write stores, and with which token it came. */
+export function senderOf({ actor }: Write): { personId: number, tokenId: number | null, peer: string } {
+  const personId = personOf(actor)
+  if (personId === null) throw new Refusal('role', 'A file is sent by a person, or by a token that a person answers for.')
+  return { personId, tokenId: tokenOf(actor), peer: actor.peer }
+}
+
+/** Keeps the bytes for good and logs them by their hash. Answers the upload's id. */
+export function storeUploadBytes(db: VaultDb, write: Write, sent: SentFile): number {
+  const row = { sha256: fileHash(sent), size: sent.bytes.length, form: formOf(sent.bytes), name: sent.name, receivedAt: write.now, ...senderOf(write) }
+  const id = insertUpload(db, row, sent.bytes)
+  write.log({ act: 'upload-received', id, state: { id, ...row } })
+  return id
+}
+
+/** The id of the content, stored and logged where it was never seen. */
+export function storeContent(db: VaultDb, write: Write, { hashes, text }: Pick<Ingested, 'hashes' | 'text'>): number {
+  const known = contentIdOf(db, hashes.contentHash)
+  if (known !== undefined) return known
+  const id = insertContent(db, hashes.contentHash, text)
+  write.log({ act: 'content-stored', id, state: { id, hash: hashes.contentHash, size: Buffer.byteLength(text) } })
+  return id
+}

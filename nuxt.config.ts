@@ -23,7 +23,7 @@ export default defineNuxtConfig({
       link: [{ rel: 'icon', type: 'image/svg+xml', href: '/favicon.svg' }],
     },
   },
-  css: ['~/assets/css/main.css'],
+  tailwindcss: { cssPath: '~/assets/css/main.css', viewer: false },
   spaLoadingTemplate: 'spa-loading-template.html',
   colorMode: { classSuffix: '', dataValue: 'theme', preference: 'system', fallback: 'light', storageKey: 'witnessmark-theme' },
   srcDir: '.',
@@ -35,6 +35,8 @@ export default defineNuxtConfig({
     strict: true,
   },
   telemetry: false,
+  // Without server rendering the development server of this version looks for an entry that only this path sets (nuxt/nuxt#35033).
+  $development: { experimental: { viteEnvironmentApi: true } },
   auth: { hash: { scrypt: { cost: 131072, maxMemory: 268435456 } } },
   eslint: { config: { stylistic: true } },
   security: {

@@ -1,6 +1,7 @@
 import type { Content, Move } from '../settings/types'
-import { pushMoveChanges, pushZoneChanges, sameMove } from './diff-rows'
+import { MovePass } from './diff-moves'
 import { pushExtraChanges, pushFileChanges, pushSetupChanges } from './diff-values'
+import { pushZoneChanges } from './diff-zones'
 import { byWeight } from './order'
 import { sidesOf } from './sides'
 import type { DiffContext, FieldChange } from './types'
@@ -16,9 +17,8 @@ export function diffContents(before: Content, after: Content, context: DiffConte
   pushFileChanges(out, sides)
   pushSetupChanges(out, sides, () => movesOfBoth(before, after))
   pushZoneChanges(out, sides)
-  walkByNumber<Move>(before.moves, after.moves, (move) => move.move, (was, i, is, j) => {
-    if (was === undefined || is === undefined || !sameMove(was, is)) pushMoveChanges(out, sides, was, i, is, j, Object.is)
-  })
+  const moves = new MovePass(out, sides)
+  walkByNumber<Move>(before.moves, after.moves, (move) => move.move, (was, i, is, j) => moves.compare(was, i, is, j))
   pushExtraChanges(out, sides)
   return byWeight(out)
 }

@@ -1,8 +1,8 @@
 import type { Move } from '../settings/types'
 import { align } from './align'
-import { join, noPartners, pairBetween, pairInsideBlocks, type Partners } from './partners'
+import { join, none, noPartners, pairBetween, pairInsideBlocks, type Partners } from './partners'
 import { classify, compareSignatures } from './signature'
-import type { Table } from './table'
+import { wholeNumbers, type Table } from './table'
 
 /** Two tables paired, with what tells whether a pair is sure. */
 export interface Pairing extends Partners {
@@ -49,7 +49,6 @@ function pairLeftOnce(a: Table, b: Table, signatures: number, partners: Partners
   }
 }
 
-const none = -1
 const several = -2
 
 /** By signature the index of the one row without a partner that has it. */
@@ -62,15 +61,15 @@ function leftBySignature(table: Table, partners: Int32Array, signatures: number)
 }
 
 function pairByNumber(a: Table, b: Table, partners: Partners): void {
-  const there = new Map(Array.from(b.numbers, (number, index) => [number, index]))
+  let j = 0
   for (const [i, number] of a.numbers.entries()) {
-    const j = there.get(number)
-    if (j !== undefined && partners.before[i] === none && partners.after[j] === none) join(partners, i, j)
+    while (j < b.numbers.length && b.numbers[j]! < number) j += 1
+    if (b.numbers[j] === number && partners.before[i] === none && partners.after[j] === none) join(partners, i, j)
   }
 }
 
 function tableOf(moves: readonly Move[], signatures: Int32Array): Table {
-  return { numbers: Int32Array.from(moves, (move) => move.move), signatures }
+  return { numbers: wholeNumbers(moves, (move) => move.move), signatures }
 }
 
 function countsOf(table: Table, signatures: number): Int32Array {

@@ -1,10 +1,12 @@
 import type { IndexPair } from './table'
 
-/** Partners by index, -1 for none: `after[before[i]] === i` wherever there is one. */
+export const none = -1
+
+/** Partners by index, or `none`: `after[before[i]] === i` wherever there is one. */
 export interface Partners { readonly before: Int32Array, readonly after: Int32Array }
 
 export function noPartners(before: number, after: number): Partners {
-  return { before: new Int32Array(before).fill(-1), after: new Int32Array(after).fill(-1) }
+  return { before: new Int32Array(before).fill(none), after: new Int32Array(after).fill(none) }
 }
 
 export function join(partners: Partners, i: number, j: number): void {
@@ -31,16 +33,14 @@ export function pairBetween(anchors: readonly IndexPair[], partners: Partners): 
  */
 export function pairInsideBlocks(partners: Partners): void {
   const { before, after } = partners
-  let start = 0
-  while (start < before.length) {
-    if (before[start] !== -1) { start += 1; continue }
-    let end = start
-    while (end < before.length && before[end] === -1) end += 1
-    const from = start === 0 ? 0 : before[start - 1]! + 1
-    const to = end === before.length ? after.length : before[end]!
-    const facing = indicesBetween(from - 1, to)
-    if (facing.every((j) => after[j] === -1)) joinEquallyMany(indicesBetween(start - 1, end), facing, partners)
-    start = end
+  let from = -1
+  for (let to = 0; to <= before.length; to += 1) {
+    if (before[to] === none) continue
+    const otherFrom = from < 0 ? -1 : before[from]!
+    const otherTo = to === before.length ? after.length : before[to]!
+    const there = leftBetween(after, otherFrom, otherTo)
+    if (there.length === otherTo - otherFrom - 1) joinEquallyMany(leftBetween(before, from, to), there, partners)
+    from = to
   }
 }
 
@@ -48,11 +48,9 @@ function joinEquallyMany(here: readonly number[], there: readonly number[], part
   if (here.length === there.length) here.forEach((i, k) => join(partners, i, there[k]!))
 }
 
+/** The rows without a partner between two indices, both left out. */
 function leftBetween(partners: Int32Array, from: number, to: number): number[] {
-  return indicesBetween(from, to).filter((index) => partners[index] === -1)
-}
-
-/** Whole numbers between two bounds, both left out; none where the second is not beyond the first. */
-function indicesBetween(from: number, to: number): number[] {
-  return Array.from({ length: Math.max(0, to - from - 1) }, (_, k) => from + 1 + k)
+  const left: number[] = []
+  for (let index = from + 1; index < to; index += 1) if (partners[index] === none) left.push(index)
+  return left
 }

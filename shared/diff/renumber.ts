@@ -1,7 +1,7 @@
-import type { Content, Move } from '../settings/types'
-import { diffContents } from './diff'
-import { pushMoveChanges, pushZoneChanges, sameMove } from './diff-rows'
+import type { Content } from '../settings/types'
+import { countMoveChanges, MovePass } from './diff-moves'
 import { pushExtraChanges, pushFileChanges, pushSetupChanges } from './diff-values'
+import { pushZoneChanges } from './diff-zones'
 import { followersOf } from './followers'
 import { byWeight } from './order'
 import { pairRows, type Pairing } from './pair-rows'
@@ -11,19 +11,19 @@ import type { DiffContext, FieldChange, RenumberedReading, RowPair } from './typ
 import { walkByNumber } from './walk'
 
 /**
- * The renumbered reading: rows paired by what they do. Undefined unless it says less than the flat one, runs and changes
- * counted together. `before` and `after` of a follower are numbers of the first and the second content.
+ * The renumbered reading: rows paired by what they do. Undefined unless it says less than the flat one, runs and changes of
+ * moves counted together (the other sections read alike in both). `before` and `after` of a follower are numbers of the first and the second content.
  */
 export function diffRenumbered(before: Content, after: Content, context: DiffContext = {}): RenumberedReading | undefined {
-  const flat = diffContents(before, after, context)
-  const ofMoves = flat.filter((change) => change.section === 'move').length
-  if (ofMoves < 2) return undefined
+  const flat = countMoveChanges(before.moves, after.moves)
+  if (flat < 2) return undefined
   const pairing = pairRows(before.moves, after.moves)
   const renumbered = runsOf(before.moves, after.moves, pairing)
-  if (renumbered.length === 0 || renumbered.length >= ofMoves) return undefined
+  if (renumbered.length === 0 || renumbered.length >= flat) return undefined
   const pairs = pairsInOrder(pairsByNumber(before, after, pairing))
   const changes = changesBetween(before, after, pairing, pairs, context)
-  return renumbered.length + changes.length < flat.length ? { renumbered, pairs, changes } : undefined
+  const ofMoves = changes.filter((change) => change.section === 'move').length
+  return renumbered.length + ofMoves < flat ? { renumbered, pairs, changes } : undefined
 }
 
 function pairsByNumber(before: Content, after: Content, pairing: Pairing): RowPair[] {
@@ -44,18 +44,12 @@ function changesBetween(before: Content, after: Content, pairing: Pairing, pairs
     return was ? [[was, is] as const] : []
   }))
   pushZoneChanges(out, sides)
+  const moves = new MovePass(out, sides, agree)
   const gone = before.moves.map((move, i) => ({ move, i })).filter(({ i }) => pairing.before[i]! < 0)
   walkByNumber(gone, after.moves.map((move, j) => ({ move, i: j })), (row) => row.move.move, (left, _, row) => {
-    if (left) pushMoveChanges(out, sides, left.move, left.i, undefined, -1, agree)
-    if (row) pushPartnerChanges(row.move, row.i)
+    if (left) moves.compare(left.move, left.i, undefined, -1)
+    if (row) moves.compare(before.moves[pairing.after[row.i]!], pairing.after[row.i]!, row.move, row.i)
   })
   pushExtraChanges(out, sides)
   return byWeight(out)
-
-  function pushPartnerChanges(is: Move, j: number): void {
-    const i = pairing.after[j]!
-    const was = before.moves[i]
-    if (was && sameMove(was, is) && agree(was.next, is.next)) return
-    pushMoveChanges(out, sides, was, i, is, j, agree)
-  }
 }

@@ -1,5 +1,5 @@
 import { setupFields, type SetupField, type SetupFieldName, type UnitByKind } from '../settings/fields'
-import { moveFields, zoneFields, type RowField } from '../settings/move-fields'
+import { moveFields, zoneFields, type MoveFieldName, type RowField, type ZoneFieldName } from '../settings/move-fields'
 import type { AxisKind, Weight } from '../settings/types'
 import type { DiffContext } from './types'
 import { watching } from './watched'
@@ -8,7 +8,7 @@ import { extraWeight, moveWeight } from './weight'
 /** What every change of one field has in common on one axis. */
 export interface FieldRule {
   readonly field: string
-  readonly unit?: string
+  readonly unit: string | undefined
   readonly weight: Weight
   readonly watched: boolean
   /** Watched because the planners of the site added it. */
@@ -22,22 +22,27 @@ export interface FieldRule {
 /** The field tables as one axis reads them: units by its kind, weights and watching by its context. */
 export interface Rules {
   readonly axisKind: FieldRule
-  /** In the order of the field tables, as `zone` is. */
-  readonly move: readonly FieldRule[]
-  readonly zone: readonly FieldRule[]
+  readonly move: Readonly<Record<MoveFieldName, FieldRule>>
+  readonly zone: Readonly<Record<ZoneFieldName, FieldRule>>
   readonly setup: (name: SetupFieldName) => FieldRule
-  readonly extra: (key: string) => FieldRule
 }
 
 const plain = { driveOwn: false, fromValue: false }
-const axisKindRule: FieldRule = { field: 'axisKind', weight: 'harm', watched: true, added: false, ...plain }
+const axisKindRule: FieldRule = { field: 'axisKind', unit: undefined, weight: 'harm', watched: true, added: false, ...plain }
 
 /** Rules of one axis kind and context; without an axis flag no motion field weighs harm. */
 export function rulesFor(kind: AxisKind, context: DiffContext): Rules {
+  return context.flags?.length || context.watched?.length ? tablesFor(kind, context) : bareTables[kind]
+}
+
+/** Most axes have neither flags nor watched fields of their own: their tables are made once. */
+const bareTables: Readonly<Record<AxisKind, Rules>> = { linear: tablesFor('linear', {}), rotary: tablesFor('rotary', {}) }
+
+function tablesFor(kind: AxisKind, context: DiffContext): Rules {
   const watch = watching(context)
-  const rows = (fields: Readonly<Record<string, RowField>>, weigh: (field: RowField) => Weight): FieldRule[] =>
-    Object.entries(fields).map(([field, entry]) =>
-      ({ field, ...unitOf(entry.unit, kind), weight: weigh(entry), ...watch(field, entry.watched), ...plain }))
+  const rows = <Name extends string>(fields: Readonly<Record<Name, RowField>>, weigh: (field: RowField) => Weight) =>
+    Object.fromEntries(Object.entries<RowField>(fields).map(([field, entry]) =>
+      [field, { field, unit: unitOf(entry.unit, kind), weight: weigh(entry), ...watch(field, entry.watched), ...plain }])) as Record<Name, FieldRule>
   return {
     axisKind: axisKindRule,
     move: rows(moveFields, (field) => moveWeight(field.weight, context.flags ?? [])),
@@ -46,21 +51,22 @@ export function rulesFor(kind: AxisKind, context: DiffContext): Rules {
       const entry: SetupField = setupFields[name]
       const numeric = entry.type === 'number' ? entry : undefined
       return {
-        field: name, ...unitOf(numeric?.unit, kind), weight: entry.weight, ...watch(name, entry.watched),
+        field: name, unit: unitOf(numeric?.unit, kind), weight: entry.weight, ...watch(name, entry.watched),
         driveOwn: numeric?.driveOwn ?? false, fromValue: false,
       }
-    },
-    extra: (key) => {
-      const dictionary = context.dictionary ?? {}
-      const entry = Object.hasOwn(dictionary, key) ? dictionary[key] : undefined
-      const weight = extraWeight(entry)
-      const unit = entry?.unit === undefined ? {} : { unit: entry.unit }
-      return { field: key, ...unit, weight, ...watch(`extra:${key}`, weight === 'harm'), driveOwn: true, fromValue: true }
     },
   }
 }
 
-function unitOf(unit: UnitByKind | undefined, kind: AxisKind): { unit?: string } {
-  const name = unit?.[kind]
-  return name ? { unit: name } : {}
+/** Rule of a drive's own key: the dictionary's word, else motion, copied as it is. */
+export function extraRule(key: string, context: DiffContext): FieldRule {
+  const dictionary = context.dictionary ?? {}
+  const entry = Object.hasOwn(dictionary, key) ? dictionary[key] : undefined
+  const weight = extraWeight(entry)
+  return { field: key, unit: entry?.unit, weight, ...watching(context)(`extra:${key}`, weight === 'harm'), driveOwn: true, fromValue: true }
+}
+
+/** undefined for words and for bare numbers. */
+function unitOf(unit: UnitByKind | undefined, kind: AxisKind): string | undefined {
+  return unit?.[kind] || undefined
 }

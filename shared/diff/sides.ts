@@ -8,9 +8,10 @@ export interface Sides {
   readonly after: Content
   readonly was: Rules
   readonly is: Rules
+  readonly context: DiffContext
 }
 
 export function sidesOf(before: Content, after: Content, context: DiffContext): Sides {
   const is = rulesFor(after.axisKind, context)
-  return { before, after, is, was: before.axisKind === after.axisKind ? is : rulesFor(before.axisKind, context) }
+  return { before, after, context, is, was: before.axisKind === after.axisKind ? is : rulesFor(before.axisKind, context) }
 }

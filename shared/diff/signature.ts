@@ -1,16 +1,10 @@
 import type { Move } from '../settings/types'
+import { wholeNumbers } from './table'
 
 /*
  * What a row does: its fields without number, label, comment and the value of `next`; that it has a follower counts.
  * Rows of one signature get one small number, so that the alignment compares numbers.
  */
-
-const absent = -7.5
-
-/** Equality of what two rows do. */
-export function sameSignature(a: Move, b: Move): boolean {
-  return compareSignatures(a, b) === 0
-}
 
 /** A total order of what rows do, without meaning of its own: it makes the alignment see both directions alike. */
 export function compareSignatures(a: Move, b: Move): number {
@@ -27,7 +21,7 @@ export function classify(before: readonly Move[], after: readonly Move[]): { bef
   const idOf = (move: Move): number => {
     const hash = hashOf(move)
     const alike = known.get(hash)
-    const found = alike?.find((entry) => sameSignature(entry.move, move))
+    const found = alike?.find((entry) => compareSignatures(entry.move, move) === 0)
     if (found) return found.id
     const entry = { move, id: count }
     if (alike) alike.push(entry)
@@ -35,16 +29,25 @@ export function classify(before: readonly Move[], after: readonly Move[]): { bef
     count += 1
     return entry.id
   }
-  return { before: Int32Array.from(before, idOf), after: Int32Array.from(after, idOf), count }
+  return { before: wholeNumbers(before, idOf), after: wholeNumbers(after, idOf), count }
 }
 
 /** 32 bits of a row; rows that do the same share them, others seldom. */
 function hashOf(move: Move): number {
-  let hash = move.kind.length + (move.next === undefined ? 0 : 16) + (move.turn?.length ?? 0) * 32
-  for (const value of [move.target, move.speed, move.acceleration, move.deceleration, move.forceLimit, move.approach, move.pressSpeed, move.window, move.dwell]) {
-    hash = Math.imul(hash, 31) + ((value ?? absent) * 1000 | 0) | 0
-  }
-  return hash
+  let hash = move.kind.length + (move.next === undefined ? 0 : 16) + (move.turn === undefined ? 0 : 32 * move.turn.length)
+  hash = mixed(hash, move.target)
+  hash = mixed(hash, move.speed)
+  hash = mixed(hash, move.acceleration)
+  hash = mixed(hash, move.deceleration)
+  hash = mixed(hash, move.forceLimit)
+  hash = mixed(hash, move.approach)
+  hash = mixed(hash, move.pressSpeed)
+  hash = mixed(hash, move.window)
+  return mixed(hash, move.dwell)
+}
+
+function mixed(hash: number, value: number | undefined): number {
+  return Math.imul(hash, 31) + (value === undefined ? 7 : value * 1000 | 0) | 0
 }
 
 function compare(a: number | undefined, b: number | undefined): number {

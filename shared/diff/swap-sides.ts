@@ -1,4 +1,5 @@
 import type { SetupFieldName } from '../settings/fields'
+import type { MoveFieldName, ZoneFieldName } from '../settings/move-fields'
 import type { AxisKind } from '../settings/types'
 import { amount } from './measure'
 import { rulesFor } from './rules'
@@ -40,6 +41,7 @@ function atIndex(at: string, index: (index: number) => number): string {
 function unitIn({ section, field, unit }: FieldChange, kind: AxisKind): string | undefined {
   const rules = rulesFor(kind, {})
   if (section === 'setup') return rules.setup(field as SetupFieldName).unit
-  if (section === 'move' || section === 'zone') return rules[section].find((rule) => rule.field === field)?.unit
+  if (section === 'move') return rules.move[field as MoveFieldName].unit
+  if (section === 'zone') return rules.zone[field as ZoneFieldName].unit
   return unit
 }

@@ -1,0 +1,69 @@
+import { moveFieldNames, type MoveFieldName } from '../settings/move-fields'
+import type { Move } from '../settings/types'
+import { changeOf } from './change'
+import { sameMotionInMove } from './defaults'
+import type { Sides } from './sides'
+import type { FieldChange } from './types'
+import { walkByNumber } from './walk'
+
+/** Whether the follower that a move had is the one that its partner has. */
+export type NextAgrees = (was: number | undefined, is: number | undefined) => boolean
+
+/** One pass over two move tables, row with partner; changes go to `out` in the order of the field table. */
+export class MovePass {
+  constructor(private readonly out: FieldChange[], private readonly sides: Sides, private readonly nextAgrees?: NextAgrees) {}
+
+  /** Adds one change for each field that differs, all of them where the move stands on one side only. */
+  compare(before: Move | undefined, beforeIndex: number, after: Move | undefined, afterIndex: number): void {
+    let rest = fieldsApart(before, after)
+    if (this.nextAgrees) rest = this.nextAgrees(before?.next, after?.next) ? rest & ~nextBit : rest | nextBit
+    for (; rest !== 0; rest &= rest - 1) {
+      const field = moveFieldNames[31 - Math.clz32(rest & -rest)]!
+      const at = after?.[field] === undefined ? `/moves/${beforeIndex}/${field}` : `/moves/${afterIndex}/${field}`
+      this.put(field, at, before, after)
+    }
+  }
+
+  private put(field: MoveFieldName, at: string, before: Move | undefined, after: Move | undefined): void {
+    const was = before?.[field]
+    const is = after?.[field]
+    const { sides } = this
+    const sameMotion = before !== undefined && after !== undefined && (was === undefined || is === undefined)
+      && sameMotionInMove(field, { move: before, setup: sides.before.setup }, { move: after, setup: sides.after.setup })
+    const rule = (is === undefined ? sides.was : sides.is).move[field]
+    this.out.push(changeOf(rule, { at, section: 'move', row: (after ?? before)?.move }, was, is, sameMotion))
+  }
+}
+
+/** How many changes the flat reading has in the move table, without making them. */
+export function countMoveChanges(before: readonly Move[], after: readonly Move[]): number {
+  let count = 0
+  walkByNumber(before, after, (move) => move.move, (was, _, is) => {
+    for (let rest = fieldsApart(was, is); rest !== 0; rest &= rest - 1) count += 1
+  })
+  return count
+}
+
+function fieldsApart(before: Move | undefined, after: Move | undefined): number {
+  return before && after ? differing(before, after) : present(before ?? after)
+}
+
+/**
+ * The fields in which two rows differ, as bits: bit k stands for the k-th of moveFieldNames. Written out, because most rows
+ * did not change and reading them is what a difference costs.
+ */
+function differing(a: Move, b: Move): number {
+  return Number(a.label !== b.label) | Number(a.comment !== b.comment) << 1 | Number(a.kind !== b.kind) << 2
+    | Number(a.target !== b.target) << 3 | Number(a.turn !== b.turn) << 4 | Number(a.speed !== b.speed) << 5
+    | Number(a.acceleration !== b.acceleration) << 6 | Number(a.deceleration !== b.deceleration) << 7
+    | Number(a.forceLimit !== b.forceLimit) << 8 | Number(a.approach !== b.approach) << 9
+    | Number(a.pressSpeed !== b.pressSpeed) << 10 | Number(a.window !== b.window) << 11
+    | Number(a.next !== b.next) << 12 | Number(a.dwell !== b.dwell) << 13
+}
+
+const nextBit = 1 << moveFieldNames.indexOf('next')
+
+/** The fields that a row has, as bits. */
+function present(row: Move | undefined): number {
+  return moveFieldNames.reduce((bits, field, rank) => row?.[field] === undefined ? bits : bits | 1 << rank, 0)
+}

@@ -18,3 +18,9 @@ export function plus(a: number, b: number): number {
 export function minus(a: number, b: number): number {
   return (millionths(a) - millionths(b)) / 1e6
 }
+
+/** value mod m, from 0 to below m, for an m above 0; exact for values with at most six decimals. */
+export function remainder(value: number, m: number): number {
+  const whole = millionths(m)
+  return (((millionths(value) % whole) + whole) % whole) / 1e6
+}

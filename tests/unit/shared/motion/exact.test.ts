@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { minus, plus } from '../../../../shared/motion/exact'
+import { minus, plus, remainder } from '../../../../shared/motion/exact'
 import { canonicalNumber } from '../../../support/arbitrary-content'
 
 describe('exact sums', () => {
@@ -16,6 +16,10 @@ describe('exact sums', () => {
       expect(millionths(plus(a, b))).toBe(millionths(a) + millionths(b))
       expect(millionths(minus(a, b))).toBe(millionths(a) - millionths(b))
     }))
+  })
+
+  it('leaves the remainder that decimals leave: 0.3 is three times 0.1, and −10 is 350 short of a turn', () => {
+    expect([remainder(0.3, 0.1), remainder(-10, 360), remainder(370, 360), remainder(-360, 360)]).toEqual([0, 350, 10, 0])
   })
 
   it('takes a number with more decimals for the nearest millionth', () => {

@@ -7,6 +7,7 @@ import { judgingQueries } from '#server/database/judging/queries'
 import { knownGoodQueries } from '#server/database/known-good/queries'
 import type { VaultDb } from '#server/database/prepared'
 import type { AxisStateRow, KnownGoodRow, VersionRow } from '#server/database/schema'
+import { unitRows } from '#server/database/unit/queries'
 import { versionQueries } from '#server/database/version/queries'
 import { diffContextOf, readAgainst, type ReadAgainst } from '../uploads/read-against'
 
@@ -42,7 +43,7 @@ function statusOf(db: VaultDb, axisId: number, current: VersionRow | null, mark:
 
 function againstKnownGood(db: VaultDb, axisId: number, current: VersionRow): Comparison | null {
   const place = judgingQueries(db).axis.get({ id: axisId })
-  const unit = judgingQueries(db).unitById.get({ id: current.unitId })
+  const unit = unitRows(db).byId.get({ id: current.unitId })
   return place && unit ? compareWithKnownGood(readAgainst(db, place, unit)) : null
 }
 

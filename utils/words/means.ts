@@ -2,6 +2,7 @@ import type { CheckResult } from '#shared/checks/types'
 import type { FieldChange } from '#shared/diff/types'
 import { setupField } from '#shared/settings/fields'
 import { isUnused } from '#shared/settings/move-fields'
+import type { Nameplate } from '#shared/settings/nameplate'
 import type { Content, Move } from '#shared/settings/types'
 import { formatNumber } from '#shared/units/number'
 import { forceBase, isForce, type WordContext } from './fields'
@@ -10,6 +11,8 @@ import { forceBase, isForce, type WordContext } from './fields'
 export interface MeansContext extends WordContext {
   readonly before: Content
   readonly after: Content
+  /** Of the first content's model, where that is another one: its 100 % is another force. */
+  readonly nameplateBefore?: Nameplate
 }
 
 const number = (value: number, digits = 6) => formatNumber(Number(value.toFixed(digits))).replace('-', '−')
@@ -24,7 +27,9 @@ export function forceWords(percent: number, context: WordContext): string | unde
 }
 
 function forceMeans(change: FieldChange, context: MeansContext): string {
-  const [was, is] = [change.before, change.after].map(value => typeof value === 'number' ? forceWords(value, context) : undefined)
+  const first = { ...context, nameplate: context.nameplateBefore ?? context.nameplate }
+  const was = typeof change.before === 'number' ? forceWords(change.before, first) : undefined
+  const is = typeof change.after === 'number' ? forceWords(change.after, context) : undefined
   if (was && is) return `${was} became ${is}.`
   if (is) return `${is}, where none was set.`
   return was ? `${was} before; no longer limited by this value.` : ''

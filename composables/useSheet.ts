@@ -8,14 +8,18 @@ export interface SheetOptions<Answer> {
   readonly schema: () => z.ZodType
   /** What is edited; absent = something new is made. */
   readonly record: () => Readonly<Body> | undefined
+  /** What a new one begins with. */
+  readonly start?: () => Readonly<Body> | undefined
   /** Goes along with what stands in the fields: ids of the place, the step. */
   readonly fixed: () => Readonly<Body>
+  /** Makes the body that the schema knows of fields that stand flat in the form. */
+  readonly shape?: () => ((body: Body, draft: Draft) => Body) | undefined
   readonly send: (body: Body) => Promise<Answer>
 }
 
 /** The state of one form: its draft, what is wrong where, and what somebody else changed meanwhile. */
 export function useSheet<Answer>(options: SheetOptions<Answer>) {
-  const before = shallowRef<Draft>(draftOf(options.fields(), options.record()))
+  const before = shallowRef<Draft>(draftOf(options.fields(), options.record() ?? options.start?.()))
   const draft = ref<Draft>({ ...before.value })
   const issues = shallowRef<Issues>({})
   const problem = shallowRef<ApiProblem>()
@@ -27,7 +31,8 @@ export function useSheet<Answer>(options: SheetOptions<Answer>) {
   const edited = computed(() => JSON.stringify(before.value) !== JSON.stringify(draft.value))
 
   function body(): Body {
-    return options.record() ? { ...editedBody(options.fields(), before.value, draft.value), rev: rev.value } : { ...bodyOf(options.fields(), draft.value), ...options.fixed() }
+    const plain = options.record() ? { ...editedBody(options.fields(), before.value, draft.value), rev: rev.value } : { ...bodyOf(options.fields(), draft.value), ...options.fixed() }
+    return options.shape?.()?.(plain, draft.value) ?? plain
   }
 
   function failed(failure: unknown): void {

@@ -29,6 +29,8 @@ export type FormField = Common & (
   /** An instant, written in the local time of a zone. */
   | { readonly type: 'time', readonly zone: string }
   | { readonly type: 'password' }
+  /** A row of the register, found by typing; travels as its id. */
+  | { readonly type: 'pick', readonly find: (text: string) => Promise<readonly Option[]>, readonly shown?: string }
 )
 
 export type DraftValue = string | boolean | readonly string[]
@@ -54,7 +56,7 @@ function valueOf(field: FormField, value: DraftValue | undefined): unknown {
   if (text.trim() === '') return field.empty
   if (field.type === 'list') return listOf(field, cut(text))
   if (field.type === 'time') return toInstant(text, field.zone)
-  if (field.type === 'number' || (field.type === 'choice' && field.as === 'number')) return numberOrText(text)
+  if (field.type === 'number' || field.type === 'pick' || (field.type === 'choice' && field.as === 'number')) return numberOrText(text)
   return text
 }
 

@@ -3,7 +3,7 @@ import { counted } from '../format'
 import type { ListedFile, Placed, Reading } from './model'
 
 /** A routine file that holds what is current already is a sighting; on any other occasion it is a version of its own. */
-export const isSighting = (reading: Placed, occasion: Occasion): boolean => reading.identical && !reading.late && occasion === 'routine'
+export const isSighting = (reading: Placed, occasion: Occasion): boolean => reading.identical && occasion === 'routine'
 
 function placedBecomes(reading: Placed, occasion: Occasion): string {
   if (isSighting(reading, occasion)) return `a sighting of v${reading.base?.number ?? reading.number}: identical`

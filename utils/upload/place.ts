@@ -7,6 +7,9 @@ import { judge } from '#shared/checks/judge'
 import { diffContents } from '#shared/diff/diff'
 import { diffRenumbered } from '#shared/diff/renumber'
 import { canonicalText } from '#shared/settings/canonical'
+import { contentOf } from '#shared/settings/content'
+import { withoutReadings } from '#shared/settings/readings'
+import { storedContent } from '../stored-content'
 import { isSighting } from './becomes'
 import type { Placed, Reading } from './model'
 
@@ -23,9 +26,6 @@ export interface Examined {
 type KnownAxis = NonNullable<JudgingContext['axis']>
 const clockSlack = 10 * 60_000
 
-/** Stored contents are canonical already; the wire shape only says less about them. */
-const contentOf = (stored: NonNullable<JudgingContext['current']>['content']) => stored as unknown as Content
-
 const contextOf = (axis: KnownAxis, context: JudgingContext): DiffContext =>
   ({ flags: axis.flags, watched: axis.watched, dictionary: context.nameplate?.dictionary })
 
@@ -35,7 +35,7 @@ function checksOf(read: ReadSettings, context: JudgingContext, axis: KnownAxis):
     content: read.content, axis, unit: read.file.unit, rules: context.rules,
     ...(context.registered ? { registered: context.registered } : {}),
     ...(context.nameplate ? { nameplate: context.nameplate } : {}),
-    ...(knownGood ? { knownGood: { content: contentOf(knownGood.content), ...(knownGood.firmware ? { firmware: knownGood.firmware } : {}) } } : {}),
+    ...(knownGood ? { knownGood: { content: storedContent(knownGood.content), ...(knownGood.firmware ? { firmware: knownGood.firmware } : {}) } } : {}),
   }).results
 }
 
@@ -44,8 +44,10 @@ export function examine(id: number, name: string, read: ReadSettings, context: J
   const { axis } = context
   if (!axis) return { state: 'unplaced', read, problem: context.problem ?? 'not-fitted', tag: null }
   if (axis.axisKind !== read.content.axisKind) return { state: 'unplaced', read, problem: 'axis-kind', tag: axis.tag }
+  const settled = withoutReadings(read.file, context.nameplate?.dictionary)
+  const kept = settled === read.file ? read : { ...read, file: settled, content: contentOf(settled) }
   const clockAhead = Date.parse(read.file.exportedAt) - now.getTime() > clockSlack
-  return { id, name, read, context, checks: checksOf(read, context, axis), clockAhead }
+  return { id, name, read: kept, context, checks: checksOf(kept, context, axis), clockAhead }
 }
 
 interface Base { readonly content: Content, readonly number: number, readonly versionId: number | null, readonly name: string | null, readonly capturedAt: number }
@@ -58,7 +60,7 @@ const withoutOffset = (content: Content): Content => {
 function placed(file: Examined, axis: KnownAxis, base: Base | null, number: number): Placed {
   const { read, context } = file
   const diffContext = contextOf(axis, context)
-  const knownGood = context.knownGood ? contentOf(context.knownGood.content) : null
+  const knownGood = context.knownGood ? storedContent(context.knownGood.content) : null
   return {
     state: 'placed', read, axis, number, checks: file.checks, clockAhead: file.clockAhead, knownGood: context.knownGood,
     base: base && { number: base.number, versionId: base.versionId, name: base.name },
@@ -86,7 +88,7 @@ export function placeAxis(files: readonly Examined[], occasion: Occasion): Map<n
     if (!begun) {
       begun = true
       number = nextNumber
-      base = current && { content: contentOf(current.content), number: current.number, versionId: current.versionId, name: null, capturedAt: Date.parse(current.capturedAt) }
+      base = current && { content: storedContent(current.content), number: current.number, versionId: current.versionId, name: null, capturedAt: Date.parse(current.capturedAt) }
     }
     const reading = placed(file, axis, base, number)
     out.set(file.id, reading)

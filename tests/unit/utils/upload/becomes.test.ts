@@ -11,7 +11,7 @@ describe('what a file becomes', () => {
     ['v9, same as known-good v7', placed('A', { sameAsKnownGood: true }), 'routine'],
     ['a sighting of v7: identical', seen, 'routine'],
     ['v8, nothing changed', seen, 'as-left'],
-    ['v8, nothing changed, late: older than v7, does not become current', { ...seen, late: true }, 'routine'],
+    ['v8, nothing changed, late: older than v7, does not become current', { ...seen, late: true }, 'as-found'],
     ['v9, its clock runs ahead, the time of receipt counts', placed('A', { clockAhead: true }), 'routine'],
     ['into the tray, as it came', { state: 'unreadable', errors: [], more: 0 }, 'routine'],
     ['into the tray', { state: 'unplaced', read, problem: 'not-fitted', tag: null }, 'routine'],

@@ -57,6 +57,14 @@ describe('a file of an axis', () => {
   })
 })
 
+describe('what the dictionary calls a reading', () => {
+  it('is no part of what is compared', () => {
+    const settings = { ...read, content: { ...current, extra: { Hours: 9 } }, file: { ...read.file, ...current, extra: { Hours: 9 } } }
+    const reading = examine(1, '1.json', settings, context({ nameplate: { model: 'HL40-200V', axisKind: 'linear', stroke: 200, dictionary: { Hours: { reading: true } } } }), now)
+    expect('state' in reading ? undefined : placeAxis([reading], 'routine').get(1)).toMatchObject({ identical: true })
+  })
+})
+
 describe('several files of one axis', () => {
   it('are told oldest first, each against the one before', () => {
     const later = examined(1, { thrustLimit: 46 }, '2026-12-01T08:00:00Z')

@@ -37,7 +37,10 @@ export default defineNuxtConfig({
   telemetry: false,
   // Without server rendering the development server of this version looks for an entry that only this path sets (nuxt/nuxt#35033).
   $development: { experimental: { viteEnvironmentApi: true } },
-  auth: { hash: { scrypt: { cost: 131072, maxMemory: 268435456 } } },
+  // Its own routes are taken out (modules/route-table.ts): who is signed in, GET /api/me says.
+  auth: { loadStrategy: 'none' },
+  // The sealed cookie holds a random session id and nothing else. Password and `secure` are set at the start (server/plugins/vault.ts).
+  runtimeConfig: { session: { name: 'witnessmark', password: '', maxAge: 7 * 24 * 60 * 60, cookie: { sameSite: 'lax', secure: false } } },
   eslint: { config: { stylistic: true } },
   security: {
     strict: true,

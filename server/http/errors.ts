@@ -33,6 +33,7 @@ const answers: Readonly<Record<RefusalCode | FileBodyCode | 'not-canonical', rea
   'no-known-good': [409, 'Nothing to restore'],
   'axis-kind': [409, 'Another kind of axis'],
   'not-fitted': [409, 'Not fitted'],
+  'fitted': [409, 'Still fitted'],
   'serial-unknown': [409, 'Unknown serial'],
   'too-large': [413, 'Too large'],
   'media-type': [415, 'Not in this form'],

@@ -1,6 +1,6 @@
 import { z } from 'zod'
 import { axisFlags, axisKinds } from '../settings/types'
-import { nameplateSchema } from '../settings/nameplate'
+import { dictionaryEntrySchema, nameplateSchema } from '../settings/nameplate'
 import { idSchema, idText, instantSchema, nameSchema, reasonSchema, serialSchema, tagSchema } from './common'
 
 const rev = { rev: z.int().optional().describe('the rev that was read; 428 without, 409 edited-meanwhile when stale') }
@@ -71,9 +71,17 @@ export const fittingSchema = z.object({
 })
 export type Fitting = z.infer<typeof fittingSchema>
 
+type Clearable<Shape extends z.ZodRawShape> = { [Key in keyof Shape]: z.ZodOptional<z.ZodNullable<Shape[Key] & z.ZodType>> }
+/** The members of a merge patch (RFC 7396): each may be left out, and null clears it. */
+const clearable = <Shape extends z.ZodRawShape>(shape: Shape) =>
+  Object.fromEntries(Object.entries(shape).map(([key, schema]) => [key, (schema as z.ZodType).nullable().optional()])) as Clearable<Shape>
+
 /** POST adds a revision; PATCH adds one that differs in the named fields (rev = the revision read). */
 export const nameplateBody = nameplateSchema
-export const nameplatePatch = z.strictObject({ ...rev, ...nameplateSchema.partial().shape })
+export const nameplatePatch = z.strictObject({
+  ...rev, ...clearable(nameplateSchema.shape),
+  dictionary: z.record(z.string().min(1).max(64), z.strictObject(clearable(dictionaryEntrySchema.shape)).nullable()).nullable().optional(),
+})
 export const nameplateRecord = z.object({
   id: idSchema.describe('of the newest revision'), model: z.string(), revision: z.int(), rev: z.int(), madeAt: instantSchema, madeBy: z.string(),
   nameplate: nameplateSchema, units: z.int().describe('registered units of the model'),

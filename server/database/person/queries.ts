@@ -1,5 +1,5 @@
 import { and, asc, eq, gt, isNull, sql } from 'drizzle-orm'
-import { prepared } from '../prepared'
+import { prepared, type VaultDb } from '../prepared'
 import { person, type PersonRow } from './table'
 
 const placeholder = sql.placeholder
@@ -20,4 +20,12 @@ export const personQueries = prepared(db => ({
 /** A person as the log has them: all but the hash of the password and when they last signed in. */
 export function personState({ passwordHash: _hash, lastSignInAt: _last, ...state }: PersonRow): Omit<PersonRow, 'passwordHash' | 'lastSignInAt'> {
   return state
+}
+
+export function insertPerson(db: VaultDb, values: typeof person.$inferInsert): PersonRow {
+  return db.insert(person).values(values).returning().get()
+}
+
+export function updatePerson(db: VaultDb, { id, ...values }: PersonRow): void {
+  db.update(person).set(values).where(eq(person.id, id)).run()
 }

@@ -1,0 +1,38 @@
+import { defineNitroPlugin } from 'nitropack/runtime'
+import { openVault, standardScryptCost } from '#server/database/client'
+import { StartError } from '#server/database/start-error'
+import type { ServerContext } from '#server/http/context'
+import { firstStart } from '#server/services/people/first-start'
+import { makeLogger } from '#server/services/start/logger'
+import { publicOriginOf } from '#server/services/start/public-origin'
+import { sessionSecret } from '#server/services/start/secret'
+
+/** Opens the vault before the first request; where it must not run, the process ends with one plain line. */
+export default defineNitroPlugin((nitroApp) => {
+  const logger = makeLogger()
+  try {
+    const server = start(logger)
+    nitroApp.hooks.hook('request', (event) => { event.context.server = server })
+    nitroApp.hooks.hook('close', () => { server.vault.close() })
+  }
+  catch (error) {
+    if (!(error instanceof StartError)) throw error
+    logger.fatal({ code: error.code }, error.message)
+    process.exit(1)
+  }
+})
+
+function start(logger: ServerContext['logger']): ServerContext {
+  const { WITNESSMARK_DATA, WITNESSMARK_SCRYPT_COST, NUXT_SESSION_PASSWORD, PUBLIC_URL } = process.env
+  const scryptCost = Number(WITNESSMARK_SCRYPT_COST ?? standardScryptCost)
+  if (scryptCost < standardScryptCost) logger.warn({ scryptCost }, 'WITNESSMARK_SCRYPT_COST makes passwords easier to guess than the standard does; it is meant for tests')
+  const vault = openVault(WITNESSMARK_DATA ?? './data', { scryptCost })
+  const secret = sessionSecret(vault.folder, NUXT_SESSION_PASSWORD)
+  const publicOrigin = publicOriginOf(PUBLIC_URL)
+  // Read by the cookie library at the first request.
+  process.env.NUXT_SESSION_PASSWORD = secret
+  process.env.NUXT_SESSION_COOKIE_SECURE = String(publicOrigin?.startsWith('https:') ?? false)
+  firstStart(vault, logger, publicOrigin)
+  logger.info({ folder: vault.folder, schema: vault.schema }, 'vault open')
+  return { vault, logger, secret, publicOrigin }
+}

@@ -1,0 +1,24 @@
+import { accessSync, constants, statfsSync } from 'node:fs'
+import type { Vault } from '#server/database/client'
+
+/** With less free than this the next upload may find the disk full. */
+const leastFree = 32 * 1024 * 1024
+
+/** Whether the vault answers and could be written; nothing is written to find out. */
+export function health(vault: Vault): { status: 'ok' | 'failing', schema: number, writable: boolean } {
+  const writable = isWritable(vault)
+  return { status: writable ? 'ok' : 'failing', schema: vault.schema, writable }
+}
+
+function isWritable({ sqlite, folder }: Vault): boolean {
+  try {
+    accessSync(folder, constants.W_OK)
+    const { bavail, bsize } = statfsSync(folder)
+    sqlite.exec('BEGIN IMMEDIATE; ROLLBACK')
+    return bavail * bsize >= leastFree
+  }
+  catch {
+    // Any failure is the answer itself: not writable.
+    return false
+  }
+}

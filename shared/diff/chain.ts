@@ -18,12 +18,20 @@ export function chain(a: Span, b: Span): IndexPair[] {
   for (let i = a.to - 1; i >= a.from; i -= 1) {
     const matches = columns.get(a.signature(i))
     if (!matches) continue
-    // Ascending: what this row adds at a lower column is never seen by the queries beyond a higher one.
-    const scores = Float64Array.from(matches, (j) => pair + Number(a.number(i) === b.number(j)) + bestFrom.beyond(j))
-    for (const [k, j] of matches.entries()) bestFrom.raise(j, scores[k]!)
+    const scores = new Float64Array(matches.length)
+    for (let k = 0; k < matches.length; k += 1) {
+      const j = matches[k]!
+      scores[k] = worth(a, i, b, j) + bestFrom.beyond(j)
+      // At once, since the columns ascend: the queries to come look beyond this one only.
+      bestFrom.raise(j, scores[k]!)
+    }
     rows.push({ i, columns: matches, scores })
   }
-  return firstBest(rows.reverse(), b.from, bestFrom.beyond(b.from - 1), (i, j) => pair + Number(a.number(i) === b.number(j)))
+  return firstBest(rows.reverse(), b.from, bestFrom.beyond(b.from - 1), (i, j) => worth(a, i, b, j))
+}
+
+function worth(a: Span, i: number, b: Span, j: number): number {
+  return a.number(i) === b.number(j) ? pair + 1 : pair
 }
 
 function columnsBySignature(b: Span): Map<number, number[]> {
@@ -39,7 +47,7 @@ function columnsBySignature(b: Span): Map<number, number[]> {
 /** Walks the matches in order and takes each from which a chain worth the whole rest begins. */
 function firstBest(
   rows: readonly { readonly i: number, readonly columns: readonly number[], readonly scores: Float64Array }[],
-  firstColumn: number, best: number, worth: (i: number, j: number) => number,
+  firstColumn: number, best: number, worthOf: (i: number, j: number) => number,
 ): IndexPair[] {
   const taken: IndexPair[] = []
   let rest = best
@@ -49,7 +57,7 @@ function firstBest(
     if (k < 0) continue
     const j = columns[k]!
     taken.push([i, j])
-    rest -= worth(i, j)
+    rest -= worthOf(i, j)
     from = j + 1
   }
   return taken

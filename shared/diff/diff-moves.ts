@@ -11,12 +11,16 @@ export type NextAgrees = (was: number | undefined, is: number | undefined) => bo
 
 /** One pass over two move tables, row with partner; changes go to `out` in the order of the field table. */
 export class MovePass {
+  /** What a person is told: each edit, and each row that comes or goes as one. */
+  statements = 0
+
   constructor(private readonly out: FieldChange[], private readonly sides: Sides, private readonly nextAgrees?: NextAgrees) {}
 
   /** Adds one change for each field that differs, all of them where the move stands on one side only. */
   compare(before: Move | undefined, beforeIndex: number, after: Move | undefined, afterIndex: number): void {
-    let rest = fieldsApart(before, after)
+    let rest = before && after ? differing(before, after) : present(before ?? after)
     if (this.nextAgrees) rest = this.nextAgrees(before?.next, after?.next) ? rest & ~nextBit : rest | nextBit
+    this.statements += before && after ? bitCount(rest) : 1
     for (; rest !== 0; rest &= rest - 1) {
       const field = moveFieldNames[31 - Math.clz32(rest & -rest)]!
       const at = after?.[field] === undefined ? `/moves/${beforeIndex}/${field}` : `/moves/${afterIndex}/${field}`
@@ -35,17 +39,13 @@ export class MovePass {
   }
 }
 
-/** How many changes the flat reading has in the move table, without making them. */
-export function countMoveChanges(before: readonly Move[], after: readonly Move[]): number {
+/** How many statements the flat reading makes of two move tables, without making them. */
+export function countStatements(before: readonly Move[], after: readonly Move[]): number {
   let count = 0
   walkByNumber(before, after, (move) => move.move, (was, _, is) => {
-    for (let rest = fieldsApart(was, is); rest !== 0; rest &= rest - 1) count += 1
+    count += was && is ? bitCount(differing(was, is)) : 1
   })
   return count
-}
-
-function fieldsApart(before: Move | undefined, after: Move | undefined): number {
-  return before && after ? differing(before, after) : present(before ?? after)
 }
 
 /**
@@ -62,6 +62,12 @@ function differing(a: Move, b: Move): number {
 }
 
 const nextBit = 1 << moveFieldNames.indexOf('next')
+
+function bitCount(bits: number): number {
+  let count = 0
+  for (let rest = bits; rest !== 0; rest &= rest - 1) count += 1
+  return count
+}
 
 /** The fields that a row has, as bits. */
 function present(row: Move | undefined): number {

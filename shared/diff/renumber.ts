@@ -1,5 +1,5 @@
 import type { Content } from '../settings/types'
-import { countMoveChanges, MovePass } from './diff-moves'
+import { countStatements, MovePass } from './diff-moves'
 import { pushExtraChanges, pushFileChanges, pushSetupChanges } from './diff-values'
 import { pushZoneChanges } from './diff-zones'
 import { followersOf } from './followers'
@@ -11,19 +11,19 @@ import type { DiffContext, FieldChange, RenumberedReading, RowPair } from './typ
 import { walkByNumber } from './walk'
 
 /**
- * The renumbered reading: rows paired by what they do. Undefined unless it says less than the flat one, runs and changes of
- * moves counted together (the other sections read alike in both). `before` and `after` of a follower are numbers of the first and the second content.
+ * The renumbered reading: rows paired by what they do. Undefined unless it says less of the moves than the flat one, where a
+ * run, an edit, a row added and a row removed are one statement each. `before` and `after` of a follower are numbers of the
+ * first and of the second content.
  */
 export function diffRenumbered(before: Content, after: Content, context: DiffContext = {}): RenumberedReading | undefined {
-  const flat = countMoveChanges(before.moves, after.moves)
+  const flat = countStatements(before.moves, after.moves)
   if (flat < 2) return undefined
   const pairing = pairRows(before.moves, after.moves)
   const renumbered = runsOf(before.moves, after.moves, pairing)
   if (renumbered.length === 0 || renumbered.length >= flat) return undefined
   const pairs = pairsInOrder(pairsByNumber(before, after, pairing))
-  const changes = changesBetween(before, after, pairing, pairs, context)
-  const ofMoves = changes.filter((change) => change.section === 'move').length
-  return renumbered.length + ofMoves < flat ? { renumbered, pairs, changes } : undefined
+  const { changes, statements } = changesBetween(before, after, pairing, pairs, context)
+  return renumbered.length + statements < flat ? { renumbered, pairs, changes } : undefined
 }
 
 function pairsByNumber(before: Content, after: Content, pairing: Pairing): RowPair[] {
@@ -34,7 +34,10 @@ function pairsByNumber(before: Content, after: Content, pairing: Pairing): RowPa
   })]
 }
 
-function changesBetween(before: Content, after: Content, pairing: Pairing, pairs: readonly RowPair[], context: DiffContext): FieldChange[] {
+/** The changes, and how many statements those of moves are. */
+interface Told { readonly changes: FieldChange[], readonly statements: number }
+
+function changesBetween(before: Content, after: Content, pairing: Pairing, pairs: readonly RowPair[], context: DiffContext): Told {
   const sides = sidesOf(before, after, context)
   const { agree } = followersOf(pairs)
   const out: FieldChange[] = []
@@ -51,5 +54,5 @@ function changesBetween(before: Content, after: Content, pairing: Pairing, pairs
     if (row) moves.compare(before.moves[pairing.after[row.i]!], pairing.after[row.i]!, row.move, row.i)
   })
   pushExtraChanges(out, sides)
-  return byWeight(out)
+  return { changes: byWeight(out), statements: moves.statements }
 }

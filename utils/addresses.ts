@@ -19,6 +19,7 @@ export const addressOf = {
   admin: () => '/admin',
   trail: () => '/trail',
   format: () => '/format',
+  interface: () => '/interface',
   help: () => '/help',
 }
 

@@ -26,6 +26,7 @@ export const uploadStored = z.object({
 export type UploadStored = z.infer<typeof uploadStored>
 /** 200: the axis' current content, seen again. */
 export const uploadSeen = z.object({ sighting: z.object({ id: idSchema, at: instantSchema }), version: versionSchema })
+export type UploadSeen = z.infer<typeof uploadSeen>
 export const trayProblems = ['serial-unknown', 'not-fitted', 'axis-kind', 'unreadable'] as const
 /** 202: kept in the tray, because it has no axis. */
 export const uploadTray = z.object({ tray: idSchema, problem: z.enum(trayProblems), detail: z.string() })

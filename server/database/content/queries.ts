@@ -11,15 +11,15 @@ const contentQueries = prepared(db => ({
   insert: inserter(db, content),
 }))
 
-/** The canonical text of a stored content; throws where there is no such id. */
-export function readContentText(db: VaultDb, id: number): string {
+/** The canonical text of a stored content and its hash; throws where there is no such id. */
+export function readContentText(db: VaultDb, id: number): { text: string, hash: string } {
   const row = contentQueries(db).byId.get({ id })
   if (!row) throw new RangeError(`There is no content ${id}.`)
-  return inflateSync(row.text).toString('utf8')
+  return { text: inflateSync(row.text).toString('utf8'), hash: row.hash }
 }
 
 /** A stored content as it was validated when it came in. */
-export const readContent = (db: VaultDb, id: number): Content => JSON.parse(readContentText(db, id)) as Content
+export const readContent = (db: VaultDb, id: number): Content => JSON.parse(readContentText(db, id).text) as Content
 
 /** The id of the content of this hash; undefined where it was never stored. */
 export const contentIdOf = (db: VaultDb, hash: string): number | undefined => contentQueries(db).byHash.get({ hash })?.id

@@ -19,8 +19,6 @@ export const judgingQueries = prepared((db) => {
   const axisPlace = () => db.select({ axis, machine, line, site }).from(axis)
     .innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId)).innerJoin(site, eq(site.id, line.siteId))
   return {
-    /** Channel 0 = the unit has none. */
-    unit: db.select().from(unit).where(and(eq(unit.serial, place('serial')), eq(sql`ifnull(${unit.channel}, 0)`, place('channel')))).prepare(),
     channels: db.select({ channel: unit.channel }).from(unit).where(eq(unit.serial, place('serial'))).orderBy(asc(unit.channel)).prepare(),
     fittings: db.select().from(fitting).where(eq(fitting.unitId, place('unitId'))).orderBy(asc(fitting.fromAt), asc(fitting.id)).prepare(),
     openAtAxis: db.select({ fitting, unit }).from(fitting).innerJoin(unit, eq(unit.id, fitting.unitId))

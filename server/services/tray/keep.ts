@@ -6,7 +6,7 @@ import type { Write } from '#server/database/client'
 import type { VaultDb } from '#server/database/prepared'
 import type { TrayProblem } from '#server/database/schema'
 import { trayQueries } from '#server/database/tray/queries'
-import { capturedAtOf } from '../uploads/place-file'
+import { millisecondsOf } from '../uploads/place-file'
 import type { Ingested } from '../uploads/ingest'
 import { storeContent, storeUploadBytes, type SentFile } from '../uploads/store-parts'
 import { guessAxis, guessByTag } from './guess'
@@ -35,7 +35,7 @@ export function keepInTray(db: VaultDb, write: Write, sent: SentFile, fields: Up
     uploadId: storeUploadBytes(db, write, sent),
     problem: kept.problem, detail: kept.detail, errors: [...kept.errors], more: kept.more, fields, siteId,
     serial: unit?.serial ?? null, channel: unit?.channel ?? null, model: unit?.model ?? null,
-    capturedAt: kept.ingested ? new Date(capturedAtOf(kept.ingested.file, fields.capturedAt)).toISOString() : null,
+    capturedAt: kept.ingested ? new Date(millisecondsOf(fields.capturedAt ?? kept.ingested.file.exportedAt)).toISOString() : null,
     contentId: kept.ingested ? storeContent(db, write, kept.ingested) : null,
     guessAxisId: guess?.axisId ?? null, guessWhy: guess?.why ?? null,
   }

@@ -4,6 +4,7 @@ import { canonicalText } from '#shared/settings/canonical'
 import { contentOf } from '#shared/settings/content'
 import { hashesOf, type ContentHashes } from '#shared/settings/hash'
 import type { Dictionary } from '#shared/settings/nameplate'
+import { withoutReadings } from '#shared/settings/readings'
 import type { Content, Normalised, ReadSettings, SettingsFile } from '#shared/settings/types'
 
 /** Kept with each version: which reader and which difference made what is derived from its bytes. */
@@ -22,19 +23,8 @@ export interface Ingested {
 }
 
 /** Content and hashes of a file that was read; extra keys that the model's dictionary calls readings go to the readings. */
-export function ingest({ file, normalised }: ReadSettings, dictionary: Dictionary = {}): Ingested {
+export function ingest({ file, normalised }: ReadSettings, dictionary?: Dictionary): Ingested {
   const settled = withoutReadings(file, dictionary)
   const content = contentOf(settled)
   return { file: settled, content, text: canonicalText(content), hashes: hashesOf(content, sha256), normalised }
-}
-
-function withoutReadings(file: SettingsFile, dictionary: Dictionary): SettingsFile {
-  const isReading = (key: string) => Object.hasOwn(dictionary, key) && dictionary[key]?.reading === true
-  const entries = Object.entries(file.extra)
-  if (!entries.some(([key]) => isReading(key))) return file
-  return {
-    ...file,
-    extra: Object.fromEntries(entries.filter(([key]) => !isReading(key))),
-    readings: { ...file.readings, ...Object.fromEntries(entries.filter(([key]) => isReading(key))) },
-  }
 }

@@ -4,6 +4,7 @@ import { seesSite, type Actor } from '#server/database/actor'
 import { judgingQueries, type AxisPlace } from '#server/database/judging/queries'
 import type { VaultDb } from '#server/database/prepared'
 import type { FittingRow, TrayProblem, UnitRow } from '#server/database/schema'
+import { unitRows } from '#server/database/unit/queries'
 import { fittingFor, timesOf, type Times } from './clock'
 
 export interface PlacedFile {
@@ -24,10 +25,18 @@ export interface UnplacedFile {
 const earliest = Date.parse('0000-01-01T00:00:00.000Z')
 const latest = Date.parse('9999-12-31T23:59:59.999Z')
 
-/** When the file was read out of the drive, in epoch milliseconds: as the sender says, else as the file says. */
-export function capturedAtOf(file: Pick<SettingsFile, 'exportedAt'>, sent: string | undefined): number {
-  const at = parseTimestamp(sent ?? file.exportedAt) ?? parseTimestamp(file.exportedAt) ?? 0
-  return Math.min(Math.max(at, earliest), latest)
+/** Epoch milliseconds of a time with offset; one beyond what can be stored is drawn in to the nearest that can. */
+export function millisecondsOf(timestamp: string): number {
+  return Math.min(Math.max(parseTimestamp(timestamp) ?? earliest, earliest), latest)
+}
+
+/** Where a unit sat when a file of it was captured, and the times of the file; place undefined: nowhere. */
+export function placeUnit(db: VaultDb, unit: UnitRow, capturedAt: string, receivedAt: number): { place: AxisPlace | undefined, times: Times } {
+  const fittings = judgingQueries(db).fittings.all({ unitId: unit.id }).map(spanOf)
+  const knownSince = Math.min(Date.parse(unit.madeAt), ...fittings.map(({ from }) => from))
+  const times = timesOf(millisecondsOf(capturedAt), receivedAt, knownSince)
+  const fitting = fittingFor(fittings, times)
+  return { times, place: fitting && judgingQueries(db).axis.get({ id: fitting.row.axisId }) }
 }
 
 /**
@@ -36,13 +45,9 @@ export function capturedAtOf(file: Pick<SettingsFile, 'exportedAt'>, sent: strin
  */
 export function placeFile(db: VaultDb, actor: Actor, file: SettingsFile, receivedAt: number, sentCapturedAt?: string): PlacedFile | UnplacedFile {
   const queries = judgingQueries(db)
-  const unit = queries.unit.get({ serial: file.unit.serial, channel: file.unit.channel ?? 0 })
+  const unit = unitRows(db).bySerial.get({ serial: file.unit.serial, channel: file.unit.channel ?? 0 })
   if (!unit) return unknownSerial(file.unit, queries.channels.all({ serial: file.unit.serial }).map(row => row.channel))
-  const fittings = queries.fittings.all({ unitId: unit.id }).map(spanOf)
-  const knownSince = Math.min(Date.parse(unit.madeAt), ...fittings.map(({ from }) => from))
-  const times = timesOf(capturedAtOf(file, sentCapturedAt), receivedAt, knownSince)
-  const fitting = fittingFor(fittings, times)
-  const place = fitting && queries.axis.get({ id: fitting.row.axisId })
+  const { place, times } = placeUnit(db, unit, sentCapturedAt ?? file.exportedAt, receivedAt)
   const siteId = place?.site.id ?? unit.siteId
   if (siteId !== null && !seesSite(actor, siteId)) return unknownSerial(file.unit, [])
   if (!place) return notFitted(unit, times)

@@ -8,8 +8,8 @@ import type { VaultDb } from '#server/database/prepared'
 import type { NameplateRow, UnitRow, VersionRow } from '#server/database/schema'
 import { versionQueries } from '#server/database/version/queries'
 
-/** `text` is the canonical text of `content`. */
-export interface HeldVersion { readonly version: VersionRow, readonly content: Content, readonly text: string }
+/** `text` is the canonical text of `content`, `hash` that of the text. */
+export interface HeldVersion { readonly version: VersionRow, readonly content: Content, readonly text: string, readonly hash: string }
 
 /** All that a file of one unit at one axis is compared with and judged by. */
 export interface ReadAgainst {
@@ -44,8 +44,8 @@ function ruleOf({ id, scope, field, min, max, fixed, reason }: { id: number, sco
 /** A version with its content. */
 export function held(db: VaultDb, version: VersionRow | undefined): HeldVersion | null {
   if (!version) return null
-  const text = readContentText(db, version.contentId)
-  return { version, text, content: JSON.parse(text) as Content }
+  const { text, hash } = readContentText(db, version.contentId)
+  return { version, text, hash, content: JSON.parse(text) as Content }
 }
 
 /** Weights and watching of the axis, as every difference of it is told. */

@@ -11,10 +11,25 @@ import type { Ingested } from './ingest'
 /** The file as it came. */
 export interface SentFile { readonly bytes: Uint8Array, readonly name: string | null }
 
-export const fileHash = ({ bytes }: SentFile) => createHash('sha256').update(bytes).digest('hex')
+/** Where a version or sighting comes from: a file that is coming in, or one that waited in the tray. */
+export interface Source {
+  readonly sha256: string
+  readonly name: string | null
+  readonly sender: Sender
+  /** The id of the stored bytes; stores them where they are not there yet. */
+  readonly uploadId: () => number
+}
+export interface Sender { readonly personId: number, readonly tokenId: number | null, readonly peer: string }
+
+/** A file that is coming in with this write. */
+export function sourceOf(db: VaultDb, write: Write, sent: SentFile): Source {
+  return { sha256: fileHash(sent), name: sent.name, sender: senderOf(write), uploadId: () => storeUploadBytes(db, write, sent) }
+}
+
+const fileHash = ({ bytes }: SentFile) => createHash('sha256').update(bytes).digest('hex')
 
 /** Who answers for what the write stores, and with which token it came. */
-export function senderOf({ actor }: Write): { personId: number, tokenId: number | null, peer: string } {
+function senderOf({ actor }: Write): Sender {
   const personId = personOf(actor)
   if (personId === null) throw new Refusal('role', 'A file is sent by a person, or by a token that a person answers for.')
   return { personId, tokenId: tokenOf(actor), peer: actor.peer }

@@ -11,7 +11,7 @@ const tables = Object.values(schema).filter(value => is(value, SQLiteTable)) as 
 
 describe('the tables as the code sees them', () => {
   it.each(tables.map(table => [getTableName(table), table] as const))('%s has the columns of the file', (name, table) => {
-    const inFile = vault.sqlite.prepare('SELECT name, "notnull" AS needed, pk FROM pragma_table_info(?)').all(name) as { name: string, needed: number, pk: number }[]
+    const inFile = vault.sqlite.prepare('SELECT name, "notnull" AS needed, pk FROM pragma_table_xinfo(?)').all(name) as { name: string, needed: number, pk: number }[]
     const inCode = Object.values(getTableColumns(table)).map(column => ({ name: column.name, needed: column.notNull }))
     expect(inCode.map(({ name }) => name)).toEqual(inFile.map(({ name }) => name))
     const different = inFile.filter(({ name, needed, pk }) => pk === 0 && Boolean(needed) !== inCode.find(column => column.name === name)?.needed)

@@ -1,0 +1,58 @@
+import { and, asc, eq, gt, sql, type SQL } from 'drizzle-orm'
+import { alias } from 'drizzle-orm/sqlite-core'
+import type { SiteBounds } from '../actor'
+import { axis } from '../axis/table'
+import { boundsText, ifGiven, inBounds } from '../bounds'
+import { fitting } from '../fitting/table'
+import { knownGood } from '../known-good/table'
+import { line } from '../line/table'
+import { machine } from '../machine/table'
+import { person } from '../person/table'
+import { prepared, type VaultDb } from '../prepared'
+import { site } from '../site/table'
+import { unit } from '../unit/table'
+import { version } from '../version/table'
+import { axisState } from './table'
+
+const current = alias(version, 'current_version')
+const marked = alias(version, 'marked_version')
+const place = sql.placeholder
+
+/** Axes with their place, state, marked and current version and fitted unit: one row each, every join by a key. */
+const axisRowsOf = (db: VaultDb, ...where: (SQL | undefined)[]) => db.select({
+  axis, state: axisState,
+  machine: { id: machine.id, name: machine.name }, line: { id: line.id, name: line.name },
+  site: { id: site.id, name: site.name, timeZone: site.timeZone },
+  current: { id: current.id, number: current.number, capturedAt: current.capturedAt, receivedAt: current.receivedAt, scribeCode: current.scribeCode, firmware: current.firmware },
+  marked: { id: marked.id, number: marked.number, scribeCode: marked.scribeCode },
+  mark: { at: knownGood.at, by: person.name },
+  unit: { id: unit.id, serial: unit.serial, channel: unit.channel, model: unit.model, firmware: unit.firmware, since: fitting.fromAt },
+}).from(axis)
+  .innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId)).innerJoin(site, eq(site.id, line.siteId))
+  .leftJoin(axisState, eq(axisState.axisId, axis.id))
+  .leftJoin(current, eq(current.id, axisState.currentVersionId))
+  .leftJoin(marked, eq(marked.id, axisState.knownGoodVersionId))
+  .leftJoin(knownGood, eq(knownGood.id, axisState.knownGoodId))
+  .leftJoin(person, eq(person.id, knownGood.byPerson))
+  .leftJoin(fitting, eq(fitting.id, axisState.fittingId))
+  .leftJoin(unit, eq(unit.id, fitting.unitId))
+  .where(and(...where)).orderBy(asc(axis.id))
+
+const axisLists = prepared(db => ({
+  one: axisRowsOf(db, eq(axis.id, place('id'))).prepare(),
+  all: axisRowsOf(db, inBounds(site.id)).prepare(),
+  page: axisRowsOf(db, gt(axis.id, place('after')), inBounds(site.id), ifGiven(site.id, 'siteId'), ifGiven(line.id, 'lineId'), ifGiven(machine.id, 'machineId')).limit(place('limit')).prepare(),
+}))
+
+export type AxisListRow = NonNullable<ReturnType<ReturnType<typeof axisLists>['one']['get']>>
+
+export const readAxisRow = (db: VaultDb, id: number): AxisListRow | undefined => axisLists(db).one.get({ id })
+
+/** Every axis of the sites, by id. */
+export const readAllAxes = (db: VaultDb, sites: SiteBounds): AxisListRow[] => axisLists(db).all.all({ sites: boundsText(sites) })
+
+export interface AxisFilter { readonly siteId?: number | undefined, readonly lineId?: number | undefined, readonly machineId?: number | undefined }
+
+export function readAxisPage(db: VaultDb, sites: SiteBounds, { siteId = 0, lineId = 0, machineId = 0 }: AxisFilter, after: number, limit: number): AxisListRow[] {
+  return axisLists(db).page.all({ sites: boundsText(sites), siteId: siteId || null, lineId: lineId || null, machineId: machineId || null, after, limit })
+}

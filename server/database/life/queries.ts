@@ -1,0 +1,34 @@
+import { and, desc, eq, sql } from 'drizzle-orm'
+import { fitting } from '../fitting/table'
+import { knownGood } from '../known-good/table'
+import { person } from '../person/table'
+import { prepared } from '../prepared'
+import { token } from '../token/table'
+import { unit } from '../unit/table'
+import { version, versionVoid } from '../version/table'
+
+const place = sql.placeholder
+const before = (at: unknown, id: unknown) => sql`(${at}, ${id}) < (${place('at')}, ${place('id')})`
+
+/**
+ * What happened to an axis, one statement a kind, newest first and each from before (at, id): keys by index first, a page at
+ * a time, then put together.
+ */
+export const lifeQueries = prepared(db => ({
+  versions: db.select({
+    id: version.id, at: version.orderAt, number: version.number, occasion: version.occasion, reason: version.reason, harm: version.harm, motion: version.motion, text: version.text,
+    serial: unit.serial, storedBy: person.name, token: token.name,
+    sightings: sql<number>`(SELECT count(*) FROM sighting WHERE sighting.version_id = ${version.id})`,
+  }).from(version).innerJoin(unit, eq(unit.id, version.unitId)).innerJoin(person, eq(person.id, version.storedBy)).leftJoin(token, eq(token.id, version.storedByToken))
+    .where(and(eq(version.axisId, place('axisId')), before(version.orderAt, version.number))).orderBy(desc(version.orderAt), desc(version.number)).limit(place('limit')).prepare(),
+  marks: db.select({ id: knownGood.id, at: knownGood.at, versionId: knownGood.versionId, number: version.number, note: knownGood.note, by: person.name })
+    .from(knownGood).innerJoin(person, eq(person.id, knownGood.byPerson)).leftJoin(version, eq(version.id, knownGood.versionId))
+    .where(and(eq(knownGood.axisId, place('axisId')), before(knownGood.at, knownGood.id))).orderBy(desc(knownGood.id)).limit(place('limit')).prepare(),
+  voids: db.select({ id: version.id, at: versionVoid.at, number: version.number, reason: versionVoid.reason, by: person.name })
+    .from(version).innerJoin(versionVoid, eq(versionVoid.versionId, version.id)).innerJoin(person, eq(person.id, versionVoid.byPerson))
+    .where(and(eq(version.axisId, place('axisId')), before(versionVoid.at, version.id))).orderBy(desc(versionVoid.at), desc(version.id)).limit(place('limit')).prepare(),
+  fitted: db.select({ id: fitting.id, at: fitting.fromAt, serial: unit.serial }).from(fitting).innerJoin(unit, eq(unit.id, fitting.unitId))
+    .where(and(eq(fitting.axisId, place('axisId')), before(fitting.fromAt, fitting.id))).orderBy(desc(fitting.fromAt), desc(fitting.id)).limit(place('limit')).prepare(),
+  takenOut: db.select({ id: fitting.id, at: sql<string>`${fitting.toAt}`, serial: unit.serial }).from(fitting).innerJoin(unit, eq(unit.id, fitting.unitId))
+    .where(and(eq(fitting.axisId, place('axisId')), before(fitting.toAt, fitting.id))).orderBy(desc(fitting.toAt), desc(fitting.id)).limit(place('limit')).prepare(),
+}))

@@ -1,0 +1,78 @@
+import type { UploadFields, UploadSeen, UploadStored } from '#shared/api/uploads'
+import { countByWeight } from '#shared/diff/summary'
+import type { Normalised } from '#shared/settings/types'
+import { seesSite, type Actor } from '#server/database/actor'
+import { insertChanges } from '#server/database/change/queries'
+import { insertJudgement } from '#server/database/check/queries'
+import type { Write } from '#server/database/client'
+import type { VaultDb } from '#server/database/prepared'
+import { sightingQueries } from '#server/database/sighting/queries'
+import { versionQueries } from '#server/database/version/queries'
+import { refreshAxisState } from '../axes/axis-state'
+import { versionSummary } from '../versions/summary'
+import { changesOnWire, checksOnWire } from '../wire'
+import { axisNamed } from './axis-named'
+import { engineVersion } from './ingest'
+import type { PlannedSighting, PlannedVersion } from './plan-upload'
+import { storeContent, type Source } from './store-parts'
+
+/** Stores a planned version with its changes and its judgement. */
+export function storeVersion(db: VaultDb, write: Write, source: Source, fields: UploadFields, plan: PlannedVersion): UploadStored {
+  const { placed, ingested, changes, judgement, against } = plan
+  const axisId = placed.place.axis.id
+  const id = insertVersion(db, write, source, fields, plan)
+  insertChanges(db, id, changes)
+  insertJudgement(db, id, judgement, against.nameplate?.id ?? null, write.now)
+  refreshAxisState(db, axisId)
+  return {
+    version: versionSummary(db, id), changes: changesOnWire(changes), renumbered: [...plan.renumbered], checks: checksOnWire(judgement.results),
+    judged: {
+      ruleSet: judgement.ruleSet, nameplateRevision: against.nameplate?.revision ?? null, judgedAt: write.now,
+      judged: [...judgement.judged], notApplicable: [...judgement.notApplicable],
+    },
+    findings: [], normalised: normalisedOnWire(ingested.normalised),
+  }
+}
+
+function insertVersion(db: VaultDb, write: Write, source: Source, fields: UploadFields, plan: PlannedVersion): number {
+  const { placed: { place, unit, times }, ingested: { file, hashes, normalised }, base } = plan
+  const { exportedAt, exportedBy, note, readings } = file
+  const row = {
+    axisId: place.axis.id, number: plan.number, unitId: unit.id, uploadId: source.uploadId(), contentId: storeContent(db, write, plan.ingested),
+    baseId: base?.id ?? null, occasion: fields.occasion ?? 'routine',
+    capturedAt: new Date(times.capturedAt).toISOString(), receivedAt: write.now, clockDoubtful: times.clockDoubtful, late: plan.late,
+    reason: fields.reason ?? null, workOrder: fields.workOrder ?? null, changedBy: fields.changedBy ?? null, allowedBy: fields.allowedBy ?? null,
+    storedBy: source.sender.personId, storedByToken: source.sender.tokenId, engine: engineVersion, copyHash: hashes.copyHash, scribeCode: hashes.scribeCode,
+    model: file.unit.model, firmware: file.unit.firmware ?? null, ...countByWeight(plan.changes),
+    file: { unit: file.unit, exportedAt, ...(exportedBy === undefined ? {} : { exportedBy }), ...(note === undefined ? {} : { note }), readings, normalised },
+  } as const
+  const id = versionQueries(db).insert(row)
+  write.log({ act: 'version-stored', id, state: { id, ...row, file: definedOnly(row.file) }, note: disagreement(db, write.actor, fields, place.axis) })
+  return id
+}
+
+/** A log entry has no place for undefined. */
+const definedOnly = (value: object) => JSON.parse(JSON.stringify(value)) as object
+
+function disagreement(db: VaultDb, actor: Actor, { axis }: UploadFields, stored: { id: number, tag: string }): string | null {
+  if (axis === undefined) return null
+  const named = axisNamed(db, axis)
+  if (named?.axis.id === stored.id) return null
+  return `sent for ${named && seesSite(actor, named.site.id) ? named.axis.tag : axis}; stored at ${stored.tag}, where its serial sits`
+}
+
+/** Records that the current content of the axis was seen again. */
+export function storeSighting(db: VaultDb, write: Write, source: Source, fields: UploadFields, { placed, current }: PlannedSighting): UploadSeen {
+  const row = {
+    axisId: current.axisId, versionId: current.id, uploadSha256: source.sha256, name: source.name,
+    capturedAt: new Date(placed.times.capturedAt).toISOString(), receivedAt: write.now, ...source.sender,
+  }
+  const id = sightingQueries(db).insert(row)
+  write.log({ act: 'sighting-recorded', id, state: { id, ...row }, note: fields.reason ?? null })
+  refreshAxisState(db, current.axisId)
+  return { sighting: { id, at: write.now }, version: versionSummary(db, current.id) }
+}
+
+export function normalisedOnWire({ form, rounded, converted, encoding, decodedTexts, delimiter, decimal }: Normalised): UploadStored['normalised'] {
+  return { form, rounded, converted, encoding, decodedTexts: [...decodedTexts], ...(delimiter ? { delimiter } : {}), ...(decimal ? { decimal } : {}) }
+}

@@ -1,7 +1,7 @@
 import type { Rule } from '#shared/api/places'
 import { setupField, setupFieldNames, setupGroups } from '#shared/settings/fields'
 import { moveFieldNames, moveFields, zoneFieldNames, zoneFields } from '#shared/settings/move-fields'
-import { type FormField, type Option } from '../forms/fields'
+import type { FormField, Option } from '../forms/fields'
 import { sayValue } from '../format'
 
 export interface RuleField {

@@ -26,13 +26,13 @@ export interface Placed {
   readonly checks: readonly CheckResult[]
 }
 
-export type Reading =
-  | { readonly state: 'waits' }
-  | { readonly state: 'unreadable', readonly errors: readonly FormatError[], readonly more: number }
-  | { readonly state: 'unplaced', readonly read: ReadSettings, readonly problem: 'serial-unknown' | 'not-fitted' | 'axis-kind', readonly tag: string | null }
-  | { readonly state: 'unjudged', readonly read: ReadSettings, readonly why: string }
-  | { readonly state: 'twin', readonly of: string }
-  | Placed
+export type Reading
+  = | { readonly state: 'waits' }
+    | { readonly state: 'unreadable', readonly errors: readonly FormatError[], readonly more: number }
+    | { readonly state: 'unplaced', readonly read: ReadSettings, readonly problem: 'serial-unknown' | 'not-fitted' | 'axis-kind', readonly tag: string | null }
+    | { readonly state: 'unjudged', readonly read: ReadSettings, readonly why: string }
+    | { readonly state: 'twin', readonly of: string }
+    | Placed
 
 export interface ListedFile {
   readonly id: number

@@ -4,13 +4,13 @@ import { uploadStored, uploadTray } from '#shared/api/uploads'
 import { versionSchema } from '#shared/api/versions'
 
 /** What became of one file that was sent. */
-export type Outcome =
-  | { readonly kind: 'version', readonly versionId: number, readonly tag: string, readonly number: number, readonly findings: number }
-  | { readonly kind: 'seen', readonly tag: string, readonly number: number }
-  | { readonly kind: 'tray', readonly trayId: number, readonly detail: string }
-  | { readonly kind: 'unreadable', readonly trayId: number | null, readonly detail: string }
+export type Outcome
+  = | { readonly kind: 'version', readonly versionId: number, readonly tag: string, readonly number: number, readonly findings: number }
+    | { readonly kind: 'seen', readonly tag: string, readonly number: number }
+    | { readonly kind: 'tray', readonly trayId: number, readonly detail: string }
+    | { readonly kind: 'unreadable', readonly trayId: number | null, readonly detail: string }
   /** Nothing was kept. `again`: the same file may go through later. */
-  | { readonly kind: 'refused', readonly status: number, readonly why: string, readonly again: boolean }
+    | { readonly kind: 'refused', readonly status: number, readonly why: string, readonly again: boolean }
 
 const storedVersion = versionSchema.pick({ id: true, axisTag: true, number: true })
 const seenAnswer = z.object({ sighting: z.object({ id: z.int() }), version: storedVersion })

@@ -19,11 +19,10 @@ export const extraRange: Rule = {
 }
 
 function judge({ content, nameplate }: JudgeInput): CheckResult[] {
-  const keys = Object.keys(content.extra)
-  if (!nameplate) return [unknown('The drive’s own parameters', ['nameplate.dictionary'], keys.map(atExtra))]
-  return keys.flatMap((key) => {
+  if (!nameplate) return [unknown('The drive’s own parameters', ['nameplate.dictionary'], Object.keys(content.extra).map(atExtra))]
+  return Object.entries(content.extra).flatMap(([key, held]) => {
     const entry = entryOf(nameplate.dictionary, key)
-    return entry ? judgeKey(key, content.extra[key]!, entry) : []
+    return entry ? judgeKey(key, held, entry) : []
   })
 }
 

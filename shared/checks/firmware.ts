@@ -3,9 +3,9 @@
  * the other comes before it. Revisions whose words differ ("A2" and "B1") have no order: false.
  */
 export function isOlderFirmware(one: string, other: string): boolean {
-  const left = parts(one), right = parts(other)
-  for (let i = 0; i < right.length; i++) {
-    const a = left[i], b = right[i]!
+  const left = parts(one)
+  for (const [i, b] of parts(other).entries()) {
+    const a = left[i]
     if (a === undefined) return true
     if (a === b) continue
     return typeof a === 'number' && typeof b === 'number' && a < b

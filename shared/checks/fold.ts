@@ -29,7 +29,7 @@ function notes(results: readonly CheckResult[]): FoldedLine[] {
   return [...grouped(results, result => [result.rule])].map(([rule, group]) => ({
     rule,
     level: 'note',
-    message: group.length === 1 ? group[0]!.message : `${ruleOf(rule)?.title ?? rule}: ${group.length} notes.`,
+    message: group.length === 1 ? group.map(note => note.message).join() : `${ruleOf(rule)?.title ?? rule}: ${group.length} notes.`,
     results: group,
   }))
 }

@@ -1,6 +1,7 @@
 import { setupField } from '../settings/fields'
 import { moveFields, zoneFields, type RowField } from '../settings/move-fields'
 import type { AxisKind } from '../settings/types'
+import { Exact } from '../units/exact'
 
 /*
  * Words of the sentences in check results. Settings values and their exact differences print as they are: their shortest
@@ -18,10 +19,14 @@ export function plain(value: number): string {
  */
 export function about(value: number, against?: number): string {
   for (let digits = 4; digits < 17; digits++) {
-    const cut = Number(value.toPrecision(digits))
-    if (against === undefined || value === against || cut !== Number(against.toPrecision(digits))) return plain(cut)
+    const cut = significant(value, digits)
+    if (against === undefined || value === against || cut !== significant(against, digits)) return plain(cut)
   }
   return plain(value)
+}
+
+function significant(value: number, digits: number): number {
+  return new Exact(value).toSignificantDigits(digits).toNumber()
 }
 
 /** Number and unit with one space, "38 %" as well; a bare number where the unit is ''. */
@@ -53,15 +58,16 @@ export function movesInWords(moves: readonly number[]): string {
 
 /** "5", "5 and 7", "5 to 9 and 12", ascending. */
 export function numbersInWords(numbers: readonly number[]): string {
-  const sorted = [...numbers].sort((a, b) => a - b)
-  const parts: string[] = []
-  for (let first = 0, last = 0; first < sorted.length; first = last + 1) {
-    last = first
-    while (sorted[last + 1] === sorted[last]! + 1) last++
-    if (last - first === 1) last = first
-    parts.push(last === first ? `${sorted[first]}` : `${sorted[first]} to ${sorted[last]}`)
+  const runs: { first: number, last: number }[] = []
+  for (const number of [...numbers].sort((a, b) => a - b)) {
+    const run = runs.at(-1)
+    if (run && number === run.last + 1) run.last = number
+    else runs.push({ first: number, last: number })
   }
-  return inWords(parts)
+  return inWords(runs.flatMap(({ first, last }) => {
+    if (last - first > 1) return [`${first} to ${last}`]
+    return first === last ? [`${first}`] : [`${first}`, `${last}`]
+  }))
 }
 
 /** The first letter in upper case: "move 5" begins a sentence as "Move 5". */

@@ -47,8 +47,10 @@ function outside(row: Row, limits: SoftLimits, length: string): CheckResult[] {
     { field: 'target', place: target, text: 'may run on to' },
   ] as const
   return places.flatMap(({ field, place, text }) => {
-    const found = place === undefined ? undefined : beyondLimit(place, limits)
-    return place === undefined || !found ? [] : [stop([atMove(row, field), atSetup(found.field)],
+    if (place === undefined) return []
+    const found = beyondLimit(place, limits)
+    if (!found) return []
+    return [stop([atMove(row, field), atSetup(found.field)],
       `Press ${move} ${text} ${quantity(place, length)}, ${quantity(found.beyond, length)} beyond the soft limit of ${quantity(found.limit, length)}.`,
       { ...path(row.move), limit: found.limit, beyond: found.beyond })]
   })
@@ -62,7 +64,8 @@ function onTheWay(row: Row, starts: Starts | undefined, rows: readonly Row[], le
     return [stop([atMove(row, 'approach'), atMove(row, 'target')],
       `Press ${move} has approach and target at ${quantity(target, length)}: no way is left to press on.`, path(row.move))]
   }
-  const results = (starts?.positions ?? []).filter(start => push * minus(start, approach) > 0).map(start => stop(
+  const tooFar = (starts?.positions ?? []).filter(start => push * minus(start, approach) > 0)
+  const results = tooFar.map(start => stop(
     [atMove(row, 'approach')],
     `Press ${move} starts at ${quantity(start, length)}, ${quantity(Math.abs(minus(start, approach)), length)} beyond its approach of ${quantity(approach, length)}.`,
     { ...path(row.move), start }))

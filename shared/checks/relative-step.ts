@@ -59,7 +59,7 @@ function runaways(rows: readonly Row[], length: string, min?: number, max?: numb
       results.push(stop(at, `${story}: sooner or later the axis leaves its travel.`, { moves, net: lap.net }))
       continue
     }
-    const positions = starts.get(chain[0]!.move.move)?.positions ?? []
+    const positions = chain.slice(0, 1).flatMap(row => starts.get(row.move.move)?.positions ?? [])
     const laps = positions.length > 0 ? positions.map(start => lapThatLeaves(lap, min, max, start)) : [lapThatLeaves(lap, min, max)]
     const leaves = Math.min(...laps)
     const when = positions.length > 0 ? `lap ${leaves}` : `lap ${leaves} at the latest`

@@ -43,15 +43,14 @@ function ignoredLine(move: number, inputs: number, numbering: Numbering, used: R
   const code = selectCode(move, numbering)
   if (code < 2 ** inputs) return { move, instead: 'nothing' }
   const called = calledMove(code % 2 ** inputs, numbering)
-  const instead = called === undefined && numbering.allOff === 'home' ? 'home'
-    : called !== undefined && used.has(called) ? `move ${called}` : 'nothing'
-  return { move, line: inputsOn(code).find(input => input >= inputs), instead }
+  const line = inputsOn(code).find(input => input >= inputs)
+  if (called === undefined) return { move, line, instead: numbering.allOff === 'home' ? 'home' : 'nothing' }
+  return { move, line, instead: used.has(called) ? `move ${called}` : 'nothing' }
 }
 
 /** At most four are told one by one; the list in the values is whole. */
 function stories(ignored: readonly Ignored[]): string {
-  const told = ignored.filter(({ line }) => line !== undefined)
+  const told = ignored.flatMap(({ move, instead, line }) => line === undefined ? [] : [`${move} without its line ${line + 1} calls ${instead}`])
   if (told.length === 0) return ''
-  const parts = told.slice(0, 4).map(({ move, instead, line }) => `${move} without its line ${line! + 1} calls ${instead}`)
-  return `; ${inWords(told.length > 4 ? [...parts, `so on for ${told.length - 4} more`] : parts)}`
+  return `; ${inWords(told.length > 4 ? [...told.slice(0, 4), `so on for ${told.length - 4} more`] : told)}`
 }

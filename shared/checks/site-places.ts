@@ -62,8 +62,8 @@ function takenInstead(move: Move, name: MoveFieldName, setup: Setup): { value: n
 }
 
 function extraPlace({ extra }: Content, key: string): Place[] | undefined {
-  if (!Object.hasOwn(extra, key)) return undefined
-  const held = extra[key]!
+  const held = Object.hasOwn(extra, key) ? extra[key] : undefined
+  if (held === undefined) return undefined
   return [typeof held === 'object'
     ? { at: atExtra(key), words: key, value: held.value, unit: held.unit }
     : { at: atExtra(key), words: key, value: held }]

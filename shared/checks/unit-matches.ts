@@ -17,8 +17,9 @@ export const unitMatches: Rule = {
 }
 
 function kind({ content, axis }: JudgeInput): CheckResult[] {
-  return content.axisKind === axis.axisKind ? [] : [stop(['/axisKind'],
-    `The file is for a ${content.axisKind} axis, this axis is ${axis.axisKind}.`, { file: content.axisKind, registered: axis.axisKind })]
+  if (content.axisKind === axis.axisKind) return []
+  return [stop(['/axisKind'], `The file is for a ${content.axisKind} axis, this axis is ${axis.axisKind}.`,
+    { file: content.axisKind, registered: axis.axisKind })]
 }
 
 function model({ unit, registered }: JudgeInput): CheckResult[] {
@@ -32,7 +33,7 @@ function model({ unit, registered }: JudgeInput): CheckResult[] {
 
 /** What stands before the first separator of a type code: the build without stroke, voltage and options. */
 function stem(model: string): string {
-  return model.split(/[-/._ ]/, 1)[0]!
+  return model.replace(/[-/._ ].*$/, '')
 }
 
 function firmware({ unit, knownGood, content }: JudgeInput): CheckResult[] {

@@ -59,7 +59,7 @@ function leadingIn(rows: readonly Row[], looping: ReadonlySet<Row>): Row[] {
   for (const { move: { next } } of ready) {
     const follower = next === undefined ? undefined : byNumber.get(next)
     if (!follower || looping.has(follower)) continue
-    const left = waitingFor.get(follower.move.move)! - 1
+    const left = (waitingFor.get(follower.move.move) ?? 0) - 1
     waitingFor.set(follower.move.move, left)
     if (left === 0) ready.push(follower)
   }
@@ -71,8 +71,8 @@ function onceRound(loop: readonly Row[], reached: ReadonlyMap<number, Reach>): r
   const fixed = loop.findIndex(({ move }) => move.kind !== 'relative')
   if (fixed >= 0) return turned(loop, fixed)
   const entered = loop.findIndex(({ move }) => {
-    const start = reached.get(move.move)!
-    return start.open || start.low <= start.high
+    const start = reached.get(move.move)
+    return start !== undefined && (start.open || start.low <= start.high)
   })
   const round = turned(loop, Math.max(0, entered))
   const comesBack = loop.reduce((net, { move }) => plus(net, move.target), 0) === 0

@@ -34,6 +34,11 @@ describe('blocksKnownGood', () => {
     expect(brief(pressing({ softLimitMin: 0 }))).toEqual(['unknown travel-span', 'unknown target-inside', 'unknown press-path'])
   })
 
+  it('still asks for the rest where the start is not all that is missing', () => {
+    const result: CheckResult = { rule: 'press-path', level: 'unknown', at: [], message: '', values: {}, missing: ['start of press', 'softLimitMin'] }
+    expect(blocksKnownGood({ ruleSet: '1', results: [result], judged: [], notApplicable: [] }, ['press'])).toEqual([result])
+  })
+
   it('lets the unknown of a rule that never stops pass, and not one of a rule that is gone', () => {
     const unknown = (rule: string): CheckResult => ({ rule, level: 'unknown', at: [], message: '', values: {}, missing: ['x'] })
     const judgement = { ruleSet: '0', results: [unknown('select-reach'), unknown('gone')], judged: [], notApplicable: [] }

@@ -3,7 +3,7 @@ import { placesOf } from '../../../../shared/checks/site-places'
 import { absolute, linear, press, rotary, unused } from '../../../support/check-input'
 
 const content = linear({ jogSpeed: 50, pressSpeed: 12 }, [absolute(3, 10), press(4, 1, 2, { pressSpeed: undefined }), unused(5)],
-  { zones: [{ zone: 2, from: 1, to: 2 }], extra: { Ramp: { value: 3, unit: 'counts' }, 'a/b': true } })
+  { zones: [{ zone: 2, from: 1, to: 2 }], extra: { 'Ramp': { value: 3, unit: 'counts' }, 'a/b': true } })
 
 describe('placesOf', () => {
   it('finds setup values, rows in use, zones and extra keys', () => {

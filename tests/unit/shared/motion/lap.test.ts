@@ -21,6 +21,8 @@ describe('lapThatLeaves', () => {
     expect(lapThatLeaves(step, 0, 198)).toBe(4)
     expect(lapThatLeaves(step, 0, 200)).toBe(5)
     expect(lapThatLeaves(step, 0, 198, 100)).toBe(2)
+    expect(lapThatLeaves(step, 0, 198, 148)).toBe(2)
+    expect(lapThatLeaves(step, 0, 198, 148.000001)).toBe(1)
     expect(lapThatLeaves(step, 0, 198, 190)).toBe(1)
     expect(lapThatLeaves({ net: -50, low: -50, high: 0 }, 0, 198)).toBe(4)
   })

@@ -20,7 +20,7 @@ export function plain(value: number): string {
 export function about(value: number, against?: number): string {
   for (let digits = 4; digits < 17; digits++) {
     const cut = significant(value, digits)
-    if (against === undefined || value === against || cut !== significant(against, digits)) return plain(cut)
+    if (against === undefined || cut !== significant(against, digits)) return plain(cut)
   }
   return plain(value)
 }

@@ -27,6 +27,10 @@ describe('lapThatLeaves', () => {
     expect(lapThatLeaves({ net: -50, low: -50, high: 0 }, 0, 198)).toBe(4)
   })
 
+  it('counts 0.1 four times into 0.4, though 0.3 / 0.1 is 2.9999999999999996 in doubles', () => {
+    expect(lapThatLeaves({ net: 0.1, low: 0, high: 0.1 }, 0, 0.4)).toBe(5)
+  })
+
   it('is the first where a round goes beyond the other end or does not fit at all', () => {
     expect(lapThatLeaves({ net: 10, low: -30, high: 60 }, 0, 198, 20)).toBe(1)
     expect(lapThatLeaves({ net: 10, low: -30, high: 60 }, 0, 80)).toBe(1)

@@ -1,0 +1,130 @@
+import type { Actor, PersonActor, TokenActor } from '../server/database/actor'
+import type { Vault } from '../server/database/client'
+import { listFittings } from '../server/services/axes/read-axis'
+import { markKnownGood, markNone } from '../server/services/known-good/mark'
+import { makeRule } from '../server/services/rules/rules'
+import { endFitting, openFitting } from '../server/services/units/fittings'
+import { listUnits } from '../server/services/units/units'
+import { storeUpload, type UploadOutcome } from '../server/services/uploads/store-upload'
+import { voidVersion } from '../server/services/versions/void-version'
+import { fixtureBytes, settingsFile, type Act, type FileJson, type Patch, type Plant } from './demo-files'
+
+export interface Cast {
+  readonly people: Record<string, PersonActor>
+  readonly station: TokenActor
+  readonly axisIds: Record<string, number>
+  readonly machineIds: Record<string, number>
+  readonly siteId: number
+}
+
+export interface Told { versions: number, sightings: number, tray: number, marks: number }
+
+const day = 86_400_000
+
+/** Plays every act in its order, the clock set to each; what an act refuses ends the filling. */
+export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonly Act[], today: Date, setClock: (at: number) => void): Told {
+  const told: Told = { versions: 0, sightings: 0, tray: 0, marks: 0 }
+  const files: Record<string, FileJson> = {}
+  const newest: Record<string, number> = {}
+  const actor = (key: string): Actor => key === 'station' ? cast.station : person(cast, key)
+  const axisId = (tag: string) => cast.axisIds[tag] ?? fail(`no axis ${tag}`)
+
+  const send = (file: FileJson, at: number, by: Actor, tag: string, fields: Parameters<typeof storeUpload>[3]) => {
+    const sent = { ...file, exportedAt: new Date(at).toISOString().replace('.000Z', 'Z') }
+    const name = `${tag.toLowerCase()}.json`
+    return storeUpload(vault, by, { bytes: Buffer.from(JSON.stringify(sent, null, 2)), name }, fields)
+  }
+  const note = (outcome: UploadOutcome, tag: string, expected: readonly UploadOutcome['outcome'][]) => {
+    if (!expected.includes(outcome.outcome)) fail(`${tag}: ${outcome.outcome}, ${JSON.stringify(outcome).slice(0, 400)}`)
+    if (outcome.outcome === 'version') {
+      told.versions += 1
+      newest[tag] = outcome.answer.version.id
+    }
+    if (outcome.outcome === 'sighting') told.sightings += 1
+    if (outcome.outcome === 'tray' || outcome.outcome === 'unreadable') told.tray += 1
+  }
+
+  for (const act of story) {
+    const at = instantOf(today, act)
+    if (at > today.getTime()) continue
+    setClock(at)
+    switch (act.act) {
+      case 'nightly': {
+        for (const { tag } of plant.axes) {
+          const file = files[tag]
+          if (file && !act.skip?.includes(tag)) note(send(file, at - 60_000, cast.station, tag, {}), tag, ['sighting'])
+        }
+        break
+      }
+      case 'upload': {
+        if ('file' in act) {
+          note(storeUpload(vault, actor(act.by), { bytes: fixtureBytes(act.file), name: act.file }, { occasion: act.occasion }), act.file, ['tray', 'unreadable'])
+          break
+        }
+        const before = files[act.axis] ?? settingsFile(act.axis)
+        const file = patched(before, act.patch)
+        const captured = act.capturedDaysAgo === undefined ? at - 120_000 : at - (act.capturedDaysAgo - act.daysAgo) * day
+        const { occasion, reason, workOrder, changedBy, allowedBy } = act
+        const kept = newest[act.axis]
+        note(send(file, captured, actor(act.by), act.axis, { occasion, ...present({ reason, workOrder, changedBy, allowedBy }) }), act.axis, ['version'])
+        if (act.capturedDaysAgo !== undefined && kept !== undefined) newest[act.axis] = kept
+        files[act.axis] = act.undo ? before : file
+        break
+      }
+      case 'mark': {
+        markKnownGood(vault, person(cast, act.by), newest[act.axis] ?? fail(`nothing of ${act.axis} to mark`), { meaning: act.meaning ?? 'approved', note: act.note })
+        told.marks += 1
+        break
+      }
+      case 'none': {
+        markNone(vault, person(cast, act.by), axisId(act.axis), { meaning: 'reviewed', note: act.note })
+        break
+      }
+      case 'void': {
+        voidVersion(vault, person(cast, act.by), newest[act.axis] ?? fail(`nothing of ${act.axis} to void`), act.reason)
+        break
+      }
+      case 'fit': {
+        const open = listFittings(vault, axisId(act.axis)).items.find(fitting => fitting.to === null) ?? fail(`${act.axis} has no unit`)
+        endFitting(vault, person(cast, act.by), open.id, { at: new Date(at - 60_000).toISOString(), unitState: act.oldState })
+        const unit = listUnits(vault, person(cast, act.by), { search: act.serial }).items[0] ?? fail(`no unit ${act.serial}`)
+        openFitting(vault, person(cast, act.by), { axisId: axisId(act.axis), unitId: unit.id, at: new Date(at).toISOString() })
+        break
+      }
+      case 'rule': {
+        const { machine, ...rule } = act.rule
+        makeRule(vault, person(cast, act.by), { ...rule, scopeId: cast.machineIds[machine] ?? fail(`no machine ${machine}`) })
+        break
+      }
+    }
+  }
+  return told
+}
+
+function fail(why: string): never {
+  throw new Error(`The demo's story does not hold: ${why}`)
+}
+
+const person = (cast: Cast, key: string): PersonActor => cast.people[key] ?? fail(`nobody is ${key}`)
+
+/** Local time of the machine that shows the demo, so that "4:10 this night" is this night there. */
+function instantOf(today: Date, { daysAgo, time }: Act): number {
+  const [hours = 0, minutes = 0] = time.split(':').map(Number)
+  return new Date(today.getFullYear(), today.getMonth(), today.getDate() - daysAgo, hours, minutes).getTime()
+}
+
+function present<Fields extends Record<string, string | undefined>>(fields: Fields): { [Key in keyof Fields]?: string } {
+  return Object.fromEntries(Object.entries(fields).filter(([, value]) => value)) as { [Key in keyof Fields]?: string }
+}
+
+function patched(file: FileJson, patch: Patch | undefined): FileJson {
+  if (!patch) return file
+  const insert = patch.insert
+  const changed = file.moves.map(move => ({ ...move, ...patch.moves?.[String(move.move)] }))
+  const moves = insert === undefined
+    ? changed
+    : [...changed.map(move => ({ ...move, move: shifted(move.move, insert.before), ...(move.next === undefined ? {} : { next: shifted(move.next, insert.before) }) })), insert.move]
+  return { ...file, unit: { ...file.unit, ...patch.unit }, setup: { ...file.setup, ...patch.setup }, moves: moves.sort((a, b) => a.move - b.move) }
+}
+
+const shifted = (move: number, from: number) => move >= from ? move + 1 : move

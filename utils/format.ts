@@ -40,11 +40,18 @@ export function sayValue(value: ExtraValue | null | undefined, unit = ''): strin
   return [shown.whole + shown.fraction, shown.unit].filter(Boolean).join(' ')
 }
 
-const parts = (instant: Date, timeZone: string) => Object.fromEntries(
-  new Intl.DateTimeFormat('en-GB', {
+/** Making a formatter costs more than a row of the board does, so each zone has one. */
+const formatters = new Map<string, Intl.DateTimeFormat>()
+
+function formatterOf(timeZone: string): Intl.DateTimeFormat {
+  const made = formatters.get(timeZone) ?? new Intl.DateTimeFormat('en-GB', {
     timeZone, hourCycle: 'h23', weekday: 'short', day: 'numeric', month: 'short', year: 'numeric', hour: '2-digit', minute: '2-digit', second: '2-digit',
-  }).formatToParts(instant).map(part => [part.type, part.value]),
-)
+  })
+  formatters.set(timeZone, made)
+  return made
+}
+
+const parts = (instant: Date, timeZone: string) => Object.fromEntries(formatterOf(timeZone).formatToParts(instant).map(part => [part.type, part.value]))
 
 function zonePart(instant: Date, timeZone: string, locale: string, timeZoneName: 'short' | 'shortOffset'): string {
   const found = new Intl.DateTimeFormat(locale, { timeZone, timeZoneName }).formatToParts(instant).find(part => part.type === 'timeZoneName')
@@ -87,7 +94,6 @@ function shortMonth(month: string | undefined): string {
 }
 
 const minute = 60_000
-const hour = 60 * minute
 
 /** '5 min', '3 h', '1 d 1 h', '239 d': a length of time in the two largest terms that still matter. */
 export function formatSpan(milliseconds: number): string {

@@ -23,11 +23,11 @@ export function countFilters(axes: readonly BoardAxis[]): Record<Filter, number>
   return counts
 }
 
-/** What a row says, in one lower-case line that is made once and searched as one types. */
+/** What a row says in lower case, a cell a line, made once and searched as one types. */
 export interface Searchable { readonly axis: BoardAxis, readonly words: string }
 
 export function searchable(axes: readonly BoardAxis[]): Searchable[] {
-  return axes.map(axis => ({ axis, words: wordsOf(axis).toLowerCase() }))
+  return axes.map(axis => ({ axis, words: `\n${wordsOf(axis).toLowerCase()}\n` }))
 }
 
 function wordsOf(axis: BoardAxis): string {
@@ -35,9 +35,9 @@ function wordsOf(axis: BoardAxis): string {
   return [axis.tag, axis.machine, axis.line, axis.site, axis.role, axis.serial, axis.model, state, axis.knownGood && `v${axis.knownGood.number}`].filter(Boolean).join('\n')
 }
 
-/** The axes under a filter whose row holds every word of the text, wherever in the row it stands. */
+/** The axes under a filter whose row holds every word of the text, wherever it stands; words in quotes are one whole cell. */
 export function findAxes(rows: readonly Searchable[], text: string, filter: Filter): BoardAxis[] {
-  const wanted = text.toLowerCase().split(/\s+/).filter(Boolean)
+  const wanted = [...text.toLowerCase().matchAll(/"([^"]+)"|[^\s"]+/g)].map(match => (match[1] ? `\n${match[1]}\n` : match[0]))
   const found: BoardAxis[] = []
   for (const { axis, words } of rows) if (fits(axis, filter) && wanted.every(word => words.includes(word))) found.push(axis)
   return found

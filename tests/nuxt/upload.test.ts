@@ -1,7 +1,7 @@
 import { mockNuxtImport, mountSuspended, registerEndpoint } from '@nuxt/test-utils/runtime'
 import { flushPromises } from '@vue/test-utils'
 import { strToU8 } from 'fflate'
-import { createError, getQuery, getRequestHeader, setResponseStatus, type H3Event } from 'h3'
+import { getQuery, getRequestHeader, setResponseStatus, type H3Event } from 'h3'
 import { beforeEach, describe, expect, it, vi } from 'vitest'
 import UploadPage from '~/pages/upload.vue'
 import type { JudgingContext } from '#shared/api/uploads'
@@ -84,12 +84,13 @@ describe('the upload page', () => {
   })
 
   it('keeps what was refused and sends it again with the same key', async () => {
-    answer = () => {
-      throw createError({ statusCode: 507, data: { type: 'about:blank', title: 'Disk full', status: 507, detail: 'The disk is full.', code: 'disk-full' } })
+    answer = (event) => {
+      setResponseStatus(event, 507)
+      return { type: 'about:blank', title: 'Disk full', status: 507, detail: 'The disk is full.', code: 'disk-full' }
     }
     const page = await pageWith(file('seen.json', settings('S-1', 40)))
     await press(page, 'Send 1 file')
-    await vi.waitFor(() => expect(page.text()).toContain('not stored'))
+    await vi.waitFor(() => expect(page.text()).toContain('disk is full'))
     answer = () => ({ sighting: { id: 7, at: '2026-12-01T07:20:00.000Z' }, version: { id: 80, axisTag: 'CAS-01.Z', number: 8 } })
     await press(page, 'Send again what was not stored')
     await vi.waitFor(() => expect(page.text()).toContain('seen again'))

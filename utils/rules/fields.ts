@@ -1,6 +1,6 @@
 import type { Rule } from '#shared/api/places'
 import { setupField, setupFieldNames, setupGroups } from '#shared/settings/fields'
-import { moveFieldNames, moveFields, zoneFieldNames, zoneFields } from '#shared/settings/move-fields'
+import { moveFieldNames, moveFields, zoneFieldNames, zoneFields, type RowField } from '#shared/settings/move-fields'
 import type { FormField, Option } from '../forms/fields'
 import { sayValue } from '../format'
 
@@ -27,8 +27,11 @@ function setupRuleField(name: string): RuleField {
 }
 
 const inTableOrder = setupGroups.flatMap(group => setupFieldNames.filter(name => setupField(name)?.group === group))
-const ofMoves = moveFieldNames.filter(name => moveFields[name].type === 'number').map((name): RuleField => ({ name: `move.${name}`, label: `each move: ${moveFields[name].label}`, type: 'number', unit: 'unit' in moveFields[name] ? bothUnits(moveFields[name].unit) : '', choices: [] }))
-const ofZones = zoneFieldNames.map((name): RuleField => ({ name: `zone.${name}`, label: `each zone: ${zoneFields[name].label}`, type: 'number', unit: bothUnits(zoneFields[name].unit), choices: [] }))
+function rowRuleField(section: 'move' | 'zone', name: string, field: RowField): RuleField {
+  return { name: `${section}.${name}`, label: `each ${section}: ${field.label}`, type: 'number', unit: bothUnits(field.unit), choices: [] }
+}
+const ofMoves = moveFieldNames.filter(name => moveFields[name].type === 'number').map(name => rowRuleField('move', name, moveFields[name]))
+const ofZones = zoneFieldNames.map(name => rowRuleField('zone', name, zoneFields[name]))
 
 /** Every field that a rule can narrow, in the order of the tables. */
 export const ruleFields: readonly RuleField[] = [...inTableOrder.map(setupRuleField), ...ofMoves, ...ofZones]

@@ -1,0 +1,34 @@
+import type { Vault } from '../../server/database/client'
+import { smallPlant } from './plant'
+
+const hash = (digit: string) => digit.repeat(64)
+const at = '2026-03-03T06:10:00.000Z'
+
+/** One row in every table that must never change, written past the services; answers what to name them by. */
+export function oneOfEach(vault: Vault): Record<string, { where: string, column: string }> {
+  const { planner, axisId, unitId } = smallPlant(vault)
+  const by = planner.id
+  vault.sqlite.exec(`
+    INSERT INTO nameplate_revision VALUES (1, 'HL40-200V', 1, '{}', '${at}', ${by});
+    INSERT INTO rule VALUES (1, 'axis', ${axisId}, 'thrustLimit', NULL, 40, NULL, 'lids crack', '${at}', ${by});
+    INSERT INTO rule_end VALUES (1, '${at}', ${by}, 'new lids');
+    INSERT INTO upload VALUES (1, '${hash('a')}', 3, x'00', 'json', 'lid.json', '${at}', ${by}, NULL, '127.0.0.1');
+    INSERT INTO content VALUES (1, '${hash('b')}', 3, x'00');
+    INSERT INTO version (id, axis_id, number, unit_id, upload_id, content_id, occasion, captured_at, received_at, stored_by, engine, copy_hash, scribe_code, model, harm, motion, text, file)
+      VALUES (1, ${axisId}, 1, ${unitId}, 1, 1, 'routine', '${at}', '${at}', ${by}, 'e', '${hash('c')}', 'AB12', 'HL40-200V', 0, 0, 0, '{}');
+    INSERT INTO version_void VALUES (1, '${at}', ${by}, 'wrong axis');
+    INSERT INTO sighting VALUES (1, ${axisId}, 1, '${hash('a')}', NULL, '${at}', '${at}', ${by}, NULL, '127.0.0.1');
+    INSERT INTO change (version_id, seq, section, field, at, weight) VALUES (1, 0, 'setup', 'thrustLimit', '/setup/thrustLimit', 'harm');
+    INSERT INTO check_set VALUES (1, 1, '1', 1, '${at}', '[]', '[]', 0, 0, 0, 0);
+    INSERT INTO check_result VALUES (1, 0, 'travel-span', 'stop', '[]', 'm', '{}', NULL);
+    INSERT INTO tray (id, upload_id, problem, detail) VALUES (1, 1, 'unreadable', 'd');
+    INSERT INTO tray_settled VALUES (1, 'discarded', '${at}', ${by}, 'r', NULL, NULL);
+    INSERT INTO known_good VALUES (1, ${axisId}, 1, '${at}', ${by}, 'approved', NULL);`)
+  return {
+    nameplate_revision: { where: 'id = 1', column: 'nameplate' }, rule: { where: 'id = 1', column: 'reason' }, rule_end: { where: 'rule_id = 1', column: 'reason' },
+    upload: { where: 'id = 1', column: 'name' }, content: { where: 'id = 1', column: 'size' }, version: { where: 'id = 1', column: 'reason' },
+    version_void: { where: 'version_id = 1', column: 'reason' }, sighting: { where: 'id = 1', column: 'name' }, change: { where: 'version_id = 1', column: 'after' },
+    check_set: { where: 'id = 1', column: 'rule_set' }, check_result: { where: 'check_set_id = 1', column: 'message' }, tray: { where: 'id = 1', column: 'detail' },
+    tray_settled: { where: 'tray_id = 1', column: 'reason' }, known_good: { where: 'id = 1', column: 'note' }, log: { where: 'seq = 0', column: 'leaf' },
+  }
+}

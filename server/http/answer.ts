@@ -19,3 +19,7 @@ export class FileAnswer {
 export function file(body: Buffer | string, mediaType: string, { name = null, etag = null }: { name?: string | null, etag?: string | null } = {}): FileAnswer {
   return new FileAnswer(typeof body === 'string' ? Buffer.from(body, 'utf8') : body, mediaType, name, etag)
 }
+
+/** A kept file as its service hands it out: for download, and known by its bytes. */
+export const handOut = ({ bytes, mediaType, name, etag }: { bytes: Buffer, mediaType: string, name: string, etag: string }): FileAnswer =>
+  new FileAnswer(bytes, mediaType, name, etag)

@@ -31,6 +31,7 @@ const answers: Readonly<Record<RefusalCode | FileBodyCode | 'not-canonical', rea
   'marked': [409, 'Marked known-good'],
   'cautions-unread': [409, 'Cautions not acknowledged'],
   'no-known-good': [409, 'Nothing to restore'],
+  'forces-differ': [409, 'Percentages mean other forces'],
   'axis-kind': [409, 'Another kind of axis'],
   'not-fitted': [409, 'Not fitted'],
   'fitted': [409, 'Still fitted'],

@@ -2,6 +2,7 @@ import { type AxisKind, type ReadSettings, type SettingsFile, type UnitIdentity,
 import type { RawNode, RawObject } from './raw'
 import { type Reading, type Slots, isNotSet, keyTable, sortIntoSlots } from './reading'
 import { contentOf } from './content'
+import { serialToBeWritten } from './identity'
 import { maxExtra, maxReadings, readExtra } from './read-extra'
 import { readMoves } from './read-moves'
 import { readZones } from './read-rows'
@@ -103,7 +104,10 @@ function readIdentity(reading: Reading, node: RawObject | undefined, root: RawOb
     const value = slots[unitTable.index.get(key) as number]
     if (value === undefined) continue
     const read = key === 'channel' ? readWhole(reading, value, '/unit/channel', 0, maxChannel, 'number-range') : readText(reading, value, `/unit/${key}`, textRules[key])
-    if (read !== undefined) identity[key] = read
+    if (read === serialToBeWritten && key === 'serial') {
+      reading.problems.addValue('missing', '/unit/serial', value, `serial is missing: write the serial of the unit in the place of ${serialToBeWritten}.`)
+    }
+    else if (read !== undefined) identity[key] = read
   }
   for (const key of ['serial', 'model'] as const) {
     if (slots[unitTable.index.get(key) as number] === undefined) missing(reading, `/unit/${key}`, node ?? root, `the ${key} of the unit belongs here`)

@@ -3,9 +3,6 @@ import { setupFieldNames } from '#shared/settings/fields'
 import type { Nameplate } from '#shared/settings/nameplate'
 import { schemaName, type Content, type SettingsFile, type Setup, type UnitIdentity } from '#shared/settings/types'
 
-/** Stands where the serial of the unit is still to be written; the reader of the format refuses it. */
-export const serialToBeWritten = 'TO-BE-WRITTEN'
-
 /** The unit that the kit is for. */
 export interface KitUnit {
   readonly identity: UnitIdentity
@@ -42,6 +39,12 @@ function without(record: object, keys: readonly string[]): object {
 /** What 100 % of thrust or torque means on this model, in N or N·m; undefined where the nameplate does not say. */
 export function forceBaseOf(nameplate: Nameplate | undefined): number | undefined {
   return nameplate?.forceBase === 'peak-thrust' ? nameplate.peakThrust : nameplate?.ratedThrust
+}
+
+/** The bases of two models where both are known and a percentage means other newtons on each; undefined where they agree or cannot be told. */
+export function differingBases(source: KitSource, unit: KitUnit): { readonly from: number, readonly to: number } | undefined {
+  const [from, to] = [forceBaseOf(source.nameplate), forceBaseOf(unit.nameplate)]
+  return from === undefined || to === undefined || from === to ? undefined : { from, to }
 }
 
 const forceFields = ['homingForceLimit', 'thrustLimit', 'thrustLimitPositive', 'thrustLimitNegative', 'overloadLevel'] as const

@@ -1,0 +1,4 @@
+import { defineRoute } from '#server/http/route'
+import { readBoard } from '#server/services/board/board'
+
+export default defineRoute('GET /api/board', ({ actor, vault }) => readBoard(vault, actor))

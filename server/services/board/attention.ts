@@ -1,0 +1,52 @@
+import type { Attention } from '#shared/api/board'
+import { readJudgement } from '#server/database/check/queries'
+import type { SiteBounds } from '#server/database/actor'
+import type { AxisListRow } from '#server/database/axis-state/list'
+import type { VaultDb } from '#server/database/prepared'
+import { countWaiting, waitingGroups } from '#server/database/tray/queries'
+import { overdueSince } from '../axes/overdue'
+
+type Item = Attention['items'][number]
+
+/** How many of a group are named; the count says how many there are. */
+const named = 5
+
+interface Needing { readonly row: AxisListRow, readonly since: string | null }
+
+/** What needs someone now, worst kind first and the longest waiting first within a kind; kinds without a case are left out. */
+export function attention(db: VaultDb, sites: SiteBounds, rows: readonly AxisListRow[], now: string): Attention[] {
+  const overdue = (row: AxisListRow) => overdueSince(row.state?.lastUploadAt ?? null, row.axis.uploadEveryHours, now)
+  const group = (kind: Attention['kind'], applies: (row: AxisListRow) => boolean, since: (row: AxisListRow) => string | null, text: (needing: Needing) => string): Attention => {
+    const needing = rows.filter(applies).map(row => ({ row, since: since(row) })).sort((a, b) => ((a.since ?? '') < (b.since ?? '') ? -1 : 1))
+    return { kind, count: needing.length, since: needing[0]?.since ?? null, items: needing.slice(0, named).map(each => itemOf(each, text(each))) }
+  }
+  return [
+    group('stop-check', ({ state }) => (state?.stop ?? 0) > 0, ({ current }) => current?.receivedAt ?? null, ({ row }) => firstStop(db, row)),
+    group('off-known-good', ({ state }) => state?.status === 'off', ({ state }) => state?.offSince ?? null, ({ row }) => offText(row)),
+    group('unmarked', ({ state }) => state?.status === 'unmarked', ({ current }) => current?.receivedAt ?? null, () => 'read, and no version is known-good'),
+    group('overdue', row => overdue(row) !== null, overdue, ({ row }) => `due every ${row.axis.uploadEveryHours} h`),
+    group('never-read', ({ state }) => (state?.status ?? 'never-read') === 'never-read', ({ axis }) => axis.madeAt, ({ row }) => (row.unit?.serial ? `unit ${row.unit.serial} fitted, never read` : 'no unit fitted')),
+    trayGroup(db, sites),
+  ].filter(({ count }) => count > 0)
+}
+
+function itemOf({ row, since }: Needing, text: string): Item {
+  return { axisId: row.axis.id, tag: row.axis.tag, versionId: row.current?.id ?? null, knownGoodId: row.marked?.id ?? null, text, since }
+}
+
+function firstStop(db: VaultDb, { current }: AxisListRow): string {
+  const stops = current ? readJudgement(db, current.id).results.filter(({ level }) => level === 'stop') : []
+  return `${stops[0]?.message ?? ''}${stops.length > 1 ? ` And ${stops.length - 1} more.` : ''}`
+}
+
+function offText({ state, marked }: AxisListRow): string {
+  const counts = ([['harm', state?.offHarm], ['motion', state?.offMotion], ['text', state?.offText]] as const).filter(([, count]) => count)
+  return `${counts.map(([weight, count]) => `${count} ${weight}`).join(', ')} against known-good v${marked?.number ?? '?'}`
+}
+
+function trayGroup(db: VaultDb, sites: SiteBounds): Attention {
+  const { count, since } = countWaiting(db, sites)
+  const items = count === 0 ? [] : waitingGroups(db, sites, 0, named).map(({ tray, upload, guessTag }): Item =>
+    ({ axisId: tray.guessAxisId, tag: guessTag ?? tray.serial ?? upload.name ?? `file ${tray.id}`, versionId: null, knownGoodId: null, text: tray.detail, since: upload.receivedAt }))
+  return { kind: 'tray', count, since, items }
+}

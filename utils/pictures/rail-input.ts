@@ -1,6 +1,7 @@
 import { isUnused } from '#shared/settings/move-fields'
 import type { Nameplate } from '#shared/settings/nameplate'
 import type { AxisKind, Content, Move, Zone } from '#shared/settings/types'
+import { startOf } from '../motion'
 import { hardStopsOf } from './travel'
 
 /** What one side of the rail shows: the rows that end at a place, and what bounds them. */
@@ -40,16 +41,15 @@ export interface RailInput {
   readonly lower?: RailSide
 }
 
-function directionOf(move: Move, index: number, moves: readonly Move[]): -1 | 0 | 1 {
+function directionOf(move: Move, moves: readonly Move[]): -1 | 0 | 1 {
   if (move.kind === 'press' && move.approach !== undefined) return Math.sign(move.target - move.approach) as -1 | 0 | 1
-  const caller = moves.find(other => other.next === move.move && other.kind !== 'relative')
-  const start = caller ?? moves.slice(0, index).reverse().find(other => other.kind !== 'relative' && !isUnused(other))
+  const start = startOf(move, moves)
   return start ? Math.sign(move.target - start.target) as -1 | 0 | 1 : 0
 }
 
 export function railSideOf(content: Content, name: string, changed: ReadonlySet<number> = new Set()): RailSide {
   const used = content.moves.filter(move => !isUnused(move))
-  const placed = used.map((move, index) => ({ move, direction: directionOf(move, index, used) })).filter(({ move }) => move.kind !== 'relative')
+  const placed = used.map(move => ({ move, direction: directionOf(move, used) })).filter(({ move }) => move.kind !== 'relative')
   const { softLimitMin, softLimitMax, softLimitsActive } = content.setup
   return {
     name,

@@ -70,8 +70,6 @@ function arrange(side: RailSide, frame: Frame): Arranged {
   return { side, stack, lanes, reach, height: reach + rows * frame.step }
 }
 
-const sideTone = (half: 'upper' | 'lower', two: boolean): Tone => half === 'upper' && two ? 'before' : 'after'
-
 function pressOf(from: number, to: number, y: number, tone: Tone): RailPress {
   const way = Math.sign(to - from) || 1
   const arrow = Math.abs(to - from) >= 20
@@ -79,7 +77,7 @@ function pressOf(from: number, to: number, y: number, tone: Tone): RailPress {
   return { bar, head: arrow ? `M${to} ${y}l${-way * 9} -4.5v9z` : null, ringX: from, y, tone }
 }
 
-function drawHalf(arranged: Arranged, frame: Frame, edge: number, outward: -1 | 1, tone: Tone, outer: number): RailHalf {
+function drawHalf(arranged: Arranged, frame: Frame, edge: number, outward: -1 | 1, tone: Tone, outer: number, limitTone: Tone): RailHalf {
   const { side, stack, lanes, reach } = arranged
   const toneOf = (changed: boolean): Tone => changed ? tone : 'line'
   const cy = (row: number) => round(edge + outward * (reach + row * frame.step + frame.radius))
@@ -93,7 +91,7 @@ function drawHalf(arranged: Arranged, frame: Frame, edge: number, outward: -1 | 
   const folds = lanes.folded.map(knot => ({ from: Math.min(...knot.map(one => one.from)), to: Math.max(...knot.map(one => one.to)), moves: knot.map(one => one.move).sort((a, b) => a - b) }))
   const numbers: RailText[] = lanes.placed.map(({ item, lane }) => besideRing(item.from, item.to, laneY(lane), String(item.move), tone))
   const counts: RailText[] = folds.map(fold => besideRing(fold.from, fold.to, laneY(0), `${fold.moves.length}×`, tone))
-  const soft = softOf(side, frame, edge, outer, tone)
+  const soft = softOf(side, frame, edge, outer, limitTone)
   return {
     leaders: stack.placed.map(({ item, row }) => ({ tone: toneOf(item.changed), d: `M${item.px} ${edge}V${cy(row)}` })),
     feet: stack.placed.filter(({ item }) => item.kind === 'absolute' && item.direction !== 0).map(({ item }) => ({ tone: toneOf(item.changed), d: `M${item.px} ${edge + outward * 6}l${-item.direction * 8} -4v8z` })),
@@ -125,10 +123,13 @@ function softOf(side: RailSide, frame: Frame, edge: number, outer: number, tone:
   const meet = low && high && high.px - low.px < textWidth(low.text) + textWidth(high.text) + 16
   const named = limits.map(limit => ({ ...limit, way: meet ? -limit.way : limit.way }))
   return {
-    lines: named.map(limit => ({ tone: tone === 'before' ? 'before' : 'ink', d: `M${limit.px} ${outer}V${edge}` })),
+    lines: named.map(limit => ({ tone, d: `M${limit.px} ${outer}V${edge}` })),
     texts: named.map(limit => ({ x: limit.px + limit.way * 5, anchor: limit.way > 0 ? 'start' : 'end', y: outer + 4, text: limit.text, tone: 'line' })),
   }
 }
+
+const sameLimits = (one: RailSide, other: RailSide) =>
+  one.softMin === other.softMin && one.softMax === other.softMax && one.limitsHeld === other.limitsHeld
 
 /** Lays the rail out for a width in pixels; the height follows from what stacks. */
 export function layoutRail(input: RailInput, width: number): RailLayout {
@@ -148,6 +149,7 @@ export function layoutRail(input: RailInput, width: number): RailLayout {
   const height = Math.round(lower ? bottom + lower.height + 26 : bottom + 14)
   const steps = scaleSteps(perUnit, input.axisKind, Math.max(textWidth(figure(round(input.low))), textWidth(figure(round(input.high)))) + 12)
   const ticks = scaleTicks(input.low, input.high, steps)
+  const limitsMoved = input.lower !== undefined && !sameLimits(input.upper, input.lower)
   const zones = zonesOf(input, frame, top, bottom)
   const ends = endsOf(input, frame, top, bottom)
   return {
@@ -157,8 +159,8 @@ export function layoutRail(input: RailInput, width: number): RailLayout {
     ticks: ticks.map(tick => `M${round(x(tick.at))} ${bottom}v-${tick.height}`).join(''),
     labels: scaleLabels(ticks, steps.label, at => round(x(at)), left, right), labelY: top + 12,
     halves: [
-      withName(drawHalf(upper, frame, top, -1, sideTone('upper', two), 20), input.upper.name, small ? { x: width / 2, y: 12, anchor: 'middle' } : { x: 0, y: top - 8, anchor: 'start' }, two ? 'before' : 'line'),
-      ...(lower ? [withName(drawHalf(lower, frame, bottom, 1, 'after', height - 20), lower.side.name, small ? { x: width / 2, y: height - 4, anchor: 'middle' } : { x: 0, y: bottom + 17, anchor: 'start' }, 'after')] : []),
+      withName(drawHalf(upper, frame, top, -1, two ? 'before' : 'after', 20, limitsMoved ? 'before' : 'ink'), input.upper.name, small ? { x: width / 2, y: 12, anchor: 'middle' } : { x: 0, y: top - 8, anchor: 'start' }, two ? 'before' : 'line'),
+      ...(lower ? [withName(drawHalf(lower, frame, bottom, 1, 'after', height - 20, limitsMoved ? 'after' : 'ink'), lower.side.name, small ? { x: width / 2, y: height - 4, anchor: 'middle' } : { x: 0, y: bottom + 17, anchor: 'start' }, 'after')] : []),
     ],
   }
 }

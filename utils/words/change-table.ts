@@ -1,6 +1,7 @@
 import type { CheckResult } from '#shared/checks/types'
 import type { FieldChange } from '#shared/diff/types'
 import { weights, type ExtraValue, type Weight } from '#shared/settings/types'
+import { sayValue } from '../format'
 import { differenceWords } from './difference'
 import { absentWord, changeWords, placeWords, valueWord } from './fields'
 import { checksByLine, meansOf, rowSummary, type MeansContext } from './means'
@@ -31,11 +32,12 @@ function shownValue(change: FieldChange, value: ExtraValue | undefined): ExtraVa
 function shownField(line: ChangeLine, context: MeansContext): Omit<ShownChange, 'checks'> {
   const { change } = line
   const words = changeWords(change, context)
-  const [before, after] = [shownValue(change, change.before), shownValue(change, change.after)]
+  const unit = words.unit && words.plusMinus ? `± ${words.unit}` : words.unit
+  const values = [shownValue(change, change.before), shownValue(change, change.after)]
+  const numeric = values.every(value => value === undefined || typeof value === 'number')
+  const [before, after] = numeric ? values : values.map(value => typeof value === 'number' ? sayValue(value, unit) : value)
   return {
-    key: line.key, weight: change.weight, label: words.label, place: placeWords(change), before, after,
-    unit: words.unit && words.plusMinus ? `± ${words.unit}` : words.unit,
-    numeric: [before, after].every(value => value === undefined || typeof value === 'number'),
+    key: line.key, weight: change.weight, label: words.label, place: placeWords(change), before, after, numeric, unit: numeric ? unit : '',
     difference: differenceWords(change), means: meansOf(change, context),
   }
 }

@@ -5,6 +5,7 @@ import { isUnused } from '#shared/settings/move-fields'
 import type { Nameplate } from '#shared/settings/nameplate'
 import type { Content, Move } from '#shared/settings/types'
 import { formatNumber } from '#shared/units/number'
+import { motionOf } from '../motion'
 import { forceBase, isForce, type WordContext } from './fields'
 
 /** Both contents, and what their words hang on. */
@@ -36,7 +37,7 @@ function forceMeans(change: FieldChange, context: MeansContext): string {
 }
 
 /** The press that follows a move in the table: its approach is what the move comes close to. */
-const pressAfter = (content: Content, move: number): Move | undefined => {
+export const pressAfter = (content: Content, move: number): Move | undefined => {
   const next = content.moves.find(other => other.move > move && !isUnused(other))
   return next?.kind === 'press' && next.approach !== undefined ? next : undefined
 }
@@ -76,6 +77,16 @@ function followMeans(change: FieldChange): string {
   return `Goes on with move ${String(change.after)}, went on with move ${String(change.before)}.`
 }
 
+/** How long the move takes, where its start is known; without what a jerk limit adds. */
+function timeMeans(change: FieldChange, context: MeansContext): string {
+  const row = change.row
+  const is = row === undefined ? undefined : motionOf(context.after, row, context.nameplate)
+  const was = is && motionOf(context.before, is.move.move, context.nameplateBefore ?? context.nameplate)
+  if (!is || !was || was.start.target !== is.start.target || is.move.kind !== was.move.kind) return ''
+  const reached = change.field === 'speed' && is.profile.peakSpeed < is.move.speed * (1 - 1e-9) ? ` The speed asked for is not reached: ${number(is.profile.peakSpeed, 1)} ${lengthUnit(context)}/s at most.` : ''
+  return `Move ${is.move.move} takes ${is.atLeast ? 'at least ' : ''}${number(is.seconds, 3)} s, was ${number(was.seconds, 3)} s.${reached}`
+}
+
 /** A default that is written out, or no longer is, and comes to the same motion. */
 const sameMotion: Readonly<Record<string, string>> = {
   deceleration: 'the same braking as before', pressSpeed: 'the same press speed as before', turn: 'the same way round as before', softLimitsActive: 'the soft limits are held as before',
@@ -88,6 +99,9 @@ const ownSentences: Readonly<Record<string, (change: FieldChange, context: Means
   softLimitMin: (_, context) => travelMeans(context),
   softLimitMax: (_, context) => travelMeans(context),
   next: followMeans,
+  speed: timeMeans,
+  acceleration: timeMeans,
+  deceleration: timeMeans,
   softLimitsActive: change => change.after === false ? 'The drive no longer holds the soft limits.' : 'The drive holds the soft limits.',
   positiveDirection: () => 'Every position and every move now counts the other way.',
   homeOffset: (change, context) => change.delta === undefined ? '' : `Every position moves by ${number(change.delta)} ${lengthUnit(context)} against the machine.`,

@@ -1,0 +1,35 @@
+import { moveTime, profile, type Profile } from '#shared/motion/profile'
+import { isUnused } from '#shared/settings/move-fields'
+import type { Nameplate } from '#shared/settings/nameplate'
+import type { Content, Move } from '#shared/settings/types'
+
+/**
+ * The move whose end a move sets off from: the one that names it as its follower, else the one before it in the table.
+ * Undefined where neither ends at a place of its own.
+ */
+export function startOf(move: Move, moves: readonly Move[]): Move | undefined {
+  const places = moves.filter(other => other.kind !== 'relative' && !isUnused(other) && other.move !== move.move)
+  return places.find(other => other.next === move.move) ?? places.filter(other => other.move < move.move).at(-1)
+}
+
+export interface ShownMotion {
+  readonly move: Move
+  readonly profile: Profile
+  /** The move whose end it sets off from. */
+  readonly start: Move
+  readonly seconds: number
+  /** A jerk limit makes it longer than can be told. */
+  readonly atLeast: boolean
+  /** Seconds at the speed asked for; 0 where it is not reached. */
+  readonly cruise: number
+}
+
+/** The movement of a row from where it sets off; undefined for an unused row and where the start is not known. */
+export function motionOf(content: Content, number: number, nameplate?: Nameplate): ShownMotion | undefined {
+  const move = content.moves.find(other => other.move === number)
+  const start = move && startOf(move, content.moves)
+  if (!move || !start || isUnused(move)) return undefined
+  const motion = profile(move, start.target, { setup: content.setup, ...(nameplate?.stopsAtApproach !== undefined && { stopsAtApproach: nameplate.stopsAtApproach }) })
+  const cruise = motion.segments.filter(segment => segment.a === 0 && Math.abs(segment.v0) >= move.speed * (1 - 1e-9)).reduce((sum, segment) => sum + segment.t1 - segment.t0, 0)
+  return { move, profile: motion, start, ...moveTime(motion, content.setup), cruise }
+}

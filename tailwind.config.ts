@@ -19,4 +19,4 @@ export default {
     boxShadow: { none: 'none' },
     screens: { phone: { max: '760px' }, desk: '761px', wide: '1181px' },
   },
-} satisfies Config
+} satisfies Partial<Config>

@@ -16,11 +16,9 @@ export const addressOf = {
   nameplate: (id: number) => `/nameplates/${id}`,
   rules: () => '/rules',
   people: () => '/people',
-  admin: () => '/admin',
-  trail: () => '/trail',
   format: () => '/format',
   interface: () => '/interface',
-  help: () => '/help',
+  interface: () => '/interface',
 }
 
 /** Only an address of this application is gone back to after signing in. */

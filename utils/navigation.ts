@@ -18,13 +18,11 @@ export const entries: readonly Entry[] = [
   { to: addressOf.tray(), word: 'Tray', first: true, for: ['technician', 'planner'] },
   { to: addressOf.units(), word: 'Units', first: true },
   { to: addressOf.places(), word: 'Places' },
-  { to: addressOf.trail(), word: 'Trail', for: ['planner', 'auditor', 'admin'] },
   { to: addressOf.nameplates(), word: 'Nameplates', late: true },
   { to: addressOf.rules(), word: 'Rules', late: true },
   { to: addressOf.people(), word: 'People', late: true, for: ['admin'] },
-  { to: addressOf.admin(), word: 'Settings', late: true, for: ['admin'] },
   { to: addressOf.format(), word: 'Format', late: true },
-  { to: addressOf.help(), word: 'Help', late: true },
+  { to: addressOf.interface(), word: 'Interface', late: true },
 ]
 
 /** The entries of a person's work, among the pages there are. */

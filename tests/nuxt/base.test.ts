@@ -51,6 +51,11 @@ describe('a problem', () => {
     expect(shown.emitted('again')).toHaveLength(1)
   })
 
+  it('ends the title and does not say it twice', async () => {
+    const problem = new ApiProblem({ ...full.problem, title: 'E-mail or password is wrong', detail: 'E-mail or password is wrong.' })
+    expect((await mountSuspended(BaseProblem, { props: { problem } })).text()).toBe('E-mail or password is wrong.')
+  })
+
   it('names the place and what was probably meant', async () => {
     const problem = new ApiProblem({ ...full.problem, errors: [{ at: '/setup/thrustLimt', line: 12, column: 5, code: 'key-unknown', message: 'thrustLimt is no field.', meant: 'thrustLimit' }], more: 4 })
     const lines = (await mountSuspended(BaseProblem, { props: { problem } })).findAll('li').map(line => line.text().replace(/\s+/g, ' '))

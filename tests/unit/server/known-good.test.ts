@@ -7,7 +7,7 @@ import { voidVersion } from '../../../server/services/versions/void-version'
 import type { UploadFields } from '../../../shared/api/uploads'
 import type { Problem } from '../../../shared/api/common'
 import { CodedError } from '../../../shared/errors/coded'
-import { day, minute, openPlant, settingsFile, start, type Plant } from '../../support/plant'
+import { day, minute, openPlant, settingsFile, start, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor

@@ -2,7 +2,7 @@ import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import type { PersonActor } from '../../../server/database/actor'
 import { storeUpload, type UploadOutcome } from '../../../server/services/uploads/store-upload'
 import type { UploadFields } from '../../../shared/api/uploads'
-import { day, hour, iso, minute, openPlant, settingsFile, start, type Plant } from '../../support/plant'
+import { day, hour, iso, minute, openPlant, settingsFile, start, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor

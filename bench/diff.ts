@@ -66,7 +66,7 @@ export async function measureDiff(): Promise<Figure[]> {
       figures.push(atMost(`flat difference, ${rows} moves, ${name}`, toMicrodiff(diffContents), change === inserted ? 1 : 0.15))
       if (rows === 256) figures.push(atMost(`renumbered difference, ${rows} moves, ${name}`, toMicrodiff(diffRenumbered), 2))
     }
-    figures.push(atMost(`said of a row inserted among ${rows}`, saidOf(before, inserted(before)), 2, 'runs and rows'))
+    figures.push(atMost(`said of a row inserted among ${rows}`, saidOf(before, stored(inserted(before))), 2, 'runs and rows'))
   }
   return figures
 }

@@ -17,9 +17,7 @@ export default defineNuxtModule({
       nitro.options.handlers = nitro.options.handlers.filter(({ route }) => route === undefined || !unwanted.has(route))
       nitro.hooks.hook('build:before', () => {
         const faults = routeFaults([...nitro.scannedHandlers, ...nitro.options.handlers])
-        const message = `The table of routes and the handlers disagree:\n${faults.join('\n')}`
-        if (faults.some(fault => fault.includes('not in the table'))) throw new Error(message)
-        if (faults.length > 0) nitro.logger.warn(message)
+        if (faults.length > 0) throw new Error(`The table of routes and the handlers disagree:\n${faults.join('\n')}`)
       })
     })
   },

@@ -10,7 +10,7 @@ import { sortedMoveKeys, sortedSetupNames } from './sorted-keys'
 
 const deepest = 1000
 const plainText = /^[\x20\x21\x23-\x5b\x5d-\x7e]*$/
-const loneSurrogate = /[\ud800-\udbff](?![\udc00-\udfff])|(?<![\ud800-\udbff])[\udc00-\udfff]/
+const loneSurrogate = /\p{Cs}/u
 
 function refuse(what: string): never {
   throw new CodedError('not-canonical', `${what} has no canonical form.`, { what })

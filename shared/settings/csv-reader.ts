@@ -77,6 +77,5 @@ function treeOf(records: readonly CsvRecord[], header: HeaderFound, decimal: Ret
 }
 
 function nonAsciiTexts(records: readonly CsvRecord[]): string[] {
-  // eslint-disable-next-line no-control-regex -- the whole of ASCII is meant
-  return [...new Set(records.flatMap(record => record.cells.filter(cell => /[^\x00-\x7f]/.test(cell))))]
+  return [...new Set(records.flatMap(record => record.cells.filter(cell => /\P{ASCII}/u.test(cell))))]
 }

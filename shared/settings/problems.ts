@@ -23,7 +23,7 @@ export class Problems {
 
   /** As `add`, and shows what stands at the spot. */
   addValue(code: FormatErrorCode, at: string, spot: Spot, message: string, meant?: string): void {
-    this.add(code, at, spot, message, { value: this.source.shown(spot), ...(meant === undefined ? {} : { meant }) })
+    this.add(code, at, spot, message, this.full ? {} : { value: this.source.shown(spot), ...(meant === undefined ? {} : { meant }) })
   }
 
   /** All that were added, kept or not. */

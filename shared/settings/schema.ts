@@ -10,7 +10,8 @@ import { type TextRule, textRules } from './text-rules'
 
 /*
  * The input shape of the JSON form, as it is published. What a schema cannot say (which fields a rotary axis has, what a press
- * needs, digits, NFC, rows used once) the reader judges: every file that is read fits the schema, not the other way round.
+ * needs, digits, NFC, rows used once) the reader judges. A file that is read fits the schema, unless only rounding brings a
+ * number into its range; not the other way round.
  */
 
 const unset = z.literal('').describe('Not set.')

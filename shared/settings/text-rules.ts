@@ -34,10 +34,9 @@ export const textRules = {
 export interface TextFault { readonly code: 'text-length' | 'text-character', readonly message: string }
 
 const plainAscii = /^[\x20-\x7e]*$/
-// eslint-disable-next-line no-control-regex -- control characters are what this refuses
-const refused = /[\u0000-\u001f\u007f-\u009f\u202a-\u202e\u2066-\u2069\ufeff]|[\ud800-\udbff](?![\udc00-\udfff])|(?<![\ud800-\udbff])[\udc00-\udfff]/
-// eslint-disable-next-line no-control-regex -- the same, with tab and line feed let through
-const refusedInLines = /[\u0000-\u0008\u000b-\u001f\u007f-\u009f\u202a-\u202e\u2066-\u2069\ufeff]|[\ud800-\udbff](?![\udc00-\udfff])|(?<![\ud800-\udbff])[\udc00-\udfff]/
+// Cc: control characters, Cs: surrogates that stand alone (a pair is one code point under the u flag).
+const refused = /[\p{Cc}\p{Cs}\u202a-\u202e\u2066-\u2069\ufeff]/u
+const refusedInLines = /(?![\t\n])[\p{Cc}\p{Cs}\u202a-\u202e\u2066-\u2069\ufeff]/u
 
 /** The text as it is kept (NFC), or what is wrong with it. */
 export function checkText(sent: string, rule: TextRule): string | TextFault {

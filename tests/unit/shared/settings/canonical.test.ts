@@ -20,7 +20,8 @@ const sha256 = (text: string) => createHash('sha256').update(text, 'utf8').diges
 const codeOf = (value: unknown) => {
   try {
     return `text ${canonicalJson(value)}`
-  } catch (error) {
+  }
+  catch (error) {
     return error instanceof CodedError ? error.code : String(error)
   }
 }
@@ -116,7 +117,8 @@ describe('canonicalText', () => {
     ].map((each) => {
       try {
         return canonicalText(each)
-      } catch (error) {
+      }
+      catch (error) {
         return error instanceof CodedError ? error.code : 'another error'
       }
     })

@@ -23,7 +23,7 @@ describe('the CSV form', () => {
   })
 
   it('is UTF-8 where it could be either', () => {
-    fc.assert(fc.property(fc.string({ unit: 'grapheme', minLength: 1 }).filter(text => !/^[sS]?\u0000|^\ufeff/.test(text)), (text) => {
+    fc.assert(fc.property(fc.string({ unit: 'grapheme', minLength: 1 }).filter(text => !['\0', 's\0', 'S\0', '\ufeff'].some(start => text.startsWith(start))), (text) => {
       const decoded = decodeCsv(utf8(text))
       return decoded.ok && decoded.text === text
     }))

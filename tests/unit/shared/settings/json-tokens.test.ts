@@ -22,7 +22,8 @@ function plain(node: RawNode, text: string): unknown {
 function outcome(text: string): { readonly value: unknown } | { readonly code: string, readonly offset: number } {
   try {
     return { value: plain(jsonTree(text), text) }
-  } catch (error) {
+  }
+  catch (error) {
     if (error instanceof TokenError) return { code: error.code, offset: error.offset }
     throw error
   }
@@ -31,7 +32,8 @@ function outcome(text: string): { readonly value: unknown } | { readonly code: s
 function parsed(text: string): { readonly value: unknown } | undefined {
   try {
     return { value: JSON.parse(text) as unknown }
-  } catch (error) {
+  }
+  catch (error) {
     if (error instanceof SyntaxError) return undefined
     throw error
   }

@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto'
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { CodedError } from '../../../../shared/errors/coded'
+import type { CodedError } from '../../../../shared/errors/coded'
 import { parseScribeCode, scribeCode } from '../../../../shared/settings/scribe'
 
 const hash = fc.string({ unit: fc.constantFrom(...'0123456789abcdef'), minLength: 64, maxLength: 64 })

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { CodedError } from '../../../../shared/errors/coded'
+import type { CodedError } from '../../../../shared/errors/coded'
 import { formatTimestamp, parseTimestamp } from '../../../../shared/settings/time'
 
 describe('parseTimestamp', () => {

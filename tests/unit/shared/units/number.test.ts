@@ -9,7 +9,8 @@ import {
 const codeOf = (act: () => unknown) => {
   try {
     act()
-  } catch (error) {
+  }
+  catch (error) {
     return error instanceof CodedError ? error.code : 'another error'
   }
   return 'no error'
@@ -64,7 +65,8 @@ describe('isNumberText', () => {
       let parsed: unknown
       try {
         parsed = JSON.parse(text)
-      } catch (error) {
+      }
+      catch (error) {
         if (!(error instanceof SyntaxError)) throw error
       }
       return isNumberText(text) === (typeof parsed === 'number')

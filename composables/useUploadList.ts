@@ -1,9 +1,9 @@
 import type { JudgingContext } from '#shared/api/uploads'
-import { readSettings } from '#shared/settings/read'
 import type { ReadSettings } from '#shared/settings/types'
 import { bytesInWords, mostBytesOfAll, mostBytesOfFile, mostFiles } from '~/utils/upload/limits'
 import type { ListedFile } from '~/utils/upload/model'
 import { examine, placeAxis, type Examined } from '~/utils/upload/place'
+import { readFile } from '~/utils/upload/read-file'
 import { runQueue } from '~/utils/upload/queue'
 import { isZip, unpack, type NamedBytes } from '~/utils/upload/unpack'
 
@@ -37,18 +37,18 @@ export function useUploadList() {
   }
 
   async function readOne(file: ListedFile): Promise<void> {
-    const outcome = readSettings(file.bytes, file.decimal ? { decimal: file.decimal } : {})
-    if (!outcome.ok) return store.setReading(file.id, { state: 'unreadable', errors: outcome.errors, more: outcome.more })
+    const read = readFile(file.bytes, file.decimal)
+    if ('state' in read) return store.setReading(file.id, read)
     try {
-      const context = await contextFor(outcome.value.file)
-      const reading = examine(file.id, file.name, outcome.value, context, new Date())
+      const context = await contextFor(read.file)
+      const reading = examine(file.id, file.name, read, context, new Date())
       if ('state' in reading) return store.setReading(file.id, reading)
       examined.set(file.id, reading)
       if (context.axis) placeAgain(context.axis.id)
     }
     catch (failure) {
       contexts.clear()
-      store.setReading(file.id, { state: 'unjudged', read: outcome.value, why: toProblem(failure).problem.detail })
+      store.setReading(file.id, { state: 'unjudged', read, why: toProblem(failure).problem.detail })
     }
   }
 

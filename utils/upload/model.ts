@@ -28,7 +28,7 @@ export interface Placed {
 
 export type Reading
   = | { readonly state: 'waits' }
-    | { readonly state: 'unreadable', readonly errors: readonly FormatError[], readonly more: number }
+    | { readonly state: 'unreadable', readonly errors: readonly FormatError[], readonly more: number, /** Saying which sign is the decimal one would help. */ readonly asksSign?: boolean }
     | { readonly state: 'unplaced', readonly read: ReadSettings, readonly problem: 'serial-unknown' | 'not-fitted' | 'axis-kind', readonly tag: string | null }
     | { readonly state: 'unjudged', readonly read: ReadSettings, readonly why: string }
     | { readonly state: 'twin', readonly of: string }
@@ -46,8 +46,6 @@ export interface ListedFile {
 /** How a change weighs on the page: a stop check or a watched change wants words. */
 export const watchedChanges = (reading: Placed): readonly FieldChange[] => reading.changes.filter(change => change.watched)
 export const stops = (reading: Placed): readonly CheckResult[] => reading.checks.filter(check => check.level === 'stop')
-
-export const isUnclear = (reading: Reading): boolean => reading.state === 'unreadable' && reading.errors.some(error => error.code === 'number-unclear')
 
 /** Version 1 is exempt: there is nothing that it changes. */
 export const wantsReason = (reading: Reading): reading is Placed => reading.state === 'placed' && reading.base !== null && watchedChanges(reading).length > 0

@@ -39,7 +39,7 @@ function edited(content: Content, count: number): Content {
 function inserted(content: Content): Content {
   const at = Math.floor(content.moves.length / 3)
   const row: Move = { move: at, label: 'New', kind: 'absolute', target: 77.25, speed: 333, acceleration: 1234 }
-  return { ...content, moves: [...content.moves.slice(0, at), row, ...content.moves.slice(at).map((move) => ({ ...move, move: move.move + 1 }))] }
+  return { ...content, moves: [...content.moves.slice(0, at), row, ...content.moves.slice(at).map(move => ({ ...move, move: move.move + 1 }))] }
 }
 
 /** Both as they come out of the database, no object shared. */
@@ -48,8 +48,8 @@ function stored(content: Content): Content {
 }
 
 const cases: readonly (readonly [name: string, change: (content: Content) => Content])[] = [
-  ['1 change', (content) => edited(content, 1)],
-  ['5 changes', (content) => edited(content, 5)],
+  ['1 change', content => edited(content, 1)],
+  ['5 changes', content => edited(content, 5)],
   ['a row inserted', inserted],
 ]
 
@@ -75,6 +75,6 @@ export async function measureDiff(): Promise<Figure[]> {
 function saidOf(before: Content, after: Content): number {
   const reading = diffRenumbered(before, after)
   if (!reading) return Infinity
-  const alone = new Set(reading.pairs.filter((pair) => pair.before === undefined || pair.after === undefined).map((pair) => pair.after ?? pair.before))
-  return reading.renumbered.length + alone.size + reading.changes.filter((change) => !alone.has(change.row)).length
+  const alone = new Set(reading.pairs.filter(pair => pair.before === undefined || pair.after === undefined).map(pair => pair.after ?? pair.before))
+  return reading.renumbered.length + alone.size + reading.changes.filter(change => !alone.has(change.row)).length
 }

@@ -20,10 +20,11 @@ export function chain(a: Span, b: Span): IndexPair[] {
     if (!matches) continue
     const scores = new Float64Array(matches.length)
     for (let k = 0; k < matches.length; k += 1) {
-      const j = matches[k]!
-      scores[k] = worth(a, i, b, j) + bestFrom.beyond(j)
+      const j = matches[k] as number
+      const score = worth(a, i, b, j) + bestFrom.beyond(j)
+      scores[k] = score
       // At once, since the columns ascend: the queries to come look beyond this one only.
-      bestFrom.raise(j, scores[k]!)
+      bestFrom.raise(j, score)
     }
     rows.push({ i, columns: matches, scores })
   }
@@ -55,7 +56,7 @@ function firstBest(
   for (const { i, columns, scores } of rows) {
     const k = columns.findIndex((j, index) => j >= from && scores[index] === rest)
     if (k < 0) continue
-    const j = columns[k]!
+    const j = columns[k] as number
     taken.push([i, j])
     rest -= worthOf(i, j)
     from = j + 1
@@ -73,11 +74,11 @@ class BestFrom {
 
   beyond(column: number): number {
     let best = 0
-    for (let slot = this.to - 1 - column; slot > 0; slot -= slot & -slot) best = Math.max(best, this.tree[slot]!)
+    for (let slot = this.to - 1 - column; slot > 0; slot -= slot & -slot) best = Math.max(best, this.tree[slot] as number)
     return best
   }
 
   raise(column: number, score: number): void {
-    for (let slot = this.to - column; slot < this.tree.length; slot += slot & -slot) this.tree[slot] = Math.max(this.tree[slot]!, score)
+    for (let slot = this.to - column; slot < this.tree.length; slot += slot & -slot) this.tree[slot] = Math.max(this.tree[slot] as number, score)
   }
 }

@@ -39,7 +39,7 @@ export function compareContents(a: Content, b: Content, options: CompareOptions)
 
 function isSetAside({ section, field }: FieldChange, { sameUnit, taught = [] }: CompareOptions): boolean {
   if (section !== 'setup') return false
-  return (field === 'homeOffset' && !sameUnit) || taught.some((name) => name === field)
+  return (field === 'homeOffset' && !sameUnit) || taught.some(name => name === field)
 }
 
 function isWithin(change: FieldChange, tolerance: Exact, a: Content, b: Content): boolean {
@@ -53,6 +53,6 @@ function isWithin(change: FieldChange, tolerance: Exact, a: Content, b: Content)
 /** What stands for a value that a content leaves out; nothing stands for a row that it lacks. */
 function standIn({ section, field, row }: FieldChange, content: Content): ExtraValue | undefined {
   if (section === 'setup') return effectiveInSetup(field, content.setup)
-  const move = section === 'move' ? content.moves.find((candidate) => candidate.move === row) : undefined
+  const move = section === 'move' ? content.moves.find(candidate => candidate.move === row) : undefined
   return move && effectiveInMove(field, move, content.setup)
 }

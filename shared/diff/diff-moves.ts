@@ -22,7 +22,7 @@ export class MovePass {
     if (this.nextAgrees) rest = this.nextAgrees(before?.next, after?.next) ? rest & ~nextBit : rest | nextBit
     this.statements += before && after ? bitCount(rest) : 1
     for (; rest !== 0; rest &= rest - 1) {
-      const field = moveFieldNames[31 - Math.clz32(rest & -rest)]!
+      const field = moveFieldNames[31 - Math.clz32(rest & -rest)] as MoveFieldName
       const at = after?.[field] === undefined ? `/moves/${beforeIndex}/${field}` : `/moves/${afterIndex}/${field}`
       this.put(field, at, before, after)
     }
@@ -42,7 +42,7 @@ export class MovePass {
 /** How many statements the flat reading makes of two move tables, without making them. */
 export function countStatements(before: readonly Move[], after: readonly Move[]): number {
   let count = 0
-  walkByNumber(before, after, (move) => move.move, (was, _, is) => {
+  walkByNumber(before, after, move => move.move, (was, _, is) => {
     count += was && is ? bitCount(differing(was, is)) : 1
   })
   return count

@@ -53,7 +53,7 @@ function movesByPressSpeed(partners: Iterable<readonly [Move, Move]>): number[] 
 
 /** Adds the changes of the drive's own values, keys by code unit. */
 export function pushExtraChanges(out: FieldChange[], { before, after, context }: Sides): void {
-  const keys = Object.keys(after.extra).filter((key) => !Object.hasOwn(before.extra, key) || !sameValue(before.extra[key], after.extra[key]))
+  const keys = Object.keys(after.extra).filter(key => !Object.hasOwn(before.extra, key) || !sameValue(before.extra[key], after.extra[key]))
   for (const key of Object.keys(before.extra)) if (!Object.hasOwn(after.extra, key)) keys.push(key)
   for (const key of keys.sort()) {
     const from = Object.hasOwn(before.extra, key) ? before.extra[key] : undefined

@@ -7,7 +7,7 @@ import { walkByNumber } from './walk'
 
 /** Adds the changes of all zones, paired by number. */
 export function pushZoneChanges(out: FieldChange[], sides: Sides): void {
-  walkByNumber<Zone>(sides.before.zones, sides.after.zones, (zone) => zone.zone, (before, i, after, j) => {
+  walkByNumber<Zone>(sides.before.zones, sides.after.zones, zone => zone.zone, (before, i, after, j) => {
     for (const field of zoneFieldNames) {
       const was = before?.[field]
       const is = after?.[field]

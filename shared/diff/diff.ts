@@ -18,13 +18,13 @@ export function diffContents(before: Content, after: Content, context: DiffConte
   pushSetupChanges(out, sides, () => movesOfBoth(before, after))
   pushZoneChanges(out, sides)
   const moves = new MovePass(out, sides)
-  walkByNumber<Move>(before.moves, after.moves, (move) => move.move, (was, i, is, j) => moves.compare(was, i, is, j))
+  walkByNumber<Move>(before.moves, after.moves, move => move.move, (was, i, is, j) => moves.compare(was, i, is, j))
   pushExtraChanges(out, sides)
   return byWeight(out)
 }
 
 function movesOfBoth(before: Content, after: Content): (readonly [Move, Move])[] {
-  const byNumber = new Map(before.moves.map((move) => [move.move, move]))
+  const byNumber = new Map(before.moves.map(move => [move.move, move]))
   return after.moves.flatMap((move) => {
     const was = byNumber.get(move.move)
     return was ? [[was, move] as const] : []

@@ -1,5 +1,5 @@
 import { byWeight } from './order'
-import { pairsInOrder } from './runs'
+import { pairsInOrder, rowsOf } from './runs'
 import { otherKindOf, swapSides } from './swap-sides'
 import { sections, type FieldChange, type RenumberedReading, type RowPair } from './types'
 
@@ -34,7 +34,7 @@ export function invertRenumbered({ renumbered, pairs, changes }: RenumberedReadi
   function turnMove(change: FieldChange, paired: PairedRows): Turned {
     const { before, after } = paired.pairOf(change)
     const swapped = swapSides(change, kind, () => paired.indexOf(before))
-    return { change: { ...swapped, row: (before ?? after)! }, gone: before === undefined }
+    return { change: { ...swapped, row: before ?? after }, gone: before === undefined }
   }
 }
 
@@ -49,11 +49,11 @@ function inTableOrder(a: Turned, b: Turned): number {
 
 /** From the index of a row that stays in the second table to that in the first: rows added before it do not count, rows gone do. */
 function indexInFirst(changes: readonly FieldChange[], section: 'zone' | 'move', neededField: string): (change: FieldChange) => (index: number) => number {
-  const whole = changes.filter((change) => change.section === section && change.field === neededField)
-  const gone = whole.filter((change) => change.after === undefined)
-  const added = whole.filter((change) => change.before === undefined)
+  const whole = changes.filter(change => change.section === section && change.field === neededField)
+  const gone = whole.filter(change => change.after === undefined)
+  const added = whole.filter(change => change.before === undefined)
   return ({ row = 0, after }) => (index) => {
-    const below = (rows: readonly FieldChange[]) => rows.filter((change) => change.row! < row).length
+    const below = (rows: readonly FieldChange[]) => rows.filter(change => (change.row ?? 0) < row).length
     return after === undefined ? index : index + below(gone) - below(added)
   }
 }
@@ -67,8 +67,8 @@ class PairedRows {
   private readonly byAfter: ReadonlyMap<number | undefined, RowPair>
 
   constructor(pairs: readonly RowPair[]) {
-    this.first = pairs.filter((pair) => pair.before !== undefined).sort((a, b) => a.before! - b.before!)
-    this.byAfter = new Map(pairs.map((pair) => [pair.after, pair]))
+    this.first = rowsOf(pairs, 'before')
+    this.byAfter = new Map(pairs.map(pair => [pair.after, pair]))
   }
 
   /** The pair that a change is in: by its row in the second content, by its index in the first where the value is gone. */
@@ -77,10 +77,10 @@ class PairedRows {
   }
 
   indexOf(before: number | undefined): number {
-    return this.first.findIndex((pair) => pair.before === before)
+    return this.first.findIndex(pair => pair.before === before)
   }
 
   inFirst(numbers: readonly number[]): number[] {
-    return numbers.map((number) => this.byAfter.get(number)?.before ?? number).sort((a, b) => a - b)
+    return numbers.map(number => this.byAfter.get(number)?.before ?? number).sort((a, b) => a - b)
   }
 }

@@ -3,18 +3,18 @@ import { diffContents } from './diff'
 import type { FieldChange } from './types'
 
 /** An operation of RFC 6902; of its six kinds these three are enough. */
-export type PatchOperation =
-  | { readonly op: 'add' | 'replace', readonly path: string, readonly value: ExtraValue | Move | Zone }
-  | { readonly op: 'remove', readonly path: string }
+export type PatchOperation
+  = | { readonly op: 'add' | 'replace', readonly path: string, readonly value: ExtraValue | Move | Zone }
+    | { readonly op: 'remove', readonly path: string }
 
 /**
  * The flat reading as a JSON Patch (RFC 6902) that turns the first content into the second. Values first, by the indices of
  * the first content; then whole rows, removed from the highest index down, then added from the lowest up.
  */
 export function jsonPatchOf(before: Content, after: Content): PatchOperation[] {
-  const zones = tableOf('zone', before.zones.map((row) => row.zone), after.zones.map((row) => row.zone))
-  const moves = tableOf('move', before.moves.map((row) => row.move), after.moves.map((row) => row.move))
-  const values = diffContents(before, after).flatMap((change) => valueOperation(change, change.section === 'zone' ? zones : moves))
+  const zones = tableOf('zone', before.zones.map(row => row.zone), after.zones.map(row => row.zone))
+  const moves = tableOf('move', before.moves.map(row => row.move), after.moves.map(row => row.move))
+  const values = diffContents(before, after).flatMap(change => valueOperation(change, change.section === 'zone' ? zones : moves))
   return [
     ...values,
     ...removals('/zones', zones), ...additions('/zones', zones, after.zones),
@@ -49,5 +49,5 @@ function removals(path: string, table: Table): PatchOperation[] {
 }
 
 function additions(path: string, table: Table, rows: readonly (Move | Zone)[]): PatchOperation[] {
-  return [...table.after].filter(([number]) => !table.before.has(number)).map(([, index]) => ({ op: 'add', path: `${path}/${index}`, value: rows[index]! }))
+  return [...table.after].filter(([number]) => !table.before.has(number)).map(([, index]) => ({ op: 'add', path: `${path}/${index}`, value: rows[index] as Move | Zone }))
 }

@@ -24,8 +24,8 @@ export function pairRows(before: readonly Move[], after: readonly Move[]): Pairi
   return {
     ...partners,
     isSure: (i) => {
-      const signature = a.signatures[i]!
-      return b.signatures[partners.before[i]!] === signature && counts.every((count) => count[signature] === 1)
+      const signature = a.signatures[i] as number
+      return b.signatures[partners.before[i] ?? none] === signature && counts.every(count => count[signature] === 1)
     },
   }
 }
@@ -45,7 +45,9 @@ function pairLeftOnce(a: Table, b: Table, signatures: number, partners: Partners
   const here = leftBySignature(a, partners.before, signatures)
   const there = leftBySignature(b, partners.after, signatures)
   for (let signature = 0; signature < signatures; signature += 1) {
-    if (here[signature]! >= 0 && there[signature]! >= 0) join(partners, here[signature]!, there[signature]!)
+    const i = here[signature] as number
+    const j = there[signature] as number
+    if (i >= 0 && j >= 0) join(partners, i, j)
   }
 }
 
@@ -63,18 +65,18 @@ function leftBySignature(table: Table, partners: Int32Array, signatures: number)
 function pairByNumber(a: Table, b: Table, partners: Partners): void {
   let j = 0
   for (const [i, number] of a.numbers.entries()) {
-    while (j < b.numbers.length && b.numbers[j]! < number) j += 1
+    while ((b.numbers[j] ?? Infinity) < number) j += 1
     if (b.numbers[j] === number && partners.before[i] === none && partners.after[j] === none) join(partners, i, j)
   }
 }
 
 function tableOf(moves: readonly Move[], signatures: Int32Array): Table {
-  return { numbers: wholeNumbers(moves, (move) => move.move), signatures }
+  return { numbers: wholeNumbers(moves, move => move.move), signatures }
 }
 
 function countsOf(table: Table, signatures: number): Int32Array {
   const counts = new Int32Array(signatures)
-  for (const signature of table.signatures) counts[signature]! += 1
+  for (const signature of table.signatures) counts[signature] = counts[signature] as number + 1
   return counts
 }
 

@@ -36,8 +36,8 @@ export function pairInsideBlocks(partners: Partners): void {
   let from = -1
   for (let to = 0; to <= before.length; to += 1) {
     if (before[to] === none) continue
-    const otherFrom = from < 0 ? -1 : before[from]!
-    const otherTo = to === before.length ? after.length : before[to]!
+    const otherFrom = from < 0 ? -1 : before[from] as number
+    const otherTo = before[to] ?? after.length
     const there = leftBetween(after, otherFrom, otherTo)
     if (there.length === otherTo - otherFrom - 1) joinEquallyMany(leftBetween(before, from, to), there, partners)
     from = to
@@ -45,7 +45,7 @@ export function pairInsideBlocks(partners: Partners): void {
 }
 
 function joinEquallyMany(here: readonly number[], there: readonly number[], partners: Partners): void {
-  if (here.length === there.length) here.forEach((i, k) => join(partners, i, there[k]!))
+  if (here.length === there.length) here.forEach((i, k) => join(partners, i, there[k] as number))
 }
 
 /** The rows without a partner between two indices, both left out. */

@@ -5,6 +5,7 @@ import { pushZoneChanges } from './diff-zones'
 import { followersOf } from './followers'
 import { byWeight } from './order'
 import { pairRows, type Pairing } from './pair-rows'
+import { none } from './partners'
 import { pairsInOrder, runsOf } from './runs'
 import { sidesOf } from './sides'
 import type { DiffContext, FieldChange, RenumberedReading, RowPair } from './types'
@@ -27,9 +28,9 @@ export function diffRenumbered(before: Content, after: Content, context: DiffCon
 }
 
 function pairsByNumber(before: Content, after: Content, pairing: Pairing): RowPair[] {
-  const added = after.moves.filter((_, j) => pairing.after[j]! < 0).map(({ move }) => ({ after: move }))
+  const added = after.moves.filter((_, j) => pairing.after[j] === none).map(({ move }) => ({ after: move }))
   return [...added, ...before.moves.map(({ move }, i) => {
-    const partner = after.moves[pairing.before[i]!]
+    const partner = after.moves[pairing.before[i] ?? none]
     return partner ? { before: move, after: partner.move } : { before: move }
   })]
 }
@@ -43,15 +44,17 @@ function changesBetween(before: Content, after: Content, pairing: Pairing, pairs
   const out: FieldChange[] = []
   pushFileChanges(out, sides)
   pushSetupChanges(out, sides, () => after.moves.flatMap((is, j) => {
-    const was = before.moves[pairing.after[j]!]
+    const was = before.moves[pairing.after[j] ?? none]
     return was ? [[was, is] as const] : []
   }))
   pushZoneChanges(out, sides)
   const moves = new MovePass(out, sides, agree)
-  const gone = before.moves.map((move, i) => ({ move, i })).filter(({ i }) => pairing.before[i]! < 0)
-  walkByNumber(gone, after.moves.map((move, j) => ({ move, i: j })), (row) => row.move.move, (left, _, row) => {
+  const gone = before.moves.map((move, i) => ({ move, i })).filter(({ i }) => pairing.before[i] === none)
+  walkByNumber(gone, after.moves.map((move, j) => ({ move, i: j })), row => row.move.move, (left, _, row) => {
     if (left) moves.compare(left.move, left.i, undefined, -1)
-    if (row) moves.compare(before.moves[pairing.after[row.i]!], pairing.after[row.i]!, row.move, row.i)
+    if (!row) return
+    const i = pairing.after[row.i] ?? none
+    moves.compare(before.moves[i], i, row.move, row.i)
   })
   pushExtraChanges(out, sides)
   return { changes: byWeight(out), statements: moves.statements }

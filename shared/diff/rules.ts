@@ -45,8 +45,8 @@ function tablesFor(kind: AxisKind, context: DiffContext): Rules {
       [field, { field, unit: unitOf(entry.unit, kind), weight: weigh(entry), ...watch(field, entry.watched), ...plain }])) as Record<Name, FieldRule>
   return {
     axisKind: axisKindRule,
-    move: rows(moveFields, (field) => moveWeight(field.weight, context.flags ?? [])),
-    zone: rows(zoneFields, (field) => field.weight),
+    move: rows(moveFields, field => moveWeight(field.weight, context.flags ?? [])),
+    zone: rows(zoneFields, field => field.weight),
     setup: (name) => {
       const entry: SetupField = setupFields[name]
       const numeric = entry.type === 'number' ? entry : undefined

@@ -1,5 +1,6 @@
 import type { Move } from '../settings/types'
 import type { Pairing } from './pair-rows'
+import { none } from './partners'
 import type { Renumbering, RowPair } from './types'
 
 /**
@@ -11,15 +12,17 @@ export function runsOf(before: readonly Move[], after: readonly Move[], pairing:
   const follows = neighboursAmongPartners(pairing.after)
   let previous = -1
   for (const [i, { move }] of before.entries()) {
-    const j = pairing.before[i]!
-    if (j < 0) continue
-    const by = after[j]!.move - move
+    const j = pairing.before[i] ?? none
+    const partner = after[j]
+    if (!partner) continue
+    const by = partner.move - move
     const run = runs.at(-1)
-    const goesOn = run !== undefined && previous >= 0 && run.last === before[previous]!.move && run.by === by && follows[j] === previous
+    const goesOn = run !== undefined && run.last === before[previous]?.move && run.by === by && follows[j] === previous
     if (goesOn) {
       run.last = move
       run.sure ||= pairing.isSure(i)
-    } else if (by !== 0) runs.push({ first: move, last: move, by, sure: pairing.isSure(i) })
+    }
+    else if (by !== 0) runs.push({ first: move, last: move, by, sure: pairing.isSure(i) })
     previous = i
   }
   return runs
@@ -40,13 +43,18 @@ function neighboursAmongPartners(partners: Int32Array): Int32Array {
  * followed in the first.
  */
 export function pairsInOrder(pairs: readonly RowPair[]): RowPair[] {
-  const first = pairs.filter((pair) => pair.before !== undefined).sort((a, b) => a.before! - b.before!)
-  const second = pairs.filter((pair) => pair.after !== undefined).sort((a, b) => a.after! - b.after!)
+  const first = rowsOf(pairs, 'before')
+  const second = rowsOf(pairs, 'after')
   const goneAfter = new Map<RowPair | undefined, RowPair[]>()
   let staying: RowPair | undefined
   for (const pair of first) {
     if (pair.after !== undefined) staying = pair
     else goneAfter.set(staying, [...goneAfter.get(staying) ?? [], pair])
   }
-  return [...goneAfter.get(undefined) ?? [], ...second.flatMap((pair) => [pair, ...goneAfter.get(pair) ?? []])]
+  return [...goneAfter.get(undefined) ?? [], ...second.flatMap(pair => [pair, ...goneAfter.get(pair) ?? []])]
+}
+
+/** The pairs that have a row in one of the tables, by its number there: the k-th is the row of index k. */
+export function rowsOf(pairs: readonly RowPair[], side: 'before' | 'after'): RowPair[] {
+  return pairs.filter(pair => pair[side] !== undefined).sort((a, b) => (a[side] ?? 0) - (b[side] ?? 0))
 }

@@ -21,7 +21,7 @@ export function classify(before: readonly Move[], after: readonly Move[]): { bef
   const idOf = (move: Move): number => {
     const hash = hashOf(move)
     const alike = known.get(hash)
-    const found = alike?.find((entry) => compareSignatures(entry.move, move) === 0)
+    const found = alike?.find(entry => compareSignatures(entry.move, move) === 0)
     if (found) return found.id
     const entry = { move, id: count }
     if (alike) alike.push(entry)

@@ -10,9 +10,9 @@ export class Span {
   constructor(readonly table: Table, signatures: number) {
     this.to = table.numbers.length
     this.counts = new Int32Array(signatures)
-    for (const signature of table.signatures) this.counts[signature]! += 1
+    for (const signature of table.signatures) this.counts[signature] = this.count(signature) + 1
     this.indexOf = new Int32Array((table.numbers[this.to - 1] ?? -1) + 1).fill(-1)
-    for (let index = 0; index < this.to; index += 1) this.indexOf[table.numbers[index]!] = index
+    for (let index = 0; index < this.to; index += 1) this.indexOf[this.number(index)] = index
   }
 
   get isEmpty(): boolean {
@@ -20,15 +20,15 @@ export class Span {
   }
 
   count(signature: number): number {
-    return this.counts[signature]!
+    return this.counts[signature] as number
   }
 
   number(index: number): number {
-    return this.table.numbers[index]!
+    return this.table.numbers[index] as number
   }
 
   signature(index: number): number {
-    return this.table.signatures[index]!
+    return this.table.signatures[index] as number
   }
 
   /** True where the row of this number is in the span and has this signature. */
@@ -38,14 +38,18 @@ export class Span {
   }
 
   takeFirst(): number {
-    this.counts[this.signature(this.from)]! -= 1
+    this.leave(this.signature(this.from))
     this.from += 1
     return this.from - 1
   }
 
   takeLast(): number {
     this.to -= 1
-    this.counts[this.signature(this.to)]! -= 1
+    this.leave(this.signature(this.to))
     return this.to
+  }
+
+  private leave(signature: number): void {
+    this.counts[signature] = this.count(signature) - 1
   }
 }

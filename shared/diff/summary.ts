@@ -10,5 +10,5 @@ export function countByWeight(changes: readonly FieldChange[]): Record<Weight, n
 
 /** The weightiest of the weights that occur; undefined where nothing changed. */
 export function heaviest(changes: readonly FieldChange[]): Weight | undefined {
-  return weights.find((weight) => changes.some((change) => change.weight === weight))
+  return weights.find(weight => changes.some(change => change.weight === weight))
 }

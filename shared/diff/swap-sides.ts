@@ -7,7 +7,7 @@ import type { FieldChange } from './types'
 
 /** The axis kind of the first content where the kind changed; else undefined, and units stay what they are. */
 export function otherKindOf(changes: readonly FieldChange[]): AxisKind | undefined {
-  return changes.find((change) => change.section === 'file')?.before as AxisKind | undefined
+  return changes.find(change => change.section === 'file')?.before as AxisKind | undefined
 }
 
 /** One change the other way round, at another index of its table where it stands on both sides. */

@@ -25,14 +25,14 @@ const zeroUp = canonicalNumber(0, 1e9)
 /** NFC text of 1 to `most` code points, without control characters, with what trips CSV and JSON Pointer. */
 export function plainText(most: number): fc.Arbitrary<string> {
   const unit = fc.constantFrom(...'abzAZ09 ,;"\'=+-@~/#%.:äßé°²·≤－日😀')
-  return fc.string({ unit, minLength: 1, maxLength: Math.min(most, 12) }).map((text) => text.normalize('NFC'))
+  return fc.string({ unit, minLength: 1, maxLength: Math.min(most, 12) }).map(text => text.normalize('NFC'))
 }
 
 /** The drive's own double, as far as its shortest text stays within the format's 40 characters and exponents. */
 export const ownNumber: fc.Arbitrary<number> = fc.oneof(
   fc.integer({ min: -1000, max: 1000 }),
-  fc.double({ min: -1e30, max: 1e30, noNaN: true, noDefaultInfinity: true }).filter((x) => x === 0 || Math.abs(x) >= 1e-30),
-).map((x) => x + 0)
+  fc.double({ min: -1e30, max: 1e30, noNaN: true, noDefaultInfinity: true }).filter(x => x === 0 || Math.abs(x) >= 1e-30),
+).map(x => x + 0)
 
 const extraValue: fc.Arbitrary<ExtraValue> = fc.oneof(
   ownNumber, fc.boolean(), plainText(256), fc.constantFrom('', '007', 'true', '=1+1', '-12'),
@@ -40,7 +40,7 @@ const extraValue: fc.Arbitrary<ExtraValue> = fc.oneof(
 )
 const extraKey = fc.oneof(
   fc.constantFrom('K-017', 'Filter', '101', 'a/b', 'm~n', 'K~1', 'constructor', 'toString'), plainText(64),
-).filter((key) => key.trim() === key && key !== '' && key !== '__proto__')
+).filter(key => key.trim() === key && key !== '' && key !== '__proto__')
 
 export const arbitraryExtra: fc.Arbitrary<Record<string, ExtraValue>> = fc.dictionary(extraKey, extraValue, { maxKeys: 5, noNullPrototype: true })
 
@@ -62,7 +62,7 @@ export function arbitrarySetup(kind: AxisKind): fc.Arbitrary<Setup> {
   }
   // Without the pick nearly every setup would hold about half of the fields; short ones matter as much.
   return fc.tuple(fc.record(model), fc.subarray(Object.keys(model))).map(([all, kept]) =>
-    Object.fromEntries(kept.map((name) => [name, all[name]])) as Setup)
+    Object.fromEntries(kept.map(name => [name, all[name]])) as Setup)
 }
 
 /** A row without its number; a few values only where rows ought to resemble each other. */
@@ -71,7 +71,7 @@ export function arbitraryMoveBody(modulo: boolean, alike = false): fc.Arbitrary<
   const optional = <T>(value: fc.Arbitrary<T>) => fc.option(value, { nil: undefined, freq: 2 })
   return fc.record({
     kind: fc.constantFrom('absolute' as const, 'absolute' as const, 'relative' as const, 'press' as const),
-    unused: fc.integer({ min: 0, max: 5 }).map((n) => n === 0),
+    unused: fc.integer({ min: 0, max: 5 }).map(n => n === 0),
     label: optional(plainText(40)), comment: optional(plainText(200)),
     target: pick(position, [0, 10, 150]), turn: optional(fc.constantFrom('signed' as const, 'positive' as const, 'negative' as const, 'shortest' as const)),
     speed: pick(aboveZero, [100, 250]), acceleration: pick(aboveZero, [2000, 3000]), deceleration: optional(pick(aboveZero, [2000, 3000])),
@@ -101,15 +101,15 @@ function arbitraryMoves(modulo: boolean, alike: boolean, most: number): fc.Arbit
 
 const arbitraryZones: fc.Arbitrary<Zone[]> = fc.uniqueArray(
   fc.record({ zone: fc.integer({ min: 1, max: 32 }), from: canonicalNumber(-1000, 1000), length: canonicalNumber(1, 1000) }),
-  { maxLength: 4, selector: (zone) => zone.zone },
-).map((zones) => zones.sort((a, b) => a.zone - b.zone).map(({ zone, from, length }) =>
+  { maxLength: 4, selector: zone => zone.zone },
+).map(zones => zones.sort((a, b) => a.zone - b.zone).map(({ zone, from, length }) =>
   ({ zone, from, to: Math.floor((from + length) * 1e6 + 0.5) / 1e6 })))
 
 /** Any content of an axis kind; `alike` makes rows repeat, `most` bounds the number of moves. */
 export function arbitraryContent(options: { kind?: AxisKind, alike?: boolean, most?: number } = {}): fc.Arbitrary<Content> {
   const { alike = false, most = 8 } = options
   const kind = options.kind ? fc.constant(options.kind) : fc.constantFrom('linear' as const, 'rotary' as const)
-  return kind.chain((axisKind) => arbitrarySetup(axisKind).chain((setup) => fc.record({
+  return kind.chain(axisKind => arbitrarySetup(axisKind).chain(setup => fc.record({
     axisKind: fc.constant(axisKind),
     extra: arbitraryExtra,
     moves: arbitraryMoves(setup.modulo !== undefined, alike, most),
@@ -130,7 +130,7 @@ function edited(content: Content, edits: readonly Edit[]): Content {
     else if (act === 'move') moves.splice(to % moves.length, 0, ...moves.splice(index, 1))
     else if (act === 'edit') moves[index] = { ...moves[index]!, speed: body.speed, acceleration: body.acceleration }
   }
-  const first = edits.some((edit) => edit.act === 'renumber') ? 1 : 0
+  const first = edits.some(edit => edit.act === 'renumber') ? 1 : 0
   return { ...content, moves: moves.map((move, index) => ({ ...move, move: index + first })) }
 }
 

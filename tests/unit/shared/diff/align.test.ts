@@ -5,7 +5,7 @@ import type { IndexPair, Table } from '../../../../shared/diff/table'
 
 /** A table written as number:signature, like `0:A 1:B`. */
 function table(text: string): Table {
-  const rows = text.split(' ').filter((row) => row !== '').map((row) => row.split(':'))
+  const rows = text.split(' ').filter(row => row !== '').map(row => row.split(':'))
   return { numbers: Int32Array.from(rows, ([number]) => Number(number)), signatures: Int32Array.from(rows, ([, name = '']) => name.charCodeAt(0) - 65) }
 }
 
@@ -31,7 +31,7 @@ function bestOfAll(a: Table, b: Table): IndexPair[] {
   return best
 }
 
-const arbitraryTable = (most: number) => fc.uniqueArray(fc.integer({ min: 0, max: most + 2 }), { maxLength: most }).chain((numbers) =>
+const arbitraryTable = (most: number) => fc.uniqueArray(fc.integer({ min: 0, max: most + 2 }), { maxLength: most }).chain(numbers =>
   fc.array(fc.integer({ min: 0, max: 3 }), { minLength: numbers.length, maxLength: numbers.length }).map((signatures): Table =>
     ({ numbers: Int32Array.from(numbers.sort((a, b) => a - b)), signatures: Int32Array.from(signatures) })))
 
@@ -63,7 +63,7 @@ describe('order-keeping alignment', () => {
 
   it('pairs a table of 1,024 rows turned round in one row only', () => {
     const forth = { numbers: Int32Array.from({ length: 1024 }, (_, k) => k), signatures: Int32Array.from({ length: 1024 }, (_, k) => k) }
-    const back = { numbers: forth.numbers, signatures: forth.signatures.map((signature) => 1023 - signature) }
+    const back = { numbers: forth.numbers, signatures: forth.signatures.map(signature => 1023 - signature) }
     expect(align(forth, back, 1024)).toEqual([[0, 1023]])
   })
 })

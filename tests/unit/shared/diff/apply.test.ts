@@ -43,10 +43,10 @@ describe('applyRenumbered', () => {
   })
 
   it('tells the row that is gone from the one that has its number now', () => {
-    const labelled: Content = { ...linear, moves: [{ ...row, move: 0, target: 1, label: 'x' }, ...rows([10, 20, 30], 1).moves].map((move) => ({ ...move, label: 'x' })) }
-    const shorter: Content = { ...linear, moves: rows([10, 20, 30], 0).moves.map((move) => ({ ...move, label: 'x' })) }
+    const labelled: Content = { ...linear, moves: [{ ...row, move: 0, target: 1, label: 'x' }, ...rows([10, 20, 30], 1).moves].map(move => ({ ...move, label: 'x' })) }
+    const shorter: Content = { ...linear, moves: rows([10, 20, 30], 0).moves.map(move => ({ ...move, label: 'x' })) }
     const told = diffRenumbered(labelled, shorter) as RenumberedReading
-    expect(told.changes.filter((change) => change.field === 'label')).toMatchObject([{ row: 0, before: 'x' }])
+    expect(told.changes.filter(change => change.field === 'label')).toMatchObject([{ row: 0, before: 'x' }])
     expect(applyRenumbered(labelled, told)).toStrictEqual(shorter)
   })
 

@@ -13,8 +13,9 @@ const anyTwo = fc.oneof(arbitraryPair(), fc.tuple(arbitraryContent(), arbitraryC
 /** A row comes or goes with its kind: its pointer up to the row is that of a change of kind from or to nothing. */
 function isOfComeOrGone(change: FieldChange, changes: readonly FieldChange[]): boolean {
   const row = change.at.slice(0, change.at.lastIndexOf('/'))
-  return changes.some((other) => other.at === `${row}/kind` && (change.after === undefined
-    ? other.after === undefined : other.before === undefined && change.before === undefined))
+  return changes.some(other => other.at === `${row}/kind` && (change.after === undefined
+    ? other.after === undefined
+    : other.before === undefined && change.before === undefined))
 }
 const many = { numRuns: 400 }
 
@@ -39,7 +40,7 @@ describe('the flat reading', () => {
 
   it('comes sorted by weight', () => {
     fc.assert(fc.property(anyTwo, ([a, b]) => {
-      const ranks = diffContents(a, b).map((change) => weights.indexOf(change.weight))
+      const ranks = diffContents(a, b).map(change => weights.indexOf(change.weight))
       expect(ranks).toEqual([...ranks].sort((x, y) => x - y))
     }), many)
   })
@@ -61,10 +62,10 @@ describe('the renumbered reading', () => {
     fc.assert(fc.property(arbitraryPair(), ([a, b]) => {
       const reading = diffRenumbered(a, b)
       if (!reading) return
-      const flatRows = new Set([...a.moves, ...b.moves].map((row) => row.move)).size - a.moves.filter((row) => b.moves.some((other) => other.move === row.move)).length
+      const flatRows = new Set([...a.moves, ...b.moves].map(row => row.move)).size - a.moves.filter(row => b.moves.some(other => other.move === row.move)).length
       const told = (changes: readonly FieldChange[], comeOrGone: number) =>
-        comeOrGone + changes.filter((change) => change.section === 'move' && !isOfComeOrGone(change, changes)).length
-      const alone = reading.pairs.filter((pair) => pair.before === undefined || pair.after === undefined).length
+        comeOrGone + changes.filter(change => change.section === 'move' && !isOfComeOrGone(change, changes)).length
+      const alone = reading.pairs.filter(pair => pair.before === undefined || pair.after === undefined).length
       expect(reading.renumbered.length + told(reading.changes, alone)).toBeLessThan(told(diffContents(a, b), flatRows))
     }), many)
     fc.assert(fc.property(arbitraryContent(), (a) => {

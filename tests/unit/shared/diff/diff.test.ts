@@ -86,14 +86,14 @@ describe('rows', () => {
 
   it('that go point into the first content', () => {
     const changes = diffContents(withMoves([{ ...row, move: 1 }, row]), withMoves([{ ...row, move: 1 }]))
-    expect(changes.map((change) => change.at)).toEqual(['/moves/1/kind', '/moves/1/target', '/moves/1/speed', '/moves/1/acceleration'])
-    expect(changes.every((change) => change.row === 5 && change.after === undefined)).toBe(true)
+    expect(changes.map(change => change.at)).toEqual(['/moves/1/kind', '/moves/1/target', '/moves/1/speed', '/moves/1/acceleration'])
+    expect(changes.every(change => change.row === 5 && change.after === undefined)).toBe(true)
   })
 
   it('whose value goes point into the first content too, at its index there', () => {
     const before = withMoves([{ ...row, window: 0.1 }])
     const after = withMoves([{ ...row, move: 2 }, row])
-    expect(diffContents(before, after).find((change) => change.field === 'window')?.at).toBe('/moves/0/window')
+    expect(diffContents(before, after).find(change => change.field === 'window')?.at).toBe('/moves/0/window')
   })
 
   it('of the zones weigh harm', () => {
@@ -101,7 +101,7 @@ describe('rows', () => {
     expect(only(diffContents(zones(25), zones(30)))).toStrictEqual({
       at: '/zones/0/to', section: 'zone', row: 3, field: 'to', before: 25, after: 30, unit: 'mm', delta: 5, percent: 20, weight: 'harm', watched: true,
     })
-    expect(diffContents(linear, zones(25)).map((change) => change.field)).toEqual(['from', 'to'])
+    expect(diffContents(linear, zones(25)).map(change => change.field)).toEqual(['from', 'to'])
   })
 })
 
@@ -111,7 +111,7 @@ describe('values of the drive', () => {
 
   it('weigh motion and are not watched until the dictionary says otherwise', () => {
     expect(change({ 'K-017': 15 }, { 'K-017': 20 })).toMatchObject({ at: '/extra/K-017', field: 'K-017', delta: 5, weight: 'motion', watched: false })
-    const dictionary = { 'K-017': { weight: 'harm' as const, unit: '%' }, Filter: { weight: 'text' as const } }
+    const dictionary = { 'K-017': { weight: 'harm' as const, unit: '%' }, 'Filter': { weight: 'text' as const } }
     expect(change({ 'K-017': 15 }, { 'K-017': 20 }, { dictionary })).toMatchObject({ weight: 'harm', watched: true, unit: '%', points: 5 })
     expect(change({ Filter: 'A' }, { Filter: 'B' }, { dictionary })).toMatchObject({ weight: 'text', watched: false })
   })
@@ -132,7 +132,7 @@ describe('values of the drive', () => {
 
   it('are pointed at with ~ and / escaped, in the order of their keys', () => {
     const changes = diffContents(extra({}), extra({ 'm~n': 1, 'a/b': 1, '~1': 1 }))
-    expect(changes.map((one) => one.at)).toEqual(['/extra/a~1b', '/extra/m~0n', '/extra/~01'])
+    expect(changes.map(one => one.at)).toEqual(['/extra/a~1b', '/extra/m~0n', '/extra/~01'])
   })
 
   it('under the names of built-in properties are values like others', () => {
@@ -163,7 +163,7 @@ describe('weights', () => {
     const after = {
       ...withMoves([{ ...row, speed: 1, label: 'a' }, { ...press, forceLimit: 1 }], { jerk: 2, jogSpeed: 1 }), zones: [{ zone: 1, from: 0, to: 2 }], extra: { z: 1, a: 1 },
     }
-    expect(diffContents(before, after).map((change) => `${change.section} ${change.row ?? ''} ${change.field}`)).toEqual([
+    expect(diffContents(before, after).map(change => `${change.section} ${change.row ?? ''} ${change.field}`)).toEqual([
       'setup  jogSpeed', 'zone 1 to', 'move 6 forceLimit', 'setup  jerk', 'move 5 speed', 'extra  a', 'extra  z', 'move 5 label',
     ])
   })
@@ -213,7 +213,7 @@ describe('a default written out', () => {
 
   it('in a row that is new weighs as any value of it', () => {
     const changes = diffContents(linear, withMoves([{ ...row, deceleration: 2000 }]))
-    expect(changes.find((change) => change.field === 'deceleration')).toMatchObject({ weight: 'motion', watched: true })
+    expect(changes.find(change => change.field === 'deceleration')).toMatchObject({ weight: 'motion', watched: true })
   })
 })
 

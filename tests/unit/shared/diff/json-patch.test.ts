@@ -30,7 +30,7 @@ describe('JSON Patch', () => {
 
   it('says so by a removal where a value is no longer set: there is no null in it (unlike RFC 7396, where null means that)', () => {
     fc.assert(fc.property(anyTwo, ([a, b]) => {
-      expect(JSON.stringify(jsonPatchOf(a, b).map((operation) => 'value' in operation ? operation.value : 0))).not.toMatch(/(?<![\w"])null(?![\w"])/)
+      expect(JSON.stringify(jsonPatchOf(a, b).map(operation => 'value' in operation ? operation.value : 0))).not.toMatch(/(?<![\w"])null(?![\w"])/)
     }), { numRuns: 100 })
     expect(jsonPatchOf({ ...linear, setup: { jogSpeed: 30 } }, linear)).toEqual([{ op: 'remove', path: '/setup/jogSpeed' }])
   })
@@ -69,7 +69,7 @@ describe('pointers', () => {
     ['a/b', '/extra/a~1b'], ['c%d', '/extra/c%d'], ['e^f', '/extra/e^f'], ['g|h', '/extra/g|h'], ['i\\j', '/extra/i\\j'], ['k"l', '/extra/k"l'], ['m~n', '/extra/m~0n'],
   ])('to %s are %s', (key, pointer) => {
     const after = extra({ [key]: 1 })
-    expect(diffContents(linear, after).map((change) => change.at)).toEqual([pointer])
+    expect(diffContents(linear, after).map(change => change.at)).toEqual([pointer])
     expect(getValueByPointer(after, pointer)).toBe(1)
   })
 

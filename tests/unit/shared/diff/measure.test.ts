@@ -26,7 +26,7 @@ describe('the difference of two numbers', () => {
 
 describe('values', () => {
   it('have an amount where they are numbers, and the unit that stands beside them', () => {
-    expect([5, { value: 6, unit: 'A' }, '7', true, undefined].map((value) => [amount(value), unitBeside(value)])).toEqual([
+    expect([5, { value: 6, unit: 'A' }, '7', true, undefined].map(value => [amount(value), unitBeside(value)])).toEqual([
       [5, undefined], [6, 'A'], [undefined, undefined], [undefined, undefined], [undefined, undefined],
     ])
   })

@@ -63,13 +63,13 @@ describe('a pairing', () => {
     const after = rows([2, 2, 1, 1])
     const there = pairRows(before, after)
     expect([...pairRows(after, before).before]).toEqual([...there.after])
-    expect(there.before.filter((j) => j >= 0)).toHaveLength(2)
+    expect(there.before.filter(j => j >= 0)).toHaveLength(2)
   })
 
   it('pairs a permuted table completely where all rows differ', () => {
     const permuted = fc.shuffledSubarray([3, 1, 4, 15, 9, 26, 5, 35], { minLength: 8 })
     fc.assert(fc.property(permuted, permuted, (a, b) => {
-      expect(partnersOf(rows(a), rows(b))).toEqual(a.map((target) => b.indexOf(target)))
+      expect(partnersOf(rows(a), rows(b))).toEqual(a.map(target => b.indexOf(target)))
     }))
   })
 

@@ -18,15 +18,15 @@ import type { Content, Move } from '../../../../shared/settings/types'
  */
 
 const leading = ['kind', 'target', 'speed', 'acceleration'] as const
-const further = moveFieldNames.filter((name) => !leading.some((known) => known === name))
+const further = moveFieldNames.filter(name => !leading.some(known => known === name))
 type Cell = string | undefined
 
 /** Both contents that a picture shows. */
 export function contentsOf(picture: string): readonly [Content, Content] {
-  const rows = linesOf(picture).filter((line) => line.includes('|')).map(rowOf)
+  const rows = linesOf(picture).filter(line => line.includes('|')).map(rowOf)
   const side = (index: 0 | 1): Content => ({
     ...emptyContent('linear'),
-    moves: rows.flatMap((row) => row[index] ?? []).sort((a, b) => a.move - b.move),
+    moves: rows.flatMap(row => row[index] ?? []).sort((a, b) => a.move - b.move),
   })
   return [side(0), side(1)]
 }
@@ -35,7 +35,7 @@ export function contentsOf(picture: string): readonly [Content, Content] {
 export function pictureOf(before: Content, after: Content): string {
   const reading = diffRenumbered(before, after) ?? { renumbered: [], pairs: pairsByNumber(before, after), changes: diffContents(before, after) }
   const runs = reading.renumbered.map(({ first, last, by, sure }) => `moves ${first}–${last} ${sure ? 'became' : 'may have become'} ${first + by}–${last + by}`)
-  return [...reading.pairs.map((pair) => lineOf(pair, before, after, reading.changes)), ...runs].join('\n')
+  return [...reading.pairs.map(pair => lineOf(pair, before, after, reading.changes)), ...runs].join('\n')
 }
 
 /** A picture without the spaces that line its columns up. */
@@ -44,7 +44,7 @@ export function plain(picture: string): string {
 }
 
 function linesOf(picture: string): string[] {
-  return picture.split('\n').map((line) => line.trim().replaceAll(/\s+/g, ' ')).filter((line) => line !== '')
+  return picture.split('\n').map(line => line.trim().replaceAll(/\s+/g, ' ')).filter(line => line !== '')
 }
 
 function rowOf(line: string): readonly [Move | undefined, Move | undefined] {
@@ -53,10 +53,12 @@ function rowOf(line: string): readonly [Move | undefined, Move | undefined] {
     const at = cell.indexOf('=')
     return at < 0 ? [leading[index] ?? cell, cell] : [cell.slice(0, at), cell.slice(at + 1)]
   })
-  const [before, after] = numbers.split(' → ').map((number, side) => number === '–' ? undefined : {
-    move: Number(number),
-    ...Object.fromEntries(cells.map(([name, text]) => [name, valueOn(side, name, text)]).filter(([, value]) => value !== undefined)),
-  } as Move)
+  const [before, after] = numbers.split(' → ').map((number, side) => number === '–'
+    ? undefined
+    : {
+        move: Number(number),
+        ...Object.fromEntries(cells.map(([name, text]) => [name, valueOn(side, name, text)]).filter(([, value]) => value !== undefined)),
+      } as Move)
   return [before, after]
 }
 
@@ -68,11 +70,11 @@ function valueOn(side: number, name: string, text: string): string | number | un
 }
 
 function lineOf(pair: RowPair, before: Content, after: Content, changes: readonly FieldChange[]): string {
-  const was = before.moves.find((move) => move.move === pair.before)
-  const is = after.moves.find((move) => move.move === pair.after)
+  const was = before.moves.find(move => move.move === pair.before)
+  const is = after.moves.find(move => move.move === pair.after)
   const cell = (name: keyof Move): Cell => {
-    const [from, to] = [was?.[name], is?.[name]].map((value) => value === undefined ? undefined : String(value))
-    const told = changes.some((change) => change.field === name && belongs(change, pair, before))
+    const [from, to] = [was?.[name], is?.[name]].map(value => value === undefined ? undefined : String(value))
+    const told = changes.some(change => change.field === name && belongs(change, pair, before))
     if (!was || !is) return told || (from ?? to) === undefined ? from ?? to : `untold:${from ?? to}`
     if (told) return `${from ?? '–'}→${to ?? '–'}`
     return from === to ? from : `${from}⇒${to}`
@@ -91,9 +93,9 @@ function belongs(change: FieldChange, pair: RowPair, before: Content): boolean {
 }
 
 function pairsByNumber(before: Content, after: Content): RowPair[] {
-  const numbers = new Set([...before.moves, ...after.moves].map((move) => move.move))
-  const holds = (content: Content, number: number) => content.moves.some((move) => move.move === number)
-  return [...numbers].sort((a, b) => a - b).map((number) => ({
+  const numbers = new Set([...before.moves, ...after.moves].map(move => move.move))
+  const holds = (content: Content, number: number) => content.moves.some(move => move.move === number)
+  return [...numbers].sort((a, b) => a - b).map(number => ({
     ...holds(before, number) ? { before: number } : {}, ...holds(after, number) ? { after: number } : {},
   }))
 }

@@ -48,16 +48,16 @@ describe('the renumbered reading', () => {
     const after: Content = {
       ...table([9], { pressSpeed: 12, thrustLimit: 55 }), moves: [...table([9]).moves, { ...press, move: 1 }, ...table([1, 2], {}, 2).moves], extra: { a: 2 }, zones: [{ zone: 1, from: 0, to: 2 }],
     }
-    const changes = diffRenumbered(before, after)?.changes.filter((change) => change.section !== 'move')
+    const changes = diffRenumbered(before, after)?.changes.filter(change => change.section !== 'move')
     expect(changes).toMatchObject([
       { field: 'pressSpeed', affects: [1] }, { field: 'thrustLimit', points: 17 }, { field: 'to', row: 1 }, { field: 'a', delta: 1 },
     ])
   })
 
   it('weighs and watches as its context says', () => {
-    const edited = { ...table([9, 0, 1, 2, 3]), moves: table([9, 0, 1, 2, 3]).moves.map((move) => move.target === 2 ? { ...move, speed: 300, label: 'a' } : move) }
+    const edited = { ...table([9, 0, 1, 2, 3]), moves: table([9, 0, 1, 2, 3]).moves.map(move => move.target === 2 ? { ...move, speed: 300, label: 'a' } : move) }
     const changes = diffRenumbered(table([0, 1, 2, 3]), edited, { flags: ['press'], watched: ['label'] })?.changes
-    expect(changes?.filter((change) => change.row === 3)).toMatchObject([
+    expect(changes?.filter(change => change.row === 3)).toMatchObject([
       { field: 'speed', before: 250, after: 300, weight: 'harm' }, { field: 'label', weight: 'text', watched: true },
     ])
   })

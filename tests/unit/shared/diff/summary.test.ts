@@ -16,7 +16,7 @@ describe('a summary of changes', () => {
 
   it('names the heaviest weight that occurs', () => {
     expect(heaviest(changes)).toBe('harm')
-    expect(heaviest(changes.filter((change) => change.weight === 'motion'))).toBe('motion')
+    expect(heaviest(changes.filter(change => change.weight === 'motion'))).toBe('motion')
     expect(heaviest([])).toBeUndefined()
   })
 

@@ -2,13 +2,16 @@ import Database from 'better-sqlite3'
 import { join } from 'node:path'
 import { StartError } from './start-error'
 
+/** How long to wait for the one before to let go, ms: a service that is restarted overlaps with itself. */
+const patience = 2000
+
 /**
  * Holds the folder for this process until `release` or the end of the process, however it ends: the lock is the operating
  * system's own on a file beside the vault, so that kill -9 leaves nothing behind to clear away.
  */
 export function lockFolder(folder: string): { release: () => void } {
   const path = join(folder, 'vault.lock')
-  const lock = new Database(path, { timeout: 0 })
+  const lock = new Database(path, { timeout: patience })
   try {
     lock.pragma('locking_mode = EXCLUSIVE')
     lock.exec('BEGIN EXCLUSIVE')

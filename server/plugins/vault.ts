@@ -32,7 +32,10 @@ function start(logger: ServerContext['logger']): ServerContext {
   // Read by the cookie library at the first request.
   process.env.NUXT_SESSION_PASSWORD = secret
   process.env.NUXT_SESSION_COOKIE_SECURE = String(publicOrigin?.startsWith('https:') ?? false)
-  firstStart(vault, logger, publicOrigin)
+  firstStart(vault, logger, publicOrigin).catch((error: unknown) => {
+    logger.fatal({ err: error }, 'the first start failed')
+    process.exit(1)
+  })
   logger.info({ folder: vault.folder, schema: vault.schema }, 'vault open')
   return { vault, logger, secret, publicOrigin }
 }

@@ -51,7 +51,7 @@ export async function setUp(vault: Vault, token: string, admin: FirstAdmin): Pro
 export async function firstStart(vault: Vault, logger: Pick<Logger, 'info' | 'error'>, publicOrigin: string | null): Promise<void> {
   if (!isUnclaimed(vault)) return
   const { WITNESSMARK_ADMIN_EMAIL: email, WITNESSMARK_ADMIN_PASSWORD: password, PORT } = process.env
-  if (email !== undefined && password !== undefined) {
+  if (email && password) {
     try {
       await registerFirstAdmin(vault, { name: email.replace(/@.*$/s, ''), email, password })
       logger.info({ email }, 'first administrator registered')

@@ -7,6 +7,7 @@ import type { Vault } from '#server/database/client'
 import { orRefuse } from '#server/database/constraints'
 import { insertUnit, unitRows, updateUnit } from '#server/database/unit/queries'
 import type { UnitRow, UnitState } from '#server/database/unit/table'
+import { refreshAxisState } from '../axes/axis-state'
 import { afterOf, limitOf, pageOf } from '../page'
 import { assertPlace } from '../places/bounds'
 import { assertRev, named } from '../rev'
@@ -54,6 +55,8 @@ export function changeUnit(vault: Vault, actor: PersonActor, id: number, patch: 
     const after = { ...before.unit, ...named(patch), rev: before.unit.rev + 1 }
     updateUnit(vault.db, after)
     write.log({ act: 'unit-changed', id, state: after })
+    // Another model means another nameplate, and with it another reading of what differs.
+    if (before.axisId !== null) refreshAxisState(vault.db, before.axisId)
     return readUnit(vault, id)
   })
 }

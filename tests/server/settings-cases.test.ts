@@ -24,7 +24,6 @@ const queryOf = ({ decimal }: Case, rest = '') => `?decimal=${decimal ?? ''}${re
 
 let server: TestServer
 let plant: ServerPlant
-const fitted = new Set<string>()
 
 beforeAll(async () => {
   server = await startServer()
@@ -50,25 +49,38 @@ describe('a file that is wrong in one way', () => {
   })
 })
 
-describe('a file that can be read', () => {
-  it.each(cases.filter(({ errors }) => !errors).map(each => [each.file, each.what, each] as const))('%s: %s', async (name, _what, each) => {
+const readable = cases.filter(({ errors }) => !errors).map((each) => {
+  const read = readSettings(fixture(each.file), each.decimal === undefined ? {} : { decimal: each.decimal })
+  if (!read.ok) throw new Error(`${each.file}: ${JSON.stringify(read.errors)}`)
+  return { each, ...read.value }
+})
+
+// The cases share serials, and a unit sits at one kind of axis: a vault for each kind.
+describe.each(['linear', 'rotary'] as const)('a %s file that can be read', (kind) => {
+  let own: TestServer
+  let at: ServerPlant
+  const fitted = new Set<string>()
+
+  beforeAll(async () => {
+    own = await startServer()
+    at = await plantOn(own)
+  })
+  afterAll(() => own.stop())
+
+  it.each(readable.filter(({ file }) => file.axisKind === kind).map(each => [each.each.file, each.each.what, each] as const))('%s: %s', async (name, _what, { each, file: { unit }, content }) => {
     const bytes = fixture(name)
-    const read = readSettings(bytes, each.decimal === undefined ? {} : { decimal: each.decimal })
-    if (!read.ok) throw new Error(JSON.stringify(read.errors))
-    const { unit, axisKind } = read.value.file
     const key = `${unit.serial.toLowerCase()} ${unit.channel ?? ''}`
-    if (!fitted.has(key)) await plant.axis(`CASE-${fitted.size + 1}`, unit.serial, { kind: axisKind, model: unit.model, ...(unit.channel === undefined ? {} : { channel: unit.channel }) })
+    if (!fitted.has(key)) await at.axis(`CASE-${fitted.size + 1}`, unit.serial, { kind, model: unit.model, ...(unit.channel === undefined ? {} : { channel: unit.channel }) })
     fitted.add(key)
-    const { status, json, text } = await plant.upload(bytes, queryOf(each, '&occasion=as-found'), { type: typeOf(each) })
+    const { status, json, text } = await at.upload(bytes, queryOf(each, '&occasion=as-found'), { type: typeOf(each) })
     expect(status, text).toBe(201)
     expect(json).toMatchObject({ version: { contentHash: each.contentHash, scribeCode: each.scribeCode }, normalised: each.normalised })
     const { id } = (json as unknown as { version: { id: number } }).version
-    const original = await fetch(`${server.url}/api/versions/${id}/file?form=original`, { headers: { cookie: plant.as.auditor } })
-    expect(Buffer.from(await original.arrayBuffer()).equals(bytes)).toBe(true)
-    for (const form of ['json', 'csv'] as const) {
-      const handed = await fetch(`${server.url}/api/versions/${id}/file?form=${form}`, { headers: { cookie: plant.as.auditor } })
-      const again = readSettings(new Uint8Array(await handed.arrayBuffer()))
-      expect(again.ok && again.value.content).toEqual(read.value.content)
+    const handOut = async (form: string) => Buffer.from(await (await fetch(`${own.url}/api/versions/${id}/file?form=${form}`, { headers: { cookie: at.as.auditor } })).arrayBuffer())
+    expect((await handOut('original')).equals(bytes)).toBe(true)
+    for (const form of ['json', 'csv']) {
+      const again = readSettings(await handOut(form))
+      expect(again.ok && again.value.content).toEqual(content)
     }
   })
 })

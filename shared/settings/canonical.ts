@@ -38,48 +38,66 @@ export function canonicalJson(value: unknown, depth = 0): string {
 
 /** The canonical text of a content as it is stored and hashed; the same as canonicalJson, several times faster, since the keys are known in order. */
 export function canonicalText(content: Content): string {
-  return contentTexts(content).content
+  const { before, setup, after } = contentParts(content)
+  return before + setup + after
 }
 
-/** The canonical text of a content, and that of the same without `setup.homeOffset`: equal on the old unit and on a rightly restored one. */
-export function contentTexts(content: Content): { readonly content: string, readonly copy: string } {
-  const before = `{"axisKind":${textOf(content.axisKind)},"extra":${extraText(content.extra)},"moves":[${movesText(content.moves)}],"setup":{`
-  const after = `},"zones":[${zonesText(content.zones)}]}`
-  const text = `${before}${setupText(content.setup, true)}${after}`
-  const copy = content.setup.homeOffset === undefined ? text : `${before}${setupText(content.setup, false)}${after}`
-  return { content: text, copy }
+/** The canonical text cut around the setup, which is the part that two units with the same settings may differ in. */
+export interface ContentParts {
+  readonly before: string
+  readonly setup: string
+  /** The setup without `homeOffset`: equal on the old unit and on a rightly restored one. */
+  readonly copySetup: string
+  readonly after: string
+}
+
+/** The parts whose concatenation is the canonical text: before, setup or copySetup, after. */
+export function contentParts(content: Content): ContentParts {
+  const setup = setupText(content.setup, true)
+  return {
+    before: `{"axisKind":${textOf(content.axisKind)},"extra":${extraText(content.extra)},"moves":[${movesText(content.moves)}],"setup":{`,
+    setup,
+    copySetup: content.setup.homeOffset === undefined ? setup : setupText(content.setup, false),
+    after: `},"zones":[${zonesText(content.zones)}]}`,
+  }
 }
 
 function valueText(value: string | number | boolean): string {
   return typeof value === 'number' ? formatNumber(value) : typeof value === 'string' ? textOf(value) : String(value)
 }
 
-const moveHeads = sortedMoveKeys.map(key => `"${key}":`)
+/** What stands before each value: of the first key of an object and of all others. */
+const heads = (keys: readonly string[]) => ({ first: keys.map(key => `"${key}":`), next: keys.map(key => `,"${key}":`) })
+
+const moveHeads = heads(sortedMoveKeys)
 
 function movesText(moves: readonly Move[]): string {
   let text = ''
   for (const move of moves) {
-    let sign = text === '' ? '{' : ',{'
+    text += text === '' ? '{' : ',{'
+    let { first: head } = moveHeads
     for (let index = 0; index < sortedMoveKeys.length; index += 1) {
       const value = move[sortedMoveKeys[index] as keyof Move]
       if (value === undefined) continue
-      text += sign + (moveHeads[index] as string) + valueText(value)
-      sign = ','
+      text += (head[index] as string) + valueText(value)
+      head = moveHeads.next
     }
     text += '}'
   }
   return text
 }
 
-const setupHeads = sortedSetupNames.map(name => `"${name}":`)
+const setupHeads = heads(sortedSetupNames)
 
 function setupText(setup: Readonly<Setup>, withHomeOffset: boolean): string {
   let text = ''
+  let { first: head } = setupHeads
   for (let index = 0; index < sortedSetupNames.length; index += 1) {
     const name = sortedSetupNames[index] as keyof Setup
     const value = setup[name]
     if (value === undefined || (name === 'homeOffset' && !withHomeOffset)) continue
-    text += (text === '' ? '' : ',') + (setupHeads[index] as string) + valueText(value)
+    text += (head[index] as string) + valueText(value)
+    head = setupHeads.next
   }
   return text
 }

@@ -1,6 +1,6 @@
 import type { Sha256 } from '../errors/result'
 import type { Content } from './types'
-import { contentTexts } from './canonical'
+import { contentParts } from './canonical'
 import { scribeCode } from './scribe'
 
 /** Hashes in 64 lower-case hex digits. */
@@ -13,19 +13,44 @@ export interface ContentHashes {
   readonly scribeCode: string
 }
 
+/** What is stored of a content: its canonical text, and the hashes made from it. */
+export interface HashedContent { readonly text: string, readonly hashes: ContentHashes }
+
 const encoder = new TextEncoder()
 
 /** SHA-256 of a text in UTF-8, in lower-case hex. */
 export function sha256Hex(text: string, sha256: Sha256): string {
+  return hexOf(sha256(encoder.encode(text)))
+}
+
+function hexOf(bytes: Uint8Array): string {
   let hex = ''
-  for (const byte of sha256(encoder.encode(text))) hex += (byte < 16 ? '0' : '') + byte.toString(16)
+  for (const byte of bytes) hex += (byte < 16 ? '0' : '') + byte.toString(16)
   return hex
 }
 
-/** Both hashes of a content and its scribe code; the content must be in order, as readers and contentOf give it. */
+function joined(...parts: readonly Uint8Array[]): Uint8Array {
+  const all = new Uint8Array(parts.reduce((sum, part) => sum + part.length, 0))
+  let at = 0
+  for (const part of parts) {
+    all.set(part, at)
+    at += part.length
+  }
+  return all
+}
+
+/** Canonical text and hashes in one go; the content must be in order, as readers and contentOf give it. */
+export function hashContent(content: Content, sha256: Sha256): HashedContent {
+  const { before, setup, copySetup, after } = contentParts(content)
+  const [start, end] = [encoder.encode(before), encoder.encode(after)]
+  // The two hashes differ in the setup alone: long move tables are encoded once.
+  const hashWith = (middle: string) => hexOf(sha256(joined(start, encoder.encode(middle), end)))
+  const contentHash = hashWith(setup)
+  const copyHash = copySetup === setup ? contentHash : hashWith(copySetup)
+  return { text: before + setup + after, hashes: { contentHash, copyHash, scribeCode: scribeCode(copyHash) } }
+}
+
+/** Both hashes of a content and its scribe code; see hashContent where the text is needed as well. */
 export function hashesOf(content: Content, sha256: Sha256): ContentHashes {
-  const texts = contentTexts(content)
-  const contentHash = sha256Hex(texts.content, sha256)
-  const copyHash = texts.copy === texts.content ? contentHash : sha256Hex(texts.copy, sha256)
-  return { contentHash, copyHash, scribeCode: scribeCode(copyHash) }
+  return hashContent(content, sha256).hashes
 }

@@ -29,6 +29,8 @@ export type Slots = (RawNode | undefined)[]
  */
 export function sortIntoSlots(reading: Reading, node: RawObject, table: KeyTable, at: string): Slots {
   const slots: Slots = new Array<RawNode | undefined>(table.names.length).fill(undefined)
+  // An empty value still takes its place until all keys are seen: a second one is a duplicate.
+  let emptied = false
   for (let index = 0; index < node.keys.length; index += 1) {
     const key = node.keys[index] as string
     const value = node.values[index] as RawNode
@@ -36,12 +38,9 @@ export function sortIntoSlots(reading: Reading, node: RawObject, table: KeyTable
     if (slot === undefined) reportUnknown(reading, node, index, table, at)
     else if (slots[slot] !== undefined) reportDuplicate(reading, node, index, at)
     else slots[slot] = value
+    if (isNotSet(value)) emptied = true
   }
-  for (let slot = 0; slot < slots.length; slot += 1) {
-    const value = slots[slot]
-    if (value !== undefined && isNotSet(value)) slots[slot] = undefined
-  }
-  return slots
+  return emptied ? slots.map(value => value !== undefined && isNotSet(value) ? undefined : value) : slots
 }
 
 /** null, or a text without a character. */
@@ -51,7 +50,7 @@ export function isNotSet(node: RawNode): boolean {
 
 /** A step of a JSON Pointer (RFC 6901, section 3): ~ becomes ~0, / becomes ~1. */
 export function step(key: string): string {
-  return `/${key.replaceAll('~', '~0').replaceAll('/', '~1')}`
+  return /[~/]/.test(key) ? `/${key.replaceAll('~', '~0').replaceAll('/', '~1')}` : `/${key}`
 }
 
 function keySpot(node: RawObject, index: number) {

@@ -3,7 +3,7 @@ import canonicalize from 'canonicalize'
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { CodedError } from '../../../../shared/errors/coded'
-import { canonicalJson, canonicalText, contentTexts } from '../../../../shared/settings/canonical'
+import { canonicalJson, canonicalText, contentParts } from '../../../../shared/settings/canonical'
 import { exampleFiles } from '../../../../shared/settings/examples'
 import { contentOf } from '../../../../shared/settings/content'
 import type { Content } from '../../../../shared/settings/types'
@@ -126,23 +126,23 @@ describe('canonicalText', () => {
   })
 })
 
-describe('contentTexts', () => {
-  it('differ by the home offset alone', () => {
+describe('contentParts', () => {
+  it('make the canonical text, and that without the home offset', () => {
     fc.assert(fc.property(arbitraryContent(), (content) => {
       const { homeOffset, ...setup } = content.setup
-      const texts = contentTexts(content)
-      expect(texts.content).toBe(canonicalText(content))
-      expect(texts.copy).toBe(canonicalText({ ...content, setup }))
-      return (texts.copy === texts.content) === (homeOffset === undefined)
+      const parts = contentParts(content)
+      expect(parts.before + parts.setup + parts.after).toBe(canonicalText(content))
+      expect(parts.before + parts.copySetup + parts.after).toBe(canonicalText({ ...content, setup }))
+      return (parts.copySetup === parts.setup) === (homeOffset === undefined)
     }), { numRuns: 200 })
   })
 
-  it('give one copy text to two units with their own home offsets', () => {
+  it('give one copy to two units with their own home offsets', () => {
     for (const file of exampleFiles) {
       const content = contentOf(file)
       const other = { ...content, setup: { ...content.setup, homeOffset: 77.25 } }
-      expect(contentTexts(other).copy).toBe(contentTexts(content).copy)
-      expect(contentTexts(other).content).not.toBe(contentTexts(content).content)
+      expect(contentParts(other).copySetup).toBe(contentParts(content).copySetup)
+      expect(contentParts(other).setup).not.toBe(contentParts(content).setup)
     }
   })
 })

@@ -24,14 +24,18 @@ const common = new Set([
 
 /** Refuses what is too short, common, or one pattern over and over; `own` are name and e-mail, which must not be all of it. */
 export function assertStrong(password: string, own: readonly string[]): void {
-  const text = normal(password)
-  const plain = text.toLowerCase().replaceAll(/[^\p{L}\p{N}]/gu, '')
-  const weak = [...text].length < shortest ? `A password has at least ${shortest} characters; several words do well.`
-    : common.has(plain) ? 'This password is one of those tried first. Take several words that do not belong together.'
-      : repeats(text) ? 'This password is one pattern repeated. Take several words that do not belong together.'
-        : own.some(word => word !== '' && plain === word.toLowerCase().replaceAll(/[^\p{L}\p{N}]/gu, '')) ? 'A name or an e-mail address is no password.'
-          : null
-  if (weak !== null) throw new Refusal('password-weak', weak, { errors: [{ at: '/password', code: 'password-weak', message: weak }] })
+  const message = weaknessOf(normal(password), own)
+  if (message !== null) throw new Refusal('password-weak', message, { errors: [{ at: '/password', code: 'password-weak', message }] })
+}
+
+const plain = (text: string) => text.toLowerCase().replaceAll(/[^\p{L}\p{N}]/gu, '')
+
+function weaknessOf(text: string, own: readonly string[]): string | null {
+  if ([...text].length < shortest) return `A password has at least ${shortest} characters; several words do well.`
+  if (common.has(plain(text))) return 'This password is one of those tried first. Take several words that do not belong together.'
+  if (repeats(text)) return 'This password is one pattern repeated. Take several words that do not belong together.'
+  if (own.some(word => word !== '' && plain(text) === plain(word))) return 'A name or an e-mail address is no password.'
+  return null
 }
 
 /** One piece of up to five characters, over and over. */

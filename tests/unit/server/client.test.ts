@@ -130,7 +130,7 @@ describe('a write', () => {
 
   it('joins the write that it stands in: one time, one fate', () => {
     let milliseconds = Date.parse('2026-03-03T06:10:00Z')
-    const vault = openVault(folder, { clock: () => { milliseconds += 1000; return milliseconds } })
+    const vault = openVault(folder, { clock: () => (milliseconds += 1000) })
     const actor = personActor(vault, 'Runa Haldersen', ['planner'])
     const times = vault.write(actor, outer => [outer.now, vault.write(actor, inner => inner.now), outer.now])
     expect(new Set(times).size).toBe(1)

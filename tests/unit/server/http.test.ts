@@ -18,8 +18,8 @@ describe('where a request came from', () => {
     () => assertOrigin({ method, headers: { host: '10.0.0.4:3000', ...headers } }, publicOrigin)
 
   it.each([
-    [{ 'sec-fetch-site': 'cross-site' }], [{ 'sec-fetch-site': 'same-site' }], [{ 'origin': 'https://evil.example' }], [{ 'origin': 'null' }], [{ 'origin': 'https://marks.example:8443' }],
-    [{ 'sec-fetch-site': 'cross-site', 'origin': 'https://marks.example' }], [{ 'origin': 'http://10.0.0.4:3000' }],
+    [{ 'sec-fetch-site': 'cross-site' }], [{ 'sec-fetch-site': 'same-site' }], [{ origin: 'https://evil.example' }], [{ origin: 'null' }], [{ origin: 'https://marks.example:8443' }],
+    [{ 'sec-fetch-site': 'cross-site', 'origin': 'https://marks.example' }], [{ origin: 'http://10.0.0.4:3000' }],
   ])('refuses an unsafe one with %j', headers => expect(codeOf(sent(headers))).toBe('origin'))
   it.each([
     [{ 'sec-fetch-site': 'same-origin' }], [{ 'sec-fetch-site': 'none' }], [{ origin: 'https://marks.example' }], [{}],

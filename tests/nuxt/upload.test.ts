@@ -80,7 +80,7 @@ describe('the upload page', () => {
     expect(received).toHaveLength(1)
     expect(received[0]?.query).toMatchObject({ reason: 'New crate, WO-4139', occasion: 'routine', name: 'cas-01-z.json' })
     expect(received[0]?.key).toMatch(/^[0-9a-f]{32}$/)
-    expect(page.get('h1').text()).toBe('1 of 1 files kept')
+    expect(page.get('h1').text()).toBe('1 file kept')
   })
 
   it('keeps what was refused and sends it again with the same key', async () => {

@@ -29,12 +29,20 @@ export function nameplateUnit(name: Name, kind: AxisKind): string {
 }
 
 const choiceWords: Readonly<Record<string, string>> = { p: 'p: pulls to plus (PNP)', n: 'n: pulls to 0 V (NPN)' }
-const sentence = (text: string | undefined) => text === undefined ? undefined : `${text.charAt(0).toUpperCase()}${text.slice(1)}.`
-const many: Readonly<Partial<Record<Name, string>>> = { decimals: 'How many the drive shows.', gearRatio: 'Motor turns a turn of the output. Left empty: 1.', efficiency: '0 to 1, of screw and gear together.' }
+
+/** A description as a sentence: the unit stands at the label already, and what holds when it is left empty is said so. */
+function helpOf(description: string | undefined): string | undefined {
+  if (description === undefined) return undefined
+  const plain = description.replace('± ', '')
+  const unit = units.find(each => plain.startsWith(each)) ?? ''
+  const rest = plain.slice(unit.length).replace(/^:/, '').replace(/;? ?absent = (.*)$/, (_, value: string) => `. Left empty: ${value.replaceAll('-', ' ')}`).replace(/^\. /, '').trim()
+  return rest === '' ? undefined : `${rest.charAt(0).toUpperCase()}${rest.slice(1)}.`
+}
+const ownHelp: Readonly<Partial<Record<Name, string>>> = { decimals: 'How many the drive shows.', gearRatio: 'Motor turns a turn of the output. Left empty: 1.', efficiency: '0 to 1, of screw and gear together.', lead: 'A turn of the screw.', rotorInertia: 'Motor, coupling and screw together.' }
 
 function fieldOf(name: Name, label: string, kind: AxisKind): FormField {
   const property = properties[name] ?? {}
-  const help = many[name] ?? (property.description && units.some(unit => property.description === unit) ? undefined : sentence(property.description))
+  const help = ownHelp[name] ?? helpOf(property.description)
   const common = { name, label, needed: required.includes(name), ...(help ? { help } : {}) }
   const choices = property.enum ?? property.anyOf?.flatMap(({ const: value }) => value === undefined ? [] : [value])
   if (choices) return { ...common, type: 'choice', options: choices.map(value => ({ value: String(value), label: choiceWords[String(value)] ?? String(value).replaceAll('-', ' ') })), ...(typeof choices[0] === 'number' ? { as: 'number' as const } : {}) }

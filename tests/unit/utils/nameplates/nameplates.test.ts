@@ -33,6 +33,14 @@ describe('the form of a nameplate', () => {
       .toEqual(['mm', 'deg', 'N·m', 'mm/s', 'deg/s²', 'mm', '%', 'kg·cm²', ''])
   })
 
+  it('explains without saying the unit twice', () => {
+    const help = (name: string) => nameplateFields('linear').find(field => field.name === name)?.help
+    expect(help('hardMargin')).toBe('From stroke end to hard stop, each end.')
+    expect(help('forceBase')).toBe('What 100 % means. Left empty: rated thrust.')
+    expect(help('firstMove')).toBe('Left empty: 0.')
+    expect(help('repeatability')).toBeUndefined()
+  })
+
   it('counts what stands on it', () => {
     expect(filled({ model: 'M', axisKind: 'linear', stroke: 1 }).count).toBe(3)
   })

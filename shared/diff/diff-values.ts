@@ -1,12 +1,14 @@
 import { setupFieldNames } from '../settings/fields'
+import { zoneFieldNames } from '../settings/move-fields'
 import { step } from '../settings/reading'
-import type { Move } from '../settings/types'
+import type { Move, Zone } from '../settings/types'
 import { changeOf } from './change'
 import { goByPressSpeed, sameMotionInSetup } from './defaults'
 import { sameValue } from './measure'
 import { extraRule } from './rules'
 import type { Sides } from './sides'
 import type { FieldChange } from './types'
+import { walkByNumber } from './walk'
 
 /** Adds the change of the axis kind, if any. */
 export function pushFileChanges(out: FieldChange[], { before, after, is }: Sides): void {
@@ -49,6 +51,20 @@ function sameEntries(a: object, b: object): boolean {
 
 function movesByPressSpeed(partners: Iterable<readonly [Move, Move]>): number[] {
   return [...partners].filter(([was, is]) => goByPressSpeed(was, is)).map(([, is]) => is.move).sort((a, b) => a - b)
+}
+
+/** Adds the changes of all zones, paired by number. */
+export function pushZoneChanges(out: FieldChange[], sides: Sides): void {
+  walkByNumber<Zone>(sides.before.zones, sides.after.zones, zone => zone.zone, (before, i, after, j) => {
+    for (const field of zoneFieldNames) {
+      const was = before?.[field]
+      const is = after?.[field]
+      if (was === is) continue
+      const at = is === undefined ? `/zones/${i}/${field}` : `/zones/${j}/${field}`
+      const rule = (is === undefined ? sides.was : sides.is).zone[field]
+      out.push(changeOf(rule, { at, section: 'zone', row: (after ?? before)?.zone }, was, is, false))
+    }
+  })
 }
 
 /** Adds the changes of the drive's own values, keys by code unit. */

@@ -1,7 +1,6 @@
 import type { Content, Move } from '../settings/types'
 import { MovePass } from './diff-moves'
-import { pushExtraChanges, pushFileChanges, pushSetupChanges } from './diff-values'
-import { pushZoneChanges } from './diff-zones'
+import { pushExtraChanges, pushFileChanges, pushSetupChanges, pushZoneChanges } from './diff-values'
 import { byWeight } from './order'
 import { sidesOf } from './sides'
 import type { DiffContext, FieldChange } from './types'

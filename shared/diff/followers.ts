@@ -8,6 +8,7 @@ export interface Followers {
   readonly agree: (was: number | undefined, is: number | undefined) => boolean
 }
 
+/** The map that a pairing is, applied to followers. Exchanging the sides of all pairs exchanges the arguments of `agree`. */
 export function followersOf(pairs: readonly RowPair[]): Followers {
   const went = new Map<number, number | undefined>()
   const came = new Set<number>()

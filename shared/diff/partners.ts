@@ -1,14 +1,17 @@
 import type { IndexPair } from './table'
 
+/** Stands for a partner that there is not. */
 export const none = -1
 
 /** Partners by index, or `none`: `after[before[i]] === i` wherever there is one. */
 export interface Partners { readonly before: Int32Array, readonly after: Int32Array }
 
+/** Two tables of so many rows, not one of them paired. */
 export function noPartners(before: number, after: number): Partners {
   return { before: new Int32Array(before).fill(none), after: new Int32Array(after).fill(none) }
 }
 
+/** Makes two rows partners, from both sides; either of them must be without one. */
 export function join(partners: Partners, i: number, j: number): void {
   partners.before[i] = j
   partners.after[j] = i

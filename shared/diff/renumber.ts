@@ -1,7 +1,6 @@
 import type { Content } from '../settings/types'
 import { countStatements, MovePass } from './diff-moves'
-import { pushExtraChanges, pushFileChanges, pushSetupChanges } from './diff-values'
-import { pushZoneChanges } from './diff-zones'
+import { pushExtraChanges, pushFileChanges, pushSetupChanges, pushZoneChanges } from './diff-values'
 import { followersOf } from './followers'
 import { byWeight } from './order'
 import { pairRows, type Pairing } from './pair-rows'

@@ -11,6 +11,7 @@ export interface Sides {
   readonly context: DiffContext
 }
 
+/** Rules of both contents; one and the same where they are of one axis kind. */
 export function sidesOf(before: Content, after: Content, context: DiffContext): Sides {
   const is = rulesFor(after.axisKind, context)
   return { before, after, context, is, was: before.axisKind === after.axisKind ? is : rulesFor(before.axisKind, context) }

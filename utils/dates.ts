@@ -3,6 +3,11 @@ export function formatMinute(iso: string, timeZone: string): string {
   return formatShort(iso, timeZone, farAway)
 }
 
+/** As formatMinute, with the letters of the zone at that very time of the year: CET or CEST. */
+export function formatZoned(iso: string, timeZone: string): string {
+  return `${formatMinute(iso, timeZone)} ${zoneWord(new Date(iso), timeZone)}`
+}
+
 /** '12 Feb 2025'. */
 export function formatDate(iso: string, timeZone: string): string {
   return formatDay(iso, timeZone, farAway)

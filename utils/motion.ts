@@ -33,3 +33,8 @@ export function motionOf(content: Content, number: number, nameplate?: Nameplate
   const cruise = motion.segments.filter(segment => segment.a === 0 && Math.abs(segment.v0) >= move.speed * (1 - 1e-9)).reduce((sum, segment) => sum + segment.t1 - segment.t0, 0)
   return { move, profile: motion, start, ...moveTime(motion, content.setup), cruise }
 }
+
+/** True where a change comes to nothing: a speed that was not reached before is not reached now. */
+export function sameMotion(one: ShownMotion, other: ShownMotion): boolean {
+  return JSON.stringify(one.profile.segments) === JSON.stringify(other.profile.segments)
+}

@@ -84,7 +84,9 @@ function timeMeans(change: FieldChange, context: MeansContext): string {
   const was = is && motionOf(context.before, is.move.move, context.nameplateBefore ?? context.nameplate)
   if (!is || !was || was.start.target !== is.start.target || is.move.kind !== was.move.kind) return ''
   const reached = change.field === 'speed' && is.profile.peakSpeed < is.move.speed * (1 - 1e-9) ? ` The speed asked for is not reached: ${number(is.profile.peakSpeed, 1)} ${lengthUnit(context)}/s at most.` : ''
-  return `Move ${is.move.move} takes ${is.atLeast ? 'at least ' : ''}${number(is.seconds, 3)} s, was ${number(was.seconds, 3)} s.${reached}`
+  const was3 = number(was.seconds, 3)
+  const told = number(is.seconds, 3) === was3 ? 'as before' : `was ${was3} s`
+  return `Move ${is.move.move} takes ${is.atLeast ? 'at least ' : ''}${number(is.seconds, 3)} s, ${told}.${reached}`
 }
 
 /** A default that is written out, or no longer is, and comes to the same motion. */

@@ -5,7 +5,6 @@ export const addressOf = {
   machine: (id: number) => `/machines/${id}`,
   axis: (tag: string) => `/axes/${encodeURIComponent(tag)}`,
   version: (tag: string, number: number) => `/axes/${encodeURIComponent(tag)}/versions/${number}`,
-  label: (tag: string) => `/axes/${encodeURIComponent(tag)}/label`,
   /** a stands before, b after; both are ids of versions. */
   changes: (before: number, after: number) => `/changes?a=${before}&b=${after}`,
   upload: () => '/upload',

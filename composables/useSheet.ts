@@ -43,8 +43,10 @@ export function useSheet<Answer>(options: SheetOptions<Answer>) {
       return
     }
     const names = options.fields().map(field => field.name)
-    issues.value = issuesOfProblem(found.problem, names)
-    problem.value = names.some(name => issues.value[name]) && !issues.value[''] ? undefined : found
+    const placed = issuesOfProblem(found.problem, names)
+    const atField = names.some(name => placed[name])
+    issues.value = atField ? { '': found.problem.detail, ...placed } : placed
+    problem.value = atField ? undefined : found
   }
 
   /** Answers what the vault answered, or undefined where the form needs another look. */

@@ -1,13 +1,14 @@
 import type { JudgingContext } from '#shared/api/uploads'
 import type { ReadSettings } from '#shared/settings/types'
 import { bytesInWords, mostBytesOfAll, mostBytesOfFile, mostFiles } from '~/utils/upload/limits'
-import type { ListedFile } from '~/utils/upload/model'
+import type { ListedFile, Reading } from '~/utils/upload/model'
 import { examine, placeAxis, type Examined } from '~/utils/upload/place'
 import { readFile } from '~/utils/upload/read-file'
 import { runQueue } from '~/utils/upload/queue'
 import { isZip, unpack, type NamedBytes } from '~/utils/upload/unpack'
 
 const contextsAtOnce = 6
+const showEvery = 100
 let lastId = 0
 
 const sameBytes = (a: Uint8Array, b: Uint8Array) => a.length === b.length && a.every((byte, index) => byte === b[index])
@@ -29,30 +30,58 @@ export function useUploadList() {
     return asked
   }
 
-  /** All files of this axis again: one more or less in the list changes what the others are compared with. */
-  function placeAgain(axisId: number): void {
+  const readings = new Map<number, Reading>()
+  const axesToPlace = new Set<number>()
+  let due = false
+
+  /** All files of these axes again: one more or less in the list changes what the others are compared with. */
+  function flush(): void {
+    due = false
     const listed = new Set(store.files.map(file => file.id))
-    const ofAxis = [...examined.values()].filter(one => one.context.axis?.id === axisId && listed.has(one.id))
-    for (const [id, reading] of placeAxis(ofAxis, store.words.occasion)) store.setReading(id, reading)
+    for (const axisId of axesToPlace) {
+      const ofAxis = [...examined.values()].filter(one => one.context.axis?.id === axisId && listed.has(one.id))
+      for (const [id, reading] of placeAxis(ofAxis, store.words.occasion)) readings.set(id, reading)
+    }
+    store.setReadings(readings)
+    readings.clear()
+    axesToPlace.clear()
+  }
+
+  /** Many files are read in a moment: the page is told ten times a second, not once a file. */
+  function soon(): void {
+    if (due) return
+    due = true
+    window.setTimeout(flush, showEvery)
+  }
+  function show(id: number, reading: Reading): void {
+    readings.set(id, reading)
+    soon()
+  }
+  function placeAgain(axisId: number): void {
+    axesToPlace.add(axisId)
+    soon()
   }
 
   async function readOne(file: ListedFile): Promise<void> {
     const read = readFile(file.bytes, file.decimal)
-    if ('state' in read) return store.setReading(file.id, read)
+    if ('state' in read) return show(file.id, read)
     try {
       const context = await contextFor(read.file)
       const reading = examine(file.id, file.name, read, context, new Date())
-      if ('state' in reading) return store.setReading(file.id, reading)
+      if ('state' in reading) return show(file.id, reading)
       examined.set(file.id, reading)
       if (context.axis) placeAgain(context.axis.id)
     }
     catch (failure) {
       contexts.clear()
-      store.setReading(file.id, { state: 'unjudged', read, why: toProblem(failure).problem.detail })
+      show(file.id, { state: 'unjudged', read, why: toProblem(failure).problem.detail })
     }
   }
 
-  const readAll = (files: readonly ListedFile[]) => runQueue(files.filter(file => file.reading.state !== 'twin'), contextsAtOnce, readOne)
+  async function readAll(files: readonly ListedFile[]): Promise<void> {
+    await runQueue(files.filter(file => file.reading.state !== 'twin'), contextsAtOnce, readOne)
+    flush()
+  }
 
   async function bytesOf(picked: readonly File[]): Promise<NamedBytes[]> {
     const out: NamedBytes[] = []

@@ -28,8 +28,11 @@ export const useUploads = defineStore('uploads', () => {
   const words = useSessionStorage<Words>('witnessmark-upload-words', noWords(), { mergeDefaults: true })
   const sending = computed(() => startedAt.value !== undefined && endedAt.value === undefined)
 
-  const setReading = (id: number, reading: ListedFile['reading']) => {
-    files.value = files.value.map(file => file.id === id ? { ...file, reading } : file)
+  const setReadings = (readings: ReadonlyMap<number, ListedFile['reading']>) => {
+    files.value = files.value.map((file) => {
+      const reading = readings.get(file.id)
+      return reading ? { ...file, reading } : file
+    })
   }
   const setSending = (id: number, next: Sending) => {
     sendings.value = new Map(sendings.value).set(id, next)
@@ -45,5 +48,5 @@ export const useUploads = defineStore('uploads', () => {
     words.value = { ...noWords(), changedBy: words.value.changedBy }
   }
 
-  return { files, left, sendings, seenStops, startedAt, endedAt, words, sending, setReading, setSending, clear }
+  return { files, left, sendings, seenStops, startedAt, endedAt, words, sending, setReadings, setSending, clear }
 })

@@ -1,6 +1,7 @@
 import type { ReadOutcome, Normalised } from './types'
 import type { Source } from './raw'
-import { TokenError, jsonTree } from './json-tokens'
+import { TokenError } from './json-cursor'
+import { jsonTree } from './json-tokens'
 import { placeOf } from './place'
 import { Problems } from './problems'
 import { readFile } from './read-file'

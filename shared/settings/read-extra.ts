@@ -2,7 +2,9 @@ import type { ExtraValue } from './types'
 import type { RawCell, RawNode, RawObject } from './raw'
 import { type Reading, keyTable, reportDuplicate, sortIntoSlots, step } from './reading'
 import { isNumberText } from '../units/number'
-import { flagOf, readOwnNumber, readText } from './read-value'
+import { unitCell } from './cell-unit'
+import { readOwnNumber } from './read-number'
+import { flagOf, readText } from './read-value'
 import { cutText } from './problems'
 import { type TextRule, checkText, textRules } from './text-rules'
 
@@ -99,6 +101,6 @@ function readCell(reading: Reading, cell: RawCell, at: string): ExtraValue | und
 function checkedUnit(reading: Reading, cell: RawCell, at: string, rule: TextRule): string | undefined {
   const checked = checkText(cell.unit, rule)
   if (typeof checked === 'string') return checked
-  reading.problems.add(checked.code, `${at}/unit`, { ...cell, cell: 4 }, `Unit: ${checked.message}`, { value: cell.unit })
+  reading.problems.add(checked.code, `${at}/unit`, { ...cell, cell: unitCell }, `Unit: ${checked.message}`, { value: cell.unit })
   return undefined
 }

@@ -1,13 +1,14 @@
 import { type AxisKind, type ReadSettings, type SettingsFile, type UnitIdentity, axisKinds, schemaName } from './types'
 import type { RawNode, RawObject } from './raw'
-import { type Reading, type Slots, isNotSet, keyTable, sortIntoSlots } from './reading'
+import { type Reading, type Slots, isNotSet, keyTable, shownIn, sortIntoSlots } from './reading'
 import { contentOf } from './content'
 import { serialToBeWritten } from './identity'
 import { maxExtra, maxReadings, readExtra } from './read-extra'
 import { readMoves } from './read-moves'
 import { readZones } from './read-rows'
 import { readSetup } from './read-setup'
-import { readChoice, readText, readWhole } from './read-value'
+import { readWhole } from './read-number'
+import { readChoice, readText } from './read-value'
 import { type TextRule, textRules } from './text-rules'
 import { cutText } from './problems'
 import { parseTimestamp } from './time'
@@ -72,7 +73,7 @@ function missing(reading: Reading, at: string, spot: RawObject, right: string): 
 function readSchema(reading: Reading, node: RawNode | undefined, root: RawObject): void {
   if (node === undefined) return missing(reading, '/schema', root, `"${schemaName}" belongs here`)
   if (node.kind === 'refused' || ((node.kind === 'text' || node.kind === 'cell') && node.text === schemaName)) return
-  reading.problems.addValue('schema-version', '/schema', node, `${cutText(reading.source.shown(node))} is not read here; this is the reader of ${schemaName}.`)
+  reading.problems.addValue('schema-version', '/schema', node, `${shownIn(reading, node)} is not read here; this is the reader of ${schemaName}.`)
 }
 
 function readAxisKind(reading: Reading, node: RawNode | undefined, root: RawObject): AxisKind | undefined {

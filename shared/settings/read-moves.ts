@@ -1,10 +1,10 @@
 import { type MoveFieldName, moveFields } from './move-fields'
 import { type Move, moveKinds, turns } from './types'
 import type { RawNode, RawObject } from './raw'
-import { type Reading, type Slots, keyTable, sortIntoSlots } from './reading'
-import { cutText } from './problems'
+import { type Reading, type Slots, keyTable, shownIn, sortIntoSlots } from './reading'
 import { type RowContext, maxMoves, readRowNumber, readRows } from './read-rows'
-import { readChoice, readNumber, readText, readWhole } from './read-value'
+import { readNumber, readWhole } from './read-number'
+import { readChoice, readText } from './read-value'
 import { sortedMoveKeys } from './sorted-keys'
 import { largestNumber } from '../units/number'
 import { textRules } from './text-rules'
@@ -110,6 +110,6 @@ function atLeastZero(reading: Reading, at: string, slots: Slots, move: Draft, fi
     const node = slots[slot] as RawNode
     const right = orZero ? '0 or more' : 'more than 0'
     const unused = name === 'speed' || name === 'acceleration' ? '; 0 in both speed and acceleration marks an unused row' : ''
-    reading.problems.addValue('number-range', `${at}/${name}`, node, `${cutText(reading.source.shown(node))} will not do for ${moveFields[name].label}: it must be ${right}${unused}.`)
+    reading.problems.addValue('number-range', `${at}/${name}`, node, `${shownIn(reading, node)} will not do for ${moveFields[name].label}: it must be ${right}${unused}.`)
   }
 }

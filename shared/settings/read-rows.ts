@@ -1,9 +1,8 @@
 import type { AxisKind, Zone } from './types'
 import type { RawNode, RawObject } from './raw'
-import { type Reading, type Slots, keyTable, sortIntoSlots } from './reading'
+import { type Reading, type Slots, keyTable, shownIn, sortIntoSlots } from './reading'
 import { zoneFields } from './move-fields'
-import { cutText } from './problems'
-import { readNumber, readWhole } from './read-value'
+import { readNumber, readWhole } from './read-number'
 
 /** What a row is judged by. */
 export interface RowContext {
@@ -79,7 +78,7 @@ function readZone(reading: Reading, row: RawObject, at: string, context: RowCont
   if (from === undefined || to === undefined || zone === undefined) return undefined
   if (from === to || (from > to && !context.wraps)) {
     const sent = slots[0] as RawNode
-    reading.problems.addValue('order', `${at}/from`, sent, `The zone begins at ${cutText(reading.source.shown(sent))} and ends at ${cutText(reading.source.shown(slots[1] as RawNode))}: from must lie below to.`)
+    reading.problems.addValue('order', `${at}/from`, sent, `The zone begins at ${shownIn(reading, sent)} and ends at ${shownIn(reading, slots[1] as RawNode)}: from must lie below to.`)
     return undefined
   }
   return { from, to, zone }

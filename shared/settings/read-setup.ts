@@ -1,10 +1,10 @@
 import { type SetupField, type SetupFieldName, setupFields } from './fields'
 import type { AxisKind, Setup } from './types'
 import type { RawNode, RawObject } from './raw'
-import { type Reading, keyTable, sortIntoSlots, step } from './reading'
+import { type Reading, keyTable, shownIn, sortIntoSlots, step } from './reading'
 import { sortedSetupNames } from './sorted-keys'
-import { cutText } from './problems'
-import { readChoice, readFlag, readNumber, readOwnNumber, readWhole } from './read-value'
+import { readNumber, readOwnNumber, readWhole } from './read-number'
+import { readChoice, readFlag } from './read-value'
 
 const table = keyTable(sortedSetupNames)
 const fields = sortedSetupNames.map((name): SetupField => setupFields[name])
@@ -43,7 +43,7 @@ function inRange(reading: Reading, node: RawNode, at: string, value: number, fie
   const { above, min = -Infinity, max = Infinity } = field
   if (value >= min && value <= max && (above === undefined || value > above)) return true
   const right = above !== undefined ? `more than ${above}` : max === Infinity ? `${min} or more` : `${min} to ${max}`
-  const shown = cutText(reading.source.shown(node))
+  const shown = shownIn(reading, node)
   reading.problems.addValue('number-range', at, node, `${shown} will not do for ${field.label}: it must be ${right}${unit && ` ${unit}`}.`)
   return false
 }

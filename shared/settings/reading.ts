@@ -1,6 +1,6 @@
 import type { FormatErrorCode } from './types'
 import { type Problems, cutText } from './problems'
-import type { RawNode, RawObject, Source } from './raw'
+import type { RawNode, RawObject, Source, Spot } from './raw'
 import { nearestKey } from './nearest-key'
 
 /** What goes along while one file is read. */
@@ -10,6 +10,11 @@ export interface Reading {
   /** Counted for the receipt. */
   rounded: number
   converted: number
+}
+
+/** What stands at a spot, cut to what a message shows. */
+export function shownIn(reading: Reading, spot: Spot): string {
+  return cutText(reading.source.shown(spot))
 }
 
 /** The known keys of one kind of object, each with its place in the slots. */

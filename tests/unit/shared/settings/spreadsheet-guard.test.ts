@@ -24,7 +24,7 @@ const hostile = fc.string({ unit: fc.constantFrom('=', '+', '-', '@', '\t', '\''
 
 describe('unguard', () => {
   it('undoes guard on any text', () => {
-    fc.assert(fc.property(fc.oneof(hostile, fc.string({ unit: 'binary' })), text => unguard(guard(text)) === text), { numRuns: 3000 })
+    fc.assert(fc.property(fc.oneof(hostile, fc.string({ unit: 'binary' })), text => unguard(guard(text)) === text), { numRuns: 1000 })
   })
 
   it.each([['\'tis', '\'tis'], ['\'=1', '=1'], ['\'\'=1', '\'=1'], ['\'-5', '\'-5'], ['\'', '\''], ['=1', '=1']])('reads %j as %j', (cell, text) => expect(unguard(cell)).toBe(text))

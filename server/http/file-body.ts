@@ -83,7 +83,8 @@ function parseForm(raw: Buffer, contentType: string): Promise<Form> {
     let parser: busboy.Busboy
     try {
       parser = busboy({ headers: { 'content-type': contentType }, limits: { ...fieldLimits, fileSize: fileLimit + 1 }, defParamCharset: 'utf8' })
-    } catch (error) {
+    }
+    catch (error) {
       broken(error)
       return
     }

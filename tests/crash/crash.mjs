@@ -34,23 +34,23 @@ function freePort() {
   })
 }
 
-/** Starts the server and waits until it answers. */
-async function start() {
+/** Starts the server and waits until it has said so and answers. */
+async function start(word = 'vault open') {
   const child = spawn(process.execPath, [entry], {
     env: {
       PATH: process.env.PATH, PORT: String(port), NITRO_HOST: '127.0.0.1', WITNESSMARK_DATA: folder, WITNESSMARK_SCRYPT_COST: '1024',
       WITNESSMARK_ADMIN_EMAIL: admin.email, WITNESSMARK_ADMIN_PASSWORD: admin.password,
     },
-    stdio: ['ignore', 'ignore', 'pipe'],
+    stdio: ['ignore', 'pipe', 'pipe'],
   })
-  let complaint = ''
-  child.stderr.on('data', (chunk) => { complaint += chunk })
+  let printed = ''
+  for (const stream of [child.stdout, child.stderr]) stream.on('data', (chunk) => { printed += chunk })
   for (let attempt = 0; attempt < 400; attempt += 1) {
-    if (child.exitCode !== null) throw new Error(`The server did not start again: ${complaint}`)
-    if (await fetch(`${url}/api/health`).then(answer => answer.ok, () => false)) return child
+    if (child.exitCode !== null) throw new Error(`The server did not start again: ${printed}`)
+    if (printed.includes(word) && await fetch(`${url}/api/health`).then(answer => answer.ok, () => false)) return child
     await wait(25)
   }
-  throw new Error(`The server did not answer: ${complaint}`)
+  throw new Error(`The server did not answer: ${printed}`)
 }
 
 const wait = milliseconds => new Promise(resolve => setTimeout(resolve, milliseconds))
@@ -92,7 +92,7 @@ function nextFile(index) {
   const moves = Array.from({ length: 24 }, (_, move) => ({ move, label: `Station ${move}`, kind: 'absolute', target: move * 7.5, speed: 100 + sent % 400, acceleration: 2000 }))
   return {
     schema: 'witnessmark.axis-settings/1', unit: { serial: `SN-${index}`, model: 'HL40-200V', firmware: '2.4' }, exportedAt: new Date().toISOString(), axisKind: 'linear',
-    setup: { softLimitMin: 0, softLimitMax: 198, thrustLimit: 38 }, moves, extra: { 'Upload': sent },
+    setup: { softLimitMin: 0, softLimitMax: 198, thrustLimit: 38 }, moves, extra: { Upload: sent },
   }
 }
 
@@ -151,7 +151,7 @@ function inspect() {
 }
 
 const began = Date.now()
-let child = await start()
+let child = await start('administrator registered')
 try {
   await registerPlant()
   for (let round = 0; round < rounds && failures.length === 0; round += 1) {

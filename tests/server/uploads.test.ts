@@ -5,7 +5,7 @@ import type { UploadStored } from '../../shared/api/uploads'
 import type { VersionOne, VersionSummary } from '../../shared/api/versions'
 import { admin, startServer, type Reply, type TestServer } from '../support/server'
 import { plantOn, type ServerPlant } from '../support/server-plant'
-import { iso, settingsFile } from '../support/vault-plant'
+import { iso, settingsFile, type FileParts } from '../support/vault-plant'
 
 let server: TestServer
 let plant: ServerPlant
@@ -26,7 +26,7 @@ beforeEach(async () => {
   axisId = (await plant.axis(`LID-${count}.Z`, serial)).axisId
 })
 
-const bytes = (setup: object = {}, rest: Parameters<typeof settingsFile>[0] = {}) => settingsFile({ serial, exportedAt: iso(now - day), setup, ...rest })
+const bytes = (setup: object = {}, rest: FileParts = {}) => settingsFile({ serial, exportedAt: iso(now - day), setup, ...rest })
 const stored = ({ status, json, text }: Reply): UploadStored => {
   if (status !== 201) throw new Error(`${status} ${text}`)
   return json as unknown as UploadStored

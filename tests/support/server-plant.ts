@@ -45,7 +45,8 @@ function countRows(folder: string): Record<string, number> {
   try {
     const tables = sqlite.prepare(`SELECT name FROM sqlite_schema WHERE type = 'table' AND name NOT LIKE 'sqlite_%'`).pluck().all() as string[]
     return Object.fromEntries(tables.map(table => [table, sqlite.prepare(`SELECT count(*) FROM "${table}"`).pluck().get() as number]))
-  } finally {
+  }
+  finally {
     sqlite.close()
   }
 }

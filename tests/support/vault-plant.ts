@@ -84,11 +84,22 @@ function countRows({ sqlite }: Vault): Record<string, number> {
   return Object.fromEntries(tables.map(table => [table, sqlite.prepare(`SELECT count(*) FROM "${table}"`).pluck().get() as number]))
 }
 
+export interface FileParts {
+  readonly serial?: string
+  readonly channel?: number
+  readonly model?: string
+  readonly firmware?: string
+  readonly exportedAt?: string
+  readonly axisKind?: AxisKind
+  readonly setup?: object
+  readonly moves?: readonly object[]
+  readonly zones?: readonly object[]
+  readonly extra?: object
+  readonly readings?: object
+}
+
 /** Bytes of a settings file as a drive would give them out. */
-export function settingsFile(parts: {
-  serial?: string, channel?: number, model?: string, firmware?: string, exportedAt?: string, axisKind?: AxisKind,
-  setup?: object, moves?: readonly object[], zones?: readonly object[], extra?: object, readings?: object,
-} = {}): Buffer {
+export function settingsFile(parts: FileParts = {}): Buffer {
   const { serial = 'SN-0001', channel, model = 'HL40-200V', firmware = '2.4', exportedAt = iso(start), axisKind = 'linear', setup = {}, moves = [], zones = [], extra = {}, readings = {} } = parts
   return Buffer.from(JSON.stringify({ schema: 'witnessmark.axis-settings/1', unit: { serial, channel, model, firmware }, exportedAt, axisKind, setup, moves, zones, extra, readings }), 'utf8')
 }

@@ -38,7 +38,7 @@ const axisRowsOf = (db: VaultDb, ...where: (SQL | undefined)[]) => db.select({
   .leftJoin(unit, eq(unit.id, fitting.unitId))
   .where(and(...where)).orderBy(asc(axis.id))
 
-const axisLists = prepared(db => ({
+export const axisLists = prepared(db => ({
   one: axisRowsOf(db, eq(axis.id, place('id'))).prepare(),
   all: axisRowsOf(db, inBounds(site.id)).prepare(),
   page: axisRowsOf(db, gt(axis.id, place('after')), inBounds(site.id), ifGiven(site.id, 'siteId'), ifGiven(line.id, 'lineId'), ifGiven(machine.id, 'machineId')).limit(place('limit')).prepare(),

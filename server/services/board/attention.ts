@@ -46,7 +46,9 @@ function offText({ state, marked }: AxisListRow): string {
 
 function trayGroup(db: VaultDb, sites: SiteBounds): Attention {
   const { count, since } = countWaiting(db, sites)
-  const items = count === 0 ? [] : waitingGroups(db, sites, 0, named).map(({ tray, upload, guessTag }): Item =>
-    ({ axisId: tray.guessAxisId, tag: guessTag ?? tray.serial ?? upload.name ?? `file ${tray.id}`, versionId: null, knownGoodId: null, text: tray.detail, since: upload.receivedAt }))
+  const items = count === 0
+    ? []
+    : waitingGroups(db, sites, 0, named).map(({ tray, upload, guessTag }): Item =>
+        ({ axisId: tray.guessAxisId, tag: guessTag ?? tray.serial ?? upload.name ?? `file ${tray.id}`, versionId: null, knownGoodId: null, text: tray.detail, since: upload.receivedAt }))
   return { kind: 'tray', count, since, items }
 }

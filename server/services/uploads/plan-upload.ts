@@ -33,11 +33,11 @@ export interface PlannedSighting {
   readonly current: VersionRow
   readonly ingested: Ingested
 }
-export type UploadPlan =
-  | { readonly outcome: 'unreadable', readonly errors: readonly FormatError[], readonly more: number }
-  | { readonly outcome: 'unplaced', readonly unplaced: UnplacedFile, readonly ingested: Ingested }
-  | PlannedSighting
-  | PlannedVersion
+export type UploadPlan
+  = | { readonly outcome: 'unreadable', readonly errors: readonly FormatError[], readonly more: number }
+    | { readonly outcome: 'unplaced', readonly unplaced: UnplacedFile, readonly ingested: Ingested }
+    | PlannedSighting
+    | PlannedVersion
 
 /** Reading needs nothing of the vault, so that it can be done before the write begins. */
 export function readSent(bytes: Uint8Array, { decimal }: Pick<UploadFields, 'decimal'>): ReadOutcome {

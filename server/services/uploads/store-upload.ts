@@ -11,11 +11,11 @@ import { planUpload, readSent } from './plan-upload'
 import { sourceOf, type SentFile } from './store-parts'
 import { storeSighting, storeVersion } from './store-version'
 
-export type UploadOutcome =
-  | { readonly outcome: 'version', readonly answer: UploadStored }
-  | { readonly outcome: 'sighting', readonly answer: UploadSeen }
-  | { readonly outcome: 'tray', readonly answer: { tray: number, problem: TrayProblem, detail: string } }
-  | { readonly outcome: 'unreadable', readonly refusal: Refusal }
+export type UploadOutcome
+  = | { readonly outcome: 'version', readonly answer: UploadStored }
+    | { readonly outcome: 'sighting', readonly answer: UploadSeen }
+    | { readonly outcome: 'tray', readonly answer: { tray: number, problem: TrayProblem, detail: string } }
+    | { readonly outcome: 'unreadable', readonly refusal: Refusal }
 
 /** Stores what came in, whatever it is: a version, a sighting, or a file in the tray; one write for all of it. */
 export function storeUpload(vault: Vault, actor: Actor, sent: SentFile, fields: UploadFields): UploadOutcome {

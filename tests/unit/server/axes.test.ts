@@ -12,7 +12,7 @@ import { voidVersion } from '../../../server/services/versions/void-version'
 import { versionChanges, versionPatch, versionText } from '../../../server/services/versions/version-changes'
 import { versionFile } from '../../../server/services/versions/version-file'
 import { readSettings } from '../../../shared/settings/read'
-import { day, hour, iso, minute, openPlant, settingsFile, start, type Plant } from '../../support/vault-plant'
+import { day, hour, iso, minute, openPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor
@@ -28,11 +28,11 @@ beforeEach(() => {
 })
 afterEach(() => plant.close())
 
-function send(setup: object, rest: Parameters<typeof settingsFile>[0] = {}) {
+function send(setup: object, rest: FileParts = {}) {
   plant.now += minute
   return storeUpload(plant.vault, tobias, { bytes: settingsFile({ setup, exportedAt: iso(plant.now), ...rest }), name: 'lid "2".json' }, {})
 }
-function store(setup: object, rest: Parameters<typeof settingsFile>[0] = {}): number {
+function store(setup: object, rest: FileParts = {}): number {
   const outcome = send(setup, rest)
   if (outcome.outcome !== 'version') throw new Error(JSON.stringify(outcome))
   return outcome.answer.version.id

@@ -7,7 +7,7 @@ import { voidVersion } from '../../../server/services/versions/void-version'
 import type { UploadFields } from '../../../shared/api/uploads'
 import type { Problem } from '../../../shared/api/common'
 import { CodedError } from '../../../shared/errors/coded'
-import { day, minute, openPlant, settingsFile, start, type Plant } from '../../support/vault-plant'
+import { day, minute, openPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor
@@ -26,7 +26,7 @@ function stand(options: Parameters<typeof openPlant>[0] = {}) {
 beforeEach(() => stand())
 afterEach(() => plant.close())
 
-function store(actor: Actor, setup: object, fields: UploadFields = {}, rest: Parameters<typeof settingsFile>[0] = {}): number {
+function store(actor: Actor, setup: object, fields: UploadFields = {}, rest: FileParts = {}): number {
   plant.now += minute
   const outcome = storeUpload(plant.vault, actor, { bytes: settingsFile({ setup, ...rest }), name: null }, fields)
   if (outcome.outcome !== 'version') throw new Error(JSON.stringify(outcome))
@@ -36,7 +36,8 @@ const mark = (actor: Actor, versionId: number) => markKnownGood(plant.vault, act
 function refusal(act: () => unknown): CodedError {
   try {
     act()
-  } catch (error) {
+  }
+  catch (error) {
     if (error instanceof CodedError) return error
     throw error
   }

@@ -2,7 +2,7 @@ import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import type { PersonActor } from '../../../server/database/actor'
 import { storeUpload, type UploadOutcome } from '../../../server/services/uploads/store-upload'
 import type { UploadFields } from '../../../shared/api/uploads'
-import { day, hour, iso, minute, openPlant, settingsFile, start, type Plant } from '../../support/vault-plant'
+import { day, hour, iso, minute, openPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor
@@ -16,7 +16,7 @@ beforeEach(() => {
 })
 afterEach(() => plant.close())
 
-const send = (parts: Parameters<typeof settingsFile>[0], fields: UploadFields = {}): UploadOutcome => {
+const send = (parts: FileParts, fields: UploadFields = {}): UploadOutcome => {
   plant.now += minute
   return storeUpload(plant.vault, runa, { bytes: settingsFile(parts), name: 'lid.json' }, fields)
 }

@@ -5,7 +5,7 @@ import { discardFromTray } from '../../../server/services/tray/discard'
 import { listTray, trayFile } from '../../../server/services/tray/list'
 import { storeUpload } from '../../../server/services/uploads/store-upload'
 import type { UploadFields } from '../../../shared/api/uploads'
-import { day, iso, minute, openPlant, settingsFile, start, type Plant } from '../../support/vault-plant'
+import { day, iso, minute, openPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor
@@ -20,7 +20,7 @@ beforeEach(() => {
 })
 afterEach(() => plant.close())
 
-function keep(parts: Parameters<typeof settingsFile>[0] = {}, fields: UploadFields = {}, actor: Actor = tobias): number {
+function keep(parts: FileParts = {}, fields: UploadFields = {}, actor: Actor = tobias): number {
   plant.now += minute
   const outcome = storeUpload(plant.vault, actor, { bytes: settingsFile(parts), name: 'night.json' }, fields)
   if (outcome.outcome !== 'tray') throw new Error(JSON.stringify(outcome))

@@ -1,0 +1,103 @@
+import { spawn, type ChildProcess } from 'node:child_process'
+import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs'
+import { Agent, request } from 'node:http'
+import { createServer, type AddressInfo } from 'node:net'
+import { tmpdir } from 'node:os'
+import { join } from 'node:path'
+import { fileURLToPath } from 'node:url'
+
+const entry = fileURLToPath(new URL('../.output/server/index.mjs', import.meta.url))
+const admin = { email: 'ines.okafor@larkfield.example', password: 'copper kettle under the stairs' }
+
+export interface Reply { readonly status: number, readonly text: string, readonly cookie: string | undefined }
+
+/** The built server on a vault of its own, and a client that keeps its connections. */
+export class BuiltServer {
+  private readonly folder = mkdtempSync(join(tmpdir(), 'witnessmark-bench-'))
+  private agent = new Agent({ keepAlive: true, maxSockets: 4 })
+  private child: ChildProcess | undefined
+  private port = 0
+
+  async start(): Promise<void> {
+    if (!existsSync(entry)) throw new Error('There is no built server: run npm run build first.')
+    this.port = await freePort()
+    this.child = spawn(process.execPath, [entry], {
+      env: { PATH: process.env.PATH, PORT: String(this.port), NITRO_HOST: '127.0.0.1', WITNESSMARK_DATA: this.folder, WITNESSMARK_ADMIN_EMAIL: admin.email, WITNESSMARK_ADMIN_PASSWORD: admin.password },
+      stdio: ['ignore', 'pipe', 'ignore'],
+    })
+    let printed = ''
+    this.child.stdout?.on('data', (chunk: Buffer) => { printed += chunk.toString('utf8') })
+    for (let attempt = 0; attempt < 400; attempt += 1) {
+      if (printed.includes('administrator registered')) return
+      await new Promise(resolve => setTimeout(resolve, 50))
+    }
+    throw new Error(`The server did not come up: ${printed}`)
+  }
+
+  /** New connections: while this process worked on its own, the server gave up those that were idle. */
+  reconnect(): void {
+    this.agent.destroy()
+    this.agent = new Agent({ keepAlive: true, maxSockets: 4 })
+  }
+
+  /** CPU time of the server so far, all its threads, in milliseconds; the kernel counts in steps of 10. */
+  cpu(): number {
+    const fields = readFileSync(`/proc/${this.child?.pid}/stat`, 'utf8').replace(/^.*\) /s, '').split(' ')
+    return (Number(fields[11]) + Number(fields[12])) * 10
+  }
+
+  send(method: string, path: string, cookie: string, body?: Buffer | object): Promise<Reply> {
+    const bytes = body === undefined || Buffer.isBuffer(body) ? body : Buffer.from(JSON.stringify(body), 'utf8')
+    return new Promise((resolve, reject) => {
+      const outgoing = request({ agent: this.agent, host: '127.0.0.1', port: this.port, method, path, headers: { ...(bytes ? { 'content-type': 'application/json', 'content-length': bytes.length } : {}), ...(cookie === '' ? {} : { cookie }) } }, (incoming) => {
+        let text = ''
+        incoming.setEncoding('utf8').on('data', (part: string) => { text += part })
+        incoming.on('end', () => resolve({ status: incoming.statusCode ?? 0, text, cookie: incoming.headers['set-cookie']?.at(-1)?.replace(/;.*$/s, '') }))
+      })
+      outgoing.on('error', reject)
+      outgoing.end(bytes)
+    })
+  }
+
+  async signIn(email = admin.email): Promise<string> {
+    const { cookie, text } = await this.send('POST', '/api/sign-in', '', { email, password: admin.password })
+    if (cookie === undefined) throw new Error(`No sign-in: ${text}`)
+    return cookie
+  }
+
+  async made(path: string, cookie: string, body: object): Promise<number> {
+    const { status, text } = await this.send('POST', path, cookie, body)
+    if (status !== 201) throw new Error(`${path} answered ${status}: ${text}`)
+    return (JSON.parse(text) as { id: number }).id
+  }
+
+  /** Registers a planner and an axis with a unit of this serial; answers the planner's cookie. */
+  async withAxis(serial: string): Promise<string> {
+    const email = 'runa.haldersen@larkfield.example'
+    await this.made('/api/people', await this.signIn(), { name: 'Runa Haldersen', email, roles: ['planner'], siteIds: [], password: admin.password })
+    const cookie = await this.signIn(email)
+    const siteId = await this.made('/api/sites', cookie, { name: 'Larkfield Preserves', timeZone: 'Europe/Copenhagen' })
+    const lineId = await this.made('/api/lines', cookie, { siteId, name: 'Jar line 1' })
+    const machineId = await this.made('/api/machines', cookie, { lineId, name: 'Lid press 2' })
+    const axisId = await this.made('/api/axes', cookie, { machineId, tag: 'LID-02.Z', axisKind: 'linear' })
+    const unitId = await this.made('/api/units', cookie, { serial, model: 'HL40-200V' })
+    await this.made('/api/fittings', cookie, { axisId, unitId, at: '2020-01-01T00:00:00Z' })
+    return cookie
+  }
+
+  stop(): void {
+    this.agent.destroy()
+    this.child?.kill('SIGKILL')
+    rmSync(this.folder, { recursive: true, force: true })
+  }
+}
+
+function freePort(): Promise<number> {
+  return new Promise((resolve) => {
+    const probe = createServer()
+    probe.listen(0, '127.0.0.1', () => {
+      const { port } = probe.address() as AddressInfo
+      probe.close(() => resolve(port))
+    })
+  })
+}

@@ -121,6 +121,6 @@ export interface ReadSettings {
 }
 
 /** Either the file, or the first 100 errors and how many more there are. */
-export type ReadOutcome =
-  | { readonly ok: true, readonly value: ReadSettings }
-  | { readonly ok: false, readonly errors: readonly FormatError[], readonly more: number }
+export type ReadOutcome
+  = | { readonly ok: true, readonly value: ReadSettings }
+    | { readonly ok: false, readonly errors: readonly FormatError[], readonly more: number }

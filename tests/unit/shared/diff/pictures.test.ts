@@ -170,6 +170,109 @@ const pictures: Record<string, string> = {
     3 → 4 | absolute 30→31 250 2000
     4 → 5 | absolute 40    250 2000
     moves 1–4 became 2–5`,
+
+  'two rows inserted at different places': `
+    0 → 0 | absolute  0  250 2000
+    – → 1 | absolute 75  100 1000
+    1 → 2 | absolute 10  250 2000
+    2 → 3 | absolute 20  250 2000
+    – → 4 | absolute 85  100 1000
+    3 → 5 | absolute 30  250 2000
+    4 → 6 | absolute 40  250 2000
+    moves 1–2 became 2–3
+    moves 3–4 became 5–6`,
+
+  'a row inserted and one deleted further on: the numbers behind hold again': `
+    0 → 0 | absolute  0  250 2000
+    – → 1 | absolute 75  100 1000
+    1 → 2 | absolute 10  250 2000
+    2 → 3 | absolute 20  250 2000
+    3 → 4 | absolute 30  250 2000
+    4 → – | absolute 40  250 2000
+    5 → 5 | absolute 50  250 2000
+    moves 1–3 became 2–4`,
+
+  'neighbours swapped': `
+    0 → 0 | absolute  0  250 2000
+    2 → 1 | relative 20  100 1000
+    1 → 2 | absolute 10  400 3000
+    3 → 3 | absolute 30  250 2000
+    moves 1–1 became 2–2
+    moves 2–2 became 1–1`,
+
+  'a row taken to the end': `
+    0 → 0 | absolute  0  250 2000
+    2 → 1 | absolute 20  250 2000
+    3 → 2 | absolute 30  100 1000
+    4 → 3 | absolute 40  250 2000
+    1 → 4 | absolute 10  400 3000
+    moves 1–1 became 4–4
+    moves 2–4 became 1–3`,
+
+  'three rows in a ring': `
+    0 → 0 | absolute  0  250 2000
+    3 → 1 | absolute 30  100 1000
+    1 → 2 | absolute 10  400 3000
+    2 → 3 | press    20  150 1500 forceLimit=40 approach=15
+    4 → 4 | absolute 40  250 2000
+    moves 1–2 became 2–3
+    moves 3–3 became 1–1`,
+
+  'a chain inserted with its followers': `
+    0 → 0 | absolute  0  250 2000 next=1⇒3
+    – → 1 | absolute 75  100 1000 next=2
+    – → 2 | absolute 76  100 1000
+    1 → 3 | absolute 10  250 2000 next=2⇒4 dwell=200
+    2 → 4 | absolute 20  250 2000
+    3 → 5 | absolute 30  250 2000 next=0
+    moves 1–3 became 3–5`,
+
+  'a follower given and one taken away count for what a row does': `
+    0 → 0 | absolute  0  250 2000 next=–→3
+    – → 1 | absolute 75  100 1000
+    1 → 2 | absolute 10  250 2000
+    2 → 3 | absolute 20  250 2000 next=3→–
+    3 → 4 | absolute 30  250 2000
+    moves 1–3 became 2–4`,
+
+  'a block moved on with empty numbers before it': `
+    0  → 0  | absolute  0  250 2000
+    1  → 10 | absolute 10  250 2000
+    2  → 11 | absolute 20  250 2000
+    3  → 12 | absolute 30  250 2000
+    moves 1–3 became 10–12`,
+
+  'a deceleration written out in a row that moved': `
+    – → 0 | absolute 75  100 1000
+    0 → 1 | absolute  0  250 2000
+    1 → 2 | absolute 10  250 2000 deceleration=–→2000
+    2 → 3 | absolute 20  250 2000
+    moves 0–2 became 1–3`,
+
+  'a table that was all unused, filled: nothing to tell but edits': `
+    0 → 0 | absolute 0→10 0→250 0→2000
+    1 → 1 | absolute 0→20 0→250 0→2000
+    2 → 2 | absolute 0    0     0`,
+
+  'a table emptied': `
+    0 → – | absolute  0  250 2000
+    1 → – | absolute 10  250 2000`,
+
+  'a table begun': `
+    – → 0 | absolute  0  250 2000 label=Home
+    – → 1 | relative -5  250 2000 comment=back`,
+
+  'every second row deleted': `
+    0 → 0 | absolute  0  250 2000
+    1 → – | absolute 10  250 2000
+    2 → 1 | absolute 20  100 1000
+    3 → – | absolute 30  250 2000
+    4 → 2 | press    40  400 3000 forceLimit=30 approach=35
+    5 → – | absolute 50  250 2000
+    6 → 3 | relative  6  150 1500
+    moves 2–2 became 1–1
+    moves 4–4 became 2–2
+    moves 6–6 became 3–3`,
 }
 
 describe('move tables as pictures', () => {

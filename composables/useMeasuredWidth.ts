@@ -4,8 +4,8 @@ import type { Ref } from 'vue'
 /** A4 landscape between its margins, at 96 px an inch. */
 const printWidth = 1030
 
-/** The width that a picture is drawn for: what its box has on the screen, the sheet's own in print. 0 until it is known. */
-export function useMeasuredWidth(box: Ref<HTMLElement | null>): Ref<number> {
+/** The width that a picture is drawn for: what its box has on the screen, its part of the sheet in print. 0 until it is known. */
+export function useMeasuredWidth(box: Ref<HTMLElement | null>, partOfSheet = 1): Ref<number> {
   const measured = ref(0)
   const printing = ref(false)
   useResizeObserver(box, ([entry]) => {
@@ -17,5 +17,5 @@ export function useMeasuredWidth(box: Ref<HTMLElement | null>): Ref<number> {
   useEventListener(window, 'afterprint', () => {
     printing.value = false
   })
-  return computed(() => printing.value ? printWidth : measured.value)
+  return computed(() => printing.value ? Math.round(printWidth * partOfSheet) : measured.value)
 }

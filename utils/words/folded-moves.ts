@@ -1,8 +1,8 @@
 import type { MovesTold, ToldRow, ToldRun } from './moves-told'
 
-export type MoveEntry =
-  | { readonly key: string, readonly run: ToldRun, readonly index: number, readonly row?: undefined }
-  | { readonly key: string, readonly run?: undefined, readonly index: number, readonly row: ToldRow, readonly hidden: boolean, readonly bracket: string }
+export type MoveEntry
+  = | { readonly key: string, readonly run: ToldRun, readonly index: number, readonly row?: undefined }
+    | { readonly key: string, readonly run?: undefined, readonly index: number, readonly row: ToldRow, readonly hidden: boolean, readonly bracket: string }
 
 /**
  * The rows with a line before each run that moved. Rows of a folded run, and rows as before while they are not asked for,

@@ -1,7 +1,6 @@
 import type { FieldChange, Renumbering, RowPair } from '#shared/diff/types'
-import type { Content } from '#shared/settings/types'
+import type { Content, Move, Weight } from '#shared/settings/types'
 import { cellChanges } from './rows'
-import type { Move, Weight } from '#shared/settings/types'
 
 /*
  * The move tables of two contents as one: each row with its partner, and the runs that only changed their number said in

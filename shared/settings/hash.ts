@@ -18,14 +18,10 @@ export interface HashedContent { readonly text: string, readonly hashes: Content
 
 const encoder = new TextEncoder()
 
-/** SHA-256 of a text in UTF-8, in lower-case hex. */
-export function sha256Hex(text: string, sha256: Sha256): string {
-  return hexOf(sha256(encoder.encode(text)))
-}
-
-function hexOf(bytes: Uint8Array): string {
+/** SHA-256 of bytes in lower-case hex, two digits a byte. */
+export function sha256Hex(bytes: Uint8Array, sha256: Sha256): string {
   let hex = ''
-  for (const byte of bytes) hex += (byte < 16 ? '0' : '') + byte.toString(16)
+  for (const byte of sha256(bytes)) hex += (byte < 16 ? '0' : '') + byte.toString(16)
   return hex
 }
 
@@ -44,7 +40,7 @@ export function hashContent(content: Content, sha256: Sha256): HashedContent {
   const { before, setup, copySetup, after } = contentParts(content)
   const [start, end] = [encoder.encode(before), encoder.encode(after)]
   // The two hashes differ in the setup alone: long move tables are encoded once.
-  const hashWith = (middle: string) => hexOf(sha256(joined(start, encoder.encode(middle), end)))
+  const hashWith = (middle: string) => sha256Hex(joined(start, encoder.encode(middle), end), sha256)
   const contentHash = hashWith(setup)
   const copyHash = copySetup === setup ? contentHash : hashWith(copySetup)
   return { text: before + setup + after, hashes: { contentHash, copyHash, scribeCode: scribeCode(copyHash) } }

@@ -16,7 +16,7 @@ const one = new Exact(1)
 const unit = (name: string, times: string, over?: string): Unit =>
   ({ name, times: new Exact(times), over: over === undefined ? one : new Exact(over) })
 
-export const dimensions = {
+const dimensions = {
   length: [unit('mm', '1'), unit('µm', '0.001'), unit('cm', '10'), unit('m', '1000'), unit('in', '25.4')],
   speed: [unit('mm/s', '1'), unit('m/s', '1000'), unit('in/s', '25.4')],
   acceleration: [unit('mm/s²', '1'), unit('m/s²', '1000'), unit('in/s²', '25.4'), unit('g', '9806.65')],

@@ -18,12 +18,15 @@ describe('the hash function that is handed in', () => {
     ['abc', 'ba7816bf8f01cfea414140de5dae2223b00361a396177a9cb410ff61f20015ad'],
     ['abcdbcdecdefdefgefghfghighijhijkijkljklmklmnlmnomnopnopq', '248d6a61d20638b8e5c026930c3e6039a33ce45964ff2167f6ecedd419db06c1'],
     ['01234567'.repeat(80), '594847328451bdfa85056225462cc1d867d877fb388df0ce35f25ab5562bfbb5'],
-  ])('of %j is written in lower-case hex', (text, hash) => expect(sha256Hex(text, sha256)).toBe(hash))
+  ])('of %j is written in lower-case hex', (text, hash) => expect(sha256Hex(new TextEncoder().encode(text), sha256)).toBe(hash))
 
-  it('is given UTF-8', () => expect(sha256Hex('Größe ² 😀', sha256)).toBe(hexOf('Größe ² 😀')))
+  it('is given UTF-8', () => {
+    const content = { ...emptyContent('linear'), extra: { Größe: '² 😀' } }
+    expect(hashesOf(content, sha256).contentHash).toBe(hexOf(canonicalText(content)))
+  })
 
   it('has its bytes written in two digits each', () => {
-    expect(sha256Hex('', () => Uint8Array.from([0, 1, 15, 16, 255]))).toBe('00010f10ff')
+    expect(sha256Hex(new Uint8Array(), () => Uint8Array.from([0, 1, 15, 16, 255]))).toBe('00010f10ff')
   })
 })
 

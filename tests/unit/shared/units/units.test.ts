@@ -1,9 +1,9 @@
 import { all, create } from 'mathjs'
 import { describe, expect, it } from 'vitest'
 import { setupFieldNames, setupFields } from '../../../../shared/settings/fields'
-import { fromCanonical, toCanonical } from '../../../../shared/units/convert'
+import { toCanonical } from '../../../../shared/units/convert'
 import { Exact } from '../../../../shared/units/exact'
-import { dimensions, findUnit, pi, spellUnit, unitNames, unitsFor } from '../../../../shared/units/units'
+import { findUnit, pi, spellUnit, unitNames, unitsFor } from '../../../../shared/units/units'
 
 const math = create(all ?? {})
 
@@ -77,18 +77,8 @@ describe('factors', () => {
   })
 })
 
-describe('toCanonical and fromCanonical', () => {
-  it('are each other’s inverse for every unit of the table', () => {
-    for (const units of Object.values(dimensions)) {
-      for (const unit of units) {
-        const value = new Exact('123.456789')
-        const back = fromCanonical(toCanonical(value, unit), unit)
-        expect(back.toDecimalPlaces(100).eq(value), unit.name).toBe(true)
-      }
-    }
-  })
-
-  it('lose nothing: a number of 40 digits times the longest factor', () => {
+describe('toCanonical', () => {
+  it('loses nothing: a number of 40 digits times the longest factor', () => {
     const value = new Exact('1234567890.123456789012345678901234567891')
     const factor = BigInt('13558179483314004')
     const product = BigInt('1234567890123456789012345678901234567891') * factor

@@ -10,13 +10,13 @@ export const addressOf = {
   upload: () => '/upload',
   tray: () => '/tray',
   places: () => '/places',
+  placesList: () => '/places?list',
   units: () => '/units',
   nameplates: () => '/nameplates',
   nameplate: (id: number) => `/nameplates/${id}`,
   rules: () => '/rules',
   people: () => '/people',
   format: () => '/format',
-  interface: () => '/interface',
   interface: () => '/interface',
 }
 

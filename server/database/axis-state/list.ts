@@ -6,6 +6,7 @@ import { boundsText, ifGiven, inBounds } from '../bounds'
 import { fitting } from '../fitting/table'
 import { knownGood } from '../known-good/table'
 import { line } from '../line/table'
+import { logQueries } from '../log/queries'
 import { machine } from '../machine/table'
 import { person } from '../person/table'
 import { prepared, type VaultDb } from '../prepared'
@@ -40,7 +41,7 @@ const axisRowsOf = (db: VaultDb, ...where: (SQL | undefined)[]) => db.select({
 
 export const axisLists = prepared(db => ({
   one: axisRowsOf(db, eq(axis.id, place('id'))).prepare(),
-  all: axisRowsOf(db, inBounds(site.id)).prepare(),
+  all: axisRowsOf(db).prepare(),
   page: axisRowsOf(db, gt(axis.id, place('after')), inBounds(site.id), ifGiven(site.id, 'siteId'), ifGiven(line.id, 'lineId'), ifGiven(machine.id, 'machineId')).limit(place('limit')).prepare(),
 }))
 
@@ -48,8 +49,19 @@ export type AxisListRow = NonNullable<ReturnType<ReturnType<typeof axisLists>['o
 
 export const readAxisRow = (db: VaultDb, id: number): AxisListRow | undefined => axisLists(db).one.get({ id })
 
-/** Every axis of the sites, by id. */
-export const readAllAxes = (db: VaultDb, sites: SiteBounds): AxisListRow[] => axisLists(db).all.all({ sites: boundsText(sites) })
+const kept = new WeakMap<VaultDb, { readonly logSeq: number, readonly rows: readonly AxisListRow[] }>()
+
+/**
+ * Every axis of the sites, by id. Nothing about an axis changes without a log entry, so that the rows of the newest entry stand
+ * for all who look until the next one: at 10,000 axes reading them takes a quarter of a second.
+ */
+export function readAllAxes(db: VaultDb, sites: SiteBounds): readonly AxisListRow[] {
+  const logSeq = logQueries(db).newest.get()?.seq ?? -1
+  const known = kept.get(db)
+  const rows = known?.logSeq === logSeq ? known.rows : axisLists(db).all.all()
+  kept.set(db, { logSeq, rows })
+  return sites === null ? rows : rows.filter(row => sites.includes(row.site.id))
+}
 
 export interface AxisFilter { readonly siteId?: number | undefined, readonly lineId?: number | undefined, readonly machineId?: number | undefined }
 

@@ -9,10 +9,15 @@ const checkQueries = prepared(db => ({
   newestSet: db.select({ set: checkSet, revision: nameplateRevision.revision }).from(checkSet)
     .leftJoin(nameplateRevision, eq(nameplateRevision.id, checkSet.nameplateRevisionId))
     .where(eq(checkSet.versionId, sql.placeholder('versionId'))).orderBy(desc(checkSet.id)).limit(1).prepare(),
+  counts: db.select({ stop: checkSet.stop, warn: checkSet.warn, note: checkSet.note, unknown: checkSet.unknown }).from(checkSet)
+    .where(eq(checkSet.versionId, sql.placeholder('versionId'))).orderBy(desc(checkSet.id)).limit(1).prepare(),
   results: db.select().from(checkResult).where(eq(checkResult.checkSetId, sql.placeholder('setId'))).orderBy(asc(checkResult.seq)).prepare(),
   insertSet: inserter(db, checkSet),
   insertResult: inserter(db, checkResult),
 }))
+
+/** How many results of each level the newest judgement of a version has; undefined where it has none. */
+export const readLevelCounts = (db: VaultDb, versionId: number): Record<Level, number> | undefined => checkQueries(db).counts.get({ versionId })
 
 export interface StoredJudgement {
   readonly ruleSet: string

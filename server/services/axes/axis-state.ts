@@ -1,8 +1,9 @@
 import { compareContents } from '#shared/diff/compare'
+import { diffRenumbered } from '#shared/diff/renumber'
 import { countByWeight } from '#shared/diff/summary'
 import type { Comparison } from '#shared/diff/types'
 import { countReceived, readAxisState, replaceAxisState } from '#server/database/axis-state/queries'
-import { readJudgement } from '#server/database/check/queries'
+import { readLevelCounts } from '#server/database/check/queries'
 import { judgingQueries } from '#server/database/judging/queries'
 import { knownGoodQueries } from '#server/database/known-good/queries'
 import type { VaultDb } from '#server/database/prepared'
@@ -17,13 +18,15 @@ export function refreshAxisState(db: VaultDb, axisId: number): void {
   const current = versionQueries(db).current.get({ axisId }) ?? null
   const open = judgingQueries(db).openAtAxis.get({ axisId })
   const { versions, sightings, lastUploadAt } = countReceived(db, axisId)
-  const { stop, warn, note, unknown } = current ? readJudgement(db, current.id).counts : { stop: 0, warn: 0, note: 0, unknown: 0 }
+  const counts = current && readLevelCounts(db, current.id)
   replaceAxisState(db, {
-    axisId, ...statusOf(db, axisId, current, mark), versions, sightings, lastUploadAt, stop, warn, note, unknown,
+    axisId, ...statusOf(db, axisId, current, mark), versions, sightings, lastUploadAt, ...(counts ?? noChecks),
     knownGoodId: mark?.id ?? null, knownGoodVersionId: mark?.versionId ?? null,
     currentVersionId: current?.id ?? null, fittingId: open?.fitting.id ?? null,
   })
 }
+
+const noChecks = { stop: 0, warn: 0, note: 0, unknown: 0 }
 
 type Status = Pick<AxisStateRow, 'status' | 'offHarm' | 'offMotion' | 'offText' | 'offSince' | 'sense'>
 const nothingOff = { offHarm: 0, offMotion: 0, offText: 0, offSince: null, sense: null } as const
@@ -34,26 +37,31 @@ function statusOf(db: VaultDb, axisId: number, current: VersionRow | null, mark:
   if (mark.versionId === current.id) return { status: 'in-line', ...nothingOff }
   const comparison = againstKnownGood(db, axisId, current)
   if (comparison?.verdict !== 'differs') return { status: 'in-line', ...nothingOff }
-  const off = countByWeight(comparison.differences)
+  const off = comparison.counts
   const earlier = readAxisState(db, axisId)
   const stays = earlier?.status === 'off' && earlier.knownGoodId === mark.id
   const since = mark.at > current.receivedAt ? mark.at : current.receivedAt
   return { status: 'off', offHarm: off.harm, offMotion: off.motion, offText: off.text, offSince: stays ? earlier.offSince : since, sense: senseOf(comparison) }
 }
 
-function againstKnownGood(db: VaultDb, axisId: number, current: VersionRow): Comparison | null {
+function againstKnownGood(db: VaultDb, axisId: number, current: VersionRow): CountedComparison | null {
   const place = judgingQueries(db).axis.get({ id: axisId })
   const unit = unitRows(db).byId.get({ id: current.unitId })
   return place && unit ? compareWithKnownGood(readAgainst(db, place, unit)) : null
 }
 
+/** What differs beyond tolerance, and how many differences that is as it is told: rows renumbered are not rows rewritten. */
+interface CountedComparison extends Comparison { readonly counts: ReturnType<typeof countByWeight> }
+
 /** The current version of an axis, against its known-good in force; null where either is missing. */
-export function compareWithKnownGood(against: ReadAgainst): Comparison | null {
+function compareWithKnownGood(against: ReadAgainst): CountedComparison | null {
   const { knownGood, current, nameplate } = against
   if (!knownGood || !current) return null
-  return compareContents(knownGood.content, current.content, {
-    sameUnit: knownGood.version.unitId === current.version.unitId, context: diffContextOf(against), ...(nameplate ? { nameplate: nameplate.nameplate } : {}),
+  const context = diffContextOf(against)
+  const comparison = compareContents(knownGood.content, current.content, {
+    sameUnit: knownGood.version.unitId === current.version.unitId, context, ...(nameplate ? { nameplate: nameplate.nameplate } : {}),
   })
+  return { ...comparison, counts: countByWeight(diffRenumbered(knownGood.content, current.content, context)?.changes ?? comparison.differences) }
 }
 
 /** Whether the weightiest numeric difference goes up or down; differences come sorted by weight. */

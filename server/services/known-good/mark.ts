@@ -25,10 +25,10 @@ export function markKnownGood(vault: Vault, actor: Actor, versionId: number, wor
     const { db } = vault
     const version = versionRow(db, versionId)
     const marker = markerOf(actor)
-    if (versionQueries(db).voidOf.get({ versionId })) throw new Refusal('already-void', `Version ${version.number} is void: it cannot be what the axis is restored to.`)
     const against = againstOf(db, version)
     const file = fileOf(db, version)
     if (against.place.site.fourEyes) assertFourEyes(db, marker, version, file, against)
+    if (versionQueries(db).voidOf.get({ versionId })) throw new Refusal('already-void', `Version ${version.number} is void: it cannot be what the axis is restored to.`)
     assertNoStops(db, write, version, file, against)
     return putMark(db, write, { axisId: version.axisId, versionId, byPerson: marker }, words)
   })

@@ -1,6 +1,6 @@
 import type { FieldChange, Renumbering, RowPair } from '#shared/diff/types'
 import type { Content, Move, Weight } from '#shared/settings/types'
-import { cellChanges } from './rows'
+import { cellsByMove } from './rows'
 
 /*
  * The move tables of two contents as one: each row with its partner, and the runs that only changed their number said in
@@ -38,12 +38,12 @@ const heaviest = (changes: Iterable<FieldChange>): Weight | undefined => {
 }
 
 export function tellMoves(before: Content, after: Content, pairs: readonly RowPair[], changes: readonly FieldChange[], renumbered: readonly Renumbering[]): MovesTold {
-  const cells = cellChanges(changes)
+  const cells = cellsByMove(changes)
   const find = (content: Content, move: number | undefined) => move === undefined ? undefined : content.moves.find(other => other.move === move)
   const runOf = (pair: RowPair) => renumbered.findIndex(run => pair.before !== undefined && pair.after === pair.before + run.by && pair.before >= run.first && pair.before <= run.last)
   const rows = pairs.map((pair): ToldRow => {
     const [was, is] = [find(before, pair.before), find(after, pair.after)]
-    const own = new Map([...cells].filter(([key]) => pair.before !== undefined && key.startsWith(`${pair.after ?? ''} `)).map(([, change]) => [change.field, change]))
+    const own = (pair.before !== undefined && pair.after !== undefined && cells.get(pair.after)) || new Map<string, FieldChange>()
     const weight = heaviest(own.values())
     const run = runOf(pair)
     const moved = pair.before !== pair.after

@@ -54,9 +54,13 @@ export function changeLines(changes: readonly FieldChange[]): ChangeLine[] {
   return [...lines.values()]
 }
 
-/** Changes of single fields of moves that stay, by `number field`: what the cells of a move table ask. */
-export function cellChanges(changes: readonly FieldChange[]): Map<string, FieldChange> {
+/** Changes of single fields of moves that stay, by move and field: what the cells of a move table ask. */
+export function cellsByMove(changes: readonly FieldChange[]): Map<number, Map<string, FieldChange>> {
   const whole = wholeRows(changes)
-  const cells = changes.filter(change => change.section === 'move' && !whole.has(rowKey(change) ?? ''))
-  return new Map(cells.map(change => [`${change.row ?? ''} ${change.field}`, change]))
+  const byMove = new Map<number, Map<string, FieldChange>>()
+  for (const change of changes) {
+    if (change.section !== 'move' || change.row === undefined || whole.has(rowKey(change) ?? '')) continue
+    byMove.set(change.row, (byMove.get(change.row) ?? new Map<string, FieldChange>()).set(change.field, change))
+  }
+  return byMove
 }

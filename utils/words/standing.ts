@@ -8,5 +8,5 @@ export function asIfToday(axis: Axis, compared: { readonly answer: ChangesAnswer
   if (!compared || compared.answer.compare !== 'differs') return { ...axis, status: 'in-line', off: none, sense: null }
   const heaviest = compared.answer.changes.find(change => change.delta !== undefined)
   const sense = heaviest?.delta === undefined ? null : heaviest.delta < 0 ? 'less' : 'more'
-  return { ...axis, status: 'off', off: countByWeight(compared.answer.changes), sense }
+  return { ...axis, status: 'off', off: countByWeight(compared.answer.told?.changes ?? compared.answer.changes), sense }
 }

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { diffContents } from '../../../../shared/diff/diff'
 import type { FieldChange } from '../../../../shared/diff/types'
 import { flatPairs, movesSentence, runWords, tellMoves } from '../../../../utils/words/moves-told'
-import { cellChanges, changeLines } from '../../../../utils/words/rows'
+import { cellsByMove, changeLines } from '../../../../utils/words/rows'
 import { after, before } from './lid-press'
 
 const pairs = [{ before: 0, after: 0 }, { before: 1, after: 1 }, { before: 2, after: 2 }, { after: 3 }, { before: 3, after: 4 }, { before: 4, after: 5 }, { before: 5, after: 6 }]
@@ -30,7 +30,7 @@ describe('changeLines', () => {
       { at: '/moves/4/dwell', section: 'move', row: 3, field: 'dwell', before: 120, weight: 'motion', watched: true },
     ]
     expect(changeLines(gone).map(line => line.row?.fields.length ?? 0)).toEqual([2, 0])
-    expect([...cellChanges(gone).keys()]).toEqual(['3 dwell'])
+    expect([...cellsByMove(gone)].map(([move, cells]) => [move, ...cells.keys()])).toEqual([[3, 'dwell']])
   })
 })
 

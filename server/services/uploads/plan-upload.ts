@@ -3,9 +3,10 @@ import { judge } from '#shared/checks/judge'
 import type { Judgement } from '#shared/checks/types'
 import { diffContents } from '#shared/diff/diff'
 import { diffRenumbered } from '#shared/diff/renumber'
+import { countByWeight } from '#shared/diff/summary'
 import type { FieldChange, Renumbering } from '#shared/diff/types'
 import { readSettings } from '#shared/settings/read'
-import type { FormatError, ReadOutcome } from '#shared/settings/types'
+import type { FormatError, ReadOutcome, Weight } from '#shared/settings/types'
 import type { Actor } from '#server/database/actor'
 import { readContent } from '#server/database/content/queries'
 import type { VaultDb } from '#server/database/prepared'
@@ -25,6 +26,8 @@ export interface PlannedVersion {
   readonly base: VersionRow | null
   readonly changes: readonly FieldChange[]
   readonly renumbered: readonly Renumbering[]
+  /** Of the reading that says less, as people count. */
+  readonly counts: Readonly<Record<Weight, number>>
   readonly judgement: Judgement
 }
 export interface PlannedSighting {
@@ -66,10 +69,12 @@ function planVersion(db: VaultDb, placed: PlacedFile, against: ReadAgainst, inge
   const before = base === null ? null : base.id === current?.id && against.current ? against.current.content : readContent(db, base.contentId)
   const context = diffContextOf(against)
   const changes = before ? diffContents(before, ingested.content, context) : []
+  const told = before && changes.length > 1 ? diffRenumbered(before, ingested.content, context) : undefined
   return {
     outcome: 'version', placed, against, ingested, late, base, changes,
     number: (queries.highestNumber.get({ axisId })?.number ?? 0) + 1,
-    renumbered: (before && changes.length > 1 ? diffRenumbered(before, ingested.content, context)?.renumbered : undefined) ?? [],
+    renumbered: told?.renumbered ?? [],
+    counts: countByWeight(told?.changes ?? changes),
     judgement: judge(judgeInputOf(against, ingested.content, ingested.file.unit)),
   }
 }

@@ -1,5 +1,4 @@
 import type { UploadFields, UploadSeen, UploadStored } from '#shared/api/uploads'
-import { countByWeight } from '#shared/diff/summary'
 import type { Normalised } from '#shared/settings/types'
 import { seesSite, type Actor } from '#server/database/actor'
 import { insertChanges } from '#server/database/change/queries'
@@ -43,7 +42,7 @@ function insertVersion(db: VaultDb, write: Write, source: Source, fields: Upload
     capturedAt: new Date(times.capturedAt).toISOString(), receivedAt: write.now, clockDoubtful: times.clockDoubtful, late: plan.late,
     reason: fields.reason ?? null, workOrder: fields.workOrder ?? null, changedBy: fields.changedBy ?? null, allowedBy: fields.allowedBy ?? null,
     storedBy: source.sender.personId, storedByToken: source.sender.tokenId, engine: engineVersion, copyHash: hashes.copyHash, scribeCode: hashes.scribeCode,
-    model: file.unit.model, firmware: file.unit.firmware ?? null, ...countByWeight(plan.changes),
+    model: file.unit.model, firmware: file.unit.firmware ?? null, ...plan.counts,
     file: { unit: file.unit, exportedAt, ...(exportedBy === undefined ? {} : { exportedBy }), ...(note === undefined ? {} : { note }), readings, normalised },
   } as const
   const id = versionQueries(db).insert(row)

@@ -30,8 +30,8 @@ export default defineNuxtConfig({
   compatibilityDate: '2026-12-01',
   nitro: { esbuild: { options: { target: 'node20' } } },
   typescript: {
-    tsConfig: { exclude: ['../tests', '../fixtures', '../shared', '../bench', '../scripts', '../drizzle.config.ts'] },
-    sharedTsConfig: { include: ['../tests/unit/shared/**/*', '../tests/support/arbitrary-content.ts'] },
+    tsConfig: { exclude: ['../tests/architecture', '../tests/crash', '../tests/e2e', '../tests/server', '../tests/support', '../tests/unit', '../fixtures', '../shared', '../bench', '../scripts', '../drizzle.config.ts', '../vitest.config.ts'] },
+    sharedTsConfig: { include: ['../tests/unit/shared/**/*'] },
     strict: true,
   },
   telemetry: false,

@@ -1,4 +1,4 @@
-import { defineNuxtModule } from '@nuxt/kit'
+import { defineNuxtModule } from 'nuxt/kit'
 import { routes } from '../shared/api/routes'
 
 /** Answers 404 to what is in no table; the only handler that stands for itself. */

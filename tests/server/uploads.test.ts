@@ -52,7 +52,7 @@ describe('POST /api/uploads', () => {
     const form = new FormData()
     form.set('occasion', 'as-found')
     form.set('reason', 'belt changed')
-    form.set('file', new Blob([bytes({ thrustLimit: 38 })]), 'Deckel ä.json')
+    form.set('file', new Blob([new Uint8Array(bytes({ thrustLimit: 38 }))]), 'Deckel ä.json')
     const { status, json } = await server.call('POST', '/api/uploads?occasion=routine', { as: plant.as.technician, raw: form })
     expect(status).toBe(201)
     expect(json).toMatchObject({ version: { occasion: 'as-found', reason: 'belt changed' } })

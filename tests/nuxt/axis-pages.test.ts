@@ -1,0 +1,138 @@
+import { mountSuspended, registerEndpoint } from '@nuxt/test-utils/runtime'
+import { flushPromises } from '@vue/test-utils'
+import { readBody, setResponseStatus } from 'h3'
+import { afterEach, beforeEach, describe, expect, it } from 'vitest'
+import AxisPage from '~/pages/axes/[tag]/index.vue'
+import VersionPage from '~/pages/axes/[tag]/versions/[n].vue'
+import ChangesPage from '~/pages/changes.vue'
+import MachinePage from '~/pages/machines/[id].vue'
+import { after, axis, before, changesAnswer, knownGood, life, nameplate, today } from '../support/axis-answers'
+
+const never = { ...axis, id: 8, tag: 'NEW-01.X', status: 'never-read', off: { harm: 0, motion: 0, text: 0 }, knownGood: null, current: null, versions: 0, sightings: 0 }
+registerEndpoint('/api/axes/tag:LID-03.Z', () => axis)
+registerEndpoint('/api/axes/tag:NEW-01.X', () => never)
+registerEndpoint('/api/axes/7', () => axis)
+registerEndpoint('/api/axes', () => ({ items: [axis, never], next: null }))
+registerEndpoint('/api/axes/tag:LID-03.Z/life', () => ({ items: life, next: null }))
+registerEndpoint('/api/axes/tag:NEW-01.X/life', () => ({ items: [], next: null }))
+registerEndpoint('/api/axes/tag:LID-03.Z/versions/15', () => today)
+registerEndpoint('/api/axes/tag:LID-03.Z/versions/14', () => knownGood)
+registerEndpoint('/api/versions/15', () => today)
+registerEndpoint('/api/versions/14', () => knownGood)
+registerEndpoint('/api/versions/15/changes', () => changesAnswer(before, after))
+registerEndpoint('/api/judging-context', () => ({ problem: null, registered: null, axis: null, current: null, knownGood: null, nextNumber: 16, nameplate, rules: [] }))
+registerEndpoint('/api/machines/3', () => ({ id: 3, rev: 1, lineId: 1, name: 'LID-03' }))
+registerEndpoint('/api/units', () => ({ items: [], next: null }))
+const signed: unknown[] = []
+registerEndpoint('/api/versions/15/known-good', {
+  method: 'POST',
+  handler: async (event) => {
+    signed.push(await readBody(event))
+    setResponseStatus(event, 409)
+    return { type: 'about:blank', title: 'Stop checks stand', status: 409, code: 'stop-checks', detail: 'One stop stands against it.', errors: [{ at: '/setup/thrustLimit', code: 'site-rule', message: 'is 55 %, 45 % is allowed.' }] }
+  },
+})
+
+const words = (text: string | null) => (text ?? '').replace(/\s+/g, ' ').trim()
+const settle = async () => {
+  for (let round = 0; round < 12; round++) {
+    await flushPromises()
+    await new Promise(resolve => setTimeout(resolve, 5))
+  }
+}
+let close = () => {}
+async function open(page: typeof AxisPage, route: string) {
+  const mounted = await mountSuspended(page, { route })
+  close = () => mounted.unmount()
+  await settle()
+  return mounted
+}
+afterEach(() => close())
+async function press(page: Awaited<ReturnType<typeof open>>, word: string) {
+  const button = page.findAll('button').find(one => words(one.text()).startsWith(word))
+  if (!button) throw new Error(`no button ${word}`)
+  await button.trigger('click')
+  await settle()
+}
+
+beforeEach(() => {
+  useSession().begin({ id: 1, name: 'Runa Haldersen', email: 'runa@larkfield.example', roles: ['planner'], sites: [{ id: 1, name: 'Larkfield', timeZone: 'Europe/Berlin' }], plant: 'Larkfield Preserves', empty: false, shared: false })
+})
+
+describe('the page of an axis', () => {
+  it('shows today against the known-good, and where to compare them', async () => {
+    const page = await open(AxisPage, '/axes/LID-03.Z')
+    expect(page.get('h1').text()).toBe('LID-03.Z')
+    expect(page.findAll('h2').map(head => head.text())).toEqual(['Its life', 'On the rail', 'Checks', 'Moves', 'Setup'])
+    expect(page.findAll('a').some(link => link.attributes('href') === '/changes?a=14&b=15')).toBe(true)
+    expect(words(page.get('dl').text())).toContain('v15, 30 Nov 2026 06:12 CET')
+  })
+
+  it('says how to begin where nothing was read', async () => {
+    const page = await open(AxisPage, '/axes/NEW-01.X')
+    expect(words(page.text())).toContain('Nothing has been uploaded for this axis.')
+    expect(page.findAll('h2').map(head => head.text())).toEqual(['Its life'])
+  })
+
+  it('hands out a kit only after the cautions were read', async () => {
+    const page = await open(AxisPage, '/axes/LID-03.Z')
+    await press(page, 'Take a kit')
+    const take = () => [...document.querySelectorAll('button')].find(one => words(one.textContent) === 'Take the kit')
+    expect(take()?.disabled).toBe(true)
+    expect(words(document.body.textContent)).toContain('Values to be taught are not copied.')
+    document.querySelector<HTMLInputElement>('[role="dialog"] input[type="checkbox"]')?.click()
+    await settle()
+    expect(take()?.disabled).toBe(false)
+  })
+
+  it('keeps its name where it cannot be read', async () => {
+    const page = await open(AxisPage, '/axes/NOPE-1')
+    expect(page.get('h1').text()).toBe('NOPE-1')
+    expect(page.get('[role="alert"]').text()).not.toBe('')
+  })
+})
+
+describe('the page of a version', () => {
+  it('says who, when and why, and gives the file in three forms', async () => {
+    const page = await open(VersionPage, '/axes/LID-03.Z/versions/15')
+    expect(words(page.text())).toMatch(/Changed by ?nobody named.*Why ?no reason given/)
+    expect(words(page.text())).toContain('Read as UTF-8, 2 values converted from another unit, nothing rounded.')
+    expect(page.findAll('a[download]').map(link => link.attributes('href'))).toEqual(['json', 'csv', 'original'].map(form => `/api/versions/15/file?form=${form}`))
+  })
+
+  it('sends a signature and says in words why it was refused', async () => {
+    signed.length = 0
+    const page = await open(VersionPage, '/axes/LID-03.Z/versions/15')
+    await press(page, 'Mark known-good')
+    const password = document.querySelector<HTMLInputElement>('[role="dialog"] input[type="password"]')
+    if (!password) throw new Error('no password field')
+    password.value = 'demo: runa plans well'
+    password.dispatchEvent(new Event('input'))
+    await settle()
+    document.querySelector('[role="dialog"] form')?.dispatchEvent(new Event('submit', { cancelable: true }))
+    await settle()
+    expect(signed).toEqual([{ meaning: 'approved', password: 'demo: runa plans well' }])
+    expect(words(document.querySelector('[role="dialog"] [role="alert"]')?.textContent ?? '')).toContain('thrust limit is 55 %, 45 % is allowed.')
+    expect(password.value).toBe('')
+  })
+})
+
+describe('other pages', () => {
+  it('compares by id or by tag and number', async () => {
+    const page = await open(ChangesPage, '/changes?a=LID-03.Z/14&b=15')
+    expect(words(page.text())).toContain('243.2 N became 352 N.')
+    expect(versionPath('LID-03.Z/14')).toBe('/api/axes/tag:LID-03.Z/versions/14')
+    expect([versionPath('15'), versionPath('0'), versionPath('../x'), versionPath('a/b/1')]).toEqual(['/api/versions/15', undefined, undefined, undefined])
+  })
+  it('asks for two versions where none is named', async () => {
+    const page = await open(ChangesPage, '/changes')
+    expect(page.get('h1').text()).toBe('Changes')
+    expect(page.findAll('legend').map(legend => legend.text())).toEqual(['Before, above', 'After, below'])
+  })
+  it('stands the axes of a machine side by side', async () => {
+    const page = await open(MachinePage, '/machines/3')
+    const row = page.findAll('tbody tr').find(one => one.text().startsWith('thrust limit'))
+    expect(page.findAll('thead a').map(link => link.text())).toEqual(['LID-03.Z', 'NEW-01.X'])
+    expect(row?.findAll('td').map(cell => cell.text())).toEqual(['55', '–'])
+  })
+})

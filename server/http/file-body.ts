@@ -118,10 +118,10 @@ function parseForm(raw: Buffer, contentType: string): Promise<Form> {
   })
 }
 
-/** A name is shown and offered for download: no control or direction characters, at most 255. */
-function cleanName(name: string | undefined): string | null {
-  const clean = (name ?? '').replaceAll(/[\p{Cc}\p{Cf}]/gu, '').slice(0, 255)
-  return clean === '' ? null : clean
+/** A file name as it is shown and offered for download: no folders, no control or direction characters, at most 255. */
+export function cleanName(name: string | null | undefined): string | null {
+  const clean = (name ?? '').replace(/^.*[/\\]/s, '').replaceAll(/[\p{Cc}\p{Cf}]/gu, '')
+  return clean === '' ? null : [...clean].slice(0, 255).join('')
 }
 
 function digestOf(bytes: Buffer, fields: Readonly<Record<string, string>>): string {

@@ -1,6 +1,6 @@
 import { uploadFields, type UploadFields } from '#shared/api/uploads'
 import type { IncomingMessage } from 'node:http'
-import { readFileBody, type FileBody } from './file-body'
+import { cleanName, readFileBody, type FileBody } from './file-body'
 import { checked } from './input'
 
 export interface UploadBody {
@@ -14,5 +14,5 @@ export async function readUploadBody(request: IncomingMessage, query: UploadFiel
   const { bytes, name, fields, digest } = await readFileBody(request)
   const given = Object.fromEntries(Object.entries(fields).filter(([, value]) => value !== ''))
   const all = checked(uploadFields, { ...query, ...given }, 'query') as UploadFields
-  return { sent: { bytes, name: name ?? all.name ?? null }, fields: all, digest }
+  return { sent: { bytes, name: name ?? cleanName(all.name) }, fields: all, digest }
 }

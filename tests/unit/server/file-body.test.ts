@@ -2,7 +2,7 @@ import { createServer, request, type Server } from 'node:http'
 import { connect, type AddressInfo } from 'node:net'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { CodedError } from '#shared/errors/coded'
-import { fileLimit, readFileBody } from '../../../server/http/file-body'
+import { cleanName, fileLimit, readFileBody } from '../../../server/http/file-body'
 
 interface Answer { code?: string, message?: string, bytes?: number, text?: string, name?: string | null, fields?: Record<string, string>, digest?: string }
 
@@ -127,5 +127,15 @@ describe('a form', () => {
 
   it('never hands on a name with direction characters', async () => {
     expect((await form([filePart('{}', 'a\u202eb\u2066c.json')])).name).toBe('abc.json')
+  })
+})
+
+describe('a file name', () => {
+  it('loses folders and what must not be shown, and is cut between characters', () => {
+    expect(cleanName('C:\\drives\\lid 2.json')).toBe('lid 2.json')
+    expect(cleanName('../../etc/lid.csv')).toBe('lid.csv')
+    expect(cleanName('a\r\nb\u0000.json')).toBe('ab.json')
+    expect(cleanName('\u{1f529}'.repeat(300))).toBe('\u{1f529}'.repeat(255))
+    expect([cleanName(''), cleanName(null), cleanName('drives/')]).toEqual([null, null, null])
   })
 })

@@ -119,6 +119,19 @@ describe('a file with an axis', () => {
     expect(leaves[0]?.actor).toEqual({ kind: 'person', id: runa.id, name: 'Runa Haldersen' })
   })
 
+  it('keeps its changes as rows, what was not set as NULL', () => {
+    send({ setup: { thrustLimit: 38, jogSpeed: 20 }, extra: { Filter: 'B' } })
+    const { version } = stored(send({ setup: { thrustLimit: 55, speedLimit: 300 }, extra: { Filter: true } }))
+    const rows = plant.vault.sqlite.prepare('SELECT seq, section, field, row, before, after, unit, delta, percent, points, weight, watched FROM change WHERE version_id = ? ORDER BY seq').all(version.id)
+    const none = { row: null, delta: null, percent: null, points: null }
+    expect(rows).toEqual([
+      { ...none, seq: 0, section: 'setup', field: 'speedLimit', before: null, after: '300', unit: 'mm/s', weight: 'harm', watched: 1 },
+      { ...none, seq: 1, section: 'setup', field: 'jogSpeed', before: '20', after: null, unit: 'mm/s', weight: 'harm', watched: 1 },
+      { ...none, seq: 2, section: 'setup', field: 'thrustLimit', before: '38', after: '55', unit: '%', delta: 17, points: 17, weight: 'harm', watched: 1 },
+      { ...none, seq: 3, section: 'extra', field: 'Filter', before: '"B"', after: 'true', unit: null, weight: 'motion', watched: 0 },
+    ])
+  })
+
   it('names a person by id, and refuses one that is not there', () => {
     const tobias = plant.person('Tobias Achterberg', ['technician'])
     expect(stored(send({}, { changedBy: `person:${tobias.id}`, allowedBy: 'shift lead' })).version).toMatchObject({ changedBy: 'Tobias Achterberg', allowedBy: 'shift lead' })

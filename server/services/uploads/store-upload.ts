@@ -43,9 +43,16 @@ function assertPeople(db: VaultDb, { changedBy, allowedBy }: UploadFields): void
   }
 }
 
-function keepUnreadable(db: VaultDb, write: Write, sent: SentFile, fields: UploadFields, { errors, more }: { errors: readonly FormatError[], more: number }): Refusal {
+function keepUnreadable(db: VaultDb, write: Write, sent: SentFile, fields: UploadFields, { errors: found, more }: { errors: readonly FormatError[], more: number }): Refusal {
+  const errors = found.map(wellFormed)
   const first = errors[0]
   const detail = first ? `${first.message}${errors.length + more > 1 ? ` And ${errors.length + more - 1} more.` : ''}` : 'The file cannot be read.'
   const tray = keepInTray(db, write, sent, fields, { problem: 'unreadable', detail, siteId: null, errors, more, ingested: null })
   return new Refusal('settings-unreadable', detail, { errors, more, tray })
+}
+
+/** An error quotes the file, which may hold half a surrogate pair: that has no UTF-8, and would keep the error out of the log. */
+function wellFormed(error: FormatError): FormatError {
+  const { at, message, value, meant } = error
+  return { ...error, at: at.toWellFormed(), message: message.toWellFormed(), ...(value === undefined ? {} : { value: value.toWellFormed() }), ...(meant === undefined ? {} : { meant: meant.toWellFormed() }) }
 }

@@ -183,6 +183,18 @@ describe('a file without an axis', () => {
     expect(plant.rows()).toEqual({ ...before, upload: 1, tray: 1, log: (before.log ?? 0) + 2 })
   })
 
+  it('is kept whatever stands in it: half a character, control characters, bytes that are no text', () => {
+    const file = (rest: string) => `{"schema":"witnessmark.axis-settings/1","unit":{"serial":"S","model":"M"},"exportedAt":"2026-11-30T08:15:00Z","axisKind":"linear",${rest}}`
+    const bad = [
+      file('"note":"\\ud83d"'), file('"exportedBy":"\\udc00 x"'), file('"extra":{"\\ud83d":1}'), file(`"exportedBy":"${'\u{1f529}'.repeat(90)}"`), file(`"extra":{"${'x\u{1f529}'.repeat(90)}":1}`),
+      file('"\\ud83dkey":1'), file('"note":"\\u0000"'), file('"setup":{"homingMethod":"\\ud83d\\ud83d"}'), '\u0000\u0001', 'section,row,field,value,unit\nextra,,\u0000,1,\n', '',
+    ].map(text => Buffer.from(text, 'utf8')).concat([Buffer.from([0xff, 0xfe, 0x00, 0xd8, 0x00, 0xd8]), Buffer.from([0x7b, 0xc3, 0x28])])
+    for (const [index, bytes] of bad.entries()) {
+      expect(storeUpload(plant.vault, runa, { bytes, name: null }, {}).outcome, `file ${index}`).toBe('unreadable')
+    }
+    expect(plant.rows()).toMatchObject({ tray: bad.length, upload: bad.length })
+  })
+
   it('is told where it probably belongs by equal content', () => {
     const setup = Object.fromEntries(['softLimitMin', 'homingSpeed', 'speedLimit', 'jogSpeed', 'thrustLimit', 'overloadLevel', 'overloadTime', 'smoothingTime'].map((name, index) => [name, index + 1]))
     const moves = Array.from({ length: 8 }, (_, index) => ({ move: index, kind: 'absolute', target: index, speed: 10, acceleration: 100 }))

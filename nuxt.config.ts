@@ -12,6 +12,8 @@ export default defineNuxtConfig({
     'nuxt-auth-utils',
     'nuxt-security',
   ],
+  // Without server rendering the development server of this version looks for an entry that only this path sets (nuxt/nuxt#35033).
+  $development: { experimental: { viteEnvironmentApi: true } },
   // Everything stands behind sign-in, and a page once open must work on where there is no reception.
   ssr: false,
   devtools: { enabled: false },
@@ -23,9 +25,10 @@ export default defineNuxtConfig({
       link: [{ rel: 'icon', type: 'image/svg+xml', href: '/favicon.svg' }],
     },
   },
-  tailwindcss: { cssPath: '~/assets/css/main.css', viewer: false },
-  spaLoadingTemplate: 'spa-loading-template.html',
   colorMode: { classSuffix: '', dataValue: 'theme', preference: 'system', fallback: 'light', storageKey: 'witnessmark-theme' },
+  spaLoadingTemplate: 'spa-loading-template.html',
+  // The sealed cookie holds a random session id and nothing else. Password and `secure` are set at the start (server/plugins/vault.ts).
+  runtimeConfig: { session: { name: 'witnessmark', password: '', maxAge: 7 * 24 * 60 * 60, cookie: { sameSite: 'lax', secure: false } } },
   srcDir: '.',
   compatibilityDate: '2026-12-01',
   nitro: { esbuild: { options: { target: 'node20' } } },
@@ -35,12 +38,8 @@ export default defineNuxtConfig({
     strict: true,
   },
   telemetry: false,
-  // Without server rendering the development server of this version looks for an entry that only this path sets (nuxt/nuxt#35033).
-  $development: { experimental: { viteEnvironmentApi: true } },
   // Its own routes are taken out (modules/route-table.ts): who is signed in, GET /api/me says.
   auth: { loadStrategy: 'none' },
-  // The sealed cookie holds a random session id and nothing else. Password and `secure` are set at the start (server/plugins/vault.ts).
-  runtimeConfig: { session: { name: 'witnessmark', password: '', maxAge: 7 * 24 * 60 * 60, cookie: { sameSite: 'lax', secure: false } } },
   eslint: { config: { stylistic: true } },
   security: {
     strict: true,
@@ -67,4 +66,5 @@ export default defineNuxtConfig({
       crossOriginEmbedderPolicy: 'require-corp',
     },
   },
+  tailwindcss: { cssPath: '~/assets/css/main.css', viewer: false },
 })

@@ -6,7 +6,7 @@ import { changeSchema, checkSchema, contentSchema, judgedSchema, occasions, renu
 
 /** What stands beside the file: in the query of a raw body, or as fields of a multipart one. An empty value is the same as none. */
 export const uploadFields = z.strictObject({
-  occasion: z.enum(['commissioning', 'routine', 'as-found', 'as-left']).optional(),
+  occasion: z.enum(occasions).exclude(['read-back']).optional(),
   reason: z.string().max(2000).optional(), workOrder: z.string().max(80).optional(),
   changedBy: z.string().max(80).optional().describe('free text, or person:ID'), allowedBy: z.string().max(80).optional().describe('free text, or person:ID'),
   capturedAt: instantSchema.optional(), axis: axisRef.optional(), decimal: z.enum(['point', 'comma']).optional(),

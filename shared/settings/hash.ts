@@ -1,7 +1,9 @@
-import type { Sha256 } from '../errors/result'
 import type { Content } from './types'
 import { contentParts } from './canonical'
 import { scribeCode } from './scribe'
+
+/** A hash function handed in by the caller: `shared/` has neither Node's crypto nor the browser's. Answers 32 bytes. */
+export type Sha256 = (bytes: Uint8Array) => Uint8Array
 
 /** Hashes in 64 lower-case hex digits. */
 export interface ContentHashes {

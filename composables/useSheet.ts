@@ -8,6 +8,8 @@ export interface SheetOptions<Answer> {
   readonly schema: () => z.ZodType
   /** What is edited; absent = something new is made. */
   readonly record: () => Readonly<Body> | undefined
+  /** What stands in the vault now, as `record` has it; needed where its answer is not as flat as the form. */
+  readonly flat?: () => ((current: unknown) => Body) | undefined
   /** What a new one begins with. */
   readonly start?: () => Readonly<Body> | undefined
   /** Goes along with what stands in the fields: ids of the place, the step. */
@@ -39,7 +41,7 @@ export function useSheet<Answer>(options: SheetOptions<Answer>) {
     const found = toProblem(failure)
     const { code, current } = found.problem
     if (code === 'edited-meanwhile' && current !== null && typeof current === 'object') {
-      theirs.value = current as Body
+      theirs.value = options.flat?.()?.(current) ?? current as Body
       return
     }
     const names = options.fields().map(field => field.name)

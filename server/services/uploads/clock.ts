@@ -10,9 +10,20 @@ export interface Times {
   readonly clockDoubtful: boolean
 }
 
+/** How long before the vault heard of it a unit may have been read out already: an archive is brought in with its own times. */
+const archiveReach = 3 * 365 * 24 * 60 * 60_000
+
 /**
- * Judges the clock of a file, all in epoch milliseconds. `knownSince` = the beginning of the unit's known life: when it was
- * registered or first fitted, whichever is earlier. A drive whose battery is empty says 1970; nothing is refused for it.
+ * Where a unit's known life begins: three years before it was registered or first fitted, whichever came first. An archive of
+ * that reach keeps its order; what says it is older was more likely read from a drive whose clock had lost its battery.
+ */
+export function knownLifeFrom(registeredAt: number, fittings: readonly FittingSpan[]): number {
+  return Math.min(registeredAt, ...fittings.map(({ from }) => from)) - archiveReach
+}
+
+/**
+ * Judges the clock of a file, all in epoch milliseconds. `knownSince` = the beginning of the unit's known life. A drive whose
+ * battery is empty says 1970; nothing is refused for it.
  */
 export function timesOf(capturedAt: number, receivedAt: number, knownSince: number): Times {
   const clockDoubtful = capturedAt > receivedAt + aheadAllowed || capturedAt < knownSince

@@ -5,7 +5,7 @@ import { judgingQueries, type AxisPlace } from '#server/database/judging/queries
 import type { VaultDb } from '#server/database/prepared'
 import type { FittingRow, TrayProblem, UnitRow } from '#server/database/schema'
 import { unitRows } from '#server/database/unit/queries'
-import { fittingFor, timesOf, type Times } from './clock'
+import { fittingFor, knownLifeFrom, timesOf, type Times } from './clock'
 
 export interface PlacedFile {
   readonly ok: true
@@ -33,8 +33,7 @@ export function millisecondsOf(timestamp: string): number {
 /** Where a unit sat when a file of it was captured, and the times of the file; place undefined: nowhere. */
 export function placeUnit(db: VaultDb, unit: UnitRow, capturedAt: string, receivedAt: number): { place: AxisPlace | undefined, times: Times } {
   const fittings = judgingQueries(db).fittings.all({ unitId: unit.id }).map(spanOf)
-  const knownSince = Math.min(Date.parse(unit.madeAt), ...fittings.map(({ from }) => from))
-  const times = timesOf(millisecondsOf(capturedAt), receivedAt, knownSince)
+  const times = timesOf(millisecondsOf(capturedAt), receivedAt, knownLifeFrom(Date.parse(unit.madeAt), fittings))
   const fitting = fittingFor(fittings, times)
   return { times, place: fitting && judgingQueries(db).axis.get({ id: fitting.row.axisId }) }
 }

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { fittingFor, timesOf } from '../../../server/services/uploads/clock'
+import { fittingFor, knownLifeFrom, timesOf } from '../../../server/services/uploads/clock'
 
 const minute = 60_000
 const day = 1440 * minute
@@ -24,6 +24,15 @@ describe('the clock of a file', () => {
     fc.assert(fc.property(fc.integer({ min: 0, max: 2 * now }), (capturedAt) => {
       expect(timesOf(capturedAt, now, known).orderAt).toBeLessThanOrEqual(now + 10 * minute)
     }))
+  })
+})
+
+describe('the known life of a unit', () => {
+  it('reaches three years back from when it was registered or first fitted', () => {
+    const years = 3 * 365 * day
+    expect(knownLifeFrom(now, [])).toBe(now - years)
+    expect(knownLifeFrom(now, [{ from: now - 90 * day, to: null }])).toBe(now - 90 * day - years)
+    expect(knownLifeFrom(now - 200 * day, [{ from: now - 90 * day, to: null }])).toBe(now - 200 * day - years)
   })
 })
 

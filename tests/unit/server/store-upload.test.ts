@@ -88,6 +88,16 @@ describe('a file with an axis', () => {
     expect(stored(send({ serial: 'SN-0002', exportedAt: iso(start - 40 * day) })).version.axisId).toBe(third)
   })
 
+  it('from before its unit was fitted keeps its order on the first axis: an archive does not become current', () => {
+    const other = plant.axis('LID-03.Z')
+    const moved = plant.unit('SN-0002')
+    plant.fit(other, moved, start - 100 * day, start - 50 * day)
+    plant.fit(plant.axis('LID-04.Z'), moved, start - 50 * day)
+    stored(send({ serial: 'SN-0002', exportedAt: iso(start - 60 * day), setup: { thrustLimit: 50 } }))
+    const archived = stored(send({ serial: 'SN-0002', exportedAt: iso(start - 400 * day), setup: { thrustLimit: 38 } }))
+    expect(archived.version).toMatchObject({ axisId: other, number: 2, late: true, current: false, clockDoubtful: false })
+  })
+
   it('goes where its serial says though the sender named another axis, and the log says so', () => {
     plant.axis('LID-09.Z')
     expect(stored(send({}, { axis: 'tag:lid-09.z' })).version.axisId).toBe(axisId)

@@ -42,7 +42,6 @@ export const acts = {
 } as const
 
 export type Act = keyof typeof acts
-export type SubjectKind = (typeof acts)[Act]
 
 /** Whether a text is an act that this version knows; an unknown one in a stored entry is a fault, not a thing to skip. */
 export const isAct = (text: string): text is Act => Object.hasOwn(acts, text)

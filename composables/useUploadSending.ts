@@ -1,4 +1,3 @@
-import { useEventListener } from '@vueuse/core'
 import { formOf } from '#shared/settings/read'
 import { fieldsFor, type NamedPerson } from '~/utils/upload/fields'
 import type { ListedFile } from '~/utils/upload/model'
@@ -68,10 +67,6 @@ export function useUploadSending(people: () => readonly NamedPerson[]) {
     await runQueue(inLanes(files), atOnce, async lane => runQueue(lane, 1, sendOne), signedOut)
     store.endedAt = Date.now()
   }
-
-  useEventListener(window, 'beforeunload', (event: BeforeUnloadEvent) => {
-    if (store.sending) event.preventDefault()
-  })
 
   return { wanted, open, kept, going, failed, sent, send }
 }

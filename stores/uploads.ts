@@ -1,4 +1,4 @@
-import { useSessionStorage } from '@vueuse/core'
+import { useEventListener, useSessionStorage } from '@vueuse/core'
 import { defineStore } from 'pinia'
 import { noWords, type Words } from '~/utils/upload/fields'
 import type { ListedFile } from '~/utils/upload/model'
@@ -27,6 +27,11 @@ export const useUploads = defineStore('uploads', () => {
   const endedAt = ref<number>()
   const words = useSessionStorage<Words>('witnessmark-upload-words', noWords(), { mergeDefaults: true })
   const sending = computed(() => startedAt.value !== undefined && endedAt.value === undefined)
+
+  // Here and not on the page: files go on being sent while another page is looked at.
+  useEventListener(window, 'beforeunload', (event: BeforeUnloadEvent) => {
+    if (sending.value) event.preventDefault()
+  })
 
   const setReadings = (readings: ReadonlyMap<number, ListedFile['reading']>) => {
     files.value = files.value.map((file) => {

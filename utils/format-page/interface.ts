@@ -55,12 +55,14 @@ export function routeLine(name: string, route: RouteDeclaration): RouteLine {
   }
 }
 
-/** Calls by the first word of their path. */
+/** Calls by the first word of their path; what has one call only stands together, first. */
 export function byResource(lines: readonly RouteLine[]): { readonly resource: string, readonly lines: readonly RouteLine[] }[] {
   const groups = new Map<string, RouteLine[]>()
   for (const line of lines) {
     const resource = (line.path.split('/')[2] ?? '').replace(/\.json$/, '')
     groups.set(resource, [...groups.get(resource) ?? [], line])
   }
-  return [...groups].map(([resource, held]) => ({ resource, lines: held }))
+  const several = [...groups].filter(([, held]) => held.length > 1).map(([resource, held]) => ({ resource, lines: held }))
+  const single = [...groups.values()].filter(held => held.length === 1).flat()
+  return single.length > 0 ? [{ resource: 'one of a kind', lines: single }, ...several] : several
 }

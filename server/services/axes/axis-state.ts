@@ -1,7 +1,7 @@
 import { compareContents } from '#shared/diff/compare'
 import { diffRenumbered } from '#shared/diff/renumber'
 import { countByWeight } from '#shared/diff/summary'
-import type { Comparison } from '#shared/diff/types'
+import type { Comparison, FieldChange } from '#shared/diff/types'
 import { countReceived, readAxisState, replaceAxisState } from '#server/database/axis-state/queries'
 import { readLevelCounts } from '#server/database/check/queries'
 import { judgingQueries } from '#server/database/judging/queries'
@@ -37,35 +37,35 @@ function statusOf(db: VaultDb, axisId: number, current: VersionRow | null, mark:
   if (mark.versionId === current.id) return { status: 'in-line', ...nothingOff }
   const comparison = againstKnownGood(db, axisId, current)
   if (comparison?.verdict !== 'differs') return { status: 'in-line', ...nothingOff }
-  const off = comparison.counts
+  const off = countByWeight(comparison.told)
   const earlier = readAxisState(db, axisId)
   const stays = earlier?.status === 'off' && earlier.knownGoodId === mark.id
   const since = mark.at > current.receivedAt ? mark.at : current.receivedAt
   return { status: 'off', offHarm: off.harm, offMotion: off.motion, offText: off.text, offSince: stays ? earlier.offSince : since, sense: senseOf(comparison) }
 }
 
-function againstKnownGood(db: VaultDb, axisId: number, current: VersionRow): CountedComparison | null {
+/** The current version of an axis, which was read from that unit, against its known-good in force; null where either is missing. */
+export function againstKnownGood(db: VaultDb, axisId: number, { unitId }: Pick<VersionRow, 'unitId'>): ToldComparison | null {
   const place = judgingQueries(db).axis.get({ id: axisId })
-  const unit = unitRows(db).byId.get({ id: current.unitId })
+  const unit = unitRows(db).byId.get({ id: unitId })
   return place && unit ? compareWithKnownGood(readAgainst(db, place, unit)) : null
 }
 
-/** What differs beyond tolerance, and how many differences that is as it is told: rows renumbered are not rows rewritten. */
-interface CountedComparison extends Comparison { readonly counts: ReturnType<typeof countByWeight> }
+/** A comparison with its differences as they are told: rows renumbered are not rows rewritten. */
+interface ToldComparison extends Comparison { readonly told: readonly FieldChange[] }
 
-/** The current version of an axis, against its known-good in force; null where either is missing. */
-function compareWithKnownGood(against: ReadAgainst): CountedComparison | null {
+function compareWithKnownGood(against: ReadAgainst): ToldComparison | null {
   const { knownGood, current, nameplate } = against
   if (!knownGood || !current) return null
   const context = diffContextOf(against)
   const comparison = compareContents(knownGood.content, current.content, {
     sameUnit: knownGood.version.unitId === current.version.unitId, context, ...(nameplate ? { nameplate: nameplate.nameplate } : {}),
   })
-  return { ...comparison, counts: countByWeight(diffRenumbered(knownGood.content, current.content, context)?.changes ?? comparison.differences) }
+  return { ...comparison, told: diffRenumbered(knownGood.content, current.content, context)?.changes ?? comparison.differences }
 }
 
 /** Whether the weightiest numeric difference goes up or down; differences come sorted by weight. */
-function senseOf({ differences }: Comparison): 'more' | 'less' | null {
-  const first = differences.find(({ delta }) => delta !== undefined && delta !== 0)
+function senseOf({ told }: ToldComparison): 'more' | 'less' | null {
+  const first = told.find(({ delta }) => delta !== undefined && delta !== 0)
   return first?.delta === undefined ? null : first.delta > 0 ? 'more' : 'less'
 }

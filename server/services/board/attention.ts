@@ -4,7 +4,9 @@ import type { SiteBounds } from '#server/database/actor'
 import type { AxisListRow } from '#server/database/axis-state/list'
 import type { VaultDb } from '#server/database/prepared'
 import { countWaiting, waitingGroups } from '#server/database/tray/queries'
+import { againstKnownGood } from '../axes/axis-state'
 import { overdueSince } from '../axes/overdue'
+import { spokenPlace, valueWords } from '../change-words'
 
 type Item = Attention['items'][number]
 
@@ -16,13 +18,13 @@ interface Needing { readonly row: AxisListRow, readonly since: string | null }
 /** What needs someone now, worst kind first and the longest waiting first within a kind; kinds without a case are left out. */
 export function attention(db: VaultDb, sites: SiteBounds, rows: readonly AxisListRow[], now: string): Attention[] {
   const overdue = (row: AxisListRow) => overdueSince(row.state?.lastUploadAt ?? null, row.axis.uploadEveryHours, now)
-  const group = (kind: Attention['kind'], applies: (row: AxisListRow) => boolean, since: (row: AxisListRow) => string | null, text: (needing: Needing) => string): Attention => {
-    const needing = rows.filter(applies).map(row => ({ row, since: since(row) })).sort((a, b) => ((a.since ?? '') < (b.since ?? '') ? -1 : 1))
-    return { kind, count: needing.length, since: needing[0]?.since ?? null, items: needing.slice(0, named).map(each => itemOf(each, text(each))) }
+  const group = (kind: Attention['kind'], applies: (row: AxisListRow) => boolean, since: (row: AxisListRow) => string | null, text: (needing: Needing) => string, rank: (row: AxisListRow) => number = () => 0): Attention => {
+    const needing = rows.filter(applies).map(row => ({ row, since: since(row) })).sort((a, b) => rank(a.row) - rank(b.row) || ((a.since ?? '') < (b.since ?? '') ? -1 : 1))
+    return { kind, count: needing.length, since: needing.map(each => each.since ?? '').sort()[0] || null, items: needing.slice(0, named).map(each => itemOf(each, text(each))) }
   }
   return [
     group('stop-check', ({ state }) => (state?.stop ?? 0) > 0, ({ current }) => current?.receivedAt ?? null, ({ row }) => firstStop(db, row)),
-    group('off-known-good', ({ state }) => state?.status === 'off', ({ state }) => state?.offSince ?? null, ({ row }) => offText(row)),
+    group('off-known-good', ({ state }) => state?.status === 'off', ({ state }) => state?.offSince ?? null, ({ row }) => offText(db, row), weightOff),
     group('unmarked', ({ state }) => state?.status === 'unmarked', ({ current }) => current?.receivedAt ?? null, () => 'read, and no version is known-good'),
     group('overdue', row => overdue(row) !== null, overdue, ({ row }) => `due every ${row.axis.uploadEveryHours} h`),
     group('never-read', ({ state }) => (state?.status ?? 'never-read') === 'never-read', ({ axis }) => axis.madeAt, ({ row }) => (row.unit?.serial ? `unit ${row.unit.serial} fitted, never read` : 'no unit fitted')),
@@ -39,9 +41,17 @@ function firstStop(db: VaultDb, { current }: AxisListRow): string {
   return `${stops[0]?.message ?? ''}${stops.length > 1 ? ` And ${stops.length - 1} more.` : ''}`
 }
 
-function offText({ state, marked }: AxisListRow): string {
-  const counts = ([['harm', state?.offHarm], ['motion', state?.offMotion], ['text', state?.offText]] as const).filter(([, count]) => count)
-  return `${counts.map(([weight, count]) => `${count} ${weight}`).join(', ')} against known-good v${marked?.number ?? '?'}`
+/** Off in what can hurt goes before off in motion, and that before off in words. */
+function weightOff({ state }: AxisListRow): number {
+  return state?.offHarm ? 0 : state?.offMotion ? 1 : 2
+}
+
+/** The weightiest difference in words, and how many more there are. */
+function offText(db: VaultDb, { axis, current, marked }: AxisListRow): string {
+  const differences = (current && againstKnownGood(db, axis.id, current)?.told) ?? []
+  const [first] = differences
+  const more = differences.length > 1 ? `, and ${differences.length - 1} more` : ''
+  return `${first ? `${spokenPlace(first)} ${valueWords(first)}${more}` : 'moves renumbered'}, against known-good v${marked?.number ?? '?'}`
 }
 
 function trayGroup(db: VaultDb, sites: SiteBounds): Attention {

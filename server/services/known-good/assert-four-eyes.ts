@@ -1,9 +1,10 @@
 import { Refusal } from '#shared/errors/refusal'
-import type { ExtraValue, SettingsFile } from '#shared/settings/types'
+import type { SettingsFile } from '#shared/settings/types'
 import { readContent } from '#server/database/content/queries'
 import type { VaultDb } from '#server/database/prepared'
 import type { VersionRow } from '#server/database/schema'
 import { versionQueries } from '#server/database/version/queries'
+import { formatPlace, valueWords } from '../change-words'
 import { diffContextOf, type ReadAgainst } from '../uploads/read-against'
 import { personIn, personName } from '../versions/summary'
 import { harmBroughtIn, type BroughtIn, type RunVersion } from './four-eyes'
@@ -28,13 +29,6 @@ function runVersion(db: VaultDb, row: VersionRow, content: RunVersion['content']
   return { number: row.number, content, broughtBy: { id, name: personName(db, id) ?? `person ${id}` } }
 }
 
-function sentence({ change: { section, row, field, before: was, after, unit }, version }: BroughtIn): string {
-  const place = row === undefined ? (section === 'extra' ? `extra ${field}` : field) : `${section} ${row} ${field}`
-  const value = was === undefined ? shown(after, unit) : `${shown(was, undefined)} → ${shown(after, unit)}`
-  return `${place} ${value} was brought in by ${version.broughtBy.name} in version ${version.number}.`
-}
-
-function shown(value: ExtraValue | undefined, unit: string | undefined): string {
-  if (typeof value === 'object') return `${value.value} ${value.unit}`
-  return unit === undefined ? String(value) : `${value} ${unit}`
+function sentence({ change, version }: BroughtIn): string {
+  return `${formatPlace(change)} ${valueWords(change)} was brought in by ${version.broughtBy.name} in version ${version.number}.`
 }

@@ -139,9 +139,25 @@ describe('the board', () => {
     const board = readBoard(plant.vault, runa)
     expect(board.attention.map(({ kind, count }) => `${kind} ${count}`)).toEqual(['stop-check 1', 'off-known-good 1', 'overdue 1', 'never-read 1', 'tray 1'])
     expect(board.attention[0]?.items[0]).toMatchObject({ tag: 'LID-02.Z', versionId: v2, knownGoodId: v1, text: expect.stringContaining('250') as string })
-    expect(board.attention[1]).toMatchObject({ since: offAt, items: [{ text: '1 harm against known-good v1' }] })
+    expect(board.attention[1]).toMatchObject({ since: offAt, items: [{ text: 'soft limit, max 180 → 250 mm, against known-good v1' }] })
     expect(board.axes.find(({ id }) => id === axisId)).toMatchObject({ status: 'off', off: { harm: 1 }, sense: 'more', overdueSince: iso(Date.parse(offAt) + 24 * hour), knownGood: { number: 1 }, current: { number: 2 }, serial: 'SN-0001' })
     expect(board.log.entries).toBe(plant.rows().log)
+  })
+
+  it('names what is off in harm before what is off in motion, however long', () => {
+    const other = plant.axis('LID-03.Z')
+    plant.fit(other, plant.unit('SN-0002'), start - 300 * day)
+    markKnownGood(plant.vault, runa, store({ smoothingTime: 4 }), { meaning: 'approved' })
+    store({ smoothingTime: 5, jogSpeed: 10 })
+    store({ smoothingTime: 6 })
+    markKnownGood(plant.vault, runa, store({ thrustLimit: 38 }, { serial: 'SN-0002' }), { meaning: 'approved' })
+    store({ thrustLimit: 55, smoothingTime: 1 }, { serial: 'SN-0002' })
+    const off = readBoard(plant.vault, runa).attention.find(({ kind }) => kind === 'off-known-good')
+    expect(off?.items.map(({ tag, text }) => `${tag}: ${text}`)).toEqual([
+      'LID-03.Z: thrust limit 38 → 55 %, and 1 more, against known-good v1',
+      'LID-02.Z: smoothing 4 → 6 ms, against known-good v1',
+    ])
+    expect(off?.since).toBe(off?.items[1]?.since)
   })
 
   it('shows the axes of one’s own sites only', () => {

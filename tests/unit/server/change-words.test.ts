@@ -21,7 +21,7 @@ describe('a change in words', () => {
   it('says what it was and what it is, with its unit, or that it is gone', () => {
     const words = Object.fromEntries(changes.map(change => [formatPlace(change), valueWords(change)]))
     expect(words).toEqual({
-      'extra K-017': '3 counts → 4 counts', 'jogSpeed': '20 mm/s taken away', 'move 5 forceLimit': '40 → 55 %', 'move 5 label': 'Press the lid home, slowly and until it …',
+      'extra K-017': '3 counts → 4 counts', 'jogSpeed': '20 mm/s taken away', 'move 5 forceLimit': '40 → 55 %', 'move 5 label': 'Press the lid home, slowly and until it…',
       'speedLimit': '300 mm/s', 'thrustLimit': '38 → 55 %', 'zone 2 to': '5 → 6 mm',
     })
   })

@@ -45,7 +45,7 @@ export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonl
   }
 
   for (const act of story) {
-    const at = instantOf(today, act)
+    const at = instantOf(today, act, plant.site.timeZone)
     if (at > today.getTime()) continue
     setClock(at)
     switch (act.act) {
@@ -107,10 +107,12 @@ function fail(why: string): never {
 
 const person = (cast: Cast, key: string): PersonActor => cast.people[key] ?? fail(`nobody is ${key}`)
 
-/** Local time of the machine that shows the demo, so that "4:10 this night" is this night there. */
-function instantOf(today: Date, { daysAgo, time }: Act): number {
-  const [hours = 0, minutes = 0] = time.split(':').map(Number)
-  return new Date(today.getFullYear(), today.getMonth(), today.getDate() - daysAgo, hours, minutes).getTime()
+/** Time of day at the plant, whatever the zone of the machine that shows the demo. */
+function instantOf(today: Date, { daysAgo, time }: Act, timeZone: string): number {
+  const date = new Intl.DateTimeFormat('sv-SE', { timeZone, dateStyle: 'short' }).format(today.getTime() - daysAgo * day)
+  const guess = Date.parse(`${date}T${time}:00Z`)
+  const shown = new Intl.DateTimeFormat('sv-SE', { timeZone, dateStyle: 'short', timeStyle: 'medium' }).format(guess)
+  return 2 * guess - Date.parse(`${shown.replace(' ', 'T')}Z`)
 }
 
 function present<Fields extends Record<string, string | undefined>>(fields: Fields): { [Key in keyof Fields]?: string } {

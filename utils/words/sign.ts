@@ -6,7 +6,7 @@ export const meaningLabels = {
 } as const
 
 const steps: Readonly<Record<string, string>> = {
-  'signature': 'Nothing was signed. Type the password you sign in with.',
+  'signature': 'Type the password you sign in with.',
   'signing-password': 'Set a password of your own first, then come back; nothing was signed.',
   'four-eyes': 'Ask another planner to look at these values and mark the version. Nothing was signed.',
   'stop-checks': 'Put the values right at the drive and upload again, or correct the nameplate or the rule if they are wrong. Nothing was signed.',

@@ -21,6 +21,7 @@ export async function openWindow(browser: Browser, origin: string, options: { si
     baseURL: origin, viewport: options.size ?? desk, acceptDownloads: true, locale: 'en-GB', timezoneId: 'Europe/Berlin', reducedMotion: 'reduce',
     colorScheme: options.theme === 'night' ? 'dark' : 'light',
   })
+  context.setDefaultTimeout(15_000)
   return { context, page: await context.newPage() }
 }
 

@@ -1,0 +1,169 @@
+import type { Browser, Page } from 'playwright-core'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { desk, openWindow, phone, picture, sidewaysScroll, signIn, startBrowser, themes, violations } from '../support/browser'
+import { serveDemo, type DemoPlant } from '../support/demo-plant'
+import { sourceFiles } from '../support/source-tree'
+import { watchTrouble, type Trouble } from '../support/walk'
+
+/* Every page on the invented plant: by day and by night, on a desk and on a phone, to be read and to be worked by all. */
+
+let demo: DemoPlant
+let browser: Browser
+const windows = new Map<string, { page: Page, trouble: Trouble }>()
+
+interface Visit { readonly file: string, readonly address: () => string | Promise<string>, readonly ready: RegExp, readonly as?: 'planner' | 'admin' | 'nobody' }
+
+const idOf = async (path: string, wanted: (item: Record<string, unknown>) => boolean): Promise<number> => {
+  const { email, password } = demo.person('planner')
+  const { json } = await demo.server.call('GET', path, { as: await demo.server.signIn({ email, password }) })
+  return (json as unknown as { items: ({ id: number } & Record<string, unknown>)[] }).items.find(wanted)?.id ?? 0
+}
+const versions = (tag: string, number: number) => idOf(`/api/axes/tag:${tag}/versions`, item => item.number === number)
+
+const visits: readonly Visit[] = [
+  { file: 'pages/index.vue', address: () => '/', ready: /axes are in line with their known-good/ },
+  { file: 'pages/axes/[tag]/index.vue', address: () => '/axes/LID-02.Z', ready: /LID-02\.Z/ },
+  { file: 'pages/axes/[tag]/versions/[n].vue', address: () => '/axes/LID-03.Z/versions/2', ready: /LID-03\.Z v2/ },
+  { file: 'pages/changes.vue', address: async () => `/changes?a=${await versions('LID-03.Z', 1)}&b=${await versions('LID-03.Z', 2)}`, ready: /LID-03\.Z/ },
+  { file: 'pages/changes.vue', address: () => '/changes', ready: /Changes/ },
+  { file: 'pages/machines/[id].vue', address: async () => `/machines/${await idOf('/api/machines', item => item.name === 'LID-02')}`, ready: /LID-02/ },
+  { file: 'pages/upload.vue', address: () => '/upload', ready: /Upload what the drives hold/ },
+  { file: 'pages/tray.vue', address: () => '/tray', ready: /files? waits? in the tray/ },
+  { file: 'pages/units.vue', address: () => '/units', ready: /\d+ units?, \d+ spares?|Units and spares/ },
+  { file: 'pages/places.vue', address: async () => `/places?site=1&machine=${await idOf('/api/machines', item => item.name === 'LID-02')}`, ready: /LID-02, / },
+  { file: 'pages/nameplates/index.vue', address: () => '/nameplates', ready: /\d+ nameplates/ },
+  { file: 'pages/nameplates/[id].vue', address: async () => `/nameplates/${await idOf('/api/nameplates', item => item.model === 'HL40-200V')}`, ready: /HL40-200V/ },
+  { file: 'pages/rules.vue', address: () => '/rules', ready: /rules? holds?/ },
+  { file: 'pages/format.vue', address: () => '/format', ready: /The settings file/ },
+  { file: 'pages/interface.vue', address: () => '/interface', ready: /\d+ calls/ },
+  { file: 'pages/people.vue', address: () => '/people', ready: /\d+ people/, as: 'admin' },
+  { file: 'pages/sign-in.vue', address: () => '/sign-in', ready: /Witnessmark/, as: 'nobody' },
+  { file: 'pages/set-up.vue', address: () => '/set-up?token=none', ready: /A new vault/, as: 'nobody' },
+]
+
+async function windowOf(as: 'planner' | 'admin' | 'nobody'): Promise<{ page: Page, trouble: Trouble }> {
+  const open = windows.get(as)
+  if (open) return open
+  const { page } = await openWindow(browser, demo.server.url)
+  if (as !== 'nobody') await signIn(page, demo.person(as).email, demo.person(as).password)
+  const made = { page, trouble: await watchTrouble(page) }
+  windows.set(as, made)
+  return made
+}
+
+/** The page is read: its answer stands at its head and nothing is being read any more. */
+async function arrive(page: Page, address: string, ready: RegExp): Promise<void> {
+  await page.goto(address)
+  await page.getByRole('heading', { level: 1, name: ready }).waitFor()
+  await page.getByRole('status').filter({ hasText: /^Reading/ }).first().waitFor({ state: 'detached' })
+}
+
+beforeAll(async () => {
+  [demo, browser] = await Promise.all([serveDemo(), startBrowser()])
+})
+afterAll(async () => {
+  await browser?.close()
+  await demo?.stop()
+})
+
+describe('every page', () => {
+  it('is on the list of visits', () => {
+    expect([...new Set(visits.map(visit => visit.file))].sort()).toEqual(sourceFiles('pages').sort())
+  })
+
+  for (const { file, address, ready, as = 'planner' } of visits) {
+    it(`${file.slice(6)}, ${ready.source}`, async () => {
+      const { page, trouble } = await windowOf(as)
+      const to = await address()
+      trouble.forget()
+      const found: string[] = []
+      for (const [name, size] of [['desk', desk], ['phone', phone]] as const) {
+        await page.setViewportSize(size)
+        await arrive(page, to, ready)
+        for (const theme of themes) {
+          await page.emulateMedia({ colorScheme: theme === 'night' ? 'dark' : 'light' })
+          found.push(...(await violations(page)).map(violation => `${name}, ${theme}: ${violation}`))
+          await picture(page, `${file.slice(6).replaceAll(/\W+/g, '-')}-${name}-${theme}`)
+        }
+        const widths = name === 'desk' ? [desk.width] : [phone.width, 320]
+        for (const width of widths) {
+          await page.setViewportSize({ width, height: size.height })
+          const pixels = await sidewaysScroll(page)
+          if (pixels > 0) found.push(`${width} px wide: scrolls ${pixels} px sideways`)
+        }
+      }
+      expect([...found, ...trouble.told()]).toEqual([])
+    })
+  }
+
+  it('an address that there is not says so, and leads to the board', async () => {
+    const { page } = await windowOf('planner')
+    await page.setViewportSize(desk)
+    await page.goto('/no-such-page')
+    await page.getByRole('heading', { level: 1, name: 'There is no page at this address' }).waitFor()
+    expect(await violations(page)).toEqual([])
+    await page.getByRole('button', { name: 'Open the board' }).click()
+    await page.getByRole('heading', { level: 1, name: /axes are in line/ }).waitFor()
+  })
+})
+
+describe('by keyboard alone', () => {
+  it('signs in', async () => {
+    const { page } = await openWindow(browser, demo.server.url)
+    const { email, password } = demo.person('technician')
+    await page.goto('/sign-in')
+    await page.getByLabel('E-mail').waitFor()
+    for (let step = 0; step < 5 && !await page.getByLabel('E-mail').evaluate(input => input === document.activeElement); step += 1) await page.keyboard.press('Tab')
+    await page.keyboard.type(email)
+    await page.keyboard.press('Tab')
+    await page.keyboard.type(password)
+    await page.keyboard.press('Enter')
+    await page.getByRole('heading', { level: 1, name: /axes are in line/ }).waitFor()
+  })
+
+  it('finds an axis on the board, walks the rows and opens one', async () => {
+    const { page } = await windowOf('planner')
+    await page.setViewportSize(desk)
+    await arrive(page, '/', /axes are in line/)
+    await page.getByLabel('Find an axis').focus()
+    await page.keyboard.type('lid-02')
+    await page.getByText('5 of 46').waitFor()
+    const tags = page.getByRole('table', { name: /^Every axis/ }).locator('a.tag')
+    expect(await tags.allInnerTexts()).toEqual(['LID-02.C', 'LID-02.G', 'LID-02.R', 'LID-02.X', 'LID-02.Z'])
+    for (let step = 0; step < 40 && !await tags.first().evaluate(link => link === document.activeElement); step += 1) await page.keyboard.press('Tab')
+    await page.keyboard.press('End')
+    await page.waitForFunction(() => document.activeElement?.textContent?.trim() === 'LID-02.Z')
+    await page.keyboard.press('Enter')
+    await page.getByRole('heading', { level: 1, name: 'LID-02.Z' }).waitFor()
+  })
+
+  it('a dialog keeps the focus while it is open, closes with Escape and gives it back', async () => {
+    const { page } = await windowOf('planner')
+    await arrive(page, '/axes/LID-02.Z', /LID-02\.Z/)
+    const opener = page.getByRole('button', { name: 'Take a kit' })
+    await opener.focus()
+    await page.keyboard.press('Enter')
+    const dialog = page.getByRole('dialog', { name: 'Take a kit' })
+    await dialog.waitFor()
+    const inside = () => dialog.evaluate(element => element.contains(document.activeElement))
+    for (let step = 0; step < 12; step += 1) {
+      expect(await inside()).toBe(true)
+      await page.keyboard.press(step < 8 ? 'Tab' : 'Shift+Tab')
+    }
+    expect(await violations(page)).toEqual([])
+    await page.keyboard.press('Escape')
+    await dialog.waitFor({ state: 'hidden' })
+    expect(await opener.evaluate(button => button === document.activeElement)).toBe(true)
+  })
+
+  it('the link to the content comes first and leads past the menu', async () => {
+    const { page } = await windowOf('planner')
+    await arrive(page, '/units', /units/i)
+    await page.evaluate(() => { (document.activeElement as HTMLElement | null)?.blur() })
+    await page.keyboard.press('Tab')
+    const skip = page.getByRole('link', { name: 'To the content' })
+    expect(await skip.evaluate(link => link === document.activeElement)).toBe(true)
+    await page.keyboard.press('Enter')
+    expect(await page.evaluate(() => document.activeElement?.id)).toBe('main')
+  })
+})

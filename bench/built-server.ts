@@ -1,6 +1,5 @@
 import { spawn, type ChildProcess } from 'node:child_process'
 import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs'
-import { Agent, request } from 'node:http'
 import { createServer, type AddressInfo } from 'node:net'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
@@ -9,12 +8,11 @@ import { fileURLToPath } from 'node:url'
 const entry = fileURLToPath(new URL('../.output/server/index.mjs', import.meta.url))
 const admin = { email: 'ines.okafor@larkfield.example', password: 'copper kettle under the stairs' }
 
-export interface Reply { readonly status: number, readonly text: string, readonly cookie: string | undefined }
+interface Reply { readonly status: number, readonly text: string, readonly cookie: string | undefined }
 
-/** The built server on a vault of its own, and a client that keeps its connections. */
+/** The built server on a vault of its own, and what a bench needs to have registered in it. */
 export class BuiltServer {
   private readonly folder = mkdtempSync(join(tmpdir(), 'witnessmark-bench-'))
-  private agent = new Agent({ keepAlive: true, maxSockets: 4 })
   private child: ChildProcess | undefined
   private port = 0
 
@@ -34,39 +32,29 @@ export class BuiltServer {
     throw new Error(`The server did not come up: ${printed}`)
   }
 
-  /** New connections: while this process worked on its own, the server gave up those that were idle. */
-  reconnect(): void {
-    this.agent.destroy()
-    this.agent = new Agent({ keepAlive: true, maxSockets: 4 })
-  }
-
   /** CPU time of the server so far, all its threads, in milliseconds; the kernel counts in steps of 10. */
   cpu(): number {
     const fields = readFileSync(`/proc/${this.child?.pid}/stat`, 'utf8').replace(/^.*\) /s, '').split(' ')
     return (Number(fields[11]) + Number(fields[12])) * 10
   }
 
-  send(method: string, path: string, cookie: string, body?: Buffer | object): Promise<Reply> {
-    const bytes = body === undefined || Buffer.isBuffer(body) ? body : Buffer.from(JSON.stringify(body), 'utf8')
-    return new Promise((resolve, reject) => {
-      const outgoing = request({ agent: this.agent, host: '127.0.0.1', port: this.port, method, path, headers: { ...(bytes ? { 'content-type': 'application/json', 'content-length': bytes.length } : {}), ...(cookie === '' ? {} : { cookie }) } }, (incoming) => {
-        let text = ''
-        incoming.setEncoding('utf8').on('data', (part: string) => { text += part })
-        incoming.on('end', () => resolve({ status: incoming.statusCode ?? 0, text, cookie: incoming.headers['set-cookie']?.at(-1)?.replace(/;.*$/s, '') }))
-      })
-      outgoing.on('error', reject)
-      outgoing.end(bytes)
-    })
+  get origin(): string {
+    return `http://127.0.0.1:${this.port}`
+  }
+
+  private async post(path: string, cookie: string, body: object): Promise<Reply> {
+    const answer = await fetch(this.origin + path, { method: 'POST', headers: { 'content-type': 'application/json', ...(cookie === '' ? {} : { cookie }) }, body: JSON.stringify(body) })
+    return { status: answer.status, text: await answer.text(), cookie: answer.headers.getSetCookie().at(-1)?.replace(/;.*$/s, '') }
   }
 
   async signIn(email = admin.email): Promise<string> {
-    const { cookie, text } = await this.send('POST', '/api/sign-in', '', { email, password: admin.password })
+    const { cookie, text } = await this.post('/api/sign-in', '', { email, password: admin.password })
     if (cookie === undefined) throw new Error(`No sign-in: ${text}`)
     return cookie
   }
 
   async made(path: string, cookie: string, body: object): Promise<number> {
-    const { status, text } = await this.send('POST', path, cookie, body)
+    const { status, text } = await this.post(path, cookie, body)
     if (status !== 201) throw new Error(`${path} answered ${status}: ${text}`)
     return (JSON.parse(text) as { id: number }).id
   }
@@ -86,7 +74,6 @@ export class BuiltServer {
   }
 
   stop(): void {
-    this.agent.destroy()
     this.child?.kill('SIGKILL')
     rmSync(this.folder, { recursive: true, force: true })
   }

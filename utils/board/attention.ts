@@ -36,7 +36,7 @@ export function needOf(attention: Attention): Need {
     words: count === 1 ? telling.one : telling.many,
     action: telling.action,
     to: whereTo(attention),
-    first: first && { tag: first.tag, to: first.axisId !== null ? addressOf.axis(first.tag) : undefined, text: [first.text, others].filter(Boolean).join('; ') },
+    first: first && { tag: first.tag, to: first.axisId !== null ? addressOf.axis(first.tag) : undefined, text: others ? `${first.text.replace(/\.$/, '')}; ${others}` : first.text },
   }
 }
 

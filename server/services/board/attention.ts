@@ -25,7 +25,7 @@ export function attention(db: VaultDb, sites: SiteBounds, rows: readonly AxisLis
   return [
     group('stop-check', ({ state }) => (state?.stop ?? 0) > 0, ({ current }) => current?.receivedAt ?? null, ({ row }) => firstStop(db, row)),
     group('off-known-good', ({ state }) => state?.status === 'off', ({ state }) => state?.offSince ?? null, ({ row }) => offText(db, row), weightOff),
-    group('unmarked', ({ state }) => state?.status === 'unmarked', ({ current }) => current?.receivedAt ?? null, () => 'read, and no version is known-good'),
+    group('unmarked', ({ state }) => state?.status === 'unmarked', ({ mark, current }) => mark?.at ?? current?.receivedAt ?? null, () => 'read, and no version is known-good'),
     group('overdue', row => overdue(row) !== null, overdue, ({ row }) => `due every ${row.axis.uploadEveryHours} h`),
     group('never-read', ({ state }) => (state?.status ?? 'never-read') === 'never-read', ({ axis }) => axis.madeAt, ({ row }) => (row.unit?.serial ? `unit ${row.unit.serial} fitted, never read` : 'no unit fitted')),
     trayGroup(db, sites),

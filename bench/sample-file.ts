@@ -21,9 +21,13 @@ const moves = Array.from({ length: 64 }, (_, move): Move => ({
 export const sampleSerial = 'LP-2207-0148'
 
 /** The file with one move's speed changed by `change`, as bytes; each change gives another content. */
-export function sampleFile(change: number, exportedAt = '2026-11-30T08:15:00+01:00'): Buffer {
+export function sampleFile(change: number, exportedAt?: string): Buffer {
   const at = change % moves.length
-  const rows = moves.map(move => (move.move === at ? { ...move, speed: move.speed + 1 + change } : move))
-  const file = { schema: 'witnessmark.axis-settings/1', unit: { serial: sampleSerial, model: 'HL40-200V', firmware: '2.4' }, exportedAt, axisKind: 'linear', setup, zones: [{ zone: 1, from: 10, to: 25 }], moves: rows, extra: { 'K-017': 15, 'Filter': 'B' }, readings: { operatingHours: 8123 } }
+  return fileOf(moves.map(move => (move.move === at ? { ...move, speed: move.speed + 1 + change } : move)), exportedAt)
+}
+
+/** A file of the same unit with other moves, as bytes. */
+export function fileOf(moves: readonly Move[], exportedAt = '2026-11-30T08:15:00+01:00'): Buffer {
+  const file = { schema: 'witnessmark.axis-settings/1', unit: { serial: sampleSerial, model: 'HL40-200V', firmware: '2.4' }, exportedAt, axisKind: 'linear', setup, zones: [{ zone: 1, from: 10, to: 25 }], moves, extra: { 'K-017': 15, 'Filter': 'B' }, readings: { operatingHours: 8123 } }
   return Buffer.from(JSON.stringify(file, null, 1), 'utf8')
 }

@@ -1,7 +1,7 @@
 import { setupFieldNames } from '../settings/fields'
 import { zoneFieldNames } from '../settings/move-fields'
 import { step } from '../settings/reading'
-import type { Move, Setup, Zone } from '../settings/types'
+import type { Content, Move, Setup, Zone } from '../settings/types'
 import { changeOf } from './change'
 import { goByPressSpeed, sameMotionInSetup } from './defaults'
 import { sameValue } from './measure'
@@ -36,14 +36,14 @@ export function pushSetupChanges(out: FieldChange[], sides: Sides, partners: () 
   }
 }
 
-/** Equality of two setups whose keys come in one order, as a reader's do; the quick way out for those that did not change. */
-function sameEntries(a: Setup, b: Setup): boolean {
+/** Equality of plain values whose keys come in one order, as a reader's do; the quick way out for sections that did not change. */
+function sameEntries(a: Setup | Content['extra'], b: Setup | Content['extra']): boolean {
   const keys = Object.keys(b)
   const values: unknown[] = Object.values(b)
   let index = 0
   // Read by for…in, since keyed reads of forty fields by name cost three times as much.
   for (const key in a) {
-    if (key !== keys[index] || a[key as keyof Setup] !== values[index]) return false
+    if (key !== keys[index] || (a as Content['extra'])[key] !== values[index]) return false
     index += 1
   }
   return index === keys.length
@@ -69,6 +69,7 @@ export function pushZoneChanges(out: FieldChange[], sides: Sides): void {
 
 /** Adds the changes of the drive's own values, keys by code unit. */
 export function pushExtraChanges(out: FieldChange[], { before, after, context }: Sides): void {
+  if (sameEntries(before.extra, after.extra)) return
   const keys = Object.keys(after.extra).filter(key => !Object.hasOwn(before.extra, key) || !sameValue(before.extra[key], after.extra[key]))
   for (const key of Object.keys(before.extra)) if (!Object.hasOwn(after.extra, key)) keys.push(key)
   for (const key of keys.sort()) {

@@ -1,9 +1,11 @@
-import type { Weight } from '../settings/types'
 import type { FieldChange } from './types'
 
-/** Harm first, then motion, then text; within a weight the order they came in. */
-export function byWeight(changes: readonly FieldChange[]): FieldChange[] {
-  const sorted: Record<Weight, FieldChange[]> = { harm: [], motion: [], text: [] }
-  for (const change of changes) sorted[change.weight].push(change)
-  return sorted.harm.concat(sorted.motion, sorted.text)
+/** Harm first, then motion, then text; within a weight the order they came in. The very array where all are of one weight. */
+export function byWeight(changes: FieldChange[]): FieldChange[] {
+  if (changes.every(change => change.weight === changes[0]?.weight)) return changes
+  const harm: FieldChange[] = []
+  const motion: FieldChange[] = []
+  const text: FieldChange[] = []
+  for (const change of changes) (change.weight === 'harm' ? harm : change.weight === 'motion' ? motion : text).push(change)
+  return harm.concat(motion, text)
 }

@@ -1,5 +1,5 @@
 import { setupFields, type SetupField, type SetupFieldName, type UnitByKind } from '../settings/fields'
-import { moveFields, zoneFields, type MoveFieldName, type RowField, type ZoneFieldName } from '../settings/move-fields'
+import { moveFieldNames, moveFields, zoneFields, type MoveFieldName, type RowField, type ZoneFieldName } from '../settings/move-fields'
 import type { AxisKind, Weight } from '../settings/types'
 import type { DiffContext } from './types'
 import { watching } from './watched'
@@ -23,6 +23,8 @@ export interface FieldRule {
 export interface Rules {
   readonly axisKind: FieldRule
   readonly move: Readonly<Record<MoveFieldName, FieldRule>>
+  /** Those of `move` in the order of moveFieldNames. */
+  readonly moveByRank: readonly FieldRule[]
   readonly zone: Readonly<Record<ZoneFieldName, FieldRule>>
   readonly setup: (name: SetupFieldName) => FieldRule
 }
@@ -32,20 +34,24 @@ const axisKindRule: FieldRule = { field: 'axisKind', unit: undefined, weight: 'h
 
 /** Rules of one axis kind and context; without an axis flag no motion field weighs harm. */
 export function rulesFor(kind: AxisKind, context: DiffContext): Rules {
-  return context.flags?.length || context.watched?.length ? tablesFor(kind, context) : bareTables[kind]
+  if (context.watched?.length) return tablesFor(kind, context)
+  return (context.flags?.length ? flaggedTables : bareTables)[kind]
 }
 
-/** Most axes have neither flags nor watched fields of their own: their tables are made once. */
+/** Where the planners of the site added no field, which is nearly everywhere, all that counts is whether there is a flag at all. */
 const bareTables: Readonly<Record<AxisKind, Rules>> = { linear: tablesFor('linear', {}), rotary: tablesFor('rotary', {}) }
+const flaggedTables: Readonly<Record<AxisKind, Rules>> = { linear: tablesFor('linear', { flags: ['gravity'] }), rotary: tablesFor('rotary', { flags: ['gravity'] }) }
 
 function tablesFor(kind: AxisKind, context: DiffContext): Rules {
   const watch = watching(context)
   const rows = <Name extends string>(fields: Readonly<Record<Name, RowField>>, weigh: (field: RowField) => Weight) =>
     Object.fromEntries(Object.entries<RowField>(fields).map(([field, entry]) =>
       [field, { field, unit: unitOf(entry.unit, kind), weight: weigh(entry), ...watch(field, entry.watched), ...plain }])) as Record<Name, FieldRule>
+  const move = rows(moveFields, field => moveWeight(field.weight, context.flags ?? []))
   return {
     axisKind: axisKindRule,
-    move: rows(moveFields, field => moveWeight(field.weight, context.flags ?? [])),
+    move,
+    moveByRank: moveFieldNames.map(name => move[name]),
     zone: rows(zoneFields, field => field.weight),
     setup: (name) => {
       const entry: SetupField = setupFields[name]

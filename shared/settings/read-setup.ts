@@ -20,8 +20,9 @@ export function readSetup(reading: Reading, node: RawObject, axisKind: AxisKind 
     const read = readField(reading, value, pointers[index] as string, fields[index] as SetupField, axisKind)
     if (read !== undefined) setup[sortedSetupNames[index] as SetupFieldName] = read
   }
-  // Each value was read by its own field's entry in the table that Setup is derived from.
-  return setup as Setup
+  // Each value was read by its own field's entry in the table that Setup is derived from. Copied, since an object that was
+  // filled key by key with more than a dozen is a hash table inside and ten times slower to go through than its copy.
+  return { ...setup } as Setup
 }
 
 function readField(reading: Reading, node: RawNode, at: string, field: SetupField, axisKind: AxisKind | undefined) {

@@ -24,3 +24,8 @@ export function remainder(value: number, m: number): number {
   const whole = millionths(m)
   return (((millionths(value) % whole) + whole) % whole) / 1e6
 }
+
+/** Whether a value that went through roots and products lies above a limit, by more than they lose: 1e-9 of the limit. */
+export function isAbove(value: number, limit: number): boolean {
+  return value > limit + 1e-9 * Math.abs(limit)
+}

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { minus, plus, remainder } from '../../../../shared/motion/exact'
+import { isAbove, minus, plus, remainder } from '../../../../shared/motion/exact'
 import { canonicalNumber } from '../../../support/arbitrary-content'
 
 describe('exact sums', () => {
@@ -24,5 +24,16 @@ describe('exact sums', () => {
 
   it('takes a number with more decimals for the nearest millionth', () => {
     expect(minus(200.00000049, 0)).toBe(200)
+  })
+})
+
+describe('isAbove', () => {
+  it('takes no notice of what products lose: 3·0.1 is 0.30000000000000004, not above 0.3', () => {
+    expect(3 * 0.1).toBeGreaterThan(0.3)
+    expect([isAbove(3 * 0.1, 0.3), isAbove(0.3 + 1e-11, 0.3), isAbove(0.3 + 1e-8, 0.3), isAbove(-1, -2)]).toEqual([false, false, true, true])
+  })
+
+  it('goes on to the end of numbers', () => {
+    expect([isAbove(5, Infinity), isAbove(Infinity, 5), isAbove(Infinity, Infinity), isAbove(1e-300, 0)]).toEqual([false, true, false, true])
   })
 })

@@ -130,6 +130,91 @@ describe('press', () => {
   })
 })
 
+describe('ramps of published motions', () => {
+  it('agrees with OpenStax University Physics 1, section 3.4, Examples 3.8 and 3.9: 26.0 m/s² from rest for 5.56 s: 402 m; over 402 m: 145 m/s', () => {
+    const away = rest(1e6, 1e5, 26, 26)
+    expect(Math.abs(motionAt(away, 5.56).x - 402)).toBeLessThanOrEqual(0.5)
+    expect(Math.abs(rest(804, 1e5, 26, 26).peakSpeed - 145)).toBeLessThanOrEqual(0.5)
+  })
+
+  it('agrees with the same section, Example 3.7: 70.0 m/s braked by 1.50 m/s² for 40.0 s are 10.0 m/s', () => {
+    const landing = rest(1e5, 70, 100, 1.5)
+    const braking = landing.segments.at(-1)!
+    expect(Math.abs(motionAt(landing, braking.t0 + 40).v - 10)).toBeLessThanOrEqual(0.05)
+  })
+
+  it('agrees with OpenStax College Physics 2e, section 2.5, commuter train: 80.0 km/h, 1.35 and 1.65 m/s²: 16.5 s and 13.5 s', () => {
+    const [up, , down] = rest(2000, 80 / 3.6, 1.35, 1.65).segments.map(({ t0, t1 }) => t1 - t0)
+    expect(Math.abs(up! - 16.5)).toBeLessThanOrEqual(0.05)
+    expect(Math.abs(down! - 13.5)).toBeLessThanOrEqual(0.05)
+  })
+
+  it('agrees with an article on speed profiles of cylinders: 43.6 in in 2.15 s with ramps of 0.3 and 0.45 s: 1.4 s at 24.56 in/s', () => {
+    // Its provenance is weak; v = 43.6/(1.4 + (0.3 + 0.45)/2) = 24.5633803 in/s.
+    const v = 43.6 / (1.4 + 0.375)
+    expect(Math.abs(v - 24.56)).toBeLessThanOrEqual(0.005)
+    const move = rest(43.6, v, v / 0.3, v / 0.45)
+    expect(move.duration).toBeCloseTo(2.15, 6)
+    expect(move.segments[1]!.t1 - move.segments[1]!.t0).toBeCloseTo(1.4, 6)
+  })
+})
+
+describe('from triangle to trapezium', () => {
+  const above = fc.integer({ min: 1, max: 3000 })
+
+  it('is one profile where the speed is just reached: 2·250²/(2·3000) = 20.8333 mm take 0.1666667 s', () => {
+    expect(rest(20.833333, 250, 3000, 3000).duration).toBeCloseTo(0.1666667, 6)
+    expect(rest(20.833334, 250, 3000, 3000).duration).toBeCloseTo(0.1666667, 6)
+  })
+
+  it('changes neither time nor peak by a jump', () => {
+    fc.assert(fc.property(above, above, above, (v, a, b) => {
+      const border = v ** 2 / (2 * a) + v ** 2 / (2 * b)
+      fc.pre(border > 0.01)
+      const [less, more] = [rest(border - 1e-4, v, a, b), rest(border + 1e-4, v, a, b)]
+      expect(more.duration - less.duration).toBeGreaterThanOrEqual(-1e-9)
+      expect(more.duration - less.duration).toBeLessThan(5e-4 / v + 1e-6)
+      expect(more.peakSpeed - less.peakSpeed).toBeLessThan(v * 0.01)
+    }))
+  })
+
+  it('takes less time with every limit that rises', () => {
+    fc.assert(fc.property(fc.integer({ min: 1, max: 900 }), above, above, above, fc.constantFrom(0, 1, 2), fc.integer({ min: 1, max: 2000 }), (d, v, a, b, which, more) => {
+      const raised = [v, a, b].map((value, index) => index === which ? value + more : value) as [number, number, number]
+      expect(rest(d, ...raised).duration).toBeLessThanOrEqual(rest(d, v, a, b).duration * (1 + 1e-9))
+    }))
+  })
+})
+
+describe('every press', () => {
+  const above = fc.integer({ min: 1, max: 3000 })
+
+  it('goes from approach to target in (D − w²/2b)/w + w/b without a part, with its speed there', () => {
+    fc.assert(fc.property(above, above, fc.integer({ min: 1, max: 30 }), fc.integer({ min: 1, max: 100 }), (speed, deceleration, w, D) => {
+      fc.pre(speed > w && w ** 2 / (2 * deceleration) < D && w ** 2 / 4000 < 100)
+      const { duration, approachAt } = profile(press(1, 100, 100 + D, { speed, deceleration, pressSpeed: w }), 0)
+      expect(duration - approachAt!).toBeCloseTo((D - w ** 2 / (2 * deceleration)) / w + w / deceleration, 6)
+    }))
+  })
+
+  it('reaches its approach in v/a + (v − w)/b + (d1 − v²/2a − (v² − w²)/2b)/v where the way is long', () => {
+    fc.assert(fc.property(fc.integer({ min: 30, max: 300 }), above, above, fc.integer({ min: 1, max: 29 }), (v, a, b, w) => {
+      const up = v ** 2 / (2 * a), down = (v ** 2 - w ** 2) / (2 * b)
+      const d1 = Math.ceil(up + down) + 5
+      const { approachAt } = profile(press(1, d1, d1 + 900, { speed: v, acceleration: a, deceleration: b, pressSpeed: w }), 0)
+      expect(approachAt).toBeCloseTo(v / a + (v - w) / b + (d1 - up - down) / v, 6)
+    }))
+  })
+
+  it('leaves its target with √(w² − 2bD) where it cannot brake before it', () => {
+    // w = 30, b = 100: 4.5 mm are needed, D = 2.5 leaves √(900 − 500) = 20 mm/s.
+    const move = profile(press(1, 100, 102.5, { pressSpeed: 30, deceleration: 100 }), 0)
+    const last = move.segments.at(-1)!
+    expect(move.brakesInTime).toBe(false)
+    expect(last.v0 + last.a * (last.t1 - last.t0)).toBeCloseTo(20, 9)
+  })
+})
+
 describe('every profile', () => {
   const above = fc.integer({ min: 1, max: 5000 })
   const place = fc.integer({ min: -500_000, max: 500_000 }).map(n => n / 1000)

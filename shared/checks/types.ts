@@ -35,7 +35,12 @@ export interface SiteRule {
 /** Everything judge() goes by; whatever is absent makes the rules that need it answer `unknown`. */
 export interface JudgeInput {
   readonly content: Content
-  readonly axis: { readonly axisKind: AxisKind, readonly flags: readonly AxisFlag[] }
+  readonly axis: {
+    readonly axisKind: AxisKind
+    readonly flags: readonly AxisFlag[]
+    /** How often the controller looks at the drive's outputs and sets its inputs, in ms. */
+    readonly controllerScan?: number
+  }
   /** Model and firmware as the file says. */
   readonly unit: { readonly model: string, readonly firmware?: string }
   /** As the register has the unit. */
@@ -44,6 +49,15 @@ export interface JudgeInput {
   readonly rules: readonly SiteRule[]
   /** The known-good in force, if any: its firmware and what keys it holds. */
   readonly knownGood?: { readonly firmware?: string, readonly content: Content }
+  /** The version that this one follows, if any. */
+  readonly before?: { readonly content: Content }
+  /** Percentages that come from another unit unchanged. */
+  readonly broughtFrom?: {
+    /** What 100 % means there, in N or N·m. */
+    readonly forceBase?: number
+    /** Somebody said that the percentages are right for the force base here. */
+    readonly rescaled: boolean
+  }
 }
 
 export interface Judgement {

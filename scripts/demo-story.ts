@@ -11,7 +11,8 @@ import { fixtureBytes, settingsFile, type Act, type FileJson, type Patch, type P
 
 export interface Cast {
   readonly people: Record<string, PersonActor>
-  readonly station: TokenActor
+  /** What the script of the engineering station sends with; made anew each year, as tokens end. */
+  readonly station: () => TokenActor
   readonly axisIds: Record<string, number>
   readonly machineIds: Record<string, number>
   readonly siteId: number
@@ -26,7 +27,7 @@ export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonl
   const told: Told = { versions: 0, sightings: 0, tray: 0, marks: 0 }
   const files: Record<string, FileJson> = {}
   const newest: Record<string, number> = {}
-  const actor = (key: string): Actor => key === 'station' ? cast.station : person(cast, key)
+  const actor = (key: string): Actor => key === 'station' ? cast.station() : person(cast, key)
   const axisId = (tag: string) => cast.axisIds[tag] ?? fail(`no axis ${tag}`)
 
   const send = (file: FileJson, at: number, by: Actor, tag: string, fields: Parameters<typeof storeUpload>[3]) => {
@@ -50,9 +51,10 @@ export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonl
     setClock(at)
     switch (act.act) {
       case 'nightly': {
+        const station = cast.station()
         for (const { tag } of plant.axes) {
           const file = files[tag]
-          if (file && !act.skip?.includes(tag)) note(send(file, at - 60_000, cast.station, tag, {}), tag, ['sighting'])
+          if (file && !act.skip?.includes(tag)) note(send(file, at - 60_000, station, tag, {}), tag, ['sighting'])
         }
         break
       }

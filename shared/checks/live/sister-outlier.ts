@@ -1,0 +1,99 @@
+import type { Dictionary } from '../../settings/nameplate'
+import type { AxisFlag, Content, ExtraValue, SetupFieldName } from '../../settings/types'
+import { answers } from '../answers'
+import { harmValues, type SisterValue } from './sister-fields'
+import type { LiveResult } from './types'
+
+const { warn } = answers('sister-outlier')
+
+const leastAgreeing = 4
+/** At most one axis in this many may stand apart. */
+const oneIn = 5
+
+/** An axis among those of its role and model in a site. */
+export interface Sister { readonly tag: string, readonly content: Content, readonly flags: readonly AxisFlag[] }
+
+/** One field over all sisters, in their order. */
+export interface SisterRow {
+  readonly key: string
+  readonly words: string
+  /** Undefined where an axis has none. */
+  readonly values: readonly (ExtraValue | undefined)[]
+  /** As a person reads them; '' where an axis has none. */
+  readonly texts: readonly string[]
+  /** Indices of the axes that stand apart from those that agree; empty where too few agree to tell. */
+  readonly odd: readonly number[]
+}
+
+export const sisterOutlier = {
+  id: 'sister-outlier',
+  title: 'Odd one among sisters',
+  reason: 'Axes that do the same work with the same unit are set alike; the one that is not was changed by somebody, or forgotten.',
+  formula: 'at least 4 sister axes (same role and model in a site) agree and at most 1 in 5 does not; harm weight only, place and taught values left out',
+  levels: ['warn'],
+  judge,
+} as const
+
+/** The matrix of the harm fields: a row for each field that any sister has, the odd ones marked. */
+export function sisterMatrix(sisters: readonly Sister[], dictionary?: Dictionary): SisterRow[] {
+  return tableOf(sisters, dictionary).map(({ key, words, cells, odd }) => ({
+    key, words, values: cells.map(cell => cell?.value), texts: cells.map(cell => cell?.text ?? ''), odd,
+  }))
+}
+
+/** A warning for each value that stands apart, field by field. */
+function judge(sisters: readonly Sister[], dictionary?: Dictionary): LiveResult[] {
+  return tableOf(sisters, dictionary).flatMap(({ key, words, cells, odd, agreeing, common }) => odd.map((index) => {
+    const tag = sisters[index]?.tag ?? ''
+    const own = cells[index]
+    return {
+      ...warn(own ? [own.at] : [], `${tag}: ${words} is ${own?.text ?? 'not set'}, while ${agreeing} sister axes have ${common?.text ?? 'none'}.`,
+        { field: key, ...told('value', own), ...told('common', common), agreeing, axes: [tag] }),
+      axes: [tag],
+    }
+  }))
+}
+
+interface TableRow {
+  readonly key: string
+  readonly words: string
+  readonly cells: readonly (SisterValue | undefined)[]
+  readonly odd: readonly number[]
+  /** What most have, undefined where most have none, and how many of them. */
+  readonly common?: SisterValue
+  readonly agreeing: number
+}
+
+function tableOf(sisters: readonly Sister[], dictionary?: Dictionary): TableRow[] {
+  // What can hurt on one of them is looked at on all.
+  const flags = sisters.flatMap(sister => sister.flags)
+  const columns = sisters.map(({ content }) => new Map(harmValues(content, flags, dictionary).map(value => [value.key, value])))
+  const fields = new Map(columns.flatMap(column => [...column]))
+  return [...fields.values()].map(({ key, words, rowKey }) => {
+    const cells = columns.map(column => column.get(key))
+    // An axis without the row is odd by its missing kind or start, and takes no part in the row's other fields.
+    const hasRow = (column: ReadonlyMap<string, SisterValue>) => rowKey === undefined || rowKey === key || column.has(rowKey)
+    const isTaught = (index: number) => cells[index] === undefined && sisters[index]?.content.setup[key as SetupFieldName] !== undefined
+    const takingPart = columns.flatMap((column, index) => hasRow(column) && !isTaught(index) ? [index] : [])
+    return { key, words, cells, ...apart(cells, takingPart) }
+  })
+}
+
+/** Who stands apart from those that agree; nobody where fewer than four agree or more than one in five does not. */
+function apart(cells: readonly (SisterValue | undefined)[], takingPart: readonly number[]): Pick<TableRow, 'odd' | 'common' | 'agreeing'> {
+  const groups = new Map<string, number[]>()
+  for (const index of takingPart) {
+    const text = cells[index]?.text ?? ''
+    groups.set(text, [...groups.get(text) ?? [], index])
+  }
+  const most = [...groups.values()].reduce((largest, group) => group.length > largest.length ? group : largest, [])
+  const others = takingPart.length - most.length
+  const tells = most.length >= leastAgreeing && others * oneIn <= takingPart.length
+  const common = cells[most[0] ?? -1]
+  return { odd: tells ? takingPart.filter(index => !most.includes(index)) : [], agreeing: most.length, ...common ? { common } : {} }
+}
+
+function told(name: string, cell: SisterValue | undefined): Record<string, number | string> {
+  if (!cell) return {}
+  return { [name]: typeof cell.value === 'number' ? cell.value : cell.text }
+}

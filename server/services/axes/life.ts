@@ -4,8 +4,8 @@ import type { Vault } from '#server/database/client'
 import { lifeQueries } from '#server/database/life/queries'
 import { limitOf, type PageQuery } from '../page'
 
-/** At one instant events stand in this order, newest first. */
-const kinds = ['taken-out', 'void', 'mark', 'version', 'fitted'] as const
+/** At one instant events stand in this order, newest first: a swap takes the old unit out before it fits the new one. */
+const kinds = ['void', 'mark', 'version', 'fitted', 'taken-out'] as const
 type Source = (typeof kinds)[number]
 
 /** An event with its key: instant, source, and number within the source. */

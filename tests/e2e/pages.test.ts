@@ -1,9 +1,10 @@
 import type { Browser, Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { desk, openWindow, phone, picture, sidewaysScroll, signIn, startBrowser, themes, violations } from '../support/browser'
+import { desk, openWindow, phone, picture, sidewaysScroll, signIn, startBrowser, themes, violations, type Theme } from '../support/browser'
 import { serveDemo, type DemoPlant } from '../support/demo-plant'
+import { jsonFile, lidPress } from '../support/lid-press'
 import { sourceFiles } from '../support/source-tree'
-import { watchTrouble, type Trouble } from '../support/walk'
+import { drop, watchTrouble, type Trouble } from '../support/walk'
 
 /* Every page on the invented plant: by day and by night, on a desk and on a phone, to be read and to be worked by all. */
 
@@ -58,6 +59,13 @@ async function arrive(page: Page, address: string, ready: RegExp): Promise<void>
   await page.getByRole('status').filter({ hasText: /^Reading/ }).first().waitFor({ state: 'detached' })
 }
 
+/** Draws the page for that light, as a device does that says so. */
+async function lightUp(page: Page, theme: Theme): Promise<void> {
+  const value = theme === 'night' ? 'dark' : 'light'
+  await page.emulateMedia({ colorScheme: value })
+  await page.locator(`html[data-theme="${value}"]`).waitFor()
+}
+
 beforeAll(async () => {
   [demo, browser] = await Promise.all([serveDemo(), startBrowser()])
 })
@@ -81,9 +89,9 @@ describe('every page', () => {
         await page.setViewportSize(size)
         await arrive(page, to, ready)
         for (const theme of themes) {
-          await page.emulateMedia({ colorScheme: theme === 'night' ? 'dark' : 'light' })
-          found.push(...(await violations(page)).map(violation => `${name}, ${theme}: ${violation}`))
-          await picture(page, `${file.slice(6).replaceAll(/\W+/g, '-')}-${name}-${theme}`)
+          await lightUp(page, theme)
+          found.push(...(await violations(page, theme === 'day' ? 'all' : 'colours')).map(violation => `${name}, ${theme}: ${violation}`))
+          await picture(page, `${to.split('?')[0]?.replaceAll(/\W+/g, '-')}-${name}-${theme}`)
         }
         const widths = name === 'desk' ? [desk.width] : [phone.width, 320]
         for (const width of widths) {
@@ -105,6 +113,69 @@ describe('every page', () => {
     await page.getByRole('button', { name: 'Open the board' }).click()
     await page.getByRole('heading', { level: 1, name: /axes are in line/ }).waitFor()
   })
+})
+
+interface Opened { readonly what: string, readonly file: string, readonly as?: 'planner' | 'admin', readonly open: (page: Page) => Promise<unknown> }
+const press = (page: Page, name: string | RegExp) => page.getByRole('button', { name }).first().click()
+const unfold = async (page: Page) => page.locator('details').evaluateAll(all => all.forEach((one) => { (one as HTMLDetailsElement).open = true }))
+
+const opened: readonly Opened[] = [
+  { what: 'the kit', file: 'pages/axes/[tag]/index.vue', open: page => press(page, 'Take a kit') },
+  { what: 'the mark', file: 'pages/axes/[tag]/versions/[n].vue', open: page => press(page, 'Mark known-good') },
+  { what: 'setting aside', file: 'pages/axes/[tag]/versions/[n].vue', open: page => press(page, 'Set aside') },
+  { what: 'all that is folded on a version', file: 'pages/axes/[tag]/versions/[n].vue', open: unfold },
+  { what: 'all that is folded on changes', file: 'pages/changes.vue', open: unfold },
+  { what: 'a new axis with nothing said', file: 'pages/places.vue', open: async (page) => {
+    await press(page, 'Register an axis')
+    await press(page, 'Register the axis')
+  } },
+  { what: 'which unit sits there', file: 'pages/places.vue', open: async (page) => {
+    await press(page, 'unit')
+    await press(page, /^Take .* out$/)
+  } },
+  { what: 'a nameplate being changed', file: 'pages/nameplates/[id].vue', open: page => press(page, 'Change it') },
+  { what: 'a new rule with its list of fields', file: 'pages/rules.vue', open: async (page) => {
+    await press(page, 'Make a rule')
+    await page.getByRole('combobox', { name: /^Field/ }).fill('thrust')
+    await page.getByRole('listbox').getByRole('option').first().waitFor()
+  } },
+  { what: 'where a file of the tray belongs', file: 'pages/tray.vue', open: page => press(page, /say where it sits|Say where it belongs/) },
+  { what: 'files that were read', file: 'pages/upload.vue', open: async (page) => {
+    await drop(page, [jsonFile('known.json', lidPress({ serial: 'HL40-23-00392', setup: { thrustLimit: 70 } })), jsonFile('stranger.json', lidPress({ serial: 'HL40-26-09999' })), { name: 'torn.json', mimeType: 'application/json', buffer: Buffer.from('{') }])
+    await page.getByRole('heading', { level: 1, name: /^3 files read/ }).waitFor()
+  } },
+  { what: 'a new person with nothing said', file: 'pages/people.vue', as: 'admin', open: async (page) => {
+    await press(page, 'Register a person')
+    await press(page, 'Register the person')
+  } },
+  { what: 'a new token', file: 'pages/people.vue', as: 'admin', open: page => press(page, 'Make a token') },
+  { what: 'who is signed in, or the menu', file: 'pages/format.vue', open: async (page) => {
+    const menu = page.getByRole('button', { name: 'Menu' })
+    await (await menu.isVisible() ? menu : page.getByRole('button', { name: /^Runa Haldersen/ })).click()
+  } },
+]
+
+describe('what opens on a page', () => {
+  for (const { what, file, as = 'planner', open } of opened) {
+    it(what, async () => {
+      const { page, trouble } = await windowOf(as)
+      const { address, ready } = visits.find(visit => visit.file === file)!
+      const to = await address()
+      trouble.forget()
+      const found: string[] = []
+      for (const [size, theme] of [[desk, 'day'], [phone, 'night']] as const) {
+        await page.setViewportSize(size)
+        await lightUp(page, theme)
+        await arrive(page, to, ready)
+        await open(page)
+        found.push(...(await violations(page)).map(violation => `${size.width} px, ${theme}: ${violation}`))
+        const pixels = await sidewaysScroll(page)
+        if (pixels > 0) found.push(`${size.width} px wide: scrolls ${pixels} px sideways`)
+        await picture(page, `${what.replaceAll(/\W+/g, '-')}-${size.width}`)
+      }
+      expect([...found, ...trouble.told()]).toEqual([])
+    })
+  }
 })
 
 describe('by keyboard alone', () => {

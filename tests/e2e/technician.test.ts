@@ -4,7 +4,7 @@ import { openWindow, phone, sidewaysScroll, signIn, startBrowser } from '../supp
 import { jsonFile, lidPress } from '../support/lid-press'
 import { admin, people, startServer, type TestServer } from '../support/server'
 import { plantOn } from '../support/server-plant'
-import { drop } from '../support/walk'
+import { drop, pick } from '../support/walk'
 
 /* The technician's evening, on a phone of 390 px. */
 
@@ -17,7 +17,7 @@ const known = jsonFile('lid-02.z.json', lidPress())
 const files = [
   jsonFile('lid-03.z.json', lidPress({ serial: 'HL40-24-00552' })),
   { ...known, name: 'lid-02.z-again.json' },
-  jsonFile('stranger.json', lidPress({ serial: 'HL40-26-01188' })),
+  jsonFile('stranger.json', lidPress({ serial: 'HL40-26-01188', exportedAt: '2024-12-09T22:40:00+01:00' })),
   { name: 'torn.json', mimeType: 'application/json', buffer: Buffer.from('{\n  "schema": "witnessmark.axis-settings/1",\n  "unit": { "serial": \n') },
 ]
 
@@ -86,6 +86,25 @@ describe('what a technician may not', () => {
     await form.getByRole('button', { name: 'Put it there' }).click()
     expect(await form.getByRole('alert').innerText()).toContain('Registering and fitting a unit takes a planner')
     expect(await form.getByLabel(/^Why/).inputValue()).toBe('Swapped at night')
+  })
+
+  it('a planner puts it there: the unit is registered and fitted, the one before it taken out', async () => {
+    const { page: planner } = await openWindow(browser, server.url)
+    await signIn(planner, people.planner.email, admin.password)
+    await planner.getByRole('link', { name: 'Tray', exact: true }).click()
+    const item = planner.getByRole('listitem').filter({ hasText: 'HL40-26-01188' })
+    await item.getByRole('button', { name: 'The unit was swapped: say where it sits' }).click()
+    const form = planner.getByRole('form', { name: 'Where HL40-26-01188 belongs' })
+    await pick(form, /^Axis/, 'LID-02', /LID-02\.Z/)
+    await form.getByLabel(/^Why/).fill('Swapped at night, brake did not hold')
+    await form.getByRole('button', { name: 'Put it there' }).click()
+    await planner.getByRole('heading', { level: 1, name: '1 file waits in the tray' }).waitFor()
+    await planner.getByRole('link', { name: 'Look at it' }).click()
+    await planner.getByRole('heading', { level: 1, name: /^LID-02\.Z v/ }).waitFor()
+    await planner.goto('/axes/LID-02.Z')
+    const life = planner.getByRole('table', { name: 'What happened, newest first' })
+    expect(await life.innerText()).toMatch(/unit HL40-26-01188 fitted[\s\S]*unit HL40-23-00417 taken out/)
+    await planner.context().close()
   })
 
   it('marking known-good is not offered, and refused where it is asked for all the same', async () => {

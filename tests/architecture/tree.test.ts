@@ -51,3 +51,22 @@ describe('the tree', () => {
     expect(long).toEqual([])
   })
 })
+
+describe('templates', () => {
+  /** As the framework names them: the folders, then the file, parts that repeat written once. */
+  const nameOf = (file: string) => {
+    const parts = file.replace(/^components\//, '').replace(/\.vue$/, '').split('/').map(part => part.replace(/(^|-)(\w)/g, (_, __, letter: string) => letter.toUpperCase()))
+    return parts.reduce((name, part) => part.startsWith(name) ? part : name + part, '')
+  }
+  const known = new Set(['NuxtLayout', 'NuxtRouteAnnouncer', 'NuxtPage', 'NuxtLink', 'ClientOnly', 'Teleport', 'Transition', 'TransitionGroup', 'KeepAlive', 'Suspense', ...sourceFiles('components').filter(file => file.endsWith('.vue')).map(nameOf)])
+
+  it('use only components that are there', () => {
+    const wrong = ['components', 'pages', 'layouts'].flatMap(sourceFiles).concat('app.vue', 'error.vue').filter(file => file.endsWith('.vue')).flatMap((file) => {
+      const text = sourceText(file)
+      const imported = [...text.matchAll(/import\s+(?:type\s+)?(?:\{([^}]+)\}|(\w+))/g)].flatMap(match => (match[1] ?? match[2] ?? '').split(',').map(name => name.trim().replace(/^.* as /, '')))
+      const template = /<template>[\s\S]*<\/template>/.exec(text)?.[0] ?? ''
+      return [...template.matchAll(/<([A-Z]\w+)/g)].map(match => match[1] ?? '').filter(name => !known.has(name) && !imported.includes(name)).map(name => `${file}: ${name}`)
+    })
+    expect(wrong).toEqual([])
+  })
+})

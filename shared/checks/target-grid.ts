@@ -48,9 +48,11 @@ function told(found: readonly Off[], resolution: number, length: string): CheckR
   const moves = found.map(({ row }) => row.move.move).sort((a, b) => a - b)
   const worst = found.reduce((most, one) => one.off > most.off || (one.off === most.off && one.row.move.move < most.row.move.move) ? one : most)
   const { move, target } = worst.row.move
-  const which = found.length === 1 ? `Move ${move} has its target` : `${sentence(movesInWords(moves))} have targets`
+  const [which, ends] = found.length === 1
+    ? [`Move ${move} has its target`, `to ${quantity(target, length)} it ends`]
+    : [`${sentence(movesInWords(moves))} have targets`, `move ${move} to ${quantity(target, length)} ends`]
   return note(found.map(({ row }) => atMove(row, 'target')),
-    `${which} between counts of ${quantity(resolution, length)}: move ${move} to ${quantity(target, length)} ends up to ${about(worst.off)} ${length} off, more than the ${about(worst.bound, worst.off)} ${length} that pass unseen.`,
+    `${which} between counts of ${quantity(resolution, length)}: ${ends} up to ${about(worst.off)} ${length} off, more than the ${about(worst.bound, worst.off)} ${length} that pass unseen.`,
     { moves, worst: move, off: worst.off, bound: worst.bound, resolution })
 }
 

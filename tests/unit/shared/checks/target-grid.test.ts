@@ -16,7 +16,7 @@ describe('target-grid', () => {
   it('notes 10.03 mm, 0.03 mm off 10.0 where half the window is 0.025 mm', () => {
     const input = grid([absolute(1, 10.03)])
     expect(told(targetGrid, input)).toEqual([
-      'note: Move 1 has its target between counts of 0.1 mm: move 1 to 10.03 mm ends up to 0.03 mm off, more than the 0.025 mm that pass unseen.',
+      'note: Move 1 has its target between counts of 0.1 mm: to 10.03 mm it ends up to 0.03 mm off, more than the 0.025 mm that pass unseen.',
     ])
     const { at, values } = targetGrid.judge(input)[0]!
     expect(at).toEqual(['/moves/0/target'])

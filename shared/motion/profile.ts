@@ -3,7 +3,7 @@ import { isUnused } from '../settings/move-fields'
 import type { Move, Setup } from '../settings/types'
 import { distanceOf } from './distance'
 import { minus, plus } from './exact'
-import { ramp, type Segment } from './ramp'
+import { ramp, type Drive, type Segment } from './ramp'
 
 /** What a move goes by besides its row. */
 export interface Surroundings {
@@ -37,7 +37,7 @@ export function profile(move: Move, from: number, around: Surroundings = {}): Pr
   if (isUnused(move)) throw new CodedError('unused-row', `Move ${move.move} is an unused row: it has no motion.`, { move: move.move })
   if (move.kind === 'press' && move.approach !== undefined) return pressProfile(move, move.approach, from, around)
   const { distance, halfTurn } = distanceOf(move, from, around.setup?.modulo)
-  const { segments, peak } = ramp(distance, { ...drive(move), enter: 0, leave: 0 }, from, 0)
+  const { segments, peak } = ramp(distance, drive(move, move.speed, 0, 0), from, 0)
   return { segments, duration: endOf(segments, 0), from, end: plus(from, distance), peakSpeed: peak, brakesInTime: true, halfTurn }
 }
 
@@ -46,9 +46,9 @@ function pressProfile(move: Move, approach: number, from: number, { setup, stops
   const first = minus(approach, from)
   const onward = pressSpeed > 0 ? minus(move.target, approach) : 0
   const restsBetween = stopsAtApproach || onward === 0 || first * onward < 0
-  const there = ramp(first, { ...drive(move), enter: 0, leave: restsBetween ? 0 : Math.min(pressSpeed, move.speed) }, from, 0)
+  const there = ramp(first, drive(move, move.speed, 0, restsBetween ? 0 : Math.min(pressSpeed, move.speed)), from, 0)
   const approachAt = endOf(there.segments, 0)
-  const on = ramp(onward, { ...drive(move), speed: pressSpeed, enter: there.leave, leave: 0 }, approach, approachAt)
+  const on = ramp(onward, drive(move, pressSpeed, there.leave, 0), approach, approachAt)
   const segments = [...there.segments, ...on.segments]
   return {
     segments, duration: endOf(segments, 0), from, end: plus(approach, onward), approachAt,
@@ -56,8 +56,8 @@ function pressProfile(move: Move, approach: number, from: number, { setup, stops
   }
 }
 
-function drive({ speed, acceleration, deceleration = acceleration }: Move): { speed: number, acceleration: number, deceleration: number } {
-  return { speed, acceleration, deceleration }
+function drive({ acceleration, deceleration = acceleration }: Move, speed: number, enter: number, leave: number): Drive {
+  return { speed, acceleration, deceleration, enter, leave }
 }
 
 function endOf(segments: readonly Segment[], otherwise: number): number {

@@ -26,11 +26,13 @@ export interface Holding {
  * load until a brake is set, a press hold with the force of the press.
  */
 export function loadsOver({ stretches }: Timeline, effortOf: EffortOf, { pressForce, brakeAfter = Infinity }: Holding): Load[] {
-  return stretches.flatMap((stretch): Load[] => {
+  const loads: Load[] = []
+  for (const stretch of stretches) {
     const time = stretch.t1 - stretch.t0
-    if (stretch.part === 'hold') return [{ force: pressForce(stretch.move), time }]
-    const force = sizeOf(effortOf(stretch.a, directionOf(stretch)))
-    if (stretch.part !== 'wait' || time <= brakeAfter) return [{ force, time }]
-    return [{ force, time: brakeAfter }, { force: 0, time: time - brakeAfter }]
-  })
+    const force = stretch.part === 'hold' ? pressForce(stretch.move) : sizeOf(effortOf(stretch.a, directionOf(stretch)))
+    const braked = stretch.part === 'wait' ? Math.max(0, time - brakeAfter) : 0
+    loads.push({ force, time: time - braked })
+    if (braked > 0) loads.push({ force: 0, time: braked })
+  }
+  return loads
 }

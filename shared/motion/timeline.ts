@@ -34,8 +34,8 @@ export function timeline(chain: readonly Move[], from: number, around: Surroundi
   for (const move of chain) {
     const one = profile(move, place, around)
     const { approachAt = Infinity } = one
-    for (const segment of one.segments) {
-      stretches.push({ ...segment, t0: clock + segment.t0, t1: clock + segment.t1, move: move.move, part: segment.t0 < approachAt ? 'move' : 'press' })
+    for (const { t0, t1, x0, v0, a } of one.segments) {
+      stretches.push({ t0: clock + t0, t1: clock + t1, x0, v0, a, move: move.move, part: t0 < approachAt ? 'move' : 'press' })
     }
     saved += Math.max(0, one.duration - approachAt)
     const moved = clock + one.duration

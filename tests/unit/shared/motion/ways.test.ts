@@ -36,11 +36,17 @@ describe('waysOf', () => {
     expect(ways.map(({ known }) => known)).toEqual([true, false, false])
   })
 
+  it('lies where the axis is, save for a relative move from nobody knows where', () => {
+    const placed = (moves: readonly Move[], number: number) => within(moves, number).map(way => [way.placed, way.profile.from])
+    expect(placed([absolute(1, 50, { next: 2 }), relative(2, 10)], 2)).toEqual([[true, 50]])
+    expect(placed([absolute(1, 50, { next: 3 }), relative(2, 10, { next: 3 }), relative(3, 10)], 3)).toEqual([[true, 50], [false, 0]])
+  })
+
   it('is one for a relative move, whose way is the same from everywhere', () => {
     const [way, ...others] = alone(relative(1, -5))
     expect(others).toEqual([])
     // 5 mm at 2000 mm/s²: √(2000·5) = 100 mm/s.
-    expect(way).toMatchObject({ known: true, profile: { from: 0, end: -5 } })
+    expect(way).toMatchObject({ known: true, placed: false, profile: { from: 0, end: -5 } })
     expect(way!.profile.peakSpeed).toBeCloseTo(100, 9)
   })
 

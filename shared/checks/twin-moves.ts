@@ -1,4 +1,4 @@
-import { usedRows } from '../motion/chains'
+import { usedRows, type Row } from '../motion/chains'
 import type { Move, Setup } from '../settings/types'
 import { answers } from './answers'
 import { inWords, numbersInWords, sentence } from './format'
@@ -18,7 +18,11 @@ export const twinMoves: Rule = {
 
 function judge({ content: { moves, setup } }: JudgeInput): CheckResult[] {
   const groups = new Map<string, { numbers: number[], at: string[] }>()
-  for (const { move, index } of usedRows(moves)) {
+  // Most rows are told apart by their target alone, which costs far less than to spell out all of each.
+  const rows = usedRows(moves)
+  const targets = countOf(rows)
+  for (const { move, index } of rows) {
+    if (targets.get(move.target) === 1) continue
     const key = motionOf(move, setup)
     const group = groups.get(key) ?? { numbers: [], at: [] }
     group.numbers.push(move.move)
@@ -31,6 +35,12 @@ function judge({ content: { moves, setup } }: JudgeInput): CheckResult[] {
   return [note(twins.flatMap(({ at }) => at),
     `${sentence(inWords(sets.map(numbers => `moves ${numbersInWords(numbers)}`)))} do the same.`,
     { moves: sets.flat().sort((a, b) => a - b), groups: sets.map(numbersInWords) })]
+}
+
+function countOf(rows: readonly Row[]): ReadonlyMap<number, number> {
+  const count = new Map<number, number>()
+  for (const { move: { target } } of rows) count.set(target, (count.get(target) ?? 0) + 1)
+  return count
 }
 
 /** What a row does, as text; equal for rows that cannot be told apart by watching the axis. */

@@ -7,7 +7,7 @@ import type { CheckResult, JudgeInput, Rule } from './types'
 
 const { warn, unknown } = answers('window-grid')
 
-interface Window { readonly at: string, readonly words: string, readonly window: number, readonly move?: number }
+interface Window { readonly at: string, readonly window: number, readonly move?: number }
 
 export const windowGrid: Rule = {
   id: 'window-grid',
@@ -23,9 +23,10 @@ function judge({ content, nameplate }: JudgeInput): CheckResult[] {
   const { length } = axisUnits(content.axisKind)
   const { resolution, repeatability } = nameplate ?? {}
   const given = windows(content)
-  const results = given.flatMap(({ at, words, window, move }) => {
-    const say = (text: string, values: Record<string, number>) =>
-      warn([at], `${words} of ±${quantity(window, length)} is ${text}.`, { ...move === undefined ? {} : { move }, window, ...values })
+  const results = given.flatMap(({ at, window, move }) => {
+    const say = (text: string, values: Record<string, number>) => warn([at],
+      `${move === undefined ? 'The in-position window' : `Move ${move}: a window`} of ±${quantity(window, length)} is ${text}.`,
+      { ...move === undefined ? {} : { move }, window, ...values })
     if (resolution !== undefined && window < 2 * resolution) {
       return [say(`less than two counts of ${quantity(resolution, length)}, ±${plain(2 * resolution)} ${length}`, { least: 2 * resolution, resolution })]
     }
@@ -41,10 +42,10 @@ function judge({ content, nameplate }: JudgeInput): CheckResult[] {
 /** The setup's window and those that moves have of their own; a press ends by force, wherever that is. */
 function windows({ setup: { inPositionWindow }, moves }: Content): Window[] {
   return [
-    ...inPositionWindow === undefined ? [] : [{ at: atSetup('inPositionWindow'), words: 'The in-position window', window: inPositionWindow }],
+    ...inPositionWindow === undefined ? [] : [{ at: atSetup('inPositionWindow'), window: inPositionWindow }],
     ...usedRows(moves).flatMap((row): Window[] => {
       const { move, kind, window } = row.move
-      return window === undefined || kind === 'press' ? [] : [{ at: atMove(row, 'window'), words: `Move ${move}: a window`, window, move }]
+      return window === undefined || kind === 'press' ? [] : [{ at: atMove(row, 'window'), window, move }]
     }),
   ]
 }

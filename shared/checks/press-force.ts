@@ -1,4 +1,5 @@
 import type { Row } from '../motion/chains'
+import { forceBaseOf } from '../motion/force-base'
 import { forceOnPart } from '../motion/press-force'
 import { minus } from '../motion/exact'
 import type { SetupFieldName } from '../settings/types'
@@ -69,7 +70,7 @@ function thrustLimitOf({ content: { setup } }: JudgeInput, row: Row): { field: S
 /** The force on the part in N, where load, mounting and rated thrust are known; rotary axes press with a torque and have none. */
 function onPart({ content: { axisKind, setup }, nameplate }: JudgeInput, row: Row, forceLimit: number): { onPart?: number } {
   const push = pushOf(row.move)
-  const base = nameplate?.forceBase === 'peak-thrust' ? nameplate.peakThrust : nameplate?.ratedThrust
+  const base = forceBaseOf(nameplate)
   const { payloadMass, mountingAngle, frictionForce = 0 } = setup
   if (axisKind === 'rotary' || !push || base === undefined || payloadMass === undefined || mountingAngle === undefined) return {}
   const load = { mass: payloadMass + (nameplate?.movingMass ?? 0), mountingAngle, friction: frictionForce }

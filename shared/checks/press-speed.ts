@@ -1,9 +1,8 @@
 import type { Row } from '../motion/chains'
 import { minus } from '../motion/exact'
-import { linearImpact, rotaryImpact } from '../motion/impact'
-import { reflectedMass } from '../motion/reflected-mass'
 import { answers } from './answers'
-import { about, axisUnits, inWords, quantity } from './format'
+import { bodyOf } from './burden'
+import { about, axisUnits, quantity } from './format'
 import { atMove, atSetup } from './pointers'
 import { pressRows } from './presses'
 import type { CheckResult, JudgeInput, Rule } from './types'
@@ -41,8 +40,7 @@ function judge(input: JudgeInput): CheckResult[] {
     const limit = nameplate?.maxImpactEnergy
     const energy = body?.impact(speed)
     if (limit !== undefined && body && energy !== undefined && energy > limit) {
-      const without = body.without.length === 0 ? '' : `, without ${inWords(body.without)}`
-      results.push(warn(at, `Press ${move} meets the part with ${about(energy, limit)} J at ${quantity(speed, unit)}${without}: more than the ${quantity(limit, 'J')} that the unit stands.`, { move, speed, energy, limit }))
+      results.push(warn(at, `Press ${move} meets the part with ${about(energy, limit)} J at ${quantity(speed, unit)}${body.without}: more than the ${quantity(limit, 'J')} that the unit stands.`, { move, speed, energy, limit }))
     }
   }
   return [...results, ...waiting(input, presses)]
@@ -58,25 +56,4 @@ function waiting({ content, nameplate }: JudgeInput, presses: readonly Row[]): C
   if (nameplate?.maxPressSpeed === undefined) missing.push('nameplate.maxPressSpeed')
   if (nameplate?.maxImpactEnergy !== undefined && content.setup[load] === undefined) missing.push(load)
   return missing.length === 0 ? [] : [unknown('Press speed', missing, [...new Set(presses.map(speedAt))])]
-}
-
-interface Body {
-  readonly impact: (speed: number) => number
-  /** What counts as nothing because the nameplate does not tell. */
-  readonly without: readonly string[]
-}
-
-/** What the part has to stop; undefined where the payload is not known. */
-function bodyOf({ content, nameplate }: JudgeInput): Body | undefined {
-  const { payloadMass, payloadInertia } = content.setup
-  const { movingMass, rotorInertia, lead, gearRatio = 1 } = nameplate ?? {}
-  if (content.axisKind === 'rotary') {
-    const inertia = payloadInertia === undefined ? undefined : payloadInertia + (rotorInertia ?? 0) * gearRatio ** 2
-    return inertia === undefined ? undefined : { impact: speed => rotaryImpact(inertia, speed), without: rotorInertia === undefined ? ['the rotor'] : [] }
-  }
-  if (payloadMass === undefined) return undefined
-  const turning = rotorInertia === undefined || lead === undefined ? undefined : reflectedMass(rotorInertia, lead)
-  const mass = payloadMass + (movingMass ?? 0) + (turning ?? 0)
-  const without = [...movingMass === undefined ? ['the moving mass of the unit'] : [], ...turning === undefined ? ['the rotor'] : []]
-  return { impact: speed => linearImpact(mass, speed), without }
 }

@@ -78,8 +78,8 @@ const doors = `
 
 const letters = { technician: 't', planner: 'p', auditor: 'a', admin: 'A' } as const
 const declared = Object.entries(routes) as [RouteName, RouteDeclaration][]
-const doorOf = ([name, { may, token = '', scope = '', sign }]: [RouteName, RouteDeclaration]) =>
-  [name, typeof may === 'string' ? may : may.map(role => letters[role]).join(''), token, scope, sign ? 'signed' : '']
+const doorOf = ([name, { may, token, scope, sign }]: [RouteName, RouteDeclaration]) =>
+  [name, typeof may === 'string' ? may : may.map(role => letters[role]).join(''), token ?? '', scope ?? '', sign ? 'signed' : '']
 const methodOf = (name: string) => name.split(' ')[0]
 const takesUnknown = (schema: unknown) => schema instanceof z.ZodObject && schema.safeParse({ anything: 1 }).success
 

@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { nameplateSchema } from '../settings/nameplate'
 import { axisFlags, axisKinds } from '../settings/types'
 import { axisRef, idSchema, instantSchema, problemErrorSchema, reasonSchema } from './common'
+import { dutySchema } from './places'
 import { changeSchema, checkSchema, contentSchema, judgedSchema, occasions, renumberingSchema, versionSchema } from './versions'
 
 /** What stands beside the file: in the query of a raw body, or as fields of a multipart one. An empty value is the same as none. */
@@ -43,7 +44,7 @@ export const judgingContext = z.object({
   /** null: the serial is not registered, or the unit is not fitted. */
   problem: z.enum(['serial-unknown', 'not-fitted']).nullable(),
   registered: z.object({ model: z.string(), serial: z.string() }).nullable(),
-  axis: z.object({ id: idSchema, tag: z.string(), role: z.string(), axisKind: z.enum(axisKinds), flags: z.array(z.enum(axisFlags)), watched: z.array(z.string()) }).nullable(),
+  axis: z.object({ id: idSchema, tag: z.string(), role: z.string(), axisKind: z.enum(axisKinds), flags: z.array(z.enum(axisFlags)), watched: z.array(z.string()), duty: dutySchema.nullable() }).nullable(),
   current: z.object({ versionId: idSchema, number: z.int(), contentHash: z.string(), content: contentSchema, capturedAt: instantSchema, sightings: z.int() }).nullable(),
   knownGood: z.object({ versionId: idSchema, number: z.int(), firmware: z.string().nullable(), content: contentSchema }).nullable(),
   nextNumber: z.int(),

@@ -30,11 +30,13 @@ const contextOf = (axis: KnownAxis, context: JudgingContext): DiffContext =>
   ({ flags: axis.flags, watched: axis.watched, dictionary: context.nameplate?.dictionary })
 
 function checksOf(read: ReadSettings, context: JudgingContext, axis: KnownAxis): readonly CheckResult[] {
-  const { knownGood } = context
+  const { knownGood, current } = context
+  const { axisKind, flags, duty } = axis
   return judge({
-    content: read.content, axis, unit: read.file.unit, rules: context.rules,
+    content: read.content, axis: { axisKind, flags, ...(duty ? { duty } : {}) }, unit: read.file.unit, rules: context.rules,
     ...(context.registered ? { registered: context.registered } : {}),
     ...(context.nameplate ? { nameplate: context.nameplate } : {}),
+    ...(current ? { before: { content: storedContent(current.content) } } : {}),
     ...(knownGood ? { knownGood: { content: storedContent(knownGood.content), ...(knownGood.firmware ? { firmware: knownGood.firmware } : {}) } } : {}),
   }).results
 }

@@ -57,7 +57,7 @@ function forceWarning(source: KitSource, { identity, nameplate }: KitUnit): stri
 }
 
 function stopWarning(db: VaultDb, place: AxisPlace, row: UnitRow, content: Content): string[] {
-  const { results } = judge(judgeInputOf(readAgainst(db, place, row), content, { model: row.model, ...(row.firmware === null ? {} : { firmware: row.firmware }) }))
+  const { results } = judge(judgeInputOf(readAgainst(db, place, row), content, { model: row.model, ...(row.firmware === null ? {} : { firmware: row.firmware }) }, null))
   const stops = results.filter(({ level }) => level === 'stop')
   return stops.length === 0 ? [] : [`${stops.length} stop ${stops.length === 1 ? 'check' : 'checks'} on this unit: ${stops.map(({ message }) => message).join(' ')}`]
 }

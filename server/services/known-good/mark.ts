@@ -2,10 +2,11 @@ import type { meanings } from '#shared/api/versions'
 import { blocksKnownGood } from '#shared/checks/blocks'
 import { judge } from '#shared/checks/judge'
 import { Refusal } from '#shared/errors/refusal'
-import type { SettingsFile } from '#shared/settings/types'
+import type { Content, SettingsFile } from '#shared/settings/types'
 import { personOf, type Actor } from '#server/database/actor'
 import { insertJudgement, readJudgement } from '#server/database/check/queries'
 import type { Vault, Write } from '#server/database/client'
+import { readContent } from '#server/database/content/queries'
 import { judgingQueries } from '#server/database/judging/queries'
 import { knownGoodQueries } from '#server/database/known-good/queries'
 import type { VaultDb } from '#server/database/prepared'
@@ -54,7 +55,7 @@ function againstOf(db: VaultDb, version: VersionRow): ReadAgainst {
 
 /** Judged by today's nameplate and rules; a judgement that differs from the one kept is kept beside it. */
 function assertNoStops(db: VaultDb, write: Write, version: VersionRow, file: SettingsFile, against: ReadAgainst): void {
-  const judgement = judge(judgeInputOf(against, file, file.unit))
+  const judgement = judge(judgeInputOf(against, file, file.unit, baseContent(db, version)))
   const blocks = blocksKnownGood(judgement, against.place.axis.flags)
   if (blocks.length > 0) {
     const errors = blocks.slice(0, 100).map(({ rule, at, message }) => ({ at: at[0] ?? '', code: rule, message }))
@@ -63,6 +64,12 @@ function assertNoStops(db: VaultDb, write: Write, version: VersionRow, file: Set
   if (JSON.stringify(judgement.results) !== JSON.stringify(readJudgement(db, version.id).results)) {
     insertJudgement(db, version.id, judgement, against.nameplate?.id ?? null, write.now)
   }
+}
+
+/** What stood before it on the axis: some rules judge the step, not the state. */
+function baseContent(db: VaultDb, { baseId }: VersionRow): Content | null {
+  const base = baseId === null ? undefined : versionRow(db, baseId)
+  return base ? readContent(db, base.contentId) : null
 }
 
 function putMark(db: VaultDb, write: Write, mark: { axisId: number, versionId: number | null, byPerson: number }, { meaning, note }: MarkWords): { id: number } {

@@ -24,10 +24,10 @@ export function judgingContext(vault: Vault, actor: Actor, asked: { serial: stri
   const nameplate = judgingQueries(db).nameplate.get({ model: unit.model })?.nameplate ?? null
   if (!place) return { problem: 'not-fitted', registered, ...nothing, nameplate }
   const { current, knownGood, rules } = readAgainst(db, place, unit)
-  const { id, tag, role, axisKind, flags } = place.axis
+  const { id, tag, role, axisKind, flags, duty } = place.axis
   return {
     problem: null, registered, nameplate, rules: rules.map(rule => ({ ...rule })),
-    axis: { id, tag, role, axisKind, flags, watched: place.site.watched },
+    axis: { id, tag, role, axisKind, flags, watched: place.site.watched, duty: duty ?? null },
     current: current && { ...named(current), contentHash: current.hash, capturedAt: current.version.capturedAt, sightings: sightingQueries(db).ofVersion.get({ versionId: current.version.id })?.count ?? 0 },
     knownGood: knownGood && { ...named(knownGood), firmware: knownGood.version.firmware },
     nextNumber: (versionQueries(db).highestNumber.get({ axisId: id })?.number ?? 0) + 1,

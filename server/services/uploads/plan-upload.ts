@@ -75,6 +75,6 @@ function planVersion(db: VaultDb, placed: PlacedFile, against: ReadAgainst, inge
     number: (queries.highestNumber.get({ axisId })?.number ?? 0) + 1,
     renumbered: told?.renumbered ?? [],
     counts: countByWeight(told?.changes ?? changes),
-    judgement: judge(judgeInputOf(against, ingested.content, ingested.file.unit)),
+    judgement: judge(judgeInputOf(against, ingested.content, ingested.file.unit, before)),
   }
 }

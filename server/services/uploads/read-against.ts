@@ -54,13 +54,14 @@ export function diffContextOf({ place, nameplate }: Pick<ReadAgainst, 'place' | 
   return { flags: place.axis.flags, watched: place.site.watched, ...(dictionary ? { dictionary } : {}) }
 }
 
-export function judgeInputOf(against: ReadAgainst, content: Content, { model, firmware }: Pick<UnitIdentity, 'model' | 'firmware'>): JudgeInput {
+export function judgeInputOf(against: ReadAgainst, content: Content, { model, firmware }: Pick<UnitIdentity, 'model' | 'firmware'>, before: Content | null): JudgeInput {
   const { place, unit, nameplate, rules, knownGood } = against
   return {
     content, rules,
-    axis: { axisKind: place.axis.axisKind, flags: place.axis.flags },
+    axis: { axisKind: place.axis.axisKind, flags: place.axis.flags, ...(place.axis.duty ? { duty: place.axis.duty } : {}) },
     unit: { model, ...(firmware === undefined ? {} : { firmware }) },
     registered: { model: unit.model },
+    ...(before ? { before: { content: before } } : {}),
     ...(nameplate ? { nameplate: nameplate.nameplate } : {}),
     ...(knownGood ? { knownGood: { content: knownGood.content, ...(knownGood.version.firmware === null ? {} : { firmware: knownGood.version.firmware }) } } : {}),
   }

@@ -4,7 +4,7 @@ import { fold } from '../../../../shared/checks/fold'
 import { judge } from '../../../../shared/checks/judge'
 import type { CheckResult } from '../../../../shared/checks/types'
 import { arbitraryContent } from '../../../support/arbitrary-content'
-import { absolute, judgeInput, limits, linear, relative } from '../../../support/check-input'
+import { absolute, judgeInput, linear, relative, soundSetup } from '../../../support/check-input'
 
 const unknown = (rule: string, ...missing: string[]): CheckResult =>
   ({ rule, level: 'unknown', at: [], message: `${rule} cannot be judged.`, values: {}, missing })
@@ -37,9 +37,11 @@ describe('fold', () => {
   })
 
   it('takes a judgement without a nameplate', () => {
-    const { results } = judge(judgeInput(linear(limits, [absolute(0, 0), relative(1, 20), relative(2, 30)])))
+    const { results } = judge(judgeInput(linear(soundSetup, [absolute(0, 0), relative(1, 20), relative(2, 30)])))
     expect(fold(results).map(line => line.message)).toEqual([
-      'Relative steps: 2 notes.', '1 rule waits for nameplate.stroke', '1 rule waits for nameplate.maxSpeed', '1 rule waits for nameplate.maxAcceleration',
+      'Relative steps: 2 notes.', 'Speeds that are reached: 2 notes.', '2 rules wait for nameplate.stroke', '1 rule waits for nameplate.maxSpeed',
+      '1 rule waits for nameplate.maxAcceleration', '3 rules wait for nameplate.ratedThrust', '1 rule waits for nameplate.maxPayloadLevel',
+      '2 rules wait for nameplate.resolution', '1 rule waits for nameplate.repeatability', '1 rule waits for nameplate.inputFilterTime', '1 rule waits for nameplate.brakeFitted',
     ])
   })
 

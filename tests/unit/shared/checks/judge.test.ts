@@ -5,13 +5,7 @@ import { ruleOf, rules, ruleSetVersion } from '../../../../shared/checks/table'
 import { levels, type CheckResult, type JudgeInput } from '../../../../shared/checks/types'
 import type { Content } from '../../../../shared/settings/types'
 import { arbitraryContent } from '../../../support/arbitrary-content'
-import { absolute, judgeInput, limits, linear, plate, press, relative, unused } from '../../../support/check-input'
-
-const full = plate({
-  maxSpeed: 800, maxAcceleration: 5000, pressForceMin: 20, pressForceMax: 70, maxPressSpeed: 20, maxImpactEnergy: 0.01,
-  ratedThrust: 300, movingMass: 1, rotorInertia: 0.5, lead: 10,
-})
-const setup = { ...limits, thrustLimit: 80, payloadMass: 4, mountingAngle: 0, speedLimit: 600, selectInputs: 3 } as const
+import { absolute, judgeInput, linear, press, relative, soundPlate, soundSetup, unused } from '../../../support/check-input'
 
 /** A result told without places in the table: rows stand by their numbers. */
 function byNumber(content: Content, { rule, level, at, message }: CheckResult): string {
@@ -21,23 +15,25 @@ function byNumber(content: Content, { rule, level, at, message }: CheckResult): 
 
 describe('judge', () => {
   it('finds nothing in a sound table', () => {
-    const content = linear(setup, [absolute(0, 0), absolute(1, 50, { next: 2 }), press(2, 100, 150, { next: 0 })])
-    const { results, judged, notApplicable, ruleSet } = judge(judgeInput(content, { nameplate: full }))
-    // 24.7 kg at 10 mm/s are 0.0012 J; row 0 follows nobody, so the chain ends there.
+    const content = linear(soundSetup, [absolute(0, 0), absolute(1, 50, { next: 2 }), press(2, 100, 150)])
+    const { results, judged, notApplicable, ruleSet } = judge(judgeInput(content, { nameplate: soundPlate }))
+    // 24.7 kg at 10 mm/s are 0.0012 J.
     expect(results).toEqual([])
     expect(ruleSet).toBe(ruleSetVersion)
-    expect(notApplicable).toEqual(['relative-step', 'site-rule', 'extra-range'])
+    expect(notApplicable).toEqual([
+      'soft-limits-off', 'relative-step', 'overload-plausible', 'chain-after-press', 'zone-reach', 'brake-vertical', 'polarity-flip', 'force-rescale', 'site-rule', 'extra-range',
+    ])
     expect([...judged, ...notApplicable].sort()).toEqual(rules.map(rule => rule.id).sort())
   })
 
   it('tells stops first, then warnings, notes and what is unknown, each in the order of the table', () => {
-    const content = linear({ ...setup, thrustLimit: undefined }, [
+    const content = linear({ ...soundSetup, thrustLimit: undefined }, [
       absolute(0, 250, { speed: 700 }), relative(1, 20), press(2, 100, 150), unused(3), absolute(9, 10, { next: 77 }),
     ])
-    expect(judge(judgeInput(content, { nameplate: full })).results.map(({ level, rule }) => `${level} ${rule}`)).toEqual([
+    expect(judge(judgeInput(content, { nameplate: soundPlate })).results.map(({ level, rule }) => `${level} ${rule}`)).toEqual([
       'stop target-inside', 'stop chain-target',
-      'warn speed-limit', 'warn select-reach',
-      'note relative-step', 'note unused-rows',
+      'warn speed-limit', 'warn stopping-room', 'warn select-reach',
+      'note relative-step', 'note speed-reached', 'note unused-rows',
       'unknown press-path', 'unknown press-force',
     ])
   })
@@ -45,7 +41,7 @@ describe('judge', () => {
   it('is whole and well-formed for any content, with and without a nameplate', () => {
     const anyInput = fc.record({
       content: arbitraryContent({ most: 12 }),
-      nameplate: fc.option(fc.constant(full), { nil: undefined }),
+      nameplate: fc.option(fc.constant(soundPlate), { nil: undefined }),
       rules: fc.constant([{ id: 1, scope: 'site', field: 'move.speed', max: 100, reason: 'slow' }] as JudgeInput['rules']),
     })
     fc.assert(fc.property(anyInput, ({ content, ...rest }) => {
@@ -68,7 +64,7 @@ describe('judge', () => {
     const pair = arbitraryContent({ most: 12 }).chain(content =>
       fc.tuple(fc.constant(content), fc.shuffledSubarray([...content.moves], { minLength: content.moves.length }).map(moves => ({ ...content, moves }))))
     fc.assert(fc.property(pair, ([content, shuffled]) => {
-      const told = (one: Content) => judge(judgeInput(one, { nameplate: full })).results
+      const told = (one: Content) => judge(judgeInput(one, { nameplate: soundPlate })).results
         .map(result => byNumber(one, result)).sort()
       expect(told(shuffled)).toEqual(told(content))
     }))

@@ -9,17 +9,14 @@ import type { CheckResult, JudgeInput, SiteRule } from '../../../../shared/check
 import type { Nameplate } from '../../../../shared/settings/nameplate'
 import { axisFlags, type Content, type Move, type Setup } from '../../../../shared/settings/types'
 import { arbitraryContent } from '../../../support/arbitrary-content'
-import { absolute, judgeInput, linear, plate, press, relative } from '../../../support/check-input'
+import { absolute, judgeInput, linear, plate, press, relative, soundPlate } from '../../../support/check-input'
 
 /*
  * Laws over many contents: what a rule says may not hang on how the axis is looked at, and giving more room or more
  * knowledge may never make it say more against a row.
  */
 
-const known = plate({
-  stroke: 500, maxSpeed: 800, maxAcceleration: 5000, pressForceMin: 20, pressForceMax: 70, maxPressSpeed: 20, maxImpactEnergy: 0.01,
-  ratedThrust: 300, peakThrust: 600, movingMass: 1, rotorInertia: 0.5, lead: 10, dictionary: {},
-})
+const known: Nameplate = { ...soundPlate, stroke: 500 }
 
 /** Tables on a small travel, where rows often meet limits, approaches and each other. */
 const place = fc.integer({ min: -30, max: 130 })

@@ -9,8 +9,12 @@ const besideThis = (name: string) => fileURLToPath(new URL(name, import.meta.url
 describe('the rule table', () => {
   it('has each id once and tells the rules in their order', () => {
     expect(rules.map(rule => rule.id)).toEqual([
-      'travel-span', 'target-inside', 'relative-step', 'press-path', 'press-force', 'press-speed', 'speed-limit', 'acceleration-limit',
-      'chain-target', 'chain-endless', 'select-reach', 'unused-rows', 'unit-matches', 'site-rule', 'extra-range',
+      'travel-span', 'travel-placed', 'soft-limits-off', 'target-inside', 'relative-step', 'press-path', 'press-force',
+      'press-arrives', 'press-hold', 'press-speed', 'thrust-limit', 'overload-plausible', 'speed-limit', 'acceleration-limit',
+      'quick-stop-soft', 'speed-reached', 'thrust-needed', 'thrust-rms', 'payload', 'stopping-room', 'following-window', 'window-grid',
+      'target-grid', 'chain-target', 'chain-endless', 'chain-after-press', 'select-reach', 'start-timing', 'zone-reach',
+      'homing-plausible', 'home-side', 'brake-vertical', 'brake-agrees', 'polarity-flip', 'twin-moves', 'unused-rows', 'unit-matches',
+      'force-rescale', 'site-rule', 'extra-range',
     ])
     expect(ruleSetVersion).not.toBe('')
   })

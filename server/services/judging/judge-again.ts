@@ -1,7 +1,7 @@
 import type { z } from 'zod'
 import type { judgedAgain } from '#shared/api/judging'
 import { judge } from '#shared/checks/judge'
-import type { Judgement } from '#shared/checks/types'
+import type { CheckResult, Judgement } from '#shared/checks/types'
 import { Refusal } from '#shared/errors/refusal'
 import type { SettingsFile } from '#shared/settings/types'
 import type { Actor } from '#server/database/actor'
@@ -32,7 +32,12 @@ export function judgeToday(db: VaultDb, version: VersionRow): Today {
 
 /** Whether it says something else than the judgement that is kept. */
 export function saysOtherwise({ judgement }: Today, kept: StoredJudgement): boolean {
-  return JSON.stringify(judgement.results) !== JSON.stringify(kept.results)
+  return textOf(judgement.results) !== textOf(kept.results)
+}
+
+/** Members in one order, as a rule may name them in another than the vault reads them. */
+function textOf(results: readonly CheckResult[]): string {
+  return JSON.stringify(results.map(({ rule, level, at, message, values, missing }) => [rule, level, at, message, values, missing]))
 }
 
 /** Whether it says something else, or the same by another rule set or another revision of the nameplate. */

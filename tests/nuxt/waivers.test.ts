@@ -58,7 +58,7 @@ describe('accepting a stop', () => {
   it('sends what it covers, the reason, the end of the day at the site and the password', async () => {
     const page = await show(today)
     await press(page, 'Accept with a reason')
-    expect(words(dialog()?.textContent)).toContain('thrust')
+    expect(words(dialog()?.textContent)).toContain('Thrust limit 55 % is above the 45 % allowed')
     await fill('textarea', ' guard closed, tried with ten jars ')
     await fill('input[type="date"]', '2027-02-28')
     await fill('input[type="password"]', 'demo: runa plans well')

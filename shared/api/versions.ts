@@ -25,7 +25,7 @@ export const checkSchema = z.object({
   values: z.record(z.string(), z.union([z.number(), z.string(), z.array(z.number()), z.array(z.string())])), missing: z.array(z.string()).optional(),
 })
 /** Who took a stop, or what could not be judged, upon himself, until when and why. */
-export const waivedSchema = z.object({ id: idSchema, by: z.string(), givenAt: instantSchema, until: instantSchema, reason: z.string() })
+const waivedSchema = z.object({ id: idSchema, by: z.string(), givenAt: instantSchema, until: instantSchema, reason: z.string() })
 /** As the check of a stored version is shown: `waived` where the axis has a waiver that covers it and holds now. */
 export const waivableCheck = checkSchema.extend({ waived: waivedSchema.nullable() })
 export const judgedSchema = z.object({

@@ -6,7 +6,7 @@ const coveredValue = z.union([
   z.number(), z.boolean(), z.string().max(4000), z.null(), z.array(z.number()).max(1000), z.array(word).max(1000), z.strictObject({ value: z.number(), unit: word }),
 ])
 /** What a waiver is good for: the values at the places of a stop; or what was missing, whatever the values. */
-export const coversSchema = z.discriminatedUnion('level', [
+const coversSchema = z.discriminatedUnion('level', [
   z.strictObject({ level: z.literal('stop'), values: z.array(z.strictObject({ place: word, value: coveredValue })).max(1000) }),
   z.strictObject({ level: z.literal('unknown'), missing: z.array(word).max(100) }),
 ])

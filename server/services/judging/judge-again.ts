@@ -26,7 +26,8 @@ export function judgeToday(db: VaultDb, version: VersionRow): Today {
   const unit = unitRows(db).byId.get({ id: version.unitId })
   if (!place || !unit) throw new Refusal('not-found', 'The axis or the unit of this version is not there.')
   const against = readAgainst(db, place, unit)
-  const file = fileOf(db, version)
+  const current = against.current?.version.id === version.id ? against.current.content : undefined
+  const file = fileOf(db, version, current)
   return { against, file, judgement: judge(judgeInputOf(against, file, file.unit)) }
 }
 

@@ -1,6 +1,6 @@
 import type { VersionOne, VersionSummary } from '#shared/api/versions'
 import { Refusal } from '#shared/errors/refusal'
-import type { SettingsFile } from '#shared/settings/types'
+import type { Content, SettingsFile } from '#shared/settings/types'
 import { schemaName } from '#shared/settings/types'
 import { readJudgement } from '#server/database/check/queries'
 import type { Vault } from '#server/database/client'
@@ -51,8 +51,8 @@ export function listVersions({ db }: Vault, axisId: number, query: PageQuery): {
   return pageOf(rows, query, row => row.version.number, row => summaryOnWire(db, row))
 }
 
-/** The version as a settings file: its content with what the file said besides. */
-export function fileOf(db: VaultDb, row: VersionRow): SettingsFile {
+/** The version as a settings file: its content, which the caller may have read already, with what the file said besides. */
+export function fileOf(db: VaultDb, row: VersionRow, content: Content = readContent(db, row.contentId)): SettingsFile {
   const { normalised: _receipt, ...facts } = row.file
-  return { schema: schemaName, ...facts, ...readContent(db, row.contentId) }
+  return { schema: schemaName, ...facts, ...content }
 }

@@ -116,19 +116,19 @@ describe('judging every axis again', () => {
   })
 
   it('lets others in between its slices, and runs follow one another', async () => {
-    for (let index = 0; index < 20; index += 1) storeAt(`AX-${index}`, { thrustLimit: 50 })
+    for (let index = 0; index < 40; index += 1) storeAt(`AX-${index}`, { thrustLimit: 50 })
     rule(40)
     const first = begin()
     const second = begin()
     expect(second).toBeGreaterThan(first)
     const seen: [number, number][] = []
-    while (readRun(plant.vault, runa, second).done < 20) {
+    while (readRun(plant.vault, runa, second).done < 40) {
       await new Promise((resolve) => { setImmediate(resolve) })
       seen.push([readRun(plant.vault, runa, first).done, readRun(plant.vault, runa, second).done])
     }
-    expect(new Set(seen.map(([done]) => done))).toEqual(new Set([0, 8, 16, 20]))
-    expect(seen.filter(([done, later]) => done < 20 && later > 0)).toEqual([])
-    expect(readRun(plant.vault, runa, first).changed).toHaveLength(20)
+    expect(new Set(seen.map(([done]) => done))).toEqual(new Set([0, 16, 32, 40]))
+    expect(seen.filter(([done, later]) => done < 40 && later > 0)).toEqual([])
+    expect(readRun(plant.vault, runa, first).changed).toHaveLength(40)
     expect(readRun(plant.vault, runa, second).changed).toEqual([])
   })
 
@@ -141,14 +141,14 @@ describe('judging every axis again', () => {
   })
 
   it('says when it broke off, and keeps what it judged', async () => {
-    for (let index = 0; index < 10; index += 1) storeAt(`AX-${index}`, { thrustLimit: 50 })
+    for (let index = 0; index < 20; index += 1) storeAt(`AX-${index}`, { thrustLimit: 50 })
     rule(40)
-    plant.vault.sqlite.exec(`CREATE TEMP TRIGGER full BEFORE INSERT ON check_set WHEN (SELECT count(*) FROM check_set) >= 18 BEGIN SELECT RAISE(ABORT, 'no room'); END`)
+    plant.vault.sqlite.exec(`CREATE TEMP TRIGGER full BEFORE INSERT ON check_set WHEN (SELECT count(*) FROM check_set) >= 36 BEGIN SELECT RAISE(ABORT, 'no room'); END`)
     const run = await finished(begin())
-    expect(run).toMatchObject({ done: 8, of: 10, problem: 'The run broke off. What it judged is kept; begin again.' })
-    expect(run.changed).toHaveLength(8)
+    expect(run).toMatchObject({ done: 16, of: 20, problem: 'The run broke off. What it judged is kept; begin again.' })
+    expect(run.changed).toHaveLength(16)
     expect(String(faults[0])).toContain('no room')
     plant.vault.sqlite.exec('DROP TRIGGER full')
-    expect((await finished(begin())).changed).toHaveLength(2)
+    expect((await finished(begin())).changed).toHaveLength(4)
   })
 })

@@ -120,6 +120,25 @@ describe('an accepted stop', () => {
   })
 })
 
+describe('the waivers of an axis', () => {
+  const record = (id: number, rest: object) => ({ id, axisId: 7, rule: 'site-rule', at: [], value: { level: 'stop', values: [] }, reason: 'softer lids ordered', until: '2099-02-28T23:00:00.000Z', by: 'Mira Lindqvist', givenAt: '2026-11-20T09:00:00.000Z', endedAt: null, endedBy: null, endReason: null, ...rest })
+  registerEndpoint('/api/axes/7/waivers', () => ({ items: [
+    record(4, {}), record(3, { until: '2026-01-31T23:00:00.000Z' }), record(2, { endedAt: '2026-11-21T09:00:00.000Z', endedBy: 'Runa Haldersen', endReason: 'lids came' }),
+  ], next: null }))
+
+  it('are read when looked at: what holds, what is over, what was taken back', async () => {
+    const page = await show(today)
+    const [, , history] = page.findAll('details')
+    expect(history?.find('li').exists()).toBe(false)
+    await history?.trigger('toggle')
+    await vi.waitFor(() => expect(history?.findAll('li').map(line => words(line.text()))).toEqual([
+      'site-rule accepted by Mira Lindqvist, 20 Nov 2026 10:00 CET: softer lids ordered; holds until 1 Mar 2099 00:00 CET Accept it no more',
+      'site-rule accepted by Mira Lindqvist, 20 Nov 2026 10:00 CET: softer lids ordered; held until 1 Feb 2026 00:00 CET',
+      'site-rule accepted by Mira Lindqvist, 20 Nov 2026 10:00 CET: softer lids ordered; taken back by Runa Haldersen, 21 Nov 2026 10:00 CET: lids came',
+    ]))
+  })
+})
+
 it('what was judged is judged again on demand', async () => {
   const page = await show(today)
   await press(page, 'Judge it again')

@@ -1,5 +1,5 @@
 import type { z } from 'zod'
-import type { changeSchema, checkSchema, contentSchema, judgedSchema } from '#shared/api/versions'
+import type { changeSchema, checkSchema, contentSchema, judgedSchema, waivableCheck } from '#shared/api/versions'
 import type { CheckResult } from '#shared/checks/types'
 import type { FieldChange } from '#shared/diff/types'
 import type { Content } from '#shared/settings/types'
@@ -11,6 +11,7 @@ import type { StoredJudgement } from '#server/database/check/queries'
 
 export type WireChange = z.infer<typeof changeSchema>
 export type WireCheck = z.infer<typeof checkSchema>
+export type WireWaivableCheck = z.infer<typeof waivableCheck>
 export type WireContent = z.infer<typeof contentSchema>
 export type WireJudged = z.infer<typeof judgedSchema>
 

@@ -1,10 +1,12 @@
 import { z } from 'zod'
 import * as board from './board'
 import { axisParams, created, idParams, listQuery, pageOf, roles, type Role } from './common'
+import * as judging from './judging'
 import * as people from './people'
 import * as places from './places'
 import * as uploads from './uploads'
 import * as versions from './versions'
+import * as waivers from './waivers'
 
 /*
  * The one table of routes: who may call, what goes in, what comes out. A handler that is not in it does not build, a call
@@ -12,7 +14,7 @@ import * as versions from './versions'
  */
 
 /** Whose site must be among the caller's: found from `params.id`. Others answer 404, as if they were not there. */
-export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray'
+export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray' | 'waiver'
 
 export interface RouteDeclaration {
   /** 'anyone' needs no sign-in; 'signed-in' any role. */
@@ -94,6 +96,11 @@ export const routes = {
   'GET /api/rules': { may: all, token: 'read', query: listQuery, answers: { 200: pageOf(places.ruleSchema) }, says: 'Site rules, ended ones too.' },
   'POST /api/rules': { may: planner, body: places.ruleBody, answers: { 201: created }, says: 'Narrows a field for a site, a machine or an axis.' },
   'POST /api/rules/:id/end': { may: planner, scope: 'rule', params: idParams, body: places.ruleEndBody, answers: { 200: places.ruleSchema }, says: 'The rule holds no more.' },
+  'POST /api/waivers': { may: planner, sign: true, body: waivers.waiverBody, answers: { 201: created }, says: 'Accepts a stop, or what could not be judged, of an axis for as long as the value stays; signed, with an end.' },
+  'GET /api/axes/:id/waivers': { may: all, token: 'read', scope: 'axis', params: axisParams, query: listQuery, answers: { 200: pageOf(waivers.waiverSchema) }, says: 'What was accepted there, ended waivers too, newest first.' },
+  'POST /api/waivers/:id/end': { may: planner, scope: 'waiver', sign: true, params: idParams, body: waivers.waiverEndBody, answers: { 200: waivers.waiverSchema }, says: 'The waiver holds no more; signed.' },
+  'POST /api/judging-runs': { may: planner, answers: { 201: created }, says: 'Begins to judge the current version of every axis again, by today’s nameplates and rules.' },
+  'GET /api/judging-runs/:id': { may: planner, params: idParams, query: judging.runQuery, answers: { 200: judging.runSchema }, says: 'How far a run of one’s own has come, and what it changed; kept until the vault restarts.' },
 
   'GET /api/judging-context': { may: all, token: 'read', query: uploads.judgingQuery, answers: { 200: uploads.judgingContext }, says: 'What a file of this serial is read against.' },
   'POST /api/uploads/preview': { may: uploaders, token: 'upload', query: uploads.uploadFields, body: 'file', answers: { 200: uploads.previewAnswer }, says: 'As an upload, and writes nothing.' },
@@ -108,6 +115,7 @@ export const routes = {
   'GET /api/versions/:id/changes': { may: all, token: 'read', scope: 'version', params: idParams, query: versions.changesQuery, answers: { 200: versions.changesAnswer }, says: 'against = before, the path = after; as a list, JSON Patch or text.' },
   'POST /api/versions/:id/known-good': { may: planner, scope: 'version', sign: true, params: idParams, body: versions.knownGoodBody, answers: { 201: created }, says: 'What this axis is restored to from now on; signed, four eyes.' },
   'POST /api/versions/:id/void': { may: planner, scope: 'version', sign: true, params: idParams, body: versions.voidBody, answers: { 201: created }, says: 'A wrong upload; stays readable. Signed.' },
+  'POST /api/versions/:id/judge': { may: planner, scope: 'version', params: idParams, answers: { 201: judging.judgedAgain }, says: 'Judges it by today’s nameplate and rules; the judgements before stay.' },
 
   'GET /api/board': { may: all, token: 'read', answers: { 200: board.boardAnswer }, says: 'Every axis with its state, and what needs someone.' },
   'GET /api/log': { may: ['planner', 'auditor', 'admin'], token: 'read', query: listQuery, answers: { 200: pageOf(board.logEntrySchema) }, says: 'The log, entry by entry; only without site bounds.' },

@@ -24,6 +24,10 @@ export const checkSchema = z.object({
   rule: z.string(), level: z.enum(levels), at: z.array(z.string()), message: z.string(),
   values: z.record(z.string(), z.union([z.number(), z.string(), z.array(z.number()), z.array(z.string())])), missing: z.array(z.string()).optional(),
 })
+/** Who took a stop, or what could not be judged, upon himself, until when and why. */
+const waivedSchema = z.object({ id: idSchema, by: z.string(), givenAt: instantSchema, until: instantSchema, reason: z.string() })
+/** As the check of a stored version is shown: `waived` where the axis has a waiver that covers it and holds now. */
+export const waivableCheck = checkSchema.extend({ waived: waivedSchema.nullable() })
 export const judgedSchema = z.object({
   ruleSet: z.string(), nameplateRevision: z.int().nullable(), judgedAt: instantSchema, judged: z.array(z.string()), notApplicable: z.array(z.string()),
 })
@@ -47,7 +51,7 @@ export const unitOfFile = z.object({
 })
 /** GET one: the summary, and all of it. */
 export const versionOne = versionSchema.omit({ changes: true, checks: true }).extend({
-  changeCounts: weightCounts, checkCounts: levelCounts, content: contentSchema, checks: z.array(checkSchema), judged: judgedSchema, unit: unitOfFile,
+  changeCounts: weightCounts, checkCounts: levelCounts, content: contentSchema, checks: z.array(waivableCheck), judged: judgedSchema, unit: unitOfFile,
   exportedAt: z.string(), exportedBy: z.string().nullable(), note: z.string().nullable(), readings: z.record(z.string(), extraValue),
   upload: z.object({ name: z.string().nullable(), bytes: z.int(), sha256: z.string(), form: z.enum(['json', 'csv']) }),
   normalised: z.object({ rounded: z.int(), converted: z.int(), encoding: z.string(), delimiter: z.string().optional(), decimal: z.string().optional() }),

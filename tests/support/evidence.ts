@@ -12,6 +12,8 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     INSERT INTO nameplate_revision VALUES (1, 'HL40-200V', 1, '{}', '${at}', ${by});
     INSERT INTO rule VALUES (1, 'axis', ${axisId}, 'thrustLimit', NULL, 40, NULL, 'lids crack', '${at}', ${by});
     INSERT INTO rule_end VALUES (1, '${at}', ${by}, 'new lids');
+    INSERT INTO waiver VALUES (1, ${axisId}, 'site-rule', '[]', '{}', 'bracket ordered', '${at}', '${at}', ${by});
+    INSERT INTO waiver_end VALUES (1, '${at}', ${by}, 'bracket fitted');
     INSERT INTO upload VALUES (1, '${hash('a')}', 3, x'00', 'json', 'lid.json', '${at}', ${by}, NULL, '127.0.0.1');
     INSERT INTO content VALUES (1, '${hash('b')}', 3, x'00');
     INSERT INTO version (id, axis_id, number, unit_id, upload_id, content_id, occasion, captured_at, received_at, stored_by, engine, copy_hash, scribe_code, model, harm, motion, text, file)
@@ -26,6 +28,7 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     INSERT INTO known_good VALUES (1, ${axisId}, 1, '${at}', ${by}, 'approved', NULL);`)
   return {
     nameplate_revision: { where: 'id = 1', column: 'nameplate' }, rule: { where: 'id = 1', column: 'reason' }, rule_end: { where: 'rule_id = 1', column: 'reason' },
+    waiver: { where: 'id = 1', column: 'reason' }, waiver_end: { where: 'waiver_id = 1', column: 'reason' },
     upload: { where: 'id = 1', column: 'name' }, content: { where: 'id = 1', column: 'size' }, version: { where: 'id = 1', column: 'reason' },
     version_void: { where: 'version_id = 1', column: 'reason' }, sighting: { where: 'id = 1', column: 'name' }, change: { where: 'version_id = 1', column: 'after' },
     check_set: { where: 'id = 1', column: 'rule_set' }, check_result: { where: 'check_set_id = 1', column: 'message' }, tray: { where: 'id = 1', column: 'detail' },

@@ -13,6 +13,8 @@ export interface CheckLine {
   /** Where it stands, at most three places by name. */
   readonly places: string
   readonly rules: string
+  /** What is folded into it. */
+  readonly results: readonly CheckResult[]
 }
 
 const manyPlaces = 3
@@ -31,16 +33,19 @@ function messageOf(line: FoldedLine, rules: readonly string[], context: WordCont
 export function checkLines(checks: readonly CheckResult[], content: Content, context: WordContext): CheckLine[] {
   return fold(checks).map((line, index) => {
     const rules = [...new Set(line.results.map(result => result.rule))]
-    return { key: `${index} ${rules.join()}`, level: line.level, message: messageOf(line, rules, context), places: placesOf(line, content, context), rules: rules.join(', ') }
+    return { key: `${index} ${rules.join()}`, level: line.level, message: messageOf(line, rules, context), places: placesOf(line, content, context), rules: rules.join(', '), results: line.results }
   })
 }
 
-/** '1 stop, 1 warning, 2 notes and 3 unknown folded'; what stands there when nothing speaks up. */
-export function checksSentence(checks: readonly CheckResult[], judged: number): string {
+/** '1 stop, 1 warning, 1 accepted, 2 notes and 3 unknown folded'; what stands there when nothing speaks up. */
+export function checksSentence(all: readonly (CheckResult & { readonly waived?: unknown })[], judged: number): string {
+  const checks = all.filter(check => !check.waived)
   const count = (level: CheckResult['level']) => checks.filter(check => check.level === level).length
+  const accepted = all.length - checks.length
   const open = [...(count('stop') ? [counted(count('stop'), 'stop', 'stops')] : []), ...(count('warn') ? [counted(count('warn'), 'warning', 'warnings')] : [])]
   const folded = [...(count('note') ? [counted(count('note'), 'note', 'notes')] : []), ...(count('unknown') ? [`${count('unknown')} not judged`] : [])]
+  const taken = accepted ? [`${accepted} accepted`] : []
   const rules = counted(judged, 'rule', 'rules')
   if (judged === 0) return 'nothing to judge'
-  return [open.length ? open.join(', ') : `${rules} judged, no stop and no warning`, ...(folded.length ? [`${folded.join(' and ')} folded`] : [])].join('; ')
+  return [[...(open.length ? open : [`${rules} judged, no stop and no warning`]), ...taken].join(', '), ...(folded.length ? [`${folded.join(' and ')} folded`] : [])].join('; ')
 }

@@ -9,7 +9,7 @@ const steps: Readonly<Record<string, string>> = {
   'signature': 'Type the password you sign in with.',
   'signing-password': 'Set a password of your own first, then come back; nothing was signed.',
   'four-eyes': 'Ask another planner to look at these values and mark the version. Nothing was signed.',
-  'stop-checks': 'Put the values right at the drive and upload again, or correct the nameplate or the rule if they are wrong. Nothing was signed.',
+  'stop-checks': 'Put the values right at the drive and upload again, correct the nameplate or the rule if they are wrong, or accept the check with a reason. Nothing was signed.',
   'marked': 'Mark another version first, or say that none is known-good.',
 }
 

@@ -1,8 +1,11 @@
 import { integer, sqliteTable, text } from 'drizzle-orm/sqlite-core'
 import type { axisStatuses } from '#shared/api/versions'
-import { instant } from '../columns'
+import { instant, json } from '../columns'
 
 export type AxisStatus = (typeof axisStatuses)[number]
+
+/** A result that a waiver covers, and until when it does. */
+export interface AcceptedUntil { readonly level: 'stop' | 'unknown', readonly until: string }
 
 /** Where an axis stands, derived by one function from versions, sightings, marks and fittings; never evidence. */
 export const axisState = sqliteTable('axis_state', {
@@ -24,5 +27,6 @@ export const axisState = sqliteTable('axis_state', {
   warn: integer('warn').notNull(),
   note: integer('note').notNull(),
   unknown: integer('unknown').notNull(),
+  accepted: json<AcceptedUntil[]>('accepted').notNull(),
 })
 export type AxisStateRow = typeof axisState.$inferSelect

@@ -9,6 +9,7 @@ import { rule } from '../rule/table'
 import { tray } from '../tray/table'
 import { unit } from '../unit/table'
 import { version } from '../version/table'
+import { waiver } from '../waiver/table'
 import { site } from './table'
 
 /** The site that a record belongs to; siteId null = to none in particular. */
@@ -32,6 +33,8 @@ export const siteQueries = prepared((db) => {
       .leftJoin(machine, eq(machine.id, axis.machineId)).leftJoin(line, eq(line.id, machine.lineId)).where(eq(unit.id, ref)).prepare(),
     fitting: db.select({ id: fitting.id, siteId: line.siteId }).from(fitting).innerJoin(axis, eq(axis.id, fitting.axisId))
       .innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId)).where(eq(fitting.id, ref)).prepare(),
+    waiver: db.select({ id: waiver.id, siteId: line.siteId }).from(waiver).innerJoin(axis, eq(axis.id, waiver.axisId))
+      .innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId)).where(eq(waiver.id, ref)).prepare(),
     tray: db.select({ id: tray.id, siteId: tray.siteId }).from(tray).where(eq(tray.id, ref)).prepare(),
   }
   const tagged = axisSite(eq(axis.tag, ref)).prepare()

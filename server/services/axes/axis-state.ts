@@ -11,6 +11,7 @@ import type { AxisStateRow, KnownGoodRow, VersionRow } from '#server/database/sc
 import { unitRows } from '#server/database/unit/queries'
 import { versionQueries } from '#server/database/version/queries'
 import { diffContextOf, readAgainst, type ReadAgainst } from '../uploads/read-against'
+import { acceptedUntil } from '../waivers/accepted'
 
 /** Derives the state row of an axis anew; called after every act that touches the axis, within the same write. */
 export function refreshAxisState(db: VaultDb, axisId: number): void {
@@ -20,7 +21,7 @@ export function refreshAxisState(db: VaultDb, axisId: number): void {
   const { versions, sightings, lastUploadAt } = countReceived(db, axisId)
   const counts = current && readLevelCounts(db, current.id)
   replaceAxisState(db, {
-    axisId, ...statusOf(db, axisId, current, mark), versions, sightings, lastUploadAt, ...(counts ?? noChecks),
+    axisId, ...statusOf(db, axisId, current, mark), versions, sightings, lastUploadAt, ...(counts ?? noChecks), accepted: current ? acceptedUntil(db, current) : [],
     knownGoodId: mark?.id ?? null, knownGoodVersionId: mark?.versionId ?? null,
     currentVersionId: current?.id ?? null, fittingId: open?.fitting.id ?? null,
   })

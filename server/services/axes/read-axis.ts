@@ -9,6 +9,7 @@ import { versionQueries } from '#server/database/version/queries'
 import { parseTimestamp } from '#shared/settings/time'
 import { afterOf, limitOf, pageOf, type PageQuery } from '../page'
 import { versionSummary } from '../versions/summary'
+import { standingCounts } from '../waivers/accepted'
 import { overdueSince } from './overdue'
 
 export function axisOnWire({ axis, state, machine, line, site, current, marked, mark, unit }: AxisListRow, now: string): Axis {
@@ -21,7 +22,7 @@ export function axisOnWire({ axis, state, machine, line, site, current, marked, 
     unit: unit?.id && unit.since ? { id: unit.id, serial: unit.serial ?? '', channel: unit.channel, model: unit.model ?? '', firmware: unit.firmware, since: unit.since } : null,
     current: current && { versionId: current.id, number: current.number, capturedAt: current.capturedAt, scribeCode: current.scribeCode, firmware: current.firmware },
     lastUploadAt, overdueSince: overdueSince(lastUploadAt, axis.uploadEveryHours, now),
-    checks: { stop: state?.stop ?? 0, warn: state?.warn ?? 0, note: state?.note ?? 0, unknown: state?.unknown ?? 0 },
+    checks: standingCounts(state, now),
     versions: state?.versions ?? 0, sightings: state?.sightings ?? 0,
   }
 }

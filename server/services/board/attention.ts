@@ -1,5 +1,6 @@
 import type { Attention } from '#shared/api/board'
 import { readJudgement } from '#server/database/check/queries'
+import { readContent } from '#server/database/content/queries'
 import type { SiteBounds } from '#server/database/actor'
 import type { AxisListRow } from '#server/database/axis-state/list'
 import type { VaultDb } from '#server/database/prepared'
@@ -7,6 +8,7 @@ import { countWaiting, waitingGroups } from '#server/database/tray/queries'
 import { againstKnownGood } from '../axes/axis-state'
 import { overdueSince } from '../axes/overdue'
 import { spokenPlace, valueWords } from '../change-words'
+import { standingCounts, waived } from '../waivers/accepted'
 
 type Item = Attention['items'][number]
 
@@ -23,7 +25,7 @@ export function attention(db: VaultDb, sites: SiteBounds, rows: readonly AxisLis
     return { kind, count: needing.length, since: needing.map(each => each.since ?? '').sort()[0] || null, items: needing.slice(0, named).map(each => itemOf(each, text(each))) }
   }
   return [
-    group('stop-check', ({ state }) => (state?.stop ?? 0) > 0, ({ current }) => current?.receivedAt ?? null, ({ row }) => firstStop(db, row)),
+    group('stop-check', ({ state }) => standingCounts(state, now).stop > 0, ({ current }) => current?.receivedAt ?? null, ({ row }) => firstStop(db, row, now)),
     group('off-known-good', ({ state }) => state?.status === 'off', ({ state }) => state?.offSince ?? null, ({ row }) => offText(db, row), weightOff),
     group('unmarked', ({ state }) => state?.status === 'unmarked', ({ mark, current }) => mark?.at ?? current?.receivedAt ?? null, () => 'read, and no version is known-good'),
     group('overdue', row => overdue(row) !== null, overdue, ({ row }) => `due every ${row.axis.uploadEveryHours} h`),
@@ -36,8 +38,10 @@ function itemOf({ row, since }: Needing, text: string): Item {
   return { axisId: row.axis.id, tag: row.axis.tag, versionId: row.current?.id ?? null, knownGoodId: row.marked?.id ?? null, text, since }
 }
 
-function firstStop(db: VaultDb, { current }: AxisListRow): string {
-  const stops = current ? readJudgement(db, current.id).results.filter(({ level }) => level === 'stop') : []
+function firstStop(db: VaultDb, { axis, current }: AxisListRow, now: string): string {
+  if (!current) return ''
+  const { judgement } = waived(db, axis.id, readJudgement(db, current.id), () => readContent(db, current.contentId), now)
+  const stops = judgement.results.filter(({ level }) => level === 'stop')
   return `${stops[0]?.message ?? ''}${stops.length > 1 ? ` And ${stops.length - 1} more.` : ''}`
 }
 

@@ -5,6 +5,7 @@ import type { Vault } from '#server/database/client'
 import { logQueries } from '#server/database/log/queries'
 import { overdueSince } from '../axes/overdue'
 import { plantOf } from '../people/plant'
+import { standingCounts } from '../waivers/accepted'
 import { attention } from './attention'
 
 /** Every axis of the actor's sites with its state, and what needs someone now. */
@@ -26,6 +27,6 @@ function boardAxis({ axis, state, machine, line, site, current, marked, mark, un
     lastUploadAt, overdueSince: overdueSince(lastUploadAt, axis.uploadEveryHours, now),
     knownGood: marked && mark?.at ? { versionId: marked.id, number: marked.number, at: mark.at } : null,
     current: current && { versionId: current.id, number: current.number },
-    checks: { stop: state?.stop ?? 0, warn: state?.warn ?? 0, note: state?.note ?? 0, unknown: state?.unknown ?? 0 },
+    checks: standingCounts(state, now),
   }
 }

@@ -13,6 +13,7 @@ import { changeLine } from '../../../server/services/places/lines'
 import { changeMachine } from '../../../server/services/places/machines'
 import { changeSite } from '../../../server/services/places/sites'
 import { endRule, makeRule } from '../../../server/services/rules/rules'
+import { endWaiver, giveWaiver } from '../../../server/services/waivers/waivers'
 import { endFitting, openFitting } from '../../../server/services/units/fittings'
 import { changeUnit } from '../../../server/services/units/units'
 import { smallPlant } from '../../support/plant'
@@ -45,6 +46,9 @@ describe('each row equals the newest entry about it', async () => {
   const rule = makeRule(vault, planner, { scope: 'axis', scopeId: ids.axisId, field: 'thrustLimit', max: 40, reason: 'r' }).id
   makeRule(vault, planner, { scope: 'axis', scopeId: ids.axisId, field: 'extra:K', fixed: 'B', reason: 'r' })
   endRule(vault, planner, rule, { reason: 'gone' })
+  const waiver = () => giveWaiver(vault, planner, { axisId: ids.axisId, rule: 'travel-span', at: ['/setup/softLimitMax'], value: { level: 'unknown', missing: ['softLimitMax'] }, reason: 'r', until: endsAt }).id
+  waiver()
+  endWaiver(vault, planner, waiver(), { reason: 'known now' })
 
   const entries = vault.db.select().from(schema.log).all().map(({ leaf }) => parseLeaf(leaf))
   const newest = new Map<string, Entry>()
@@ -67,6 +71,16 @@ describe('each row equals the newest entry about it', async () => {
   ])('%s', (kind, rows) => {
     expect(Object.keys(rows).length).toBeGreaterThan(0)
     expect(statesOf(kind)).toEqual(rows)
+  })
+
+  it('waiver, with its end', () => {
+    const ends = new Map(vault.db.select().from(schema.waiverEnd).all().map(end => [end.waiverId, end]))
+    const rows = byId(vault.db.select().from(schema.waiver).all().map((row) => {
+      const end = ends.get(row.id)
+      return { ...row, endedAt: end?.at ?? null, ...(end === undefined ? {} : { endedByPerson: end.byPerson, endReason: end.reason }) }
+    }))
+    expect(Object.keys(rows)).toHaveLength(2)
+    expect(statesOf('waiver')).toEqual(rows)
   })
 
   it('rule, with its end', () => {

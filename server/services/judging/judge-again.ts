@@ -1,0 +1,76 @@
+import type { z } from 'zod'
+import type { judgedAgain } from '#shared/api/judging'
+import { judge } from '#shared/checks/judge'
+import type { CheckResult, Judgement } from '#shared/checks/types'
+import { Refusal } from '#shared/errors/refusal'
+import type { Content, SettingsFile } from '#shared/settings/types'
+import type { Actor } from '#server/database/actor'
+import { countByLevel, insertJudgement, readJudgement, type StoredJudgement } from '#server/database/check/queries'
+import type { Vault, Write } from '#server/database/client'
+import { readContent } from '#server/database/content/queries'
+import { judgingQueries } from '#server/database/judging/queries'
+import type { VaultDb } from '#server/database/prepared'
+import type { VersionRow } from '#server/database/schema'
+import { unitRows } from '#server/database/unit/queries'
+import { refreshAxisState } from '../axes/axis-state'
+import { judgeInputOf, readAgainst, type ReadAgainst } from '../uploads/read-against'
+import { fileOf, versionRow } from '../versions/read-version'
+import { waivedOnWire } from '../waivers/accepted'
+import { judgedOnWire } from '../wire'
+
+/** A stored version as it is judged today, and what it is judged against. */
+export interface Today { readonly against: ReadAgainst, readonly file: SettingsFile, readonly judgement: Judgement }
+
+/** Judges a stored version by the nameplate and the rules of today; stores nothing. */
+export function judgeToday(db: VaultDb, version: VersionRow): Today {
+  const place = judgingQueries(db).axis.get({ id: version.axisId })
+  const unit = unitRows(db).byId.get({ id: version.unitId })
+  if (!place || !unit) throw new Refusal('not-found', 'The axis or the unit of this version is not there.')
+  const against = readAgainst(db, place, unit)
+  const current = against.current?.version.id === version.id ? against.current.content : undefined
+  const file = fileOf(db, version, current)
+  return { against, file, judgement: judge(judgeInputOf(against, file, file.unit, contentBefore(db, version))) }
+}
+
+/** What stood before it on the axis: some rules judge the step, not the state. */
+function contentBefore(db: VaultDb, { baseId }: VersionRow): Content | null {
+  return baseId === null ? null : readContent(db, versionRow(db, baseId).contentId)
+}
+
+/** Whether it says something else than the judgement that is kept. */
+export function saysOtherwise({ judgement }: Today, kept: StoredJudgement): boolean {
+  return textOf(judgement.results) !== textOf(kept.results)
+}
+
+/** Members in one order, as a rule may name them in another than the vault reads them. */
+function textOf(results: readonly CheckResult[]): string {
+  return JSON.stringify(results.map(({ rule, level, at, message, values, missing }) => [rule, level, at, message, values, missing]))
+}
+
+/** Whether it says something else, or the same by another rule set or another revision of the nameplate. */
+export function differsFromKept(today: Today, kept: StoredJudgement): boolean {
+  const revision = today.against.nameplate?.revision ?? null
+  return today.judgement.ruleSet !== kept.ruleSet || revision !== kept.nameplateRevision || saysOtherwise(today, kept)
+}
+
+/** Keeps a judgement beside those before it and logs that it was made; the caller derives the state of the axis anew. */
+export function keepJudgement(db: VaultDb, write: Write, versionId: number, { judgement, against }: Today): void {
+  const nameplateRevisionId = against.nameplate?.id ?? null
+  const id = insertJudgement(db, versionId, judgement, nameplateRevisionId, write.now)
+  const { ruleSet, judged, notApplicable, results } = judgement
+  write.log({ act: 'version-judged', id, state: { id, versionId, ruleSet, nameplateRevisionId, judgedAt: write.now, judged, notApplicable, ...countByLevel(results) } })
+}
+
+/** Judges one version again and keeps the judgement, also where it says the same. */
+export function judgeVersion(vault: Vault, actor: Actor, versionId: number): z.infer<typeof judgedAgain> {
+  return vault.write(actor, (write) => {
+    const { db } = vault
+    const version = versionRow(db, versionId)
+    const today = judgeToday(db, version)
+    const changed = saysOtherwise(today, readJudgement(db, versionId))
+    keepJudgement(db, write, versionId, today)
+    refreshAxisState(db, version.axisId)
+    const kept = readJudgement(db, versionId)
+    return { changed, checks: waivedOnWire(db, version.axisId, kept, () => today.file, write.now), judged: judgedOnWire(kept) }
+  })
+}

@@ -2,13 +2,17 @@ import { mockNuxtImport, mountSuspended, registerEndpoint } from '@nuxt/test-uti
 import { flushPromises, type VueWrapper } from '@vue/test-utils'
 import { readBody } from 'h3'
 import { beforeEach, describe, expect, it, vi } from 'vitest'
+import KitDialog from '~/components/axis/KitDialog.vue'
+import VersionFiles from '~/components/axis/VersionFiles.vue'
 import EntryTable from '~/components/nameplates/EntryTable.vue'
 import NameplateForm from '~/components/nameplates/Form.vue'
 import UploadPage from '~/pages/upload.vue'
 import { entryDraftOf, judgeEntry, type EntryDraft } from '~/utils/nameplates/entry-table'
 import { guessField, pastedRows } from '~/utils/nameplates/entry-paste'
 import { revisionChanges } from '~/utils/nameplates/compare'
-import { liftLines, liftPlate, liftTable } from '../support/entry-table'
+import type { Nameplate } from '../../shared/settings/nameplate'
+import { axis, today } from '../support/axis-answers'
+import { liftFile, liftLines, liftPlate, liftTable } from '../support/entry-table'
 
 const session = { me: { id: 1, name: 'Runa Haldersen', roles: ['planner'], sites: [], empty: false }, may: () => true, forget: () => {}, renew: async () => {} }
 mockNuxtImport('useSession', () => () => session)
@@ -20,6 +24,11 @@ registerEndpoint('/api/nameplates/4', { method: 'PATCH', handler: async (event) 
   return { ...record, id: 5, revision: 3, rev: 3 }
 } })
 registerEndpoint('/api/nameplates', () => ({ items: [record], next: null }))
+registerEndpoint('/api/axes/7/kit', { method: 'POST', handler: async (event) => {
+  bodies.push(await readBody(event) as Record<string, unknown>)
+  return 'No.;Parameter;Value;Unit'
+} })
+registerEndpoint('/api/units', () => ({ items: [], next: null }))
 registerEndpoint('/api/people/names', () => ({ items: [] }))
 registerEndpoint('/api/judging-context', () => ({ problem: 'serial-unknown', registered: null, axis: null, current: null, knownGood: null, nextNumber: 1, nameplate: null, rules: [] }))
 
@@ -116,6 +125,52 @@ describe('the nameplate form', () => {
     await pressed(mounted, 'Take the entry table out')
     await mounted.get('form').trigger('submit')
     await vi.waitFor(() => expect(bodies).toEqual([{ rev: 2, entryTable: null }]))
+  })
+})
+
+describe('the drive’s own list', () => {
+  const content = (setup: object) => ({ axisKind: 'linear' as const, zones: liftFile.zones, moves: liftFile.moves, extra: liftFile.extra, setup: { ...liftFile.setup, ...setup } })
+  const kit = async (setup: object, nameplate: Nameplate) => {
+    const mounted = await mountSuspended(KitDialog, { props: { open: true, axis, content: content(setup), number: 14, nameplate } })
+    const select = () => [...document.querySelectorAll<HTMLSelectElement>('[role="dialog"] select')].at(-1)!
+    await vi.waitFor(() => expect(select().options.length).toBeGreaterThan(1))
+    return { mounted, select: select() }
+  }
+  const chosen = async (select: HTMLSelectElement) => {
+    select.selectedIndex = [...select.options].findIndex(option => option.text.startsWith('The drive’s own list'))
+    select.dispatchEvent(new Event('change'))
+    await flushPromises()
+  }
+
+  it('is a form of the kit, and says what the steps of the drive change', async () => {
+    const { mounted, select } = await kit({ speedLimit: 253 }, liftPlate)
+    await chosen(select)
+    expect(document.body.textContent).toContain('By the steps of the drive: speedLimit 253 becomes 250.')
+    document.querySelector<HTMLInputElement>('[role="dialog"] input[type="checkbox"]')?.click()
+    await flushPromises()
+    ;[...document.querySelectorAll('button')].find(button => button.textContent?.trim() === 'Take the kit')?.click()
+    await vi.waitFor(() => expect(document.body.textContent).toContain('LID-03.Z-v14-kit-list.csv is in your downloads'))
+    expect(bodies).toEqual([{ form: 'entry', cautionsRead: true }])
+    mounted.unmount()
+  })
+
+  it('says what the table has no place for', async () => {
+    const { mounted, select } = await kit({ jogSpeed: 25 }, liftPlate)
+    await chosen(select)
+    expect(document.body.textContent).toContain('It has no place for jogSpeed.')
+    mounted.unmount()
+  })
+
+  it('is no form of the kit where the model has no table', async () => {
+    const { mounted, select } = await kit({}, { model: 'LT20', axisKind: 'linear', stroke: 200 })
+    expect([...select.options].map(option => option.value)).toEqual(['json', 'csv'])
+    mounted.unmount()
+  })
+
+  it('is a form of the file of a version', async () => {
+    const hrefs = (mounted: VueWrapper) => mounted.findAll('a[download]').map(link => link.attributes('href'))
+    expect(hrefs(await mountSuspended(VersionFiles, { props: { version: today, nameplate: liftPlate } }))).toContain('/api/versions/15/file?form=entry')
+    expect(hrefs(await mountSuspended(VersionFiles, { props: { version: today } }))).not.toContain('/api/versions/15/file?form=entry')
   })
 })
 

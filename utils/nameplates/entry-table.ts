@@ -44,10 +44,12 @@ export function entryDraftOf(table: EntryTable | undefined): EntryDraft | undefi
 /** `extend=0, retract=1` by word; a part without a sign is kept whole, so that the schema names it. */
 function wordsIn(words: string): Record<string, string> | undefined {
   const parts = words.split(',').map(part => part.trim()).filter(part => part !== '')
-  return parts.length === 0 ? undefined : Object.fromEntries(parts.map((part) => {
-    const at = part.indexOf('=')
-    return at === -1 ? [part, ''] : [part.slice(0, at).trim(), part.slice(at + 1).trim()]
-  }))
+  return parts.length === 0
+    ? undefined
+    : Object.fromEntries(parts.map((part) => {
+        const at = part.indexOf('=')
+        return at === -1 ? [part, ''] : [part.slice(0, at).trim(), part.slice(at + 1).trim()]
+      }))
 }
 
 function entryOf({ number, name, field, unit, factor, step, digits, rounding, words, none }: EntryRow, part: EntryPart): Record<string, unknown> {

@@ -145,7 +145,7 @@ describe('the drive’s own list', () => {
   it('is a form of the kit, and says what the steps of the drive change', async () => {
     const { mounted, select } = await kit({ speedLimit: 253 }, liftPlate)
     await chosen(select)
-    expect(document.body.textContent).toContain('By the steps of the drive: speedLimit 253 becomes 250.')
+    expect(document.body.textContent).toContain('By the steps of the drive: speed limit 253 becomes 250.')
     document.querySelector<HTMLInputElement>('[role="dialog"] input[type="checkbox"]')?.click()
     await flushPromises()
     ;[...document.querySelectorAll('button')].find(button => button.textContent?.trim() === 'Take the kit')?.click()
@@ -157,7 +157,7 @@ describe('the drive’s own list', () => {
   it('says what the table has no place for', async () => {
     const { mounted, select } = await kit({ jogSpeed: 25 }, liftPlate)
     await chosen(select)
-    expect(document.body.textContent).toContain('It has no place for jogSpeed.')
+    expect(document.body.textContent).toContain('It has no place for jog speed.')
     mounted.unmount()
   })
 

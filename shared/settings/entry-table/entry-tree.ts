@@ -33,8 +33,7 @@ export class EntryTree {
   ) {
     this.tree = new CsvTree(problems, 0)
     this.parameters = new Map(table.parameters.map(entry => [entry.number, entry]))
-    const blocks: Block[] = [{ section: 'zone', columns: table.zones, at: '/zones' }, { section: 'move', columns: table.moves, at: '/moves' }]
-    this.blocks = blocks.filter(({ columns }) => columns.length > 0)
+    this.blocks = ([{ section: 'zone', columns: table.zones, at: '/zones' }, { section: 'move', columns: table.moves, at: '/moves' }] as const).filter(({ columns }) => columns.length > 0)
   }
 
   get root() {
@@ -69,7 +68,7 @@ export class EntryTree {
     this.placed = block.columns.flatMap((column) => {
       const cell = names.indexOf(column.name)
       if (cell >= 0) return [{ column, cell }]
-      const offset = record.offset
+      const { offset } = record
       const meant = nearestKey(column.name, names)
       this.problems.add('header', block.at, { offset, end: offset }, `The column "${column.name}" of the ${block.section}s is missing.`, { value: names.join(this.table.delimiter), ...(meant === undefined ? {} : { meant }) })
       return []
@@ -82,8 +81,7 @@ export class EntryTree {
     const row = fromDrive((record.cells[number.cell] ?? '').trim(), undefined)
     if (this.rows.has(`${section} ${row}`)) {
       const offset = this.startOf(record, number.cell)
-      this.problems.addValue('row-duplicate', at, { offset, end: offset }, `Row ${cutText(row)} is there already; each number is used once.`)
-      return
+      return this.problems.addValue('row-duplicate', at, { offset, end: offset }, `Row ${cutText(row)} is there already; each number is used once.`)
     }
     this.rows.add(`${section} ${row}`)
     for (const { column, cell } of this.placed) {
@@ -99,8 +97,7 @@ export class EntryTree {
     const cell = (column: number) => record.cells[column - 1] ?? ''
     const number = unguard(cell(columns.number).trim())
     if (number === '') {
-      this.problems.add('csv-syntax', '', { offset: record.offset, end: record.offset }, `The line has no number: column ${columns.number} is empty.`, { value: record.cells.join(this.table.delimiter) })
-      return
+      return this.problems.add('csv-syntax', '', { offset: record.offset, end: record.offset }, `The line has no number: column ${columns.number} is empty.`, { value: record.cells.join(this.table.delimiter) })
     }
     const entry = this.parameters.get(number) ?? { number, field: `extra:${number}` }
     const address = addressOf(entry.field, this.axisKind)

@@ -63,7 +63,7 @@ export function useUploadList() {
   }
 
   async function readOne(file: ListedFile): Promise<void> {
-    const read = readFile(file.bytes, file.decimal)
+    const read = readFile(file)
     if ('state' in read) return show(file.id, read)
     try {
       const context = await contextFor(read.file)
@@ -135,9 +135,9 @@ export function useUploadList() {
     if (twin) void readAgain(twin.id)
   }
 
-  /** Reads a file anew: with the answer to its decimal sign, or because there was no reception before. */
-  async function readAgain(id: number, decimal?: 'point' | 'comma'): Promise<void> {
-    store.files = store.files.map(file => file.id === id ? { ...file, ...(decimal ? { decimal } : {}), reading: { state: 'waits' } } : file)
+  /** Reads a file anew: with the answer to its decimal sign or its layout, or because there was no reception before. */
+  async function readAgain(id: number, said: Pick<ListedFile, 'decimal' | 'layout'> = {}): Promise<void> {
+    store.files = store.files.map(file => file.id === id ? { ...file, ...said, reading: { state: 'waits' } } : file)
     await readAll(store.files.filter(file => file.id === id))
   }
 

@@ -36,7 +36,7 @@ export interface Patch {
 
 interface When { readonly daysAgo: number, readonly time: string }
 export type Act = When & (
-  | { readonly act: 'upload', readonly axis: string, readonly by: string, readonly occasion: 'commissioning' | 'routine' | 'as-found' | 'as-left', readonly reason?: string, readonly workOrder?: string, readonly changedBy?: string, readonly allowedBy?: string, readonly patch?: Patch, readonly undo?: boolean, readonly capturedDaysAgo?: number }
+  | { readonly act: 'upload', readonly axis: string, readonly by: string, readonly occasion: 'commissioning' | 'routine' | 'as-found' | 'as-left', readonly reason?: string, readonly workOrder?: string, readonly changedBy?: string, readonly allowedBy?: string, readonly patch?: Patch, readonly undo?: boolean, readonly capturedDaysAgo?: number, /** Sent as the drive's own list, by the entry table of its model. */ readonly list?: boolean }
   | { readonly act: 'upload', readonly file: string, readonly by: string, readonly occasion: 'routine' | 'as-found' }
   | { readonly act: 'nightly', readonly by: string, readonly skip?: readonly string[] }
   | { readonly act: 'mark' | 'none', readonly axis: string, readonly by: string, readonly meaning?: 'reviewed' | 'approved' | 'responsibility', readonly note?: string }

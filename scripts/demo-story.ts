@@ -7,6 +7,8 @@ import { endFitting, openFitting } from '../server/services/units/fittings'
 import { listUnits } from '../server/services/units/units'
 import { storeUpload, type UploadOutcome } from '../server/services/uploads/store-upload'
 import { voidVersion } from '../server/services/versions/void-version'
+import { readSettings } from '../shared/settings/read'
+import { writeEntryCsv } from '../shared/settings/entry-table/write-entry'
 import { fixtureBytes, settingsFile, type Act, type FileJson, type Patch, type Plant } from './demo-files'
 
 export interface Cast {
@@ -30,10 +32,11 @@ export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonl
   const actor = (key: string): Actor => key === 'station' ? cast.station() : person(cast, key)
   const axisId = (tag: string) => cast.axisIds[tag] ?? fail(`no axis ${tag}`)
 
-  const send = (file: FileJson, at: number, by: Actor, tag: string, fields: Parameters<typeof storeUpload>[3]) => {
+  const send = (file: FileJson, at: number, by: Actor, tag: string, fields: Parameters<typeof storeUpload>[3], list = false) => {
     const sent = { ...file, exportedAt: new Date(at).toISOString().replace('.000Z', 'Z') }
-    const name = `${tag.toLowerCase()}.json`
-    return storeUpload(vault, by, { bytes: Buffer.from(JSON.stringify(sent, null, 2)), name }, fields)
+    const bytes = Buffer.from(JSON.stringify(sent, null, 2))
+    if (list) return storeUpload(vault, by, { bytes: ownList(bytes, plant), name: `${tag.toLowerCase()}-list.csv` }, { ...fields, layout: sent.unit.model, capturedAt: sent.exportedAt })
+    return storeUpload(vault, by, { bytes, name: `${tag.toLowerCase()}.json` }, fields)
   }
   const note = (outcome: UploadOutcome, tag: string, expected: readonly UploadOutcome['outcome'][]) => {
     if (!expected.includes(outcome.outcome)) fail(`${tag}: ${outcome.outcome}, ${JSON.stringify(outcome).slice(0, 400)}`)
@@ -68,7 +71,7 @@ export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonl
         const captured = act.capturedDaysAgo === undefined ? at - 120_000 : at - (act.capturedDaysAgo - act.daysAgo) * day
         const { occasion, reason, workOrder, changedBy, allowedBy } = act
         const kept = newest[act.axis]
-        note(send(file, captured, actor(act.by), act.axis, { occasion, ...present({ reason, workOrder, changedBy, allowedBy }) }), act.axis, ['version'])
+        note(send(file, captured, actor(act.by), act.axis, { occasion, ...present({ reason, workOrder, changedBy, allowedBy }) }, act.list), act.axis, ['version'])
         if (act.capturedDaysAgo !== undefined && kept !== undefined) newest[act.axis] = kept
         files[act.axis] = act.undo ? before : file
         break
@@ -101,6 +104,14 @@ export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonl
     }
   }
   return told
+}
+
+/** The file as the drive tool of its model would list it. */
+function ownList(bytes: Buffer, { nameplates }: Plant): Buffer {
+  const read = readSettings(bytes)
+  if (!read.ok) return fail(`a file to be listed cannot be read: ${read.errors[0]?.message ?? ''}`)
+  const { file } = read.value
+  return Buffer.from(writeEntryCsv(file, nameplates.find(({ model }) => model === file.unit.model) ?? fail(`no nameplate of ${file.unit.model}`)))
 }
 
 function fail(why: string): never {

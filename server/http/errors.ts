@@ -33,6 +33,8 @@ const answers: Readonly<Record<RefusalCode | FileBodyCode | 'not-canonical', rea
   'no-known-good': [409, 'Nothing to restore'],
   'forces-differ': [409, 'Percentages mean other forces'],
   'axis-kind': [409, 'Another kind of axis'],
+  'no-entry-table': [409, 'No entry table'],
+  'entry-table-unfit': [409, 'The entry table does not hold it all'],
   'not-fitted': [409, 'Not fitted'],
   'fitted': [409, 'Still fitted'],
   'serial-unknown': [409, 'Unknown serial'],

@@ -1,7 +1,7 @@
 import { z } from 'zod'
 import { nameplateSchema } from '../settings/nameplate'
 import { axisFlags, axisKinds } from '../settings/types'
-import { axisRef, idSchema, instantSchema, problemErrorSchema, reasonSchema } from './common'
+import { axisRef, idSchema, instantSchema, problemErrorSchema, reasonSchema, serialSchema } from './common'
 import { dutySchema } from './places'
 import { changeSchema, checkSchema, contentSchema, judgedSchema, occasions, renumberingSchema, versionSchema } from './versions'
 
@@ -11,6 +11,9 @@ export const uploadFields = z.strictObject({
   reason: z.string().max(2000).optional(), workOrder: z.string().max(80).optional(),
   changedBy: z.string().max(80).optional().describe('free text, or person:ID'), allowedBy: z.string().max(80).optional().describe('free text, or person:ID'),
   capturedAt: instantSchema.optional(), axis: axisRef.optional(), decimal: z.enum(['point', 'comma']).optional(),
+  layout: z.string().min(1).max(64).optional().describe('model whose entry table the file is laid out by; absent = the neutral form'),
+  serial: serialSchema.optional().describe('with layout: of the unit, where the file does not hold it'),
+  firmware: z.string().max(32).optional().describe('with layout: of the unit, where the file does not hold it'),
   name: z.string().max(255).optional().describe('file name'),
 })
 export type UploadFields = z.infer<typeof uploadFields>

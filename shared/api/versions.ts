@@ -58,7 +58,7 @@ export const versionOne = versionSchema.omit({ changes: true, checks: true }).ex
 })
 export type VersionOne = z.infer<typeof versionOne>
 
-export const fileQuery = z.strictObject({ form: z.enum(['json', 'csv', 'original']) })
+export const fileQuery = z.strictObject({ form: z.enum(['json', 'csv', 'entry', 'original']) })
 export const changesQuery = z.strictObject({ against: idText, form: z.enum(['json-patch', 'text']).optional() })
 export const changesAnswer = z.object({
   compare: z.enum(verdicts), changes: z.array(changeSchema), renumbered: z.array(renumberingSchema),
@@ -70,7 +70,8 @@ export type ChangesAnswer = z.infer<typeof changesAnswer>
 export const meanings = ['reviewed', 'approved', 'responsibility'] as const
 export const knownGoodBody = z.strictObject({ meaning: z.enum(meanings), note: z.string().max(2000).optional(), password: passwordSchema })
 export const voidBody = z.strictObject({ reason: reasonSchema, password: passwordSchema })
-export const kitForms = ['json', 'csv'] as const
+/** `entry`: the drive's own list, by the entry table of the model that the kit is for. */
+export const kitForms = ['json', 'csv', 'entry'] as const
 export const kitBody = z.strictObject({ serial: z.string().max(64).optional(), form: z.enum(kitForms), cautionsRead: z.boolean() })
 
 export const axisStatuses = ['in-line', 'off', 'never-read', 'unmarked'] as const

@@ -1,4 +1,6 @@
 import { z } from 'zod'
+import { entryTableFaults } from './entry-table/faults'
+import { entryTableSchema } from './entry-table/schema'
 import { axisKinds, carries, weights } from './types'
 
 /*
@@ -74,6 +76,11 @@ export const nameplateSchema = z.strictObject({
   firmwareSeen: z.array(text(32)).max(64).optional(),
   note: z.string().max(2000).optional(),
   dictionary: z.record(text(64), dictionaryEntrySchema).optional(),
+  entryTable: entryTableSchema.optional().describe('how a drive of this model names things'),
+}).superRefine(({ entryTable, axisKind }, context) => {
+  for (const { path, message } of entryTable ? entryTableFaults(entryTable, axisKind) : []) {
+    context.addIssue({ code: 'custom', path: ['entryTable', ...path], message })
+  }
 })
 export type Nameplate = z.infer<typeof nameplateSchema>
 export type Dictionary = Readonly<Record<string, DictionaryEntry>>

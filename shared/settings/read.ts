@@ -10,6 +10,8 @@ export interface ReadOptions {
   readonly decimal?: 'point' | 'comma'
 }
 
+type Failed = Extract<ReadOutcome, { ok: false }>
+
 const utf8Mark = [0xef, 0xbb, 0xbf]
 const blanks = new Set([0x20, 0x09, 0x0a, 0x0d])
 const jsonStarts = new Set([0x7b, 0x5b])
@@ -24,10 +26,9 @@ export function formOf(bytes: Uint8Array): 'json' | 'csv' {
 
 /** Reads a settings file of either form from its bytes; the form and the encoding are told by the bytes alone. */
 export function readSettings(bytes: Uint8Array, options: ReadOptions = {}): ReadOutcome {
-  if (bytes.length > maxFileBytes) return tooLong(bytes.length)
   const form = formOf(bytes)
-  const decoded = form === 'json' ? decodeJson(bytes) : decodeCsv(bytes)
-  if (!decoded.ok) return notDecoded(bytes, decoded)
+  const decoded = decode(bytes, form)
+  if ('errors' in decoded) return decoded
   return form === 'json' ? readJson(decoded.text, decoded.encoding) : readCsv(decoded.text, { ...options, encoding: decoded.encoding })
 }
 
@@ -36,12 +37,19 @@ export function readSettingsText(text: string, options: ReadOptions = {}): ReadO
   return readSettings(new TextEncoder().encode(text), options)
 }
 
-function tooLong(bytes: number): ReadOutcome {
+/** The text of a file of at most 2 MiB without its byte-order mark, or why there is none. */
+export function decode(bytes: Uint8Array, form: 'json' | 'csv'): Extract<Decoded, { ok: true }> | Failed {
+  if (bytes.length > maxFileBytes) return tooLong(bytes.length)
+  const decoded = form === 'json' ? decodeJson(bytes) : decodeCsv(bytes)
+  return decoded.ok ? decoded : notDecoded(bytes, decoded)
+}
+
+function tooLong(bytes: number): Failed {
   const message = `The file has ${bytes} bytes; at most ${maxFileBytes} are read.`
   return { ok: false, errors: [{ at: '', code: 'limit', message, value: String(bytes) }], more: 0 }
 }
 
-function notDecoded(bytes: Uint8Array, { byte, message }: Extract<Decoded, { ok: false }>): ReadOutcome {
+function notDecoded(bytes: Uint8Array, { byte, message }: Extract<Decoded, { ok: false }>): Failed {
   const place = byte === undefined ? {} : placeOfByte(bytes, byte)
   return { ok: false, errors: [{ at: '', ...place, code: 'encoding', message }], more: 0 }
 }

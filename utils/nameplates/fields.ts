@@ -3,7 +3,7 @@ import { nameplateSchema, type Nameplate } from '#shared/settings/nameplate'
 import type { AxisKind } from '#shared/settings/types'
 import type { Body, FormField } from '../forms/fields'
 
-type Name = Exclude<keyof Nameplate, 'dictionary'>
+type Name = Exclude<keyof Nameplate, 'dictionary' | 'entryTable'>
 interface Group { readonly title: string, readonly why: string, readonly fields: Readonly<Partial<Record<Name, string>>> }
 
 /** The fields of a nameplate as people look for them on a data sheet; labels in the words of the trade. */
@@ -62,5 +62,5 @@ export function filled(nameplate: Nameplate): { readonly of: number, readonly co
   return { of: names.length, count: names.filter(name => nameplate[name] !== undefined).length }
 }
 
-/** A number is written as the form holds it; the dictionary stands apart. */
-export const nameplateRecord = ({ dictionary: _dictionary, ...plain }: Nameplate): Body => plain
+/** A number is written as the form holds it; dictionary and entry table stand apart. */
+export const nameplateRecord = ({ dictionary: _dictionary, entryTable: _entryTable, ...plain }: Nameplate): Body => plain

@@ -1,4 +1,5 @@
 import type { UploadFields } from '#shared/api/uploads'
+import { layoutFields } from './layout'
 import { wantsReason, type ListedFile } from './model'
 
 export type UploadOccasion = NonNullable<UploadFields['occasion']>
@@ -43,6 +44,7 @@ export function fieldsFor(file: ListedFile, words: Words, people: readonly Named
     occasion: words.occasion,
     ...Object.fromEntries(Object.entries(texts).filter(([, text]) => text !== '')),
     ...(file.decimal ? { decimal: file.decimal } : {}),
+    ...layoutFields(file.layout),
     name: (file.name.split('/').at(-1) ?? file.name).slice(0, 255),
   }
 }

@@ -2,6 +2,7 @@ import type { JudgingContext } from '#shared/api/uploads'
 import type { CheckResult } from '#shared/checks/types'
 import type { FieldChange, Renumbering } from '#shared/diff/types'
 import type { FormatError, ReadSettings } from '#shared/settings/types'
+import type { Layout } from './layout'
 
 export interface Axis { readonly id: number, readonly tag: string, readonly role: string }
 
@@ -28,7 +29,7 @@ export interface Placed {
 
 export type Reading
   = | { readonly state: 'waits' }
-    | { readonly state: 'unreadable', readonly errors: readonly FormatError[], readonly more: number, /** Saying which sign is the decimal one would help. */ readonly asksSign?: boolean }
+    | { readonly state: 'unreadable', readonly errors: readonly FormatError[], readonly more: number, /** Saying which sign is the decimal one would help. */ readonly asksSign?: boolean, /** It may be a drive's own list. */ readonly asksLayout?: boolean }
     | { readonly state: 'unplaced', readonly read: ReadSettings, readonly problem: 'serial-unknown' | 'not-fitted' | 'axis-kind', readonly tag: string | null }
     | { readonly state: 'unjudged', readonly read: ReadSettings, readonly why: string }
     | { readonly state: 'twin', readonly of: string }
@@ -40,6 +41,8 @@ export interface ListedFile {
   readonly bytes: Uint8Array
   /** Answer to number-unclear; absent = as the file tells. */
   readonly decimal?: 'point' | 'comma'
+  /** The file is a drive's own list; absent = the neutral form. */
+  readonly layout?: Layout
   readonly reading: Reading
 }
 

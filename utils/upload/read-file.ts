@@ -1,6 +1,7 @@
+import { readEntryFile } from '#shared/settings/entry-table/read-entry'
 import { readSettings } from '#shared/settings/read'
 import type { FormatError, ReadSettings } from '#shared/settings/types'
-import type { Reading } from './model'
+import type { ListedFile, Reading } from './model'
 
 const unclear = (errors: readonly FormatError[]) => errors.filter(error => error.code === 'number-unclear').length
 
@@ -14,8 +15,13 @@ function signWouldHelp(bytes: Uint8Array, errors: readonly FormatError[]): boole
 }
 
 /** The file read, or why it cannot be. */
-export function readFile(bytes: Uint8Array, decimal?: 'point' | 'comma'): ReadSettings | Reading & { state: 'unreadable' } {
+export function readFile({ bytes, decimal, layout }: Pick<ListedFile, 'bytes' | 'decimal' | 'layout'>): ReadSettings | Reading & { state: 'unreadable' } {
+  if (layout) {
+    const { plate, serial, capturedAt } = layout
+    const read = readEntryFile(bytes, plate, { ...(serial === undefined ? {} : { serial }), ...(capturedAt === undefined ? {} : { exportedAt: capturedAt }) })
+    return read.ok ? read.value : { state: 'unreadable', errors: read.errors, more: read.more, asksLayout: true }
+  }
   const outcome = readSettings(bytes, decimal ? { decimal } : {})
   if (outcome.ok) return outcome.value
-  return { state: 'unreadable', errors: outcome.errors, more: outcome.more, asksSign: !decimal && signWouldHelp(bytes, outcome.errors) }
+  return { state: 'unreadable', errors: outcome.errors, more: outcome.more, asksSign: !decimal && signWouldHelp(bytes, outcome.errors), asksLayout: outcome.errors[0]?.code === 'header' }
 }

@@ -1,8 +1,6 @@
 import type { z } from 'zod'
 import type { kitBody } from '#shared/api/versions'
 import { Refusal } from '#shared/errors/refusal'
-import { writeCsv } from '#shared/settings/write-csv'
-import { writeJson } from '#shared/settings/write-json'
 import type { PersonActor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
 import { judgingQueries } from '#server/database/judging/queries'
@@ -13,7 +11,7 @@ import { unitRows } from '#server/database/unit/queries'
 import { versionQueries } from '#server/database/version/queries'
 import { seesSite } from '#server/database/actor'
 import { fileOf, versionRow } from '../versions/read-version'
-import { mediaTypes, type HandedOut } from '../versions/version-file'
+import { fileEnds, mediaTypes, textOf, type HandedOut } from '../versions/version-file'
 import { asItStands, fitToUnit } from './fit'
 import { kitFile, kitNote, type KitSource } from './kit-file'
 
@@ -39,8 +37,7 @@ export function makeKit(vault: Vault, actor: PersonActor, axisId: number, { seri
     const note = kitNote({ tag: place.axis.tag, number: version.number, mark, left: fitted.left, warnings: fitted.warnings })
     const file = kitFile(fitted.content, fitted.identity, note, write.now, actor.name)
     write.log({ act: 'kit-taken', id: axisId, state: { axisId, versionId: version.id, serial: serial ?? null, unitId: registered?.id ?? null, form, released: mark !== null, left: [...fitted.left] } })
-    const text = form === 'json' ? writeJson(file) : writeCsv(file)
-    return { bytes: Buffer.from(text, 'utf8'), mediaType: mediaTypes[form], name: `${place.axis.tag}-v${version.number}-kit.${form}`, released: mark !== null }
+    return { bytes: Buffer.from(textOf(db, file, form), 'utf8'), mediaType: mediaTypes[form], name: `${place.axis.tag}-v${version.number}-kit${fileEnds[form]}`, released: mark !== null }
   })
 }
 

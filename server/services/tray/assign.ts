@@ -39,7 +39,7 @@ export function assignFromTray(vault: Vault, actor: PersonActor, id: number, ass
 }
 
 function readAgain(vault: Vault, { tray }: TrayItemRow): ReadSettings {
-  const read = readSent(readUploadBytes(vault.db, tray.uploadId), tray.fields)
+  const read = readSent(vault.db, readUploadBytes(vault.db, tray.uploadId), tray.fields)
   if (read.ok) return read.value
   throw new Refusal('settings-unreadable', `The file cannot be read: ${read.errors[0]?.message ?? ''} Set it aside and send a corrected one.`, { errors: read.errors, more: read.more })
 }
@@ -79,7 +79,7 @@ function store(vault: Vault, actor: PersonActor, write: Write, trayId: number, {
   const row = trayQueries(db).byId.get({ id: trayId })
   if (!row) throw new RangeError(`There is no tray file ${trayId}.`)
   const { tray, upload } = row
-  const plan = planUpload(db, actor, readSent(readUploadBytes(db, tray.uploadId), tray.fields), tray.fields, Date.parse(write.now))
+  const plan = planUpload(db, actor, readSent(db, readUploadBytes(db, tray.uploadId), tray.fields), tray.fields, Date.parse(write.now))
   if (plan.outcome === 'unplaced' || plan.outcome === 'unreadable') throw unfit(plan.outcome === 'unplaced' ? plan.unplaced.detail : 'The file cannot be read.')
   if (plan.placed.place.axis.id !== axisId) throw unfit(`At the time of the file the unit sat at ${plan.placed.place.axis.tag}.`)
   const source: Source = { sha256: upload.sha256, name: upload.name, sender: { personId: upload.personId, tokenId: upload.tokenId, peer: upload.peer }, uploadId: () => upload.id }

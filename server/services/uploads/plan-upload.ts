@@ -5,12 +5,15 @@ import { diffContents } from '#shared/diff/diff'
 import { diffRenumbered } from '#shared/diff/renumber'
 import { countByWeight } from '#shared/diff/summary'
 import type { FieldChange, Renumbering } from '#shared/diff/types'
+import { Refusal } from '#shared/errors/refusal'
+import { readEntryFile } from '#shared/settings/entry-table/read-entry'
 import { readSettings } from '#shared/settings/read'
 import type { FormatError, ReadOutcome, Weight } from '#shared/settings/types'
 import type { Actor } from '#server/database/actor'
 import { readContent } from '#server/database/content/queries'
+import { judgingQueries } from '#server/database/judging/queries'
 import type { VaultDb } from '#server/database/prepared'
-import type { VersionRow } from '#server/database/schema'
+import type { NameplateRow, VersionRow } from '#server/database/schema'
 import { versionQueries } from '#server/database/version/queries'
 import { ingest, type Ingested } from './ingest'
 import { placeFile, type PlacedFile, type UnplacedFile } from './place-file'
@@ -42,9 +45,19 @@ export type UploadPlan
     | PlannedSighting
     | PlannedVersion
 
-/** Reading needs nothing of the vault, so that it can be done before the write begins. */
-export function readSent(bytes: Uint8Array, { decimal }: Pick<UploadFields, 'decimal'>): ReadOutcome {
-  return readSettings(bytes, decimal === undefined ? {} : { decimal })
+/** Reads what came: by the entry table of the model that the fields name, else as the neutral form. Writes nothing. */
+export function readSent(db: VaultDb, bytes: Uint8Array, { decimal, layout, serial, firmware, capturedAt }: UploadFields): ReadOutcome {
+  if (layout === undefined) return readSettings(bytes, decimal === undefined ? {} : { decimal })
+  const { nameplate } = layoutOf(db, layout)
+  return readEntryFile(bytes, nameplate, { ...(serial === undefined ? {} : { serial }), ...(firmware === undefined ? {} : { firmware }), ...(capturedAt === undefined ? {} : { exportedAt: capturedAt }) })
+}
+
+/** The newest revision of a model by whose entry table a file is read. */
+export function layoutOf(db: VaultDb, model: string): NameplateRow {
+  const row = judgingQueries(db).nameplate.get({ model })
+  if (row?.nameplate.entryTable) return row
+  const why = row ? `the nameplate of ${model} has no entry table; a planner makes one there` : `no nameplate of ${model} is registered`
+  throw new Refusal('input', `?layout: ${why}.`, { errors: [{ at: '?layout', code: 'no-entry-table', message: why }] })
 }
 
 /** What becomes of a file that came in at `receivedAt`; reads the vault and writes nothing. */

@@ -10,7 +10,7 @@ import type { SentFile } from './store-parts'
 
 /** What an upload of this file would become now. Writes nothing; an unreadable file is refused with its errors and kept nowhere. */
 export function previewUpload(vault: Vault, actor: Actor, sent: SentFile, fields: UploadFields): z.infer<typeof previewAnswer> {
-  const plan = planUpload(vault.db, actor, readSent(sent.bytes, fields), fields, Date.parse(vault.now()))
+  const plan = planUpload(vault.db, actor, readSent(vault.db, sent.bytes, fields), fields, Date.parse(vault.now()))
   if (plan.outcome === 'unreadable') {
     throw new Refusal('settings-unreadable', plan.errors[0]?.message ?? 'The file cannot be read.', { errors: plan.errors, more: plan.more })
   }

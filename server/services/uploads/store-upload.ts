@@ -20,7 +20,7 @@ export type UploadOutcome
 /** Stores what came in, whatever it is: a version, a sighting, or a file in the tray; one write for all of it. */
 export function storeUpload(vault: Vault, actor: Actor, sent: SentFile, fields: UploadFields): UploadOutcome {
   assertPeople(vault.db, fields)
-  const read = readSent(sent.bytes, fields)
+  const read = readSent(vault.db, sent.bytes, fields)
   return vault.write(actor, (write): UploadOutcome => {
     const { db } = vault
     const plan = planUpload(db, actor, read, fields, Date.parse(write.now))

@@ -12,7 +12,7 @@ import { versionSummary } from '../versions/summary'
 import { changesOnWire, checksOnWire } from '../wire'
 import { axisNamed } from './axis-named'
 import { engineVersion } from './ingest'
-import type { PlannedSighting, PlannedVersion } from './plan-upload'
+import { layoutOf, type PlannedSighting, type PlannedVersion } from './plan-upload'
 import { storeContent, type Source } from './store-parts'
 
 /** Stores a planned version with its changes and its judgement. */
@@ -41,13 +41,18 @@ function insertVersion(db: VaultDb, write: Write, source: Source, fields: Upload
     baseId: base?.id ?? null, occasion: fields.occasion ?? 'routine',
     capturedAt: new Date(times.capturedAt).toISOString(), receivedAt: write.now, clockDoubtful: times.clockDoubtful, late: plan.late,
     reason: fields.reason ?? null, workOrder: fields.workOrder ?? null, changedBy: fields.changedBy ?? null, allowedBy: fields.allowedBy ?? null,
-    storedBy: source.sender.personId, storedByToken: source.sender.tokenId, engine: engineVersion, copyHash: hashes.copyHash, scribeCode: hashes.scribeCode,
+    storedBy: source.sender.personId, storedByToken: source.sender.tokenId, engine: engineOf(db, fields), copyHash: hashes.copyHash, scribeCode: hashes.scribeCode,
     model: file.unit.model, firmware: file.unit.firmware ?? null, ...plan.counts,
     file: { unit: file.unit, exportedAt, ...(exportedBy === undefined ? {} : { exportedBy }), ...(note === undefined ? {} : { note }), readings, normalised },
   } as const
   const id = versionQueries(db).insert(row)
   write.log({ act: 'version-stored', id, state: { id, ...row, file: definedOnly(row.file) }, note: disagreement(db, write.actor, fields, place.axis) })
   return id
+}
+
+/** A file in a drive's layout can be read again only by the revision that it was read by. */
+function engineOf(db: VaultDb, { layout }: UploadFields): string {
+  return layout === undefined ? engineVersion : `${engineVersion}, entry table of ${layout} revision ${layoutOf(db, layout).revision}`
 }
 
 /** A log entry has no place for undefined. */

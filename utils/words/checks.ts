@@ -12,7 +12,7 @@ export interface CheckLine {
   readonly message: string
   /** Where it stands, at most three places by name. */
   readonly places: string
-  readonly rules: string
+  readonly rules: readonly string[]
 }
 
 const manyPlaces = 3
@@ -31,7 +31,7 @@ function messageOf(line: FoldedLine, rules: readonly string[], context: WordCont
 export function checkLines(checks: readonly CheckResult[], content: Content, context: WordContext): CheckLine[] {
   return fold(checks).map((line, index) => {
     const rules = [...new Set(line.results.map(result => result.rule))]
-    return { key: `${index} ${rules.join()}`, level: line.level, message: messageOf(line, rules, context), places: placesOf(line, content, context), rules: rules.join(', ') }
+    return { key: `${index} ${rules.join()}`, level: line.level, message: messageOf(line, rules, context), places: placesOf(line, content, context), rules }
   })
 }
 

@@ -64,8 +64,8 @@ describe('foldedRows', () => {
 describe('checks in words', () => {
   it('gives each stop and warning a line with its places by name', () => {
     const lines = checkLines(today.checks, after, context)
-    expect(lines.filter(line => line.level === 'stop')).toMatchObject([{ places: 'thrust limit', rules: 'site-rule' }])
-    expect(lines.find(line => line.rules === 'select-reach')?.places).toContain('move 8')
+    expect(lines.filter(line => line.level === 'stop')).toMatchObject([{ places: 'thrust limit', rules: ['site-rule'] }])
+    expect(lines.find(line => line.rules.includes('select-reach'))?.places).toContain('move 8')
   })
   it('says what rules wait for by the words of the screens', () => {
     const waits = checkLines([{ rule: 'payload', level: 'unknown', at: [], message: '', values: {}, missing: ['payloadMass', 'nameplate.maxPayloadLevel'] }], after, context)

@@ -70,7 +70,7 @@ function verdict(row: Row, needs: readonly Need[], { unit, without }: Burden): C
   const { move } = row.move
   const { phase, sign, need, limit } = lead
   const also = others.length === 0 ? '' : `, and too much ${inWords(others.map(other => words[other.phase]))} as well`
-  const share = limit > 0 ? `${about(100 * need / limit, 100)} % of the ${about(limit)} ${unit} that its limit leaves` : 'and its limit leaves none'
+  const share = limit > 0 ? `${about(100 * need / limit, over.length > 0 ? 100 : undefined)} % of the ${about(limit)} ${unit} that its limit leaves` : 'and its limit leaves none'
   return [(over.length > 0 ? stop : warn)([...new Set([...told.map(one => placeOf(row, one.phase)), ...lead.at])],
     `Move ${move} needs ${about(need)} ${unit} towards ${sign === 1 ? 'plus' : 'minus'} ${words[phase]}, ${share}${over.length > 0 ? also : ''}${without}.`,
     { move, phase, need, limit, ...limit > 0 ? { percent: 100 * need / limit } : {} })]

@@ -38,6 +38,8 @@ export interface JudgeInput {
   readonly axis: {
     readonly axisKind: AxisKind
     readonly flags: readonly AxisFlag[]
+    /** Numbers of the moves of a cycle, in order, and what a cycle takes in ms. */
+    readonly duty?: { readonly moves: readonly number[], readonly cycleTime: number }
     /** How often the controller looks at the drive's outputs and sets its inputs, in ms. */
     readonly controllerScan?: number
   }

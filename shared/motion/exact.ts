@@ -27,5 +27,5 @@ export function remainder(value: number, m: number): number {
 
 /** Whether a value that went through roots and products lies above a limit, by more than they lose: 1e-9 of the limit. */
 export function isAbove(value: number, limit: number): boolean {
-  return value > limit + 1e-9 * Math.abs(limit)
+  return value > (Number.isFinite(limit) ? limit + 1e-9 * Math.abs(limit) : limit)
 }

@@ -25,7 +25,7 @@ export const moveHelp: HelpTexts = {
   },
   'target-grid': {
     given: 'Move 1 to 10.03 mm, one count 0.1 mm, in-position window ±0.05 mm, repeatability ±0.1 mm.',
-    reckoned: '10.03 − 10 = 0.03; 0.05 / 2 = 0.025; 0.03 > 0.025',
+    reckoned: '10.03 − 100 · 0.1 = 0.03; 0.05 / 2 = 0.025; 0.03 > 0.025',
     level: 'note',
     result: 'Move 1 has its target between counts of 0.1 mm: to 10.03 mm it ends up to 0.03 mm off, more than the 0.025 mm that pass unseen.',
     remedy: 'Choose a target on a whole count where the place matters, above all for steps that repeat.',

@@ -1,6 +1,8 @@
 import type { Dictionary } from '../../settings/nameplate'
 import type { AxisFlag, Content, ExtraValue, SetupFieldName } from '../../settings/types'
 import { answers } from '../answers'
+import { inWords } from '../format'
+import type { CheckResult } from '../types'
 import { harmValues, type SisterValue } from './sister-fields'
 import type { LiveResult } from './types'
 
@@ -41,22 +43,37 @@ export function sisterMatrix(sisters: readonly Sister[], dictionary?: Dictionary
   }))
 }
 
-/** A warning for each value that stands apart, field by field. */
+/** A warning for each value that stands apart; values of one row of an axis share one, as a shifted row differs in all of them. */
 function judge(sisters: readonly Sister[], dictionary?: Dictionary): LiveResult[] {
-  return tableOf(sisters, dictionary).flatMap(({ key, words, cells, odd, agreeing, common }) => odd.map((index) => {
-    const tag = sisters[index]?.tag ?? ''
-    const own = cells[index]
-    return {
-      ...warn(own ? [own.at] : [], `${tag}: ${words} is ${own?.text ?? 'not set'}, while ${agreeing} sister axes have ${common?.text ?? 'none'}.`,
-        { field: key, ...told('value', own), ...told('common', common), agreeing, axes: [tag] }),
-      axes: [tag],
+  const found = new Map<string, { tag: string, index: number, rows: TableRow[] }>()
+  for (const row of tableOf(sisters, dictionary)) {
+    for (const index of row.odd) {
+      const key = `${index} ${row.rowKey ?? row.key}`
+      const one = found.get(key) ?? { tag: sisters[index]?.tag ?? '', index, rows: [] }
+      one.rows.push(row)
+      found.set(key, one)
     }
-  }))
+  }
+  return [...found.values()].map(({ tag, index, rows }) => ({ ...resultOf(tag, index, rows), axes: [tag] }))
+}
+
+function resultOf(tag: string, index: number, rows: readonly TableRow[]): CheckResult {
+  const own = rows.map(({ cells }) => cells[index])
+  const at = own.flatMap(cell => cell ? [cell.at] : [])
+  const fields = rows.map(({ key }) => key)
+  const agreeing = Math.min(...rows.map(row => row.agreeing))
+  const [row] = rows
+  if (rows.length > 1 || !row) {
+    return warn(at, `${tag}: ${inWords(rows.map(({ words }) => words))} are not as on ${agreeing} sister axes.`, { fields, agreeing, axes: [tag] })
+  }
+  return warn(at, `${tag}: ${row.words} is ${own[0]?.text ?? 'not set'}, while ${agreeing} sister axes have ${row.common?.text ?? 'none'}.`,
+    { fields, ...told('value', own[0]), ...told('common', row.common), agreeing, axes: [tag] })
 }
 
 interface TableRow {
   readonly key: string
   readonly words: string
+  readonly rowKey?: string
   readonly cells: readonly (SisterValue | undefined)[]
   readonly odd: readonly number[]
   /** What most have, undefined where most have none, and how many of them. */
@@ -75,7 +92,7 @@ function tableOf(sisters: readonly Sister[], dictionary?: Dictionary): TableRow[
     const hasRow = (column: ReadonlyMap<string, SisterValue>) => rowKey === undefined || rowKey === key || column.has(rowKey)
     const isTaught = (index: number) => cells[index] === undefined && sisters[index]?.content.setup[key as SetupFieldName] !== undefined
     const takingPart = columns.flatMap((column, index) => hasRow(column) && !isTaught(index) ? [index] : [])
-    return { key, words, cells, ...apart(cells, takingPart) }
+    return { key, words, ...rowKey === undefined ? {} : { rowKey }, cells, ...apart(cells, takingPart) }
   })
 }
 

@@ -19,8 +19,8 @@ function numbersOf(value: unknown): number[] {
 /** Parts of a reckoning that are arithmetic; the words in front of it aside. */
 function arithmeticIn(reckoned: string): string[] {
   return reckoned.split(/;|:| and /)
-    .map(part => part.replace(/^[^\d(−]*= /, '').replace(/^(?!floor)[a-z ]+(?=\d|\()/i, '').replaceAll('−', '-').replaceAll('·', '*').replace(/sin (\d+)°/g, 'sin($1 deg)').trim())
-    .filter(part => /[<>=]/.test(part) && /^(?:[\d.\s()+*/^<>=-]|sin\(\d+ deg\)|floor)+$/.test(part))
+    .map(part => part.replace(/^[^\d(−]*= /, '').replace(/^(?!floor|sin)[a-z ]+(?=\d|\()/i, '').replaceAll('−', '-').replaceAll('·', '*').replaceAll('√', 'sqrt').replace(/sin (\d+)°/g, 'sin($1 deg)').trim())
+    .filter(part => /[<>=]/.test(part) && /^(?:[\d.\s()+*/^<>=-]|sin\(\d+ deg\)|floor|sqrt)+$/.test(part))
 }
 
 /** Whether each side of each sign stands to the next as the sign says; what was rounded to four digits counts as equal. */
@@ -36,7 +36,8 @@ function holds(part: string): boolean {
   return true
 }
 
-const constants = [0, 1, 1.5, 2, 4, 5, 100, 9.80665]
+/** Numbers of the formulas themselves: per cent, millimetres a metre, standard gravity, how many sisters. */
+const constants = [0, 1, 2, 4, 5, 100, 1000, 9.80665]
 const near = (numbers: readonly number[], number: number) => numbers.some(one => Math.abs(one - number) <= 1e-9 * Math.max(1, Math.abs(one)))
 const examples = Object.entries(ruleHelp)
 
@@ -62,7 +63,7 @@ describe('the examples of the help page', () => {
   it.each(examples)('%s: the reckoning goes from these numbers to those of the result', (id, { given, reckoned, result }) => {
     const [first] = helpInputs.get(id)!.results
     const known = [...numbersIn(given), ...numbersIn(result), ...numbersOf(first!.values), ...constants]
-    const computed = arithmeticIn(reckoned).flatMap(numbersIn)
+    const computed = arithmeticIn(reckoned).flatMap(part => part.split('=').slice(1)).flatMap(numbersIn)
     for (const number of numbersIn(reckoned)) expect(near([...known, ...computed], number), `${number} comes from nowhere`).toBe(true)
   })
 

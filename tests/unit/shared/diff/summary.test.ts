@@ -38,6 +38,22 @@ describe('a summary of changes', () => {
     expect(countByWeight(diffContents(was, is)).motion).toBe(3)
   })
 
+  it('counts fields that a row gained or lost one by one, as long as the row stays', () => {
+    const row: Move = { move: 1, kind: 'absolute', target: 60, speed: 100, acceleration: 1000 }
+    const rich: Move = { ...row, label: 'Over lid', comment: 'slow', window: 0.1 }
+    expect(countByWeight(diffContents({ ...before, moves: [row] }, { ...before, moves: [rich] }))).toEqual({ harm: 0, motion: 1, text: 2 })
+    expect(countByWeight(diffContents({ ...before, moves: [rich] }, { ...before, moves: [row] }))).toEqual({ harm: 0, motion: 1, text: 2 })
+  })
+
+  it('tells the row that is gone from the one that has its number and is edited', () => {
+    const row = (move: number, target: number, speed = 100): Move => ({ move, kind: 'absolute', target, speed, acceleration: 1000 })
+    const was = { ...before, moves: [row(0, 5), row(1, 11), row(2, 12), row(3, 60), row(4, 30), row(5, 80)] }
+    const is = { ...before, moves: [row(0, 5), row(1, 60), row(2, 30, 90), row(3, 80)] }
+    const changes = diffRenumbered(was, is)?.changes ?? []
+    expect(changes.filter(change => change.at.startsWith('/moves/2/')).map(change => change.field)).toEqual(['kind', 'target', 'speed', 'acceleration', 'speed'])
+    expect(countByWeight(changes)).toEqual({ harm: 2, motion: 1, text: 0 })
+  })
+
   it('never counts more than there are, and none only where there is none', () => {
     fc.assert(fc.property(arbitraryContent(), arbitraryContent(), (a, b) => {
       const all = diffContents(a, b)

@@ -34,6 +34,6 @@ describe('isAbove', () => {
   })
 
   it('goes on to the end of numbers', () => {
-    expect([isAbove(5, Infinity), isAbove(Infinity, 5), isAbove(Infinity, Infinity), isAbove(1e-300, 0)]).toEqual([false, true, false, true])
+    expect([isAbove(5, Infinity), isAbove(Infinity, 5), isAbove(Infinity, Infinity), isAbove(5, -Infinity), isAbove(1e-300, 0)]).toEqual([false, true, false, true, true])
   })
 })

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { acts, isAct, type Act } from '../../../../shared/trail/acts'
+import { acts, type Act } from '../../../../shared/trail/acts'
 import { formatLeaf, parseLeaf, type Entry, type Json } from '../../../../shared/trail/entry'
 import { codeOf } from '../../../support/codes'
 
@@ -63,13 +63,82 @@ describe('a log entry', () => {
   })
 })
 
-describe('acts', () => {
-  it('are told from other words, those of every object too', () => {
-    expect(isAct('version-stored')).toBe(true)
-    for (const word of ['version-stord', 'toString', 'constructor', '__proto__', '']) expect(isAct(word)).toBe(false)
+/* One entry of each kind of actor, as text: the leaves of a vault are hashed, so not one byte of their form may move. */
+describe('who did it', () => {
+  const by = (actor: string) => leaf.replace('{"id":3,"kind":"person","name":"Runa Haldersen"}', actor)
+
+  it.each([
+    ['a person', '{"id":3,"kind":"person","name":"Runa Haldersen"}'],
+    ['a token, with the person that it belongs to', '{"id":7,"kind":"token","name":"Night export","ownerId":3}'],
+    ['the vault itself, which has no number', '{"kind":"vault","name":"Witnessmark"}'],
+  ])('may be %s', (_, actor) => expect(formatLeaf(parseLeaf(by(actor)))).toBe(by(actor)))
+
+  it.each([
+    ['a person without a number', '{"kind":"person","name":"Runa Haldersen"}'],
+    ['a number that is not whole', '{"id":3.5,"kind":"person","name":"Runa Haldersen"}'],
+    ['number 0', '{"id":0,"kind":"person","name":"Runa Haldersen"}'],
+    ['a token of nobody', '{"id":7,"kind":"token","name":"Night export"}'],
+    ['a vault with a number', '{"id":1,"kind":"vault","name":"Witnessmark"}'],
+    ['somebody without a name', '{"id":3,"kind":"person"}'],
+    ['a key that nobody knows', '{"email":"r@larkfield.example","id":3,"kind":"person","name":"Runa Haldersen"}'],
+  ])('is never %s', (_, actor) => expect(codeOf(() => parseLeaf(by(actor)))).toBe('entry-unreadable'))
+})
+
+describe('what it is about', () => {
+  const of = (act: Act, subject: string) => leaf.replace('site-changed', act).replace('{"id":1,"kind":"site"}', subject)
+
+  it('is named by a number, or by a text: contents by their hash', () => {
+    const hash = 'b'.repeat(64)
+    expect(parseLeaf(of('content-stored', `{"id":"${hash}","kind":"content"}`)).subject).toEqual({ kind: 'content', id: hash })
+    expect(parseLeaf(of('axis-changed', '{"id":12,"kind":"axis"}')).subject).toEqual({ kind: 'axis', id: 12 })
+    for (const id of ['0', '-1', '1.5', 'null', 'true']) expect(codeOf(() => parseLeaf(of('axis-changed', `{"id":${id},"kind":"axis"}`)))).toBe('entry-unreadable')
   })
 
-  it('are each about one kind of subject', () => {
-    for (const [act, kind] of Object.entries(acts)) expect(kind, act).toMatch(/^[a-z][a-z-]*$/)
+  it('fits the act: every act goes with its own kind and with no other', () => {
+    const kinds = [...new Set(Object.values(acts))]
+    for (const [act, own] of Object.entries(acts) as [Act, string][]) {
+      for (const kind of kinds) {
+        const text = of(act, `{"id":1,"kind":"${kind}"}`)
+        if (kind === own) expect(parseLeaf(text).act).toBe(act)
+        else expect(codeOf(() => parseLeaf(text))).toBe('entry-subject')
+      }
+    }
+  })
+
+  it('says in the error what the act is about', () => {
+    expect(() => parseLeaf(of('kit-taken', '{"id":1,"kind":"axis"}'))).toThrow('kit-taken is about a kit, not a axis.')
+  })
+})
+
+describe('when and in which place', () => {
+  it('is a moment of 24 characters, to the millisecond', () => {
+    for (const at of ['2026-03-09T14:32:00Z', '2026-03-09T14:32:00.0000Z', '']) expect(codeOf(() => parseLeaf(leaf.replace('2026-03-09T14:32:00.000Z', at)))).toBe('entry-unreadable')
+  })
+
+  it('counts from 0, in whole numbers', () => {
+    expect(parseLeaf(leaf.replace('"seq":41', '"seq":0')).seq).toBe(0)
+    expect(codeOf(() => parseLeaf(leaf.replace('"seq":41', '"seq":0.5')))).toBe('entry-unreadable')
+    expect(codeOf(() => parseLeaf(leaf.replace('"seq":41', '"seq":9007199254740993')))).toBe('entry-unreadable')
+  })
+})
+
+describe('the state', () => {
+  it('is an object, never a list or a bare value', () => {
+    for (const state of ['[]', '"text"', '1', 'null']) expect(codeOf(() => parseLeaf(leaf.replace(/"state":\{.*?\}/, `"state":${state}`)))).toBe('entry-unreadable')
+  })
+
+  it('holds what a person wrote, in any script, and each spelling of it once', () => {
+    const named = (name: string) => formatLeaf({ ...entry, state: { name } })
+    for (const name of ['Lid "press" 2\\', 'Käserei Süd', 'ligne\n2', '生産ライン', '\u007f\u2028']) expect(parseLeaf(named(name)).state).toEqual({ name })
+    expect(codeOf(() => parseLeaf(named('a/b').replace('a/b', 'a\\/b')))).toBe('entry-not-canonical')
+  })
+
+  it('keeps a number to its last digit', () => {
+    for (const value of [0.1, 1e21, 5e-324, -123.456789, 9007199254740991]) expect(parseLeaf(formatLeaf({ ...entry, state: { value } })).state).toEqual({ value })
+  })
+
+  it('of two keys alike is refused, since JSON keeps but one of them', () => {
+    expect(codeOf(() => parseLeaf(leaf.replace('"rev":2', '"rev":1,"rev":2')))).toBe('entry-not-canonical')
+    expect(codeOf(() => parseLeaf(leaf.replace('"v":1', '"v":1,"v":1')))).toBe('entry-not-canonical')
   })
 })

@@ -18,7 +18,7 @@ describe('sister-outlier', () => {
     const list = thrusts(38, 55, 38, 38, 38, 38)
     expect(said(list)).toEqual(['warn: LID-02.Z: thrust limit is 55 %, while 5 sister axes have 38 %.'])
     expect(sisterOutlier.judge(list)).toMatchObject([{
-      rule: 'sister-outlier', at: ['/setup/thrustLimit'], axes: ['LID-02.Z'], values: { field: 'thrustLimit', value: 55, common: 38, agreeing: 5 },
+      rule: 'sister-outlier', at: ['/setup/thrustLimit'], axes: ['LID-02.Z'], values: { fields: ['thrustLimit'], value: 55, common: 38, agreeing: 5 },
     }])
   })
 
@@ -45,6 +45,15 @@ describe('sister-outlier', () => {
     const zoned = (to: number) => linear({}, [], { zones: [{ zone: 1, from: 0, to }] })
     expect(said(sisters(zoned(12), zoned(12), zoned(12), zoned(12), linear()))).toEqual(['warn: LID-05.Z: zone 1 from is not set, while 4 sister axes have 0 mm.'])
     expect(said(sisters(zoned(12), zoned(12), zoned(12), zoned(12), zoned(13)))).toEqual(['warn: LID-05.Z: zone 1 to is 13 mm, while 4 sister axes have 12 mm.'])
+  })
+
+  it('makes one line of a row that differs in several values', () => {
+    const full = linear({}, [press(2, 100, 150)])
+    const list = sisters(full, full, full, linear({}, [press(2, 90, 150, { forceLimit: 45 })]), full)
+    expect(said(list)).toEqual(['warn: LID-04.Z: move 2 force and move 2 approach are not as on 4 sister axes.'])
+    expect(sisterOutlier.judge(list)).toMatchObject([{
+      at: ['/moves/0/forceLimit', '/moves/0/approach'], values: { fields: ['move 2 forceLimit', 'move 2 approach'], agreeing: 4, axes: ['LID-04.Z'] },
+    }])
   })
 
   it('looks past place, taught and motion values', () => {

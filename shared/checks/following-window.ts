@@ -49,10 +49,12 @@ function lagging(input: JudgeInput, window: number, words: string, gain: number)
     { window, lag, speed, move })]
 }
 
+/** The row that gets the highest speed; of several alike the one with the lowest number. */
 function fastest(input: JudgeInput): { readonly row?: Row, readonly speed: number } {
   let most: { row?: Row, speed: number } = { speed: 0 }
   for (const { row, ways } of drivenRows(input)) {
-    for (const { profile: { peakSpeed: speed } } of ways) if (speed > most.speed) most = { row, speed }
+    const speed = Math.max(0, ...ways.map(({ profile }) => profile.peakSpeed))
+    if (speed > most.speed || (speed === most.speed && most.row && row.move.move < most.row.move.move)) most = { row, speed }
   }
   return most
 }

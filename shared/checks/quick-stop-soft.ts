@@ -20,7 +20,7 @@ function judge({ content }: JudgeInput): CheckResult[] {
   const { quickStopDeceleration: quickStop } = content.setup
   const at = atSetup('quickStopDeceleration')
   if (quickStop === undefined) return [unknown('The quick stop', ['quickStopDeceleration'], [at])]
-  const hardest = usedRows(content.moves).reduce((most, row) => brakes(row) > brakes(most) ? row : most)
+  const hardest = usedRows(content.moves).reduce(harder)
   const deceleration = brakes(hardest)
   if (quickStop >= deceleration) return []
   const { acceleration: unit } = axisUnits(content.axisKind)
@@ -28,6 +28,12 @@ function judge({ content }: JudgeInput): CheckResult[] {
   return [warn([at, atMove(hardest, hardest.move.deceleration === undefined ? 'acceleration' : 'deceleration')],
     `The quick stop brakes with ${quantity(quickStop, unit)}, softer than move ${move} with ${quantity(deceleration, unit)}: give it at least as much.`,
     { move, quickStop, deceleration })]
+}
+
+/** The row that brakes harder; of two alike the one with the lower number. */
+function harder(one: Row, other: Row): Row {
+  const more = brakes(other) - brakes(one)
+  return more > 0 || (more === 0 && other.move.move < one.move.move) ? other : one
 }
 
 function brakes({ move: { acceleration, deceleration = acceleration } }: Row): number {

@@ -7,7 +7,11 @@ export interface Row { readonly move: Move, readonly index: number }
 
 /** Rows that are in use, in the order of the table. */
 export function usedRows(moves: readonly Move[]): Row[] {
-  return moves.flatMap((move, index) => isUnused(move) ? [] : [{ move, index }])
+  const rows: Row[] = []
+  moves.forEach((move, index) => {
+    if (!isUnused(move)) rows.push({ move, index })
+  })
+  return rows
 }
 
 /** Numbers that a used row names in `next`: rows that start by themselves. */

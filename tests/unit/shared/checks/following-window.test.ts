@@ -31,6 +31,10 @@ describe('following-window', () => {
     expect(followingWindow.judge(window({ positionGain: 50 }, moves))[0]!.values).toMatchObject({ move: 2, lag: 6, speed: 300 })
   })
 
+  it('names the lowest number of several as fast', () => {
+    expect(followingWindow.judge(window({ positionGain: 50 }, [absolute(7, 0), absolute(3, 0), absolute(5, 0)]))[0]!.values.move).toBe(3)
+  })
+
   it('warns up to the in-position window, that included', () => {
     expect(told(followingWindow, window({ inPositionWindow: 5 }))).toEqual(['warn: The following error window of ±5 mm is not wider than the in-position window of ±5 mm.'])
     expect(told(followingWindow, window({ inPositionWindow: 4.999999 }))).toEqual([])

@@ -24,6 +24,10 @@ describe('quick-stop-soft', () => {
     expect(told(quickStopSoft, quick(500, absolute(1, 0, { acceleration: 9000, deceleration: 100 })))).toEqual([])
   })
 
+  it('names the lowest number of several as hard', () => {
+    expect(quickStopSoft.judge(quick(500, absolute(7, 0), absolute(3, 0), absolute(5, 0)))[0]!.values.move).toBe(3)
+  })
+
   it('speaks in degrees on a rotary axis', () => {
     expect(told(quickStopSoft, judgeInput(rotary({ quickStopDeceleration: 100 }, [absolute(1, 0)])))[0]).toMatch(/100 deg\/s², softer than move 1 with 2000 deg\/s²/)
   })

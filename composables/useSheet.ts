@@ -26,6 +26,8 @@ export function useSheet<Answer>(options: SheetOptions<Answer>) {
   const issues = shallowRef<Issues>({})
   const problem = shallowRef<ApiProblem>()
   const theirs = shallowRef<Body>()
+  /** What the vault holds now, as it answered. */
+  const current = shallowRef<unknown>()
   const rev = ref(options.record()?.rev)
   const busy = ref(false)
 
@@ -39,9 +41,10 @@ export function useSheet<Answer>(options: SheetOptions<Answer>) {
 
   function failed(failure: unknown): void {
     const found = toProblem(failure)
-    const { code, current } = found.problem
-    if (code === 'edited-meanwhile' && current !== null && typeof current === 'object') {
-      theirs.value = options.flat?.()?.(current) ?? current as Body
+    const { code, current: now } = found.problem
+    if (code === 'edited-meanwhile' && now !== null && typeof now === 'object') {
+      current.value = now
+      theirs.value = options.flat?.()?.(now) ?? now as Body
       return
     }
     const names = options.fields().map(field => field.name)
@@ -82,5 +85,5 @@ export function useSheet<Answer>(options: SheetOptions<Answer>) {
     theirs.value = undefined
   }
 
-  return { draft, issues, problem, busy, met, theirs, edited, submit, settle }
+  return { draft, issues, problem, busy, met, theirs, current, edited, submit, settle }
 }

@@ -1,5 +1,4 @@
 import { usedRows, type Row } from '../motion/chains'
-import { isAbove } from '../motion/exact'
 import { endsByHardStop } from '../motion/hard-stops'
 import type { Profile } from '../motion/profile'
 import { furthestStop, thrustDeceleration } from '../motion/stopping'
@@ -13,6 +12,9 @@ import { atMove, atSetup } from './pointers'
 import type { CheckResult, JudgeInput, Rule } from './types'
 
 const { warn, unknown } = answers('stopping-room')
+
+/** The last digit of a place, mm or deg: what lies less beyond came from roots and products. */
+const finest = 1e-6
 
 export const stoppingRoom: Rule = {
   id: 'stopping-room',
@@ -70,7 +72,8 @@ interface Beyond { readonly stop: number, readonly hardStop: number, readonly be
 function beyondRoom(profile: Profile, direction: 1 | -1, deceleration: number, { low, high }: Room): Beyond[] {
   const stop = furthestStop(profile, deceleration, direction)
   const hardStop = direction === 1 ? high : low
-  return isAbove(direction * stop, direction * hardStop) ? [{ stop, hardStop, beyond: Math.abs(stop - hardStop), speed: profile.peakSpeed }] : []
+  const beyond = direction * (stop - hardStop)
+  return beyond > finest ? [{ stop, hardStop, beyond, speed: profile.peakSpeed }] : []
 }
 
 function told({ content: { axisKind } }: JudgeInput, row: Row, { stop, hardStop, beyond, speed }: Beyond, burden: Burden | undefined): CheckResult {

@@ -245,7 +245,7 @@ describe('known-good', () => {
     await page.goto('/axes/LID-02.Z/versions/2')
     const dialog = await mark(page, 2, runa.password)
     const words = await dialog.getByRole('alert').innerText()
-    expect(words).toMatch(/thrustLimit 38 → 45 % was brought in by Runa Haldersen in version 2/i)
+    expect(words).toMatch(/thrust limit 38 → 45 % was brought in by Runa Haldersen in version 2/i)
     expect(words).toContain('Ask another planner')
     await page.keyboard.press('Escape')
     await dialog.waitFor({ state: 'hidden' })

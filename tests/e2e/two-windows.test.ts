@@ -38,15 +38,15 @@ describe('a nameplate open in two windows', () => {
     await field(ours, 'Lead').fill('10')
     await field(other, 'Rated thrust or torque').fill('620')
     await field(other, 'Highest speed').fill('450')
-    await other.getByRole('button', { name: 'Keep as revision 2' }).click()
+    await other.getByRole('button', { name: 'Keep as a new revision' }).click()
     await theirs.getByText('Revision 2, linear, 1 registered unit.').waitFor()
 
-    await ours.getByRole('button', { name: 'Keep as revision 2' }).click()
+    await ours.getByRole('button', { name: 'Keep as a new revision' }).click()
     const conflict = ours.getByRole('alert')
     expect(await conflict.innerText()).toContain('Changed meanwhile by somebody else. Nothing of yours is stored yet.')
     expect(await conflict.getByRole('row', { name: /Rated thrust/ }).innerText()).toMatch(/600\s+620\s+640/)
     await conflict.getByRole('button', { name: 'Put mine on top of theirs' }).click()
-    await ours.getByRole('button', { name: /^Keep as revision/ }).click()
+    await ours.getByRole('button', { name: 'Keep as a new revision' }).click()
     await mine.getByText('Revision 3, linear, 1 registered unit.').waitFor()
 
     const { json } = await server.call('GET', '/api/nameplates', { as: await server.signIn('planner') })

@@ -29,7 +29,7 @@ registerEndpoint('/api/versions/15/known-good', {
   handler: async (event) => {
     signed.push(await readBody(event))
     setResponseStatus(event, 409)
-    return { type: 'about:blank', title: 'Stop checks stand', status: 409, code: 'stop-checks', detail: 'One stop stands against it.', errors: [{ at: '/setup/thrustLimit', code: 'site-rule', message: 'is 55 %, 45 % is allowed.' }] }
+    return { type: 'about:blank', title: 'Stop checks stand', status: 409, code: 'stop-checks', detail: 'One stop stands against it.', errors: [{ at: '/setup/thrustLimit', code: 'site-rule', message: 'Thrust limit 55 % is above the 45 % allowed on this machine: Jars crack above 300 N.' }] }
   },
 })
 
@@ -112,7 +112,7 @@ describe('the page of a version', () => {
     document.querySelector('[role="dialog"] form')?.dispatchEvent(new Event('submit', { cancelable: true }))
     await settle()
     expect(signed).toEqual([{ meaning: 'approved', password: 'demo: runa plans well' }])
-    expect(words(document.querySelector('[role="dialog"] [role="alert"]')?.textContent ?? '')).toContain('thrust limit is 55 %, 45 % is allowed.')
+    expect(words(document.querySelector('[role="dialog"] [role="alert"]')?.textContent ?? '')).toContain('Thrust limit 55 % is above the 45 % allowed on this machine: Jars crack above 300 N.')
     expect(password.value).toBe('')
   })
 })

@@ -44,7 +44,7 @@ describe('POST /api/versions/:id/known-good', () => {
   it('by who brought in a harm value is 403 four-eyes and names both; a site may switch that off', async () => {
     await mark(await store({ thrustLimit: 38 }))
     const own = await store({ thrustLimit: 55 }, plant.as.planner)
-    expect(await mark(own)).toMatchObject({ status: 403, json: { code: 'four-eyes', errors: [{ at: '/setup/thrustLimit', message: 'thrustLimit 38 → 55 % was brought in by Runa Haldersen in version 2.' }] } })
+    expect(await mark(own)).toMatchObject({ status: 403, json: { code: 'four-eyes', errors: [{ at: '/setup/thrustLimit', message: 'Thrust limit 38 → 55 % was brought in by Runa Haldersen in version 2.' }] } })
     await server.call('PATCH', `/api/sites/${plant.siteId}`, { as: plant.as.planner, body: { rev: 1, fourEyes: false } })
     expect(await mark(own)).toMatchObject({ status: 201 })
     await server.call('PATCH', `/api/sites/${plant.siteId}`, { as: plant.as.planner, body: { rev: 2, fourEyes: true } })

@@ -103,7 +103,7 @@ describe('four eyes', () => {
     const v2 = store(runa, { thrustLimit: 55, speedLimit: 300 })
     const refused = refusal(() => mark(runa, v2))
     expect(refused.code).toBe('four-eyes')
-    expect(refused.message).toBe('thrustLimit 38 → 55 % was brought in by Runa Haldersen in version 2. Another planner marks it.')
+    expect(refused.message).toBe('Thrust limit 38 → 55 % was brought in by Runa Haldersen in version 2. Another planner marks it.')
     expect(refused.details.errors).toMatchObject([{ at: '/setup/thrustLimit', code: 'four-eyes' }])
     expect(mark(mira, v2)).toMatchObject({ id: expect.any(Number) })
   })
@@ -153,7 +153,7 @@ describe('four eyes', () => {
     stand()
     store(runa, { thrustLimit: 38 })
     const v2 = store(runa, { thrustLimit: 38, jogSpeed: 20 })
-    expect(refusal(() => mark(runa, v2)).message).toContain('jogSpeed 20 mm/s was brought in by Runa Haldersen in version 2')
+    expect(refusal(() => mark(runa, v2)).message).toContain('Jog speed 20 mm/s was brought in by Runa Haldersen in version 2')
   })
 
   it('may be switched off by the site', () => {

@@ -31,6 +31,8 @@ describe('stopping-room', () => {
   it('lets a stop at the hard stop itself pass: 184.875 − 15.625 + 31.25 = 200.5', () => {
     expect(told(stoppingRoom, axis({ quickStopDeceleration: 1000 }, up(184.875)))).toEqual([])
     expect(told(stoppingRoom, axis({ quickStopDeceleration: 1000 }, up(184.876)))).toHaveLength(1)
+    // At a hard stop of 0 as well, where no share of it can count as lost digits.
+    expect(told(stoppingRoom, axis({ homeOffset: 0, quickStopDeceleration: 100 }, [absolute(1, 0, { speed: 1, acceleration: 100 })]))).toEqual([])
   })
 
   it('looks at the lower stop on the way back: 5 + 15.625 − 31.25 = −10.625, 9.125 mm beyond −1.5', () => {

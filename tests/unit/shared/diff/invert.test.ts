@@ -54,4 +54,30 @@ describe('a reading the other way round', () => {
     expect(back?.renumbered).toEqual([{ first: 1, last: 3, by: -1, sure: true }])
     expect(back).toStrictEqual(diffRenumbered(after, before))
   })
+
+  it('points to zones where they stand in the other content, in both readings', () => {
+    const moves = (first: number) => [10, 20, 30].map((target, index): Move => ({ ...row, move: first + index, target }))
+    const before: Content = { ...linear, moves: moves(0), zones: [{ zone: 3, from: 0, to: 1 }, { zone: 5, from: 10, to: 20 }] }
+    const after: Content = { ...linear, moves: [{ ...row, move: 0, target: 75 }, ...moves(1)], zones: [{ zone: 1, from: 2, to: 3 }, { zone: 2, from: 4, to: 5 }, { zone: 5, from: 10, to: 25 }] }
+    const zoneAt = (changes: readonly { readonly section: string, readonly row?: number, readonly at: string }[] = []) => changes.filter(change => change.section === 'zone' && change.row === 5).map(change => change.at)
+    const reading = diffRenumbered(before, after)
+    expect(zoneAt(reading?.changes)).toEqual(['/zones/2/to'])
+    expect(zoneAt(reading && invertRenumbered(reading).changes)).toEqual(['/zones/1/to'])
+    expect(zoneAt(invertFlat(diffContents(before, after)))).toEqual(['/zones/1/to'])
+    expect(reading && invertRenumbered(reading)).toStrictEqual(diffRenumbered(after, before))
+  })
+})
+
+/* Twice the other way round is the way it was: for one change whatever it is a change of. */
+describe('one change turned twice', () => {
+  it.each([
+    ['a number', { homeOffset: 2 }, { homeOffset: 8 }], ['a percentage', { thrustLimit: 38 }, { thrustLimit: 55 }], ['from 0', { homeOffset: 0 }, { homeOffset: 3 }], ['to 0', { homeOffset: 3 }, { homeOffset: 0 }],
+    ['a word', { homingMethod: 'hard-stop' }, { homingMethod: 'index-pulse' }], ['a flag', { brakeFitted: true }, { brakeFitted: false }], ['one that came', {}, { jogSpeed: 30 }], ['one that went', { jogSpeed: 30 }, {}],
+    ['the drive’s own', { velocityGain: 1e-9 }, { velocityGain: 3e-9 }],
+  ] as const)('is itself: %s', (_, was, is) => {
+    const changes = diffContents({ ...linear, setup: was }, { ...linear, setup: is })
+    expect(changes).toHaveLength(1)
+    expect(changes.map(change => swapSides(swapSides(change, undefined), undefined))).toStrictEqual(changes)
+    expect(changes.map(change => swapSides(change, undefined))).toStrictEqual(diffContents({ ...linear, setup: is }, { ...linear, setup: was }))
+  })
 })

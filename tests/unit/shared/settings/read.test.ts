@@ -22,6 +22,21 @@ describe('formOf', () => {
   })
 })
 
+describe('formOf, where bytes only look like a mark', () => {
+  it('takes no single byte of a mark for the mark', () => {
+    expect(formOf(Uint8Array.from([0x5b, 0xbb, 0x41, 0x41]))).toBe('json')
+    expect(formOf(Uint8Array.from([0xef, 0x41, 0x41, 0x7b]))).toBe('csv')
+    expect(formOf(Uint8Array.from([0xef, 0xbb, 0x41, 0x7b]))).toBe('csv')
+    expect(formOf(Uint8Array.from([0xff, 0x41, 0x7b]))).toBe('csv')
+    expect(formOf(Uint8Array.from([0xfe, 0x41, 0x7b]))).toBe('csv')
+  })
+
+  it('passes over no more than the blanks of JSON and the zero bytes of UTF-16', () => {
+    expect(formOf(Uint8Array.from([0, 0x20, 0, 0x0a, 0, 0x7b]))).toBe('json')
+    for (const byte of [0x0b, 0x0c, 0xa0, 0x01]) expect(formOf(Uint8Array.from([byte, 0x7b]))).toBe('csv')
+  })
+})
+
 describe('readSettings', () => {
   it('reads both forms of one file to the same', () => {
     for (const file of exampleFiles) {
@@ -67,6 +82,21 @@ describe('readSettings', () => {
       expect((user + system) / 1000, text.slice(0, 40)).toBeLessThan(5000)
     }
   }, 60_000)
+})
+
+describe('bytes in no encoding', () => {
+  it('are one problem, with the place of the first of them', () => {
+    const sent = bytes(writeJson(pressExample))
+    const spoilt = sent.with(sent.indexOf(0x0a) + 5, 0xff)
+    expect(readSettings(spoilt)).toMatchObject({ ok: false, more: 0, errors: [{ at: '', code: 'encoding', line: 2, column: 5 }] })
+  })
+
+  it('are told of in a CSV file too: five bytes that Windows-1252 has no sign for', () => {
+    for (const byte of [0x81, 0x8d, 0x8f, 0x90, 0x9d]) {
+      const sent = Uint8Array.from([...bytes('section,row,field,value,unit\nfile,,note,'), byte])
+      expect(readSettings(sent)).toMatchObject({ ok: false, more: 0, errors: [{ code: 'encoding', line: 2, column: 12 }] })
+    }
+  })
 })
 
 describe('readSettingsText', () => {

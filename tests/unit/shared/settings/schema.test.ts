@@ -44,6 +44,48 @@ describe('the zod schema', () => {
   })
 })
 
+/* Borders of the published shape, each from both sides. A program that is held against it must not be surprised by the reader. */
+describe('the borders of the shape', () => {
+  const whole = JSON.parse(writeJson(pressExample)) as Readonly<Record<string, object>>
+  const takes = (change: object) => settingsInput.safeParse({ ...whole, ...change }).success
+  const row = { move: 0, kind: 'absolute', target: 0, speed: 1, acceleration: 1 }
+
+  it.each([
+    ['jogSpeed', [0, 1e9], [-0.000001, 1000000000.1]], ['softLimitMin', [-1e9, 1e9], [-1000000000.1, 1000000000.1]], ['modulo', [0.000001], [0]],
+    ['mountingAngle', [-90, 90], [-90.000001, 90.000001]], ['selectInputs', [0, 10], [11, -1, 0.5]], ['nodeAddress', [0, 65535], [65536, 1.5]],
+    ['velocityGain', [-5, 1e30, 1e-30], ['5', true]], ['brakeFitted', [true, false], ['true', 1]], ['positiveDirection', ['extend', 'clockwise'], ['up']],
+  ])('of %s', (name, taken, refused) => {
+    for (const value of taken) expect(takes({ setup: { [name]: value } }), String(value)).toBe(true)
+    for (const value of refused) expect(takes({ setup: { [name]: value } }), String(value)).toBe(false)
+    for (const value of [null, '']) expect(takes({ setup: { [name]: value } }), String(value)).toBe(true)
+  })
+
+  it.each([
+    ['move', [0, 1023], [-1, 1024, 0.5]], ['speed', [0, 1e9], [-1]], ['window', [0], [-0.1]], ['next', [0, 1023], [1024, -1]], ['dwell', [0], [-1]],
+    ['label', ['a', 'ä'.repeat(40)], ['a'.repeat(41)]], ['comment', ['a'.repeat(200)], ['a'.repeat(201)]], ['turn', ['signed', 'shortest'], ['left']],
+  ])('of %s of a move', (name, taken, refused) => {
+    for (const value of taken) expect(takes({ moves: [{ ...row, [name]: value }] }), String(value)).toBe(true)
+    for (const value of refused) expect(takes({ moves: [{ ...row, [name]: value }] }), String(value)).toBe(false)
+  })
+
+  it('of a table: 32 zones and 1,024 moves', () => {
+    const zones = (count: number) => Array.from({ length: count }, () => ({ zone: 1, from: 0, to: 1 }))
+    const moves = (count: number) => Array.from({ length: count }, () => row)
+    expect([takes({ zones: zones(32) }), takes({ zones: zones(33) }), takes({ moves: moves(1024) }), takes({ moves: moves(1025) })]).toEqual([true, false, true, false])
+  })
+
+  it('of an identity', () => {
+    const unit = { serial: 'A1', model: 'HL40-200V' }
+    for (const more of [{ channel: 0 }, { channel: 255 }, { firmware: 'x'.repeat(32) }, { actuatorSerial: '' }]) expect(takes({ unit: { ...unit, ...more } })).toBe(true)
+    for (const more of [{ channel: 256 }, { channel: -1 }, { firmware: 'x'.repeat(33) }, { serial: 'A 1' }, { serial: '' }, { colour: 'red' }]) expect(takes({ unit: { ...unit, ...more } })).toBe(false)
+  })
+
+  it('of a value of the drive', () => {
+    for (const value of [1e300, true, '', 'x'.repeat(256), { value: 1, unit: 'counts' }, null]) expect(takes({ extra: { K: value } }), JSON.stringify(value)).toBe(true)
+    for (const value of ['x'.repeat(257), { value: 1 }, { value: 1, unit: '' }, { value: '1', unit: 'A' }, [1], {}]) expect(takes({ extra: { K: value } }), JSON.stringify(value)).toBe(false)
+  })
+})
+
 describe('the published JSON Schema', () => {
   it('is draft 2020-12 and plain JSON', () => {
     const schema = settingsJsonSchema()

@@ -56,6 +56,35 @@ describe('parseTimestamp', () => {
   })
 })
 
+/* RFC 3339, section 5.7: the last day of each month; appendix C: leap years are those divided by 4, of the centuries only those by 400. */
+describe('the last day', () => {
+  const lastDays: readonly (readonly [year: string, days: readonly number[]])[] = [
+    ['2023', [31, 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31]],
+    ['2024', [31, 29, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31]],
+    ['1900', [31, 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31]],
+    ['2000', [31, 29, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31]],
+    ['2100', [31, 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31]],
+    ['0000', [31, 29, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31]],
+  ]
+
+  it.each(lastDays)('of each month of %s is there, and the day after it is not', (year, days) => {
+    for (const [index, last] of days.entries()) {
+      const month = String(index + 1).padStart(2, '0')
+      const reads = (day: number) => parseTimestamp(`${year}-${month}-${String(day).padStart(2, '0')}T12:00:00Z`) !== undefined
+      expect([reads(0), reads(1), reads(last), reads(last + 1), reads(39), reads(99)], `${year}-${month}`).toEqual([false, true, true, false, false, false])
+    }
+  })
+
+  it('of a month lies one day before the first of the next', () => {
+    for (const [year, days] of lastDays) {
+      for (const [index, last] of days.slice(0, 11).entries()) {
+        const at = (month: number, day: number) => parseTimestamp(`${year}-${String(month).padStart(2, '0')}-${String(day).padStart(2, '0')}T00:00:00Z`) ?? Number.NaN
+        expect(at(index + 2, 1) - at(index + 1, last)).toBe(86_400_000)
+      }
+    }
+  })
+})
+
 describe('formatTimestamp', () => {
   it('is undone by parseTimestamp', () => {
     fc.assert(fc.property(fc.integer({ min: -62_167_219_200_000, max: 253_402_300_799_999 }), instant => parseTimestamp(formatTimestamp(instant)) === instant))

@@ -146,14 +146,15 @@ export function speedLines({ setup: { speedLimit } }: Content, { peakSpeed }: Co
 }
 
 /** Where the presses of a run begin to push, and the soft limits that it comes near. */
-export function positionLines({ setup }: Content, { moves }: Run, { segments, end }: Course): ChartLine[] {
+export function positionLines({ setup }: Content, { moves }: Run, { segments, from, end }: Course): ChartLine[] {
+  const side = (at: number) => Math.abs(at - end) < Math.abs(at - from) ? 'left' as const : 'right' as const
   const places = [...segments.map(segment => segment.x0), end]
   const [low, high] = [Math.min(...places), Math.max(...places)]
   const near = (high - low) / 4
   const approaches = new Set(moves.flatMap(({ kind, approach }) => kind === 'press' && approach !== undefined ? [approach] : []))
   const limits = setup.softLimitsActive === false ? [] : [setup.softLimitMin, setup.softLimitMax]
   return [
-    ...[...approaches].map(at => ({ at, word: 'press approach' })),
-    ...limits.flatMap(at => at !== undefined && at >= low - near && at <= high + near ? [{ at, word: 'soft limit' }] : []),
+    ...[...approaches].map(at => ({ at, word: 'press approach', side: side(at) })),
+    ...limits.flatMap(at => at !== undefined && at >= low - near && at <= high + near ? [{ at, word: 'soft limit', side: side(at) }] : []),
   ]
 }

@@ -13,7 +13,12 @@ export type ChartTone = 'before' | 'after' | 'line'
 /** Class of a text by what it belongs to. */
 export const chartTones: Readonly<Record<ChartTone, string>> = { before: 't-b', after: 't-a', line: '' }
 export interface ChartText { readonly x: number, readonly y: number, readonly text: string, readonly anchor: Anchor, readonly tone: ChartTone }
-export interface ChartLine { readonly at: number, readonly word: string }
+export interface ChartLine {
+  readonly at: number
+  readonly word: string
+  /** Where its name stands; at the right unless the curve is there. */
+  readonly side?: 'left' | 'right'
+}
 
 export interface TimeChart {
   readonly left: number
@@ -48,14 +53,15 @@ export function timeChart(low: number, high: number, seconds: number, width: num
   }
 }
 
-/** Lines across the picture, each named on itself; names that would touch are told at the other end. */
+/** Lines across the picture, each named on itself; a name that would touch another stands at the other end. */
 export function acrossTexts(lines: readonly ChartLine[], { left, right, y }: TimeChart): ChartText[] {
   const placed: ChartText[] = []
-  for (const { at, word } of [...lines].sort((one, other) => one.at - other.at)) {
-    const text = `${word} ${figure(at)}`
+  for (const { at, word, side = 'right' } of [...lines].sort((one, other) => one.at - other.at)) {
+    const wanted: Anchor = side === 'right' ? 'end' : 'start'
     const height = round(y(at)) - 5
-    const touches = placed.some(other => other.anchor === 'end' && Math.abs(other.y - height) < 14)
-    placed.push(touches ? { x: left + 4, y: height, text, anchor: 'start', tone: 'line' } : { x: right - 2, y: height, text, anchor: 'end', tone: 'line' })
+    const touches = placed.some(other => other.anchor === wanted && Math.abs(other.y - height) < 14)
+    const anchor = touches ? wanted === 'end' ? 'start' : 'end' : wanted
+    placed.push({ x: anchor === 'end' ? right - 2 : left + 4, y: height, text: `${word} ${figure(at)}`, anchor, tone: 'line' })
   }
   return placed
 }

@@ -1,4 +1,5 @@
 import { fold, type FoldedLine } from '#shared/checks/fold'
+import type { LiveResult } from '#shared/checks/live/types'
 import type { CheckResult } from '#shared/checks/types'
 import type { Content } from '#shared/settings/types'
 import { counted } from '../format'
@@ -43,4 +44,9 @@ export function checksSentence(checks: readonly CheckResult[], judged: number): 
   const rules = counted(judged, 'rule', 'rules')
   if (judged === 0) return 'nothing to judge'
   return [open.length ? open.join(', ') : `${rules} judged, no stop and no warning`, ...(folded.length ? [`${folded.join(' and ')} folded`] : [])].join('; ')
+}
+
+/** What a rule over several axes says, with the names of what is missing in the words of the screens. */
+export function liveMessage({ message, missing = [] }: LiveResult, context: WordContext): string {
+  return missing.reduce((text, name) => text.replaceAll(name, missingWords(name, context)), message)
 }

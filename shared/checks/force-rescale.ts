@@ -46,13 +46,13 @@ function force(percent: number, base: number): string {
   return about(percent / 100 * base)
 }
 
-/** Every value of a content that is a percentage of the force base. */
+/** Every value of a content that is a percentage of the force base, moves by their numbers. */
 function percentsOf({ setup, moves }: Content): Percent[] {
   const inSetup = (Object.keys(setupPercents) as (keyof typeof setupPercents)[]).flatMap((field) => {
     const value = setup[field]
     return value === undefined ? [] : [{ at: atSetup(field), words: setupPercents[field], value }]
   })
-  const inMoves = usedRows(moves).flatMap((row) => {
+  const inMoves = usedRows(moves).sort((one, other) => one.move.move - other.move.move).flatMap((row) => {
     const { move, forceLimit } = row.move
     return forceLimit === undefined ? [] : [{ at: atMove(row, 'forceLimit'), words: `move ${move} force`, value: forceLimit }]
   })

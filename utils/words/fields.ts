@@ -24,11 +24,6 @@ const ofForce = new Set(['thrustLimit', 'thrustLimitPositive', 'thrustLimitNegat
 
 export const isForce = (field: string) => ofForce.has(field)
 
-/** What 100 % of force means on this model, in N or N·m. */
-export function forceBase(nameplate: Nameplate | undefined): number | undefined {
-  return nameplate?.forceBase === 'peak-thrust' ? nameplate.peakThrust : nameplate?.ratedThrust
-}
-
 function unitWord(field: string, unit: UnitByKind | undefined, { axisKind, nameplate }: WordContext): string {
   const plain = unit?.[axisKind] ?? ''
   if (plain !== '%' || !isForce(field)) return plain

@@ -1,4 +1,5 @@
 import type { CheckResult } from '#shared/checks/types'
+import { forceBaseOf } from '#shared/motion/force-base'
 import type { FieldChange } from '#shared/diff/types'
 import { setupField } from '#shared/settings/fields'
 import { isUnused } from '#shared/settings/move-fields'
@@ -6,7 +7,7 @@ import type { Nameplate } from '#shared/settings/nameplate'
 import type { Content, Move } from '#shared/settings/types'
 import { formatNumber } from '#shared/units/number'
 import { motionOf } from '../motion'
-import { forceBase, isForce, type WordContext } from './fields'
+import { isForce, type WordContext } from './fields'
 
 /** Both contents, and what their words hang on. */
 export interface MeansContext extends WordContext {
@@ -23,7 +24,7 @@ const numbers = (change: FieldChange): readonly [number, number] | undefined =>
 
 /** Newtons of a percentage; undefined where the nameplate does not say what 100 % is. */
 export function forceWords(percent: number, context: WordContext): string | undefined {
-  const base = forceBase(context.nameplate)
+  const base = forceBaseOf(context.nameplate)
   return base === undefined ? undefined : `${number(percent * base / 100, 1)} ${context.axisKind === 'rotary' ? 'N·m' : 'N'}`
 }
 

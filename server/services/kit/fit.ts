@@ -1,4 +1,5 @@
 import { judge } from '#shared/checks/judge'
+import { forceBaseOf } from '#shared/motion/force-base'
 import { Refusal } from '#shared/errors/refusal'
 import { serialToBeWritten } from '#shared/settings/identity'
 import type { Content, UnitIdentity } from '#shared/settings/types'
@@ -6,7 +7,7 @@ import { judgingQueries, type AxisPlace } from '#server/database/judging/queries
 import type { VaultDb } from '#server/database/prepared'
 import type { UnitRow } from '#server/database/schema'
 import { judgeInputOf, readAgainst } from '../uploads/read-against'
-import { differingBases, forceBaseOf, holdsForces, withoutTaught, type KitSource, type KitUnit } from './kit-file'
+import { differingBases, holdsForces, withoutTaught, type KitSource, type KitUnit } from './kit-file'
 
 /** What goes into the kit, for whom, and what has to be said beside it. */
 export interface Fitted {

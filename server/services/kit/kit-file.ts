@@ -1,4 +1,5 @@
 import { carryOf } from '#shared/settings/carry'
+import { forceBaseOf } from '#shared/motion/force-base'
 import { setupFieldNames } from '#shared/settings/fields'
 import type { Nameplate } from '#shared/settings/nameplate'
 import { schemaName, type Content, type SettingsFile, type Setup, type UnitIdentity } from '#shared/settings/types'
@@ -34,11 +35,6 @@ export function withoutTaught(source: KitSource, unit: KitUnit): Taught {
 
 function without(record: object, keys: readonly string[]): object {
   return Object.fromEntries(Object.entries(record).filter(([key]) => !keys.includes(key)))
-}
-
-/** What 100 % of thrust or torque means on this model, in N or N·m; undefined where the nameplate does not say. */
-export function forceBaseOf(nameplate: Nameplate | undefined): number | undefined {
-  return nameplate?.forceBase === 'peak-thrust' ? nameplate.peakThrust : nameplate?.ratedThrust
 }
 
 /** The bases of two models where both are known and a percentage means other newtons on each; undefined where they agree or cannot be told. */

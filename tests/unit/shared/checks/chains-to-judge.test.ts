@@ -14,6 +14,7 @@ describe('chainsOf', () => {
 
   it('tells endless ones, and not what leads into them', () => {
     expect(chains(absolute(1, 0, { next: 2 }), absolute(2, 0, { next: 3 }), absolute(3, 0, { next: 2 }))).toEqual(['2 3 …'])
+    expect(chains(absolute(0, 0, { next: 1 }), absolute(1, 0, { next: 2 }), absolute(2, 0, { next: 3 }), absolute(3, 0, { next: 2 }))).toEqual(['2 3 …'])
     expect(chains(absolute(5, 0, { next: 5 }))).toEqual(['5 …'])
   })
 

@@ -51,8 +51,12 @@ describe('select-reach', () => {
     expect(told(selectReach, reach(1, [absolute(0, 0), absolute(5, 0, { next: 5 })]))).toHaveLength(1)
   })
 
-  it('tells at most four one by one', () => {
-    expect(told(selectReach, reach(1, table(2, 3, 4, 5, 6, 7)))[0]).toMatch(/^warn: Moves 2 to 7 cannot be called: 1 select input reaches .* and so on for 2 more\.$/)
+  it('tells at most four one by one, and how many more there are', () => {
+    const four = '2 without its line 2 calls move 0, 3 without its line 2 calls move 1, 4 without its line 3 calls move 0'
+    const said = (last: number) => told(selectReach, reach(1, table(0, 1, ...Array.from({ length: last - 1 }, (_, k) => k + 2))))[0]
+    expect(said(5)).toBe(`warn: Moves 2 to 5 cannot be called: 1 select input reaches up to move 1; ${four} and 5 without its line 3 calls move 1.`)
+    expect(said(6)).toBe(`warn: Moves 2 to 6 cannot be called: 1 select input reaches up to move 1; ${four}, 5 without its line 3 calls move 1 and so on for 1 more.`)
+    expect(said(7)).toMatch(/5 without its line 3 calls move 1 and so on for 2 more\.$/)
   })
 
   it('does not apply where moves are called over the bus', () => {

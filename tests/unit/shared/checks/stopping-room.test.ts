@@ -73,6 +73,13 @@ describe('stopping-room', () => {
     expect(lines).toEqual(['warn: A quick stop in move 1 from 250 mm/s ends at −16.46 mm, 14.96 mm beyond the hard stop at −1.5 mm.'])
   })
 
+  it('tells the furthest of several ways: from 188 to 190 it gets no quicker than 63.2 mm/s', () => {
+    const ways = [absolute(1, 188, { next: 3, speed: 1, acceleration: 1 }), absolute(2, 0, { next: 3, speed: 1, acceleration: 1 }), absolute(3, 190)]
+    const [found] = stoppingRoom.judge(axis({ quickStopDeceleration: 150 }, ways))
+    // 190 − 15.625 + 250²/300 = 382.708 mm, and 189 + 4000/300 = 202.333 mm from nearby: both beyond.
+    expect(found!.values.stop).toBeCloseTo(382.708333, 5)
+  })
+
   it('leaves a relative move alone whose place nobody knows, and takes it where it is known', () => {
     expect(told(stoppingRoom, axis({ quickStopDeceleration: 100 }, [relative(1, 50)]))).toEqual([])
     expect(told(stoppingRoom, axis({ quickStopDeceleration: 1000 }, [absolute(1, 140, { next: 2, speed: 1, acceleration: 1 }), relative(2, 50)])))

@@ -22,6 +22,7 @@ describe('thrust-needed', () => {
     const [found] = thrustNeeded.judge(input)
     expect(found).toMatchObject({ at: ['/moves/0/acceleration', '/setup/thrustLimit'], values: { move: 4, phase: 'accelerate', need: 25, limit: 30 } })
     expect(found!.values.percent).toBeCloseTo(83.3333333, 6)
+    expect(told(thrustNeeded, axis({ thrustLimit: 10 }, [relative(4, 100, { acceleration: 2401, deceleration: 2000 })]))).toHaveLength(1)
     expect(told(thrustNeeded, axis({ thrustLimit: 10 }, [relative(4, 100, { acceleration: 3000, deceleration: 2000 })]))[0]).toMatch(/^warn: .*, 100 % of the 30 N/)
   })
 
@@ -51,6 +52,12 @@ describe('thrust-needed', () => {
     expect(thrustNeeded.judge(input)[0]!.at).toEqual(['/moves/0/deceleration', '/setup/thrustLimitNegative'])
   })
 
+  it('takes the sign that is nearer to its limit, not the larger thrust: at 3 deg 25.1324 N of 300 N and 14.8676 N of 15 N', () => {
+    // 98.0665·sin 3° = 5.1324 N for or against the 20 N of 2000 mm/s².
+    expect(told(thrustNeeded, axis({ thrustLimit: 100, thrustLimitNegative: 5, mountingAngle: 3 }, [absolute(4, 100)])))
+      .toEqual(['warn: Move 4 needs 14.87 N towards minus to brake, 99.12 % of the 15 N that its limit leaves.'])
+  })
+
   it('counts the rotor and the friction: mR = 19.7392088 kg and 5 N', () => {
     // (10 + 19.7392088)·2 + 5 = 64.4784 N of 25 % = 75 N: 85.97 %.
     const input = axis({ thrustLimit: 25, frictionForce: 5 }, [relative(4, 100)], { rotorInertia: 0.5 })
@@ -66,6 +73,8 @@ describe('thrust-needed', () => {
     expect(told(thrustNeeded, axis({ thrustLimit: 80 }, [relative(4, 100, { forceLimit: 6 })])))
       .toEqual(['stop: Move 4 needs 20 N towards minus to brake, 111.1 % of the 18 N that its limit leaves, and too much to speed up as well.'])
     expect(told(thrustNeeded, axis({ thrustLimit: 80 }, [press(4, 100, 150, { forceLimit: 6 })]))).toEqual([])
+    // From its approach on a press is not this rule's: it starts there, and no thrust is asked for.
+    expect(told(thrustNeeded, axis({ thrustLimit: 6 }, [absolute(1, 100, { next: 4, acceleration: 1 }), press(4, 100, 150)]))).toEqual([])
   })
 
   it('turns: 100 kg·cm² at 3600 deg/s² and 0.3 N·m are 0.928318531 N·m of 1 N·m', () => {

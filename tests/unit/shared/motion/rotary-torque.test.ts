@@ -1,5 +1,5 @@
 import fc from 'fast-check'
-import { unit } from 'mathjs'
+import { unit, type Unit } from 'mathjs'
 import { describe, expect, it } from 'vitest'
 import { inertiaAtOutput, rotaryEffort, torque, type RotaryLoad } from '../../../../shared/motion/rotary-torque'
 import type { Direction } from '../../../../shared/motion/thrust'
@@ -13,7 +13,7 @@ describe('torque', () => {
   })
 
   it('has its units right by a general library for units', () => {
-    const inertia = unit(100, 'kg cm^2').multiply(unit(3600, 'deg/s^2')) as ReturnType<typeof unit>
+    const inertia = unit(100, 'kg cm^2').multiply(unit(3600, 'deg/s^2')) as Unit
     // Radians have no dimension: kg·m²·rad/s² are N·m.
     expect(torque(load(), 3600, 1).most).toBeCloseTo(inertia.toNumber('kg m^2 rad / s^2'), 9)
   })

@@ -1,5 +1,5 @@
 import fc from 'fast-check'
-import { unit } from 'mathjs'
+import { unit, type Unit } from 'mathjs'
 import { describe, expect, it } from 'vitest'
 import { profile } from '../../../../shared/motion/profile'
 import type { Segment } from '../../../../shared/motion/ramp'
@@ -59,7 +59,7 @@ describe('thrust', () => {
   })
 
   it('has its units right by a general library for units', () => {
-    const newtons = unit(10, 'kg').multiply(unit(2000, 'mm/s^2')) as ReturnType<typeof unit>
+    const newtons = unit(10, 'kg').multiply(unit(2000, 'mm/s^2')) as Unit
     expect(thrust(load(), 2000, 1)).toBeCloseTo(newtons.toNumber('N'), 9)
   })
 

@@ -59,6 +59,7 @@ const inJson: readonly (readonly [what: string, sent: string, ...messages: strin
     '10:3 The key " K" has a blank at its beginning or end; take it out.', '11:8 A list cannot be kept here; write a number, true or false, a text, or { value, unit }.', '14:8 unit is missing: { value, unit } needs both.'],
   ['a list for a file', '[1]', '1:1 A settings file is one object { … }.'],
   ['a comma too many', '{"a":1,}', '1:8 Nothing follows the comma before "}": take the comma out.'],
+  ['a colon for a value', '{"a"::1}', '1:6 A value cannot begin with ":".'],
   ['a sign too many', '{}}', '1:3 Nothing may follow the closing sign; "}" does.'],
   ['too deep a tree', '['.repeat(9), '1:9 Objects and lists lie 9 deep here; at most 8 are read.'],
 ]

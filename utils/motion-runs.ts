@@ -136,6 +136,9 @@ function nearest(pieces: readonly ThrustPiece[]): Leg['thrust'] {
   return needs.toSorted((one, other) => shareOf(other) - shareOf(one) || other.need - one.need)[0]
 }
 
+/** Digits after the point of a thrust: a torque in N·m is a hundredth of what a force in N is. */
+export const thrustDigits = (unit: string) => unit === 'N' ? 1 : 3
+
 /** How much of its limit a thrust takes, in whole percent; rounded up, so that what is above never reads 100. */
 export const percentOf = ({ need, limit }: { readonly need: number, readonly limit: number }): number | undefined =>
   Number.isFinite(limit) && limit > 0 ? Math.ceil(100 * need / limit - 1e-9) : undefined
@@ -154,7 +157,7 @@ export function positionLines({ setup }: Content, { moves }: Run, { segments, fr
   const approaches = new Set(moves.flatMap(({ kind, approach }) => kind === 'press' && approach !== undefined ? [approach] : []))
   const limits = setup.softLimitsActive === false ? [] : [setup.softLimitMin, setup.softLimitMax]
   return [
-    ...[...approaches].map(at => ({ at, word: 'press approach', side: side(at) })),
+    ...[...approaches].map(at => ({ at, word: 'press approach' })),
     ...limits.flatMap(at => at !== undefined && at >= low - near && at <= high + near ? [{ at, word: 'soft limit', side: side(at) }] : []),
   ]
 }

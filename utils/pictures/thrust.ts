@@ -36,7 +36,8 @@ const far = 5
 
 type Value = (piece: ThrustPiece) => number
 
-export function layoutThrust(pieces: readonly ThrustPiece[], width: number): ThrustLayout {
+/** Lays one picture out for a width in pixels; `digits` after the point of a limit's name. */
+export function layoutThrust(pieces: readonly ThrustPiece[], width: number, digits: number): ThrustLayout {
   const most = Math.max(0, ...pieces.map(piece => piece.most))
   const least = Math.min(0, ...pieces.map(piece => piece.least))
   const reach = Math.max(most, -least) || 1
@@ -62,16 +63,16 @@ export function layoutThrust(pieces: readonly ThrustPiece[], width: number): Thr
     curves: [steps(piece => piece.most), ...(band ? [steps(piece => piece.least)] : [])],
     limits: [...(plus ? [steps(piece => piece.plus)] : []), ...(minus ? [steps(piece => -piece.minus)] : [])],
     drop: `M${round(x(seconds))} ${round(y(0))}V${foot + 20}`,
-    texts: [...chart.texts, ...acrossTexts(lines.map(line => ({ ...line, at: Number(line.at.toFixed(1)) })), chart), ...endTexts([{ seconds, tone: 'after' }], chart)],
+    texts: [...chart.texts, ...acrossTexts(lines.map(line => ({ ...line, at: Number(line.at.toFixed(digits)) })), chart), ...endTexts([{ seconds, tone: 'after' }], chart)],
   }
 }
 
-/** What the picture says to those who do not see it. */
-export function thrustSentence(pieces: readonly ThrustPiece[], unit: string): string {
-  const tenth = (value: number) => figure(Number(value.toFixed(1)))
-  const limit = (value: number) => Number.isFinite(value) ? `${tenth(value)} ${unit}` : 'none'
+/** What the picture says to those who do not see it; `word` is thrust or torque, `digits` how many stand after the point. */
+export function thrustSentence(pieces: readonly ThrustPiece[], word: string, unit: string, digits: number): string {
+  const short = (value: number) => figure(Number(value.toFixed(digits)))
+  const limit = (value: number) => Number.isFinite(value) ? `${short(value)} ${unit}` : 'none'
   const least = Math.min(...pieces.map(piece => piece.least))
   const most = Math.max(...pieces.map(piece => piece.most))
   const lowest = (value: Value) => limit(Math.min(...pieces.map(value)))
-  return `Thrust over time: from ${tenth(least)} to ${tenth(most)} ${unit}. Lowest limit towards plus ${lowest(piece => piece.plus)}, towards minus ${lowest(piece => piece.minus)}.`
+  return `${word} over time: from ${short(least)} to ${short(most)} ${unit}. Lowest limit towards plus ${lowest(piece => piece.plus)}, towards minus ${lowest(piece => piece.minus)}.`
 }

@@ -99,6 +99,6 @@ describe('lines across the pictures', () => {
     expect(positionLines(before, run('move 1'), course)).toEqual([{ at: 2, word: 'soft limit', side: 'right' }])
     expect(positionLines({ ...before, setup: { ...before.setup, softLimitsActive: false } }, run('move 1'), course)).toEqual([])
     const press = showRun(run('move 2'), context())
-    expect(positionLines(before, run('move 2'), press.course)).toEqual([{ at: 88, word: 'press approach', side: 'left' }])
+    expect(positionLines(before, run('move 2'), press.course)).toEqual([{ at: 88, word: 'press approach' }])
   })
 })

@@ -18,6 +18,8 @@ export const addressOf = {
   people: () => '/people',
   format: () => '/format',
   interface: () => '/interface',
+  /** With a rule: where the page tells of it. */
+  help: (rule?: string) => rule === undefined ? '/help' : `/help#${rule}`,
 }
 
 /** Only an address of this application is gone back to after signing in. */

@@ -23,6 +23,7 @@ export const entries: readonly Entry[] = [
   { to: addressOf.people(), word: 'People', late: true, for: ['admin'] },
   { to: addressOf.format(), word: 'Format', late: true },
   { to: addressOf.interface(), word: 'Interface', late: true },
+  { to: addressOf.help(), word: 'Help', late: true },
 ]
 
 /** The entries of a person's work, among the pages there are. */

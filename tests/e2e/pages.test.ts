@@ -37,6 +37,7 @@ const visits: readonly Visit[] = [
   { file: 'pages/rules.vue', address: () => '/rules', ready: /rules? holds?/ },
   { file: 'pages/format.vue', address: () => '/format', ready: /The settings file/ },
   { file: 'pages/interface.vue', address: () => '/interface', ready: /\d+ calls/ },
+  { file: 'pages/help.vue', address: () => '/help#target-inside', ready: /\d+ rules judge an axis/ },
   { file: 'pages/people.vue', address: () => '/people', ready: /\d+ people/, as: 'admin' },
   { file: 'pages/sign-in.vue', address: () => '/sign-in', ready: /Witnessmark/, as: 'nobody' },
   { file: 'pages/set-up.vue', address: () => '/set-up?token=none', ready: /A new vault/, as: 'nobody' },

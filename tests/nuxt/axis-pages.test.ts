@@ -63,7 +63,7 @@ describe('the page of an axis', () => {
   it('shows today against the known-good, and where to compare them', async () => {
     const page = await open(AxisPage, '/axes/LID-03.Z')
     expect(page.get('h1').text()).toBe('LID-03.Z')
-    expect(page.findAll('h2').map(head => head.text())).toEqual(['Its life', 'On the rail', 'Checks', 'Moves', 'Setup'])
+    expect(page.findAll('h2').map(head => head.text())).toEqual(['Its life', 'On the rail', 'Checks', 'Moves', 'Motion', 'Setup'])
     expect(page.findAll('a').some(link => link.attributes('href') === '/changes?a=14&b=15')).toBe(true)
     expect(words(page.get('dl').text())).toContain('v15, 30 Nov 2026 06:12 CET')
   })
@@ -134,5 +134,22 @@ describe('other pages', () => {
     const row = page.findAll('tbody tr').find(one => one.text().startsWith('thrust limit'))
     expect(page.findAll('thead a').map(link => link.text())).toEqual(['LID-03.Z', 'NEW-01.X'])
     expect(row?.findAll('td').map(cell => cell.text())).toEqual(['55', '–'])
+  })
+})
+
+describe('the motion of a version', () => {
+  it('is drawn for the run that is chosen, with its numbers as a table', async () => {
+    const page = await open(AxisPage, '/axes/LID-03.Z')
+    const section = page.findAll('section').find(one => one.find('h2').exists() && one.get('h2').text() === 'Motion')
+    if (!section) throw new Error('no motion')
+    const legs = () => section.findAll('tbody tr').map(row => row.get('th').text())
+    expect(legs().length).toBeGreaterThan(1)
+    const options = section.findAll('option')
+    await section.get('select').setValue(options.find(option => option.text() === 'move 1, Over lid')?.element.value)
+    await settle()
+    expect(legs()).toEqual(['1 Over lid'])
+    expect(section.findAll('figcaption').map(caption => caption.text())[0]).toBe('speed, mm/s')
+    expect(words(section.get('header').text())).toContain('where move 0 ends')
+    expect(section.get('[role="region"]').attributes('aria-label')).toContain('Motion of move 1, Over lid, in numbers')
   })
 })

@@ -1,4 +1,5 @@
 import { fold, type FoldedLine } from '#shared/checks/fold'
+import type { LiveResult } from '#shared/checks/live/types'
 import type { CheckResult } from '#shared/checks/types'
 import type { Content } from '#shared/settings/types'
 import { counted } from '../format'
@@ -12,7 +13,7 @@ export interface CheckLine {
   readonly message: string
   /** Where it stands, at most three places by name. */
   readonly places: string
-  readonly rules: string
+  readonly rules: readonly string[]
   /** What is folded into it. */
   readonly results: readonly CheckResult[]
 }
@@ -33,7 +34,7 @@ function messageOf(line: FoldedLine, rules: readonly string[], context: WordCont
 export function checkLines(checks: readonly CheckResult[], content: Content, context: WordContext): CheckLine[] {
   return fold(checks).map((line, index) => {
     const rules = [...new Set(line.results.map(result => result.rule))]
-    return { key: `${index} ${rules.join()}`, level: line.level, message: messageOf(line, rules, context), places: placesOf(line, content, context), rules: rules.join(', '), results: line.results }
+    return { key: `${index} ${rules.join()}`, level: line.level, message: messageOf(line, rules, context), places: placesOf(line, content, context), rules, results: line.results }
   })
 }
 
@@ -48,4 +49,9 @@ export function checksSentence(all: readonly (CheckResult & { readonly waived?: 
   const rules = counted(judged, 'rule', 'rules')
   if (judged === 0) return 'nothing to judge'
   return [[...(open.length ? open : [`${rules} judged, no stop and no warning`]), ...taken].join(', '), ...(folded.length ? [`${folded.join(' and ')} folded`] : [])].join('; ')
+}
+
+/** What a rule over several axes says, with the names of what is missing in the words of the screens. */
+export function liveMessage({ message, missing = [] }: LiveResult, context: WordContext): string {
+  return missing.reduce((text, name) => text.replaceAll(name, missingWords(name, context)), message)
 }

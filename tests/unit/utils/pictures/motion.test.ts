@@ -42,7 +42,7 @@ const numbersOf = (path: string) => (path.match(/-?\d+(\.\d+)?/g) ?? []).map(Num
 describe('layoutMotion', () => {
   it('draws position as the profile has it, at the joints and at the middle of each piece', () => {
     if (!was || !is) throw new Error('both motions are known')
-    const layout = layoutMotion({ what: 'position', before: was.profile, after: is.profile }, 480)
+    const layout = layoutMotion({ what: 'position', before: was.profile, after: is.profile, lines: [] }, 480)
     const [x0 = 0, y0 = 0, ...rest] = numbersOf(layout.after)
     const last = rest.slice(-2)
     const perSecond = ((last[0] ?? 0) - x0) / is.profile.duration
@@ -58,7 +58,7 @@ describe('layoutMotion', () => {
 
   it('draws both on one time base, the shorter one ending to the left', () => {
     if (!was || !is) throw new Error('both motions are known')
-    const layout = layoutMotion({ what: 'speed', before: was.profile, after: is.profile, line: { at: 400, word: 'speed limit' } }, 480)
+    const layout = layoutMotion({ what: 'speed', before: was.profile, after: is.profile, lines: [{ at: 400, word: 'speed limit' }] }, 480)
     expect(numbersOf(layout.after).at(-2)).toBeLessThan(numbersOf(layout.before).at(-2) ?? 0)
     expect(layout.texts.some(text => text.text === 'speed limit 400')).toBe(true)
     expect(layout.texts.filter(text => text.tone !== 'line').map(text => text.text)).toEqual(['0.333', '0.353'])
@@ -68,7 +68,7 @@ describe('layoutMotion', () => {
     const speeds = fc.double({ min: 1, max: 2000, noNaN: true })
     fc.assert(fc.property(speeds, speeds, fc.double({ min: -500, max: 500, noNaN: true }), fc.integer({ min: 260, max: 900 }), (one, other, target, width) => {
       const of = (speed: number) => profile({ move: 1, kind: 'absolute', target, speed, acceleration: 3000 }, 10)
-      const layout = layoutMotion({ what: 'speed', before: of(one), after: of(other) }, width)
+      const layout = layoutMotion({ what: 'speed', before: of(one), after: of(other), lines: [] }, width)
       const [a, b] = layout.texts.filter(text => text.tone !== 'line')
       if (!a || !b) throw new Error('both end times are written')
       expect(a.y !== b.y || Math.abs(a.x - b.x) >= (a.text.length + b.text.length) / 2 * 7.2).toBe(true)

@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import type { LifeEvent } from '../../../../shared/api/versions'
 import { changeTable } from '../../../../utils/words/change-table'
-import { checkLines, checksSentence } from '../../../../utils/words/checks'
+import { addressTwice } from '../../../../shared/checks/live/address-twice'
+import { checkLines, checksSentence, liveMessage } from '../../../../utils/words/checks'
 import { foldedRows } from '../../../../utils/words/folded-moves'
 import { lifeLine } from '../../../../utils/words/life'
 import { flatPairs, tellMoves } from '../../../../utils/words/moves-told'
@@ -64,12 +65,16 @@ describe('foldedRows', () => {
 describe('checks in words', () => {
   it('gives each stop and warning a line with its places by name', () => {
     const lines = checkLines(today.checks, after, context)
-    expect(lines.filter(line => line.level === 'stop')).toMatchObject([{ places: 'thrust limit', rules: 'site-rule' }])
-    expect(lines.find(line => line.rules === 'select-reach')?.places).toContain('move 8')
+    expect(lines.filter(line => line.level === 'stop')).toMatchObject([{ places: 'thrust limit', rules: ['site-rule'] }])
+    expect(lines.find(line => line.rules.includes('select-reach'))?.places).toContain('move 8')
   })
   it('says what rules wait for by the words of the screens', () => {
     const waits = checkLines([{ rule: 'payload', level: 'unknown', at: [], message: '', values: {}, missing: ['payloadMass', 'nameplate.maxPayloadLevel'] }], after, context)
     expect(waits.map(line => line.message)).toEqual(['1 rule waits for payload and max payload level on the nameplate.'])
+  })
+  it('names what is missing in the words of the screens where a rule looks at several axes', () => {
+    const [silent] = addressTwice.judge([{ tag: 'A', nodeAddress: 3 }, { tag: 'B' }])
+    expect(silent && liveMessage(silent, context)).toBe('Whether B shares an address on this bus cannot be judged without node address.')
   })
   it('counts what speaks up and what is folded', () => {
     expect(checksSentence(today.checks, 12)).toMatch(/^1 stop, 1 warning; .* folded$/)

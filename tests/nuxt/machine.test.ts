@@ -1,0 +1,78 @@
+import { mountSuspended, registerEndpoint } from '@nuxt/test-utils/runtime'
+import { flushPromises } from '@vue/test-utils'
+import { createError, getQuery } from 'h3'
+import { beforeEach, describe, expect, it } from 'vitest'
+import MachinePage from '~/pages/machines/[id].vue'
+import type { Axis, VersionOne } from '#shared/api/versions'
+import { axis, before, nameplate, versionAnswer } from '../support/axis-answers'
+
+const thrustOf: readonly number[] = [38, 38, 55, 38, 38, 38]
+const sisters: readonly Axis[] = thrustOf.map((_, index) => ({
+  ...axis, id: index + 1, tag: `LID-0${index + 1}.Z`, machine: { id: index + 1, name: `LID-0${index + 1}` }, current: axis.current && { ...axis.current, versionId: 100 + index },
+}))
+const versionOf = (index: number): VersionOne => versionAnswer(15, { ...before, setup: { ...before.setup, thrustLimit: thrustOf[index] ?? 38, nodeAddress: index === 4 ? 21 : 21 + index } }, { id: 100 + index })
+const fitted = sisters.map(one => ({ ...one, unit: one.unit && { ...one.unit, serial: `HL40-24-0080${one.id}` } }))
+let broken = false
+registerEndpoint('/api/machines/3', () => ({ id: 3, rev: 1, lineId: 1, name: 'LID-03' }))
+registerEndpoint('/api/axes', (event) => {
+  const query = getQuery(event)
+  if (query.machineId !== undefined) return { items: fitted.filter(one => one.machine.id === Number(query.machineId)), next: null }
+  if (broken) throw createError({ statusCode: 503 })
+  // Two pages, as a large site has.
+  return query.cursor ? { items: fitted.slice(4), next: null } : { items: fitted.slice(0, 4), next: 'more' }
+})
+for (const index of thrustOf.keys()) registerEndpoint(`/api/versions/${100 + index}`, () => versionOf(index))
+registerEndpoint('/api/judging-context', () => ({ problem: null, registered: null, axis: null, current: null, knownGood: null, nextNumber: 16, nameplate, rules: [] }))
+
+const words = (text: string | null) => (text ?? '').replace(/\s+/g, ' ').trim()
+async function open() {
+  const page = await mountSuspended(MachinePage, { route: '/machines/3' })
+  for (let round = 0; round < 16; round++) {
+    await flushPromises()
+    await new Promise(resolve => setTimeout(resolve, 5))
+  }
+  return page
+}
+
+beforeEach(() => {
+  broken = false
+  useSession().begin({ id: 1, name: 'Runa Haldersen', email: 'runa@larkfield.example', roles: ['planner'], sites: [{ id: 1, name: 'Larkfield', timeZone: 'Europe/Berlin' }], plant: 'Larkfield Preserves', empty: false, shared: false })
+})
+
+describe('sister axes on the page of a machine', () => {
+  it('stand in a column each, the one that stands apart marked and told in a sentence', async () => {
+    const page = await open()
+    const section = page.findAll('section').find(one => one.find('h2').exists() && one.get('h2').text() === 'Sister axes: seat lid')
+    if (!section) throw new Error('no sister axes')
+    expect(words(section.text())).toContain('LID-03.Z: thrust limit is 55 %, while 5 sister axes have 38 %.')
+    const matrix = section.get('table.matrix')
+    expect(matrix.findAll('thead a').map(link => link.text())).toEqual(sisters.map(one => one.tag))
+    const row = matrix.findAll('tbody tr').find(one => one.get('th').text() === 'thrust limit')
+    expect(row?.findAll('td').map(cell => cell.classes('odd'))).toEqual([false, false, true, false, false, false])
+    expect(row?.get('td.odd svg').attributes('aria-label')).toBe('stands apart:')
+    expect(section.findAll('a[href="/help#sister-outlier"]').length).toBe(1)
+  })
+
+  it('show what all share on demand', async () => {
+    const page = await open()
+    const rows = () => page.findAll('table.matrix tbody tr').length
+    expect(rows()).toBe(1)
+    const box = page.findAll('.box').find(one => one.text().includes('Also values that all share'))
+    await box?.get('input').setValue(true)
+    expect(rows()).toBeGreaterThan(5)
+  })
+
+  it('tell an address that two drives of a bus share', async () => {
+    const page = await open()
+    expect(words(page.text())).toContain('LID-01.Z and LID-05.Z answer to one address on this bus: 21.')
+  })
+})
+
+describe('when the sister axes cannot be read', () => {
+  it('the machine stands nevertheless, and reading again is offered', async () => {
+    broken = true
+    const page = await open()
+    expect(words(page.get('[role="alert"]').text())).toContain('Read the sister axes again')
+    expect(page.findAll('h2').map(head => head.text())).toContain('Side by side')
+  })
+})

@@ -122,8 +122,8 @@ describe('an axis', () => {
 
 describe('a refused signature', () => {
   it('names the place in words and the next step', async () => {
-    const problem = new ApiProblem({ type: 'about:blank', title: 'Another person must do this', status: 403, code: 'four-eyes', detail: 'You brought in a harm value.', errors: [{ at: '/setup/thrustLimit', code: 'four-eyes', message: 'came with v15 by Runa Haldersen.' }] })
-    const shown = await mountSuspended(AxisSignProblem, { props: { problem, content: after, context } })
-    expect(words(shown.text())).toBe('Another person must do this. You brought in a harm value.thrust limit came with v15 by Runa Haldersen.Ask another planner to look at these values and mark the version. Nothing was signed.')
+    const problem = new ApiProblem({ type: 'about:blank', title: 'Another person must do this', status: 403, code: 'four-eyes', detail: 'You brought in a harm value.', errors: [{ at: '/setup/thrustLimit', code: 'four-eyes', message: 'Thrust limit 38 → 55 % was brought in by Runa Haldersen in version 15.' }] })
+    const shown = await mountSuspended(AxisSignProblem, { props: { problem } })
+    expect(words(shown.text())).toBe('Another person must do this. You brought in a harm value.Thrust limit 38 → 55 % was brought in by Runa Haldersen in version 15.Ask another planner to look at these values and mark the version. Nothing was signed.')
   })
 })

@@ -42,7 +42,7 @@ describe('the help page', () => {
 
 describe('the rule of a check', () => {
   it('leads to the help page; one of an older rule set stands bare', async () => {
-    const line = { key: '1', level: 'note', message: 'Two things.', places: '', rules: ['travel-span', 'gone-rule'] } as const
+    const line = { key: '1', level: 'note', message: 'Two things.', places: '', rules: ['travel-span', 'gone-rule'], results: [] } as const
     const rows = await mountSuspended(ChecksRows, { props: { lines: [line], caption: 'Notes' } })
     expect(rows.findAll('a').map(link => link.attributes('href'))).toEqual(['/help#travel-span'])
     expect(words(rows.get('td:last-child').text())).toMatch(/travel-span ?, gone-rule/)

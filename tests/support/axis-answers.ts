@@ -16,7 +16,7 @@ export const nameplate: Nameplate = {
 export const before: Content = {
   axisKind: 'linear', extra: { 'K-017': 4 }, zones: [{ zone: 0, from: 0, to: 12 }, { zone: 1, from: 98, to: 106 }],
   setup: {
-    positiveDirection: 'extend', softLimitsActive: true, softLimitMin: 2, softLimitMax: 185, homeOffset: -1.35, homingMethod: 'hard-stop', homingDirection: 'negative', homingSpeed: 40,
+    positiveDirection: 'extend', softLimitsActive: true, softLimitMin: 2, softLimitMax: 185, homeOffset: 0.65, homingMethod: 'hard-stop', homingDirection: 'negative', homingSpeed: 40,
     homingCreepSpeed: 5, homingAcceleration: 400, homingForceLimit: 25, thrustLimit: 38, overloadLevel: 60, overloadTime: 400, speedLimit: 400, accelerationLimit: 4000, decelerationLimit: 4000,
     quickStopDeceleration: 6000, jogSpeed: 25, pressSpeed: 20, jerk: 60000, inPositionWindow: 0.05, payloadMass: 6.5, mountingAngle: -90, frictionForce: 25, positionGain: 45, velocityGain: 310,
     velocityIntegralTime: 12.5, inputSwitching: 'p', outputSwitching: 'p', selectInputs: 3, selectSettleTime: 6, startPulseTime: 8, onEnableLoss: 'stop-and-hold', brakeFitted: true, nodeAddress: 23,

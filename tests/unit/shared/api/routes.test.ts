@@ -60,6 +60,11 @@ const doors = `
   GET /api/rules                         | tpaA      | read   |         |
   POST /api/rules                        | p         |        |         |
   POST /api/rules/:id/end                | p         |        | rule    |
+  POST /api/waivers                      | p         |        |         | signed
+  GET /api/axes/:id/waivers              | tpaA      | read   | axis    |
+  POST /api/waivers/:id/end              | p         |        | waiver  | signed
+  POST /api/judging-runs                 | p         |        |         |
+  GET /api/judging-runs/:id              | p         |        |         |
   GET /api/judging-context               | tpaA      | read   |         |
   POST /api/uploads/preview              | tp        | upload |         |
   POST /api/uploads                      | tp        | upload |         |
@@ -72,6 +77,7 @@ const doors = `
   GET /api/versions/:id/changes          | tpaA      | read   | version |
   POST /api/versions/:id/known-good      | p         |        | version | signed
   POST /api/versions/:id/void            | p         |        | version | signed
+  POST /api/versions/:id/judge           | p         |        | version |
   GET /api/board                         | tpaA      | read   |         |
   GET /api/log                           | paA       | read   |         |
 `.trim().split('\n').map(line => line.split('|').map(cell => cell.trim()))
@@ -126,7 +132,7 @@ describe('what goes in', () => {
   })
 
   it('is a body where something is written, and never one where something is read', () => {
-    const bare = ['POST /api/sign-out', 'POST /api/tokens/:id/end']
+    const bare = ['POST /api/sign-out', 'POST /api/tokens/:id/end', 'POST /api/judging-runs', 'POST /api/versions/:id/judge']
     for (const [name, { body }] of declared) expect(body !== undefined, name).toBe(methodOf(name) !== 'GET' && !bare.includes(name))
   })
 
@@ -142,7 +148,7 @@ describe('what goes in', () => {
 describe('what comes out', () => {
   it('is 201 with its id where something is registered', () => {
     for (const [name, { answers }] of declared) {
-      if (!(201 in answers) || /uploads|tray/.test(name)) continue
+      if (!(201 in answers) || /uploads|tray|judge$/.test(name)) continue
       const schema = answers[201]
       expect(schema instanceof z.ZodObject && Object.keys(schema.shape), name).toContain('id')
     }

@@ -25,6 +25,6 @@ describe('the entry table of the invented HL40-200V', () => {
 
   it('has the numbers that stand on the sheet at the machine', () => {
     const lines = writeEntryCsv(fileOf('LID-02.Z'), plate).split('\r\n')
-    expect(lines).toEqual(expect.arrayContaining(['K-001;Positive direction;0;', 'K-006;Homing method;2;', 'K-005;Home offset;-1,55;mm', 'K-043;Node address;26;']))
+    expect(lines).toEqual(expect.arrayContaining(['K-001;Positive direction;0;', 'K-006;Homing method;2;', 'K-005;Home offset;0,45;mm', 'K-043;Node address;26;']))
   })
 })

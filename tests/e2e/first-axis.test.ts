@@ -257,7 +257,7 @@ describe('known-good', () => {
     const dialog = await mark(other, 2, asta.password)
     const words = await dialog.getByRole('alert').innerText()
     expect(words).toContain('Lids crack above 256 N')
-    expect(words).toContain('Put the values right at the drive and upload again, or correct the nameplate or the rule')
+    expect(words).toContain('Put the values right at the drive and upload again, correct the nameplate or the rule if they are wrong, or accept the check with a reason.')
     await dialog.getByRole('button', { name: 'Leave it' }).click()
   })
 
@@ -292,7 +292,7 @@ describe('the kit for a replacement unit', () => {
     const button = dialog.getByRole('button', { name: 'Take the kit' })
     expect(await button.isDisabled()).toBe(true)
     expect(await dialog.innerText()).toContain('Safe torque off does not hold a load')
-    expect(await dialog.innerText()).toMatch(/left out of the file\s+home offset\./i)
+    expect(await dialog.innerText()).toMatch(/left out of the file\s+Nothing, on a unit of the same model and firmware\./)
     await dialog.getByLabel('I have read these, and act by them').check()
     await dialog.getByLabel('Serial of the replacement unit').fill(serial)
     await dialog.getByLabel('Form').selectOption({ label: form })
@@ -301,22 +301,22 @@ describe('the kit for a replacement unit', () => {
     return file
   }
 
-  it('as JSON for a spare of the same model and firmware: the known-good without the home offset', async () => {
+  it('as JSON for a spare of the same model and firmware: the known-good, its home offset to be proved at the machine', async () => {
     const { name, bytes } = await take('HL40-24-00817', 'JSON, the settings format')
     expect(name).toBe('LID-02.Z-v2-kit.json')
     const kit = readOrFail(bytes)
     expect(kit.unit).toMatchObject({ serial: 'HL40-24-00817', model: 'HL40-200V', firmware: '3.12' })
     expect(kit.note).toContain('known-good by Asta Lindqvist')
-    expect(knownGood.setup.homeOffset).toBe(-1.55)
-    expect(settingsOf(kit)).toEqual({ ...settingsOf(knownGood), setup: without(knownGood.setup, 'homeOffset') })
+    expect(knownGood.setup.homeOffset).toBe(0.45)
+    expect(settingsOf(kit)).toEqual(settingsOf(knownGood))
   })
 
-  it('as CSV for one of another firmware: without the tuning too', async () => {
+  it('as CSV for one of another firmware: without the tuning, which is taught there', async () => {
     const { name, bytes } = await take('HL40-25-00958', 'CSV, for a spreadsheet')
     expect(name).toBe('LID-02.Z-v2-kit.csv')
     expect(bytes.toString().split('\r\n')[0]).toBe('section,row,field,value,unit')
     const kit = readOrFail(bytes)
     expect(kit.unit.serial).toBe('HL40-25-00958')
-    expect(settingsOf(kit)).toEqual({ ...settingsOf(knownGood), setup: without(knownGood.setup, 'homeOffset', 'positionGain', 'velocityGain', 'velocityIntegralTime', 'velocityFeedForward') })
+    expect(settingsOf(kit)).toEqual({ ...settingsOf(knownGood), setup: without(knownGood.setup, 'positionGain', 'velocityGain', 'velocityIntegralTime', 'velocityFeedForward') })
   })
 })

@@ -15,12 +15,12 @@ export function readOrFail(bytes: Uint8Array): SettingsFile {
 
 export interface Told { readonly serial?: string, readonly exportedAt?: string, readonly setup?: Partial<Setup> }
 
-/** What the drive of the invented lid press holds: eight moves, 0 to 7, its home offset found by the encoder. */
+/** What the drive of the invented lid press holds: eight moves, 0 to 7, its home found at the hard stop. */
 export function lidPress({ serial, exportedAt, setup }: Told = {}): SettingsFile {
   const file = readOrFail(readFileSync(source))
   return {
     ...file, exportedAt: exportedAt ?? file.exportedAt, unit: { ...file.unit, ...(serial === undefined ? {} : { serial }) },
-    setup: { ...file.setup, homingMethod: 'absolute-encoder', ...setup },
+    setup: { ...file.setup, ...setup },
   }
 }
 

@@ -13,8 +13,9 @@ const shared: Record<string, string[]> = {
   'shared/motion': ['shared/settings', 'shared/units', 'shared/errors'],
   'shared/diff': ['shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
   'shared/checks': ['shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
+  'shared/swap': ['shared/diff', 'shared/checks', 'shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
   'shared/trail': ['shared/diff', 'shared/checks', 'shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
-  'shared/api': ['shared/diff', 'shared/checks', 'shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
+  'shared/api': ['shared/swap', 'shared/diff', 'shared/checks', 'shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
 }
 const app = ['pages', 'layouts', 'middleware', 'components', 'composables', 'stores', 'utils', 'plugins']
 const purePackages = new Set(['zod', 'decimal.js', 'papaparse', 'diff'])

@@ -87,8 +87,8 @@ export const swapUnit = z.object({
 export type SwapUnit = z.infer<typeof swapUnit>
 export const unfitReason = z.object({ code: z.enum(unfitCodes), hard: z.boolean(), message: z.string(), at: z.array(z.string()) })
 export const adjustmentSchema = z.object({
-  at: z.string(), section: z.enum(['setup', 'move']), row: z.int().optional(), field: z.string(), before: z.number(), after: z.number(), unit: z.literal('%'),
-  newtonsBefore: z.number(), newtonsAfter: z.number(), why: z.string(),
+  at: z.string(), section: z.enum(['setup', 'move']), row: z.int().optional(), field: z.string(), before: z.number(), after: z.number(), unit: z.string(),
+  newtonsBefore: z.number().nullable().describe('N, rotary N·m; null for a value that is no force'), newtonsAfter: z.number().nullable(), why: z.string(),
 })
 const versionLine = z.object({ versionId: idSchema, number: z.int(), capturedAt: instantSchema, scribeCode: z.string(), serial: z.string() })
 export const tolerated = changeSchema.extend({ tolerance: z.number().optional() })

@@ -1,4 +1,4 @@
-import type { Comparison, FieldChange } from '../diff/types'
+import type { Comparison } from '../diff/types'
 import type { Nameplate } from '../settings/nameplate'
 import type { Carry, Content, SetupFieldName, Weight } from '../settings/types'
 
@@ -35,7 +35,7 @@ export interface UnfitReason {
   readonly at: readonly string[]
 }
 
-/** A percentage that means other newtons on the new unit. */
+/** A value that has to be another on the new unit: a percentage that means other newtons there, or a home offset that counts the other way. */
 export interface Adjustment {
   /** JSON Pointer into the content. */
   readonly at: string
@@ -45,11 +45,10 @@ export interface Adjustment {
   readonly field: string
   readonly before: number
   readonly after: number
-  /** % of the force base, before and after. */
-  readonly unit: '%'
-  /** N, rotary N·m. */
-  readonly newtonsBefore: number
-  readonly newtonsAfter: number
+  readonly unit: string
+  /** N, rotary N·m; null for a value that is no force. */
+  readonly newtonsBefore: number | null
+  readonly newtonsAfter: number | null
   readonly why: string
 }
 
@@ -84,6 +83,8 @@ export interface KitContent {
   readonly prove: readonly string[]
   /** Setup values among `teach`. */
   readonly taughtSetup: readonly SetupFieldName[]
+  /** Keys of extra among `teach`. */
+  readonly taughtExtra: readonly string[]
 }
 
 /** A value that the kit holds and the unit's firmware seems to have no place for: `extra:KEY`, a setup name, `move.FIELD`. */
@@ -94,8 +95,6 @@ export interface ReadBackComparison extends Comparison {
   readonly missingKeys: readonly MissingKey[]
   /** Rows that the kit has and the unit has not: the table was written in part. */
   readonly rowsMissing: readonly { readonly section: 'zone' | 'move', readonly row: number }[]
-  /** Differences where the unit holds a value that has to be written again. */
-  readonly writeAgain: readonly FieldChange[]
   /** Of the kit's keys, the kit's value where the difference is within tolerance; null: what differs is no part of a code. */
   readonly scribeCode: string | null
 }

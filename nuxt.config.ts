@@ -63,6 +63,8 @@ export default defineNuxtConfig({
         'upgrade-insecure-requests': false,
       },
       strictTransportSecurity: false,
+      // The label of a unit is read with the device's camera. web-share is no feature of desktop Chromium, which complains of its name.
+      permissionsPolicy: { 'camera': ['self'], 'sync-xhr': [], 'web-share': false },
       crossOriginEmbedderPolicy: 'require-corp',
     },
   },

@@ -1,3 +1,4 @@
+import { setEntries } from '../settings/move-row'
 import type { Content, ExtraValue } from '../settings/types'
 import { ruleOf } from './table'
 import type { CheckResult, CheckValue, Judgement } from './types'
@@ -76,7 +77,7 @@ function valueAt(content: Content, pointer: string): Covered {
 /** A field of a row, or the whole row as one text: its fields by name. */
 function ofRow(section: string, name: string, field: string | undefined, row: object | undefined): Covered {
   if (field !== undefined) return { place: `/${section}/${name}/${field}`, value: member(row, field) }
-  const whole = row === undefined ? null : JSON.stringify(Object.entries(row).sort(([a], [b]) => a < b ? -1 : 1))
+  const whole = row === undefined ? null : JSON.stringify(setEntries(row).sort(([a], [b]) => a < b ? -1 : 1))
   return { place: `/${section}/${name}`, value: whole }
 }
 

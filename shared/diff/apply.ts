@@ -1,3 +1,4 @@
+import { setEntries } from '../settings/move-row'
 import type { Content, ExtraValue, Move, Zone } from '../settings/types'
 import { DiffError } from './error'
 import { sameValue } from './measure'
@@ -47,9 +48,9 @@ export function applyTo(values: Values, change: FieldChange): void {
   else values.set(change.field, change.after)
 }
 
-/** The fields of one row or of the setup as a map; the inverse of Object.fromEntries. */
+/** What is set in a row or in the setup, as a map; Object.fromEntries takes it back. */
 export function valuesOf(record: object): Values {
-  return new Map(Object.entries(record))
+  return new Map(setEntries(record))
 }
 
 /** Rows sorted by number, the key written as `key`; rows without a field are left out. */

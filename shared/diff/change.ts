@@ -15,11 +15,6 @@ export interface Place { readonly at: string, readonly section: Section, readonl
 export function changeOf(rule: FieldRule, place: Place, before: ExtraValue | undefined, after: ExtraValue | undefined, sameMotion: boolean): FieldChange {
   const { at, section, row } = place
   const { field, unit } = rule
-  if (typeof before === 'number' && typeof after === 'number' && before !== 0 && row !== undefined && unit !== undefined && unit !== '%') {
-    // What the lines below make of it too. Nearly all of a long difference are such, and a literal takes a third of the time.
-    const delta = difference(before, after, rule.driveOwn)
-    return { at, section, row, field, before, after, unit, delta, percent: 100 * delta / Math.abs(before), weight: rule.weight, watched: rule.watched }
-  }
   const change = { at, section } as Draft
   if (row !== undefined) change.row = row
   change.field = field

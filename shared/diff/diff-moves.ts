@@ -1,7 +1,9 @@
 import { moveFieldNames } from '../settings/move-fields'
 import type { Move } from '../settings/types'
-import { changeOf } from './change'
 import { sameMotionInMove } from './defaults'
+import { bitCount, bitsOf, differing, present, valueAt } from './move-bits'
+import { movePointers } from './move-pointers'
+import { rowChange } from './row-change'
 import type { FieldRule } from './rules'
 import type { Sides } from './sides'
 import type { FieldChange } from './types'
@@ -10,37 +12,84 @@ import { walkByNumber } from './walk'
 /** Whether the follower that a move had is the one that its partner has. */
 export type NextAgrees = (was: number | undefined, is: number | undefined) => boolean
 
-/** One pass over two move tables, row with partner; changes go to `out` in the order of the field table. */
+/** A row with its partner and what is to be told of them: the fields as bits, and those among them that are a default written out. */
+interface Pair {
+  readonly before: Move | undefined
+  readonly beforeIndex: number
+  readonly after: Move | undefined
+  readonly afterIndex: number
+  readonly fields: number
+  readonly defaults: number
+}
+
+/** One pass over two move tables, row with partner. First all is compared, so that the list of changes has its length and order at once. */
 export class MovePass {
   /** What a person is told: each edit, and each row that comes or goes as one. */
   statements = 0
+  private readonly pairs: Pair[] = []
+  private readonly counts = { harm: 0, motion: 0, text: 0 }
 
-  constructor(private readonly out: FieldChange[], private readonly sides: Sides, private readonly nextAgrees?: NextAgrees) {}
+  constructor(private readonly sides: Sides, private readonly nextAgrees?: NextAgrees) {}
 
-  /** Adds one change for each field that differs, all of them where the move stands on one side only. */
+  /** Takes in a row with its partner: all fields that differ, or all that are set where the move stands on one side only. */
   compare(before: Move | undefined, beforeIndex: number, after: Move | undefined, afterIndex: number): void {
-    let rest = before && after ? differing(before, after) : present(before ?? after)
-    if (this.nextAgrees) rest = this.nextAgrees(before?.next, after?.next) ? rest & ~nextBit : rest | nextBit
-    this.statements += before && after ? bitCount(rest) : 1
-    if (rest === 0) return
-    const row = (after ?? before)?.move
-    const there = `/moves/${afterIndex}/`
-    for (; rest !== 0; rest &= rest - 1) {
-      const rank = 31 - Math.clz32(rest & -rest)
-      const was = before && valueAt(before, rank)
-      const is = after && valueAt(after, rank)
-      const rule = (is === undefined ? this.sides.was : this.sides.is).moveByRank[rank] as FieldRule
-      const at = is === undefined ? `/moves/${beforeIndex}/${rule.field}` : there + rule.field
-      const sameMotion = (was === undefined || is === undefined) && this.sameMotion(rule.field, before, after)
-      this.out.push(changeOf(rule, { at, section: 'move', row }, was, is, sameMotion))
-    }
+    let fields = before && after ? differing(before, after) : present(before ?? after)
+    if (this.nextAgrees) fields = this.nextAgrees(before?.next, after?.next) ? fields & ~follower : fields | follower
+    this.statements += before && after ? bitCount(fields) : 1
+    if (fields === 0) return
+    const defaults = before && after ? this.defaultsWrittenOut(fields, before, after) : 0
+    const { harm, motion } = this.sides.is.moveWeights
+    const heavy = bitCount(fields & harm & ~defaults)
+    const middle = bitCount(fields & motion & ~defaults)
+    this.counts.harm += heavy
+    this.counts.motion += middle
+    this.counts.text += bitCount(fields) - heavy - middle
+    this.pairs.push({ before, beforeIndex, after, afterIndex, fields, defaults })
   }
 
-  private sameMotion(field: string, before: Move | undefined, after: Move | undefined): boolean {
-    return before !== undefined && after !== undefined
-      && sameMotionInMove(field, { move: before, setup: this.sides.before.setup }, { move: after, setup: this.sides.after.setup })
+  /** Harm first, then motion, then text; within a weight row by row as they were taken in, in the order of the field table. */
+  changes(): FieldChange[] {
+    const { harm, motion, text } = this.counts
+    const changes = new Array<FieldChange>(harm + motion + text)
+    let nextHarm = 0
+    let nextMotion = harm
+    let nextText = harm + motion
+    for (const pair of this.pairs) {
+      for (let rest = pair.fields; rest !== 0; rest &= rest - 1) {
+        const change = this.changeIn(pair, 31 - Math.clz32(rest & -rest))
+        if (change.weight === 'harm') changes[nextHarm++] = change
+        else if (change.weight === 'motion') changes[nextMotion++] = change
+        else changes[nextText++] = change
+      }
+    }
+    return changes
+  }
+
+  private changeIn({ before, beforeIndex, after, afterIndex, defaults }: Pair, rank: number): FieldChange {
+    const was = before && valueAt(before, rank)
+    const is = after && valueAt(after, rank)
+    const gone = is === undefined
+    const rule = (gone ? this.sides.was : this.sides.is).moveByRank[rank] as FieldRule
+    const at = movePointers(gone ? beforeIndex : afterIndex)[rank] as string
+    return rowChange(rule, at, 'move', (after ?? before as Move).move, was, is, (defaults >> rank & 1) === 1)
+  }
+
+  private defaultsWrittenOut(fields: number, before: Move, after: Move): number {
+    let written = 0
+    for (let rest = fields & withDefault; rest !== 0; rest &= rest - 1) {
+      const rank = 31 - Math.clz32(rest & -rest)
+      const sides = [{ move: before, setup: this.sides.before.setup }, { move: after, setup: this.sides.after.setup }] as const
+      if (valueAt(before, rank) !== undefined && valueAt(after, rank) !== undefined) continue
+      if (sameMotionInMove(moveFieldNames[rank] as string, ...sides)) written |= 1 << rank
+    }
+    return written
   }
 }
+
+const follower = bitsOf('next')
+
+/** Fields that something stands in for where they are absent: see effectiveInMove. */
+const withDefault = bitsOf('turn', 'deceleration', 'pressSpeed')
 
 /** How many statements the flat reading makes of two move tables, without making them. */
 export function countStatements(before: readonly Move[], after: readonly Move[]): number {
@@ -49,50 +98,4 @@ export function countStatements(before: readonly Move[], after: readonly Move[])
     count += was && is ? bitCount(differing(was, is)) : 1
   })
   return count
-}
-
-/**
- * The fields in which two rows differ, as bits: bit k stands for the k-th of moveFieldNames. Written out, because most rows
- * did not change and reading them is what a difference costs.
- */
-function differing(a: Move, b: Move): number {
-  return Number(a.label !== b.label) | Number(a.comment !== b.comment) << 1 | Number(a.kind !== b.kind) << 2
-    | Number(a.target !== b.target) << 3 | Number(a.turn !== b.turn) << 4 | Number(a.speed !== b.speed) << 5
-    | Number(a.acceleration !== b.acceleration) << 6 | Number(a.deceleration !== b.deceleration) << 7
-    | Number(a.forceLimit !== b.forceLimit) << 8 | Number(a.approach !== b.approach) << 9
-    | Number(a.pressSpeed !== b.pressSpeed) << 10 | Number(a.window !== b.window) << 11
-    | Number(a.next !== b.next) << 12 | Number(a.dwell !== b.dwell) << 13
-}
-
-/** The value of the field of this rank in moveFieldNames. Written out, since a read by a computed name costs four times as much. */
-function valueAt(row: Move, rank: number): string | number | undefined {
-  switch (rank) {
-    case 0: return row.label
-    case 1: return row.comment
-    case 2: return row.kind
-    case 3: return row.target
-    case 4: return row.turn
-    case 5: return row.speed
-    case 6: return row.acceleration
-    case 7: return row.deceleration
-    case 8: return row.forceLimit
-    case 9: return row.approach
-    case 10: return row.pressSpeed
-    case 11: return row.window
-    case 12: return row.next
-    default: return row.dwell
-  }
-}
-
-const nextBit = 1 << moveFieldNames.indexOf('next')
-
-function bitCount(bits: number): number {
-  let count = 0
-  for (let rest = bits; rest !== 0; rest &= rest - 1) count += 1
-  return count
-}
-
-/** The fields that a row has, as bits. */
-function present(row: Move | undefined): number {
-  return moveFieldNames.reduce((bits, field, rank) => row?.[field] === undefined ? bits : bits | 1 << rank, 0)
 }

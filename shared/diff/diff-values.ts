@@ -5,6 +5,7 @@ import type { Content, Move, Setup, Zone } from '../settings/types'
 import { changeOf } from './change'
 import { goByPressSpeed, sameMotionInSetup } from './defaults'
 import { sameValue } from './measure'
+import { rowChange } from './row-change'
 import { extraRule } from './rules'
 import type { Sides } from './sides'
 import type { FieldChange } from './types'
@@ -62,7 +63,7 @@ export function pushZoneChanges(out: FieldChange[], sides: Sides): void {
       if (was === is) continue
       const at = is === undefined ? `/zones/${i}/${field}` : `/zones/${j}/${field}`
       const rule = (is === undefined ? sides.was : sides.is).zone[field]
-      out.push(changeOf(rule, { at, section: 'zone', row: (after ?? before)?.zone }, was, is, false))
+      out.push(rowChange(rule, at, 'zone', (after ?? before as Zone).zone, was, is, false))
     }
   })
 }

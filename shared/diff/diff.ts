@@ -1,7 +1,7 @@
 import type { Content, Move } from '../settings/types'
 import { MovePass } from './diff-moves'
 import { pushExtraChanges, pushFileChanges, pushSetupChanges, pushZoneChanges } from './diff-values'
-import { byWeight } from './order'
+import { inOrder } from './order'
 import { sidesOf } from './sides'
 import type { DiffContext, FieldChange } from './types'
 import { walkByNumber } from './walk'
@@ -12,14 +12,15 @@ import { walkByNumber } from './walk'
  */
 export function diffContents(before: Content, after: Content, context: DiffContext = {}): FieldChange[] {
   const sides = sidesOf(before, after, context)
-  const out: FieldChange[] = []
-  pushFileChanges(out, sides)
-  pushSetupChanges(out, sides, () => movesOfBoth(before, after))
-  pushZoneChanges(out, sides)
-  const moves = new MovePass(out, sides)
+  const first: FieldChange[] = []
+  pushFileChanges(first, sides)
+  pushSetupChanges(first, sides, () => movesOfBoth(before, after))
+  pushZoneChanges(first, sides)
+  const moves = new MovePass(sides)
   walkByNumber<Move>(before.moves, after.moves, move => move.move, (was, i, is, j) => moves.compare(was, i, is, j))
-  pushExtraChanges(out, sides)
-  return byWeight(out)
+  const last: FieldChange[] = []
+  pushExtraChanges(last, sides)
+  return inOrder(first, moves.changes(), last)
 }
 
 function movesOfBoth(before: Content, after: Content): (readonly [Move, Move])[] {

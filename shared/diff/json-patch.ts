@@ -1,3 +1,4 @@
+import { setEntries } from '../settings/move-row'
 import type { Content, ExtraValue, Move, Zone } from '../settings/types'
 import { diffContents } from './diff'
 import type { FieldChange } from './types'
@@ -49,5 +50,5 @@ function removals(path: string, table: Table): PatchOperation[] {
 }
 
 function additions(path: string, table: Table, rows: readonly (Move | Zone)[]): PatchOperation[] {
-  return [...table.after].filter(([number]) => !table.before.has(number)).map(([, index]) => ({ op: 'add', path: `${path}/${index}`, value: rows[index] as Move | Zone }))
+  return [...table.after].filter(([number]) => !table.before.has(number)).map(([, index]) => ({ op: 'add', path: `${path}/${index}`, value: Object.fromEntries(setEntries(rows[index] as Move | Zone)) as unknown as Move | Zone }))
 }

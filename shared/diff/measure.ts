@@ -1,6 +1,6 @@
 import type { ExtraValue } from '../settings/types'
 import { Exact } from '../units/exact'
-import { fromMillionths, toMillionths } from '../units/number'
+import { fromMillionths, largestNumber, toMillionths } from '../units/number'
 
 /**
  * after − before. Canonical numbers are subtracted as whole millionths, exact; the drive's own (`driveOwn`) as exact
@@ -8,6 +8,8 @@ import { fromMillionths, toMillionths } from '../units/number'
  */
 export function difference(before: number, after: number, driveOwn: boolean): number {
   if (driveOwn) return new Exact(after).minus(before).toNumber() + 0
+  // Whole numbers need no such care: within ±1e9 their difference is exact.
+  if (Number.isInteger(before) && Number.isInteger(after) && Math.abs(before) <= largestNumber && Math.abs(after) <= largestNumber) return after - before + 0
   return fromMillionths(toMillionths(after) - toMillionths(before))
 }
 

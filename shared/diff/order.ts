@@ -9,3 +9,8 @@ export function byWeight(changes: FieldChange[]): FieldChange[] {
   for (const change of changes) (change.weight === 'harm' ? harm : change.weight === 'motion' ? motion : text).push(change)
   return harm.concat(motion, text)
 }
+
+/** By weight what comes before the moves, the moves and what comes behind; the moves are in order already, and mostly all there is. */
+export function inOrder(first: readonly FieldChange[], moves: FieldChange[], last: readonly FieldChange[]): FieldChange[] {
+  return first.length + last.length === 0 ? moves : byWeight([...first, ...moves, ...last])
+}

@@ -2,7 +2,7 @@ import type { Content } from '../settings/types'
 import { countStatements, MovePass } from './diff-moves'
 import { pushExtraChanges, pushFileChanges, pushSetupChanges, pushZoneChanges } from './diff-values'
 import { followersOf } from './followers'
-import { byWeight } from './order'
+import { inOrder } from './order'
 import { pairRows, type Pairing } from './pair-rows'
 import { none } from './partners'
 import { pairsInOrder, runsOf } from './runs'
@@ -40,14 +40,14 @@ interface Told { readonly changes: FieldChange[], readonly statements: number }
 function changesBetween(before: Content, after: Content, pairing: Pairing, pairs: readonly RowPair[], context: DiffContext): Told {
   const sides = sidesOf(before, after, context)
   const { agree } = followersOf(pairs)
-  const out: FieldChange[] = []
-  pushFileChanges(out, sides)
-  pushSetupChanges(out, sides, () => after.moves.flatMap((is, j) => {
+  const first: FieldChange[] = []
+  pushFileChanges(first, sides)
+  pushSetupChanges(first, sides, () => after.moves.flatMap((is, j) => {
     const was = before.moves[pairing.after[j] ?? none]
     return was ? [[was, is] as const] : []
   }))
-  pushZoneChanges(out, sides)
-  const moves = new MovePass(out, sides, agree)
+  pushZoneChanges(first, sides)
+  const moves = new MovePass(sides, agree)
   const gone = before.moves.map((move, i) => ({ move, i })).filter(({ i }) => pairing.before[i] === none)
   walkByNumber(gone, after.moves.map((move, j) => ({ move, i: j })), row => row.move.move, (left, _, row) => {
     if (left) moves.compare(left.move, left.i, undefined, -1)
@@ -55,6 +55,7 @@ function changesBetween(before: Content, after: Content, pairing: Pairing, pairs
     const i = pairing.after[row.i] ?? none
     moves.compare(before.moves[i], i, row.move, row.i)
   })
-  pushExtraChanges(out, sides)
-  return { changes: byWeight(out), statements: moves.statements }
+  const last: FieldChange[] = []
+  pushExtraChanges(last, sides)
+  return { changes: inOrder(first, moves.changes(), last), statements: moves.statements }
 }

@@ -25,6 +25,8 @@ export interface Rules {
   readonly move: Readonly<Record<MoveFieldName, FieldRule>>
   /** Those of `move` in the order of moveFieldNames. */
   readonly moveByRank: readonly FieldRule[]
+  /** Which of them weigh harm and which motion, as bits by rank; the rest weighs text. */
+  readonly moveWeights: { readonly harm: number, readonly motion: number }
   readonly zone: Readonly<Record<ZoneFieldName, FieldRule>>
   readonly setup: (name: SetupFieldName) => FieldRule
 }
@@ -48,10 +50,13 @@ function tablesFor(kind: AxisKind, context: DiffContext): Rules {
     Object.fromEntries(Object.entries<RowField>(fields).map(([field, entry]) =>
       [field, { field, unit: unitOf(entry.unit, kind), weight: weigh(entry), ...watch(field, entry.watched), ...plain }])) as Record<Name, FieldRule>
   const move = rows(moveFields, field => moveWeight(field.weight, context.flags ?? []))
+  const moveByRank = moveFieldNames.map(name => move[name])
+  const ranksOf = (weight: Weight) => moveByRank.reduce((bits, rule, rank) => rule.weight === weight ? bits | 1 << rank : bits, 0)
   return {
     axisKind: axisKindRule,
     move,
-    moveByRank: moveFieldNames.map(name => move[name]),
+    moveByRank,
+    moveWeights: { harm: ranksOf('harm'), motion: ranksOf('motion') },
     zone: rows(zoneFields, field => field.weight),
     setup: (name) => {
       const entry: SetupField = setupFields[name]

@@ -1,6 +1,7 @@
 import { JsonCursor, TokenError } from './json-cursor'
 import { readJsonNumber } from './json-number'
 import { readJsonText } from './json-text'
+import { cutText } from './problems'
 import type { RawList, RawNode, RawObject } from './raw'
 
 /*
@@ -13,7 +14,8 @@ export const maxNesting = 8
 const quote = 34, minus = 45, zero = 48, nine = 57, colon = 58, comma = 44
 const openBrace = 123, closeBrace = 125, openBracket = 91, closeBracket = 93
 
-function readValue(cursor: JsonCursor, depth: number): RawNode {
+/** `key` is the one that the value belongs to; undefined in a list and at the top. */
+function readValue(cursor: JsonCursor, depth: number, key?: string): RawNode {
   const code = cursor.space()
   const offset = cursor.at
   if (code === quote) return { kind: 'text', offset, text: readJsonText(cursor), end: cursor.at }
@@ -23,6 +25,13 @@ function readValue(cursor: JsonCursor, depth: number): RawNode {
   if (cursor.word('true')) return { kind: 'flag', offset, end: cursor.at, value: true }
   if (cursor.word('false')) return { kind: 'flag', offset, end: cursor.at, value: false }
   if (cursor.word('null')) return { kind: 'null', offset, end: cursor.at }
+  return failWithoutValue(cursor, code, key)
+}
+
+function failWithoutValue(cursor: JsonCursor, code: number, key: string | undefined): never {
+  const missing = key === undefined ? 'A value is missing' : `The value of "${cutText(key)}" is missing`
+  if (Number.isNaN(code)) cursor.fail(`${missing}: the file ends here. Was it cut short? Export it again.`)
+  if (code === comma || code === closeBrace || code === closeBracket) cursor.fail(`${missing} before ${cursor.shown()}.`)
   return cursor.fail(`A value cannot begin with ${cursor.shown()}.`)
 }
 
@@ -37,10 +46,11 @@ function readObject(cursor: JsonCursor, depth: number): RawObject {
   for (let code = open(cursor, depth); code !== closeBrace; code = afterItem(cursor, closeBrace, '}')) {
     if (code !== quote) cursor.fail(`A key in quotes belongs here, not ${cursor.shown()}.`)
     node.keyOffsets.push(cursor.at)
-    node.keys.push(readJsonText(cursor))
+    const key = readJsonText(cursor)
+    node.keys.push(key)
     if (cursor.space() !== colon) cursor.fail(`A colon belongs after the key, not ${cursor.shown()}.`)
     cursor.at += 1
-    node.values.push(readValue(cursor, depth))
+    node.values.push(readValue(cursor, depth, key))
   }
   node.end = cursor.at += 1
   return node

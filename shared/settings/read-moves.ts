@@ -1,4 +1,5 @@
 import { type MoveFieldName, moveFields } from './move-fields'
+import { type MoveDraft, unsetMove } from './move-row'
 import { type Move, moveKinds, turns } from './types'
 import type { RawNode, RawObject } from './raw'
 import { type Reading, type Slots, keyTable, shownIn, sortIntoSlots } from './reading'
@@ -20,11 +21,10 @@ export function readMoves(reading: Reading, node: RawNode, context: RowContext):
   return readRows(reading, node, '/moves', maxMoves, (row, at) => readMove(reading, row, at, context, taken), move => move.move)
 }
 
-type Draft = { -readonly [Key in keyof Move]?: Move[Key] }
-
 function readMove(reading: Reading, row: RawObject, at: string, context: RowContext, taken: Set<number>): Move | undefined {
   const slots = sortIntoSlots(reading, row, table, at)
-  const draft: Record<string, string | number> = {}
+  const move = unsetMove()
+  const values: Record<string, string | number | undefined> = move
   let sound = true
   for (let slot = 0; slot < slots.length; slot += 1) {
     const node = slots[slot]
@@ -37,9 +37,8 @@ function readMove(reading: Reading, row: RawObject, at: string, context: RowCont
         ? readRowNumber(reading, node, row, `${at}/move`, 0, maxMoves - 1, taken)
         : readField(reading, node as RawNode, `${at}/${name}`, name, context)
     if (value === undefined) sound = false
-    else draft[name] = value
+    else values[name] = value
   }
-  const move = draft as Draft
   const { problems } = reading
   const before = problems.total
   needs(reading, row, at, slots, move)
@@ -72,7 +71,7 @@ const nextSlot = slotOf('next')
 
 type Named = readonly { readonly name: MoveFieldName, readonly slot: number }[]
 
-function needs(reading: Reading, row: RawObject, at: string, slots: Slots, move: Draft): void {
+function needs(reading: Reading, row: RawObject, at: string, slots: Slots, move: MoveDraft): void {
   need(reading, row, at, slots, always, 'move')
   if (move.kind === 'press') need(reading, row, at, slots, ofPress, 'press')
 }
@@ -83,7 +82,7 @@ function need(reading: Reading, row: RawObject, at: string, slots: Slots, fields
   }
 }
 
-function refuses(reading: Reading, at: string, slots: Slots, move: Draft, context: RowContext): void {
+function refuses(reading: Reading, at: string, slots: Slots, move: MoveDraft, context: RowContext): void {
   if (move.kind !== undefined && move.kind !== 'press') refuse(reading, at, slots, pressOnly, `belongs to a press; this move is ${move.kind}. Take it out.`)
   if (context.axisKind !== undefined && !context.wraps) refuse(reading, at, slots, turn, 'belongs to a rotary axis with a modulo in its setup. Take it out.')
   if (slots[nextSlot] === undefined) refuse(reading, at, slots, dwell, 'waits before the move that follows; this one has no next. Take it out, or give next.')
@@ -97,13 +96,13 @@ function refuse(reading: Reading, at: string, slots: Slots, fields: Named, why: 
 }
 
 /** An unused row keeps its zeros, so that its emptiness is restored. */
-function ranges(reading: Reading, at: string, slots: Slots, move: Draft): void {
+function ranges(reading: Reading, at: string, slots: Slots, move: MoveDraft): void {
   const unused = move.speed === 0 && move.acceleration === 0
   atLeastZero(reading, at, slots, move, positive, unused)
   atLeastZero(reading, at, slots, move, notNegative, true)
 }
 
-function atLeastZero(reading: Reading, at: string, slots: Slots, move: Draft, fields: Named, orZero: boolean): void {
+function atLeastZero(reading: Reading, at: string, slots: Slots, move: MoveDraft, fields: Named, orZero: boolean): void {
   for (const { name, slot } of fields) {
     const value = move[name]
     if (typeof value !== 'number' || value > 0 || (orZero && value === 0)) continue

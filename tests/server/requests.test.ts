@@ -145,6 +145,14 @@ describe('answers', () => {
     expect(page.headers.get('x-frame-options')).toBe('DENY')
   })
 
+  it('of the application page lend the device’s camera to its own pages, nothing else, and no name that a browser does not know', async () => {
+    const policy = (await fetch(`${server.url}/sign-in`)).headers.get('permissions-policy') ?? ''
+    const features = policy.split(',').map(each => each.trim().split('='))
+    expect(features.filter(([, allowed]) => allowed !== '()')).toEqual([['camera', '(self)']])
+    expect(features.map(([name]) => name)).toEqual(expect.arrayContaining(['microphone', 'geolocation', 'usb', 'payment', 'display-capture', 'sync-xhr']))
+    expect(features.map(([name]) => name)).not.toContain('web-share')
+  })
+
   it('of the table and of the format are there for programs', async () => {
     expect((await server.call('GET', '/api/openapi.json')).json).toMatchObject({ openapi: '3.1.0' })
     expect((await server.call('GET', '/api/format/schema.json')).text).toContain('json-schema.org/draft/2020-12')

@@ -1,5 +1,6 @@
 import { eq, sql } from 'drizzle-orm'
 import { deflateSync, inflateSync } from 'node:zlib'
+import { contentOfText } from '#shared/settings/stored-content'
 import type { Content } from '#shared/settings/types'
 import { inserter } from '../inserter'
 import { prepared, type VaultDb } from '../prepared'
@@ -19,7 +20,7 @@ export function readContentText(db: VaultDb, id: number): { text: string, hash: 
 }
 
 /** A stored content as it was validated when it came in. */
-export const readContent = (db: VaultDb, id: number): Content => JSON.parse(readContentText(db, id).text) as Content
+export const readContent = (db: VaultDb, id: number): Content => contentOfText(readContentText(db, id).text)
 
 /** The id of the content of this hash; undefined where it was never stored. */
 export const contentIdOf = (db: VaultDb, hash: string): number | undefined => contentQueries(db).byHash.get({ hash })?.id

@@ -1,5 +1,6 @@
 import type { JudgeInput, SiteRule } from '#shared/checks/types'
 import type { DiffContext } from '#shared/diff/types'
+import { contentOfText } from '#shared/settings/stored-content'
 import type { Content, UnitIdentity } from '#shared/settings/types'
 import { readContentText } from '#server/database/content/queries'
 import { judgingQueries, type AxisPlace } from '#server/database/judging/queries'
@@ -45,7 +46,7 @@ function ruleOf({ id, scope, field, min, max, fixed, reason }: { id: number, sco
 export function held(db: VaultDb, version: VersionRow | undefined): HeldVersion | null {
   if (!version) return null
   const { text, hash } = readContentText(db, version.contentId)
-  return { version, text, hash, content: JSON.parse(text) as Content }
+  return { version, text, hash, content: contentOfText(text) }
 }
 
 /** Weights and watching of the axis, as every difference of it is told. */

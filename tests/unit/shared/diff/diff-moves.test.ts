@@ -4,7 +4,7 @@ import { countStatements, MovePass, type NextAgrees } from '../../../../shared/d
 import { sidesOf } from '../../../../shared/diff/sides'
 import type { DiffContext, FieldChange } from '../../../../shared/diff/types'
 import { emptyContent } from '../../../../shared/settings/content'
-import { moveFieldNames, type MoveFieldName } from '../../../../shared/settings/move-fields'
+import { moveFieldNames, moveFields, type MoveFieldName } from '../../../../shared/settings/move-fields'
 import type { Move, Setup } from '../../../../shared/settings/types'
 import { arbitraryContent } from '../../../support/arbitrary-content'
 
@@ -22,11 +22,12 @@ interface Told { readonly changes: readonly FieldChange[], readonly statements: 
 
 function told(before: Move | undefined, after: Move | undefined, agrees?: NextAgrees, setup: Setup = {}, context: DiffContext = {}): Told {
   const content = { ...emptyContent('linear'), setup }
-  const changes: FieldChange[] = []
-  const pass = new MovePass(changes, sidesOf(content, content, context), agrees)
+  const pass = new MovePass(sidesOf(content, content, context), agrees)
   pass.compare(before, 3, after, 8)
-  return { changes, statements: pass.statements }
+  return { changes: pass.changes(), statements: pass.statements }
 }
+/** The field table as a pass tells it where there is no axis flag. */
+const byWeight = (['harm', 'motion', 'text'] as const).flatMap(weight => moveFieldNames.filter(name => moveFields[name].weight === weight))
 const fieldsOf = (changes: readonly FieldChange[]) => changes.map(change => change.field)
 
 describe('a row with its partner', () => {
@@ -43,10 +44,10 @@ describe('a row with its partner', () => {
     expect(told(full, without as Move).changes).toMatchObject([{ at: `/moves/3/${field}`, before: full[field] }])
   })
 
-  it('differs in every field at once, in the order of the table', () => {
+  it('differs in every field at once, by weight, within a weight in the order of the table', () => {
     const { changes, statements } = told(full, other)
-    expect(fieldsOf(changes)).toEqual(moveFieldNames)
-    expect(changes.map(change => change.after)).toEqual(moveFieldNames.map(name => other[name]))
+    expect(fieldsOf(changes)).toEqual(byWeight)
+    expect(changes.map(change => change.after)).toEqual(byWeight.map(name => other[name]))
     expect(statements).toBe(moveFieldNames.length)
   })
 
@@ -61,7 +62,7 @@ describe('a row with its partner', () => {
 
 describe('a row without a partner', () => {
   it('is a change for each field that it has and one statement', () => {
-    expect(told(undefined, full)).toMatchObject({ statements: 1, changes: moveFieldNames.map(field => ({ at: `/moves/8/${field}`, row: 5, after: full[field] })) })
+    expect(told(undefined, full)).toMatchObject({ statements: 1, changes: byWeight.map(field => ({ at: `/moves/8/${field}`, row: 5, after: full[field] })) })
     expect(told(row, undefined)).toMatchObject({ statements: 1, changes: ['kind', 'target', 'speed', 'acceleration'].map(field => ({ at: `/moves/3/${field}`, row: 5 })) })
   })
 
@@ -101,7 +102,18 @@ describe('followers, where somebody else says whether they agree', () => {
     expect(told({ ...row, next: 6 }, { ...row, next: 6 }, moved)).toMatchObject({ changes: [{ field: 'next', before: 6, after: 6 }], statements: 1 })
   })
   it('leave all other fields to themselves', () => {
-    expect(fieldsOf(told({ ...full, next: 6 }, { ...other, next: 7 }, moved).changes)).toEqual(moveFieldNames.filter(name => name !== 'next'))
+    expect(fieldsOf(told({ ...full, next: 6 }, { ...other, next: 7 }, moved).changes)).toEqual(byWeight.filter(name => name !== 'next'))
+  })
+})
+
+describe('a pass over several rows', () => {
+  it('tells harm of all rows before motion of the first, and a default written out with the texts', () => {
+    const pass = new MovePass(sidesOf(emptyContent('linear'), emptyContent('linear'), {}))
+    pass.compare({ ...row, label: 'a' }, 0, { ...row, label: 'b', speed: 300, forceLimit: 40, deceleration: 2000 }, 0)
+    pass.compare({ ...row, move: 6, turn: 'signed' }, 1, { ...row, move: 6, kind: 'relative', target: 3 }, 1)
+    expect(pass.changes().map(({ row: number, field, weight }) => `${weight} ${number} ${field}`)).toEqual([
+      'harm 5 forceLimit', 'harm 6 kind', 'motion 5 speed', 'motion 6 target', 'text 5 label', 'text 5 deceleration', 'text 6 turn',
+    ])
   })
 })
 

@@ -34,15 +34,15 @@ describe('a pass over two rows', () => {
     move: 1, label: 'c', comment: 'd', kind: 'absolute', target: 2, turn: 'shortest', speed: 2, acceleration: 2, deceleration: 2, forceLimit: 2, approach: 2,
     pressSpeed: 2, window: 2, next: 2, dwell: 2,
   }
+  const allFields = [...moveFieldNames].sort()
   const compared = (before: Move | undefined, after: Move | undefined, agree?: () => boolean) => {
-    const out: FieldChange[] = []
-    const pass = new MovePass(out, sidesOf(emptyContent('rotary'), emptyContent('rotary'), {}), agree)
+    const pass = new MovePass(sidesOf(emptyContent('rotary'), emptyContent('rotary'), {}), agree)
     pass.compare(before, 3, after, 4)
-    return { fields: out.map(change => change.field), statements: pass.statements }
+    return { fields: pass.changes().map(change => change.field).sort(), statements: pass.statements }
   }
 
-  it('finds each field, in the order of the table', () => {
-    expect(compared(full, other)).toEqual({ fields: moveFieldNames, statements: moveFieldNames.length })
+  it('finds each field', () => {
+    expect(compared(full, other)).toEqual({ fields: allFields, statements: moveFieldNames.length })
     for (const field of moveFieldNames) {
       expect(compared(full, { ...full, [field]: other[field] }).fields).toEqual([field])
       const { [field]: _, ...without } = full
@@ -52,8 +52,8 @@ describe('a pass over two rows', () => {
   })
 
   it('takes a row that comes or goes for one statement', () => {
-    expect(compared(undefined, full)).toEqual({ fields: moveFieldNames, statements: 1 })
-    expect(compared(full, undefined)).toEqual({ fields: moveFieldNames, statements: 1 })
+    expect(compared(undefined, full)).toEqual({ fields: allFields, statements: 1 })
+    expect(compared(full, undefined)).toEqual({ fields: allFields, statements: 1 })
   })
 
   it('leaves followers to who knows where rows went', () => {

@@ -23,7 +23,7 @@ describe('readJson', () => {
 
   it('tells where the text stops making sense', () => {
     expect(first('{\n  "schema": x\n}')).toEqual({ at: '', line: 2, column: 13, code: 'json-syntax', message: 'A value cannot begin with "x".' })
-    expect(first('')).toMatchObject({ line: 1, column: 1, message: 'A value cannot begin with the end of the file.' })
+    expect(first('')).toMatchObject({ line: 1, column: 1, message: 'A value is missing: the file ends here. Was it cut short? Export it again.' })
     expect(first('{ "note": "a\u0007" }')).toMatchObject({ column: 13, message: 'Character 7 must be written as an escape inside a text.' })
     expect(first('{ "note": "a')).toMatchObject({ column: 13, message: 'The text is not closed: a quote is missing.' })
     expect(first('{ "note": "C:\\temp\\x" }')).toMatchObject({ message: '"\\x" is no escape; a backslash itself is written \\\\.' })

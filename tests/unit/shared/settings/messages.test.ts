@@ -60,6 +60,12 @@ const inJson: readonly (readonly [what: string, sent: string, ...messages: strin
   ['a list for a file', '[1]', '1:1 A settings file is one object { … }.'],
   ['a comma too many', '{"a":1,}', '1:8 Nothing follows the comma before "}": take the comma out.'],
   ['a colon for a value', '{"a"::1}', '1:6 A value cannot begin with ":".'],
+  ['a file cut after a colon', '{\n "unit": {\n  "serial":', '3:12 The value of "serial" is missing: the file ends here. Was it cut short? Export it again.'],
+  ['a file cut after a colon and a line end', '{"moves": [{"target": \n', '2:1 The value of "target" is missing: the file ends here. Was it cut short? Export it again.'],
+  ['a file cut within a list', '{"moves": [1,', '1:14 A value is missing: the file ends here. Was it cut short? Export it again.'],
+  ['no value behind a colon', '{"speed": , "target": 1}', '1:11 The value of "speed" is missing before ",".'],
+  ['no value at the end of an object', '{"speed":}', '1:10 The value of "speed" is missing before "}".'],
+  ['no value at the beginning of a list', '[,1]', '1:2 A value is missing before ",".'],
   ['a sign too many', '{}}', '1:3 Nothing may follow the closing sign; "}" does.'],
   ['too deep a tree', '['.repeat(9), '1:9 Objects and lists lie 9 deep here; at most 8 are read.'],
 ]

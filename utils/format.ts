@@ -1,6 +1,9 @@
 import { differenceInCalendarDays } from 'date-fns'
+import { partsOfTime, shortMonth } from '#shared/units/exact-time'
 import { formatNumber } from '#shared/units/number'
 import type { ExtraValue } from '#shared/settings/types'
+
+export { formatExact, zoneWord } from '#shared/units/exact-time'
 
 /** A count with a thin gap between thousands: 48 211. */
 export function formatCount(count: number): string {
@@ -40,57 +43,16 @@ export function sayValue(value: ExtraValue | null | undefined, unit = ''): strin
   return [shown.whole + shown.fraction, shown.unit].filter(Boolean).join(' ')
 }
 
-/** Making a formatter costs more than a row of the board does, so each zone has one. */
-const formatters = new Map<string, Intl.DateTimeFormat>()
-
-function formatterOf(timeZone: string): Intl.DateTimeFormat {
-  const made = formatters.get(timeZone) ?? new Intl.DateTimeFormat('en-GB', {
-    timeZone, hourCycle: 'h23', weekday: 'short', day: 'numeric', month: 'short', year: 'numeric', hour: '2-digit', minute: '2-digit', second: '2-digit',
-  })
-  formatters.set(timeZone, made)
-  return made
-}
-
-const parts = (instant: Date, timeZone: string) => Object.fromEntries(formatterOf(timeZone).formatToParts(instant).map(part => [part.type, part.value]))
-
-function zonePart(instant: Date, timeZone: string, locale: string, timeZoneName: 'short' | 'shortOffset'): string {
-  const found = new Intl.DateTimeFormat(locale, { timeZone, timeZoneName }).formatToParts(instant).find(part => part.type === 'timeZoneName')
-  return found?.value ?? timeZone
-}
-
-/** The zone by the letters its people use, CET or EST; by its offset where it has none. */
-export function zoneWord(instant: Date, timeZone: string): string {
-  const spelt = ['en-GB', 'en-US', 'en-AU'].map(locale => zonePart(instant, timeZone, locale, 'short')).find(word => /^[A-Z]{2,5}$/.test(word))
-  return spelt ?? offsetWord(instant, timeZone)
-}
-
-function offsetWord(instant: Date, timeZone: string): string {
-  const offset = zonePart(instant, timeZone, 'en-GB', 'shortOffset').replace('GMT', 'UTC').replace('-', '−')
-  return offset === 'UTC' ? 'UTC+0' : offset
-}
-
-/** Tue 1 Dec 2026 07:42:10 CET (UTC+1): what a sheet or a log says. */
-export function formatExact(iso: string, timeZone: string): string {
-  const instant = new Date(iso)
-  const p = parts(instant, timeZone)
-  return `${p.weekday} ${p.day} ${shortMonth(p.month)} ${p.year} ${p.hour}:${p.minute}:${p.second} ${zoneWord(instant, timeZone)} (${offsetWord(instant, timeZone)})`
-}
-
 /** 1 Dec 07:42; with its year once that is not the year of `now`. The zone is named by the column's head. */
 export function formatShort(iso: string, timeZone: string, now: Date): string {
-  const p = parts(new Date(iso), timeZone)
-  const year = p.year === parts(now, timeZone).year ? '' : ` ${p.year}`
+  const p = partsOfTime(new Date(iso), timeZone)
+  const year = p.year === partsOfTime(now, timeZone).year ? '' : ` ${p.year}`
   return `${p.day} ${shortMonth(p.month)}${year} ${p.hour}:${p.minute}`
 }
 
 /** 19 Nov, with its year once that is not the year of `now`. */
 export function formatDay(iso: string, timeZone: string, now: Date): string {
   return formatShort(iso, timeZone, now).replace(/ \d\d:\d\d$/, '')
-}
-
-/** British English writes Sept; every month here has three letters, so that columns stand. */
-function shortMonth(month: string | undefined): string {
-  return (month ?? '').slice(0, 3)
 }
 
 const minute = 60_000

@@ -1,5 +1,6 @@
 import type { Logger } from 'pino'
 import type { Vault } from '#server/database/client'
+import type { Post } from '#server/mail/post'
 
 /** What the start-up made and every request needs; set by the plugin, read by the route wrapper alone. */
 export interface ServerContext {
@@ -9,6 +10,8 @@ export interface ServerContext {
   readonly secret: string
   /** Where people reach the vault, from PUBLIC_URL; null = wherever the request says. */
   readonly publicOrigin: string | null
+  /** The way that letters leave by. */
+  readonly post: Post
 }
 
 declare module 'h3' {

@@ -38,6 +38,7 @@ const answers: Readonly<Record<RefusalCode | FileBodyCode | 'not-canonical', rea
   'not-fitted': [409, 'Not fitted'],
   'fitted': [409, 'Still fitted'],
   'serial-unknown': [409, 'Unknown serial'],
+  'letter-under-way': [409, 'Being sent'],
   'too-large': [413, 'Too large'],
   'media-type': [415, 'Not in this form'],
   'content-type': [415, 'Not in this form'],

@@ -2,6 +2,8 @@ import { defineNitroPlugin } from 'nitropack/runtime'
 import { openVault, standardScryptCost } from '#server/database/client'
 import { StartError } from '#server/database/start-error'
 import type { ServerContext } from '#server/http/context'
+import { openPost } from '#server/mail/open-post'
+import { startLetters } from '#server/services/letters/worker'
 import { firstStart } from '#server/services/people/first-start'
 import { makeLogger } from '#server/services/start/logger'
 import { publicOriginOf } from '#server/services/start/public-origin'
@@ -13,7 +15,11 @@ export default defineNitroPlugin((nitroApp) => {
   try {
     const server = start(logger)
     nitroApp.hooks.hook('request', (event) => { event.context.server = server })
-    nitroApp.hooks.hook('close', () => { server.vault.close() })
+    const letters = startLetters(server)
+    nitroApp.hooks.hook('close', async () => {
+      await letters.stop()
+      server.vault.close()
+    })
   }
   catch (error) {
     if (!(error instanceof StartError)) throw error
@@ -23,12 +29,13 @@ export default defineNitroPlugin((nitroApp) => {
 })
 
 function start(logger: ServerContext['logger']): ServerContext {
-  const { WITNESSMARK_DATA, WITNESSMARK_SCRYPT_COST, NUXT_SESSION_PASSWORD, PUBLIC_URL } = process.env
+  const { WITNESSMARK_DATA, WITNESSMARK_SCRYPT_COST, NUXT_SESSION_PASSWORD, PUBLIC_URL, SMTP_URL } = process.env
   const scryptCost = Number(WITNESSMARK_SCRYPT_COST ?? standardScryptCost)
   if (scryptCost < standardScryptCost) logger.warn({ scryptCost }, 'WITNESSMARK_SCRYPT_COST makes passwords easier to guess than the standard does; it is meant for tests')
   const vault = openVault(WITNESSMARK_DATA ?? './data', { scryptCost })
   const secret = sessionSecret(vault.folder, NUXT_SESSION_PASSWORD)
   const publicOrigin = publicOriginOf(PUBLIC_URL)
+  const post = openPost(vault.folder, SMTP_URL, publicOrigin)
   // Read by the cookie library at the first request.
   process.env.NUXT_SESSION_PASSWORD = secret
   process.env.NUXT_SESSION_COOKIE_SECURE = String(publicOrigin?.startsWith('https:') ?? false)
@@ -37,5 +44,5 @@ function start(logger: ServerContext['logger']): ServerContext {
     process.exit(1)
   })
   logger.info({ folder: vault.folder, schema: vault.schema }, 'vault open')
-  return { vault, logger, secret, publicOrigin }
+  return { vault, logger, secret, publicOrigin, post }
 }

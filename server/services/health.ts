@@ -1,13 +1,16 @@
 import { accessSync, constants, statfsSync } from 'node:fs'
+import type { z } from 'zod'
+import type { healthSchema } from '#shared/api/board'
 import type { Vault } from '#server/database/client'
+import { readQueue } from './letters/letters'
 
 /** With less free than this the next upload may find the disk full. */
 const leastFree = 32 * 1024 * 1024
 
 /** Whether the vault answers and could be written; nothing is written to find out. */
-export function health(vault: Vault): { status: 'ok' | 'failing', schema: number, writable: boolean } {
+export function health(vault: Vault): z.infer<typeof healthSchema> {
   const writable = isWritable(vault)
-  return { status: writable ? 'ok' : 'failing', schema: vault.schema, writable }
+  return { status: writable ? 'ok' : 'failing', schema: vault.schema, writable, lettersWaitingSince: readQueue(vault).waitingSince }
 }
 
 function isWritable({ sqlite, folder }: Vault): boolean {

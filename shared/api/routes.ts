@@ -2,6 +2,7 @@ import { z } from 'zod'
 import * as board from './board'
 import { axisParams, created, idParams, listQuery, pageOf, roles, type Role } from './common'
 import * as judging from './judging'
+import * as letters from './letters'
 import * as people from './people'
 import * as places from './places'
 import * as uploads from './uploads'
@@ -49,6 +50,10 @@ export const routes = {
   'GET /api/me': { may: 'signed-in', token: 'read', answers: { 200: people.meSchema }, says: 'Who is asking, and for which sites.' },
   'POST /api/me/password': { may: 'signed-in', body: people.ownPasswordBody, answers: { 204: none }, says: 'A new password of one’s own; ends all other sessions.' },
 
+  'GET /api/me/letters': { may: 'signed-in', answers: { 200: letters.ownLetters }, says: 'Which letters one gets, and which places one watches.' },
+  'POST /api/me/letters': { may: 'signed-in', body: letters.letterChoiceBody, answers: { 200: letters.ownLetters }, says: 'Chooses whether to get letters of a kind, within what one’s roles and sites allow.' },
+  'POST /api/me/watches': { may: 'signed-in', body: letters.watchBody, answers: { 200: letters.ownLetters }, says: 'Watches an axis, a machine, a line or a site, or no more.' },
+
   'GET /api/people': { may: admin, query: listQuery, answers: { 200: pageOf(people.personSchema) }, says: 'All people, those who left too.' },
   'POST /api/people': { may: admin, body: people.personBody, answers: { 201: created }, says: 'Registers a person.' },
   'PATCH /api/people/:id': { may: admin, params: idParams, body: people.personPatch, answers: { 200: people.personSchema }, says: 'Changes a person; holds at once.' },
@@ -56,6 +61,11 @@ export const routes = {
   'GET /api/tokens': { may: admin, query: listQuery, answers: { 200: pageOf(people.tokenSchema) }, says: 'Tokens of scripts, without their secrets.' },
   'POST /api/tokens': { may: admin, body: people.tokenBody, answers: { 201: people.tokenMade }, says: 'Makes a token; it is shown once.' },
   'POST /api/tokens/:id/end': { may: admin, params: idParams, answers: { 200: people.tokenSchema }, says: 'Ends a token at once.' },
+
+  'GET /api/letters': { may: admin, query: letters.letterQuery, answers: { 200: letters.letterPage }, says: 'Letters, newest first, what became of each, and how many wait since when.' },
+  'GET /api/letters/:id': { may: admin, params: idParams, answers: { 200: letters.letterOne }, says: 'One letter with its text.' },
+  'GET /api/letters/:id/file': { may: admin, params: idParams, answers: { 200: 'file' }, says: 'The letter as it leaves, an .eml file.' },
+  'POST /api/letters/:id/send-again': { may: admin, params: idParams, answers: { 200: letters.letterSchema }, says: 'Sends a letter again at once; who may have it is judged again.' },
 
   'GET /api/sites': { may: all, token: 'read', query: listQuery, answers: { 200: pageOf(places.siteSchema) }, says: 'Sites.' },
   'POST /api/sites': { may: planner, body: places.siteBody, answers: { 201: created }, says: 'Registers a site; only by people without site bounds.' },

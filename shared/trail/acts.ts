@@ -42,6 +42,10 @@ export const acts = {
   'known-good-marked': 'known-good',
   'known-good-none': 'known-good',
   'kit-taken': 'kit',
+
+  'letter-chosen': 'letter-choice',
+  'watch-set': 'watch',
+  'letter-sent-again': 'letter',
 } as const
 
 export type Act = keyof typeof acts

@@ -9,6 +9,8 @@ export const personQueries = prepared(db => ({
   byEmail: db.select().from(person).where(eq(person.email, placeholder('email'))).prepare(),
   page: db.select().from(person).where(gt(person.id, placeholder('after'))).orderBy(asc(person.id)).limit(placeholder('limit')).prepare(),
   names: db.select({ id: person.id, name: person.name }).from(person).where(isNull(person.endedAt)).orderBy(asc(person.name)).prepare(),
+  /** Everyone who has not left. */
+  present: db.select().from(person).where(isNull(person.endedAt)).orderBy(asc(person.id)).prepare(),
   any: db.select({ id: person.id }).from(person).limit(1).prepare(),
   /** Administrators who can sign in, but for one person. */
   otherAdmins: db.select({ id: person.id }).from(person).where(and(

@@ -6,6 +6,7 @@ import * as schema from '../../../server/database/schema'
 import { registerFirstAdmin } from '../../../server/services/people/first-start'
 import { setOwnPassword } from '../../../server/services/people/own-password'
 import { changePerson, registerPerson } from '../../../server/services/people/people'
+import { chooseLetter, watchPlace } from '../../../server/services/letters/own'
 import { makeToken, stopToken } from '../../../server/services/people/tokens'
 import { registerNameplate, reviseNameplate } from '../../../server/services/nameplates/nameplates'
 import { changeAxis } from '../../../server/services/places/axes'
@@ -50,6 +51,11 @@ describe('each row equals the newest entry about it', async () => {
   waiver()
   endWaiver(vault, planner, waiver(), { reason: 'known now' })
 
+  watchPlace(vault, planner, { scope: 'axis', scopeId: ids.axisId, watched: true })
+  watchPlace(vault, planner, { scope: 'site', scopeId: ids.siteId, watched: true })
+  watchPlace(vault, planner, { scope: 'axis', scopeId: ids.axisId, watched: false })
+  chooseLetter(vault, planner, { kind: 'finding-opened', wanted: false })
+
   const entries = vault.db.select().from(schema.log).all().map(({ leaf }) => parseLeaf(leaf))
   const newest = new Map<string, Entry>()
   for (const entry of entries) newest.set(`${entry.subject.kind} ${entry.subject.id}`, entry)
@@ -67,6 +73,8 @@ describe('each row equals the newest entry about it', async () => {
     ['unit', byId(vault.db.select().from(schema.unit).all())],
     ['fitting', byId(vault.db.select().from(schema.fitting).all())],
     ['nameplate', byId(vault.db.select().from(schema.nameplateRevision).all())],
+    ['watch', Object.fromEntries(vault.db.select().from(schema.watch).all().map(row => [`${row.personId}:${row.scope}:${row.scopeId}`, row]))],
+    ['letter-choice', Object.fromEntries(vault.db.select().from(schema.letterChoice).all().map(row => [`${row.personId}:${row.kind}`, row]))],
     ['setting', Object.fromEntries(vault.db.select().from(schema.setting).all().map(row => [row.key, row]))],
   ])('%s', (kind, rows) => {
     expect(Object.keys(rows).length).toBeGreaterThan(0)

@@ -16,6 +16,9 @@ const doors = `
   POST /api/sign-out                     | signed-in |        |         |
   GET /api/me                            | signed-in | read   |         |
   POST /api/me/password                  | signed-in |        |         |
+  GET /api/me/letters                    | signed-in |        |         |
+  POST /api/me/letters                   | signed-in |        |         |
+  POST /api/me/watches                   | signed-in |        |         |
   GET /api/people                        | A         |        |         |
   POST /api/people                       | A         |        |         |
   PATCH /api/people/:id                  | A         |        |         |
@@ -23,6 +26,10 @@ const doors = `
   GET /api/tokens                        | A         |        |         |
   POST /api/tokens                       | A         |        |         |
   POST /api/tokens/:id/end               | A         |        |         |
+  GET /api/letters                       | A         |        |         |
+  GET /api/letters/:id                   | A         |        |         |
+  GET /api/letters/:id/file              | A         |        |         |
+  POST /api/letters/:id/send-again       | A         |        |         |
   GET /api/sites                         | tpaA      | read   |         |
   POST /api/sites                        | p         |        |         |
   GET /api/sites/:id                     | tpaA      | read   | site    |
@@ -114,8 +121,8 @@ describe('the doors', () => {
     }
   })
 
-  it('keep people and tokens to administrators', () => {
-    for (const [name, { may }] of declared) if (/\/(people|tokens)(\/:id|$)/.test(name)) expect(may, name).toEqual(['admin'])
+  it('keep people, tokens and other people’s letters to administrators', () => {
+    for (const [name, { may }] of declared) if (!name.includes('/me/') && /\/(people|tokens|letters)(\/:id|$)/.test(name)) expect(may, name).toEqual(['admin'])
   })
 })
 
@@ -132,7 +139,7 @@ describe('what goes in', () => {
   })
 
   it('is a body where something is written, and never one where something is read', () => {
-    const bare = ['POST /api/sign-out', 'POST /api/tokens/:id/end', 'POST /api/judging-runs', 'POST /api/versions/:id/judge']
+    const bare = ['POST /api/sign-out', 'POST /api/letters/:id/send-again', 'POST /api/tokens/:id/end', 'POST /api/judging-runs', 'POST /api/versions/:id/judge']
     for (const [name, { body }] of declared) expect(body !== undefined, name).toBe(methodOf(name) !== 'GET' && !bare.includes(name))
   })
 

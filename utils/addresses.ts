@@ -16,6 +16,8 @@ export const addressOf = {
   nameplate: (id: number) => `/nameplates/${id}`,
   rules: () => '/rules',
   people: () => '/people',
+  letters: () => '/letters',
+  me: () => '/me',
   format: () => '/format',
   interface: () => '/interface',
   /** With a rule: where the page tells of it. */

@@ -21,6 +21,7 @@ export const entries: readonly Entry[] = [
   { to: addressOf.nameplates(), word: 'Nameplates', late: true },
   { to: addressOf.rules(), word: 'Rules', late: true },
   { to: addressOf.people(), word: 'People', late: true, for: ['admin'] },
+  { to: addressOf.letters(), word: 'Letters', late: true, for: ['admin'] },
   { to: addressOf.format(), word: 'Format', late: true },
   { to: addressOf.interface(), word: 'Interface', late: true },
   { to: addressOf.help(), word: 'Help', late: true },

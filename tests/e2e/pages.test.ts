@@ -39,6 +39,8 @@ const visits: readonly Visit[] = [
   { file: 'pages/interface.vue', address: () => '/interface', ready: /\d+ calls/ },
   { file: 'pages/help.vue', address: () => '/help#target-inside', ready: /\d+ rules judge an axis/ },
   { file: 'pages/people.vue', address: () => '/people', ready: /\d+ people/, as: 'admin' },
+  { file: 'pages/letters.vue', address: () => '/letters', ready: /letters? waits?|No letter waits/, as: 'admin' },
+  { file: 'pages/me.vue', address: () => '/me', ready: /My letters/ },
   { file: 'pages/sign-in.vue', address: () => '/sign-in', ready: /Witnessmark/, as: 'nobody' },
   { file: 'pages/set-up.vue', address: () => '/set-up?token=none', ready: /A new vault/, as: 'nobody' },
 ]
@@ -149,6 +151,7 @@ const opened: readonly Opened[] = [
     await press(page, 'Register a person')
     await press(page, 'Register the person')
   } },
+  { what: 'the way to watch an axis', file: 'pages/me.vue', open: page => press(page, 'Watch an axis') },
   { what: 'a new token', file: 'pages/people.vue', as: 'admin', open: page => press(page, 'Make a token') },
   { what: 'who is signed in, or the menu', file: 'pages/format.vue', open: async (page) => {
     const menu = page.getByRole('button', { name: 'Menu' })

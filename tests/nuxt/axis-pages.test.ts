@@ -22,6 +22,7 @@ registerEndpoint('/api/versions/14', () => knownGood)
 registerEndpoint('/api/versions/15/changes', () => changesAnswer(before, after))
 registerEndpoint('/api/judging-context', () => ({ problem: null, registered: null, axis: null, current: null, knownGood: null, nextNumber: 16, nameplate, rules: [] }))
 registerEndpoint('/api/machines/3', () => ({ id: 3, rev: 1, lineId: 1, name: 'LID-03' }))
+registerEndpoint('/api/me/letters', () => ({ choices: [], watches: [] }))
 registerEndpoint('/api/units', () => ({ items: [], next: null }))
 const signed: unknown[] = []
 registerEndpoint('/api/versions/15/known-good', {

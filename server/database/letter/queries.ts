@@ -1,11 +1,10 @@
 import { and, asc, desc, eq, isNull, lt, lte, or, sql } from 'drizzle-orm'
-import type { LetterKind, LetterState } from '#shared/api/letters'
-import type { Instant } from '../columns'
+import type { LetterState } from '#shared/api/letters'
 import { ifGiven } from '../bounds'
 import { inserter } from '../inserter'
 import { person } from '../person/table'
 import { prepared, type VaultDb } from '../prepared'
-import { letter, letterChoice, type LetterRow } from './table'
+import { letter, letterChoice, type LetterChoiceRow, type LetterRow } from './table'
 
 const place = sql.placeholder
 
@@ -36,7 +35,7 @@ export function moveLetter(db: VaultDb, id: number, move: LetterMove): void {
   db.update(letter).set(move).where(eq(letter.id, id)).run()
 }
 
-/** Puts what a person says of a kind over what they said before. */
-export function putChoice(db: VaultDb, row: { personId: number, kind: LetterKind, wanted: boolean, chosenAt: Instant }): void {
-  db.insert(letterChoice).values(row).onConflictDoUpdate({ target: [letterChoice.personId, letterChoice.kind], set: row }).run()
+/** Puts what a person says of a kind over what they said before; answers the row as it stands. */
+export function putChoice(db: VaultDb, row: Omit<LetterChoiceRow, 'id'>): LetterChoiceRow {
+  return db.insert(letterChoice).values(row).onConflictDoUpdate({ target: [letterChoice.personId, letterChoice.kind], set: row }).returning().get()
 }

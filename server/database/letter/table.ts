@@ -1,4 +1,4 @@
-import { integer, primaryKey, sqliteTable, text } from 'drizzle-orm/sqlite-core'
+import { integer, sqliteTable, text } from 'drizzle-orm/sqlite-core'
 import type { LetterKind, LetterState } from '#shared/api/letters'
 import { flag, id, instant, json } from '../columns'
 
@@ -27,8 +27,10 @@ export type LetterRow = typeof letter.$inferSelect
 
 /** What a person said about a kind of letter; without a row the table of kinds says. */
 export const letterChoice = sqliteTable('letter_choice', {
+  id: id(),
   personId: integer('person_id').notNull(),
   kind: text('kind').$type<LetterKind>().notNull(),
   wanted: flag('wanted').notNull(),
   chosenAt: instant('chosen_at').notNull(),
-}, table => [primaryKey({ columns: [table.personId, table.kind] })])
+})
+export type LetterChoiceRow = typeof letterChoice.$inferSelect

@@ -32,21 +32,23 @@ WHEN ${['id', 'message_id', 'person_id', 'kind', 'cause', 'axis_id', 'site_ids',
 BEGIN SELECT RAISE(ABORT, 'immutable: what a letter says never changes'); END;
 
 CREATE TABLE letter_choice (
+  id INTEGER PRIMARY KEY,
   person_id INTEGER NOT NULL REFERENCES person (id),
   kind TEXT NOT NULL,
   ${flag('wanted')},
   ${instant('chosen_at')},
-  PRIMARY KEY (person_id, kind)
-) STRICT, WITHOUT ROWID;
+  UNIQUE (person_id, kind)
+) STRICT;
 
 CREATE TABLE watch (
+  id INTEGER PRIMARY KEY,
   person_id INTEGER NOT NULL REFERENCES person (id),
   scope TEXT NOT NULL CHECK (scope IN ('site', 'line', 'machine', 'axis')),
   scope_id INTEGER NOT NULL,
   ${flag('watched')},
   ${instant('chosen_at')},
-  PRIMARY KEY (person_id, scope, scope_id)
-) STRICT, WITHOUT ROWID;
+  UNIQUE (person_id, scope, scope_id)
+) STRICT;
 CREATE INDEX watch_place ON watch (scope, scope_id, person_id);
 ${undeletable('letter', 'letter_choice', 'watch')}`
 

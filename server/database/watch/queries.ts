@@ -23,7 +23,7 @@ export const watchQueries = prepared((db) => {
   }
 })
 
-/** Puts what a person says of a place over what they said before. */
-export function putWatch(db: VaultDb, row: WatchRow): void {
-  db.insert(watch).values(row).onConflictDoUpdate({ target: [watch.personId, watch.scope, watch.scopeId], set: row }).run()
+/** Puts what a person says of a place over what they said before; answers the row as it stands. */
+export function putWatch(db: VaultDb, row: Omit<WatchRow, 'id'>): WatchRow {
+  return db.insert(watch).values(row).onConflictDoUpdate({ target: [watch.personId, watch.scope, watch.scopeId], set: row }).returning().get()
 }

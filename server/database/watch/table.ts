@@ -1,13 +1,14 @@
-import { integer, primaryKey, sqliteTable, text } from 'drizzle-orm/sqlite-core'
+import { integer, sqliteTable, text } from 'drizzle-orm/sqlite-core'
 import type { WatchScope } from '#shared/api/letters'
-import { flag, instant } from '../columns'
+import { flag, id, instant } from '../columns'
 
 /** Who wants to hear of the axes of a place; watched false once they want no more. */
 export const watch = sqliteTable('watch', {
+  id: id(),
   personId: integer('person_id').notNull(),
   scope: text('scope').$type<WatchScope>().notNull(),
   scopeId: integer('scope_id').notNull(),
   watched: flag('watched').notNull(),
   chosenAt: instant('chosen_at').notNull(),
-}, table => [primaryKey({ columns: [table.personId, table.scope, table.scopeId] })])
+})
 export type WatchRow = typeof watch.$inferSelect

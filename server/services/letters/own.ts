@@ -25,9 +25,8 @@ const mayChoose = ({ roles, sites }: PersonActor, kind: (typeof letterKindNames)
 export function chooseLetter(vault: Vault, actor: PersonActor, { kind, wanted }: z.output<typeof letterChoiceBody>): OwnLetters {
   return vault.write(actor, (write) => {
     if (!mayChoose(actor, kind)) throw new Refusal('role', 'Letters of this kind go to other roles, or to people of all sites.')
-    const row = { personId: actor.id, kind, wanted, chosenAt: write.now }
-    putChoice(vault.db, row)
-    write.log({ act: 'letter-chosen', id: `${actor.id}:${kind}`, state: row })
+    const row = putChoice(vault.db, { personId: actor.id, kind, wanted, chosenAt: write.now })
+    write.log({ act: 'letter-chosen', id: row.id, state: row })
     return ownLetters(vault, actor)
   })
 }
@@ -36,9 +35,8 @@ export function chooseLetter(vault: Vault, actor: PersonActor, { kind, wanted }:
 export function watchPlace(vault: Vault, actor: PersonActor, { scope, scopeId, watched }: z.output<typeof watchBody>): OwnLetters {
   return vault.write(actor, (write) => {
     if (watched) assertPlace(vault, actor, scope, scopeId, '/scopeId')
-    const row = { personId: actor.id, scope, scopeId, watched, chosenAt: write.now }
-    putWatch(vault.db, row)
-    write.log({ act: 'watch-set', id: `${actor.id}:${scope}:${scopeId}`, state: row })
+    const row = putWatch(vault.db, { personId: actor.id, scope, scopeId, watched, chosenAt: write.now })
+    write.log({ act: 'watch-set', id: row.id, state: row })
     return ownLetters(vault, actor)
   })
 }

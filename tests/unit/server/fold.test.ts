@@ -73,8 +73,8 @@ describe('each row equals the newest entry about it', async () => {
     ['unit', byId(vault.db.select().from(schema.unit).all())],
     ['fitting', byId(vault.db.select().from(schema.fitting).all())],
     ['nameplate', byId(vault.db.select().from(schema.nameplateRevision).all())],
-    ['watch', Object.fromEntries(vault.db.select().from(schema.watch).all().map(row => [`${row.personId}:${row.scope}:${row.scopeId}`, row]))],
-    ['letter-choice', Object.fromEntries(vault.db.select().from(schema.letterChoice).all().map(row => [`${row.personId}:${row.kind}`, row]))],
+    ['watch', byId(vault.db.select().from(schema.watch).all())],
+    ['letter-choice', byId(vault.db.select().from(schema.letterChoice).all())],
     ['setting', Object.fromEntries(vault.db.select().from(schema.setting).all().map(row => [row.key, row]))],
   ])('%s', (kind, rows) => {
     expect(Object.keys(rows).length).toBeGreaterThan(0)

@@ -91,7 +91,7 @@ describe('letters to those who watch', () => {
     const elsewhere = plant.machineAt('Other works')
     const bound = plant.person('Tobias Achterberg', ['technician'], [elsewhere.siteId])
     expect(codeOf(() => watch(bound))).toBe('not-found')
-    plant.vault.sqlite.prepare('INSERT INTO watch VALUES (?, ?, ?, 1, ?)').run(bound.id, 'axis', axisId, iso(start))
+    plant.vault.sqlite.prepare('INSERT INTO watch (person_id, scope, scope_id, watched, chosen_at) VALUES (?, ?, ?, 1, ?)').run(bound.id, 'axis', axisId, iso(start))
     expect(tell()).toEqual([])
   })
 })
@@ -156,8 +156,8 @@ describe('one’s own letters', () => {
     chooseLetter(plant.vault, ines, { kind: 'checkpoint', wanted: false })
     const leaves = plant.vault.sqlite.prepare('SELECT leaf FROM log ORDER BY seq DESC LIMIT 2').pluck().all() as string[]
     expect(leaves.map(leaf => parseLeaf(leaf))).toMatchObject([
-      { act: 'letter-chosen', subject: { kind: 'letter-choice', id: `${ines.id}:checkpoint` }, state: { personId: ines.id, kind: 'checkpoint', wanted: false } },
-      { act: 'watch-set', subject: { kind: 'watch', id: `${ines.id}:axis:${axisId}` }, state: { watched: true } },
+      { act: 'letter-chosen', subject: { kind: 'letter-choice', id: 1 }, state: { personId: ines.id, kind: 'checkpoint', wanted: false } },
+      { act: 'watch-set', subject: { kind: 'watch', id: 1 }, state: { watched: true } },
     ])
   })
 })

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { z } from 'zod'
 import { axisRef, idParams, idText, instantSchema, listQuery, nameSchema, pageOf, passwordSchema, reasonSchema, serialSchema, tagSchema } from '../../../../shared/api/common'
+import { runQuery } from '../../../../shared/api/judging'
 import { ownPasswordBody, personBody, setUpBody, signInBody, tokenBody } from '../../../../shared/api/people'
 import { axisBody, axisPatch, fittingEndBody, nameplatePatch, ruleBody, siteBody, sitePatch, unitBody, unitPatch } from '../../../../shared/api/places'
 import { judgingQuery, trayAssignBody, trayDiscardBody, uploadFields } from '../../../../shared/api/uploads'
@@ -117,6 +118,10 @@ describe('uploads and versions', () => {
   it('a file leaves the tray for an axis, or with a reason', () => {
     holds(trayAssignBody, [{ axisId: 1 }, { axisId: 1, at: '2026-11-30T08:15:00Z', reason: '' }], [{}, { axisId: '1' }, { axisId: 1, at: 'now' }])
     holds(trayDiscardBody, [{ reason: 'A test file.' }], [{}, { reason: '' }])
+  })
+
+  it('a run is asked for from the first change that the caller lacks', () => {
+    holds(runQuery, [{}, { from: '0' }, { from: '7' }], [{ from: '-1' }, { from: '1.5' }, { from: 'x' }, { since: '1' }])
   })
 
   it('a version is set aside with a reason and a signature', () => {

@@ -17,6 +17,13 @@ describe('acceleration-limit', () => {
     expect(accelerationLimit.judge(input)).toMatchObject([{ level: 'stop', at: ['/moves/0/deceleration'], values: { move: 1, value: 6000, limit: 5000 } }])
   })
 
+  it('lets the acceleration of the unit and those of the setup pass, and not a millionth more', () => {
+    const own = { accelerationLimit: 4000, decelerationLimit: 3000 }
+    expect(accelerations(own, absolute(1, 0, { acceleration: 4000, deceleration: 3000 }))).toEqual([])
+    expect(accelerations({}, absolute(1, 0, { acceleration: 5000.000001 }))).toEqual(['stop: Move 1: an acceleration of 5000.000001 mm/s² is 0.000001 mm/s² above the 5000 mm/s² that the unit can do.'])
+    expect(accelerations(own, absolute(1, 0, { acceleration: 4000.000001, deceleration: 3000.000001 })).map(line => line.slice(0, 30))).toEqual(['warn: Move 1: an acceleration o', 'warn: Move 1: a deceleration of'].map(line => line.slice(0, 30)))
+  })
+
   it('judges homing and the setup’s own limits, the quick stop aside', () => {
     expect(accelerations({ homingAcceleration: 5001, accelerationLimit: 5002, decelerationLimit: 5003, quickStopDeceleration: 20000 }).map(line => line.slice(0, 40))).toEqual([
       'stop: The homing acceleration of 5001 mm', 'stop: The acceleration limit of 5002 mm/', 'stop: The deceleration limit of 5003 mm/',

@@ -17,6 +17,12 @@ describe('brake-agrees', () => {
     expect(brakeAgrees.judge(agrees(false, true))).toMatchObject([{ at: ['/setup/brakeFitted'], values: { set: 'false', nameplate: 'true' } }])
   })
 
+  it('takes false for an answer and only what is not given for none: the border of what is known', () => {
+    expect(told(brakeAgrees, agrees(false, false))).toEqual([])
+    expect(told(brakeAgrees, agrees(undefined, false))[0]).toMatch(/^unknown/)
+    expect(told(brakeAgrees, agrees(false, undefined))[0]).toMatch(/^unknown/)
+  })
+
   it('names what is missing', () => {
     expect(told(brakeAgrees, agrees(undefined, true))).toEqual(['unknown: Whether drive and unit agree about the brake cannot be judged without brakeFitted.'])
     expect(brakeAgrees.judge(agrees(false))[0]!.missing).toEqual(['nameplate.brakeFitted'])

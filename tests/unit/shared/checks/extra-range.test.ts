@@ -21,6 +21,13 @@ describe('extra-range', () => {
     expect(held('high', { min: 0 })).toEqual(['stop: K-017 “high” is no number, as it has to be.'])
   })
 
+  it('turns at the ends of the range: 0 and 15 pass, a millionth beyond does not', () => {
+    const entry = { min: 0, max: 15 }
+    expect([held(0, entry), held(15, entry)]).toEqual([[], []])
+    expect([held(-0.000001, entry), held(15.000001, entry)].map(lines => lines.length)).toEqual([1, 1])
+    expect([held(-1, { max: 15 }), held(16, { min: 0 })]).toEqual([[], []])
+  })
+
   it('stops a value that is not among the allowed', () => {
     expect(held('B', { allowed: ['A', 'B'] })).toEqual([])
     expect(held('C', { allowed: ['A', 'B'] })).toEqual(['stop: K-017 “C” is none of the allowed “A” and “B”.'])

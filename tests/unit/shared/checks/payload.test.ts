@@ -21,6 +21,11 @@ describe('payload', () => {
     expect(carries(30.000001, 0)).toHaveLength(1)
   })
 
+  it('turns at the maximum: 12 kg pass upright, 12.000001 kg do not; 30 and 30.000001 kg on the level', () => {
+    expect([carries(12, 90), carries(12, -90), carries(30, 0)]).toEqual([[], [], []])
+    expect([carries(12.000001, 90), carries(12.000001, -90), carries(30.000001, 0)].map(lines => lines.length)).toEqual([1, 1, 1])
+  })
+
   it('lies between the two on a slope: at 30 deg 1/(0.5/30 + 0.5/12) = 17.142857 kg', () => {
     expect(carries(17.142857, 30)).toEqual([])
     expect(carries(17.2, 30)).toEqual(['stop: The payload of 17.2 kg is 0.05714 kg more than the 17.14 kg that the unit may carry at 30 deg.'])

@@ -22,6 +22,13 @@ describe('press-force', () => {
     expect(pushes(70.000001)).toHaveLength(1)
   })
 
+  it('lets each end of the range and the thrust limit itself pass, and not a millionth beyond', () => {
+    expect([20, 70].map(percent => pushes(percent, { thrustLimit: 70 }))).toEqual([[], []])
+    expect(pushes(19.999999)).toEqual(['stop: Press 6 pushes with 19.999999 %, 0.000001 points below the 20 % from which the unit holds a press force.'])
+    expect(pushes(70.000001, { thrustLimit: 80 })).toEqual(['stop: Press 6 pushes with 70.000001 %, 0.000001 points above the 70 % that the unit may press with.'])
+    expect(pushes(60.000001, { thrustLimit: 60 })).toEqual(['stop: Press 6 pushes with 60.000001 %, 0.000001 points above the thrust limit of 60 % that way.'])
+  })
+
   it('takes the lower of the two thrust limits of the way it pushes', () => {
     const setup = { thrustLimit: 60, thrustLimitPositive: 40, thrustLimitNegative: 50 }
     expect(pushes(45, setup)).toEqual(['stop: Press 6 pushes with 45 %, 5 points above the thrust limit of 40 % that way.'])

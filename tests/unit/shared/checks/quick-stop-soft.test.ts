@@ -17,6 +17,11 @@ describe('quick-stop-soft', () => {
     expect(quickStopSoft.judge(input)).toMatchObject([{ at: ['/setup/quickStopDeceleration', '/moves/1/deceleration'], values: { move: 5, quickStop: 1000, deceleration: 3000 } }])
   })
 
+  it('lets a quick stop just as hard pass, and not a millionth softer', () => {
+    expect(told(quickStopSoft, quick(3000, absolute(1, 0, { deceleration: 3000 })))).toEqual([])
+    expect(quickStopSoft.judge(quick(2999.999999, absolute(1, 0, { deceleration: 3000 })))).toMatchObject([{ level: 'warn', values: { quickStop: 2999.999999, deceleration: 3000 } }])
+  })
+
   it('takes the acceleration where a move has no deceleration, and skips unused rows', () => {
     const input = quick(1999.999999, absolute(1, 0), unused(2))
     expect(quickStopSoft.judge(input)[0]!.at).toEqual(['/setup/quickStopDeceleration', '/moves/0/acceleration'])

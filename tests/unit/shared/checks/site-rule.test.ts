@@ -21,6 +21,11 @@ describe('site-rule', () => {
     expect(asks('thrustLimit', { max: 54.999999 })).toHaveLength(1)
   })
 
+  it('turns at its bounds: 55 % pass at most 55 and at least 55, and not a millionth beyond', () => {
+    expect([asks('thrustLimit', { max: 55 }), asks('thrustLimit', { min: 55 }), asks('thrustLimit', { fixed: 55 })]).toEqual([[], [], []])
+    expect([asks('thrustLimit', { max: 54.999999 }), asks('thrustLimit', { min: 55.000001 }), asks('thrustLimit', { fixed: 55.000001 })].map(lines => lines.length)).toEqual([1, 1, 1])
+  })
+
   it('tells too little, and a value that is not the fixed one', () => {
     expect(asks('thrustLimit', { min: 60, scope: 'machine' })).toEqual(['stop: Thrust limit 55 % is below the 60 % asked on this machine: jars crack above 300 N.'])
     expect(asks('thrustLimit', { fixed: 50, scope: 'axis' })).toEqual(['stop: Thrust limit 55 % is not the 50 % set on this axis: jars crack above 300 N.'])

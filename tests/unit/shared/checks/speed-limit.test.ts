@@ -16,6 +16,12 @@ describe('speed-limit', () => {
     expect(speedLimit.judge(input)).toMatchObject([{ at: ['/moves/1/speed'], values: { move: 5, value: 900, limit: 800 } }])
   })
 
+  it('lets the speed of the unit and that of the setup pass, and not a millionth more', () => {
+    expect(speeds({ speedLimit: 800 }, absolute(1, 0, { speed: 800 }))).toEqual([])
+    expect(speeds({}, absolute(1, 0, { speed: 800.000001 }))).toEqual(['stop: Move 1: a speed of 800.000001 mm/s is 0.000001 mm/s above the 800 mm/s that the unit can do.'])
+    expect(speeds({ speedLimit: 700 }, absolute(1, 0, { speed: 700.000001 }))[0]).toMatch(/^warn: Move 1: a speed of 700.000001 mm\/s is above the setup's limit of 700 mm\/s/)
+  })
+
   it('judges press, homing and jog speeds and the limit itself', () => {
     const setup = { homingSpeed: 801, homingCreepSpeed: 802, speedLimit: 803, jogSpeed: 804, pressSpeed: 805 }
     expect(speeds(setup, press(2, 100, 150, { pressSpeed: 806 }))).toEqual([

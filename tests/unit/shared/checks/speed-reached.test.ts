@@ -18,6 +18,12 @@ describe('speed-reached', () => {
     expect(found!.values.reached).toBeCloseTo(122.474487, 6)
   })
 
+  it('turns at the way that just reaches it: 31.25 mm do, 31.24 mm reach √(2000·31.24) = 249.96 mm/s', () => {
+    expect(reached(relative(1, 31.25))).toEqual([])
+    expect(reached(relative(1, 31.24))).toEqual(['note: Move 1 reaches 249.96 of the 250 mm/s asked: its way is too short.'])
+    expect(reached(relative(1, -31.25), relative(2, -31.24))).toHaveLength(1)
+  })
+
   it('goes by where a row starts, and by the longest way of several', () => {
     // From 90 to 100: √(2000·10) = 141.42 mm/s; from 50 as well: 50 mm are enough.
     expect(reached(absolute(1, 90, { next: 2 }), absolute(2, 100))).toEqual(['note: Move 2 reaches 141.4 of the 250 mm/s asked: its way is too short.'])

@@ -19,6 +19,14 @@ describe('unit-matches', () => {
     expect(matches({ unit: { model: 'HR16' } })[0]).toMatch(/^stop/)
   })
 
+  it('compares type codes to the last sign: another case or a suffix is another build, another stem another unit', () => {
+    expect(matches({ unit: { model: 'HL40-200v' } })[0]).toMatch(/^warn/)
+    expect(matches({ unit: { model: 'HL40-200V ' } })[0]).toMatch(/^warn/)
+    expect(matches({ unit: { model: 'HL40' } })[0]).toMatch(/^warn/)
+    expect(matches({ unit: { model: 'hl40-200V' } })[0]).toMatch(/^stop/)
+    for (const separator of ['/', '.', '_', ' ']) expect(matches({ unit: { model: `HL40${separator}200V` } })[0]).toMatch(/^warn: .*: only HL40 is the same\.$/)
+  })
+
   it('stops a file of the other axis kind', () => {
     const input = judgeInput(linear(), { axis: { axisKind: 'rotary', flags: [] } })
     expect(told(unitMatches, input)).toEqual(['stop: The file is for a linear axis, this axis is rotary.'])

@@ -14,6 +14,12 @@ describe('unused-rows', () => {
     expect(told(unusedRows, judgeInput(linear({}, [unused(3)])))).toEqual(['note: Row 3 is unused: 1 of 1.'])
   })
 
+  it('counts a row only where speed and acceleration are both 0: one of the two is no empty row', () => {
+    const half = [absolute(1, 0, { speed: 0 }), absolute(2, 0, { acceleration: 0 }), absolute(3, 0, { speed: 0.000001, acceleration: 0.000001 })]
+    expect(told(unusedRows, judgeInput(linear({}, half)))).toEqual([])
+    expect(told(unusedRows, judgeInput(linear({}, [...half, unused(4)])))).toEqual(['note: Row 4 is unused: 1 of 4.'])
+  })
+
   it('does not apply to an empty table', () => {
     expect(told(unusedRows, judgeInput(linear()))).toEqual(['not applicable'])
   })

@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { zoneReach } from '../../../../shared/checks/zone-reach'
 import type { Setup, Zone } from '../../../../shared/settings/types'
-import { absolute, judgeInput, limits, linear, rotary, told } from '../../../support/check-input'
+import { absolute, judgeInput, limits, linear, rotary, told, unused } from '../../../support/check-input'
 
 const zone = (number: number, from: number, to: number): Zone => ({ zone: number, from, to })
 const zones = (list: readonly Zone[], setup: Setup = limits) => judgeInput(linear(setup, [absolute(1, 10)], { zones: list }))
@@ -39,6 +39,14 @@ describe('zone-reach', () => {
     expect(looked(14.9, 20)).toEqual(['note: Zone 1 is 4.9 mm wide: at 250 mm/s the axis goes 5 mm between two looks of the controller.'])
     expect(looked(15, 20)).toEqual([])
     expect(looked(10.1)).toEqual([])
+  })
+
+  it('goes by the fastest row in use, however slow: 0.5 mm/s · 20 ms = 0.01 mm; without a row nothing crosses a zone', () => {
+    const slow = (to: number, moves = [absolute(1, 10, { speed: 0.5 }), unused(2)]) =>
+      told(zoneReach, { ...judgeInput(linear(limits, moves, { zones: [zone(1, 10, to)] })), axis: { axisKind: 'linear', flags: [], controllerScan: 20 } })
+    expect(slow(10.01)).toEqual([])
+    expect(slow(10.009)).toEqual(['note: Zone 1 is 0.009 mm wide: at 0.5 mm/s the axis goes 0.01 mm between two looks of the controller.'])
+    expect(slow(10.009, [unused(2)])).toEqual([])
   })
 
   it('names missing limits, and judges by the one that is there', () => {

@@ -12,6 +12,12 @@ describe('distanceOf', () => {
     expect(distanceOf({ kind: 'press', target: 100 }, 150).distance).toBe(-50)
   })
 
+  it('is its own distance for a relative move, on a modulo axis as well: half a turn is told by its sign', () => {
+    for (const target of [180, -180, 540]) {
+      expect(distanceOf({ kind: 'relative', target, turn: 'shortest' }, 10, 360)).toEqual({ distance: target, halfTurn: false })
+    }
+  })
+
   it('goes round as turn says: from 350 to 10 deg', () => {
     expect(to(10, 350).distance).toBe(-340)
     expect(to(10, 350, 'signed').distance).toBe(-340)

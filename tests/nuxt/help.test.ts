@@ -18,6 +18,19 @@ describe('the help page', () => {
     expect(span).toContain('tests/unit/shared/checks/travel-span.test.ts')
   })
 
+  it('names the tests of each rule by their titles, at an anchor that the line of the rule leads to', async () => {
+    const page = await mountSuspended(HelpPage, { route: '/help' })
+    for (const { id, test, tests } of ruleEntries) {
+      const place = page.get(`article #${id}-tests`)
+      expect(words(place.get('code').text())).toBe(test)
+      expect(place.findAll('dl dd').map(each => words(each.text())), id).toEqual(Object.values(tests ?? {}).map(words))
+    }
+    const links = page.findAll('tbody td a')
+    expect(links.map(link => link.attributes('href'))).toEqual(ruleEntries.map(entry => `/help#${entry.id}-tests`))
+    // The words that are seen are part of the name that is heard (WCAG 2.2, 2.5.3).
+    for (const [index, { test }] of ruleEntries.entries()) expect(words(links[index]!.text())).toBe(test)
+  })
+
   it('has a line for each rule that leads to its anchor', async () => {
     const page = await mountSuspended(HelpPage, { route: '/help' })
     const rows = page.findAll('tbody th[scope="row"] a')

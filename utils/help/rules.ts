@@ -4,6 +4,7 @@ import { addressTwice } from '#shared/checks/live/address-twice'
 import { sisterOutlier } from '#shared/checks/live/sister-outlier'
 import { rules } from '#shared/checks/table'
 import type { Level } from '#shared/checks/types'
+import { ruleTests, type RuleTests } from './tests'
 
 /** One rule as the help page tells it. */
 export interface RuleEntry {
@@ -18,12 +19,15 @@ export interface RuleEntry {
   readonly example: RuleHelp | undefined
   /** Where it is tested, by its path in the repository. */
   readonly test: string
+  /** The four of those tests that no rule is done without. */
+  readonly tests: RuleTests | undefined
 }
 
 type Told = Pick<RuleEntry, 'id' | 'title' | 'reason' | 'formula' | 'levels'>
 
 function entryOf({ id, title, reason, formula, levels }: Told, live: boolean): RuleEntry {
-  return { id, title, reason, formula, levels, live, example: helpOf(id), test: `tests/unit/shared/checks/${live ? 'live/' : ''}${id}.test.ts` }
+  const test = `tests/unit/shared/checks/${live ? 'live/' : ''}${id}.test.ts`
+  return { id, title, reason, formula, levels, live, example: helpOf(id), test, tests: ruleTests[id] }
 }
 
 /** Every rule there is: those that judge a version, then those that hold axes against each other. */

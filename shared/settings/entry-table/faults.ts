@@ -84,6 +84,11 @@ function valueFaults(entry: EntryValue, kind: ValueKind, path: readonly (string 
   const given = Object.keys(entry.words ?? {})
   const strange = given.find(word => !wordList.includes(word))
   if (strange !== undefined) faults.push({ path: [...path, 'words'], message: wordList.length === 0 ? `${field} has no words.` : `${strange} is no word of ${field}: ${wordList.join(', ')}.` })
+  // A cell is read without the blanks around it, so that a word with one is never met.
+  for (const [key, words] of [['words', Object.values(entry.words ?? {})], ['none', entry.none === undefined ? [] : [entry.none]]] as const) {
+    const blank = words.find(word => word.trim() !== word)
+    if (blank !== undefined) faults.push({ path: [...path, key], message: `"${blank}" has a blank at its beginning or end; take it out.` })
+  }
   const shown = wordList.map(word => entry.words?.[word] ?? word)
   if (new Set(shown).size < shown.length || (entry.none !== undefined && shown.includes(entry.none))) {
     faults.push({ path: [...path, 'words'], message: `Two words of ${field} are the same in the drive’s list: they could not be told apart.` })

@@ -38,3 +38,48 @@ describe('a cell of the drive’s list', () => {
     expect(writeDriveCell('=a', entry(), text, 'point')).toBe('\'=a')
   })
 })
+
+describe('a cell and its way back', () => {
+  const choice: ValueKind = { type: 'choice', choices: ['extend', 'retract'] }
+  const own: ValueKind = { type: 'own' }
+
+  it.each([
+    ['a number, by factor and unit', 12.7, entry({ unit: 'in', factor: 0.1 }), number, '5'],
+    ['a number in the unit of the field', -0.5, entry(), number, '-0,5'],
+    ['a word of the drive', 'retract', entry({ words: { extend: '0', retract: '1' } }), choice, '1'],
+    ['a word that the table leaves as it is', 'extend', entry({ words: { retract: '1' } }), choice, 'extend'],
+    ['a flag without words', true, entry(), flag, 'true'],
+    ['a number that is kept as it is', 310.25, entry(), own, '310,25'],
+    ['a text', 'Lid press', entry(), text, 'Lid press'],
+    ['a text like a formula', '=1+2', entry(), text, '\'=1+2'],
+  ] as const)('%s', (_, value, part, kind, cell) => {
+    expect(writeDriveCell(value, part, kind, 'comma')).toBe(cell)
+    const read = readDriveCell(cell, '', part, kind, 'comma')
+    expect(read).toMatchObject({ text: typeof value === 'number' && kind !== number ? String(value) : expect.any(String) as string })
+    if (kind === choice || kind === flag) expect(read).toEqual({ text: String(value), unit: '' })
+  })
+
+  it('names all words that a drive may write, its own beside ours', () => {
+    expect(readDriveCell('2', '', entry({ words: { extend: '0' } }), choice, 'point')).toEqual({ code: 'enum', message: '"2" is none of 0 (extend), retract.' })
+    expect(readDriveCell('extend', '', entry({ words: { extend: '0' } }), choice, 'point')).toMatchObject({ code: 'enum' })
+  })
+
+  it('takes the sign of the list and no other, in numbers and in the drive’s own', () => {
+    expect(readDriveCell('1.5', '', entry(), own, 'point')).toEqual({ text: '1.5', unit: '' })
+    expect(readDriveCell('1,5', '', entry(), own, 'point')).toMatchObject({ code: 'number-unclear', message: '"1,5" has another decimal sign than this list, which has the point.' })
+    // What is no number with this sign is a text of the drive's own.
+    expect(readDriveCell('1,5', '', entry(), extra, 'point')).toEqual({ text: '1,5', unit: 'text' })
+    expect(readDriveCell('1.5', 'A', entry(), extra, 'comma')).toEqual({ text: '1.5', unit: 'text' })
+  })
+
+  it('says which unit the file has and which the table', () => {
+    expect(readDriveCell('1', 'in', entry({ unit: 'm' }), number, 'point')).toEqual({ code: 'unit-unfit', message: 'The file has in here, the entry table m. Correct the one that is wrong.', meant: 'm' })
+    expect(readDriveCell('1', ' mm ', entry(), number, 'point')).toEqual({ text: '1', unit: '' })
+  })
+
+  it('is empty, or the drive’s word, for what is not set: blanks around it do not matter', () => {
+    expect(writeDriveCell(undefined, entry(), number, 'point')).toBe('')
+    for (const sent of ['', ' ', ' - ', '-']) expect(readDriveCell(sent, 'kg', entry({ none: '-' }), number, 'point')).toBeUndefined()
+    expect(readDriveCell('--', '', entry({ none: '-' }), text, 'point')).toEqual({ text: '--', unit: '' })
+  })
+})

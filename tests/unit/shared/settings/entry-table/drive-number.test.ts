@@ -1,5 +1,9 @@
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { fromDrive, toDrive } from '../../../../../shared/settings/entry-table/drive-number'
+import { toCanonical } from '../../../../../shared/units/convert'
+import { Exact } from '../../../../../shared/units/exact'
+import { findUnit, type Unit } from '../../../../../shared/units/units'
 
 const entry = (part: object) => ({ field: 'target', ...part })
 
@@ -28,5 +32,36 @@ describe('what the drive wrote', () => {
     ['1250', 0.01, '12.5'], ['-3', 0.001, '-0.003'], ['two', 0.01, 'two'], ['', 0.01, ''], ['1.2.3', undefined, '1.2.3'], ['1e3', 0.1, '100'],
   ])('%s by %s is %s', (text, factor, expected) => {
     expect(fromDrive(text, factor)).toBe(expected)
+  })
+})
+
+describe('there and back', () => {
+  const place = fc.integer({ min: -5_000_000, max: 5_000_000 }).map(n => n / 1000)
+
+  it.each([
+    ['as it is', {}, 'mm'], ['in thousandths', { factor: 0.001 }, 'mm'], ['in metres', { unit: 'm' }, 'mm'], ['in tenths of a centimetre', { unit: 'cm', factor: 0.1 }, 'mm'],
+    ['on steps that every value stands on', { step: 0.001 }, 'mm'], ['with as many digits as there are', { digits: 3 }, 'mm'],
+  ])('%s nothing is lost', (_what, part, canonical) => {
+    fc.assert(fc.property(place, (value) => {
+      const { unit, factor } = part as { unit?: string, factor?: number }
+      const read = fromDrive(toDrive(value, entry(part), canonical), factor)
+      const back = toCanonical(new Exact(read), findUnit(unit ?? canonical, canonical) as Unit).toNumber()
+      expect(back).toBe(value + 0)
+    }))
+  })
+
+  it('rounding down never goes away from nought, up never towards it, half-even never further than half a step', () => {
+    fc.assert(fc.property(place, fc.constantFrom(0.01, 0.05, 0.25, 2), (value, step) => {
+      const at = (rounding: 'half-even' | 'down' | 'up') => Number(toDrive(value, entry({ step, rounding }), 'mm'))
+      expect(Math.abs(at('down'))).toBeLessThanOrEqual(Math.abs(value))
+      expect(Math.abs(at('up'))).toBeGreaterThanOrEqual(Math.abs(value))
+      expect(Math.abs(at('half-even') - value)).toBeLessThanOrEqual(step / 2 + 1e-9)
+      expect([at('down'), at('up')]).toContain(at('half-even'))
+    }))
+  })
+
+  it('ties go to the even step: 0.25 and 0.35 in tenths are 0.2 and 0.4, 2.5 and 3.5 are 2 and 4', () => {
+    expect([0.25, 0.35, -0.25, -0.35].map(value => toDrive(value, entry({ step: 0.1 }), 'mm'))).toEqual(['0.2', '0.4', '-0.2', '-0.4'])
+    expect([2.5, 3.5, 4.5].map(value => toDrive(value, entry({ digits: 0 }), 'mm'))).toEqual(['2', '4', '4'])
   })
 })

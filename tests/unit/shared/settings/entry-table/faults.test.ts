@@ -28,6 +28,12 @@ describe('what keeps an entry table from being used', () => {
     expect(parameter(entry)).toEqual([[path, message]])
   })
 
+  it('is a blank at the end of a word, which a reader could never meet: cells are read without theirs', () => {
+    expect(parameter({ field: 'brakeFitted', words: { true: '1 ', false: '0' } })).toEqual([['parameters/0/words', '"1 " has a blank at its beginning or end; take it out.']])
+    expect(parameter({ none: ' -' })).toEqual([['parameters/0/none', '" -" has a blank at its beginning or end; take it out.']])
+    expect(parameter({ field: 'brakeFitted', words: { true: 'on now', false: 'off' }, none: '- -' })).toEqual([])
+  })
+
   it('is a number or a field given twice', () => {
     const twice = [{ number: 'K-001', field: 'softLimitMin' }, { number: 'K-001', field: 'softLimitMin' }]
     expect(faultsOf({ parameters: twice }).map(([path]) => path)).toEqual(['parameters/1/number', 'parameters/1/field'])

@@ -30,6 +30,30 @@ describe('the drive’s own list', () => {
     expect(writeEntryCsv({ ...liftFile, setup: { speedLimit } }, liftPlate)).toContain(`K-012;Speed limit;${expected};m/s`)
   })
 
+  it('puts each cell into its column, and quotes what would read as two', () => {
+    const parameters = [{ number: 'N;1', name: 'a "b"', field: 'unit:firmware' }, { number: '2', name: ' led', field: 'file:note' }, { number: '3', field: 'softLimitMax' }]
+    const table = { ...liftTable, header: ['h'], columns: { number: 3, name: 1, value: 2, unit: 5 }, parameters, zones: [], moves: [] }
+    const file: SettingsFile = { ...liftFile, note: 'two\nlines', setup: { softLimitMax: 12.5 }, extra: {} }
+    expect(writeEntryCsv(file, { ...liftPlate, entryTable: table })).toBe('h\r\n"a ""b""";1.4;"N;1";;\r\n" led";"two\nlines";2;;\r\n;12,5;3;;mm\r\n')
+  })
+
+  it('has neither name nor unit where the list has no column for them', () => {
+    const table = { ...liftTable, columns: { number: 1, value: 2, name: 0, unit: 0 }, zones: [], moves: [] }
+    const lines = writeEntryCsv(liftFile, { ...liftPlate, entryTable: table }).split('\r\n')
+    expect(lines.slice(2, 5)).toEqual(['P-01;LT10-26-0001', 'P-02;1.4', 'K-001;1'])
+    expect(lines).toContain('K-050;3')
+  })
+
+  it('has the heads of its tables where they are empty, so that a list cut off is told from one without rows', () => {
+    const lines = writeEntryCsv({ ...liftFile, zones: [], moves: [] }, liftPlate).split('\r\n')
+    expect(lines.slice(-3)).toEqual(['Output;On from;On to', 'Step;Name;Mode;Pos;Vel;Acc;Force;Slow at;Then', ''])
+  })
+
+  it('leaves out what the table has no place for', () => {
+    const text = writeEntryCsv({ ...liftFile, setup: { ...liftFile.setup, jogSpeed: 77 } }, liftPlate)
+    expect(text).not.toMatch(/77/)
+  })
+
   it('cannot be written without an entry table', () => {
     expect(() => writeEntryCsv(liftFile, { model: 'LT20' })).toThrow(expect.objectContaining({ code: 'no-entry-table' }))
   })

@@ -57,29 +57,30 @@ const life: LifeEvent = { at, kind: 'mark', versionId: 7, number: 4, by: 'Runa H
 const run: JudgingRun = { id: 1, done: 0, of: 4, changed: [], problem: null }
 const problem: Problem = { type: 'urn:witnessmark:problem:input', title: 'Not as it should be', status: 422, detail: 'x', code: 'input' }
 
-const records: readonly (readonly [what: string, schema: z.ZodObject, record: object, nullable: readonly string[], optional?: readonly string[]])[] = [
-  ['a version', versionSchema, version, ['void', 'baseId', 'baseNumber', 'changedBy', 'allowedBy', 'reason', 'workOrder', 'firmware', 'lastSeenAt', 'mark']],
-  ['an axis', axisSchema, axis, ['uploadEveryHours', 'duty', 'sense', 'knownGood', 'unit', 'current', 'lastUploadAt', 'overdueSince']],
-  ['an axis of the board', boardAxis, board, ['serial', 'model', 'sense', 'lastUploadAt', 'overdueSince', 'knownGood', 'current']],
-  ['a line of what needs someone', attentionSchema, attention, ['since']],
-  ['who is asking', meSchema, me, []],
-  ['a person', personSchema, person, ['endedAt', 'lastSignInAt']],
-  ['a token', tokenSchema, token, ['endedAt', 'lastUsedAt']],
-  ['a site', siteSchema, site, []],
-  ['a unit', unitSchema, unit, ['channel', 'firmware', 'actuatorSerial', 'actuatorModel', 'siteId', 'axis']],
-  ['a fitting', fittingSchema, fitting, ['to']],
-  ['a site rule', ruleSchema, rule, ['min', 'max', 'fixed', 'endedAt', 'endedBy', 'endReason']],
-  ['a waiver', waiverSchema, waiver, ['endedAt', 'endedBy', 'endReason']],
-  ['a file in the tray', trayItem, tray, ['name', 'serial', 'model', 'capturedAt', 'siteId', 'guess']],
-  ['an event of a life', lifeEvent, life, ['versionId', 'number', 'text', 'serial', 'changes', 'occasion', 'sightings']],
-  ['a run of judging', runSchema, run, ['problem']],
-  ['a problem', problemSchema, problem, ['current'], ['errors', 'more', 'tray', 'current']],
-  ['an entry of the log', logEntrySchema, { seq: 1, leaf: '{}', hash }, []],
-  ['the health of the vault', healthSchema, { status: 'ok', schema: 2, writable: true }, []],
-  ['what went to the tray', uploadTray, { tray: 1, problem: 'not-fitted', detail: 'x' }, []],
+interface Travelling { readonly what: string, readonly schema: z.ZodObject, readonly record: object, readonly nullable: readonly string[], readonly optional?: readonly string[] }
+const records: readonly Travelling[] = [
+  { what: 'a version', schema: versionSchema, record: version, nullable: ['void', 'baseId', 'baseNumber', 'changedBy', 'allowedBy', 'reason', 'workOrder', 'firmware', 'lastSeenAt', 'mark'] },
+  { what: 'an axis', schema: axisSchema, record: axis, nullable: ['uploadEveryHours', 'duty', 'sense', 'knownGood', 'unit', 'current', 'lastUploadAt', 'overdueSince'] },
+  { what: 'an axis of the board', schema: boardAxis, record: board, nullable: ['serial', 'model', 'sense', 'lastUploadAt', 'overdueSince', 'knownGood', 'current'] },
+  { what: 'a line of what needs someone', schema: attentionSchema, record: attention, nullable: ['since'] },
+  { what: 'who is asking', schema: meSchema, record: me, nullable: [] },
+  { what: 'a person', schema: personSchema, record: person, nullable: ['endedAt', 'lastSignInAt'] },
+  { what: 'a token', schema: tokenSchema, record: token, nullable: ['endedAt', 'lastUsedAt'] },
+  { what: 'a site', schema: siteSchema, record: site, nullable: [] },
+  { what: 'a unit', schema: unitSchema, record: unit, nullable: ['channel', 'firmware', 'actuatorSerial', 'actuatorModel', 'siteId', 'axis'] },
+  { what: 'a fitting', schema: fittingSchema, record: fitting, nullable: ['to'] },
+  { what: 'a site rule', schema: ruleSchema, record: rule, nullable: ['min', 'max', 'fixed', 'endedAt', 'endedBy', 'endReason'] },
+  { what: 'a waiver', schema: waiverSchema, record: waiver, nullable: ['endedAt', 'endedBy', 'endReason'] },
+  { what: 'a file in the tray', schema: trayItem, record: tray, nullable: ['name', 'serial', 'model', 'capturedAt', 'siteId', 'guess'] },
+  { what: 'an event of a life', schema: lifeEvent, record: life, nullable: ['versionId', 'number', 'text', 'serial', 'changes', 'occasion', 'sightings'] },
+  { what: 'a run of judging', schema: runSchema, record: run, nullable: ['problem'] },
+  { what: 'a problem', schema: problemSchema, record: problem, nullable: ['current'], optional: ['errors', 'more', 'tray', 'current'] },
+  { what: 'an entry of the log', schema: logEntrySchema, record: { seq: 1, leaf: '{}', hash }, nullable: [] },
+  { what: 'the health of the vault', schema: healthSchema, record: { status: 'ok', schema: 2, writable: true }, nullable: [] },
+  { what: 'what went to the tray', schema: uploadTray, record: { tray: 1, problem: 'not-fitted', detail: 'x' }, nullable: [] },
 ]
 
-describe.each(records)('%s as it travels', (_what, schema, record, nullable, optional = []) => {
+describe.each(records)('$what as it travels', ({ schema, record, nullable, optional = [] }) => {
   it('is taken whole, as JSON too', () => {
     expect(schema.safeParse(record).error?.issues ?? []).toEqual([])
     expect(schema.parse(JSON.parse(JSON.stringify(record)))).toEqual(record)

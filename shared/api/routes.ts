@@ -6,6 +6,7 @@ import * as letters from './letters'
 import * as people from './people'
 import * as places from './places'
 import * as uploads from './uploads'
+import * as values from './values'
 import * as versions from './versions'
 import * as waivers from './waivers'
 
@@ -88,6 +89,7 @@ export const routes = {
   'GET /api/axes/:id/versions/:number': { may: all, token: 'read', scope: 'axis', params: versions.versionRef, answers: { 200: versions.versionOne }, says: 'One version by its number on the axis.' },
   'GET /api/axes/:id/life': { may: all, token: 'read', scope: 'axis', params: axisParams, query: listQuery, answers: { 200: pageOf(versions.lifeEvent) }, says: 'What happened to it, newest first.' },
   'GET /api/axes/:id/as-of': { may: all, token: 'read', scope: 'axis', params: axisParams, query: versions.asOfQuery, answers: { 200: z.object({ version: versions.versionSchema.nullable() }) }, says: 'What was current at an instant, by what had been received by then.' },
+  'GET /api/axes/:id/values': { may: all, token: 'read', scope: 'axis', params: axisParams, query: values.valuesQuery, answers: { 200: values.valuesAnswer }, says: 'One value over all versions: each step with who and why, what was known-good, and the bounds of rules and nameplate.' },
   'GET /api/axes/:id/fittings': { may: all, token: 'read', scope: 'axis', params: axisParams, answers: { 200: z.object({ items: z.array(places.fittingSchema) }) }, says: 'Which units sat there, newest first.' },
   'POST /api/axes/:id/known-good/none': { may: planner, scope: 'axis', sign: true, params: axisParams, body: versions.knownGoodBody, answers: { 201: created }, says: 'Says that no version is known-good; signed.' },
   'POST /api/axes/:id/kit': { may: uploaders, scope: 'axis', params: axisParams, body: versions.kitBody, answers: { 200: 'file' }, says: 'The known-good values as a file for a replacement unit; logged.' },

@@ -7,7 +7,7 @@ import { axisRef, idSchema, idText, instantSchema, passwordSchema, reasonSchema 
 export const occasions = ['commissioning', 'routine', 'as-found', 'as-left', 'read-back'] as const
 export type Occasion = (typeof occasions)[number]
 
-const extraValue = z.union([z.number(), z.boolean(), z.string(), z.object({ value: z.number(), unit: z.string() })])
+export const extraValue = z.union([z.number(), z.boolean(), z.string(), z.object({ value: z.number(), unit: z.string() })])
 /** The canonical content as settings-format has it; a stored content is never re-validated on the way out. */
 export const contentSchema = z.object({
   axisKind: z.enum(axisKinds), extra: z.record(z.string(), extraValue), moves: z.array(z.record(z.string(), z.union([z.number(), z.string()]))),

@@ -44,7 +44,7 @@ describe('another site’s', () => {
     const password = 'a ladder leans on the quince'
     await post('/api/people', { name: 'Ada Lindqvist', email: 'ada@larkfield.example', roles: ['planner', 'technician', 'auditor'], siteIds: [other], password }, administrator)
     const ada = await server.signIn({ email: 'ada@larkfield.example', password })
-    for (const path of [`/api/sites/${siteId}`, `/api/axes/${axisId}`, '/api/axes/tag:LID-02.Z', `/api/axes/${axisId}/versions`, `/api/axes/${axisId}/life`, `/api/axes/${axisId}/fittings`]) {
+    for (const path of [`/api/sites/${siteId}`, `/api/axes/${axisId}`, '/api/axes/tag:LID-02.Z', `/api/axes/${axisId}/versions`, `/api/axes/${axisId}/life`, `/api/axes/${axisId}/values?field=thrustLimit`, `/api/axes/${axisId}/fittings`]) {
       const { status, json } = await server.call('GET', path, { as: ada })
       expect([path, status, json.code]).toEqual([path, 404, 'not-found'])
     }

@@ -3,6 +3,7 @@ import { axisLists } from '../../../server/database/axis-state/list'
 import { judgingQueries } from '../../../server/database/judging/queries'
 import { knownGoodQueries } from '../../../server/database/known-good/queries'
 import { lifeQueries } from '../../../server/database/life/queries'
+import { valueQueries } from '../../../server/database/value/queries'
 import { versionQueries } from '../../../server/database/version/queries'
 import { waiverQueries } from '../../../server/database/waiver/queries'
 import { openPlant, type Plant } from '../../support/vault-plant'
@@ -37,6 +38,7 @@ beforeAll(() => {
       SELECT i % 400 + 1, i / 400 + 1, i % 400 + 1, 1, i, 'routine', ${at}, ${at}, 1, 'e', 'c', 's', 'M-1', 0, 0, 0, '{}' FROM n;
     ${upTo(20000)} INSERT INTO check_set (version_id, rule_set, judged_at, judged, not_applicable, stop, warn, note, unknown) SELECT i, '1', ${at}, '[]', '[]', 0, 0, 0, 0 FROM n;
     ${upTo(40000)} INSERT INTO sighting (axis_id, version_id, upload_sha256, captured_at, received_at, person_id, peer) SELECT i % 400 + 1, i / 2 + 1, printf('%064d', i), ${at}, ${at}, 1, '' FROM n;
+    ${upTo(60000)} INSERT INTO change (version_id, seq, section, field, at, weight, watched) SELECT i / 3 + 1, i % 3, 'setup', 'field' || (i % 40), '/', 'harm', 1 FROM n;
     ${upTo(2000)} INSERT INTO known_good (axis_id, version_id, at, by_person, meaning) SELECT i % 400 + 1, i, ${at}, 1, 'approved' FROM n;
     ${upTo(2000)} INSERT INTO waiver (axis_id, rule, places, covers, reason, until_at, given_at, given_by) SELECT i % 400 + 1, 'travel-span', '[]', '{}', 'r', ${at}, ${at}, i % 60 + 1 FROM n;
     ${upTo(500)} INSERT INTO waiver_end SELECT i * 4, ${at}, 1, 'r' FROM n;
@@ -50,13 +52,13 @@ afterAll(() => plant.close())
 interface Statement { readonly getQuery: () => { sql: string, params: unknown[] } }
 
 /** Nothing of a fleet's size is sorted here: the events, waivers and rules of one axis, the channels of one serial. */
-const maySort = ['life.voids', 'life.takenOut', 'judging.channels', 'judging.rules', 'waivers.notEnded']
+const maySort = ['life.voids', 'life.takenOut', 'judging.channels', 'judging.rules', 'values.rules', 'waivers.notEnded']
 /** The board takes every axis. */
 const mayScan = ['axes.all']
 
 function statements(): [name: string, plan: string[]][] {
   const { db, sqlite } = plant.vault
-  const sets = { versions: versionQueries(db), life: lifeQueries(db), judging: judgingQueries(db), marks: knownGoodQueries(db), axes: axisLists(db), waivers: waiverQueries(db) }
+  const sets = { versions: versionQueries(db), life: lifeQueries(db), judging: judgingQueries(db), marks: knownGoodQueries(db), axes: axisLists(db), waivers: waiverQueries(db), values: valueQueries(db) }
   return Object.entries(sets).flatMap(([set, queries]) => Object.entries(queries).filter(([, query]) => typeof query !== 'function').map(([key, query]): [string, string[]] => {
     const { sql, params } = (query as unknown as Statement).getQuery()
     const plan = sqlite.prepare(`EXPLAIN QUERY PLAN ${sql}`).all(...params.map(param => (typeof param === 'object' ? 1 : param))) as { detail: string }[]

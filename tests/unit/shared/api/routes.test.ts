@@ -50,6 +50,7 @@ const doors = `
   GET /api/axes/:id/versions/:number     | tpaA      | read   | axis    |
   GET /api/axes/:id/life                 | tpaA      | read   | axis    |
   GET /api/axes/:id/as-of                | tpaA      | read   | axis    |
+  GET /api/axes/:id/values               | tpaA      | read   | axis    |
   GET /api/axes/:id/fittings             | tpaA      | read   | axis    |
   POST /api/axes/:id/known-good/none     | p         |        | axis    | signed
   POST /api/axes/:id/kit                 | tp        |        | axis    |

@@ -408,4 +408,4 @@ WHEN NEW.seq IS NOT (SELECT ifnull(max(seq), -1) + 1 FROM log)
 BEGIN SELECT RAISE(ABORT, 'gap: a log entry takes the number after the newest'); END;
 ${immutable('log', ['seq'])}`
 
-export const first = { number: 1, name: 'first', sql: [people, places, terms, evidence].join('\n') } as const
+export const first = { name: 'first', sql: [people, places, terms, evidence].join('\n') } as const

@@ -27,4 +27,4 @@ ${immutable('waiver_end', ['waiver_id'])}
 -- Of the newest judgement of the current version: level and end of each result that a waiver covers, JSON.
 ALTER TABLE axis_state ADD COLUMN accepted TEXT NOT NULL DEFAULT '[]';`
 
-export const second = { number: 2, name: 'waivers', sql: waivers } as const
+export const second = { name: 'waivers', sql: waivers } as const

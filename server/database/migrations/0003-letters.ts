@@ -52,4 +52,4 @@ CREATE TABLE watch (
 CREATE INDEX watch_place ON watch (scope, scope_id, person_id);
 ${undeletable('letter', 'letter_choice', 'watch')}`
 
-export const third = { number: 3, name: 'letters', sql: letters } as const
+export const lettersStep = { name: 'letters', sql: letters } as const

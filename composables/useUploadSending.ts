@@ -39,7 +39,7 @@ export function useUploadSending(people: () => readonly NamedPerson[]) {
 
   async function attempt(file: ListedFile, key: string, query: ReturnType<typeof fieldsFor>): Promise<Outcome> {
     try {
-      return outcomeOf(await api.post('/api/uploads', file.bytes, { query, key, headers: { 'content-type': types[formOf(file.bytes)] } }))
+      return outcomeOf(await api.post('/api/uploads', file.bytes, { query, key, headers: { 'content-type': types[file.layout ? 'csv' : formOf(file.bytes)] } }))
     }
     catch (failure) {
       return refusedOutcome(toProblem(failure).problem)

@@ -1,6 +1,5 @@
 import type { z } from 'zod'
 import type { changeSchema, checkSchema, contentSchema, judgedSchema, waivableCheck } from '#shared/api/versions'
-import type { CheckResult } from '#shared/checks/types'
 import type { FieldChange } from '#shared/diff/types'
 import type { Content } from '#shared/settings/types'
 import type { StoredJudgement } from '#server/database/check/queries'
@@ -17,10 +16,6 @@ export type WireJudged = z.infer<typeof judgedSchema>
 
 export function changesOnWire(changes: readonly FieldChange[]): WireChange[] {
   return changes.map(({ affects, ...change }) => (affects ? { ...change, affects: [...affects] } : change))
-}
-
-export function checksOnWire(results: readonly CheckResult[]): WireCheck[] {
-  return results as WireCheck[]
 }
 
 export function contentOnWire({ axisKind, extra, moves, setup, zones }: Content): WireContent {

@@ -23,9 +23,10 @@ export const linePatch = z.strictObject({ ...rev, name: nameSchema.optional(), s
 export const lineSchema = z.object({ id: idSchema, rev: z.int(), siteId: idSchema, name: z.string() })
 export type Line = z.infer<typeof lineSchema>
 
-export const machineBody = z.strictObject({ lineId: idSchema, name: nameSchema })
-export const machinePatch = z.strictObject({ ...rev, name: nameSchema.optional(), lineId: idSchema.optional() })
-export const machineSchema = z.object({ id: idSchema, rev: z.int(), lineId: idSchema, name: z.string() })
+const controllerScanMs = z.number().positive().max(60_000).nullable().describe('how often its controller looks at the drives and sets their inputs, in ms; null = not known')
+export const machineBody = z.strictObject({ lineId: idSchema, name: nameSchema, controllerScanMs: controllerScanMs.optional() })
+export const machinePatch = z.strictObject({ ...rev, name: nameSchema.optional(), lineId: idSchema.optional(), controllerScanMs: controllerScanMs.optional() })
+export const machineSchema = z.object({ id: idSchema, rev: z.int(), lineId: idSchema, name: z.string(), controllerScanMs })
 export type Machine = z.infer<typeof machineSchema>
 
 export const dutySchema = z.strictObject({ moves: z.array(z.int().min(0).max(1023)).min(1).max(256), cycleTime: z.number().positive().describe('ms') })

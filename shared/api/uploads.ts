@@ -3,7 +3,8 @@ import { nameplateSchema } from '../settings/nameplate'
 import { axisFlags, axisKinds } from '../settings/types'
 import { axisRef, idSchema, instantSchema, problemErrorSchema, reasonSchema, serialSchema } from './common'
 import { dutySchema } from './places'
-import { changeSchema, checkSchema, contentSchema, judgedSchema, occasions, renumberingSchema, versionSchema } from './versions'
+import { changeSchema, contentSchema, judgedSchema, occasions, renumberingSchema, versionSchema, waivableCheck } from './versions'
+import { waiverSchema } from './waivers'
 
 /** What stands beside the file: in the query of a raw body, or as fields of a multipart one. An empty value is the same as none. */
 export const uploadFields = z.strictObject({
@@ -24,7 +25,7 @@ export const normalisedSchema = z.object({
 })
 /** 201: a new version. */
 export const uploadStored = z.object({
-  version: versionSchema, changes: z.array(changeSchema), renumbered: z.array(renumberingSchema), checks: z.array(checkSchema), judged: judgedSchema,
+  version: versionSchema, changes: z.array(changeSchema), renumbered: z.array(renumberingSchema), checks: z.array(waivableCheck), judged: judgedSchema,
   findings: z.array(z.object({ id: idSchema, state: z.string() })), normalised: normalisedSchema,
 })
 export type UploadStored = z.infer<typeof uploadStored>
@@ -36,7 +37,7 @@ export const trayProblems = ['serial-unknown', 'not-fitted', 'axis-kind', 'unrea
 export const uploadTray = z.object({ tray: idSchema, problem: z.enum(trayProblems), detail: z.string() })
 
 export const previewAnswer = z.discriminatedUnion('outcome', [
-  z.object({ outcome: z.literal('version'), axis: z.object({ id: idSchema, tag: z.string() }), number: z.int(), late: z.boolean(), clockDoubtful: z.boolean(), changes: z.array(changeSchema), renumbered: z.array(renumberingSchema), checks: z.array(checkSchema), normalised: normalisedSchema }),
+  z.object({ outcome: z.literal('version'), axis: z.object({ id: idSchema, tag: z.string() }), number: z.int(), late: z.boolean(), clockDoubtful: z.boolean(), changes: z.array(changeSchema), renumbered: z.array(renumberingSchema), checks: z.array(waivableCheck), normalised: normalisedSchema }),
   z.object({ outcome: z.literal('sighting'), axis: z.object({ id: idSchema, tag: z.string() }), number: z.int() }),
   z.object({ outcome: z.literal('tray'), problem: z.enum(trayProblems), detail: z.string() }),
 ])
@@ -47,9 +48,13 @@ export const judgingContext = z.object({
   /** null: the serial is not registered, or the unit is not fitted. */
   problem: z.enum(['serial-unknown', 'not-fitted']).nullable(),
   registered: z.object({ model: z.string(), serial: z.string() }).nullable(),
-  axis: z.object({ id: idSchema, tag: z.string(), role: z.string(), axisKind: z.enum(axisKinds), flags: z.array(z.enum(axisFlags)), watched: z.array(z.string()), duty: dutySchema.nullable() }).nullable(),
+  axis: z.object({ id: idSchema, tag: z.string(), role: z.string(), axisKind: z.enum(axisKinds), flags: z.array(z.enum(axisFlags)), watched: z.array(z.string()), duty: dutySchema.nullable(), controllerScanMs: z.number().nullable() }).nullable(),
   current: z.object({ versionId: idSchema, number: z.int(), contentHash: z.string(), content: contentSchema, capturedAt: instantSchema, sightings: z.int() }).nullable(),
   knownGood: z.object({ versionId: idSchema, number: z.int(), firmware: z.string().nullable(), content: contentSchema }).nullable(),
+  /** What the axis held on the unit before, where that is of another model. */
+  broughtFrom: z.object({ content: contentSchema, forceBase: z.number().nullable(), rescaled: z.boolean() }).nullable(),
+  /** Those that nobody took back, that which holds longest first. */
+  waivers: z.array(waiverSchema),
   nextNumber: z.int(),
   nameplate: nameplateSchema.nullable(),
   rules: z.array(z.object({ id: idSchema, scope: z.enum(['site', 'machine', 'axis']), field: z.string(), min: z.number().optional(), max: z.number().optional(), fixed: z.union([z.number(), z.string(), z.boolean()]).optional(), reason: z.string() })),

@@ -21,14 +21,15 @@ export const forceRescale: Rule = {
   reason: 'A percentage brought from a unit with another rated thrust presses with another force, though it reads the same.',
   formula: 'force = % / 100 · base; where the base of the unit that the values come from differs from the base here: stop, until the rescaling is confirmed',
   levels: ['stop', 'unknown'],
-  applies: ({ content, broughtFrom }) => broughtFrom !== undefined && !broughtFrom.rescaled && percentsOf(content).length > 0,
+  applies: input => input.broughtFrom !== undefined && !input.broughtFrom.rescaled && unchanged(input).length > 0,
   judge,
 }
 
-function judge({ content, nameplate, broughtFrom }: JudgeInput): CheckResult[] {
+function judge(input: JudgeInput): CheckResult[] {
+  const { content, nameplate, broughtFrom } = input
   const from = broughtFrom?.forceBase
   const to = forceBaseOf(nameplate)
-  const percents = percentsOf(content)
+  const percents = unchanged(input)
   const at = percents.map(percent => percent.at)
   if (from === undefined || to === undefined) {
     const here = nameplate?.forceBase === 'peak-thrust' ? 'nameplate.peakThrust' : 'nameplate.ratedThrust'
@@ -44,6 +45,14 @@ function judge({ content, nameplate, broughtFrom }: JudgeInput): CheckResult[] {
 
 function force(percent: number, base: number): string {
   return about(percent / 100 * base)
+}
+
+/** The percentages that stand as they did on the other unit, rows by their numbers. */
+function unchanged({ content, broughtFrom }: JudgeInput): Percent[] {
+  const here = percentsOf(content)
+  if (!broughtFrom?.content) return here
+  const there = new Map(percentsOf(broughtFrom.content).map(({ words, value }) => [words, value]))
+  return here.filter(({ words, value }) => there.get(words) === value)
 }
 
 /** Every value of a content that is a percentage of the force base, moves by their numbers. */

@@ -53,8 +53,10 @@ export interface JudgeInput {
   readonly knownGood?: { readonly firmware?: string, readonly content: Content }
   /** The version that this one follows, if any. */
   readonly before?: { readonly content: Content }
-  /** Percentages that come from another unit unchanged. */
+  /** Percentages that come from another unit. */
   readonly broughtFrom?: {
+    /** What it held; percentages that differ from it here were worked out anew. Absent: all of them are as they came. */
+    readonly content?: Content
     /** What 100 % means there, in N or N·m. */
     readonly forceBase?: number
     /** Somebody said that the percentages are right for the force base here. */

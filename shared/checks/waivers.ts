@@ -57,8 +57,8 @@ function covers({ rule, covers: covered }: Waiver, result: CheckResult, content:
   return wanted?.level === 'stop' && covered.level === 'stop' && inOneOrder(wanted.values) === inOneOrder(covered.values)
 }
 
-/** What a result hangs on besides the values at its places: the rule of the site that it breaks, and where a row starts. */
-const hangsOn = ['ruleId', 'start']
+/** What a result hangs on besides the values at its places: the rule of the site that it breaks, where a row starts, and the forces that percentages meant and mean. */
+const hangsOn = ['ruleId', 'start', 'from', 'to']
 
 /** The values at the places of a result; of one without places those that it told. */
 function coveredValues({ at, values }: CheckResult, content: Content): Covered[] {

@@ -4,17 +4,16 @@ import type { Content, ExtraValue } from '../settings/types'
 import { Exact } from '../units/exact'
 import { effectiveInMove, effectiveInSetup } from './defaults'
 import { diffContents } from './diff'
-import { toleranceOf, type Steps } from './tolerance'
+import { toleranceOf } from './tolerance'
 import type { Comparison, DiffContext, FieldChange } from './types'
 
 export interface CompareOptions {
-  /** Of the unit that was read back; without it every value is compared exactly. */
+  /** Of the unit that was read back, with its entry table; without it every value is compared exactly. */
   readonly nameplate?: Nameplate
   /** Both contents were read from one unit: then homeOffset is compared like the rest. */
   readonly sameUnit: boolean
   /** Setup values to be taught on this swap. */
   readonly taught?: readonly SetupFieldName[]
-  readonly steps?: Steps
   readonly context?: DiffContext
 }
 
@@ -28,7 +27,7 @@ export function compareContents(a: Content, b: Content, options: CompareOptions)
   const differences: Comparison['differences'][number][] = []
   const changes = diffContents(a, b, options.context)
   for (const change of changes) {
-    const tolerance = toleranceOf(change, options.nameplate ?? {}, options.steps ?? {})
+    const tolerance = toleranceOf(change, options.nameplate ?? {})
     if (isSetAside(change, options)) aside.push(change)
     else if (isWithin(change, tolerance, a, b)) within.push({ ...change, tolerance: tolerance.toNumber() })
     else differences.push(tolerance.isZero() ? change : { ...change, tolerance: tolerance.toNumber() })

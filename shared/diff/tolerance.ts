@@ -1,36 +1,37 @@
+import { gridOf } from '../settings/entry-table/grid'
 import { setupField, type UnitByKind } from '../settings/fields'
 import { moveFields, zoneFields, type RowField } from '../settings/move-fields'
 import type { Nameplate } from '../settings/nameplate'
 import { Exact } from '../units/exact'
 import type { FieldChange } from './types'
 
-/** Steps in which a drive stores speeds and accelerations, in canonical units, as its entry table has them. */
-export interface Steps { readonly speed?: number, readonly acceleration?: number }
-
-type Rounding = Pick<Nameplate, 'resolution' | 'shownDigit' | 'truncates'>
+type Rounding = Partial<Pick<Nameplate, 'resolution' | 'shownDigit' | 'truncates' | 'axisKind' | 'entryTable'>>
 
 /**
  * How far a value may be off when it is read back, inclusive. Positions: half a count and half a shown digit. Speeds and
- * accelerations: half a step. A drive that truncates: a whole digit or step. What weighs harm: never more than one shown
- * digit. 0 where nothing is known and for everything that is stored as it is.
+ * accelerations: half a step of the entry table. A drive that truncates, or whose entry is rounded down or up: a whole digit
+ * or step. What weighs harm: never more than one shown digit. 0 where nothing is known and for everything that is stored as
+ * it is.
  */
-export function toleranceOf(change: FieldChange, nameplate: Rounding, steps: Steps): Exact {
-  const part = nameplate.truncates ? 1 : 0.5
+export function toleranceOf(change: FieldChange, nameplate: Rounding): Exact {
   const quantity = quantityOf(change)
-  if (quantity === 'speed') return new Exact(steps.speed ?? 0).times(part)
-  if (quantity === 'acceleration') return new Exact(steps.acceleration ?? 0).times(part)
-  if (quantity !== 'position') return new Exact(0)
-  const { resolution = 0, shownDigit } = nameplate
-  const tolerance = new Exact(resolution).times(0.5).plus(new Exact(shownDigit ?? 0).times(part))
-  return change.weight === 'harm' && shownDigit !== undefined ? Exact.min(tolerance, shownDigit) : tolerance
+  if (quantity === 'position') return ofPosition(change, nameplate)
+  const grid = quantity && gridOf(nameplate, change)
+  if (!grid) return new Exact(0)
+  const tolerance = grid.step.times(nameplate.truncates || grid.cuts ? 1 : 0.5)
+  return change.weight === 'harm' && grid.digit !== undefined ? Exact.min(tolerance, grid.digit) : tolerance
 }
 
-/** What a drive counts in steps of its own; undefined for the rest, angles of mounting among it. */
-function quantityOf({ section, field }: FieldChange): 'position' | 'speed' | 'acceleration' | undefined {
+function ofPosition({ weight }: FieldChange, { resolution = 0, shownDigit, truncates }: Rounding): Exact {
+  const tolerance = new Exact(resolution).times(0.5).plus(new Exact(shownDigit ?? 0).times(truncates ? 1 : 0.5))
+  return weight === 'harm' && shownDigit !== undefined ? Exact.min(tolerance, shownDigit) : tolerance
+}
+
+/** What a drive counts in digits or steps of its own; undefined for the rest, angles of mounting among it. */
+function quantityOf({ section, field }: FieldChange): 'position' | 'rate' | undefined {
   const unit = unitByKind(section, field)
   if (unit?.linear === 'mm' || field === 'modulo') return 'position'
-  if (unit?.linear === 'mm/s') return 'speed'
-  return unit?.linear === 'mm/s²' ? 'acceleration' : undefined
+  return unit?.linear === 'mm/s' || unit?.linear === 'mm/s²' ? 'rate' : undefined
 }
 
 function unitByKind(section: FieldChange['section'], field: string): UnitByKind | undefined {

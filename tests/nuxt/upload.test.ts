@@ -13,9 +13,9 @@ const settings = (serial: string, thrustLimit: number) => JSON.stringify({
 const file = (name: string, text: string) => new File([strToU8(text)], name)
 
 const known: JudgingContext = {
-  problem: null, registered: { model: 'HL40-200V', serial: 'S-1' }, axis: { id: 5, tag: 'CAS-01.Z', role: 'lower', axisKind: 'linear', flags: [], watched: [], duty: null },
+  problem: null, registered: { model: 'HL40-200V', serial: 'S-1' }, axis: { id: 5, tag: 'CAS-01.Z', role: 'lower', axisKind: 'linear', flags: [], watched: [], duty: null, controllerScanMs: null },
   current: { versionId: 80, number: 8, contentHash: 'x', content: contentOf(40), capturedAt: '2026-11-30T08:00:00.000Z', sightings: 3 },
-  knownGood: { versionId: 80, number: 8, firmware: null, content: contentOf(40) }, nextNumber: 9, nameplate: null, rules: [{ id: 1, scope: 'site', field: 'thrustLimit', max: 42, reason: 'lids crack above it' }],
+  knownGood: { versionId: 80, number: 8, firmware: null, content: contentOf(40) }, broughtFrom: null, waivers: [], nextNumber: 9, nameplate: null, rules: [{ id: 1, scope: 'site', field: 'thrustLimit', max: 42, reason: 'lids crack above it' }],
 }
 const unknownSerial: JudgingContext = { ...known, problem: 'serial-unknown', axis: null, current: null, knownGood: null, registered: null, rules: [], nextNumber: 1 }
 

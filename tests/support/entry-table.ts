@@ -64,4 +64,11 @@ export function wholeTable(axisKind: AxisKind, layout: Pick<EntryTable, 'delimit
   }
 }
 
+/** A drive that keeps speeds in steps of one size and accelerations in steps of another, whatever the field. */
+export function steppedTable(speed: number, acceleration: number): EntryTable {
+  const of = (field: string) => /speed/i.test(field) ? { step: speed } : /celeration/.test(field) ? { step: acceleration } : {}
+  const { parameters, zones, moves, ...layout } = wholeTable('linear', { delimiter: ';', decimal: 'point' })
+  return { ...layout, zones, parameters: parameters.map(entry => ({ ...entry, ...of(entry.field) })), moves: moves.map(entry => ({ ...entry, ...of(entry.field) })) }
+}
+
 export const withContent = (file: SettingsFile, { axisKind, setup, zones, moves, extra }: Content): SettingsFile => ({ ...file, axisKind, setup, zones, moves, extra })

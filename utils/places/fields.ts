@@ -21,6 +21,7 @@ export const lineFields: FormField[] = [{ name: 'name', label: 'Name', type: 'te
 export const machineFields = (lines: readonly Line[]): FormField[] => [
   { name: 'name', label: 'Name', type: 'text', needed: true },
   { name: 'lineId', label: 'Line', type: 'choice', as: 'number', needed: true, options: options(lines) },
+  { name: 'controllerScanMs', label: 'Scan of the controller', type: 'number', unit: 'ms', empty: null, help: 'How often it looks at the drives and sets their inputs. Settle times, start pulses and zones are judged by it; empty: not known.' },
 ]
 
 const flagWords: Readonly<Record<AxisFlag, string>> = {

@@ -1,4 +1,5 @@
 import type { JudgingContext } from '#shared/api/uploads'
+import type { WaiverRecord } from '#shared/api/waivers'
 import type { CheckResult } from '#shared/checks/types'
 import type { FieldChange, Renumbering } from '#shared/diff/types'
 import type { FormatError, ReadSettings } from '#shared/settings/types'
@@ -24,7 +25,9 @@ export interface Placed {
   readonly identical: boolean
   readonly changes: readonly FieldChange[]
   readonly renumbered: readonly Renumbering[]
+  /** What stands; what somebody accepted is apart. */
   readonly checks: readonly CheckResult[]
+  readonly accepted: readonly { readonly result: CheckResult, readonly waiver: WaiverRecord }[]
 }
 
 export type Reading
@@ -53,3 +56,4 @@ export const stops = (reading: Placed): readonly CheckResult[] => reading.checks
 /** Version 1 is exempt: there is nothing that it changes. */
 export const wantsReason = (reading: Reading): reading is Placed => reading.state === 'placed' && reading.base !== null && watchedChanges(reading).length > 0
 export const hasStop = (reading: Reading): reading is Placed => reading.state === 'placed' && !reading.identical && stops(reading).length > 0
+export const hasAccepted = (reading: Reading): reading is Placed => reading.state === 'placed' && !reading.identical && reading.accepted.length > 0

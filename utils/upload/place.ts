@@ -1,9 +1,10 @@
 import type { JudgingContext } from '#shared/api/uploads'
 import type { Occasion } from '#shared/api/versions'
-import type { CheckResult } from '#shared/checks/types'
+import type { CheckResult, Judgement } from '#shared/checks/types'
 import type { DiffContext } from '#shared/diff/types'
 import type { Content, ReadSettings } from '#shared/settings/types'
 import { judge } from '#shared/checks/judge'
+import { applyWaivers, type Waiver } from '#shared/checks/waivers'
 import { diffContents } from '#shared/diff/diff'
 import { diffRenumbered } from '#shared/diff/renumber'
 import { canonicalText } from '#shared/settings/canonical'
@@ -20,6 +21,7 @@ export interface Examined {
   readonly read: ReadSettings
   readonly context: JudgingContext
   readonly checks: readonly CheckResult[]
+  readonly accepted: Placed['accepted']
   readonly clockAhead: boolean
 }
 
@@ -29,16 +31,27 @@ const clockSlack = 10 * 60_000
 const contextOf = (axis: KnownAxis, context: JudgingContext): DiffContext =>
   ({ flags: axis.flags, watched: axis.watched, dictionary: context.nameplate?.dictionary })
 
-function checksOf(read: ReadSettings, context: JudgingContext, axis: KnownAxis): readonly CheckResult[] {
-  const { knownGood, current } = context
-  const { axisKind, flags, duty } = axis
+function judged(read: ReadSettings, context: JudgingContext, axis: KnownAxis): Judgement {
+  const { knownGood, current, broughtFrom } = context
+  const { axisKind, flags, duty, controllerScanMs } = axis
   return judge({
-    content: read.content, axis: { axisKind, flags, ...(duty ? { duty } : {}) }, unit: read.file.unit, rules: context.rules,
+    content: read.content, axis: { axisKind, flags, ...(duty ? { duty } : {}), ...(controllerScanMs ? { controllerScan: controllerScanMs } : {}) }, unit: read.file.unit, rules: context.rules,
     ...(context.registered ? { registered: context.registered } : {}),
     ...(context.nameplate ? { nameplate: context.nameplate } : {}),
     ...(current ? { before: { content: storedContent(current.content) } } : {}),
     ...(knownGood ? { knownGood: { content: storedContent(knownGood.content), ...(knownGood.firmware ? { firmware: knownGood.firmware } : {}) } } : {}),
-  }).results
+    ...(broughtFrom ? { broughtFrom: { content: storedContent(broughtFrom.content), rescaled: broughtFrom.rescaled, ...(broughtFrom.forceBase === null ? {} : { forceBase: broughtFrom.forceBase }) } } : {}),
+  })
+}
+
+/** What stands, and what the waivers of the axis cover now. */
+function checksOf(read: ReadSettings, context: JudgingContext, axis: KnownAxis, now: Date): Pick<Examined, 'checks' | 'accepted'> {
+  const waivers = context.waivers.map(({ id, axisId, rule, value, until }): Waiver => ({ id, axisId, rule, covers: value, until: Date.parse(until) }))
+  const { judgement, accepted } = applyWaivers(judged(read, context, axis), read.content, axis.id, waivers, now.getTime())
+  return {
+    checks: judgement.results,
+    accepted: accepted.flatMap(({ result, waiver }) => context.waivers.filter(({ id }) => id === waiver.id).map(record => ({ result, waiver: record }))),
+  }
 }
 
 /** A file without an axis goes to the tray; else it is judged by the rules in force. */
@@ -49,7 +62,7 @@ export function examine(id: number, name: string, read: ReadSettings, context: J
   const settled = withoutReadings(read.file, context.nameplate?.dictionary)
   const kept = settled === read.file ? read : { ...read, file: settled, content: contentOf(settled) }
   const clockAhead = Date.parse(read.file.exportedAt) - now.getTime() > clockSlack
-  return { id, name, read: kept, context, checks: checksOf(kept, context, axis), clockAhead }
+  return { id, name, read: kept, context, ...checksOf(kept, context, axis, now), clockAhead }
 }
 
 interface Base { readonly content: Content, readonly number: number, readonly versionId: number | null, readonly name: string | null, readonly capturedAt: number }
@@ -64,7 +77,7 @@ function placed(file: Examined, axis: KnownAxis, base: Base | null, number: numb
   const diffContext = contextOf(axis, context)
   const knownGood = context.knownGood ? storedContent(context.knownGood.content) : null
   return {
-    state: 'placed', read, axis, number, checks: file.checks, clockAhead: file.clockAhead, knownGood: context.knownGood,
+    state: 'placed', read, axis, number, checks: file.checks, accepted: file.accepted, clockAhead: file.clockAhead, knownGood: context.knownGood,
     base: base && { number: base.number, versionId: base.versionId, name: base.name },
     sightings: context.current?.sightings ?? 0,
     late: base !== null && !file.clockAhead && Date.parse(read.file.exportedAt) < base.capturedAt,

@@ -14,8 +14,13 @@ function signWouldHelp(bytes: Uint8Array, errors: readonly FormatError[]): boole
   })
 }
 
+/** Whether it is another layout than ours rather than ours with faults in it. */
+function mayBeList(name: string, [first]: readonly FormatError[]): boolean {
+  return first?.code === 'header' || first?.code === 'csv-syntax' || (first?.code === 'json-syntax' && !/\.json$/i.test(name))
+}
+
 /** The file read, or why it cannot be. */
-export function readFile({ bytes, decimal, layout }: Pick<ListedFile, 'bytes' | 'decimal' | 'layout'>): ReadSettings | Reading & { state: 'unreadable' } {
+export function readFile({ name, bytes, decimal, layout }: Pick<ListedFile, 'name' | 'bytes' | 'decimal' | 'layout'>): ReadSettings | Reading & { state: 'unreadable' } {
   if (layout) {
     const { plate, serial, capturedAt } = layout
     const read = readEntryFile(bytes, plate, { ...(serial === undefined ? {} : { serial }), ...(capturedAt === undefined ? {} : { exportedAt: capturedAt }) })
@@ -23,5 +28,5 @@ export function readFile({ bytes, decimal, layout }: Pick<ListedFile, 'bytes' | 
   }
   const outcome = readSettings(bytes, decimal ? { decimal } : {})
   if (outcome.ok) return outcome.value
-  return { state: 'unreadable', errors: outcome.errors, more: outcome.more, asksSign: !decimal && signWouldHelp(bytes, outcome.errors), asksLayout: outcome.errors[0]?.code === 'header' }
+  return { state: 'unreadable', errors: outcome.errors, more: outcome.more, asksSign: !decimal && signWouldHelp(bytes, outcome.errors), asksLayout: mayBeList(name, outcome.errors) }
 }

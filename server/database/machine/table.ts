@@ -1,4 +1,4 @@
-import { integer, sqliteTable, text } from 'drizzle-orm/sqlite-core'
+import { integer, real, sqliteTable, text } from 'drizzle-orm/sqlite-core'
 import { id, instant } from '../columns'
 
 export const machine = sqliteTable('machine', {
@@ -7,5 +7,6 @@ export const machine = sqliteTable('machine', {
   lineId: integer('line_id').notNull(),
   name: text('name').notNull(),
   madeAt: instant('made_at').notNull(),
+  controllerScanMs: real('controller_scan_ms'),
 })
 export type MachineRow = typeof machine.$inferSelect

@@ -1,4 +1,4 @@
-import { and, desc, eq, getTableColumns, isNull, lt, lte, max, sql } from 'drizzle-orm'
+import { and, desc, eq, getTableColumns, isNull, lt, lte, max, ne, sql } from 'drizzle-orm'
 import { alias } from 'drizzle-orm/sqlite-core'
 import { axis } from '../axis/table'
 import { axisState } from '../axis-state/table'
@@ -67,6 +67,9 @@ export const versionQueries = prepared((db) => {
     base: standing().where(and(eq(version.axisId, place('axisId')), notVoid, lte(version.orderAt, place('at')))).orderBy(...newestFirst).limit(1).prepare(),
     /** The one before a given one in order; called again with its own key it walks back to the first. */
     before: standing().where(and(eq(version.axisId, place('axisId')), notVoid, sql`(${version.orderAt}, ${version.number}) < (${place('at')}, ${place('number')})`))
+      .orderBy(...newestFirst).limit(1).prepare(),
+    /** The last one up to a given one in order that was read from another unit than this. */
+    ofAnotherUnit: standing().where(and(eq(version.axisId, place('axisId')), notVoid, ne(version.unitId, place('unitId')), sql`(${version.orderAt}, ${version.number}) <= (${place('at')}, ${place('number')})`))
       .orderBy(...newestFirst).limit(1).prepare(),
     /** What was current at an instant by what had been received by then; what was voided later was not void yet. */
     asOf: db.select({ id: version.id }).from(version).leftJoin(versionVoid, and(eq(versionVoid.versionId, version.id), lte(versionVoid.at, place('at'))))

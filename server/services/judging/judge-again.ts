@@ -3,17 +3,16 @@ import type { judgedAgain } from '#shared/api/judging'
 import { judge } from '#shared/checks/judge'
 import type { CheckResult, Judgement } from '#shared/checks/types'
 import { Refusal } from '#shared/errors/refusal'
-import type { Content, SettingsFile } from '#shared/settings/types'
+import type { SettingsFile } from '#shared/settings/types'
 import type { Actor } from '#server/database/actor'
 import { countByLevel, insertJudgement, readJudgement, type StoredJudgement } from '#server/database/check/queries'
 import type { Vault, Write } from '#server/database/client'
-import { readContent } from '#server/database/content/queries'
 import { judgingQueries } from '#server/database/judging/queries'
 import type { VaultDb } from '#server/database/prepared'
 import type { VersionRow } from '#server/database/schema'
 import { unitRows } from '#server/database/unit/queries'
 import { refreshAxisState } from '../axes/axis-state'
-import { judgeInputOf, readAgainst, type ReadAgainst } from '../uploads/read-against'
+import { beforeOf, judgeInputOf, readAgainst, type ReadAgainst } from '../uploads/read-against'
 import { fileOf, versionRow } from '../versions/read-version'
 import { waivedOnWire } from '../waivers/accepted'
 import { judgedOnWire } from '../wire'
@@ -29,12 +28,7 @@ export function judgeToday(db: VaultDb, version: VersionRow): Today {
   const against = readAgainst(db, place, unit)
   const current = against.current?.version.id === version.id ? against.current.content : undefined
   const file = fileOf(db, version, current)
-  return { against, file, judgement: judge(judgeInputOf(against, file, file.unit, contentBefore(db, version))) }
-}
-
-/** What stood before it on the axis: some rules judge the step, not the state. */
-function contentBefore(db: VaultDb, { baseId }: VersionRow): Content | null {
-  return baseId === null ? null : readContent(db, versionRow(db, baseId).contentId)
+  return { against, file, judgement: judge(judgeInputOf(against, file, file.unit, beforeOf(db, against, version.baseId === null ? null : versionRow(db, version.baseId)))) }
 }
 
 /** Whether it says something else than the judgement that is kept. */

@@ -1,4 +1,5 @@
 import { judge } from '#shared/checks/judge'
+import type { Waiver } from '#shared/checks/waivers'
 import { forceBaseOf } from '#shared/motion/force-base'
 import { Refusal } from '#shared/errors/refusal'
 import { serialToBeWritten } from '#shared/settings/identity'
@@ -7,6 +8,7 @@ import { judgingQueries, type AxisPlace } from '#server/database/judging/queries
 import type { VaultDb } from '#server/database/prepared'
 import type { UnitRow } from '#server/database/schema'
 import { judgeInputOf, readAgainst } from '../uploads/read-against'
+import { waived } from '../waivers/accepted'
 import { differingBases, holdsForces, withoutTaught, type KitSource, type KitUnit } from './kit-file'
 
 /** What goes into the kit, for whom, and what has to be said beside it. */
@@ -27,13 +29,13 @@ export function asItStands({ content, model }: KitSource, { channel }: UnitIdent
 }
 
 /** For a registered unit: taught values left out, judged against its nameplate. Percentages that would mean other newtons are refused. */
-export function fitToUnit(db: VaultDb, place: AxisPlace, source: KitSource, row: UnitRow): Fitted {
+export function fitToUnit(db: VaultDb, place: AxisPlace, source: KitSource, row: UnitRow, now: string): Fitted {
   const nameplate = judgingQueries(db).nameplate.get({ model: row.model })?.nameplate
   const unit: KitUnit = { identity: identityOf(row), ...(nameplate ? { nameplate } : {}) }
   if (nameplate && nameplate.axisKind !== place.axis.axisKind) throw new Refusal('axis-kind', `${row.model} is a ${nameplate.axisKind} unit, ${place.axis.tag} a ${place.axis.axisKind} axis.`)
   assertSameForces(source, unit)
   const { content, left } = withoutTaught(source, unit)
-  return { content, left, identity: unit.identity, warnings: [...forceWarning(source, unit), ...stopWarning(db, place, row, content)] }
+  return { content, left, identity: unit.identity, warnings: [...forceWarning(source, unit), ...stopWarnings(db, place, row, content, now)] }
 }
 
 function identityOf({ serial, channel, model, firmware, actuatorSerial, actuatorModel }: UnitRow): UnitIdentity {
@@ -56,8 +58,15 @@ function forceWarning(source: KitSource, { identity, nameplate }: KitUnit): stri
   return models.length === 0 ? [] : [`What 100 % of force means is not on the nameplate of ${models.join(' and ')}: check it before these percentages are written.`]
 }
 
-function stopWarning(db: VaultDb, place: AxisPlace, row: UnitRow, content: Content): string[] {
-  const { results } = judge(judgeInputOf(readAgainst(db, place, row), content, { model: row.model, ...(row.firmware === null ? {} : { firmware: row.firmware }) }, null))
-  const stops = results.filter(({ level }) => level === 'stop')
-  return stops.length === 0 ? [] : [`${stops.length} stop ${stops.length === 1 ? 'check' : 'checks'} on this unit: ${stops.map(({ message }) => message).join(' ')}`]
+/** Stops on this unit, those that somebody accepted for the axis apart. */
+function stopWarnings(db: VaultDb, place: AxisPlace, row: UnitRow, content: Content, now: string): string[] {
+  const judged = judge(judgeInputOf(readAgainst(db, place, row), content, { model: row.model, ...(row.firmware === null ? {} : { firmware: row.firmware }) }))
+  const { judgement: { results }, accepted } = waived(db, place.axis.id, judged, () => content, now)
+  const standing = results.filter(({ level }) => level === 'stop').map(({ message }) => message)
+  const taken = accepted.filter(({ result }) => result.level === 'stop')
+  const until = (waiver: Waiver) => waiver.until === undefined ? '' : ` until ${new Date(waiver.until).toISOString().slice(0, 10)}`
+  return [
+    ...(standing.length === 0 ? [] : [`${standing.length} stop ${standing.length === 1 ? 'check' : 'checks'} on this unit: ${standing.join(' ')}`]),
+    ...taken.map(({ result, waiver }) => `Accepted${until(waiver)}: ${result.message}`),
+  ]
 }

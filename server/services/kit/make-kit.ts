@@ -33,7 +33,7 @@ export function makeKit(vault: Vault, actor: PersonActor, axisId: number, { seri
     const { version, mark } = toRestore(db, axisId)
     const source = kitSource(db, version)
     const registered = registeredUnit(db, actor, serial, version.file.unit.channel)
-    const fitted = registered ? fitToUnit(db, place, source, registered) : asItStands(source, version.file.unit, serial)
+    const fitted = registered ? fitToUnit(db, place, source, registered, write.now) : asItStands(source, version.file.unit, serial)
     const note = kitNote({ tag: place.axis.tag, number: version.number, mark, left: fitted.left, warnings: fitted.warnings })
     const file = kitFile(fitted.content, fitted.identity, note, write.now, actor.name)
     write.log({ act: 'kit-taken', id: axisId, state: { axisId, versionId: version.id, serial: serial ?? null, unitId: registered?.id ?? null, form, released: mark !== null, left: [...fitted.left] } })

@@ -32,7 +32,7 @@ export function keepInTray(db: VaultDb, write: Write, sent: SentFile, fields: Up
   refuseWhenFull(db, siteId, sent.bytes.length)
   const { unit } = kept.ingested?.file ?? {}
   const row = {
-    uploadId: storeUploadBytes(db, write, sent),
+    uploadId: storeUploadBytes(db, write, sent, fields),
     problem: kept.problem, detail: kept.detail, errors: [...kept.errors], more: kept.more, fields, siteId,
     serial: unit?.serial ?? null, channel: unit?.channel ?? null, model: unit?.model ?? null,
     capturedAt: kept.ingested ? new Date(millisecondsOf(fields.capturedAt ?? kept.ingested.file.exportedAt)).toISOString() : null,

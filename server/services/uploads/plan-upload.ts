@@ -10,14 +10,13 @@ import { readEntryFile } from '#shared/settings/entry-table/read-entry'
 import { readSettings } from '#shared/settings/read'
 import type { FormatError, ReadOutcome, Weight } from '#shared/settings/types'
 import type { Actor } from '#server/database/actor'
-import { readContent } from '#server/database/content/queries'
 import { judgingQueries } from '#server/database/judging/queries'
 import type { VaultDb } from '#server/database/prepared'
 import type { NameplateRow, VersionRow } from '#server/database/schema'
 import { versionQueries } from '#server/database/version/queries'
 import { ingest, type Ingested } from './ingest'
 import { placeFile, type PlacedFile, type UnplacedFile } from './place-file'
-import { diffContextOf, judgeInputOf, readAgainst, type ReadAgainst } from './read-against'
+import { beforeOf, diffContextOf, judgeInputOf, readAgainst, type ReadAgainst } from './read-against'
 
 export interface PlannedVersion {
   readonly outcome: 'version'
@@ -79,10 +78,10 @@ function planVersion(db: VaultDb, placed: PlacedFile, against: ReadAgainst, inge
   const current = against.current?.version
   const late = current !== undefined && at < current.orderAt
   const base = late ? queries.base.get({ axisId, at }) ?? null : current ?? null
-  const before = base === null ? null : base.id === current?.id && against.current ? against.current.content : readContent(db, base.contentId)
+  const before = beforeOf(db, against, base)
   const context = diffContextOf(against)
-  const changes = before ? diffContents(before, ingested.content, context) : []
-  const told = before && changes.length > 1 ? diffRenumbered(before, ingested.content, context) : undefined
+  const changes = before.content ? diffContents(before.content, ingested.content, context) : []
+  const told = before.content && changes.length > 1 ? diffRenumbered(before.content, ingested.content, context) : undefined
   return {
     outcome: 'version', placed, against, ingested, late, base, changes,
     number: (queries.highestNumber.get({ axisId })?.number ?? 0) + 1,

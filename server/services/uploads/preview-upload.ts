@@ -3,7 +3,8 @@ import type { previewAnswer, UploadFields } from '#shared/api/uploads'
 import type { Actor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
 import { Refusal } from '#shared/errors/refusal'
-import { changesOnWire, checksOnWire } from '../wire'
+import { waivedOnWire } from '../waivers/accepted'
+import { changesOnWire } from '../wire'
 import { planUpload, readSent } from './plan-upload'
 import { normalisedOnWire } from './store-version'
 import type { SentFile } from './store-parts'
@@ -19,7 +20,7 @@ export function previewUpload(vault: Vault, actor: Actor, sent: SentFile, fields
   if (plan.outcome === 'sighting') return { outcome: 'sighting', axis: { id, tag }, number: plan.current.number }
   return {
     outcome: 'version', axis: { id, tag }, number: plan.number, late: plan.late, clockDoubtful: plan.placed.times.clockDoubtful,
-    changes: changesOnWire(plan.changes), renumbered: [...plan.renumbered], checks: checksOnWire(plan.judgement.results),
+    changes: changesOnWire(plan.changes), renumbered: [...plan.renumbered], checks: waivedOnWire(vault.db, id, plan.judgement, () => plan.ingested.content, vault.now()),
     normalised: normalisedOnWire(plan.ingested.normalised),
   }
 }

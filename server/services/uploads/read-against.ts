@@ -2,12 +2,13 @@ import type { JudgeInput, SiteRule } from '#shared/checks/types'
 import type { DiffContext } from '#shared/diff/types'
 import { contentOfText } from '#shared/settings/stored-content'
 import type { Content, UnitIdentity } from '#shared/settings/types'
-import { readContentText } from '#server/database/content/queries'
+import { readContent, readContentText } from '#server/database/content/queries'
 import { judgingQueries, type AxisPlace } from '#server/database/judging/queries'
 import { knownGoodQueries } from '#server/database/known-good/queries'
 import type { VaultDb } from '#server/database/prepared'
 import type { NameplateRow, UnitRow, VersionRow } from '#server/database/schema'
 import { versionQueries } from '#server/database/version/queries'
+import { broughtFrom } from '../forces/brought-from'
 
 /** `text` is the canonical text of `content`, `hash` that of the text. */
 export interface HeldVersion { readonly version: VersionRow, readonly content: Content, readonly text: string, readonly hash: string }
@@ -55,14 +56,27 @@ export function diffContextOf({ place, nameplate }: Pick<ReadAgainst, 'place' | 
   return { flags: place.axis.flags, watched: place.site.watched, ...(dictionary ? { dictionary } : {}) }
 }
 
-export function judgeInputOf(against: ReadAgainst, content: Content, { model, firmware }: Pick<UnitIdentity, 'model' | 'firmware'>, before: Content | null): JudgeInput {
+/** What stood on the axis before the content that is judged; some rules judge the step, not the state. */
+export interface Before { readonly content?: Content, readonly forces?: JudgeInput['broughtFrom'] }
+const none: Before = {}
+
+/** What a content read from the unit is a step from. */
+export function beforeOf(db: VaultDb, { place, unit, current }: Pick<ReadAgainst, 'place' | 'unit' | 'current'>, base: VersionRow | null): Before {
+  if (base === null) return none
+  const forces = broughtFrom(db, place.axis.id, unit, base)
+  return { content: base.id === current?.version.id ? current.content : readContent(db, base.contentId), ...(forces ? { forces } : {}) }
+}
+
+export function judgeInputOf(against: ReadAgainst, content: Content, { model, firmware }: Pick<UnitIdentity, 'model' | 'firmware'>, before: Before = none): JudgeInput {
   const { place, unit, nameplate, rules, knownGood } = against
+  const { controllerScanMs } = place.machine
   return {
     content, rules,
-    axis: { axisKind: place.axis.axisKind, flags: place.axis.flags, ...(place.axis.duty ? { duty: place.axis.duty } : {}) },
+    axis: { axisKind: place.axis.axisKind, flags: place.axis.flags, ...(place.axis.duty ? { duty: place.axis.duty } : {}), ...(controllerScanMs === null ? {} : { controllerScan: controllerScanMs }) },
     unit: { model, ...(firmware === undefined ? {} : { firmware }) },
     registered: { model: unit.model },
-    ...(before ? { before: { content: before } } : {}),
+    ...(before.content ? { before: { content: before.content } } : {}),
+    ...(before.forces ? { broughtFrom: before.forces } : {}),
     ...(nameplate ? { nameplate: nameplate.nameplate } : {}),
     ...(knownGood ? { knownGood: { content: knownGood.content, ...(knownGood.version.firmware === null ? {} : { firmware: knownGood.version.firmware }) } } : {}),
   }

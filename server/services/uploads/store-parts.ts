@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto'
+import type { UploadFields } from '#shared/api/uploads'
 import { Refusal } from '#shared/errors/refusal'
 import { formOf } from '#shared/settings/read'
 import { personOf, tokenOf } from '#server/database/actor'
@@ -19,11 +20,13 @@ export interface Source {
   /** The id of the stored bytes; stores them where they are not there yet. */
   readonly uploadId: () => number
 }
+/** A drive’s own list is delimited text, whatever its first sign is. */
+type Laid = Pick<UploadFields, 'layout'>
 export interface Sender { readonly personId: number, readonly tokenId: number | null, readonly peer: string }
 
 /** A file that is coming in with this write. */
-export function sourceOf(db: VaultDb, write: Write, sent: SentFile): Source {
-  return { sha256: fileHash(sent), name: sent.name, sender: senderOf(write), uploadId: () => storeUploadBytes(db, write, sent) }
+export function sourceOf(db: VaultDb, write: Write, sent: SentFile, fields: Laid): Source {
+  return { sha256: fileHash(sent), name: sent.name, sender: senderOf(write), uploadId: () => storeUploadBytes(db, write, sent, fields) }
 }
 
 const fileHash = ({ bytes }: SentFile) => createHash('sha256').update(bytes).digest('hex')
@@ -36,8 +39,8 @@ function senderOf({ actor }: Write): Sender {
 }
 
 /** Keeps the bytes for good and logs them by their hash. Answers the upload's id. */
-export function storeUploadBytes(db: VaultDb, write: Write, sent: SentFile): number {
-  const row = { sha256: fileHash(sent), size: sent.bytes.length, form: formOf(sent.bytes), name: sent.name, receivedAt: write.now, ...senderOf(write) }
+export function storeUploadBytes(db: VaultDb, write: Write, sent: SentFile, { layout }: Laid): number {
+  const row = { sha256: fileHash(sent), size: sent.bytes.length, form: layout === undefined ? formOf(sent.bytes) : 'csv', name: sent.name, receivedAt: write.now, ...senderOf(write) }
   const id = insertUpload(db, row, sent.bytes)
   write.log({ act: 'upload-received', id, state: { id, ...row } })
   return id

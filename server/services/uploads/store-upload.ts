@@ -24,8 +24,8 @@ export function storeUpload(vault: Vault, actor: Actor, sent: SentFile, fields: 
   return vault.write(actor, (write): UploadOutcome => {
     const { db } = vault
     const plan = planUpload(db, actor, read, fields, Date.parse(write.now))
-    if (plan.outcome === 'version') return { outcome: 'version', answer: storeVersion(db, write, sourceOf(db, write, sent), fields, plan) }
-    if (plan.outcome === 'sighting') return { outcome: 'sighting', answer: storeSighting(db, write, sourceOf(db, write, sent), fields, plan) }
+    if (plan.outcome === 'version') return { outcome: 'version', answer: storeVersion(db, write, sourceOf(db, write, sent, fields), fields, plan) }
+    if (plan.outcome === 'sighting') return { outcome: 'sighting', answer: storeSighting(db, write, sourceOf(db, write, sent, fields), fields, plan) }
     if (plan.outcome === 'unplaced') {
       const { problem, detail, siteId } = plan.unplaced
       const tray = keepInTray(db, write, sent, fields, { problem, detail, siteId, errors: [], more: 0, ingested: plan.ingested })

@@ -9,7 +9,8 @@ import { sightingQueries } from '#server/database/sighting/queries'
 import { versionQueries } from '#server/database/version/queries'
 import { refreshAxisState } from '../axes/axis-state'
 import { versionSummary } from '../versions/summary'
-import { changesOnWire, checksOnWire } from '../wire'
+import { waivedOnWire } from '../waivers/accepted'
+import { changesOnWire } from '../wire'
 import { axisNamed } from './axis-named'
 import { engineVersion } from './ingest'
 import { layoutOf, type PlannedSighting, type PlannedVersion } from './plan-upload'
@@ -24,7 +25,7 @@ export function storeVersion(db: VaultDb, write: Write, source: Source, fields: 
   insertJudgement(db, id, judgement, against.nameplate?.id ?? null, write.now)
   refreshAxisState(db, axisId)
   return {
-    version: versionSummary(db, id), changes: changesOnWire(changes), renumbered: [...plan.renumbered], checks: checksOnWire(judgement.results),
+    version: versionSummary(db, id), changes: changesOnWire(changes), renumbered: [...plan.renumbered], checks: waivedOnWire(db, axisId, judgement, () => ingested.content, write.now),
     judged: {
       ruleSet: judgement.ruleSet, nameplateRevision: against.nameplate?.revision ?? null, judgedAt: write.now,
       judged: [...judgement.judged], notApplicable: [...judgement.notApplicable],

@@ -57,6 +57,6 @@ function namedWaiver({ db }: Vault, id: number): NamedWaiver {
   return found
 }
 
-function waiverOnWire({ id, axisId, rule, places, covers, reason, untilAt, giver, givenAt, endedAt, endedBy, endReason }: NamedWaiver): WaiverRecord {
+export function waiverOnWire({ id, axisId, rule, places, covers, reason, untilAt, giver, givenAt, endedAt, endedBy, endReason }: NamedWaiver): WaiverRecord {
   return { id, axisId, rule, at: places, value: covers as WaiverRecord['value'], reason, until: untilAt, by: giver, givenAt, endedAt, endedBy, endReason }
 }

@@ -6,7 +6,7 @@ import { registerNameplate, reviseNameplate } from '../../../server/services/nam
 import { previewUpload } from '../../../server/services/uploads/preview-upload'
 import { storeUpload } from '../../../server/services/uploads/store-upload'
 import { versionFile } from '../../../server/services/versions/version-file'
-import { versionRow } from '../../../server/services/versions/read-version'
+import { readVersion, versionRow } from '../../../server/services/versions/read-version'
 import type { UploadFields } from '../../../shared/api/uploads'
 import { readEntryFile } from '../../../shared/settings/entry-table/read-entry'
 import { liftFile, liftLines, liftPlate } from '../../support/entry-table'
@@ -93,6 +93,16 @@ describe('an upload in the layout of a model', () => {
     plant.now += minute
     const assigned = assignFromTray(plant.vault, runa, outcome.answer.tray, { axisId: plant.axis('LID-03.Z') })
     expect(assigned).toMatchObject({ version: { serial: 'LT10-26-0002', axisTag: 'LID-03.Z' } })
+  })
+
+  it.each(['[Backup of drive]', '{ drive list', ' [values'])('is a CSV for good, though it begins with %s', (head) => {
+    reviseNameplate(plant.vault, runa, plateId, { rev: 1, entryTable: { ...liftPlate.entryTable, header: [head, 'No.;Parameter;Value;Unit'] } })
+    const bytes = list([head, ...liftLines.slice(1)])
+    const id = stored(bytes)
+    const { mediaType, bytes: kept } = versionFile(plant.vault, id, 'original')
+    expect({ mediaType, kept: textOf(kept), form: readVersion(plant.vault, id).upload.form }).toEqual({ mediaType: 'text/csv', kept: textOf(bytes), form: 'csv' })
+    expect(send(list([head, ...liftLines.slice(1, -1), '9;;?;1;1;1;-;-;-'])).outcome).toBe('unreadable')
+    expect(plant.vault.sqlite.prepare('SELECT DISTINCT form FROM upload').pluck().all()).toEqual(['csv'])
   })
 
   it.each(['HL99', 'LT20'])('is refused where %s has no table to read by', (layout) => {

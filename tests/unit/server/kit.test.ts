@@ -3,9 +3,13 @@ import type { PersonActor } from '../../../server/database/actor'
 import { makeKit } from '../../../server/services/kit/make-kit'
 import { markKnownGood } from '../../../server/services/known-good/mark'
 import { storeUpload } from '../../../server/services/uploads/store-upload'
+import { readVersion } from '../../../server/services/versions/read-version'
+import { giveWaiver } from '../../../server/services/waivers/waivers'
+import type { WaiverRecord } from '../../../shared/api/waivers'
+import { coverOf } from '../../../shared/checks/waivers'
 import { readSettings } from '../../../shared/settings/read'
 import type { Nameplate } from '../../../shared/settings/nameplate'
-import type { SettingsFile } from '../../../shared/settings/types'
+import type { Content, SettingsFile } from '../../../shared/settings/types'
 import { day, iso, minute, openPlant, settingsFile, start, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
@@ -49,6 +53,19 @@ describe('a kit', () => {
     expect(file.setup).toEqual({ thrustLimit: 38, homingMethod: 'absolute-encoder', positionGain: 40, nodeAddress: 7, softLimitMin: 0, softLimitMax: 180 })
     expect(file.note).toBe('Kit for LID-02.Z: version 1, known-good by Runa Haldersen on 2026-03-01. To be taught on the new unit, left out here: homeOffset.')
     expect(file).toMatchObject({ exportedAt: iso(plant.now), exportedBy: 'Tobias Achterberg', readings: {} })
+  })
+
+  it('tells stops that somebody accepted apart from those that stand', () => {
+    plant.nameplate(plate('HL40-200V', { maxSpeed: 100 }))
+    store({ ...setup, softLimitMax: 300, jogSpeed: 120 })
+    plant.unit('SN-0002', { firmware: '2.4' })
+    const stops = () => read(take('SN-0002').bytes).note?.replace(/^.*left out here: homeOffset\. /, '')
+    expect(stops()).toMatch(/^2 stop checks on this unit: /)
+    const check = readVersion(plant.vault, 1).checks.find(({ rule }) => rule === 'travel-span')
+    if (!check) throw new Error('no stop to accept')
+    const value = coverOf(check, { axisKind: 'linear', extra: {}, moves: [], zones: [], setup: { ...setup, softLimitMax: 300 } } as Content) as WaiverRecord['value']
+    giveWaiver(plant.vault, runa, { axisId, rule: check.rule, at: check.at, value, reason: 'long bracket', until: iso(start + 30 * day) })
+    expect(stops()).toMatch(/^1 stop check on this unit: .*jog.* Accepted until 2026-03-31: .*300 mm/i)
   })
 
   it('of another firmware leaves the tuning to be taught too', () => {

@@ -4,7 +4,7 @@ import { parseLeaf } from '../../../shared/trail/entry'
 import { listLog } from '../../../server/services/log/log'
 import { changeAxis, registerAxis } from '../../../server/services/places/axes'
 import { changeLine, listLines, registerLine } from '../../../server/services/places/lines'
-import { changeMachine, listMachines } from '../../../server/services/places/machines'
+import { changeMachine, listMachines, registerMachine } from '../../../server/services/places/machines'
 import { changeSite, listSitesPage, readSite, registerSite } from '../../../server/services/places/sites'
 import { codeOf } from '../../support/codes'
 import { personActor, smallPlant } from '../../support/plant'
@@ -26,6 +26,17 @@ describe('places', () => {
     const site = changeSite(vault, plant.planner, plant.siteId, { rev: 1, fourEyes: false, watched: ['dwell'] })
     expect(site).toMatchObject({ rev: 2, fourEyes: false, watched: ['dwell'], name: 'Larkfield Preserves' })
     expect(newest()).toMatchObject({ act: 'site-changed', subject: { kind: 'site', id: plant.siteId }, state: { rev: 2, fourEyes: false, releaseHours: 24 }, actor: { kind: 'person', id: plant.planner.id } })
+  })
+
+  it('hold the scan of the controller with the machine: known, changed, and no longer known', () => {
+    const scan = (controllerScanMs: number | null, rev: number) => changeMachine(vault, plant.planner, plant.machineId, { rev, controllerScanMs })
+    expect(listMachines(vault, plant.planner, {}).items[0]).toMatchObject({ controllerScanMs: null })
+    expect(scan(2.5, 1)).toMatchObject({ rev: 2, controllerScanMs: 2.5 })
+    expect(newest()).toMatchObject({ act: 'machine-changed', state: { controllerScanMs: 2.5 } })
+    expect(changeMachine(vault, plant.planner, plant.machineId, { rev: 2, name: 'Lid press B' })).toMatchObject({ controllerScanMs: 2.5 })
+    expect(scan(null, 3)).toMatchObject({ controllerScanMs: null })
+    expect(registerMachine(vault, plant.planner, { lineId: plant.lineId, name: 'Lid press C', controllerScanMs: 10 }).id).toBeGreaterThan(plant.machineId)
+    expect(newest()).toMatchObject({ act: 'machine-registered', state: { controllerScanMs: 10 } })
   })
 
   it('refuse an edit without a rev, and a stale one with the present state', () => {

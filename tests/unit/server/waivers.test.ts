@@ -3,6 +3,8 @@ import type { PersonActor } from '../../../server/database/actor'
 import { readAxis } from '../../../server/services/axes/read-axis'
 import { readBoard } from '../../../server/services/board/board'
 import { markKnownGood } from '../../../server/services/known-good/mark'
+import { judgingContext } from '../../../server/services/uploads/judging-context'
+import { previewUpload } from '../../../server/services/uploads/preview-upload'
 import { storeUpload } from '../../../server/services/uploads/store-upload'
 import { readVersion } from '../../../server/services/versions/read-version'
 import { endWaiver, giveWaiver, listWaivers } from '../../../server/services/waivers/waivers'
@@ -93,6 +95,21 @@ describe('a waiver of a stop', () => {
     const worse = store({ ...tooLong, softLimitMax: 301 })
     expect(stopsOnBoard()).toBe(1)
     expect(codeOf(() => mark(worse))).toBe('stop-checks')
+  })
+
+  it('is told in the answer to an upload, in its preview, and to who reads a file against the axis', () => {
+    const id = give(store(tooLong))
+    const waivedIn = (checks: readonly { rule: string, waived: { id: number } | null }[]) => checks.find(({ rule }) => rule === 'travel-span')?.waived?.id
+    const sent = (setup: object) => ({ bytes: settingsFile({ setup }), name: null })
+    const preview = previewUpload(plant.vault, tobias, sent({ ...tooLong, jogSpeed: 10 }), {})
+    const outcome = storeUpload(plant.vault, tobias, sent({ ...tooLong, jogSpeed: 10 }), {})
+    expect(preview.outcome === 'version' && waivedIn(preview.checks)).toBe(id)
+    expect(outcome.outcome === 'version' && waivedIn(outcome.answer.checks)).toBe(id)
+    const worse = previewUpload(plant.vault, tobias, sent({ ...tooLong, softLimitMax: 301 }), {})
+    expect(worse.outcome === 'version' && worse.checks.find(({ rule }) => rule === 'travel-span')).toMatchObject({ level: 'stop', waived: null })
+    expect(judgingContext(plant.vault, tobias, { serial: 'SN-0001' }).waivers.map(waiver => [waiver.id, waiver.rule, waiver.by])).toEqual([[id, 'travel-span', 'Runa Haldersen']])
+    endWaiver(plant.vault, runa, id, { reason: 'bracket fitted' })
+    expect(judgingContext(plant.vault, tobias, { serial: 'SN-0001' }).waivers).toEqual([])
   })
 
   it('of two the one that holds longest is told and counted', () => {

@@ -21,6 +21,16 @@ describe('force-rescale', () => {
     expect(forceRescale.judge(input)).toMatchObject([{ at: ['/setup/thrustLimit', '/moves/0/forceLimit'], values: { from: 640, to: 800, factor: 0.8 } }])
   })
 
+  it('leaves out what was worked out anew since, and is silent where all of it was', () => {
+    const was = linear({ thrustLimit: 38 }, [press(2, 100, 150)])
+    const now = (thrustLimit: number, forceLimit: number) => forceRescale.judge(brought({ forceBase: 640, content: was, rescaled: false }, { ratedThrust: 800 }, linear({ thrustLimit }, [press(1, 100, 150), press(2, 100, 150, { forceLimit })])))
+    expect(now(38, 24).map(({ at }) => at)).toEqual([['/setup/thrustLimit']])
+    // Move 2 now stands second in the table and still is move 2.
+    expect(now(30.4, 30).map(({ at }) => at)).toEqual([['/moves/1/forceLimit']])
+    const all = brought({ forceBase: 640, content: was, rescaled: false }, { ratedThrust: 800 }, linear({ thrustLimit: 30.4 }))
+    expect(told(forceRescale, all)).toEqual(['not applicable'])
+  })
+
   it('takes the smallest difference for one: bases are compared as they stand', () => {
     expect(told(forceRescale, brought({ forceBase: 800.001, rescaled: false }))).toHaveLength(1)
   })

@@ -7,6 +7,7 @@ import type { Nameplate } from '../../../../shared/settings/nameplate'
 import type { Content, Move, Setup } from '../../../../shared/settings/types'
 import { emptyContent } from '../../../../shared/settings/content'
 import { arbitraryContent } from '../../../support/arbitrary-content'
+import { steppedTable } from '../../../support/entry-table'
 
 const plate = (values: Partial<Nameplate>): Nameplate => ({ model: 'HL40-200V', axisKind: 'linear', stroke: 200, ...values })
 const linear = emptyContent('linear')
@@ -83,13 +84,13 @@ describe('positions', () => {
 })
 
 describe('speeds and accelerations', () => {
-  const steps = { speed: 1, acceleration: 10 }
+  const nameplate = plate({ entryTable: steppedTable(1, 10) })
   it('may be off by half a step of the entry table, a whole one where the drive truncates', () => {
-    expect(ofSetup({ jogSpeed: 30 }, { jogSpeed: 30.5 }, { steps }).verdict).toBe('same')
-    expect(ofSetup({ jogSpeed: 30 }, { jogSpeed: 30.500001 }, { steps }).verdict).toBe('differs')
-    expect(ofSetup({ quickStopDeceleration: 8000 }, { quickStopDeceleration: 8005 }, { steps }).verdict).toBe('same')
-    expect(ofSetup({ quickStopDeceleration: 8000 }, { quickStopDeceleration: 8010 }, { steps }).verdict).toBe('differs')
-    expect(ofSetup({ quickStopDeceleration: 8000 }, { quickStopDeceleration: 8010 }, { steps, nameplate: plate({ truncates: true }) }).verdict).toBe('same')
+    expect(ofSetup({ jogSpeed: 30 }, { jogSpeed: 30.5 }, { nameplate }).verdict).toBe('same')
+    expect(ofSetup({ jogSpeed: 30 }, { jogSpeed: 30.500001 }, { nameplate }).verdict).toBe('differs')
+    expect(ofSetup({ quickStopDeceleration: 8000 }, { quickStopDeceleration: 8005 }, { nameplate }).verdict).toBe('same')
+    expect(ofSetup({ quickStopDeceleration: 8000 }, { quickStopDeceleration: 8010 }, { nameplate }).verdict).toBe('differs')
+    expect(ofSetup({ quickStopDeceleration: 8000 }, { quickStopDeceleration: 8010 }, { nameplate: { ...nameplate, truncates: true } }).verdict).toBe('same')
   })
   it('are exact without a step, whatever the digits of positions', () => {
     expect(ofSetup({ jogSpeed: 30 }, { jogSpeed: 30.01 }, { nameplate: plate({ resolution: 0.1, shownDigit: 0.1 }) }).verdict).toBe('differs')
@@ -97,19 +98,18 @@ describe('speeds and accelerations', () => {
 })
 
 describe('everything else', () => {
-  const nameplate = plate({ resolution: 1, shownDigit: 1 })
-  const steps = { speed: 10, acceleration: 100 }
+  const nameplate = plate({ resolution: 1, shownDigit: 1, entryTable: steppedTable(10, 100) })
   it.each([
     ['percentages', { thrustLimit: 80 }, { thrustLimit: 80.1 }], ['times', { startPulseTime: 12 }, { startPulseTime: 12.1 }],
     ['choices', { inputSwitching: 'p' }, { inputSwitching: 'n' }], ['flags', { brakeFitted: true }, { brakeFitted: false }],
     ['the drive’s own number', { velocityGain: 2 }, { velocityGain: 2.0000001 }], ['a value that is gone', { jogSpeed: 30 }, {}],
   ] as const)('is exact: %s', (_, before, after) => {
-    expect(ofSetup(before, after, { nameplate, steps }).verdict).toBe('differs')
+    expect(ofSetup(before, after, { nameplate }).verdict).toBe('differs')
   })
 
   it('is exact: followers, kinds, rows and the drive’s own values', () => {
     const moves = (...rows: Move[]): Content => ({ ...linear, moves: rows })
-    const options = { sameUnit: true, nameplate, steps }
+    const options = { sameUnit: true, nameplate }
     expect(compareContents(moves({ ...row, next: 1 }), moves({ ...row, next: 2 }), options).verdict).toBe('differs')
     expect(compareContents(moves(row), moves({ ...row, kind: 'relative' }), options).verdict).toBe('differs')
     expect(compareContents(moves(row), moves(), options).differences).toHaveLength(4)
@@ -121,7 +121,7 @@ describe('everything else', () => {
     const moves = (deceleration?: number): Content => ({ ...linear, moves: [deceleration === undefined ? row : { ...row, deceleration }] })
     expect(compareContents(moves(), moves(2000), { sameUnit: true })).toMatchObject({ verdict: 'same', within: [{ field: 'deceleration', tolerance: 0 }] })
     expect(compareContents(moves(2000), moves(), { sameUnit: true }).verdict).toBe('same')
-    expect(compareContents(moves(), moves(2004), { sameUnit: true, steps }).verdict).toBe('same')
+    expect(compareContents(moves(), moves(2004), { sameUnit: true, nameplate }).verdict).toBe('same')
     expect(compareContents(moves(), moves(2004), { sameUnit: true }).verdict).toBe('differs')
     expect(ofSetup({ softLimitMax: 198 }, { softLimitMax: 198, softLimitsActive: true }).verdict).toBe('same')
   })

@@ -9,9 +9,9 @@ const current = content({ thrustLimit: 40, homeOffset: 1 })
 const now = new Date('2026-12-01T08:10:00Z')
 
 const context = (over: Partial<JudgingContext> = {}): JudgingContext => ({
-  problem: null, registered: { model: 'HL40-200V', serial: 'HL40-25-00914' }, axis: { id: 5, tag: 'CAS-01.Z', role: 'lower', axisKind: 'linear', flags: [], watched: [] },
+  problem: null, registered: { model: 'HL40-200V', serial: 'HL40-25-00914' }, axis: { id: 5, tag: 'CAS-01.Z', role: 'lower', axisKind: 'linear', flags: [], watched: [], duty: null, controllerScanMs: null },
   current: { versionId: 80, number: 8, contentHash: 'x', content: { ...current, moves: [] }, capturedAt: '2026-11-30T08:00:00.000Z', sightings: 3 },
-  knownGood: { versionId: 70, number: 7, firmware: null, content: { ...current, moves: [] } }, nextNumber: 9, nameplate: null, rules: [], ...over,
+  knownGood: { versionId: 70, number: 7, firmware: null, content: { ...current, moves: [] } }, broughtFrom: null, waivers: [], nextNumber: 9, nameplate: null, rules: [], ...over,
 })
 
 const file = (id: number, setup: Content['setup'], exportedAt = '2026-12-01T08:00:00Z', over: Partial<JudgingContext> = {}) => {
@@ -54,6 +54,39 @@ describe('a file of an axis', () => {
   it('is judged by the rules of the vault', () => {
     const rules: JudgingContext['rules'] = [{ id: 3, scope: 'site', field: 'thrustLimit', max: 42, reason: 'lids crack' }]
     expect(one(1, { thrustLimit: 44 }, undefined, { rules })?.checks).toContainEqual(expect.objectContaining({ rule: 'site-rule', level: 'stop' }))
+  })
+})
+
+describe('what the vault says besides', () => {
+  const one = (setup: Content['setup'], over: Partial<JudgingContext>) => placeAxis([examined(1, setup, undefined, over)], 'routine').get(1)
+  const rules: JudgingContext['rules'] = [{ id: 3, scope: 'site', field: 'thrustLimit', max: 42, reason: 'lids crack' }]
+  const waiver = (thrustLimit: number, until = '2026-12-02T00:00:00.000Z'): JudgingContext['waivers'][number] => ({
+    id: 4, axisId: 5, rule: 'site-rule', at: ['/setup/thrustLimit'], reason: 'thick lids', until, by: 'Runa Haldersen', givenAt: '2026-11-01T00:00:00.000Z', endedAt: null, endedBy: null, endReason: null,
+    value: { level: 'stop', values: [{ place: '/setup/thrustLimit', value: thrustLimit }, { place: 'ruleId', value: 3 }] },
+  })
+  const stopsOf = (setup: Content['setup'], held: JudgingContext['waivers'][number]) => {
+    const reading = one(setup, { rules, waivers: [held] })
+    return [reading?.checks.filter(({ level }) => level === 'stop').map(({ rule }) => rule), reading?.accepted.map(({ result, waiver: by }) => [result.rule, by.by])]
+  }
+
+  it('parts a stop that somebody accepted from those that stand, for its value and until its end', () => {
+    expect(stopsOf({ thrustLimit: 44 }, waiver(44))).toEqual([[], [['site-rule', 'Runa Haldersen']]])
+    expect(stopsOf({ thrustLimit: 45 }, waiver(44))).toEqual([['site-rule'], []])
+    expect(stopsOf({ thrustLimit: 44 }, waiver(44, now.toISOString()))).toEqual([['site-rule'], []])
+  })
+
+  it('goes by the controller’s scan of the machine', () => {
+    const nameplate: JudgingContext['nameplate'] = { model: 'HL40-200V', axisKind: 'linear', stroke: 200, inputFilterTime: 2 }
+    const timing = (controllerScanMs: number | null) => one({ startPulseTime: 8 }, { nameplate, axis: { ...context().axis, controllerScanMs } as JudgingContext['axis'] })?.checks.filter(({ rule, level }) => rule === 'start-timing' && level === 'warn')
+    expect(timing(null)).toEqual([])
+    // 2 ms of filter and 10 ms of scan: 12 ms, 4 more than the pulse.
+    expect(timing(10)).toMatchObject([{ values: { value: 8, least: 12 } }])
+  })
+
+  it('stops percentages that stand as on the unit before, where 100 % meant another force', () => {
+    const nameplate: JudgingContext['nameplate'] = { model: 'HL40-200V', axisKind: 'linear', stroke: 200, ratedThrust: 800 }
+    const stop = (thrustLimit: number, rescaled: boolean) => one({ thrustLimit }, { nameplate, broughtFrom: { content: { ...current, moves: [] }, forceBase: 640, rescaled } })?.checks.filter(({ rule }) => rule === 'force-rescale').map(({ level }) => level)
+    expect([stop(40, false), stop(32, false), stop(40, true)]).toEqual([['stop'], [], []])
   })
 })
 

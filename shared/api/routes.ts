@@ -3,6 +3,7 @@ import * as board from './board'
 import { axisParams, created, idParams, listQuery, pageOf, roles, type Role } from './common'
 import * as judging from './judging'
 import * as letters from './letters'
+import * as neighbours from './neighbours'
 import * as people from './people'
 import * as places from './places'
 import * as uploads from './uploads'
@@ -79,6 +80,7 @@ export const routes = {
   'GET /api/machines': { may: all, token: 'read', query: places.placeQuery, answers: { 200: pageOf(places.machineSchema) }, says: 'Machines.' },
   'POST /api/machines': { may: planner, body: places.machineBody, answers: { 201: created }, says: 'Registers a machine.' },
   'GET /api/machines/:id': { may: all, token: 'read', scope: 'machine', params: idParams, answers: { 200: places.machineSchema }, says: 'One machine.' },
+  'GET /api/machines/:id/neighbours': { may: all, token: 'read', scope: 'machine', params: idParams, answers: { 200: neighbours.neighboursAnswer }, says: 'What its axes are held against as they stand now: sister axes of the site, and who shares their buses.' },
   'PATCH /api/machines/:id': { may: planner, scope: 'machine', params: idParams, body: places.machinePatch, answers: { 200: places.machineSchema }, says: 'Changes a machine.' },
 
   'GET /api/axes': { may: all, token: 'read', query: places.placeQuery, answers: { 200: pageOf(versions.axisSchema) }, says: 'Axes with their state.' },

@@ -1,28 +1,38 @@
 import { mountSuspended, registerEndpoint } from '@nuxt/test-utils/runtime'
 import { flushPromises } from '@vue/test-utils'
-import { createError, getQuery } from 'h3'
+import { createError } from 'h3'
 import { beforeEach, describe, expect, it } from 'vitest'
 import MachinePage from '~/pages/machines/[id].vue'
+import { neighboursAnswer, type Neighbours } from '#shared/api/neighbours'
 import type { Axis, VersionOne } from '#shared/api/versions'
-import { axis, before, nameplate, versionAnswer } from '../support/axis-answers'
+import { axis, before, versionAnswer } from '../support/axis-answers'
 
 const thrustOf: readonly number[] = [38, 38, 55, 38, 38, 38]
 const sisters: readonly Axis[] = thrustOf.map((_, index) => ({
   ...axis, id: index + 1, tag: `LID-0${index + 1}.Z`, machine: { id: index + 1, name: `LID-0${index + 1}` }, current: axis.current && { ...axis.current, versionId: 100 + index },
 }))
-const versionOf = (index: number): VersionOne => versionAnswer(15, { ...before, setup: { ...before.setup, thrustLimit: thrustOf[index] ?? 38, nodeAddress: index === 4 ? 21 : 21 + index } }, { id: 100 + index })
-const fitted = sisters.map(one => ({ ...one, unit: one.unit && { ...one.unit, serial: `HL40-24-0080${one.id}` } }))
-let broken = false
-registerEndpoint('/api/machines/3', () => ({ id: 3, rev: 1, lineId: 1, name: 'LID-03' }))
-registerEndpoint('/api/axes', (event) => {
-  const query = getQuery(event)
-  if (query.machineId !== undefined) return { items: fitted.filter(one => one.machine.id === Number(query.machineId)), next: null }
-  if (broken) throw createError({ statusCode: 503 })
-  // Two pages, as a large site has.
-  return query.cursor ? { items: fitted.slice(4), next: null } : { items: fitted.slice(0, 4), next: 'more' }
+const versionOf = (index: number): VersionOne => versionAnswer(15, { ...before, setup: { ...before.setup, thrustLimit: thrustOf[index] ?? 38 } }, { id: 100 + index })
+const stop = { at: ['/setup/nodeAddress'], values: {}, rule: 'address-twice', level: 'stop', message: 'LID-01.Z and LID-05.Z answer to one address on this bus: 21.', axes: ['LID-01.Z', 'LID-05.Z'] } as const
+const warn = { at: ['/setup/thrustLimit'], values: {}, rule: 'sister-outlier', level: 'warn', message: 'LID-03.Z: thrust limit is 55 %, while 5 sister axes have 38 %.', axes: ['LID-03.Z'] } as const
+const neighbours = (of = sisters.length): Neighbours => neighboursAnswer.parse({
+  sisters: [{
+    role: 'seat lid', model: 'HL40-200V', of, axes: sisters.map(({ id, tag, machine }) => ({ id, tag, machineId: machine.id })), results: [warn], more: 0,
+    rows: [
+      { key: 'thrustLimit', words: 'thrust limit', same: false, texts: thrustOf.map(value => `${value} %`), odd: [2] },
+      { key: 'jogSpeed', words: 'jog speed', same: true, texts: thrustOf.map(() => '20 mm/s'), odd: [] },
+    ],
+  }],
+  buses: [{ bus: 'bus 1', of: 6, results: [stop], more: 0 }],
 })
+let broken = false
+let of = sisters.length
+registerEndpoint('/api/machines/3', () => ({ id: 3, rev: 1, lineId: 1, name: 'LID-03', controllerScanMs: null }))
+registerEndpoint('/api/machines/3/neighbours', () => {
+  if (broken) throw createError({ statusCode: 503 })
+  return neighbours(of)
+})
+registerEndpoint('/api/axes', () => ({ items: sisters.filter(one => one.machine.id === 3), next: null }))
 for (const index of thrustOf.keys()) registerEndpoint(`/api/versions/${100 + index}`, () => versionOf(index))
-registerEndpoint('/api/judging-context', () => ({ problem: null, registered: null, axis: null, current: null, knownGood: null, nextNumber: 16, nameplate, rules: [] }))
 
 const words = (text: string | null) => (text ?? '').replace(/\s+/g, ' ').trim()
 async function open() {
@@ -36,6 +46,7 @@ async function open() {
 
 beforeEach(() => {
   broken = false
+  of = sisters.length
   useSession().begin({ id: 1, name: 'Runa Haldersen', email: 'runa@larkfield.example', roles: ['planner'], sites: [{ id: 1, name: 'Larkfield', timeZone: 'Europe/Berlin' }], plant: 'Larkfield Preserves', empty: false, shared: false })
 })
 
@@ -59,7 +70,14 @@ describe('sister axes on the page of a machine', () => {
     expect(rows()).toBe(1)
     const box = page.findAll('.box').find(one => one.text().includes('Also values that all share'))
     await box?.get('input').setValue(true)
-    expect(rows()).toBeGreaterThan(5)
+    expect(rows()).toBe(2)
+  })
+
+  it('say how many more were compared than there are columns', async () => {
+    of = 900
+    const text = words((await open()).text())
+    expect(text).toContain('900 axes on HL40-200V')
+    expect(text).toContain('894 more sisters were compared')
   })
 
   it('tell an address that two drives of a bus share', async () => {

@@ -12,7 +12,7 @@ export interface Plant {
   readonly people: readonly { readonly key: string, readonly name: string, readonly email: string, readonly roles: Role[], readonly password: string }[]
   readonly token: { readonly name: string, readonly scopes: TokenScope[] }
   readonly nameplates: readonly Nameplate[]
-  readonly lines: readonly { readonly name: string, readonly machines: readonly string[] }[]
+  readonly lines: readonly { readonly name: string, readonly controllerScanMs: number, readonly machines: readonly string[] }[]
   readonly axes: readonly { readonly tag: string, readonly role: string, readonly axisKind: AxisKind, readonly flags: AxisFlag[], readonly uploadEveryHours: number, readonly bus: string, readonly unit: { readonly serial: string, readonly model: string, readonly firmware: string } }[]
   readonly spares: readonly { readonly serial: string, readonly model: string, readonly firmware: string, readonly location: string }[]
 }
@@ -40,6 +40,8 @@ export type Act = When & (
   | { readonly act: 'upload', readonly file: string, readonly by: string, readonly occasion: 'routine' | 'as-found' }
   | { readonly act: 'nightly', readonly by: string, readonly skip?: readonly string[] }
   | { readonly act: 'mark' | 'none', readonly axis: string, readonly by: string, readonly meaning?: 'reviewed' | 'approved' | 'responsibility', readonly note?: string }
+  /** Accepts a stop of the newest version for some days from then on. */
+  | { readonly act: 'waive', readonly axis: string, readonly by: string, readonly rule: string, readonly days: number, readonly reason: string }
   | { readonly act: 'void', readonly axis: string, readonly by: string, readonly reason: string }
   | { readonly act: 'fit', readonly axis: string, readonly serial: string, readonly by: string, readonly oldState: 'failed' | 'spare' }
   | { readonly act: 'rule', readonly by: string, readonly rule: { readonly scope: 'machine', readonly machine: string, readonly field: string, readonly max: number, readonly reason: string } }

@@ -6,9 +6,14 @@ import { makeRule } from '../server/services/rules/rules'
 import { endFitting, openFitting } from '../server/services/units/fittings'
 import { listUnits } from '../server/services/units/units'
 import { storeUpload, type UploadOutcome } from '../server/services/uploads/store-upload'
+import { readVersion } from '../server/services/versions/read-version'
 import { voidVersion } from '../server/services/versions/void-version'
+import { giveWaiver } from '../server/services/waivers/waivers'
+import type { WaiverRecord } from '../shared/api/waivers'
+import { coverOf } from '../shared/checks/waivers'
 import { readSettings } from '../shared/settings/read'
 import { writeEntryCsv } from '../shared/settings/entry-table/write-entry'
+import type { Content } from '../shared/settings/types'
 import { fixtureBytes, settingsFile, type Act, type FileJson, type Patch, type Plant } from './demo-files'
 
 export interface Cast {
@@ -20,13 +25,13 @@ export interface Cast {
   readonly siteId: number
 }
 
-export interface Told { versions: number, sightings: number, tray: number, marks: number }
+export interface Told { versions: number, sightings: number, tray: number, marks: number, waivers: number }
 
 const day = 86_400_000
 
 /** Plays every act in its order, the clock set to each; what an act refuses ends the filling. */
 export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonly Act[], today: Date, setClock: (at: number) => void): Told {
-  const told: Told = { versions: 0, sightings: 0, tray: 0, marks: 0 }
+  const told: Told = { versions: 0, sightings: 0, tray: 0, marks: 0, waivers: 0 }
   const files: Record<string, FileJson> = {}
   const newest: Record<string, number> = {}
   const actor = (key: string): Actor => key === 'station' ? cast.station() : person(cast, key)
@@ -85,6 +90,11 @@ export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonl
         markNone(vault, person(cast, act.by), axisId(act.axis), { meaning: 'reviewed', note: act.note })
         break
       }
+      case 'waive': {
+        giveWaiver(vault, person(cast, act.by), wordsOf(vault, newest[act.axis] ?? fail(`nothing of ${act.axis} to accept`), act, at))
+        told.waivers += 1
+        break
+      }
       case 'void': {
         voidVersion(vault, person(cast, act.by), newest[act.axis] ?? fail(`nothing of ${act.axis} to void`), act.reason)
         break
@@ -112,6 +122,14 @@ function ownList(bytes: Buffer, { nameplates }: Plant): Buffer {
   if (!read.ok) return fail(`a file to be listed cannot be read: ${read.errors[0]?.message ?? ''}`)
   const { file } = read.value
   return Buffer.from(writeEntryCsv(file, nameplates.find(({ model }) => model === file.unit.model) ?? fail(`no nameplate of ${file.unit.model}`)))
+}
+
+/** What a planner signs for the stop of a rule, by the content that was looked at. */
+function wordsOf(vault: Vault, versionId: number, { rule, days, reason, axis }: Extract<Act, { act: 'waive' }>, at: number): Parameters<typeof giveWaiver>[2] {
+  const { axisId, content, checks } = readVersion(vault, versionId)
+  const check = checks.find(one => one.rule === rule && one.level === 'stop') ?? fail(`${axis} has no stop of ${rule}`)
+  const value = coverOf(check, content as unknown as Content) ?? fail(`a stop of ${rule} needs no waiver`)
+  return { axisId, rule, at: check.at, value: value as WaiverRecord['value'], reason, until: new Date(at + days * day).toISOString() }
 }
 
 function fail(why: string): never {

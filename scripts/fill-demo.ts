@@ -44,7 +44,7 @@ async function fill(into: string): Promise<void> {
     const told = tellStory(vault, cast, plant, story, today, (at) => {
       now = at
     })
-    console.log(`Larkfield Preserves: ${told.versions} versions, ${told.sightings} sightings, ${told.tray} files in the tray, ${told.marks} marks.`)
+    console.log(`Larkfield Preserves: ${told.versions} versions, ${told.sightings} sightings, ${told.tray} files in the tray, ${told.marks} marks, ${told.waivers} waivers.`)
   }
   finally {
     vault.close()
@@ -84,7 +84,7 @@ function registerPlaces(vault: Vault, planner: PersonActor, plant: Plant) {
   const machineIds: Record<string, number> = {}
   for (const line of plant.lines) {
     const { id: lineId } = registerLine(vault, planner, { siteId, name: line.name })
-    for (const name of line.machines) machineIds[name] = registerMachine(vault, planner, { lineId, name }).id
+    for (const name of line.machines) machineIds[name] = registerMachine(vault, planner, { lineId, name, controllerScanMs: line.controllerScanMs }).id
   }
   const axisIds: Record<string, number> = {}
   for (const { unit, ...axis } of plant.axes) {

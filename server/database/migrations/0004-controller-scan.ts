@@ -2,4 +2,4 @@
 const controllerScan = `
 ALTER TABLE machine ADD COLUMN controller_scan_ms REAL CHECK (controller_scan_ms > 0);`
 
-export const third = { number: 3, name: 'controller-scan', sql: controllerScan } as const
+export const controllerScanStep = { name: 'controller-scan', sql: controllerScan } as const

@@ -23,3 +23,14 @@ export function file(body: Buffer | string, mediaType: string, { name = null, et
 /** A kept file as its service hands it out: for download, and known by its bytes. */
 export const handOut = ({ bytes, mediaType, name, etag }: { bytes: Buffer, mediaType: string, name: string, etag: string }): FileAnswer =>
   new FileAnswer(bytes, mediaType, name, etag)
+
+/** A file that is sent chunk by chunk. What fails before the first chunk is answered as a problem, later the connection is cut: half a file never looks whole. */
+export class StreamAnswer {
+  constructor(
+    readonly chunks: Iterable<Buffer> | AsyncIterable<Buffer>,
+    readonly size: number,
+    readonly mediaType: string,
+    readonly name: string,
+    readonly etag: string | null = null,
+  ) {}
+}

@@ -9,7 +9,8 @@ export const fileLimit = 2 * 1024 * 1024
 const formOverhead = 64 * 1024
 /** How much of a body that is too large is read and thrown away, so that the sender gets to see the answer. */
 const discardLimit = 128 * 1024 * 1024
-const fieldLimits = { fields: 16, fieldSize: 8 * 1024, fieldNameSize: 64, files: 2, parts: 20, headerPairs: 40 }
+/** What a form may hold beside the bytes of its file. */
+export const formLimits = { fields: 16, fieldSize: 8 * 1024, fieldNameSize: 64, files: 2, parts: 20, headerPairs: 40 }
 
 export type FileBodyCode = 'too-large' | 'content-type' | 'multipart-broken' | 'body-cut' | 'file-missing' | 'file-twice' | 'field-twice' | 'field-too-large'
 export class FileBodyError extends CodedError<FileBodyCode> {}
@@ -82,7 +83,7 @@ function parseForm(raw: Buffer, contentType: string): Promise<Form> {
     const files: { bytes: Buffer, name: string | null }[] = []
     let parser: busboy.Busboy
     try {
-      parser = busboy({ headers: { 'content-type': contentType }, limits: { ...fieldLimits, fileSize: fileLimit + 1 }, defParamCharset: 'utf8' })
+      parser = busboy({ headers: { 'content-type': contentType }, limits: { ...formLimits, fileSize: fileLimit + 1 }, defParamCharset: 'utf8' })
     }
     catch (error) {
       broken(error)

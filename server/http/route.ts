@@ -5,7 +5,7 @@ import { Refusal } from '#shared/errors/refusal'
 import type { PersonActor, TokenActor } from '#server/database/actor'
 import type { Vault, Write } from '#server/database/client'
 import { assertMay, findActor } from './actor'
-import { Answer, FileAnswer } from './answer'
+import { Answer, FileAnswer, StreamAnswer } from './answer'
 import { fingerprintOf, runOnce, type KeyedRequest } from './idempotency'
 import { checked, queryOf } from './input'
 import { readJsonBody } from './json-body'
@@ -39,7 +39,7 @@ type ActorOf<Name extends RouteName> = Declared<Name> extends { may: 'anyone' } 
 type SubjectOf<Name extends RouteName> = Declared<Name> extends { scope: string } ? Subject : null
 type Values<Schemas> = { [Status in keyof Schemas]: Schemas[Status] extends z.ZodType ? z.input<Schemas[Status]> : FileAnswer }[keyof Schemas]
 /** What a handler of the route may answer. */
-export type AnswerOf<Name extends RouteName> = Values<Declared<Name>['answers']> | Answer | FileAnswer
+export type AnswerOf<Name extends RouteName> = Values<Declared<Name>['answers']> | Answer | FileAnswer | StreamAnswer
 
 export interface RouteContext<Name extends RouteName> {
   readonly input: { readonly params: Part<Name, 'params'>, readonly query: Part<Name, 'query'>, readonly body: BodyOf<Name> }
@@ -49,7 +49,7 @@ export interface RouteContext<Name extends RouteName> {
   readonly subject: SubjectOf<Name>
   readonly vault: Vault
   readonly event: H3Event
-  readonly once: (work: (write: Write) => AnswerOf<Name>, bodyDigest?: string) => Answer | FileAnswer
+  readonly once: (work: (write: Write) => Exclude<AnswerOf<Name>, StreamAnswer>, bodyDigest?: string) => Answer | FileAnswer
 }
 
 export type RouteHandler<Name extends RouteName> = (context: RouteContext<Name>) => AnswerOf<Name> | Promise<AnswerOf<Name>>
@@ -65,7 +65,7 @@ export function defineRoute<Name extends RouteName>(name: Name, handler: RouteHa
       const once = keeper(event, name, request)
       const given = await handler({ ...request, vault: event.context.server.vault, event, once } as unknown as RouteContext<Name>)
       if (name.startsWith('POST ') && !withoutOnce.has(name) && !once.used()) throw new TypeError(`${name} answered without once().`)
-      return sendAnswer(event, asAnswer(declaration, given))
+      return await sendAnswer(event, given instanceof StreamAnswer ? given : asAnswer(declaration, given))
     }
     catch (error) {
       return sendProblem(event, error)
@@ -101,7 +101,7 @@ async function readInput(event: H3Event, { params, query, body }: RouteDeclarati
   }
   const [unknown] = Object.keys(sent)
   if (query === undefined && unknown !== undefined) throw new Refusal('input', `?${unknown}: not known here`, { errors: [{ at: `?${unknown}`, code: 'unrecognized-keys', message: 'not known here' }] })
-  if (body === undefined || body === 'file') return input
+  if (body === undefined || typeof body === 'string') return input
   const { text, value } = await readJsonBody(event.node.req)
   return { ...input, text, body: checked(body, value, 'body') }
 }

@@ -1,6 +1,7 @@
 import { defineNitroPlugin } from 'nitropack/runtime'
 import { openVault, standardScryptCost } from '#server/database/client'
 import { StartError } from '#server/database/start-error'
+import { clearIncoming } from '#server/http/attachment-body'
 import type { ServerContext } from '#server/http/context'
 import { openPost } from '#server/mail/open-post'
 import { startLetters } from '#server/services/letters/worker'
@@ -33,6 +34,7 @@ function start(logger: ServerContext['logger']): ServerContext {
   const scryptCost = Number(WITNESSMARK_SCRYPT_COST ?? standardScryptCost)
   if (scryptCost < standardScryptCost) logger.warn({ scryptCost }, 'WITNESSMARK_SCRYPT_COST makes passwords easier to guess than the standard does; it is meant for tests')
   const vault = openVault(WITNESSMARK_DATA ?? './data', { scryptCost })
+  clearIncoming(vault.folder)
   const secret = sessionSecret(vault.folder, NUXT_SESSION_PASSWORD)
   const publicOrigin = publicOriginOf(PUBLIC_URL)
   const post = openPost(vault.folder, SMTP_URL, publicOrigin)

@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { idSchema, instantSchema } from './common'
+import { lacks } from './readiness'
 import { axisStatuses, levelCounts, weightCounts } from './versions'
 
 export const boardAxis = z.object({
@@ -8,6 +9,7 @@ export const boardAxis = z.object({
   lastUploadAt: instantSchema.nullable(), overdueSince: instantSchema.nullable(),
   knownGood: z.object({ versionId: idSchema, number: z.int(), at: instantSchema }).nullable(),
   current: z.object({ versionId: idSchema, number: z.int() }).nullable(), checks: levelCounts,
+  lacks: z.array(z.enum(lacks)).describe('why it could not be restored tonight; empty = it could'),
 })
 export type BoardAxis = z.infer<typeof boardAxis>
 

@@ -6,15 +6,19 @@ import { idSchema, idText, instantSchema, nameSchema, reasonSchema, serialSchema
 const rev = { rev: z.int().optional().describe('the rev that was read; 428 without, 409 edited-meanwhile when stale') }
 const text = (most: number) => z.string().max(most)
 
+/** Sizes of a restore sheet. */
+export const papers = ['A4', 'Letter'] as const
 export const siteBody = z.strictObject({ name: nameSchema, timeZone: z.string().min(1).max(64).describe('IANA name') })
 export const sitePatch = z.strictObject({
   ...rev, name: nameSchema.optional(), timeZone: z.string().min(1).max(64).optional(),
   fourEyes: z.boolean().optional(), releaseHours: z.int().min(1).max(720).optional(), knownGoodMonths: z.int().min(1).max(120).optional(),
   watched: z.array(z.string().max(80)).max(200).optional().describe('field names watched besides the usual ones'),
+  attachmentWanted: z.boolean().optional().describe('ready only with the drive tool’s own backup attached to the known-good version'),
+  labelWanted: z.boolean().optional().describe('ready only with a printed label'), paper: z.enum(papers).optional().describe('of restore sheets'),
 })
 export const siteSchema = z.object({
   id: idSchema, rev: z.int(), name: z.string(), timeZone: z.string(), fourEyes: z.boolean(), releaseHours: z.int(),
-  knownGoodMonths: z.int(), watched: z.array(z.string()),
+  knownGoodMonths: z.int(), watched: z.array(z.string()), attachmentWanted: z.boolean(), labelWanted: z.boolean(), paper: z.enum(papers),
 })
 export type Site = z.infer<typeof siteSchema>
 

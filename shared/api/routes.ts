@@ -1,9 +1,11 @@
 import { z } from 'zod'
+import * as attachments from './attachments'
 import * as board from './board'
 import { axisParams, created, idParams, listQuery, pageOf, roles, type Role } from './common'
 import * as judging from './judging'
 import * as letters from './letters'
 import * as neighbours from './neighbours'
+import * as labels from './labels'
 import * as people from './people'
 import * as places from './places'
 import * as uploads from './uploads'
@@ -17,7 +19,7 @@ import * as waivers from './waivers'
  */
 
 /** Whose site must be among the caller's: found from `params.id`. Others answer 404, as if they were not there. */
-export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray' | 'waiver'
+export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray' | 'waiver' | 'attachment'
 
 export interface RouteDeclaration {
   /** 'anyone' needs no sign-in; 'signed-in' any role. */
@@ -29,8 +31,8 @@ export interface RouteDeclaration {
   readonly scope?: Scope
   readonly params?: z.ZodType
   readonly query?: z.ZodType
-  /** JSON body; 'file' = a settings file, raw or multipart, streamed. */
-  readonly body?: z.ZodType | 'file'
+  /** JSON body; 'file' = a settings file, 'attachment' = any file, both raw or multipart, streamed. */
+  readonly body?: z.ZodType | 'file' | 'attachment'
   readonly answers: Readonly<Record<number, z.ZodType | 'file'>>
   /** One line for the interface page. */
   readonly says: string
@@ -95,6 +97,7 @@ export const routes = {
   'GET /api/axes/:id/fittings': { may: all, token: 'read', scope: 'axis', params: axisParams, answers: { 200: z.object({ items: z.array(places.fittingSchema) }) }, says: 'Which units sat there, newest first.' },
   'POST /api/axes/:id/known-good/none': { may: planner, scope: 'axis', sign: true, params: axisParams, body: versions.knownGoodBody, answers: { 201: created }, says: 'Says that no version is known-good; signed.' },
   'POST /api/axes/:id/kit': { may: uploaders, scope: 'axis', params: axisParams, body: versions.kitBody, answers: { 200: 'file' }, says: 'The known-good values as a file for a replacement unit; logged.' },
+  'POST /api/axes/:id/label': { may: uploaders, scope: 'axis', params: axisParams, body: labels.labelBody, answers: { 201: created }, says: 'Says that a label with its tag of today was printed; readiness counts it.' },
 
   'GET /api/units': { may: all, token: 'read', query: places.unitQuery, answers: { 200: pageOf(places.unitSchema) }, says: 'Units and spares.' },
   'POST /api/units': { may: planner, body: places.unitBody, answers: { 201: created }, says: 'Registers a unit.' },
@@ -127,6 +130,9 @@ export const routes = {
   'GET /api/versions/:id': { may: all, token: 'read', scope: 'version', params: idParams, answers: { 200: versions.versionOne }, says: 'One version, whole.' },
   'GET /api/versions/:id/file': { may: all, token: 'read', scope: 'version', params: idParams, query: versions.fileQuery, answers: { 200: 'file' }, says: 'Its file in either form, or byte for byte as it came.' },
   'GET /api/versions/:id/changes': { may: all, token: 'read', scope: 'version', params: idParams, query: versions.changesQuery, answers: { 200: versions.changesAnswer }, says: 'against = before, the path = after; as a list, JSON Patch or text.' },
+  'GET /api/versions/:id/attachments': { may: all, token: 'read', scope: 'version', params: idParams, answers: { 200: attachments.attachmentList }, says: 'Files kept with it: a drive tool’s own backup, photos.' },
+  'POST /api/versions/:id/attachments': { may: uploaders, token: 'upload', scope: 'version', params: idParams, query: attachments.attachmentFields, body: 'attachment', answers: { 201: attachments.attachmentSchema }, says: 'Keeps a file of up to 20 MiB with it, unread and for good.' },
+  'GET /api/attachments/:id/file': { may: all, token: 'read', scope: 'attachment', params: idParams, answers: { 200: 'file' }, says: 'The attachment byte for byte; cut short where the stored bytes are not those that came in.' },
   'POST /api/versions/:id/known-good': { may: planner, scope: 'version', sign: true, params: idParams, body: versions.knownGoodBody, answers: { 201: created }, says: 'What this axis is restored to from now on; signed, four eyes.' },
   'POST /api/versions/:id/void': { may: planner, scope: 'version', sign: true, params: idParams, body: versions.voidBody, answers: { 201: created }, says: 'A wrong upload; stays readable. Signed.' },
   'POST /api/versions/:id/judge': { may: planner, scope: 'version', params: idParams, answers: { 201: judging.judgedAgain }, says: 'Judges it by today’s nameplate and rules; the judgements before stay.' },

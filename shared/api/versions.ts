@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { levels } from '../checks/types'
 import { sections, verdicts } from '../diff/types'
 import { axisFlags, axisKinds, weights } from '../settings/types'
+import { readinessSchema } from './readiness'
 import { axisRef, idSchema, idText, instantSchema, passwordSchema, reasonSchema } from './common'
 
 export const occasions = ['commissioning', 'routine', 'as-found', 'as-left', 'read-back'] as const
@@ -86,6 +87,8 @@ export const axisSchema = z.object({
   unit: z.object({ id: idSchema, serial: z.string(), channel: z.int().nullable(), model: z.string(), firmware: z.string().nullable(), since: instantSchema }).nullable(),
   current: z.object({ versionId: idSchema, number: z.int(), capturedAt: instantSchema, scribeCode: z.string(), firmware: z.string().nullable() }).nullable(),
   lastUploadAt: instantSchema.nullable(), overdueSince: instantSchema.nullable(), checks: levelCounts,
+  /** Whether it could be restored tonight, and why not. */
+  readiness: readinessSchema,
   versions: z.int(), sightings: z.int(),
 })
 export type Axis = z.infer<typeof axisSchema>

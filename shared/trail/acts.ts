@@ -46,6 +46,8 @@ export const acts = {
   'letter-chosen': 'letter-choice',
   'watch-set': 'watch',
   'letter-sent-again': 'letter',
+  'attachment-stored': 'attachment',
+  'label-printed': 'label-print',
 } as const
 
 export type Act = keyof typeof acts

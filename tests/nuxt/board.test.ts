@@ -13,7 +13,7 @@ function axis(tag: string, more: Partial<BoardAxis> = {}): BoardAxis {
     id: next++, tag, role: 'press', site: 'North hall', line: 'Line 1', machine: tag.split('.')[0] ?? tag, machineId: Number(/\d+/.exec(tag)?.[0] ?? 1), timeZone: 'Europe/Berlin',
     serial: `HL25-24-${String(next).padStart(5, '0')}`, model: 'HL25-150', status: 'in-line', off: { harm: 0, motion: 0, text: 0 }, sense: null,
     lastUploadAt: '2026-12-01T03:10:00.000Z', overdueSince: null, knownGood: { versionId: 9, number: 9, at: '2026-04-06T06:00:00.000Z' }, current: { versionId: 10, number: 10 },
-    checks: { stop: 0, warn: 0, note: 0, unknown: 0 }, ...more,
+    checks: { stop: 0, warn: 0, note: 0, unknown: 0 }, lacks: [], ...more,
   }
 }
 

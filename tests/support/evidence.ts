@@ -25,7 +25,10 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     INSERT INTO check_result VALUES (1, 0, 'travel-span', 'stop', '[]', 'm', '{}', NULL);
     INSERT INTO tray (id, upload_id, problem, detail) VALUES (1, 1, 'unreadable', 'd');
     INSERT INTO tray_settled VALUES (1, 'discarded', '${at}', ${by}, 'r', NULL, NULL);
-    INSERT INTO known_good VALUES (1, ${axisId}, 1, '${at}', ${by}, 'approved', NULL);`)
+    INSERT INTO known_good VALUES (1, ${axisId}, 1, '${at}', ${by}, 'approved', NULL);
+    INSERT INTO attachment VALUES (1, 1, 'photo', 'plate.jpg', 'image/jpeg', NULL, 1, '${hash('d')}', '${at}', ${by}, NULL, '127.0.0.1');
+    INSERT INTO attachment_chunk VALUES (1, 1, 0, x'00');
+    INSERT INTO label_print VALUES (1, ${axisId}, 'LID-02.Z', '50x25', '${at}', ${by});`)
   return {
     nameplate_revision: { where: 'id = 1', column: 'nameplate' }, rule: { where: 'id = 1', column: 'reason' }, rule_end: { where: 'rule_id = 1', column: 'reason' },
     waiver: { where: 'id = 1', column: 'reason' }, waiver_end: { where: 'waiver_id = 1', column: 'reason' },
@@ -33,5 +36,6 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     version_void: { where: 'version_id = 1', column: 'reason' }, sighting: { where: 'id = 1', column: 'name' }, change: { where: 'version_id = 1', column: 'after' },
     check_set: { where: 'id = 1', column: 'rule_set' }, check_result: { where: 'check_set_id = 1', column: 'message' }, tray: { where: 'id = 1', column: 'detail' },
     tray_settled: { where: 'tray_id = 1', column: 'reason' }, known_good: { where: 'id = 1', column: 'note' }, log: { where: 'seq = 0', column: 'leaf' },
+    attachment: { where: 'id = 1', column: 'name' }, attachment_chunk: { where: 'id = 1', column: 'seq' }, label_print: { where: 'id = 1', column: 'tag' },
   }
 }

@@ -44,7 +44,7 @@ export function openPlant(options: { fourEyes?: boolean, watched?: string[] } = 
   const madeAt = iso(start - 700 * day)
   const insertPerson = inserter(db, person)
   const machineAt = (siteName: string, terms: { fourEyes?: boolean, watched?: string[] } = {}) => {
-    const siteId = inserter(db, site)({ rev: 1, name: siteName, timeZone: 'Europe/Berlin', fourEyes: terms.fourEyes ?? true, releaseHours: 24, knownGoodMonths: 24, watched: terms.watched ?? [], madeAt })
+    const siteId = inserter(db, site)({ rev: 1, name: siteName, timeZone: 'Europe/Berlin', fourEyes: terms.fourEyes ?? true, releaseHours: 24, knownGoodMonths: 24, watched: terms.watched ?? [], madeAt, attachmentWanted: false, labelWanted: true, paper: 'A4' })
     const lineId = inserter(db, line)({ rev: 1, siteId, name: 'Jars', madeAt })
     return { siteId, machineId: inserter(db, machine)({ rev: 1, lineId, name: 'Lid press 1', madeAt }) }
   }

@@ -44,13 +44,15 @@ function answerWords(schema: z.ZodType | 'file'): string {
 
 const mayWords = (may: RouteDeclaration['may']): string => may === 'anyone' ? 'anyone' : may === 'signed-in' ? 'whoever is signed in' : may.join(', ')
 
+const fileInput = (body: 'file' | 'attachment') =>
+  ({ where: 'body' as const, name: 'the file', kind: body === 'file' ? 'a settings file, raw or multipart' : 'any file of up to 20 MiB, raw or multipart', needed: true, says: '' })
+
 /** What the table of routes says of one call. */
 export function routeLine(name: string, route: RouteDeclaration): RouteLine {
   const [method = '', path = ''] = name.split(' ')
-  const file = route.body === 'file' ? [{ where: 'body' as const, name: 'the file', kind: 'a settings file, raw or multipart', needed: true, says: '' }] : []
   return {
     name, method, path, says: route.says, may: mayWords(route.may), token: route.token ?? '', signs: route.sign === true,
-    inputs: [...inputsOf('path', route.params), ...inputsOf('query', route.query), ...(route.body === 'file' ? file : inputsOf('body', route.body))],
+    inputs: [...inputsOf('path', route.params), ...inputsOf('query', route.query), ...(typeof route.body === 'string' ? [fileInput(route.body)] : inputsOf('body', route.body))],
     answers: Object.entries(route.answers).map(([status, schema]) => ({ status, what: answerWords(schema) })),
   }
 }

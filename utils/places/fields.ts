@@ -1,5 +1,5 @@
 import type { Axis } from '#shared/api/versions'
-import type { Line, Machine } from '#shared/api/places'
+import { papers, type Line, type Machine } from '#shared/api/places'
 import { axisFlags, type AxisFlag } from '#shared/settings/types'
 import { numberOrText, type Body, type Draft, type FormField, type Option } from '../forms/fields'
 
@@ -14,6 +14,9 @@ export const siteFields = (zones: readonly string[]): FormField[] => [
   { name: 'fourEyes', label: 'Four eyes', type: 'flag', needed: true, help: 'Who marks a version known-good is not the one who brought in its harm values.' },
   { name: 'knownGoodMonths', label: 'Known-good stays fresh', type: 'number', unit: 'months', needed: true, help: 'Older ones count as too old on the board.' },
   { name: 'releaseHours', label: 'Release of a swap within', type: 'number', unit: 'h', needed: true },
+  { name: 'labelWanted', label: 'A printed label is wanted', type: 'flag', needed: true, help: 'An axis without one does not count as ready to be restored.' },
+  { name: 'attachmentWanted', label: 'The drive tool’s own backup is wanted', type: 'flag', needed: true, help: 'Attached to the known-good version; without one the axis does not count as ready.' },
+  { name: 'paper', label: 'Restore sheets are printed on', type: 'choice', needed: true, options: papers.map(paper => ({ value: paper, label: paper })) },
   { name: 'watched', label: 'Watched besides the usual ones', type: 'list', help: 'Names of fields as on the format page, cut by commas: jerk, extra:K-017.' },
 ]
 

@@ -23,8 +23,8 @@ const place = sql.placeholder
 const axisRowsOf = (db: VaultDb, ...where: (SQL | undefined)[]) => db.select({
   axis, state: axisState,
   machine: { id: machine.id, name: machine.name }, line: { id: line.id, name: line.name },
-  site: { id: site.id, name: site.name, timeZone: site.timeZone },
-  current: { id: current.id, unitId: current.unitId, contentId: current.contentId, number: current.number, capturedAt: current.capturedAt, receivedAt: current.receivedAt, scribeCode: current.scribeCode, firmware: current.firmware },
+  site: { id: site.id, name: site.name, timeZone: site.timeZone, knownGoodMonths: site.knownGoodMonths, attachmentWanted: site.attachmentWanted, labelWanted: site.labelWanted },
+  current: { id: current.id, unitId: current.unitId, contentId: current.contentId, number: current.number, capturedAt: current.capturedAt, receivedAt: current.receivedAt, scribeCode: current.scribeCode, model: current.model, firmware: current.firmware },
   marked: { id: marked.id, number: marked.number, scribeCode: marked.scribeCode },
   mark: { at: knownGood.at, by: person.name },
   unit: { id: unit.id, serial: unit.serial, channel: unit.channel, model: unit.model, firmware: unit.firmware, since: fitting.fromAt },

@@ -28,5 +28,9 @@ export const axisState = sqliteTable('axis_state', {
   note: integer('note').notNull(),
   unknown: integer('unknown').notNull(),
   accepted: json<AcceptedUntil[]>('accepted').notNull(),
+  /** How many backups of the drive's own tool the known-good version has. */
+  backups: integer('backups').notNull(),
+  /** Tag on the newest printed label; null = none was printed. */
+  labelTag: text('label_tag'),
 })
 export type AxisStateRow = typeof axisState.$inferSelect

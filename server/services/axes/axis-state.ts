@@ -2,9 +2,11 @@ import { compareContents } from '#shared/diff/compare'
 import { diffRenumbered } from '#shared/diff/renumber'
 import { countByWeight } from '#shared/diff/summary'
 import type { Comparison, FieldChange } from '#shared/diff/types'
+import { attachmentQueries } from '#server/database/attachment/queries'
 import { countReceived, readAxisState, replaceAxisState } from '#server/database/axis-state/queries'
 import { readLevelCounts } from '#server/database/check/queries'
 import { judgingQueries } from '#server/database/judging/queries'
+import { labelQueries } from '#server/database/label/queries'
 import { knownGoodQueries } from '#server/database/known-good/queries'
 import type { VaultDb } from '#server/database/prepared'
 import type { AxisStateRow, KnownGoodRow, VersionRow } from '#server/database/schema'
@@ -23,6 +25,8 @@ export function refreshAxisState(db: VaultDb, axisId: number): void {
   replaceAxisState(db, {
     axisId, ...statusOf(db, axisId, current, mark), versions, sightings, lastUploadAt, ...(counts ?? noChecks), accepted: current ? acceptedUntil(db, current) : [],
     knownGoodId: mark?.id ?? null, knownGoodVersionId: mark?.versionId ?? null,
+    backups: mark?.versionId ? attachmentQueries(db).backups.get({ versionId: mark.versionId })?.count ?? 0 : 0,
+    labelTag: labelQueries(db).newest.get({ axisId })?.tag ?? null,
     currentVersionId: current?.id ?? null, fittingId: open?.fitting.id ?? null,
   })
 }

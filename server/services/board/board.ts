@@ -5,20 +5,24 @@ import type { Vault } from '#server/database/client'
 import { logQueries } from '#server/database/log/queries'
 import { overdueSince } from '../axes/overdue'
 import { plantOf } from '../people/plant'
+import { readinessOf } from '../readiness/readiness'
+import { readStock, type Stock } from '../readiness/stock'
 import { standingCounts } from '../waivers/accepted'
 import { attention } from './attention'
 
 /** Every axis of the actor's sites with its state, and what needs someone now. */
 export function readBoard(vault: Vault, actor: Actor): Board {
   const asOf = vault.now()
+  const stock = readStock(vault.db)
   const rows = readAllAxes(vault.db, actor.sites)
   return {
-    asOf, plant: plantOf(vault), axes: rows.map(row => boardAxis(row, asOf)), attention: attention(vault.db, actor.sites, rows, asOf),
+    asOf, plant: plantOf(vault), axes: rows.map(row => boardAxis(row, stock, asOf)), attention: attention(vault.db, actor.sites, rows, asOf),
     log: { entries: (logQueries(vault.db).newest.get()?.seq ?? -1) + 1 },
   }
 }
 
-function boardAxis({ axis, state, machine, line, site, current, marked, mark, unit }: AxisListRow, now: string): BoardAxis {
+function boardAxis(row: AxisListRow, stock: Stock, now: string): BoardAxis {
+  const { axis, state, machine, line, site, current, marked, mark, unit } = row
   const lastUploadAt = state?.lastUploadAt ?? null
   return {
     id: axis.id, tag: axis.tag, role: axis.role, site: site.name, line: line.name, machine: machine.name, machineId: machine.id, timeZone: site.timeZone,
@@ -27,6 +31,6 @@ function boardAxis({ axis, state, machine, line, site, current, marked, mark, un
     lastUploadAt, overdueSince: overdueSince(lastUploadAt, axis.uploadEveryHours, now),
     knownGood: marked && mark?.at ? { versionId: marked.id, number: marked.number, at: mark.at } : null,
     current: current && { versionId: current.id, number: current.number },
-    checks: standingCounts(state, now),
+    checks: standingCounts(state, now), lacks: readinessOf(row, stock, now).lacks,
   }
 }

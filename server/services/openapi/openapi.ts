@@ -16,6 +16,14 @@ const fileBody = { content: {
   'multipart/form-data': { schema: { type: 'object', required: ['file'], properties: { file: { type: 'string', format: 'binary' } } } },
 }, required: true }
 
+const anyFile = { content: {
+  'application/octet-stream': { schema: { type: 'string', format: 'binary', description: 'any file' } },
+  'multipart/form-data': { schema: { type: 'object', required: ['file'], properties: { file: { type: 'string', format: 'binary' } } } },
+}, required: true }
+
+const bodyOf = (body: NonNullable<RouteDeclaration['body']>): Json =>
+  body === 'file' ? fileBody : body === 'attachment' ? anyFile : { required: true, content: { 'application/json': { schema: schemaOf(body, 'input') } } }
+
 function parametersOf(schema: z.ZodType | undefined, place: 'path' | 'query'): Json[] {
   if (schema === undefined) return []
   const { properties = {}, required = [] } = schemaOf(schema, 'output') as { properties?: Json, required?: string[] }
@@ -42,7 +50,7 @@ function operationOf(declaration: RouteDeclaration): Json {
     summary: says,
     description: mayText(declaration),
     parameters: [...parametersOf(params, 'path'), ...parametersOf(query, 'query')],
-    ...(body === undefined ? {} : { requestBody: body === 'file' ? fileBody : { required: true, content: { 'application/json': { schema: schemaOf(body, 'input') } } } }),
+    ...(body === undefined ? {} : { requestBody: bodyOf(body) }),
     responses: responsesOf(declaration),
     security: may === 'anyone' ? [] : [{ session: [] }, ...(token === undefined ? [] : [{ token: [] }])],
   }

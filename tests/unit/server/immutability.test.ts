@@ -37,6 +37,8 @@ describe('tables that never change', () => {
   it.each([
     ['version', `(id, axis_id, number, unit_id, upload_id, content_id, occasion, captured_at, received_at, stored_by, engine, copy_hash, scribe_code, model, harm, motion, text, file)
       SELECT 99, axis_id, number, unit_id, upload_id, content_id, occasion, captured_at, received_at, stored_by, engine, copy_hash, scribe_code, model, harm, motion, text, file FROM version`],
+    ['attachment', 'SELECT 99, version_id, kind, name, media_type, note, size, sha256, received_at, person_id, token_id, peer FROM attachment'],
+    ['attachment_chunk', 'SELECT 99, attachment_id, seq, bytes FROM attachment_chunk'],
     ['content', 'SELECT 99, hash, size, text FROM content'],
     ['nameplate_revision', 'SELECT 99, model, revision, nameplate, made_at, made_by FROM nameplate_revision'],
   ])('%s refuses an insert under a new id over its other key', (table, rest) => {

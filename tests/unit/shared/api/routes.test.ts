@@ -54,6 +54,7 @@ const doors = `
   GET /api/axes/:id/fittings             | tpaA      | read   | axis    |
   POST /api/axes/:id/known-good/none     | p         |        | axis    | signed
   POST /api/axes/:id/kit                 | tp        |        | axis    |
+  POST /api/axes/:id/label               | tp        |        | axis    |
   GET /api/units                         | tpaA      | read   |         |
   POST /api/units                        | p         |        |         |
   GET /api/units/:id                     | tpaA      | read   | unit    |
@@ -83,6 +84,9 @@ const doors = `
   GET /api/versions/:id                  | tpaA      | read   | version |
   GET /api/versions/:id/file             | tpaA      | read   | version |
   GET /api/versions/:id/changes          | tpaA      | read   | version |
+  GET /api/versions/:id/attachments      | tpaA      | read   | version |
+  POST /api/versions/:id/attachments     | tp        | upload | version |
+  GET /api/attachments/:id/file          | tpaA      | read   | attachment |
   POST /api/versions/:id/known-good      | p         |        | version | signed
   POST /api/versions/:id/void            | p         |        | version | signed
   POST /api/versions/:id/judge           | p         |        | version |
@@ -110,7 +114,7 @@ describe('the doors', () => {
   it('let a script read or upload, never sign, register or change', () => {
     for (const [name, { token, sign }] of declared) {
       if (token === 'read') expect(methodOf(name), name).toBe('GET')
-      if (token === 'upload') expect(name).toMatch(/^POST \/api\/uploads/)
+      if (token === 'upload') expect(name).toMatch(/^POST \/api\/(uploads|versions\/:id\/attachments)/)
       if (token) expect(sign, name).toBeUndefined()
     }
   })

@@ -12,7 +12,7 @@ const firstStored = {
   'unit-changed': 'unit', 'fitting-opened': 'fitting', 'fitting-closed': 'fitting', 'nameplate-added': 'nameplate', 'rule-made': 'rule', 'rule-ended': 'rule',
   'upload-received': 'upload', 'content-stored': 'content', 'version-stored': 'version', 'version-voided': 'version-void', 'sighting-recorded': 'sighting',
   'tray-kept': 'tray', 'tray-assigned': 'tray-settled', 'tray-discarded': 'tray-settled', 'known-good-marked': 'known-good', 'known-good-none': 'known-good',
-  'kit-taken': 'kit',
+  'kit-taken': 'kit', 'attachment-stored': 'attachment', 'label-printed': 'label-print',
 }
 
 describe('acts', () => {

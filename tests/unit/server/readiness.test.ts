@@ -1,0 +1,139 @@
+import fc from 'fast-check'
+import { afterEach, beforeEach, describe, expect, it } from 'vitest'
+import type { PersonActor } from '../../../server/database/actor'
+import { inserter } from '../../../server/database/inserter'
+import { unit } from '../../../server/database/schema'
+import { listAxes, readAxis } from '../../../server/services/axes/read-axis'
+import { readBoard } from '../../../server/services/board/board'
+import { markKnownGood } from '../../../server/services/known-good/mark'
+import { recordLabel } from '../../../server/services/labels/print-label'
+import { changeAxis } from '../../../server/services/places/axes'
+import { changeSite } from '../../../server/services/places/sites'
+import { lacksOf, monthsAfter, type ReadinessFacts } from '../../../server/services/readiness/lacks'
+import { changeUnit } from '../../../server/services/units/units'
+import { storeUpload } from '../../../server/services/uploads/store-upload'
+import { day, hour, iso, minute, openPlant, settingsFile, start, type Plant } from '../../support/vault-plant'
+
+const ready: ReadinessFacts = {
+  tag: 'LID-02.Z', markedAt: '2026-01-31T06:00:00.000Z', knownGoodMonths: 1, lastHeardAt: '2026-02-20T06:00:00.000Z', uploadEveryHours: 24,
+  spare: true, backups: 1, attachmentWanted: true, labelTag: 'LID-02.Z', labelWanted: true,
+}
+const at = '2026-02-21T06:00:00.000Z'
+const after = (instant: string) => new Date(Date.parse(instant) + 1).toISOString()
+
+describe('what an axis lacks', () => {
+  it('is nothing where all is there', () => expect(lacksOf(ready, at)).toEqual([]))
+
+  it.each<[string, Partial<ReadinessFacts>, string[]]>([
+    ['no known-good', { markedAt: null }, ['no-known-good']],
+    ['no spare', { spare: false }, ['no-spare']],
+    ['no backup though the site wants one', { backups: 0 }, ['no-attachment']],
+    ['no backup, and none wanted', { backups: 0, attachmentWanted: false }, []],
+    ['no label', { labelTag: null }, ['no-label']],
+    ['no label, and none wanted', { labelTag: null, labelWanted: false }, []],
+    ['a label of an earlier tag', { labelTag: 'LID-02.Y' }, ['no-label']],
+    ['a label in other case: the same tag', { labelTag: 'lid-02.z' }, []],
+    ['never due', { uploadEveryHours: null, lastHeardAt: '2020-01-01T00:00:00.000Z' }, []],
+    ['everything', { markedAt: null, spare: false, backups: 0, labelTag: null, uploadEveryHours: 1 }, ['no-known-good', 'overdue', 'no-spare', 'no-attachment', 'no-label']],
+  ])('%s', (_what, facts, wanted) => expect(lacksOf({ ...ready, ...facts }, at)).toEqual(wanted))
+
+  it('begins to the millisecond after its time, not at it', () => {
+    const due = '2026-02-21T06:00:00.000Z'
+    expect(lacksOf(ready, due)).toEqual([])
+    expect(lacksOf(ready, after(due))).toEqual(['overdue'])
+    // One month after 31 January is the last day of February.
+    const old = { ...ready, uploadEveryHours: null }
+    expect(lacksOf(old, '2026-02-28T06:00:00.000Z')).toEqual([])
+    expect(lacksOf(old, after('2026-02-28T06:00:00.000Z'))).toEqual(['too-old'])
+  })
+})
+
+describe('months after a day', () => {
+  it.each([
+    ['2026-01-31T06:00:00.000Z', 1, '2026-02-28T06:00:00.000Z'],
+    ['2024-01-31T06:00:00.000Z', 1, '2024-02-29T06:00:00.000Z'],
+    ['2026-11-30T06:00:00.000Z', 3, '2027-02-28T06:00:00.000Z'],
+    ['2026-03-15T23:59:59.999Z', 24, '2028-03-15T23:59:59.999Z'],
+    ['2024-02-29T00:00:00.000Z', 12, '2025-02-28T00:00:00.000Z'],
+  ])('%s and %i months is %s', (from, months, to) => expect(monthsAfter(from, months)).toBe(to))
+
+  it('never runs into the month after', () => {
+    fc.assert(fc.property(fc.date({ min: new Date('2000-01-01'), max: new Date('2060-01-01'), noInvalidDate: true }), fc.integer({ min: 1, max: 120 }), (date, months) => {
+      const later = new Date(monthsAfter(date.toISOString(), months))
+      const passed = (later.getUTCFullYear() - date.getUTCFullYear()) * 12 + later.getUTCMonth() - date.getUTCMonth()
+      expect(passed).toBe(months)
+      expect(later.getUTCDate()).toBeLessThanOrEqual(date.getUTCDate())
+    }))
+  })
+})
+
+describe('on the plant', () => {
+  let plant: Plant
+  let runa: PersonActor
+  let tobias: PersonActor
+  let axisId: number
+
+  beforeEach(() => {
+    plant = openPlant()
+    runa = plant.person('Runa Haldersen')
+    tobias = plant.person('Tobias Achterberg', ['technician'])
+    axisId = plant.axis('LID-02.Z', { uploadEveryHours: 26 })
+    const fitted = plant.unit('SN-0001')
+    plant.vault.sqlite.exec(`UPDATE unit SET state = 'fitted' WHERE id = ${fitted}`)
+    plant.fit(axisId, fitted, start - 300 * day)
+  })
+  afterEach(() => plant.close())
+
+  const lacks = () => readAxis(plant.vault, axisId).readiness.lacks
+  function store(): number {
+    plant.now += minute
+    const outcome = storeUpload(plant.vault, tobias, { bytes: settingsFile({ setup: { thrustLimit: 38 } }), name: null }, {})
+    if (outcome.outcome !== 'version') throw new Error(outcome.outcome)
+    return outcome.answer.version.id
+  }
+
+  it('each thing that is put right goes from the list, and comes back with its time', () => {
+    expect(lacks()).toEqual(['no-known-good', 'overdue', 'no-spare', 'no-label'])
+    const versionId = store()
+    expect(lacks()).toEqual(['no-known-good', 'no-spare', 'no-label'])
+    markKnownGood(plant.vault, runa, versionId, { meaning: 'approved' })
+    plant.unit('SN-0002')
+    recordLabel(plant.vault, tobias, axisId, { size: '50x25' })
+    expect(readAxis(plant.vault, axisId).readiness).toEqual({ ready: true, lacks: [] })
+    plant.now += 26 * hour + 1
+    expect(lacks()).toEqual(['overdue'])
+    changeAxis(plant.vault, runa, axisId, { rev: 1, tag: 'LID-02.Z2', uploadEveryHours: null })
+    expect(lacks()).toEqual(['no-label'])
+    plant.now += 800 * day
+    expect(lacks()).toEqual(['too-old', 'no-label'])
+  })
+
+  it('asks for a backup and a label where the site wants them', () => {
+    markKnownGood(plant.vault, runa, store(), { meaning: 'approved' })
+    plant.unit('SN-0002')
+    changeSite(plant.vault, runa, plant.siteId, { rev: 1, attachmentWanted: true, labelWanted: false })
+    expect(lacks()).toEqual(['no-attachment'])
+  })
+
+  it('counts a spare that lies at the site or at none, of the model that is fitted, and in stock', () => {
+    store()
+    const elsewhere = plant.machineAt('Ostfield')
+    plant.unit('SN-0002', { siteId: elsewhere.siteId })
+    plant.unit('SN-0003', { model: 'HL25-150' })
+    expect(lacks()).toContain('no-spare')
+    const spare = plant.unit('SN-0004', { siteId: plant.siteId })
+    expect(lacks()).not.toContain('no-spare')
+    changeUnit(plant.vault, runa, spare, { rev: 1, state: 'repair' })
+    expect(lacks()).toContain('no-spare')
+    inserter(plant.vault.db, unit)({ rev: 1, serial: 'SN-0005', model: 'HL40-200V', location: '', state: 'spare', madeAt: iso(plant.now) })
+    expect(lacks()).not.toContain('no-spare')
+  })
+
+  it('is the same in a list, alone and on the board', () => {
+    markKnownGood(plant.vault, runa, store(), { meaning: 'approved' })
+    const alone = readAxis(plant.vault, axisId).readiness.lacks
+    expect(alone).toEqual(['no-spare', 'no-label'])
+    expect(listAxes(plant.vault, runa, {}).items.map(({ readiness }) => readiness.lacks)).toEqual([alone])
+    expect(readBoard(plant.vault, runa).axes.map(axis => axis.lacks)).toEqual([alone])
+  })
+})

@@ -2,7 +2,7 @@ import { first } from './0001-first'
 import { second } from './0002-waivers'
 import { lettersStep } from './0003-letters'
 import { controllerScanStep } from './0004-controller-scan'
-import { third } from './0003-papers'
+import { papersStep } from './0005-papers'
 
 export interface Migration { readonly number: number, readonly name: string, readonly sql: string }
 
@@ -11,8 +11,8 @@ const steps: readonly Omit<Migration, 'number'>[] = [
   second,
   lettersStep,
   controllerScanStep,
+  papersStep,
 ]
 
 /** In order, numbered without gaps from 1. Text, not files, so that they reach the built server and the tests alike. */
 export const migrations: readonly Migration[] = steps.map((step, i) => ({ ...step, number: i + 1 }))
-export const migrations: readonly Migration[] = [first, second, third]

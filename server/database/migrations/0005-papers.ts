@@ -50,4 +50,4 @@ ALTER TABLE site ADD COLUMN paper TEXT NOT NULL DEFAULT 'A4' CHECK (paper IN ('A
 ALTER TABLE axis_state ADD COLUMN backups INTEGER NOT NULL DEFAULT 0;
 ALTER TABLE axis_state ADD COLUMN label_tag TEXT;`
 
-export const third = { number: 3, name: 'papers', sql: [attachments, labels, readiness].join('\n') } as const
+export const papersStep = { name: 'papers', sql: [attachments, labels, readiness].join('\n') } as const

@@ -10,6 +10,7 @@ import UploadPage from '~/pages/upload.vue'
 import { entryDraftOf, judgeEntry, type EntryDraft } from '~/utils/nameplates/entry-table'
 import { guessField, pastedRows } from '~/utils/nameplates/entry-paste'
 import { revisionChanges } from '~/utils/nameplates/compare'
+import type { VersionOne } from '../../shared/api/versions'
 import type { Nameplate } from '../../shared/settings/nameplate'
 import { axis, today } from '../support/axis-answers'
 import { liftFile, liftLines, liftPlate, liftTable } from '../support/entry-table'
@@ -171,6 +172,13 @@ describe('the drive’s own list', () => {
     const hrefs = (mounted: VueWrapper) => mounted.findAll('a[download]').map(link => link.attributes('href'))
     expect(hrefs(await mountSuspended(VersionFiles, { props: { version: today, nameplate: liftPlate } }))).toContain('/api/versions/15/file?form=entry')
     expect(hrefs(await mountSuspended(VersionFiles, { props: { version: today } }))).not.toContain('/api/versions/15/file?form=entry')
+  })
+
+  it('says beside that file what its steps round, and what it has no place for', async () => {
+    const saying = async (setup: VersionOne['content']['setup']) => (await mountSuspended(VersionFiles, { props: { version: { ...today, content: { ...today.content, setup, zones: [], moves: [], extra: {} } }, nameplate: liftPlate } })).text()
+    expect(await saying({ speedLimit: 253 })).toContain('By the steps of the drive: speed limit 253 becomes 250.')
+    expect(await saying({ jogSpeed: 25 })).toContain('It has no place for jog speed.')
+    expect(await saying({ speedLimit: 250 })).not.toMatch(/steps of the drive|no place for/)
   })
 })
 

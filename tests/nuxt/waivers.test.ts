@@ -2,7 +2,7 @@ import { mountSuspended, registerEndpoint } from '@nuxt/test-utils/runtime'
 import { flushPromises, type VueWrapper } from '@vue/test-utils'
 import { readBody, setResponseStatus, type H3Event } from 'h3'
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
-import { ChecksList, RulesJudgeAgain } from '#components'
+import { ChecksList, ChecksJudgeAgain } from '#components'
 import type { JudgingRun, Rejudged } from '../../shared/api/judging'
 import type { VersionOne } from '../../shared/api/versions'
 import { after, axis, nameplate, today } from '../support/axis-answers'
@@ -169,7 +169,7 @@ describe('judging every axis again', () => {
       { id: 77, done: 8, of: 20, changed: [row(1, 'LID-01.Z', 0, null)], problem: null },
       { id: 77, done: 20, of: 20, changed: [row(2, 'LID-02.Z', 1, 'Thrust limit is 55 %, at most 45 % is allowed.')], problem: null },
     ]
-    const page = await mountSuspended(RulesJudgeAgain, { props: { changed: 'made' } })
+    const page = await mountSuspended(ChecksJudgeAgain, { props: { changed: 'made' } })
     close = () => page.unmount()
     expect(words(page.text())).toContain('The rule holds.')
     await press(page, 'Judge every axis again')
@@ -187,9 +187,19 @@ describe('judging every axis again', () => {
 
   it('says when it broke off', async () => {
     answers = [{ id: 77, done: 8, of: 20, changed: [], problem: 'The run broke off. What it judged is kept; begin again.' }]
-    const page = await mountSuspended(RulesJudgeAgain)
+    const page = await mountSuspended(ChecksJudgeAgain)
     close = () => page.unmount()
     await press(page, 'Judge every axis again')
     await vi.waitFor(() => expect(words(page.get('[role="alert"]').text())).toContain('The run broke off.'))
+    answers = [{ id: 77, done: 20, of: 20, changed: [], problem: null }]
+    await press(page, 'Begin again')
+    await vi.waitFor(() => expect(words(page.get('header p').text())).toBe('nothing is judged otherwise than before'))
+    expect(page.find('[role="alert"]').exists()).toBe(false)
+  })
+
+  it('says after a revision by which nameplate the axes were judged', async () => {
+    const page = await mountSuspended(ChecksJudgeAgain, { props: { changed: 'revised', title: 'What the nameplate hits' } })
+    close = () => page.unmount()
+    expect(words(page.text())).toMatch(/What the nameplate hits.*The revision is kept\. What the drives hold today was judged by the one before\./)
   })
 })

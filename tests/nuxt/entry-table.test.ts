@@ -110,6 +110,30 @@ describe('trying a table on a sample', () => {
   })
 })
 
+describe('a table begun from a sample', () => {
+  const begun = async (lines: readonly string[], name?: string) => {
+    const mounted = await mountSuspended(EntryTable, { props: { model: liftPlate.model, axisKind: 'linear' } })
+    await choose(mounted, lines, name)
+    return mounted
+  }
+
+  it('is proposed from what the sample shows, and tried on it at once', async () => {
+    const mounted = await begun(liftLines, 'lift.csv')
+    await vi.waitFor(() => expect(mounted.emitted('update:modelValue')).toHaveLength(1))
+    const draft = mounted.emitted('update:modelValue')?.[0]?.[0] as EntryDraft
+    expect(draft).toMatchObject({ delimiter: ';', decimal: 'comma', header: 'Backup of drive\nNo.;Parameter;Value;Unit' })
+    await mounted.setProps({ modelValue: draft, judged: judgeEntry(draft, 'linear') })
+    expect(mounted.text()).toContain('Fields were guessed from the names in lift.csv: look each of them through')
+    expect(mounted.text()).toContain('"A" is none of absolute, relative, press.')
+  })
+
+  it('is not begun from a file that is no list', async () => {
+    const mounted = await begun(['A letter', 'without cells'], 'letter.txt')
+    await vi.waitFor(() => expect(mounted.get('[role="alert"]').text()).toBe('letter.txt is no list of lines with cells: make the table by hand.'))
+    expect(mounted.emitted('update:modelValue')).toBeUndefined()
+  })
+})
+
 describe('the nameplate form', () => {
   it('sends the whole table when a row was edited, and reads a sample by the edit before it is kept', async () => {
     const mounted = await mountSuspended(NameplateForm, { props: { record } })

@@ -40,7 +40,7 @@ function walk(json: Json, at: string, key = ''): Part[] {
 }
 
 const sent = declared.flatMap(([name, { body, query, params }]) => [body, query, params].flatMap(schema =>
-  schema === undefined || schema === 'file' ? [] : walk(jsonOf(schema), name)))
+  schema === undefined || typeof schema === 'string' ? [] : walk(jsonOf(schema), name)))
 
 /** Places of those that break a law; the way of each is told where a test fails. */
 const places = (breaks: (part: Part) => boolean) => [...new Set(sent.filter(breaks).map(({ at }) => at))]

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { z } from 'zod'
+import { attachmentSchema, type Attachment } from '../../../../shared/api/attachments'
 import { attentionSchema, boardAxis, healthSchema, logEntrySchema, type Attention, type BoardAxis } from '../../../../shared/api/board'
 import { problemSchema, type Problem } from '../../../../shared/api/common'
 import { runSchema, type JudgingRun } from '../../../../shared/api/judging'
@@ -31,17 +32,17 @@ const version: VersionSummary = {
 const axis: Axis = {
   id: 2, rev: 1, tag: 'LID-02.Z', axisKind: 'linear', role: '', flags: ['gravity'], bus: '', uploadEveryHours: null, duty: null, machine: { id: 1, name: 'Lid press 2' }, line: { id: 1, name: 'Jar line 1' },
   site: { id: 1, name: 'Larkfield Preserves', timeZone: 'Europe/Copenhagen' }, status: 'never-read', off: counts, sense: null, knownGood: null, unit: null, current: null, lastUploadAt: null, overdueSince: null,
-  checks: levels, versions: 0, sightings: 0,
+  checks: levels, readiness: { ready: false, lacks: ['no-known-good'] }, versions: 0, sightings: 0,
 }
 const board: BoardAxis = {
   id: 2, tag: 'LID-02.Z', role: 'lid press', site: 'Larkfield Preserves', line: 'Jar line 1', machine: 'Lid press 2', machineId: 1, timeZone: 'Europe/Copenhagen', serial: null, model: null, status: 'off',
-  off: counts, sense: 'more', lastUploadAt: null, overdueSince: null, knownGood: null, current: { versionId: 7, number: 4 }, checks: levels,
+  off: counts, sense: 'more', lastUploadAt: null, overdueSince: null, knownGood: null, current: { versionId: 7, number: 4 }, checks: levels, lacks: ['no-spare'],
 }
 const attention: Attention = { kind: 'off-known-good', count: 1, since: at, items: [{ axisId: 2, tag: 'LID-02.Z', versionId: 7, knownGoodId: null, text: 'Thrust limit 38 → 55 %', since: null }] }
 const me: Me = { id: 1, name: 'Runa Haldersen', email: 'runa@larkfield.example', roles: ['planner'], sites: [{ id: 1, name: 'Larkfield Preserves', timeZone: 'UTC' }], plant: 'Larkfield Preserves', empty: false, shared: false }
 const person: Person = { id: 1, rev: 1, name: 'Runa Haldersen', email: 'runa@larkfield.example', roles: ['planner'], siteIds: [], shared: false, endedAt: null, hasPassword: true, lastSignInAt: null }
 const token: Token = { id: 1, name: 'Night export', scopes: ['upload'], siteIds: [], endsAt: at, endedAt: null, ownerId: 1, ownerName: 'Runa Haldersen', madeAt: at, lastUsedAt: null }
-const site: Site = { id: 1, rev: 1, name: 'Larkfield Preserves', timeZone: 'UTC', fourEyes: true, releaseHours: 24, knownGoodMonths: 24, watched: [] }
+const site: Site = { id: 1, rev: 1, name: 'Larkfield Preserves', timeZone: 'UTC', fourEyes: true, releaseHours: 24, knownGoodMonths: 24, watched: [], attachmentWanted: false, labelWanted: true, paper: 'A4' }
 const unit: Unit = { id: 3, rev: 1, serial: 'HL40-2231-0087', channel: null, model: 'HL40-200V', firmware: null, actuatorSerial: null, actuatorModel: null, location: '', state: 'spare', siteId: null, axis: null, modelKnown: true }
 const fitting: Fitting = { id: 1, axisId: 2, axisTag: 'LID-02.Z', unitId: 3, serial: 'HL40-2231-0087', from: at, to: null }
 const rule: Rule = { id: 1, scope: 'axis', scopeId: 2, scopeName: 'LID-02.Z', field: 'jogSpeed', min: null, max: 50, fixed: null, reason: 'guard', madeAt: at, madeBy: 'Runa Haldersen', endedAt: null, endedBy: null, endReason: null }
@@ -52,6 +53,9 @@ const waiver: WaiverRecord = {
 const tray: TrayItem = {
   id: 1, problem: 'unreadable', detail: 'The file cannot be read.', errors: [{ at: '/setup/jogSpeed', code: 'number-range', message: 'x' }], more: 0, name: null, bytes: 12, sha256: hash, receivedAt: at, sentBy: 'Tobias Achterberg',
   serial: null, model: null, capturedAt: null, siteId: null, copies: 1, guess: null,
+}
+const attachment: Attachment = {
+  id: 1, versionId: 7, kind: 'drive-backup', name: 'lid-02.drv', mediaType: 'application/octet-stream', note: null, size: 9, sha256: hash, receivedAt: at, by: 'Tobias Achterberg', unit: { serial: 'HL40-2231-0087', model: 'HL40-200V' },
 }
 const life: LifeEvent = { at, kind: 'mark', versionId: 7, number: 4, by: 'Runa Haldersen', text: null, serial: null, changes: null, occasion: null, sightings: null }
 const run: JudgingRun = { id: 1, done: 0, of: 4, changed: [], problem: null }
@@ -72,11 +76,12 @@ const records: readonly Travelling[] = [
   { what: 'a site rule', schema: ruleSchema, record: rule, nullable: ['min', 'max', 'fixed', 'endedAt', 'endedBy', 'endReason'] },
   { what: 'a waiver', schema: waiverSchema, record: waiver, nullable: ['endedAt', 'endedBy', 'endReason'] },
   { what: 'a file in the tray', schema: trayItem, record: tray, nullable: ['name', 'serial', 'model', 'capturedAt', 'siteId', 'guess'] },
+  { what: 'an attachment', schema: attachmentSchema, record: attachment, nullable: ['note'] },
   { what: 'an event of a life', schema: lifeEvent, record: life, nullable: ['versionId', 'number', 'text', 'serial', 'changes', 'occasion', 'sightings'] },
   { what: 'a run of judging', schema: runSchema, record: run, nullable: ['problem'] },
   { what: 'a problem', schema: problemSchema, record: problem, nullable: ['current'], optional: ['errors', 'more', 'tray', 'current'] },
   { what: 'an entry of the log', schema: logEntrySchema, record: { seq: 1, leaf: '{}', hash }, nullable: [] },
-  { what: 'the health of the vault', schema: healthSchema, record: { status: 'ok', schema: 2, writable: true }, nullable: [] },
+  { what: 'the health of the vault', schema: healthSchema, record: { status: 'ok', schema: 2, writable: true, lettersWaitingSince: null }, nullable: ['lettersWaitingSince'] },
   { what: 'what went to the tray', schema: uploadTray, record: { tray: 1, problem: 'not-fitted', detail: 'x' }, nullable: [] },
 ]
 

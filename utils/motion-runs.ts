@@ -1,6 +1,7 @@
-import { weigh } from '#shared/checks/burden'
+import { weigh, type Burden } from '#shared/checks/burden'
 import { chainsOf } from '#shared/checks/chains-to-judge'
 import { surroundings } from '#shared/checks/driven'
+import { lapMean, lapSentence, lapsOf, type LapMean } from '#shared/checks/lap-rms'
 import type { JudgeInput } from '#shared/checks/types'
 import { usedRows } from '#shared/motion/chains'
 import { limitPercent } from '#shared/motion/limit'
@@ -73,6 +74,8 @@ export interface Shown {
   readonly legs: readonly Leg[]
   readonly atLeast: boolean
   readonly thrust: { readonly pieces: readonly ThrustPiece[], readonly unit: string, readonly without: string } | undefined
+  /** Of a chain or the duty: thrust in the mean, as its rule reckons it, and the rule's sentence. */
+  readonly mean: LapMean & { readonly sentence: string } | undefined
   /** What is missing where there is no thrust. */
   readonly missing: readonly string[]
 }
@@ -106,14 +109,24 @@ export function showRun(run: Run, context: RunContext): Shown {
   }
   return {
     course: { segments: whole.stretches, duration: whole.seconds, from: whole.from, end: whole.end, peakSpeed: topSpeed(whole.stretches) },
-    legs, atLeast: whole.atLeast, missing,
+    legs, atLeast: whole.atLeast, missing, mean: burden && meanOf(run, input, burden),
     thrust: burden && { pieces, unit: burden.unit, without: burden.without },
   }
 }
 
+/** Undefined for a single move, which does not come again, and where the nameplate has no rated thrust. */
+function meanOf(run: Run, input: JudgeInput, burden: Burden): Shown['mean'] {
+  const rated = input.nameplate?.ratedThrust
+  const numbers = run.moves.map(({ move }) => move).join()
+  const lap = lapsOf(input).laps.find(({ rows, cycle }) => (cycle !== undefined) === (run.key === 'duty') && rows.map(({ move }) => move.move).join() === numbers)
+  if (rated === undefined || !lap || run.key.startsWith('move')) return undefined
+  const mean = lapMean(input, lap, burden, rated)
+  return { ...mean, sentence: lapSentence(lap, mean, burden, rated) }
+}
+
 /** Judging takes more than a picture needs: no rules of a site and no other versions. */
 function judgeInput({ content, axis, nameplate }: RunContext): JudgeInput {
-  return { content, axis: { axisKind: axis.axisKind, flags: axis.flags }, unit: { model: nameplate?.model ?? '' }, rules: [], ...(nameplate && { nameplate }) }
+  return { content, axis: { axisKind: axis.axisKind, flags: axis.flags, ...(axis.duty && { duty: axis.duty }) }, unit: { model: nameplate?.model ?? '' }, rules: [], ...(nameplate && { nameplate }) }
 }
 
 const pushOf = ({ target, approach = target }: Move): 1 | -1 => target >= approach ? 1 : -1
@@ -129,6 +142,9 @@ function limitsOf(part: Part, move: Move, { content: { setup }, nameplate }: Jud
 }
 
 const shareOf = ({ need, limit }: { need: number, limit: number }) => need === 0 ? 0 : need / limit
+
+/** Where a run comes nearest to a limit, over all its moves. */
+export const worstOf = ({ legs }: Shown): Leg['thrust'] => legs.flatMap(({ thrust }) => thrust ?? []).toSorted((one, other) => shareOf(other) - shareOf(one) || other.need - one.need)[0]
 
 /** The need that is the largest part of its limit; where nothing limits it the largest. */
 function nearest(pieces: readonly ThrustPiece[]): Leg['thrust'] {

@@ -20,8 +20,6 @@ export interface ShownMotion {
   readonly seconds: number
   /** A jerk limit makes it longer than can be told. */
   readonly atLeast: boolean
-  /** Seconds at the speed asked for; 0 where it is not reached. */
-  readonly cruise: number
 }
 
 /** The movement of a row from where it sets off; undefined for an unused row and where the start is not known. */
@@ -30,11 +28,10 @@ export function motionOf(content: Content, number: number, nameplate?: Nameplate
   const start = move && startOf(move, content.moves)
   if (!move || !start || isUnused(move)) return undefined
   const motion = profile(move, start.target, { setup: content.setup, ...(nameplate?.stopsAtApproach !== undefined && { stopsAtApproach: nameplate.stopsAtApproach }) })
-  const cruise = motion.segments.filter(segment => segment.a === 0 && Math.abs(segment.v0) >= move.speed * (1 - 1e-9)).reduce((sum, segment) => sum + segment.t1 - segment.t0, 0)
-  return { move, profile: motion, start, ...moveTime(motion, content.setup), cruise }
+  return { move, profile: motion, start, ...moveTime(motion, content.setup) }
 }
 
-/** True where a change comes to nothing: a speed that was not reached before is not reached now. */
-export function sameMotion(one: ShownMotion, other: ShownMotion): boolean {
-  return JSON.stringify(one.profile.segments) === JSON.stringify(other.profile.segments)
+/** Seconds at the speed asked for; 0 where it is not reached. */
+export function cruiseSeconds(segments: Profile['segments'], speed: number): number {
+  return segments.filter(({ a, v0 }) => a === 0 && Math.abs(v0) >= speed * (1 - 1e-9)).reduce((sum, { t0, t1 }) => sum + t1 - t0, 0)
 }

@@ -1,14 +1,9 @@
-import { usedRows, type Row } from '../motion/chains'
+import { usedRows } from '../motion/chains'
 import { isAbove } from '../motion/exact'
-import { loadsOver, rms, type Load } from '../motion/rms'
-import { sizeOf } from '../motion/thrust'
-import { lapStart, timeline } from '../motion/timeline'
-import type { Move } from '../settings/types'
 import { answers } from './answers'
 import { weigh, type Burden } from './burden'
 import { chainsOf } from './chains-to-judge'
-import { surroundings } from './driven'
-import { about, movesInWords, quantity, sentence } from './format'
+import { lapMean, lapSentence, lapsOf, type Lap } from './lap-rms'
 import { atMove } from './pointers'
 import type { CheckResult, JudgeInput, Rule } from './types'
 
@@ -27,65 +22,20 @@ export const thrustRms: Rule = {
   judge,
 }
 
-/** Moves that come again and again. */
-interface Lap {
-  readonly rows: readonly Row[]
-  readonly words: string
-  /** It is so for certain; another is only looked at as if. */
-  readonly certain: boolean
-  /** Seconds of one lap where they are declared. */
-  readonly cycle?: number
-}
-
 function judge(input: JudgeInput): CheckResult[] {
-  const rows = usedRows(input.content.moves)
-  const duty = dutyOf(input, rows)
-  const laps = [...duty.laps, ...chainsOf(rows).map(({ rows, endless }): Lap => {
-    const moves = sentence(movesInWords(rows.map(({ move }) => move.move)))
-    return { rows, certain: endless, words: endless ? `${moves} without end` : `${moves}, if begun again and again,` }
-  })]
+  const { laps, missing: missingRows } = lapsOf(input)
   const { burden, missing } = weigh(input)
   const rated = input.nameplate?.ratedThrust
-  const lacking = new Set([...missing, ...rated === undefined ? ['nameplate.ratedThrust'] : [], ...duty.missing])
+  const lacking = new Set([...missing, ...rated === undefined ? ['nameplate.ratedThrust'] : [], ...missingRows])
   const results = burden && rated !== undefined ? laps.flatMap(lap => overLap(input, lap, burden, rated)) : []
   return lacking.size === 0 ? results : [...results, unknown('Thrust over time', [...lacking], placesOf(laps))]
 }
 
-/** The declared duty as a lap, or the rows that it names and the table lacks. */
-function dutyOf({ axis: { duty } }: JudgeInput, rows: readonly Row[]): { laps: Lap[], missing: string[] } {
-  if (!duty) return { laps: [], missing: [] }
-  const byNumber = new Map(rows.map(row => [row.move.move, row]))
-  const missing = [...new Set(duty.moves.filter(number => !byNumber.has(number)))].map(number => `move ${number}`)
-  if (missing.length > 0) return { laps: [], missing }
-  return { laps: [{ rows: duty.moves.flatMap(number => byNumber.get(number) ?? []), certain: true, words: 'The duty', cycle: duty.cycleTime / 1000 }], missing }
-}
-
 function overLap(input: JudgeInput, lap: Lap, burden: Burden, rated: number): CheckResult[] {
-  const { loads, time } = loadsOf(input, lap, burden)
-  const thrust = rms(loads)
-  const percent = 100 * thrust / rated
-  if (!isAbove(thrust, near / 100 * rated)) return []
-  const say = lap.certain && isAbove(thrust, rated) ? stop : warn
-  return [say([...new Set(lap.rows.map(row => atMove(row)))],
-    `${lap.words} ${lap.rows.length === 1 || lap.cycle !== undefined ? 'needs' : 'need'} ${about(thrust)} ${burden.unit} in the mean over ${about(time)} s, ${about(percent, isAbove(percent, 100) ? 100 : undefined)} % of the rated ${quantity(rated, burden.unit)}${burden.without}.`,
-    { rms: thrust, percent, time, moves: lap.rows.map(({ move }) => move.move) })]
-}
-
-function loadsOf(input: JudgeInput, { rows, cycle = 0 }: Lap, { effortOf, base }: Burden): { loads: Load[], time: number } {
-  const moves = rows.map(({ move }, index) => waitingFor(move, rows[(index + 1) % rows.length]))
-  const pressForce = (number: number) => (moves.find(({ move }) => move === number)?.forceLimit ?? 0) / 100 * base
-  const line = timeline(moves, lapStart(moves, input.content.setup.modulo), surroundings(input))
-  const loads = loadsOver(line, effortOf, { pressForce })
-  const rest = cycle - line.seconds
-  if (rest <= 0) return { loads, time: line.seconds }
-  const last = moves[moves.length - 1]
-  const holding = last?.kind === 'press' ? pressForce(last.move) : sizeOf(effortOf(0, 0))
-  return { loads: [...loads, { force: holding, time: rest }], time: cycle }
-}
-
-/** A dwell is waited only before the row that `next` names. */
-function waitingFor(move: Move, following: Row | undefined): Move {
-  return move.next === following?.move.move ? move : { ...move, dwell: undefined }
+  const mean = lapMean(input, lap, burden, rated)
+  if (!isAbove(mean.thrust, near / 100 * rated)) return []
+  const say = lap.certain && isAbove(mean.thrust, rated) ? stop : warn
+  return [say(placesOf([lap]), lapSentence(lap, mean, burden, rated), { rms: mean.thrust, percent: mean.percent, time: mean.time, moves: lap.rows.map(({ move }) => move.move) })]
 }
 
 function placesOf(laps: readonly Lap[]): string[] {

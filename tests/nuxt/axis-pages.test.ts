@@ -21,6 +21,19 @@ registerEndpoint('/api/versions/15', () => today)
 registerEndpoint('/api/versions/14', () => knownGood)
 registerEndpoint('/api/versions/15/changes', () => changesAnswer(before, after))
 registerEndpoint('/api/judging-context', () => ({ problem: null, registered: null, axis: null, current: null, knownGood: null, nextNumber: 16, nameplate, rules: [] }))
+registerEndpoint('/api/axes/tag:LID-03.Z/fittings', () => ({ items: [] }))
+const asked: string[] = []
+registerEndpoint('/api/axes/tag:LID-03.Z/values', (event) => {
+  asked.push(event.path.split('?')[1] ?? '')
+  const step = (number: number, at: string, value: number, rest = {}) => ({
+    versionId: number, number, at, capturedAt: at, value, unit: '%', before: { versionId: number - 1, number: number - 1, seenAt: at }, occasion: 'routine', changedBy: null, allowedBy: null, storedBy: 'station 2, nightly',
+    reason: null, workOrder: null, serial: 'HL40-24-00817', model: 'HL40-200V', ...rest,
+  })
+  return {
+    section: 'setup', field: 'thrustLimit', row: null, versions: 15, leftOut: 0, steps: [step(1, '2025-02-12T08:00:00.000Z', 38, { before: null, changedBy: 'Tobias Achterberg' }), step(15, '2026-11-30T05:12:00.000Z', 55)],
+    knownGood: [{ versionId: 14, number: 14, from: '2026-09-03T07:20:00.000Z', to: null, value: 38 }], bounds: [{ by: 'rule', max: 45, from: '2025-09-01T00:00:00.000Z', to: null, words: 'Jars crack above 300 N' }],
+  }
+})
 registerEndpoint('/api/machines/3', () => ({ id: 3, rev: 1, lineId: 1, name: 'LID-03' }))
 registerEndpoint('/api/me/letters', () => ({ choices: [], watches: [] }))
 registerEndpoint('/api/units', () => ({ items: [], next: null }))
@@ -64,7 +77,7 @@ describe('the page of an axis', () => {
   it('shows today against the known-good, and where to compare them', async () => {
     const page = await open(AxisPage, '/axes/LID-03.Z')
     expect(page.get('h1').text()).toBe('LID-03.Z')
-    expect(page.findAll('h2').map(head => head.text())).toEqual(['Its life', 'On the rail', 'Checks', 'Moves', 'Motion', 'Setup'])
+    expect(page.findAll('h2').map(head => head.text())).toEqual(['Its life', 'On the rail', 'Checks', 'Moves', 'Motion', 'Setup', 'A value over time'])
     expect(page.findAll('a').some(link => link.attributes('href') === '/changes?a=14&b=15')).toBe(true)
     expect(words(page.get('dl').text())).toContain('v15, 30 Nov 2026 06:12 CET')
   })
@@ -135,6 +148,33 @@ describe('other pages', () => {
     const row = page.findAll('tbody tr').find(one => one.text().startsWith('thrust limit'))
     expect(page.findAll('thead a').map(link => link.text())).toEqual(['LID-03.Z', 'NEW-01.X'])
     expect(row?.findAll('td').map(cell => cell.text())).toEqual(['55', '–'])
+  })
+})
+
+describe('a value over time', () => {
+  const sectionOf = (page: Awaited<ReturnType<typeof open>>) => {
+    const section = page.findAll('section').find(one => one.find('h2').exists() && one.get('h2').text() === 'A value over time')
+    if (!section) throw new Error('no value over time')
+    return section
+  }
+
+  it('begins with the heaviest change, and says who, since when, and what it stands against', async () => {
+    const section = sectionOf(await open(AxisPage, '/axes/LID-03.Z'))
+    expect(asked.at(-1)).toBe('section=setup&field=thrustLimit')
+    expect(words(section.get('header').text())).toContain('Thrust limit: 1 change in 15 versions, 1 by nobody named')
+    const [newest, first] = section.get('.steps').findAll('tbody tr').map(row => words(row.text()))
+    expect(newest).toMatch(/^1 ?30 Nov 2026 06:12 CET.*before 38.*after 55.*352 N ?nobody named/)
+    expect(newest).toContain('v14 to v15')
+    expect(first).toContain('first reading')
+    expect(words(section.get('details').text())).toContain('at most 45 % of rated')
+  })
+
+  it('asks for the value that is chosen', async () => {
+    const section = sectionOf(await open(AxisPage, '/axes/LID-03.Z'))
+    const [where] = section.findAll('select')
+    await where?.setValue('move 5')
+    await settle()
+    expect(asked.at(-1)).toBe('section=move&field=target&row=5')
   })
 })
 

@@ -1,5 +1,5 @@
 import type { Profile } from '#shared/motion/profile'
-import { acrossTexts, chartHeight, endTexts, round, timeChart, type ChartLine, type ChartText, type TimeChart } from './time-chart'
+import { acrossTexts, chartHeight, endTexts, round, timeChart, type ChartLine, type CurveLayout, type TimeChart } from './time-chart'
 
 /*
  * Speed or position over time, old and new on one time base, or one alone. Pieces are exact: a stretch of constant
@@ -14,20 +14,6 @@ export interface MotionInput {
   readonly after: Course
   /** Drawn across: limits, or the place of something that it comes near. */
   readonly lines: readonly ChartLine[]
-}
-
-type Side = 'before' | 'after'
-export interface MotionLayout {
-  readonly width: number
-  readonly height: number
-  readonly frame: string
-  readonly grid: string
-  readonly before: string
-  readonly after: string
-  readonly drops: readonly { readonly d: string, readonly tone: Side }[]
-  readonly ends: readonly { readonly x: number, readonly y: number, readonly tone: Side }[]
-  readonly lines: string
-  readonly texts: readonly ChartText[]
 }
 
 type Scale = Pick<TimeChart, 'x' | 'y'>
@@ -61,7 +47,7 @@ function rangeOf(what: MotionInput['what'], courses: readonly Course[], lines: r
 }
 
 /** Lays one picture out for a width in pixels; its height is always the same. */
-export function layoutMotion({ what, before, after, lines }: MotionInput, width: number): MotionLayout {
+export function layoutMotion({ what, before, after, lines }: MotionInput, width: number): CurveLayout {
   const sides = [...(before ? [{ one: before, tone: 'before' as const }] : []), { one: after, tone: 'after' as const }]
   const courses = sides.map(side => side.one)
   const [low, high] = rangeOf(what, courses, lines)
@@ -70,11 +56,11 @@ export function layoutMotion({ what, before, after, lines }: MotionInput, width:
   const path = what === 'speed' ? speedPath : positionPath
   const endOf = (one: Course) => what === 'speed' ? 0 : one.end
   return {
-    width, height: chartHeight, frame: chart.frame, grid: chart.grid,
-    before: before ? path(before, chart) : '', after: path(after, chart),
+    width, height: chartHeight, frame: chart.frame, grid: chart.grid, zero: '',
+    curves: sides.map(({ one, tone }) => ({ tone, d: path(one, chart) })),
     drops: sides.map(({ one, tone }) => ({ tone, d: `M${round(x(one.duration))} ${round(y(endOf(one)))}V${foot + 20}` })),
     ends: what === 'speed' ? [] : sides.map(({ one, tone }) => ({ tone, x: round(x(one.duration)), y: round(y(one.end)) })),
-    lines: lines.map(line => `M${left} ${round(y(line.at))}H${right}`).join(''),
+    lines: lines.map(({ at, tone = 'line' }) => ({ tone, d: `M${left} ${round(y(at))}H${right}` })),
     texts: [
       ...chart.texts, ...acrossTexts(lines, chart),
       ...endTexts(sides.map(({ one, tone }) => ({ seconds: one.duration, tone })).reverse(), chart),

@@ -1,6 +1,7 @@
+import { crowdBox, type CrowdBox } from './balloons'
 import type { RailInput, RailMove, RailSide } from './rail-input'
 import { figure, scaleLabels, scaleSteps, scaleTicks, textWidth, type Anchor, type PlacedLabel } from './scale'
-import { laneIntervals, stackBalloons, type Crowd } from './stack'
+import { laneIntervals, stackBalloons } from './stack'
 
 /*
  * The rail, laid out for the width that was measured, so that its text stays 12 px at every width. Three bands lie between
@@ -17,7 +18,6 @@ export interface RailText extends PlacedLabel { readonly y: number, readonly ton
 export type Tone = 'before' | 'after' | 'ink' | 'line'
 interface Toned { readonly tone: Tone, readonly d: string }
 export interface RailBalloon { readonly x: number, readonly y: number, readonly move: number, readonly tone: Tone, readonly filled: boolean }
-export interface RailCrowd extends Box { readonly text: string, readonly moves: readonly number[] }
 export interface RailPress { readonly bar: string, readonly head: string | null, readonly ringX: number, readonly y: number, readonly tone: Tone }
 
 export interface RailHalf {
@@ -25,7 +25,7 @@ export interface RailHalf {
   readonly feet: readonly Toned[]
   readonly presses: readonly RailPress[]
   readonly balloons: readonly RailBalloon[]
-  readonly crowds: readonly RailCrowd[]
+  readonly crowds: readonly CrowdBox[]
   readonly softLines: readonly Toned[]
   readonly texts: readonly RailText[]
   /** Presses folded to one bar, to be named beside the picture. */
@@ -83,11 +83,6 @@ function drawHalf(arranged: Arranged, frame: Frame, edge: number, outward: -1 | 
   const cy = (row: number) => round(edge + outward * (reach + row * frame.step + frame.radius))
   const laneY = (lane: number) => round(edge + outward * (footBand + (lane + 0.5) * laneHeight))
   const rows = stack.rows
-  const crowdBox = (crowd: Crowd): RailCrowd => {
-    const text = `+${crowd.moves.length}`
-    const width = textWidth(text) + 10
-    return { x: round(Math.min(Math.max(crowd.px - width / 2, frame.left), frame.right - width)), y: cy(rows) - frame.radius + 1, width: round(width), height: 2 * frame.radius - 2, text, moves: crowd.moves }
-  }
   const folds = lanes.folded.map(knot => ({ from: Math.min(...knot.map(one => one.from)), to: Math.max(...knot.map(one => one.to)), moves: knot.map(one => one.move).sort((a, b) => a - b) }))
   const numbers: RailText[] = lanes.placed.map(({ item, lane }) => besideRing(item.from, item.to, laneY(lane), String(item.move), tone))
   const counts: RailText[] = folds.map(fold => besideRing(fold.from, fold.to, laneY(0), `${fold.moves.length}×`, tone))
@@ -100,7 +95,7 @@ function drawHalf(arranged: Arranged, frame: Frame, edge: number, outward: -1 | 
       ...folds.map(fold => pressOf(fold.from, fold.to, laneY(0), tone)),
     ],
     balloons: stack.placed.map(({ item, row }) => ({ x: item.px, y: cy(row), move: item.move, tone: toneOf(item.changed), filled: item.changed && tone === 'after' })),
-    crowds: stack.crowds.map(crowdBox),
+    crowds: stack.crowds.map(crowd => crowdBox(crowd, cy(rows), frame.left, frame.right, frame.radius)),
     softLines: soft.lines,
     texts: [...numbers, ...counts, ...soft.texts],
     folds: lanes.folded.map(knot => ({

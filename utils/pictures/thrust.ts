@@ -1,5 +1,5 @@
 import { figure } from './scale'
-import { acrossTexts, chartHeight, endTexts, round, timeChart, type ChartLine, type ChartText } from './time-chart'
+import { acrossTexts, chartHeight, endTexts, round, timeChart, type ChartTone, type CurveLayout } from './time-chart'
 
 /*
  * Thrust over time against what the limits leave, towards plus above the zero line and towards minus below it. Thrust stays
@@ -18,17 +18,12 @@ export interface ThrustPiece {
   readonly minus: number
 }
 
-export interface ThrustLayout {
-  readonly width: number
-  readonly height: number
-  readonly frame: string
-  readonly grid: string
-  readonly zero: string
-  /** One line, two where an off-centre load makes a band. */
-  readonly curves: readonly string[]
-  readonly limits: readonly string[]
-  readonly drop: string
-  readonly texts: readonly ChartText[]
+/** Thrust of one movement, or of what was and what is on one time base. */
+export interface ThrustInput {
+  readonly before?: readonly ThrustPiece[]
+  readonly after: readonly ThrustPiece[]
+  /** After the point of a limit's name. */
+  readonly digits: number
 }
 
 /** Limits further off than this many times the thrust would press the curve flat: they stand in the numbers. */
@@ -36,34 +31,52 @@ const far = 5
 
 type Value = (piece: ThrustPiece) => number
 
-/** Lays one picture out for a width in pixels; `digits` after the point of a limit's name. */
-export function layoutThrust(pieces: readonly ThrustPiece[], width: number, digits: number): ThrustLayout {
-  const most = Math.max(0, ...pieces.map(piece => piece.most))
-  const least = Math.min(0, ...pieces.map(piece => piece.least))
-  const reach = Math.max(most, -least) || 1
-  const drawn = (sign: 1 | -1, limit: Value) => pieces.some(piece => (sign === 1 ? piece.most > 0 : piece.least < 0)) && pieces.every(piece => limit(piece) <= far * reach)
-  const plus = drawn(1, piece => piece.plus)
-  const minus = drawn(-1, piece => piece.minus)
-  const high = Math.max(most, ...(plus ? pieces.map(piece => piece.plus) : []))
-  const low = Math.min(least, ...(minus ? pieces.map(piece => -piece.minus) : []))
+type Tone = 'before' | 'after'
+interface Side { readonly tone: Tone, readonly pieces: readonly ThrustPiece[] }
+/** A limit of one sign, level by level; named at its highest, a limit that changes within the picture is read off the scale. */
+interface Limit { readonly tone: ChartTone, readonly sign: 1 | -1, readonly pieces: readonly ThrustPiece[], readonly highest: number }
+
+const limitOf = (sign: 1 | -1): Value => sign === 1 ? piece => piece.plus : piece => piece.minus
+
+/** Limits of the signs that are asked for, not further off than the curve bears; the old one only where it is another one. */
+function limitsOf(sides: readonly Side[], reach: number, digits: number): Limit[] {
+  return ([1, -1] as const).flatMap((sign) => {
+    const value = limitOf(sign)
+    const asked = sides.some(({ pieces }) => pieces.some(piece => (sign === 1 ? piece.most > 0 : piece.least < 0)))
+    const drawn = sides.filter(({ pieces }) => asked && pieces.every(piece => value(piece) <= far * reach))
+      .map(({ tone, pieces }): Limit => ({ tone: tone === 'after' ? 'line' : tone, sign, pieces, highest: sign * Number(Math.max(...pieces.map(value)).toFixed(digits)) }))
+    const after = drawn.find(({ tone }) => tone === 'line')
+    return drawn.filter(limit => limit === after || limit.highest !== after?.highest)
+  })
+}
+
+/** Lays one picture out for a width in pixels; its height is always the same. */
+export function layoutThrust({ before, after, digits }: ThrustInput, width: number): CurveLayout {
+  const sides: Side[] = [...(before ? [{ tone: 'before' as const, pieces: before }] : []), { tone: 'after', pieces: after }]
+  const all = sides.flatMap(({ pieces }) => pieces)
+  const most = Math.max(0, ...all.map(piece => piece.most))
+  const least = Math.min(0, ...all.map(piece => piece.least))
+  const limits = limitsOf(sides, Math.max(most, -least) || 1, digits)
+  const edges = limits.flatMap(({ sign, pieces }) => pieces.map(piece => sign * limitOf(sign)(piece)))
+  const high = Math.max(most, ...edges)
+  const low = Math.min(least, ...edges)
   const air = (high - low) * 0.08 || 1
-  const seconds = pieces.at(-1)?.t1 ?? 0
-  const chart = timeChart(low - (low === 0 ? 0 : air), high + (high === 0 ? 0 : air), seconds, width)
+  const ends = sides.map(({ tone, pieces }) => ({ tone, seconds: pieces.at(-1)?.t1 ?? 0 }))
+  const chart = timeChart(low - (low === 0 ? 0 : air), high + (high === 0 ? 0 : air), Math.max(...ends.map(({ seconds }) => seconds)), width)
   const { x, y, left, right, foot } = chart
-  const steps = (value: Value) => pieces.map((piece, index) => `${index === 0 ? 'M' : 'L'}${round(x(piece.t0))} ${round(y(value(piece)))}H${round(x(piece.t1))}`).join('')
-  const band = pieces.some(piece => piece.most !== piece.least)
-  /** Named at the highest: a limit that changes within the picture is read off the scale. */
-  const lines: ChartLine[] = [
-    ...(plus ? [{ at: Math.max(...pieces.map(piece => piece.plus)), word: 'limit' }] : []),
-    ...(minus ? [{ at: -Math.max(...pieces.map(piece => piece.minus)), word: 'limit' }] : []),
+  const steps = (pieces: readonly ThrustPiece[], value: Value) => pieces.map((piece, index) => `${index === 0 ? 'M' : 'L'}${round(x(piece.t0))} ${round(y(value(piece)))}H${round(x(piece.t1))}`).join('')
+  /** One line, two where an off-centre load makes a band. */
+  const curvesOf = ({ tone, pieces }: Side) => [
+    { tone, d: steps(pieces, piece => piece.most) },
+    ...(pieces.some(piece => piece.most !== piece.least) ? [{ tone, d: steps(pieces, piece => piece.least) }] : []),
   ]
   return {
-    width, height: chartHeight, frame: chart.frame, grid: chart.grid,
+    width, height: chartHeight, frame: chart.frame, grid: chart.grid, ends: [],
     zero: `M${left} ${round(y(0))}H${right}`,
-    curves: [steps(piece => piece.most), ...(band ? [steps(piece => piece.least)] : [])],
-    limits: [...(plus ? [steps(piece => piece.plus)] : []), ...(minus ? [steps(piece => -piece.minus)] : [])],
-    drop: `M${round(x(seconds))} ${round(y(0))}V${foot + 20}`,
-    texts: [...chart.texts, ...acrossTexts(lines.map(line => ({ ...line, at: Number(line.at.toFixed(digits)) })), chart), ...endTexts([{ seconds, tone: 'after' }], chart)],
+    curves: sides.flatMap(curvesOf),
+    lines: limits.map(({ tone, sign, pieces }) => ({ tone, d: `${steps(pieces, piece => sign * limitOf(sign)(piece))}H${right}` })),
+    drops: ends.map(({ tone, seconds }) => ({ tone, d: `M${round(x(seconds))} ${round(y(0))}V${foot + 20}` })),
+    texts: [...chart.texts, ...acrossTexts(limits.map(({ highest, tone }) => ({ at: highest, word: tone === 'before' ? 'limit before' : 'limit', tone })), chart), ...endTexts(ends.toReversed(), chart)],
   }
 }
 

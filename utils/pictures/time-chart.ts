@@ -16,8 +16,27 @@ export interface ChartText { readonly x: number, readonly y: number, readonly te
 export interface ChartLine {
   readonly at: number
   readonly word: string
+  /** Its name in the colour of the side that it belongs to. */
+  readonly tone?: ChartTone
   /** Where its name stands; at the right unless the curve is there. */
   readonly side?: 'left' | 'right'
+}
+
+interface Toned { readonly d: string, readonly tone: ChartTone }
+/** A picture over time as it is drawn: what was before what is, so that what is lies on top. */
+export interface CurveLayout {
+  readonly width: number
+  readonly height: number
+  readonly frame: string
+  readonly grid: string
+  /** The level of nothing, where a picture has two sides. */
+  readonly zero: string
+  readonly curves: readonly Toned[]
+  /** Limits and places, dashed. */
+  readonly lines: readonly Toned[]
+  readonly drops: readonly Toned[]
+  readonly ends: readonly { readonly x: number, readonly y: number, readonly tone: ChartTone }[]
+  readonly texts: readonly ChartText[]
 }
 
 export interface TimeChart {
@@ -56,12 +75,12 @@ export function timeChart(low: number, high: number, seconds: number, width: num
 /** Lines across the picture, each named on itself; a name that would touch another stands at the other end. */
 export function acrossTexts(lines: readonly ChartLine[], { left, right, y }: TimeChart): ChartText[] {
   const placed: ChartText[] = []
-  for (const { at, word, side = 'right' } of [...lines].sort((one, other) => one.at - other.at)) {
+  for (const { at, word, side = 'right', tone = 'line' } of [...lines].sort((one, other) => one.at - other.at)) {
     const wanted: Anchor = side === 'right' ? 'end' : 'start'
     const height = round(y(at)) - 5
     const touches = placed.some(other => other.anchor === wanted && Math.abs(other.y - height) < 14)
     const anchor = touches ? wanted === 'end' ? 'start' : 'end' : wanted
-    placed.push({ x: anchor === 'end' ? right - 2 : left + 4, y: height, text: `${word} ${figure(at)}`, anchor, tone: 'line' })
+    placed.push({ x: anchor === 'end' ? right - 2 : left + 4, y: height, text: `${word} ${figure(at)}`, anchor, tone })
   }
   return placed
 }

@@ -74,8 +74,8 @@ export interface Shown {
   readonly legs: readonly Leg[]
   readonly atLeast: boolean
   readonly thrust: { readonly pieces: readonly ThrustPiece[], readonly unit: string, readonly without: string } | undefined
-  /** Of a chain or the duty: thrust in the mean, as its rule reckons it, and the rule's sentence. */
-  readonly mean: LapMean & { readonly sentence: string } | undefined
+  /** Of a chain or the duty: thrust in the mean, as its rule reckons it, the rule's sentence, and where a lap begins. */
+  readonly mean: LapMean & { readonly sentence: string, readonly from: number } | undefined
   /** What is missing where there is no thrust. */
   readonly missing: readonly string[]
 }
@@ -121,7 +121,7 @@ function meanOf(run: Run, input: JudgeInput, burden: Burden): Shown['mean'] {
   const lap = lapsOf(input).laps.find(({ rows, cycle }) => (cycle !== undefined) === (run.key === 'duty') && rows.map(({ move }) => move.move).join() === numbers)
   if (rated === undefined || !lap || run.key.startsWith('move')) return undefined
   const mean = lapMean(input, lap, burden, rated)
-  return { ...mean, sentence: lapSentence(lap, mean, burden, rated) }
+  return { ...mean, sentence: lapSentence(lap, mean, burden, rated), from: lapStart(run.moves, input.content.setup.modulo) }
 }
 
 /** Judging takes more than a picture needs: no rules of a site and no other versions. */

@@ -29,8 +29,8 @@ export function pairRows({ before, after }: RunPair, unit: string): Row[] {
       const worst = worstOf(shown)
       return worst && percentOf(worst)
     }),
-    row(`${word} in the mean`, force, ({ mean }) => mean?.thrust, digits),
-    row('of the rated', '%', ({ mean }) => mean?.percent, 1),
+    row(`mean ${word}, begun again and again`, force, ({ mean }) => mean?.thrust, digits),
+    row('of the rated one', '%', ({ mean }) => mean?.percent, 1),
   ].filter(({ before: was, after: is }) => was !== undefined || is !== undefined)
 }
 

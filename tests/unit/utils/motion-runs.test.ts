@@ -32,6 +32,24 @@ describe('the runs of an axis', () => {
   })
 })
 
+describe('the mean of a run', () => {
+  const plate: Nameplate = { ...nameplate, movingMass: 1, rotorInertia: 0, lead: 10 }
+  it('is told of a chain and of the duty, in the words of the rule; a single move does not come again', () => {
+    const duty = context(before, plate, { moves: [1, 0], cycleTime: 4000 })
+    expect(showRun(run('duty', duty), duty).mean).toMatchObject({ time: 4, from: 5, sentence: expect.stringMatching(/^The duty needs [\d.]+ N in the mean over 4 s, [\d.]+ % of the rated 640 N\.$/) })
+    const { mean } = showRun(run('chain 3', context(before, plate)), context(before, plate))
+    // Begun again where it ends, at 5 mm, and not at 104 where the picture begins.
+    expect(mean).toMatchObject({ from: 5, sentence: expect.stringMatching(/^Moves 3 to 5, if begun again and again, need [\d.]+ N in the mean/) })
+    expect(showRun(run('move 1', context(before, plate)), context(before, plate)).mean).toBeUndefined()
+  })
+
+  it('is not told where the rated thrust is not known', () => {
+    const { ratedThrust: _, ...rest } = plate
+    const unrated = context(before, { ...rest, forceBase: 'peak-thrust' })
+    expect(showRun(run('chain 3', unrated), unrated).mean).toBeUndefined()
+  })
+})
+
 describe('a run over time', () => {
   it('strings its legs without gaps, to the same end as the timeline', () => {
     fc.assert(fc.property(fc.array(fc.integer({ min: 0, max: 7 }), { minLength: 1, maxLength: 12 }), (numbers) => {

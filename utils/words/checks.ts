@@ -38,7 +38,7 @@ export function checkLines(checks: readonly CheckResult[], content: Content, con
   })
 }
 
-/** '1 stop, 1 warning, 1 accepted, 2 notes and 3 unknown folded'; what stands there when nothing speaks up. */
+/** '1 stop, 1 warning, 1 accepted; folded below: 2 notes, 3 not judged'; what stands there when nothing speaks up. */
 export function checksSentence(all: readonly (CheckResult & { readonly waived?: unknown })[], judged: number): string {
   const checks = all.filter(check => !check.waived)
   const count = (level: CheckResult['level']) => checks.filter(check => check.level === level).length
@@ -48,7 +48,7 @@ export function checksSentence(all: readonly (CheckResult & { readonly waived?: 
   const taken = accepted ? [`${accepted} accepted`] : []
   const rules = counted(judged, 'rule', 'rules')
   if (judged === 0) return 'nothing to judge'
-  return [[...(open.length ? open : [`${rules} judged, no stop and no warning`]), ...taken].join(', '), ...(folded.length ? [`${folded.join(' and ')} folded`] : [])].join('; ')
+  return [[...(open.length ? open : [`${rules} judged, no stop and no warning`]), ...taken].join(', '), ...(folded.length ? [`folded below: ${folded.join(', ')}`] : [])].join('; ')
 }
 
 /** What a rule over several axes says, with the names of what is missing in the words of the screens. */

@@ -14,6 +14,7 @@ export function useTime(zone?: MaybeRefOrGetter<string | undefined>) {
     span: (iso: string) => formatSpan(now.value.getTime() - new Date(iso).getTime()),
     exact: (iso: string) => formatExact(iso, timeZone.value),
     short: (iso: string) => formatShort(iso, timeZone.value, now.value),
+    when: (iso: string) => formatWhen(iso, timeZone.value, now.value),
     day: (iso: string) => formatDay(iso, timeZone.value, now.value),
   }
 }

@@ -13,5 +13,12 @@ export function formatDate(iso: string, timeZone: string): string {
   return formatDay(iso, timeZone, farAway)
 }
 
+/** '02:19 CET' on the day of `now`, else 'Mon 30 Nov 02:19 CET': the clock first, its zone always beside it. */
+export function formatWhen(iso: string, timeZone: string, now: Date): string {
+  const clock = `${formatShort(iso, timeZone, now).slice(-5)} ${zoneWord(new Date(iso), timeZone)}`
+  if (formatDate(iso, timeZone) === formatDate(now.toISOString(), timeZone)) return clock
+  return `${formatExact(iso, timeZone).slice(0, 3)} ${formatDay(iso, timeZone, now)} ${clock}`
+}
+
 /** A year that nothing here was made in, so that the year is always written. */
 const farAway = new Date(0)

@@ -1,0 +1,90 @@
+import { bytesOf, nextToSend, type OutboxEntry } from '~/utils/swap/outbox'
+
+/** Refusals of a read-back that the vault keeps as an attempt all the same: `current` is the swap with it. */
+const keptAttempts = new Set(['read-back-serial', 'read-back-model', 'read-back-twice', 'settings-unreadable'])
+
+/** How often is tried again while something waits, in ms. */
+const again = 8000
+
+export type ToSend = Pick<OutboxEntry, 'swapId' | 'tag' | 'path' | 'body' | 'says' | 'rev'>
+
+/** Keeps what was entered and sends it in order; what the vault refuses stays, with the reason, until the person has decided. */
+export function useOutbox() {
+  const store = useOutboxStore()
+  const session = useSession()
+  const api = useApi()
+
+  /** Kept at once, sent as soon as it goes. False where this browser has no room to keep it. */
+  function enter(entry: ToSend): boolean {
+    const { me } = session
+    if (!me) return false
+    try {
+      store.add({ ...entry, key: newRequestKey(), personId: me.id, person: me.name, enteredAt: new Date().toISOString(), refused: null })
+    }
+    catch (failure) {
+      if (failure instanceof DOMException) return false
+      throw failure
+    }
+    void send()
+    return true
+  }
+
+  function post({ path, body, rev, key }: OutboxEntry): Promise<unknown> {
+    if (body.kind === 'json') return api.post(path, { ...body.value, rev }, { key })
+    return api.post(path, bytesOf(body.base64), { key, query: { rev, name: body.name }, headers: { 'content-type': body.mediaType } })
+  }
+
+  async function sendOne(entry: OutboxEntry): Promise<boolean> {
+    try {
+      const answer = await post(entry)
+      store.heard(true)
+      store.trouble = null
+      store.settle(entry, answer)
+      return true
+    }
+    catch (failure) {
+      const problem = toProblem(failure)
+      store.heard(!problem.unanswered)
+      // Without reception, without a session, or while the vault is overrun or full it is tried again; the rest is an answer.
+      const { status } = problem.problem
+      const later = problem.unanswered || status === 401 || status === 429 || status >= 500
+      store.trouble = later && !problem.unanswered ? problem.problem : null
+      if (!later && keptAttempts.has(problem.code) && problem.problem.current) store.settle(entry, problem.problem.current)
+      else if (!later) store.refuse(entry.key, problem.problem)
+      return !later
+    }
+  }
+
+  async function send(): Promise<void> {
+    if (store.sending || !session.me) return
+    store.sending = true
+    try {
+      for (let entry = nextToSend(store.entries, session.me.id); entry; entry = nextToSend(store.entries, session.me.id)) {
+        if (!await sendOne(entry)) break
+      }
+    }
+    finally {
+      store.sending = false
+    }
+  }
+
+  /** The same entry once more, following on what the other device did. */
+  function sendAgain(entry: OutboxEntry, rev: number): void {
+    store.replace(entry.key, { ...entry, key: newRequestKey(), rev, refused: null })
+    void send()
+  }
+
+  return { enter, send, sendAgain, leaveOut: store.drop }
+}
+
+/** Tries again while something waits; once for the whole application, in its frame. */
+export function useOutboxSending(): void {
+  const store = useOutboxStore()
+  const session = useSession()
+  const { send } = useOutbox()
+  const waits = () => store.entries.some(({ refused }) => refused === null)
+
+  useEventListener(window, 'online', () => { void send() })
+  useIntervalFn(() => { if (waits()) void send() }, again)
+  watch(() => session.me?.id, () => { void send() }, { immediate: true })
+}

@@ -9,6 +9,9 @@ export const addressOf = {
   changes: (before: number, after: number) => `/changes?a=${before}&b=${after}`,
   upload: () => '/upload',
   tray: () => '/tray',
+  /** With a tag: to begin one there. */
+  swaps: (tag?: string) => tag === undefined ? '/swaps' : `/swaps?axis=${encodeURIComponent(tag)}`,
+  swap: (id: number) => `/swaps/${id}`,
   places: () => '/places',
   placesList: () => '/places?list',
   units: () => '/units',

@@ -5,6 +5,9 @@ import { beforeEach, describe, expect, it, vi } from 'vitest'
 import { SwapRefused, SwapWaiting } from '#components'
 import { bytesOf, fileBodyOf, following, nextToSend, readOutbox, type OutboxEntry } from '~/utils/swap/outbox'
 import { begun } from '../support/swap-answers'
+import { soon } from '../support/soon'
+
+vi.setConfig({ testTimeout: 30_000 })
 
 const received: { key: string | undefined, body: unknown, query: Record<string, unknown> }[] = []
 let answer: (event: H3Event, body: unknown) => unknown = () => ({})
@@ -46,7 +49,7 @@ beforeEach(async () => {
 describe('what is entered', () => {
   it('is sent at once with the rev it follows on and a key of its own, and is gone when it was taken', async () => {
     expect(useOutbox().enter(safe)).toBe(true)
-    await vi.waitFor(() => expect(kept()).toEqual([]))
+    await soon(() => expect(kept()).toEqual([]))
     expect(received).toMatchObject([{ body: { confirmed: true, rev: 3 }, key: expect.stringMatching(/^[0-9a-f]{32}$/) as string }])
     expect(useOutboxStore().taken?.answer).toEqual({ rev: 4 })
   })
@@ -56,7 +59,7 @@ describe('what is entered', () => {
     const outbox = useOutbox()
     outbox.enter(safe)
     outbox.enter({ ...safe, says: 'running' })
-    await vi.waitFor(() => expect(useOutboxStore().silentSince).toBeDefined())
+    await soon(() => expect(useOutboxStore().silentSince).toBeDefined())
     expect(kept().map(({ says, refused }) => [says, refused])).toEqual([['made safe, pin', null], ['running', null]])
     const [first] = kept()
     fetched.mockRestore()
@@ -71,12 +74,12 @@ describe('what is entered', () => {
     const outbox = useOutbox()
     outbox.enter(safe)
     outbox.enter({ ...safe, says: 'running' })
-    await vi.waitFor(() => expect(kept()[0]?.refused?.code).toBe('edited-meanwhile'))
+    await soon(() => expect(kept()[0]?.refused?.code).toBe('edited-meanwhile'))
     expect(received).toHaveLength(1)
     answer = () => ({ rev: 8 })
     const [first] = useOutboxStore().entries
     outbox.sendAgain(first!, 7)
-    await vi.waitFor(() => expect(kept()).toEqual([]))
+    await soon(() => expect(kept()).toEqual([]))
     expect((received[1]?.body as { rev: number }).rev).toBe(7)
     expect(received[1]?.key).not.toBe(received[0]?.key)
   })
@@ -84,7 +87,7 @@ describe('what is entered', () => {
   it('waits on while the vault is full, and the person is told why', async () => {
     answer = event => problem(event, 507, 'disk-full')
     useOutbox().enter(safe)
-    await vi.waitFor(() => expect(useOutboxStore().trouble?.code).toBe('disk-full'))
+    await soon(() => expect(useOutboxStore().trouble?.code).toBe('disk-full'))
     expect(kept().map(({ refused }) => refused)).toEqual([null])
     const shown = await mountSuspended(SwapWaiting)
     expect(shown.text()).toContain('1 entry waits on this device. disk-full. It is tried again by itself.')
@@ -93,7 +96,7 @@ describe('what is entered', () => {
   it('of another person waits until that person signs in here', async () => {
     const fetched = vi.spyOn(globalThis, '$fetch').mockImplementation(cut)
     useOutbox().enter(safe)
-    await vi.waitFor(() => expect(useOutboxStore().silentSince).toBeDefined())
+    await soon(() => expect(useOutboxStore().silentSince).toBeDefined())
     fetched.mockRestore()
     signIn({ id: 9, name: 'Runa Haldersen' })
     await useOutbox().send()
@@ -101,7 +104,7 @@ describe('what is entered', () => {
     const shown = await mountSuspended(SwapWaiting)
     expect(shown.text()).toContain('1 entry of Tobias Achterberg waits on this device. It is sent when Tobias Achterberg signs in here.')
     signIn()
-    await vi.waitFor(() => expect(received).toHaveLength(1))
+    await soon(() => expect(received).toHaveLength(1))
   })
 
   it('is told that there is no room for it, and keeps what was there', async () => {
@@ -120,7 +123,7 @@ describe('what is entered', () => {
     expect(body.kind === 'file' && [...bytesOf(body.base64)]).toEqual([...bytes])
     const text = await fileBodyOf(new File(['{"a":1}'], 'lid-02.z.json'), 'application/json')
     useOutbox().enter({ ...safe, path: '/api/swaps/118/read-back', body: text, says: 'Read-back lid-02.z.json' })
-    await vi.waitFor(() => expect(kept()).toEqual([]))
+    await soon(() => expect(kept()).toEqual([]))
     expect(received).toMatchObject([{ body: '{"a":1}', query: { rev: '3', name: 'lid-02.z.json' } }])
   })
 
@@ -128,7 +131,7 @@ describe('what is entered', () => {
     const current = { ...begun, rev: 9 }
     answer = event => problem(event, 409, 'read-back-serial', { current })
     useOutbox().enter({ ...safe, path: '/api/swaps/118/read-back', body: { kind: 'file', name: 'x.json', mediaType: 'application/json', base64: btoa('{}') }, says: 'Read-back x.json' })
-    await vi.waitFor(() => expect(kept()).toEqual([]))
+    await soon(() => expect(kept()).toEqual([]))
     expect(useOutboxStore().taken?.answer).toMatchObject({ id: 118, rev: 9 })
   })
 })

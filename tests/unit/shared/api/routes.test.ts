@@ -41,6 +41,7 @@ const doors = `
   GET /api/machines                      | tpaA      | read   |         |
   POST /api/machines                     | p         |        |         |
   GET /api/machines/:id                  | tpaA      | read   | machine |
+  GET /api/machines/:id/neighbours       | tpaA      | read   | machine |
   PATCH /api/machines/:id                | p         |        | machine |
   GET /api/axes                          | tpaA      | read   |         |
   POST /api/axes                         | p         |        |         |

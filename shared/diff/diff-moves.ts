@@ -54,24 +54,22 @@ export class MovePass {
     let nextHarm = 0
     let nextMotion = harm
     let nextText = harm + motion
-    for (const pair of this.pairs) {
-      for (let rest = pair.fields; rest !== 0; rest &= rest - 1) {
-        const change = this.changeIn(pair, 31 - Math.clz32(rest & -rest))
+    for (const { before, beforeIndex, after, afterIndex, fields, defaults } of this.pairs) {
+      const there = { rules: this.sides.is.moveByRank, pointers: after ? movePointers(afterIndex) : [] }
+      const gone = { rules: this.sides.was.moveByRank, pointers: before ? movePointers(beforeIndex) : [] }
+      const row = (after ?? before as Move).move
+      for (let rest = fields; rest !== 0; rest &= rest - 1) {
+        const rank = 31 - Math.clz32(rest & -rest)
+        const was = before && valueAt(before, rank)
+        const is = after && valueAt(after, rank)
+        const { rules, pointers } = is === undefined ? gone : there
+        const change = rowChange(rules[rank] as FieldRule, pointers[rank] as string, 'move', row, was, is, (defaults >> rank & 1) === 1)
         if (change.weight === 'harm') changes[nextHarm++] = change
         else if (change.weight === 'motion') changes[nextMotion++] = change
         else changes[nextText++] = change
       }
     }
     return changes
-  }
-
-  private changeIn({ before, beforeIndex, after, afterIndex, defaults }: Pair, rank: number): FieldChange {
-    const was = before && valueAt(before, rank)
-    const is = after && valueAt(after, rank)
-    const gone = is === undefined
-    const rule = (gone ? this.sides.was : this.sides.is).moveByRank[rank] as FieldRule
-    const at = movePointers(gone ? beforeIndex : afterIndex)[rank] as string
-    return rowChange(rule, at, 'move', (after ?? before as Move).move, was, is, (defaults >> rank & 1) === 1)
   }
 
   private defaultsWrittenOut(fields: number, before: Move, after: Move): number {

@@ -11,16 +11,16 @@ import type { FieldChange } from './types'
 export function rowChange(
   rule: FieldRule, at: string, section: 'zone' | 'move', row: number, before: ExtraValue | undefined, after: ExtraValue | undefined, sameMotion: boolean,
 ): FieldChange {
-  const { field, unit } = rule
-  if (sameMotion) return changeOf(rule, { at, section, row }, before, after, true)
-  const { weight, watched } = rule
-  if (before === undefined && after !== undefined && unit !== undefined) return { at, section, row, field, after, unit, weight, watched }
-  if (after === undefined && before !== undefined && unit !== undefined) return { at, section, row, field, before, unit, weight, watched }
-  if (typeof before === 'string' && typeof after === 'string' && unit === undefined) return { at, section, row, field, before, after, weight, watched }
-  if (typeof before === 'number' && typeof after === 'number' && unit !== undefined) {
-    const delta = difference(before, after, false)
-    if (unit === '%') return { at, section, row, field, before, after, unit, delta, points: delta, weight, watched }
-    if (before !== 0) return { at, section, row, field, before, after, unit, delta, percent: 100 * delta / Math.abs(before), weight, watched }
+  const { field, unit, weight, watched } = rule
+  if (!sameMotion && unit !== undefined) {
+    if (typeof before === 'number' && typeof after === 'number') {
+      const delta = difference(before, after, false)
+      if (unit === '%') return { at, section, row, field, before, after, unit, delta, points: delta, weight, watched }
+      if (before !== 0) return { at, section, row, field, before, after, unit, delta, percent: 100 * delta / Math.abs(before), weight, watched }
+    }
+    if (before === undefined && after !== undefined) return { at, section, row, field, after, unit, weight, watched }
+    if (after === undefined && before !== undefined) return { at, section, row, field, before, unit, weight, watched }
   }
-  return changeOf(rule, { at, section, row }, before, after, false)
+  if (!sameMotion && typeof before === 'string' && typeof after === 'string' && unit === undefined) return { at, section, row, field, before, after, weight, watched }
+  return changeOf(rule, { at, section, row }, before, after, sameMotion)
 }

@@ -53,6 +53,19 @@ describe('what the auditor reads', () => {
     expect(await page.getByText('off its known-good by').innerText()).toContain('harm')
   })
 
+  it('one value over all versions: who changed it, and what it stands against', async () => {
+    const over = page.getByRole('region', { name: 'A value over time' })
+    await over.getByLabel('Which value').selectOption('thrustLimit')
+    const steps = over.getByRole('table', { name: 'Each change, newest first' })
+    await steps.getByText('Night shift').waitFor()
+    expect(await steps.innerText()).toMatch(/1[\s\S]*38[\s\S]*52[\s\S]*Night shift[\s\S]*v1 to v2[\s\S]*first reading/)
+    expect(await over.getByRole('img').getAttribute('aria-label')).toMatch(/^Thrust limit of LID-02\.Z: 38 % of rated from .*, 52 % of rated since .*\. Known-good is 38 % of rated, v1\. .*Nameplate: at most 250\.$/)
+    await over.getByText('What it stands against').click()
+    expect(await over.getByRole('table', { name: 'Known-good values and limits' }).innerText()).toMatch(/known-good v1[\s\S]*38 % of rated[\s\S]*nameplate[\s\S]*at most 250 % of rated/)
+    await over.getByLabel('Where').selectOption('move 2')
+    await over.getByText('Target of move 2: never changed in 2 versions').waitFor()
+  })
+
   it('a version, and its file in both forms', async () => {
     await page.getByRole('table', { name: 'What happened, newest first' }).getByRole('link', { name: /^v2/ }).click()
     await page.getByRole('heading', { level: 1, name: 'LID-02.Z v2' }).waitFor()

@@ -6,7 +6,7 @@ import { join } from 'node:path'
 import { fileURLToPath } from 'node:url'
 
 const entry = fileURLToPath(new URL('../.output/server/index.mjs', import.meta.url))
-const admin = { email: 'ines.okafor@larkfield.example', password: 'copper kettle under the stairs' }
+export const admin = { email: 'ines.okafor@larkfield.example', password: 'copper kettle under the stairs' }
 
 interface Reply { readonly status: number, readonly text: string, readonly cookie: string | undefined }
 

@@ -1,7 +1,7 @@
 import { weigh, type Burden } from '#shared/checks/burden'
 import { chainsOf } from '#shared/checks/chains-to-judge'
 import { surroundings } from '#shared/checks/driven'
-import { lapMean, lapSentence, lapsOf, type LapMean } from '#shared/checks/lap-rms'
+import { lapMeans, lapSentence, lapsOf, type LapMean } from '#shared/checks/lap-rms'
 import type { JudgeInput } from '#shared/checks/types'
 import { usedRows } from '#shared/motion/chains'
 import { limitPercent } from '#shared/motion/limit'
@@ -120,7 +120,7 @@ function meanOf(run: Run, input: JudgeInput, burden: Burden): Shown['mean'] {
   const numbers = run.moves.map(({ move }) => move).join()
   const lap = lapsOf(input).laps.find(({ rows, cycle }) => (cycle !== undefined) === (run.key === 'duty') && rows.map(({ move }) => move.move).join() === numbers)
   if (rated === undefined || !lap || run.key.startsWith('move')) return undefined
-  const mean = lapMean(input, lap, burden, rated)
+  const mean = lapMeans(input, burden, rated)(lap)
   return { ...mean, sentence: lapSentence(lap, mean, burden, rated), from: lapStart(run.moves, input.content.setup.modulo) }
 }
 

@@ -26,3 +26,9 @@ export function chainsOf(rows: readonly Row[]): Chain[] {
   })
   return [...loops.map(loop => ({ rows: loop, endless: true })), ...ending]
 }
+
+/** Whether chainsOf tells any: so wherever a row names another that is in use, since it is then in a chain or leads into one. */
+export function hasChains(rows: readonly Row[]): boolean {
+  const numbers = new Set(rows.map(({ move }) => move.move))
+  return rows.some(({ move }) => move.next !== undefined && numbers.has(move.next))
+}

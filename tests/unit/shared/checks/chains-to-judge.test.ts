@@ -1,6 +1,8 @@
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { chainsOf } from '../../../../shared/checks/chains-to-judge'
+import { chainsOf, hasChains } from '../../../../shared/checks/chains-to-judge'
 import { usedRows } from '../../../../shared/motion/chains'
+import type { Move } from '../../../../shared/settings/types'
 import { absolute, unused } from '../../../support/check-input'
 
 const chains = (...moves: Parameters<typeof usedRows>[0]) =>
@@ -21,5 +23,15 @@ describe('chainsOf', () => {
   it('does not take a row without a follower for a chain, nor one whose follower is not there', () => {
     expect(chains(absolute(1, 0), absolute(2, 0, { next: 7 }))).toEqual([])
     expect(chains(absolute(1, 0, { next: 2 }), unused(2))).toEqual([])
+  })
+})
+
+describe('whether there are chains', () => {
+  it('is whether any is told, for any table', () => {
+    const table = fc.uniqueArray(fc.record({ move: fc.nat({ max: 9 }), next: fc.option(fc.nat({ max: 11 }), { nil: undefined }), used: fc.boolean() }), { selector: row => row.move })
+    fc.assert(fc.property(table, (numbers) => {
+      const rows = usedRows(numbers.map(({ move, next, used }): Move => ({ move, kind: 'absolute', target: 1, speed: used ? 10 : 0, acceleration: used ? 10 : 0, next })))
+      expect(hasChains(rows)).toBe(chainsOf(rows).length > 0)
+    }), { numRuns: 1000 })
   })
 })

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { weigh } from '../../../../shared/checks/burden'
-import { lapMean, lapSentence, lapsOf } from '../../../../shared/checks/lap-rms'
+import { lapMeans, lapSentence, lapsOf } from '../../../../shared/checks/lap-rms'
 import { thrustRms } from '../../../../shared/checks/thrust-rms'
 import type { JudgeInput } from '../../../../shared/checks/types'
 import { absolute, judgeInput, linear, plate } from '../../../support/check-input'
@@ -15,7 +15,7 @@ function told(of: JudgeInput, index = 0) {
   const { burden } = weigh(of)
   if (!lap || !burden) throw new Error('no lap')
   const rated = of.nameplate?.ratedThrust ?? 0
-  const mean = lapMean(of, lap, burden, rated)
+  const mean = lapMeans(of, burden, rated)(lap)
   return { mean, words: lapSentence(lap, mean, burden, rated) }
 }
 
@@ -46,5 +46,22 @@ describe('a lap in the mean', () => {
     const { laps, missing } = lapsOf(input(20, { moves: [1, 7], cycleTime: 4200 }))
     expect(missing).toEqual(['move 7'])
     expect(laps.map(({ certain, cycle }) => [certain, cycle])).toEqual([[true, undefined]])
+  })
+})
+
+describe('laps that share rows', () => {
+  const moves = [absolute(1, 100, { next: 3 }), absolute(2, 40, { next: 3 }), absolute(3, 10, { next: 4, dwell: 200 }), absolute(4, 180)]
+  const axis = judgeInput(linear({ payloadMass: 9, mountingAngle: 0, frictionForce: 0 }, moves), { nameplate: plate({ ratedThrust: 20, movingMass: 1, rotorInertia: 0, lead: 10 }) })
+
+  it('come out as each of them does by itself, in whatever order they are asked for', () => {
+    const { burden } = weigh(axis)
+    if (!burden) throw new Error('no burden')
+    const { laps } = lapsOf(axis)
+    expect(laps.map(({ rows }) => rows.map(({ move }) => move.move))).toEqual([[1, 3, 4], [2, 3, 4]])
+    const alone = laps.map(lap => lapMeans(axis, burden, 20)(lap))
+    const together = lapMeans(axis, burden, 20)
+    expect([...laps].reverse().map(together).reverse()).toEqual(alone)
+    expect(laps.map(together)).toEqual(alone)
+    expect(alone[0]?.time).not.toBe(alone[1]?.time)
   })
 })

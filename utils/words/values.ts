@@ -1,4 +1,5 @@
 import type { ValueBound, ValuesAnswer, ValueStep } from '#shared/api/values'
+import { setupField } from '#shared/settings/fields'
 import type { ExtraValue } from '#shared/settings/types'
 import type { ValuePlace } from '#shared/settings/value-place'
 import { counted, sayValue } from '../format'
@@ -11,9 +12,10 @@ export function placeFieldWords({ section, field, row }: ValuePlace, context: Wo
   return changeWords({ at: '', section, field, ...(row !== undefined && { row }), weight: 'text', watched: false }, context)
 }
 
-/** 'Thrust limit', 'Target of move 5', 'From of zone 1'. */
+/** 'Thrust limit', 'Homing speed', 'Target of move 5', 'From of zone 1'. */
 export function placeTitle(place: ValuePlace, context: WordContext): string {
-  const { label } = placeFieldWords(place, context)
+  const { label: short } = placeFieldWords(place, context)
+  const label = place.section === 'setup' && setupField(place.field)?.group === 'homing' ? `homing ${short}` : short
   const words = place.row === undefined ? label : `${label} of ${place.section} ${place.row}`
   return words.charAt(0).toUpperCase() + words.slice(1)
 }

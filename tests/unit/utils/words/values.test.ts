@@ -66,6 +66,7 @@ describe('what can be looked at over time', () => {
   })
 
   it('has a title in the trade’s words', () => {
-    expect([placeTitle({ section: 'setup', field: 'thrustLimit' }, context), placeTitle({ section: 'move', field: 'target', row: 5 }, context)]).toEqual(['Thrust limit', 'Target of move 5'])
+    const titles = [{ section: 'setup', field: 'thrustLimit' }, { section: 'setup', field: 'homingSpeed' }, { section: 'move', field: 'target', row: 5 }] as const
+    expect(titles.map(place => placeTitle(place, context))).toEqual(['Thrust limit', 'Homing speed', 'Target of move 5'])
   })
 })

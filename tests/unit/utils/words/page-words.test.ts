@@ -77,7 +77,7 @@ describe('checks in words', () => {
     expect(silent && liveMessage(silent, context)).toBe('Whether B shares an address on this bus cannot be judged without node address.')
   })
   it('counts what speaks up and what is folded', () => {
-    expect(checksSentence(today.checks, 12)).toMatch(/^1 stop, 1 warning; .* folded$/)
+    expect(checksSentence(today.checks, 12)).toMatch(/^1 stop, 1 warning; folded below: \d+ notes, \d+ not judged$/)
     expect(checksSentence([], 11)).toBe('11 rules judged, no stop and no warning')
     expect(checksSentence([], 0)).toBe('nothing to judge')
   })

@@ -1,6 +1,6 @@
 import { neighboursTold, type Neighbours, type SisterGroup } from '#shared/api/neighbours'
 import { addressTwice } from '#shared/checks/live/address-twice'
-import { sisterMatrix, sisterOutlier, type SisterRow } from '#shared/checks/live/sister-outlier'
+import { sistersHeld, type SisterRow } from '#shared/checks/live/sister-outlier'
 import type { LiveResult } from '#shared/checks/live/types'
 import { Refusal } from '#shared/errors/refusal'
 import type { Content } from '#shared/settings/types'
@@ -53,7 +53,7 @@ function sistersOnWire(db: VaultDb, { role, model, axes }: Sisters, contents: Co
     return content ? [{ row, tag: row.axis.tag, flags: row.axis.flags, content }] : []
   })
   const dictionary = judgingQueries(db).nameplate.get({ model })?.nameplate.dictionary
-  const rows = sisterMatrix(alike, dictionary)
+  const { rows, results } = sistersHeld(alike, dictionary)
   const columns = columnsOf(alike.map(({ row }) => row.machine.id === machineId), rows)
   return {
     role, model, of: alike.length,
@@ -62,7 +62,7 @@ function sistersOnWire(db: VaultDb, { role, model, axes }: Sisters, contents: Co
       key, words, same: new Set(texts).size === 1, texts: columns.map(index => texts[index] ?? ''),
       odd: columns.flatMap((index, column) => odd.includes(index) ? [column] : []),
     })),
-    ...told(sisterOutlier.judge(alike, dictionary)),
+    ...told(results),
   }
 }
 

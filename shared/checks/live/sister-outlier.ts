@@ -33,20 +33,23 @@ export const sisterOutlier = {
   reason: 'Axes that do the same work with the same unit are set alike; the one that is not was changed by somebody, or forgotten.',
   formula: 'at least 4 sister axes (same role and model in a site) agree and at most 1 in 5 does not; harm weight only, place and taught values left out',
   levels: ['warn'],
-  judge,
+  judge: (sisters: readonly Sister[], dictionary?: Dictionary) => sistersHeld(sisters, dictionary).results,
 } as const
 
-/** The matrix of the harm fields: a row for each field that any sister has, the odd ones marked. */
-export function sisterMatrix(sisters: readonly Sister[], dictionary?: Dictionary): SisterRow[] {
-  return tableOf(sisters, dictionary).map(({ key, words, cells, odd }) => ({
-    key, words, values: cells.map(cell => cell?.value), texts: cells.map(cell => cell?.text ?? ''), odd,
-  }))
+/** Matrix and results from one look at the sisters: of thousands, reading their values is what takes time. */
+export function sistersHeld(sisters: readonly Sister[], dictionary?: Dictionary): { readonly rows: SisterRow[], readonly results: LiveResult[] } {
+  const table = tableOf(sisters, dictionary)
+  const rows = table.map(({ key, words, cells, odd }) => ({ key, words, values: cells.map(cell => cell?.value), texts: cells.map(cell => cell?.text ?? ''), odd }))
+  return { rows, results: resultsOf(sisters, table) }
 }
 
+/** The matrix of the harm fields: a row for each field that any sister has, the odd ones marked. */
+export const sisterMatrix = (sisters: readonly Sister[], dictionary?: Dictionary): SisterRow[] => sistersHeld(sisters, dictionary).rows
+
 /** A warning for each value that stands apart; values of one row of an axis share one, as a shifted row differs in all of them. */
-function judge(sisters: readonly Sister[], dictionary?: Dictionary): LiveResult[] {
+function resultsOf(sisters: readonly Sister[], table: readonly TableRow[]): LiveResult[] {
   const found = new Map<string, { tag: string, index: number, rows: TableRow[] }>()
-  for (const row of tableOf(sisters, dictionary)) {
+  for (const row of table) {
     for (const index of row.odd) {
       const key = `${index} ${row.rowKey ?? row.key}`
       const one = found.get(key) ?? { tag: sisters[index]?.tag ?? '', index, rows: [] }

@@ -136,6 +136,8 @@ describe('a file in the drive’s own layout', () => {
     const row = page.getByRole('table', { name: 'Files, by axis' })
     expect(await row.innerText()).toMatch(/Thrust limit 60 % is above the 50 %/)
     expect(await row.innerText()).not.toContain('Accepted until')
+    await page.getByLabel('Why, PSH-01.X').fill('Trial with the old cartons')
+    await page.getByLabel(/^I have seen the stop on PSH-01\.X: Thrust limit 60 %/).check()
     await sent(3)
     await page.goto('/axes/PSH-01.X/versions/3')
     await page.getByRole('table', { name: 'Stops and warnings' }).getByText(/Thrust limit 60 %/).waitFor()

@@ -117,6 +117,13 @@ describe('sideBySide', () => {
     const rows = sideBySide([before, after, null]).flatMap(group => group.rows)
     expect(rows.find(row => row.key === 'thrustLimit')).toMatchObject({ values: [38, 55, null], differs: true })
     expect(rows.find(row => row.key === 'speedLimit')?.differs).toBe(false)
+    expect(rows.find(row => row.key === 'speedLimit')).toMatchObject({ unit: 'mm/s', units: ['', '', ''] })
+  })
+  it('puts the unit beside each value where linear and rotary axes hold the same field', () => {
+    const turning = { axisKind: 'rotary' as const, setup: { speedLimit: 720, modulo: 360 }, zones: [], moves: [], extra: {} }
+    const rows = sideBySide([turning, before, null]).flatMap(group => group.rows)
+    expect(rows.find(row => row.key === 'speedLimit')).toMatchObject({ unit: '', units: ['deg/s', 'mm/s', ''] })
+    expect(rows.find(row => row.key === 'modulo')).toMatchObject({ unit: 'deg', units: ['', '', ''] })
   })
 })
 

@@ -63,11 +63,9 @@ export default defineNuxtConfig({
         'upgrade-insecure-requests': false,
       },
       strictTransportSecurity: false,
-      // The label of a unit is read with the device's camera. web-share is no feature of desktop Chromium, which complains of its name.
+      // A swap reads the label of its axis by camera. web-share is no feature of desktop Chromium, which complains of its name.
       permissionsPolicy: { 'camera': ['self'], 'sync-xhr': [], 'web-share': false },
       crossOriginEmbedderPolicy: 'require-corp',
-      // A swap reads the label of its axis by camera.
-      permissionsPolicy: { camera: ['self'] },
     },
   },
   tailwindcss: { cssPath: '~/assets/css/main.css', viewer: false },

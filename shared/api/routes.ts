@@ -2,6 +2,7 @@ import { z } from 'zod'
 import * as attachments from './attachments'
 import * as board from './board'
 import { axisParams, created, idParams, listQuery, pageOf, roles, type Role } from './common'
+import * as findings from './findings'
 import * as judging from './judging'
 import * as letters from './letters'
 import * as neighbours from './neighbours'
@@ -20,6 +21,7 @@ import * as waivers from './waivers'
 
 /** Whose site must be among the caller's: found from `params.id`. Others answer 404, as if they were not there. */
 export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray' | 'waiver' | 'attachment'
+export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray' | 'waiver' | 'finding'
 
 export interface RouteDeclaration {
   /** 'anyone' needs no sign-in; 'signed-in' any role. */
@@ -136,6 +138,16 @@ export const routes = {
   'POST /api/versions/:id/known-good': { may: planner, scope: 'version', sign: true, params: idParams, body: versions.knownGoodBody, answers: { 201: created }, says: 'What this axis is restored to from now on; signed, four eyes.' },
   'POST /api/versions/:id/void': { may: planner, scope: 'version', sign: true, params: idParams, body: versions.voidBody, answers: { 201: created }, says: 'A wrong upload; stays readable. Signed.' },
   'POST /api/versions/:id/judge': { may: planner, scope: 'version', params: idParams, answers: { 201: judging.judgedAgain }, says: 'Judges it by today’s nameplate and rules; the judgements before stay.' },
+
+  'GET /api/findings': { may: all, token: 'read', query: findings.findingQuery, answers: { 200: pageOf(findings.findingSchema) }, says: 'What a person must explain, newest first.' },
+  'GET /api/findings/:id': { may: all, token: 'read', scope: 'finding', params: idParams, answers: { 200: findings.findingSchema }, says: 'One finding with all that was said of it.' },
+  'POST /api/findings/:id/explain': { may: ['technician', 'planner', 'auditor'], scope: 'finding', params: idParams, body: findings.explainBody, answers: { 200: findings.findingSchema }, says: 'Says why; under a name of one’s own.' },
+  'POST /api/findings/:id/close': { may: ['planner', 'auditor'], scope: 'finding', sign: true, params: idParams, body: findings.closeBody, answers: { 200: findings.findingSchema }, says: 'Closes it as accepted or put right; signed, never by who explained it, harm by auditors only.' },
+  'POST /api/findings/:id/reopen': { may: ['planner', 'auditor'], scope: 'finding', params: idParams, body: findings.reopenBody, answers: { 200: findings.findingSchema }, says: 'Opens it again; all that was said stays.' },
+  'GET /api/planned-changes': { may: all, token: 'read', query: listQuery, answers: { 200: pageOf(findings.plannedChangeSchema) }, says: 'Changes announced before they are made, newest first, and what came of each.' },
+  'POST /api/planned-changes': { may: planner, body: findings.plannedChangeBody, answers: { 201: created }, says: 'Announces a change: what it covers is explained when it is seen.' },
+  'GET /api/planned-changes/:id': { may: all, token: 'read', params: idParams, answers: { 200: findings.plannedChangeSchema }, says: 'One of them.' },
+  'POST /api/planned-changes/:id/end': { may: planner, params: idParams, body: findings.plannedChangeEndBody, answers: { 200: findings.plannedChangeSchema }, says: 'Calls it off; what came of it stays.' },
 
   'GET /api/board': { may: all, token: 'read', answers: { 200: board.boardAnswer }, says: 'Every axis with its state, and what needs someone.' },
   'GET /api/log': { may: ['planner', 'auditor', 'admin'], token: 'read', query: listQuery, answers: { 200: pageOf(board.logEntrySchema) }, says: 'The log, entry by entry; only without site bounds.' },

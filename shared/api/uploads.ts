@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { nameplateSchema } from '../settings/nameplate'
 import { axisFlags, axisKinds } from '../settings/types'
 import { axisRef, idSchema, instantSchema, problemErrorSchema, reasonSchema, serialSchema } from './common'
+import { findingStates } from './findings'
 import { dutySchema } from './places'
 import { changeSchema, contentSchema, judgedSchema, occasions, renumberingSchema, versionSchema, waivableCheck } from './versions'
 import { waiverSchema } from './waivers'
@@ -11,6 +12,7 @@ export const uploadFields = z.strictObject({
   occasion: z.enum(occasions).exclude(['read-back']).optional(),
   reason: z.string().max(2000).optional(), workOrder: z.string().max(80).optional(),
   changedBy: z.string().max(80).optional().describe('free text, or person:ID'), allowedBy: z.string().max(80).optional().describe('free text, or person:ID'),
+  together: z.enum(['yes', 'no']).optional().describe('yes: reason and work order were given for many files at once, and explain no finding'),
   capturedAt: instantSchema.optional(), axis: axisRef.optional(), decimal: z.enum(['point', 'comma']).optional(),
   layout: z.string().min(1).max(64).optional().describe('model whose entry table the file is laid out by; absent = the neutral form'),
   serial: serialSchema.optional().describe('with layout: of the unit, where the file does not hold it'),
@@ -26,7 +28,7 @@ export const normalisedSchema = z.object({
 /** 201: a new version. */
 export const uploadStored = z.object({
   version: versionSchema, changes: z.array(changeSchema), renumbered: z.array(renumberingSchema), checks: z.array(waivableCheck), judged: judgedSchema,
-  findings: z.array(z.object({ id: idSchema, state: z.string() })), normalised: normalisedSchema,
+  findings: z.array(z.object({ id: idSchema, state: z.enum(findingStates) })), normalised: normalisedSchema,
 })
 export type UploadStored = z.infer<typeof uploadStored>
 /** 200: the axis' current content, seen again. */

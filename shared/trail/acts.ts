@@ -43,6 +43,14 @@ export const acts = {
   'known-good-none': 'known-good',
   'kit-taken': 'kit',
 
+  'finding-opened': 'finding',
+  'finding-version-added': 'finding-version',
+  'finding-explained': 'finding-act',
+  'finding-closed': 'finding-act',
+  'finding-reopened': 'finding-act',
+  'planned-change-announced': 'planned-change',
+  'planned-change-ended': 'planned-change',
+
   'letter-chosen': 'letter-choice',
   'watch-set': 'watch',
   'letter-sent-again': 'letter',

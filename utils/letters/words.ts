@@ -2,7 +2,7 @@ import type { Letter, LetterPage, LetterState, OwnLetters, WatchScope } from '#s
 import { counted } from '../format'
 
 export const letterStateWords: Readonly<Record<LetterState, string>> = { queued: 'waits', sent: 'sent', failed: 'failed', dropped: 'not sent' }
-export const watchScopeWords: Readonly<Record<WatchScope, string>> = { site: 'the whole site', line: 'the whole line', machine: 'the whole machine', axis: 'this axis' }
+export const watchScopeWords: Readonly<Record<WatchScope, string>> = { site: 'the whole site', line: 'the whole line', machine: 'the whole machine', axis: '' }
 
 /** The answer of the page: what waits, and for how long. `span` words a length of time since an instant. */
 export function queueSentence({ waiting, waitingSince }: LetterPage['queue'], span: (iso: string) => string): string {

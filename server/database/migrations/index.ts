@@ -3,6 +3,7 @@ import { second } from './0002-waivers'
 import { lettersStep } from './0003-letters'
 import { controllerScanStep } from './0004-controller-scan'
 import { papersStep } from './0005-papers'
+import { findingsStep } from './0006-findings'
 
 export interface Migration { readonly number: number, readonly name: string, readonly sql: string }
 
@@ -12,6 +13,7 @@ const steps: readonly Omit<Migration, 'number'>[] = [
   lettersStep,
   controllerScanStep,
   papersStep,
+  findingsStep,
 ]
 
 /** In order, numbered without gaps from 1. Text, not files, so that they reach the built server and the tests alike. */

@@ -2,6 +2,7 @@ import { eq, isNull, and, sql, type SQL } from 'drizzle-orm'
 import type { Scope } from '#shared/api/routes'
 import { attachment } from '../attachment/table'
 import { axis } from '../axis/table'
+import { finding } from '../finding/table'
 import { fitting } from '../fitting/table'
 import { line } from '../line/table'
 import { machine } from '../machine/table'
@@ -38,6 +39,7 @@ export const siteQueries = prepared((db) => {
       .innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId)).where(eq(waiver.id, ref)).prepare(),
     attachment: db.select({ id: attachment.id, siteId: line.siteId }).from(attachment).innerJoin(version, eq(version.id, attachment.versionId)).innerJoin(axis, eq(axis.id, version.axisId))
       .innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId)).where(eq(attachment.id, ref)).prepare(),
+    finding: db.select({ id: finding.id, siteId: finding.siteId }).from(finding).where(eq(finding.id, ref)).prepare(),
     tray: db.select({ id: tray.id, siteId: tray.siteId }).from(tray).where(eq(tray.id, ref)).prepare(),
   }
   const tagged = axisSite(eq(axis.tag, ref)).prepare()

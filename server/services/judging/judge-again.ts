@@ -13,6 +13,7 @@ import type { VersionRow } from '#server/database/schema'
 import { unitRows } from '#server/database/unit/queries'
 import { refreshAxisState } from '../axes/axis-state'
 import { beforeOf, judgeInputOf, readAgainst, type ReadAgainst } from '../uploads/read-against'
+import { raiseNewStops, standingStops } from '../findings/stops'
 import { fileOf, versionRow } from '../versions/read-version'
 import { waivedOnWire } from '../waivers/accepted'
 import { judgedOnWire } from '../wire'
@@ -48,11 +49,21 @@ export function differsFromKept(today: Today, kept: StoredJudgement): boolean {
 }
 
 /** Keeps a judgement beside those before it and logs that it was made; the caller derives the state of the axis anew. */
-export function keepJudgement(db: VaultDb, write: Write, versionId: number, { judgement, against }: Today): void {
+export function keepJudgement(db: VaultDb, write: Write, versionId: number, { judgement, against, file }: Today): void {
   const nameplateRevisionId = against.nameplate?.id ?? null
+  const before = readJudgement(db, versionId)
   const id = insertJudgement(db, versionId, judgement, nameplateRevisionId, write.now)
   const { ruleSet, judged, notApplicable, results } = judgement
   write.log({ act: 'version-judged', id, state: { id, versionId, ruleSet, nameplateRevisionId, judgedAt: write.now, judged, notApplicable, ...countByLevel(results) } })
+  raiseWhatStops(db, write, versionId, { judgement, against, file }, before)
+}
+
+/** Stops of the current version that did not stand before this judgement. */
+function raiseWhatStops(db: VaultDb, write: Write, versionId: number, { judgement, against, file }: Today, before: StoredJudgement): void {
+  const { current, place, nameplate } = against
+  if (current?.version.id !== versionId) return
+  const standing = (of: Judgement) => standingStops(db, place.axis.id, of, () => file, write.now)
+  raiseNewStops(db, write, place, current.version, standing(judgement), standing(before), `${judgement.ruleSet} ${nameplate?.id ?? ''}`)
 }
 
 /** Judges one version again and keeps the judgement, also where it says the same. */

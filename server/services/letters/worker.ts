@@ -1,6 +1,7 @@
 import type { Logger } from 'pino'
 import type { Vault } from '#server/database/client'
 import type { Post } from '#server/mail/post'
+import { raiseOff, raiseUnwaived, tellOverdue } from '../findings/sweep'
 import { queueOverdueDigests } from './overdue-digest'
 import { sendDue } from './send'
 
@@ -11,8 +12,8 @@ const looksARound = 12
 /** How long a stop waits for a letter that is under way; what is cut off is taken up again after the lease. */
 const lastWait = 5000
 
-/** What becomes due by the passing of time; each writes its letters once, however often it is called. */
-const rounds: readonly ((vault: Vault) => number)[] = [queueOverdueDigests]
+/** What becomes due by the passing of time; each does it once, however often it is called. */
+const rounds: readonly ((vault: Vault) => number)[] = [raiseOff, raiseUnwaived, tellOverdue, queueOverdueDigests]
 
 interface WorkerOptions { readonly vault: Vault, readonly post: Post, readonly publicOrigin: string | null, readonly logger: Pick<Logger, 'error' | 'info'> }
 

@@ -8,7 +8,7 @@ type RuleBody = z.output<typeof ruleBody>
 type Kind = 'number' | 'other' | 'any'
 
 /** What a field's values are: `thrustLimit`, `move.speed`, `zone.from`, `extra:K-017`; undefined for a name that is no field. */
-function kindOf(field: string): Kind | undefined {
+export function kindOf(field: string): Kind | undefined {
   if (/^extra:.{1,64}$/su.test(field)) return 'any'
   const [family, name = ''] = field.split('.', 2)
   const table: Readonly<Record<string, { readonly type: string }>> = family === 'move' ? moveFields : family === 'zone' ? zoneFields : {}

@@ -27,6 +27,8 @@ export interface PlannedVersion {
   readonly late: boolean
   readonly base: VersionRow | null
   readonly changes: readonly FieldChange[]
+  /** The same as they are told: rows renumbered are not rows rewritten. */
+  readonly told: readonly FieldChange[]
   readonly renumbered: readonly Renumbering[]
   /** Of the reading that says less, as people count. */
   readonly counts: Readonly<Record<Weight, number>>
@@ -85,7 +87,7 @@ function planVersion(db: VaultDb, placed: PlacedFile, against: ReadAgainst, inge
   return {
     outcome: 'version', placed, against, ingested, late, base, changes,
     number: (queries.highestNumber.get({ axisId })?.number ?? 0) + 1,
-    renumbered: told?.renumbered ?? [],
+    told: told?.changes ?? changes, renumbered: told?.renumbered ?? [],
     counts: countByWeight(told?.changes ?? changes),
     judgement: judge(judgeInputOf(against, ingested.content, ingested.file.unit, before)),
   }

@@ -1,6 +1,6 @@
 import type { UploadFields, UploadSeen, UploadStored } from '#shared/api/uploads'
 import type { Normalised } from '#shared/settings/types'
-import { seesSite, type Actor } from '#server/database/actor'
+import type { Actor } from '#server/database/actor'
 import { insertChanges } from '#server/database/change/queries'
 import { insertJudgement } from '#server/database/check/queries'
 import type { Write } from '#server/database/client'
@@ -8,10 +8,11 @@ import type { VaultDb } from '#server/database/prepared'
 import { sightingQueries } from '#server/database/sighting/queries'
 import { versionQueries } from '#server/database/version/queries'
 import { refreshAxisState } from '../axes/axis-state'
+import { findingsOfVersion, otherAxis, otherAxisNamed } from '../findings/of-version'
+import { versionRow } from '../versions/read-version'
 import { versionSummary } from '../versions/summary'
 import { waivedOnWire } from '../waivers/accepted'
 import { changesOnWire } from '../wire'
-import { axisNamed } from './axis-named'
 import { engineVersion } from './ingest'
 import { layoutOf, type PlannedSighting, type PlannedVersion } from './plan-upload'
 import { storeContent, type Source } from './store-parts'
@@ -24,13 +25,14 @@ export function storeVersion(db: VaultDb, write: Write, source: Source, fields: 
   insertChanges(db, id, changes)
   insertJudgement(db, id, judgement, against.nameplate?.id ?? null, write.now)
   refreshAxisState(db, axisId)
+  const findings = findingsOfVersion(db, write, source.sender, fields, plan, versionRow(db, id))
   return {
     version: versionSummary(db, id), changes: changesOnWire(changes), renumbered: [...plan.renumbered], checks: waivedOnWire(db, axisId, judgement, () => ingested.content, write.now),
     judged: {
       ruleSet: judgement.ruleSet, nameplateRevision: against.nameplate?.revision ?? null, judgedAt: write.now,
       judged: [...judgement.judged], notApplicable: [...judgement.notApplicable],
     },
-    findings: [], normalised: normalisedOnWire(ingested.normalised),
+    findings, normalised: normalisedOnWire(ingested.normalised),
   }
 }
 
@@ -59,11 +61,9 @@ function engineOf(db: VaultDb, { layout }: UploadFields): string {
 /** A log entry has no place for undefined. */
 const definedOnly = (value: object) => JSON.parse(JSON.stringify(value)) as object
 
-function disagreement(db: VaultDb, actor: Actor, { axis }: UploadFields, stored: { id: number, tag: string }): string | null {
-  if (axis === undefined) return null
-  const named = axisNamed(db, axis)
-  if (named?.axis.id === stored.id) return null
-  return `sent for ${named && seesSite(actor, named.site.id) ? named.axis.tag : axis}; stored at ${stored.tag}, where its serial sits`
+function disagreement(db: VaultDb, actor: Actor, fields: UploadFields, stored: { id: number, tag: string }): string | null {
+  const named = otherAxisNamed(db, actor, fields, stored.id)
+  return named === null ? null : `sent for ${named}; stored at ${stored.tag}, where its serial sits`
 }
 
 /** Records that the current content of the axis was seen again. */
@@ -75,6 +75,7 @@ export function storeSighting(db: VaultDb, write: Write, source: Source, fields:
   const id = sightingQueries(db).insert(row)
   write.log({ act: 'sighting-recorded', id, state: { id, ...row }, note: fields.reason ?? null })
   refreshAxisState(db, current.axisId)
+  otherAxis(db, write, placed.place, fields, current)
   return { sighting: { id, at: write.now }, version: versionSummary(db, current.id) }
 }
 

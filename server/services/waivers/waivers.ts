@@ -6,6 +6,7 @@ import type { PersonActor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
 import { waiverQueries, type NamedWaiver } from '#server/database/waiver/queries'
 import { refreshAxisState } from '../axes/axis-state'
+import { raiseStanding } from '../findings/standing'
 import { afterOf, limitOf, pageOf, type PageQuery } from '../page'
 import { assertPlace } from '../places/bounds'
 
@@ -41,6 +42,7 @@ export function endWaiver(vault: Vault, actor: PersonActor, id: number, { reason
     waiverQueries(vault.db).insertEnd({ waiverId: id, at: write.now, byPerson: actor.id, reason })
     write.log({ act: 'waiver-ended', id, state: { ...before, endedAt: write.now, endedByPerson: actor.id, endReason: reason }, note: reason })
     refreshAxisState(vault.db, before.axisId)
+    raiseStanding(vault.db, write, before.axisId)
     return waiverOnWire(namedWaiver(vault, id))
   })
 }

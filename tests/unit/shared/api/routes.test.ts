@@ -91,6 +91,15 @@ const doors = `
   POST /api/versions/:id/known-good      | p         |        | version | signed
   POST /api/versions/:id/void            | p         |        | version | signed
   POST /api/versions/:id/judge           | p         |        | version |
+  GET /api/findings                      | tpaA      | read   |         |
+  GET /api/findings/:id                  | tpaA      | read   | finding |
+  POST /api/findings/:id/explain         | tpa       |        | finding |
+  POST /api/findings/:id/close           | pa        |        | finding | signed
+  POST /api/findings/:id/reopen          | pa        |        | finding |
+  GET /api/planned-changes               | tpaA      | read   |         |
+  POST /api/planned-changes              | p         |        |         |
+  GET /api/planned-changes/:id           | tpaA      | read   |         |
+  POST /api/planned-changes/:id/end      | p         |        |         |
   GET /api/board                         | tpaA      | read   |         |
   GET /api/log                           | paA       | read   |         |
 `.trim().split('\n').map(line => line.split('|').map(cell => cell.trim()))
@@ -107,9 +116,9 @@ describe('the doors', () => {
     expect(declared.map(doorOf)).toEqual(doors.map(([name = '', may = '', token = '', scope = '', signed = '']) => [name, may, token, scope, signed]))
   })
 
-  it('let an auditor read and nothing else', () => {
+  it('let an auditor read, work on findings, and nothing else', () => {
     const auditors = declared.filter(([, { may }]) => Array.isArray(may) && may.includes('auditor'))
-    expect(auditors.filter(([name]) => methodOf(name) !== 'GET')).toEqual([])
+    expect(auditors.map(([name]) => name).filter(name => methodOf(name) !== 'GET')).toEqual(['explain', 'close', 'reopen'].map(act => `POST /api/findings/:id/${act}`))
   })
 
   it('let a script read or upload, never sign, register or change', () => {
@@ -120,9 +129,9 @@ describe('the doors', () => {
     }
   })
 
-  it('that are signed are for planners alone and take the password again', () => {
+  it('that are signed are for planners, a finding for auditors too, and take the password again', () => {
     for (const [name, { sign, may, body }] of declared.filter(([, route]) => route.sign)) {
-      expect([sign, may], name).toEqual([true, ['planner']])
+      expect([sign, may], name).toEqual([true, name.startsWith('POST /api/findings') ? ['planner', 'auditor'] : ['planner']])
       expect(body instanceof z.ZodObject && Object.keys(body.shape)).toContain('password')
     }
   })

@@ -1,0 +1,54 @@
+import { and, asc, count, desc, eq, gt, lt, lte, ne, sql } from 'drizzle-orm'
+import { alias } from 'drizzle-orm/sqlite-core'
+import { axis } from '../axis/table'
+import { ifGiven, inBounds } from '../bounds'
+import { inserter } from '../inserter'
+import { person } from '../person/table'
+import { prepared, type VaultDb } from '../prepared'
+import { site } from '../site/table'
+import { version } from '../version/table'
+import { finding, findingAct, findingState, findingVersion } from './table'
+
+const place = sql.placeholder
+const base = alias(version, 'base')
+const notClosed = ne(findingState.state, sql`'closed'`)
+
+export const findingQueries = prepared((db) => {
+  const standing = () => db.select({ finding, state: findingState.state, dueAt: findingState.dueAt, timeZone: site.timeZone }).from(finding)
+    .innerJoin(findingState, eq(findingState.findingId, finding.id)).leftJoin(site, eq(site.id, finding.siteId))
+  const atAxis = sql`(${place('axisId')} IS NULL OR EXISTS (SELECT 1 FROM ${findingVersion} WHERE ${findingVersion.findingId} = ${finding.id} AND ${findingVersion.axisId} = ${place('axisId')}))`
+  return {
+    byId: db.select().from(finding).where(eq(finding.id, place('id'))).prepare(),
+    one: standing().where(eq(finding.id, place('id'))).prepare(),
+    /** Newest first, from below an id. */
+    page: standing().where(and(lt(finding.id, place('below')), inBounds(finding.siteId), ifGiven(findingState.state, 'state'), ifGiven(finding.siteId, 'siteId'), ifGiven(finding.weight, 'weight'), atAxis))
+      .orderBy(desc(finding.id)).limit(place('limit')).prepare(),
+    /** The one of a cause that is not closed. */
+    openByCause: db.select({ id: findingState.findingId, state: findingState.state }).from(findingState).where(and(eq(findingState.causeKey, place('causeKey')), notClosed)).prepare(),
+    newestByCause: db.select({ id: finding.id, openedAt: finding.openedAt }).from(finding).where(eq(finding.causeKey, place('causeKey'))).orderBy(desc(finding.id)).limit(1).prepare(),
+    /** Past their day since the first instant, and not closed. */
+    overdue: standing().where(and(notClosed, gt(findingState.dueAt, place('since')), lte(findingState.dueAt, place('now')))).orderBy(asc(findingState.dueAt)).prepare(),
+    /** To be explained first, then to be closed; the longest waiting first. */
+    waiting: standing().where(and(notClosed, inBounds(finding.siteId))).orderBy(sql`${findingState.state} = 'explained'`, asc(findingState.dueAt)).limit(place('limit')).prepare(),
+    countWaiting: db.select({ count: count(), since: sql<string | null>`min(${finding.openedAt})` }).from(findingState).innerJoin(finding, eq(finding.id, findingState.findingId)).where(and(notClosed, inBounds(finding.siteId))).prepare(),
+    versions: db.select({ row: findingVersion, tag: axis.tag, number: version.number, capturedAt: version.capturedAt, baseNumber: base.number }).from(findingVersion)
+      .innerJoin(axis, eq(axis.id, findingVersion.axisId)).leftJoin(version, eq(version.id, findingVersion.versionId)).leftJoin(base, eq(base.id, findingVersion.baseId))
+      .where(eq(findingVersion.findingId, place('findingId'))).orderBy(asc(findingVersion.id)).limit(place('limit')).prepare(),
+    countVersions: db.select({ count: count() }).from(findingVersion).where(eq(findingVersion.findingId, place('findingId'))).prepare(),
+    hasVersion: db.select({ id: findingVersion.id }).from(findingVersion)
+      .where(and(eq(findingVersion.findingId, place('findingId')), eq(findingVersion.axisId, place('axisId')), sql`${findingVersion.versionId} IS ${place('versionId')}`)).limit(1).prepare(),
+    axesOf: db.selectDistinct({ axisId: findingVersion.axisId }).from(findingVersion).where(eq(findingVersion.findingId, place('findingId'))).orderBy(asc(findingVersion.axisId)).prepare(),
+    acts: db.select({ act: findingAct, by: person.name, tag: axis.tag, number: version.number }).from(findingAct).innerJoin(person, eq(person.id, findingAct.byPerson))
+      .leftJoin(version, eq(version.id, findingAct.versionId)).leftJoin(axis, eq(axis.id, version.axisId)).where(eq(findingAct.findingId, place('findingId'))).orderBy(asc(findingAct.id)).prepare(),
+    insert: inserter(db, finding),
+    insertVersion: inserter(db, findingVersion),
+    insertAct: inserter(db, findingAct),
+  }
+})
+
+export type StandingFinding = NonNullable<ReturnType<ReturnType<typeof findingQueries>['one']['get']>>
+
+/** Puts where a finding stands over where it stood. */
+export function putFindingState(db: VaultDb, row: typeof findingState.$inferInsert): void {
+  db.insert(findingState).values(row).onConflictDoUpdate({ target: findingState.findingId, set: row }).run()
+}

@@ -47,7 +47,7 @@ export function useUploadSending(people: () => readonly NamedPerson[]) {
   }
 
   async function sendOne(file: ListedFile): Promise<void> {
-    const query = fieldsFor(file, store.words, people())
+    const query = fieldsFor(file, store.words, people(), wanted.value.length)
     const words = JSON.stringify(query)
     const before = store.sendings.get(file.id)
     const key = before?.words === words ? before.key : newRequestKey()

@@ -44,6 +44,11 @@ export type Act = When & (
   | { readonly act: 'waive', readonly axis: string, readonly by: string, readonly rule: string, readonly days: number, readonly reason: string }
   | { readonly act: 'void', readonly axis: string, readonly by: string, readonly reason: string }
   | { readonly act: 'fit', readonly axis: string, readonly serial: string, readonly by: string, readonly oldState: 'failed' | 'spare' }
+  /** Closes every finding that was explained until then. */
+  | { readonly act: 'close', readonly by: string, readonly allowedBy: string }
+  /** Watches the whole site. */
+  | { readonly act: 'watch', readonly by: string }
+  | { readonly act: 'plan', readonly by: string, readonly axes: readonly string[], readonly fields: readonly string[], readonly hours: number, readonly reason: string, readonly allowedBy: string }
   | { readonly act: 'rule', readonly by: string, readonly rule: { readonly scope: 'machine', readonly machine: string, readonly field: string, readonly max: number, readonly reason: string } }
 )
 

@@ -1,6 +1,9 @@
 import type { Actor, PersonActor, TokenActor } from '../server/database/actor'
 import type { Vault } from '../server/database/client'
 import { listFittings } from '../server/services/axes/read-axis'
+import { closeFinding, listFindings } from '../server/services/findings/findings'
+import { watchPlace } from '../server/services/letters/own'
+import { announceChange } from '../server/services/planned-changes/planned-changes'
 import { markKnownGood, markNone } from '../server/services/known-good/mark'
 import { makeRule } from '../server/services/rules/rules'
 import { endFitting, openFitting } from '../server/services/units/fittings'
@@ -104,6 +107,20 @@ export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonl
         endFitting(vault, person(cast, act.by), open.id, { at: new Date(at - 60_000).toISOString(), unitState: act.oldState })
         const unit = listUnits(vault, person(cast, act.by), { search: act.serial }).items[0] ?? fail(`no unit ${act.serial}`)
         openFitting(vault, person(cast, act.by), { axisId: axisId(act.axis), unitId: unit.id, at: new Date(at).toISOString() })
+        break
+      }
+      case 'close': {
+        const auditor = person(cast, act.by)
+        for (const { id } of listFindings(vault, auditor, { state: 'explained', limit: 200 }).items) closeFinding(vault, auditor, id, { as: 'accepted', allowedBy: act.allowedBy })
+        break
+      }
+      case 'watch': {
+        watchPlace(vault, person(cast, act.by), { scope: 'site', scopeId: cast.siteId, watched: true })
+        break
+      }
+      case 'plan': {
+        const until = new Date(at + act.hours * 3_600_000).toISOString()
+        announceChange(vault, person(cast, act.by), { axisIds: act.axes.map(axisId), fields: [...act.fields], from: new Date(at).toISOString(), until, reason: act.reason, allowedBy: act.allowedBy })
         break
       }
       case 'rule': {

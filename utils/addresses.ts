@@ -7,6 +7,9 @@ export const addressOf = {
   version: (tag: string, number: number) => `/axes/${encodeURIComponent(tag)}/versions/${number}`,
   /** a stands before, b after; both are ids of versions. */
   changes: (before: number, after: number) => `/changes?a=${before}&b=${after}`,
+  findings: () => '/findings',
+  finding: (id: number) => `/findings/${id}`,
+  planned: () => '/planned',
   upload: () => '/upload',
   tray: () => '/tray',
   /** With a tag: to begin one there. */

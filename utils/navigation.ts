@@ -17,6 +17,8 @@ export const entries: readonly Entry[] = [
   { to: addressOf.upload(), word: 'Upload', first: true, for: ['technician', 'planner'] },
   { to: addressOf.tray(), word: 'Tray', first: true, for: ['technician', 'planner'] },
   { to: addressOf.units(), word: 'Units', first: true },
+  { to: addressOf.findings(), word: 'Findings' },
+  { to: addressOf.planned(), word: 'Planned', for: ['planner', 'auditor'] },
   { to: addressOf.places(), word: 'Places' },
   { to: addressOf.nameplates(), word: 'Nameplates', late: true },
   { to: addressOf.rules(), word: 'Rules', late: true },

@@ -13,11 +13,11 @@ export const boardAxis = z.object({
 })
 export type BoardAxis = z.infer<typeof boardAxis>
 
-export const attentionKinds = ['stop-check', 'off-known-good', 'unmarked', 'overdue', 'never-read', 'tray'] as const
+export const attentionKinds = ['finding', 'stop-check', 'off-known-good', 'unmarked', 'overdue', 'never-read', 'tray'] as const
 /** What needs someone now, worst first; `items` names up to five. */
 export const attentionSchema = z.object({
   kind: z.enum(attentionKinds), count: z.int(), since: instantSchema.nullable().describe('the oldest'),
-  items: z.array(z.object({ axisId: idSchema.nullable(), tag: z.string(), versionId: idSchema.nullable(), knownGoodId: idSchema.nullable(), text: z.string(), since: instantSchema.nullable() })),
+  items: z.array(z.object({ axisId: idSchema.nullable(), tag: z.string(), versionId: idSchema.nullable(), knownGoodId: idSchema.nullable(), findingId: idSchema.nullable(), text: z.string(), since: instantSchema.nullable() })),
 })
 export type Attention = z.infer<typeof attentionSchema>
 export const boardAnswer = z.object({ asOf: instantSchema, plant: z.string(), axes: z.array(boardAxis), attention: z.array(attentionSchema), log: z.object({ entries: z.int() }) })

@@ -95,7 +95,9 @@ export type Axis = z.infer<typeof axisSchema>
 
 /** One event on the time line, newest first. */
 export const lifeEvent = z.object({
-  at: instantSchema, kind: z.enum(['version', 'mark', 'mark-none', 'void', 'fitted', 'taken-out']),
+  at: instantSchema, kind: z.enum(['version', 'mark', 'mark-none', 'void', 'fitted', 'taken-out', 'finding', 'finding-closed']),
+  /** Of a finding: its id. */
+  findingId: idSchema.nullable(),
   versionId: idSchema.nullable(), number: z.int().nullable(), by: z.string(), text: z.string().nullable(),
   serial: z.string().nullable(), changes: weightCounts.nullable(), occasion: z.enum(occasions).nullable(), sightings: z.int().nullable(),
 })

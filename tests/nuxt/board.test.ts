@@ -142,7 +142,7 @@ describe('the plant in strokes', () => {
 })
 
 describe('what needs someone now', () => {
-  const item = (tag: string, text = '') => ({ axisId: 1, tag, versionId: 12, knownGoodId: 11, text, since: null })
+  const item = (tag: string, text = '') => ({ axisId: 1, tag, versionId: 12, knownGoodId: 11, findingId: null, text, since: null })
   const off: Attention = { kind: 'off-known-good', count: 6, since: '2026-11-25T00:00:00.000Z', items: [item('LID-03.Z', 'by 6 harm values'), item('CAS-01.X'), item('LID-02.Z')] }
 
   it('counts first, names the worst, then the others and how many more', () => {

@@ -93,7 +93,7 @@ export const axis: Axis = {
 }
 
 const event = (kind: LifeEvent['kind'], at: string, rest: Partial<LifeEvent> = {}): LifeEvent =>
-  ({ at, kind, versionId: null, number: null, by: 'Runa Haldersen', text: null, serial: null, changes: null, occasion: null, sightings: null, ...rest })
+  ({ at, kind, findingId: null, versionId: null, number: null, by: 'Runa Haldersen', text: null, serial: null, changes: null, occasion: null, sightings: null, ...rest })
 const version = (number: number, at: string, rest: Partial<LifeEvent> = {}) =>
   event('version', at, { number, versionId: number, by: 'station 2, nightly', occasion: 'routine', changes: { harm: 0, motion: 1, text: 0 }, sightings: 40, ...rest })
 

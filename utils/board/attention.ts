@@ -4,6 +4,7 @@ import { addressOf } from '~/utils/addresses'
 interface Telling { readonly one: string, readonly many: string, readonly action: string }
 
 const tellings: Record<Attention['kind'], Telling> = {
+  'finding': { one: 'open finding', many: 'open findings', action: 'Explain' },
   'stop-check': { one: 'stop check', many: 'stop checks', action: 'Judge' },
   'off-known-good': { one: 'axis off known-good', many: 'axes off known-good', action: 'Compare' },
   'unmarked': { one: 'axis without known-good', many: 'axes without known-good', action: 'Review' },
@@ -36,11 +37,12 @@ export function needOf(attention: Attention): Need {
     words: count === 1 ? telling.one : telling.many,
     action: telling.action,
     to: whereTo(attention),
-    first: first && { tag: first.tag, to: first.axisId !== null ? addressOf.axis(first.tag) : undefined, text: others ? `${first.text.replace(/\.$/, '')}; ${others}` : first.text },
+    first: first && { tag: first.tag, to: first.findingId !== null ? addressOf.finding(first.findingId) : first.axisId !== null ? addressOf.axis(first.tag) : undefined, text: others ? `${first.text.replace(/\.$/, '')}; ${others}` : first.text },
   }
 }
 
-function whereTo({ kind, items: [first] }: Attention): string {
+function whereTo({ kind, count, items: [first] }: Attention): string {
+  if (kind === 'finding') return count === 1 && first?.findingId ? addressOf.finding(first.findingId) : addressOf.findings()
   if (kind === 'tray') return addressOf.tray()
   if (kind === 'overdue' || kind === 'never-read' || !first) return addressOf.upload()
   if (kind === 'off-known-good' && first.knownGoodId !== null && first.versionId !== null) return addressOf.changes(first.knownGoodId, first.versionId)

@@ -32,16 +32,18 @@ export function reasonFor(file: ListedFile, words: Words): string {
   return wantsReason(file.reading) ? (words.reasons[file.reading.axis.tag] ?? '').trim() : ''
 }
 
-/** What travels with one file; empty texts stay away. */
-export function fieldsFor(file: ListedFile, words: Words, people: readonly NamedPerson[]): UploadFields {
+/** What travels with one of so many files; empty texts stay away. One reason for many explains no finding, and says so. */
+export function fieldsFor(file: ListedFile, words: Words, people: readonly NamedPerson[], files: number): UploadFields {
   const texts = {
     reason: reasonFor(file, words),
     workOrder: words.workOrder.trim(),
     changedBy: asPerson(words.changedBy, people),
     allowedBy: asPerson(words.allowedBy, people),
   }
+  const together = words.scope === 'together' && (texts.reason !== '' || texts.workOrder !== '') && files > 1
   return {
     occasion: words.occasion,
+    ...(together ? { together: 'yes' as const } : {}),
     ...Object.fromEntries(Object.entries(texts).filter(([, text]) => text !== '')),
     ...(file.decimal ? { decimal: file.decimal } : {}),
     ...layoutFields(file.layout),
@@ -49,8 +51,9 @@ export function fieldsFor(file: ListedFile, words: Words, people: readonly Named
   }
 }
 
-/** Axes with a watched change that nobody has said a word about yet. */
+/** Axes with a watched change whose finding will wait for an explanation. */
 export function unexplained(files: readonly ListedFile[], words: Words): string[] {
-  return files.filter(file => wantsReason(file.reading) && reasonFor(file, words) === '' && words.workOrder.trim() === '')
+  const together = words.scope === 'together' && files.filter(file => file.reading.state === 'placed').length > 1
+  return files.filter(file => wantsReason(file.reading) && (together || (reasonFor(file, words) === '' && words.workOrder.trim() === '')))
     .map(file => file.reading.state === 'placed' ? file.reading.axis.tag : file.name)
 }

@@ -28,6 +28,8 @@ const others: Readonly<Record<Exclude<LifeEvent['kind'], 'version'>, (event: Lif
   'mark-none': () => ({ what: 'known-good taken back', state: 'unmarked', label: 'no known-good' }),
   'void': event => ({ what: `v${event.number ?? ''} set aside as a wrong upload`, state: 'unmarked', label: 'void' }),
   'fitted': event => ({ what: `unit ${event.serial ?? ''} fitted`, state: 'new', label: 'unit fitted' }),
+  'finding': () => ({ what: 'a finding was opened', state: 'off', label: 'finding opened' }),
+  'finding-closed': () => ({ what: 'the finding was closed', state: 'in-line', label: 'finding closed' }),
   'taken-out': event => ({ what: `unit ${event.serial ?? ''} taken out`, state: 'never-read', label: 'unit taken out' }),
 }
 

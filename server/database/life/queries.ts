@@ -1,4 +1,5 @@
 import { and, desc, eq, sql } from 'drizzle-orm'
+import { finding, findingAct, findingVersion } from '../finding/table'
 import { fitting } from '../fitting/table'
 import { knownGood } from '../known-good/table'
 import { person } from '../person/table'
@@ -9,6 +10,8 @@ import { version, versionVoid } from '../version/table'
 
 const place = sql.placeholder
 const before = (at: unknown, id: unknown) => sql`(${at}, ${id}) < (${place('at')}, ${place('id')})`
+
+const ofAxis = sql`${finding.id} IN (SELECT finding_id FROM ${findingVersion} WHERE axis_id = ${place('axisId')})`
 
 /**
  * What happened to an axis, one statement a kind, newest first and each from before (at, id): keys by index first, a page at
@@ -31,4 +34,9 @@ export const lifeQueries = prepared(db => ({
     .where(and(eq(fitting.axisId, place('axisId')), before(fitting.fromAt, fitting.id))).orderBy(desc(fitting.fromAt), desc(fitting.id)).limit(place('limit')).prepare(),
   takenOut: db.select({ id: fitting.id, at: sql<string>`${fitting.toAt}`, serial: unit.serial }).from(fitting).innerJoin(unit, eq(unit.id, fitting.unitId))
     .where(and(eq(fitting.axisId, place('axisId')), before(fitting.toAt, fitting.id))).orderBy(desc(fitting.toAt), desc(fitting.id)).limit(place('limit')).prepare(),
+  findings: db.select({ id: finding.id, at: finding.openedAt, title: finding.title }).from(finding)
+    .where(and(ofAxis, before(finding.openedAt, finding.id))).orderBy(desc(finding.openedAt), desc(finding.id)).limit(place('limit')).prepare(),
+  findingsClosed: db.select({ id: findingAct.id, findingId: finding.id, at: findingAct.at, title: finding.title, by: person.name }).from(findingAct)
+    .innerJoin(finding, eq(finding.id, findingAct.findingId)).innerJoin(person, eq(person.id, findingAct.byPerson))
+    .where(and(ofAxis, eq(findingAct.kind, sql`'closed'`), before(findingAct.at, findingAct.id))).orderBy(desc(findingAct.at), desc(findingAct.id)).limit(place('limit')).prepare(),
 }))

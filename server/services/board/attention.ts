@@ -1,6 +1,8 @@
 import type { Attention } from '#shared/api/board'
 import { readJudgement } from '#server/database/check/queries'
+import { boundsText } from '#server/database/bounds'
 import { readContent } from '#server/database/content/queries'
+import { findingQueries } from '#server/database/finding/queries'
 import type { SiteBounds } from '#server/database/actor'
 import type { AxisListRow } from '#server/database/axis-state/list'
 import type { VaultDb } from '#server/database/prepared'
@@ -25,6 +27,7 @@ export function attention(db: VaultDb, sites: SiteBounds, rows: readonly AxisLis
     return { kind, count: needing.length, since: needing.map(each => each.since ?? '').sort()[0] || null, items: needing.slice(0, named).map(each => itemOf(each, text(each))) }
   }
   return [
+    findingGroup(db, sites),
     group('stop-check', ({ state }) => standingCounts(state, now).stop > 0, ({ current }) => current?.receivedAt ?? null, ({ row }) => firstStop(db, row, now)),
     group('off-known-good', ({ state }) => state?.status === 'off', ({ state }) => state?.offSince ?? null, ({ row }) => offText(db, row), weightOff),
     group('unmarked', ({ state }) => state?.status === 'unmarked', ({ mark, current }) => mark?.at ?? current?.receivedAt ?? null, () => 'read, and no version is known-good'),
@@ -35,7 +38,7 @@ export function attention(db: VaultDb, sites: SiteBounds, rows: readonly AxisLis
 }
 
 function itemOf({ row, since }: Needing, text: string): Item {
-  return { axisId: row.axis.id, tag: row.axis.tag, versionId: row.current?.id ?? null, knownGoodId: row.marked?.id ?? null, text, since }
+  return { axisId: row.axis.id, tag: row.axis.tag, versionId: row.current?.id ?? null, knownGoodId: row.marked?.id ?? null, findingId: null, text, since }
 }
 
 function firstStop(db: VaultDb, { axis, current }: AxisListRow, now: string): string {
@@ -58,11 +61,24 @@ function offText(db: VaultDb, { axis, current, marked }: AxisListRow): string {
   return `${first ? `${spokenPlace(first)} ${valueWords(first)}${more}` : 'moves renumbered'}, against known-good v${marked?.number ?? '?'}`
 }
 
+function findingGroup(db: VaultDb, sites: SiteBounds): Attention {
+  const queries = findingQueries(db)
+  const bounds = boundsText(sites)
+  const { count = 0, since = null } = queries.countWaiting.get({ sites: bounds }) ?? {}
+  const items = queries.waiting.all({ sites: bounds, limit: named }).map(({ finding, state }): Item => {
+    const [shown] = queries.versions.all({ findingId: finding.id, limit: 1 })
+    const tag = shown?.tag ?? 'the vault'
+    const what = finding.title.replace(new RegExp(`^${tag.replaceAll('.', '\\.')}:? `), '').replace(/\.$/, '')
+    return { axisId: shown?.row.axisId ?? null, tag, versionId: shown?.row.versionId ?? null, knownGoodId: null, findingId: finding.id, text: `${what}; ${state === 'open' ? 'nobody has said why' : 'explained, to be closed'}`, since: finding.openedAt }
+  })
+  return { kind: 'finding', count, since, items }
+}
+
 function trayGroup(db: VaultDb, sites: SiteBounds): Attention {
   const { count, since } = countWaiting(db, sites)
   const items = count === 0
     ? []
     : waitingGroups(db, sites, 0, named).map(({ tray, upload, guessTag }): Item =>
-        ({ axisId: tray.guessAxisId, tag: guessTag ?? tray.serial ?? upload.name ?? `file ${tray.id}`, versionId: null, knownGoodId: null, text: tray.detail, since: upload.receivedAt }))
+        ({ axisId: tray.guessAxisId, tag: guessTag ?? tray.serial ?? upload.name ?? `file ${tray.id}`, versionId: null, knownGoodId: null, findingId: null, text: tray.detail, since: upload.receivedAt }))
   return { kind: 'tray', count, since, items }
 }

@@ -8,6 +8,7 @@ import type { AxisPlace } from '#server/database/judging/queries'
 import { personQueries } from '#server/database/person/queries'
 import type { VaultDb } from '#server/database/prepared'
 import type { VersionRow } from '#server/database/schema'
+import { sightingQueries } from '#server/database/sighting/queries'
 import { versionQueries } from '#server/database/version/queries'
 import { tellWatchers } from '../letters/queue'
 import { axisNamed } from '../uploads/axis-named'
@@ -38,8 +39,9 @@ function watchedChange(db: VaultDb, write: Write, sender: Sender, fields: Upload
   const [first] = changes
   if (base === null || first === undefined) return []
   const { axis, site } = place
-  const explained = [...plannedExplanations(db, axis.id, changes, base.orderAt, version.orderAt), ...ownWords(db, sender, fields)]
-  const title = changeTitle(axis.tag, changes, { before: { number: base.number, at: base.orderAt }, after: { number: version.number, at: version.orderAt }, zone: site.timeZone })
+  const since = lastSeen(db, base, version)
+  const explained = [...plannedExplanations(db, axis.id, changes, since, version.orderAt), ...ownWords(db, sender, fields)]
+  const title = changeTitle(axis.tag, changes, { before: { number: base.number, at: since }, after: { number: version.number, at: version.orderAt }, zone: site.timeZone })
   return [raiseFinding(db, write, {
     cause: 'watched-change', causeKey: `axis:${axis.id}:version:${version.id}`, siteId: site.id, weight: first.weight, title, explained,
     showings: [{ axisId: axis.id, versionId: version.id, baseId: base.id, says: title, changes }],
@@ -48,6 +50,12 @@ function watchedChange(db: VaultDb, write: Write, sender: Sender, fields: Upload
       storedBy: personName(db, sender.personId) ?? `person ${sender.personId}`, finding: { id, explained: state === 'explained' },
     }),
   })]
+}
+
+/** When the version before was last seen to stand: the change was made after that. */
+function lastSeen(db: VaultDb, base: VersionRow, version: VersionRow): string {
+  const seen = sightingQueries(db).lastOfVersion.get({ versionId: base.id })?.capturedAt
+  return seen !== undefined && seen > base.orderAt && seen <= version.orderAt ? seen : base.orderAt
 }
 
 /** A reason or a work order that a named person gave for this axis alone; a script, a shared account and one reason for many files explain nothing. */

@@ -2,7 +2,6 @@ import { createHash } from 'node:crypto'
 import type { CheckResult, Judgement } from '#shared/checks/types'
 import type { Content } from '#shared/settings/types'
 import type { Write } from '#server/database/client'
-import type { AxisPlace } from '#server/database/judging/queries'
 import type { VaultDb } from '#server/database/prepared'
 import type { VersionRow } from '#server/database/schema'
 import { waived } from '../waivers/accepted'
@@ -33,7 +32,8 @@ export function stopKey(axisId: number, { rule, results }: StandingStop): string
   return `axis:${axisId}:stop:${rule}:${siteRuleOf(results[0]) ?? ''}:${createHash('sha256').update(places).digest('hex').slice(0, 16)}`
 }
 
-type At = Pick<AxisPlace, 'axis' | 'site'>
+/** Where it was found. */
+interface At { readonly axis: { readonly id: number, readonly tag: string }, readonly site: { readonly id: number } }
 
 /** Raises what stops a version that was stored: one finding a rule and its places. */
 export function raiseStops(db: VaultDb, write: Write, { axis, site }: At, version: Pick<VersionRow, 'id' | 'baseId'>, stops: readonly StandingStop[]): Raised[] {

@@ -4,6 +4,7 @@ import type { Vault } from '#server/database/client'
 import { knownGoodQueries } from '#server/database/known-good/queries'
 import { versionQueries } from '#server/database/version/queries'
 import { refreshAxisState } from '../axes/axis-state'
+import { explainVoided } from '../findings/voided'
 import { versionRow } from './read-version'
 
 /** Says that a version is a wrong upload; it stays readable. Not the one that the axis is restored to. Answers the id of the version. */
@@ -21,6 +22,7 @@ export function voidVersion(vault: Vault, actor: Actor, versionId: number, reaso
     versionQueries(db).insertVoid(row)
     write.log({ act: 'version-voided', id: versionId, state: row, note: reason })
     refreshAxisState(db, version.axisId)
+    explainVoided(db, write, versionId, byPerson, reason)
     return { id: versionId }
   })
 }

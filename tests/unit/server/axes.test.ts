@@ -66,8 +66,9 @@ describe('the life of an axis', () => {
     voidVersion(plant.vault, runa, v2, 'wrong file')
     markNone(plant.vault, runa, axisId, { meaning: 'reviewed' })
     const all = axisLife(plant.vault, axisId, {}).items
-    expect(all.map(({ kind, number }) => `${kind} ${number}`)).toEqual(['void 2', 'mark-none null', 'version 2', 'mark 1', 'version 1', 'fitted null'])
-    expect(all[3]).toMatchObject({ by: 'Runa Haldersen', text: 'after service' })
+    expect(all.map(({ kind, number }) => `${kind} ${number}`)).toEqual(['finding null', 'void 2', 'mark-none null', 'version 2', 'mark 1', 'version 1', 'fitted null'])
+    expect(all[0]).toMatchObject({ findingId: 1, text: expect.stringMatching(/^LID-02\.Z thrust limit 38 → 55 %/) as string })
+    expect(all[4]).toMatchObject({ by: 'Runa Haldersen', text: 'after service' })
     const paged = []
     for (let cursor: string | undefined, page = 0; page === 0 || cursor !== undefined; page += 1) {
       const { items, next } = axisLife(plant.vault, axisId, { limit: 1, cursor })
@@ -137,9 +138,10 @@ describe('the board', () => {
     send({}, { serial: 'SN-UNKNOWN' })
     plant.now += 25 * hour
     const board = readBoard(plant.vault, runa)
-    expect(board.attention.map(({ kind, count }) => `${kind} ${count}`)).toEqual(['stop-check 1', 'off-known-good 1', 'overdue 1', 'never-read 1', 'tray 1'])
-    expect(board.attention[0]?.items[0]).toMatchObject({ tag: 'LID-02.Z', versionId: v2, knownGoodId: v1, text: expect.stringContaining('250') as string })
-    expect(board.attention[1]).toMatchObject({ since: offAt, items: [{ text: 'soft limit, max 180 → 250 mm, against known-good v1' }] })
+    expect(board.attention.map(({ kind, count }) => `${kind} ${count}`)).toEqual(['finding 2', 'stop-check 1', 'off-known-good 1', 'overdue 1', 'never-read 1', 'tray 1'])
+    expect(board.attention[0]?.items[0]).toMatchObject({ tag: 'LID-02.Z', findingId: 1, text: expect.stringMatching(/^soft limit, max 180 → 250 mm, changed between .*; nobody has said why$/) as string })
+    expect(board.attention[1]?.items[0]).toMatchObject({ tag: 'LID-02.Z', versionId: v2, knownGoodId: v1, text: expect.stringContaining('250') as string })
+    expect(board.attention[2]).toMatchObject({ since: offAt, items: [{ text: 'soft limit, max 180 → 250 mm, against known-good v1' }] })
     expect(board.axes.find(({ id }) => id === axisId)).toMatchObject({ status: 'off', off: { harm: 1 }, sense: 'more', overdueSince: iso(Date.parse(offAt) + 24 * hour), knownGood: { number: 1 }, current: { number: 2 }, serial: 'SN-0001' })
     expect(board.log.entries).toBe(plant.rows().log)
   })

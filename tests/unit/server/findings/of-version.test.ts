@@ -6,6 +6,7 @@ import { watchPlace } from '../../../../server/services/letters/own'
 import { makeRule } from '../../../../server/services/rules/rules'
 import { giveWaiver } from '../../../../server/services/waivers/waivers'
 import { storeUpload } from '../../../../server/services/uploads/store-upload'
+import { voidVersion } from '../../../../server/services/versions/void-version'
 import { openFindingsPlant, type FindingsPlant } from '../../../support/findings-plant'
 import { day, hour, iso, settingsFile, start } from '../../../support/vault-plant'
 
@@ -41,6 +42,19 @@ describe('a watched change', () => {
     plant.close()
     plant = openFindingsPlant({ watched: ['smoothingTime'] })
     expect(plant.upload({ thrustLimit: 38, speedLimit: 500, smoothingTime: 900 }).findings).toEqual([{ id: 1, state: 'open' }])
+  })
+
+  it('was made after the version before was last seen', () => {
+    plant.now += 5 * hour
+    storeUpload(plant.vault, plant.tobias, { bytes: settingsFile({ serial: 'SN-1', exportedAt: iso(plant.now), setup: { thrustLimit: 38, speedLimit: 500 } }), name: null }, {})
+    plant.upload(raised)
+    expect(all()[0]?.title).toMatch(/changed between 1 Mar 2026 13:00 \(v1\) and 1 Mar 2026 14:00 CET \(v2\)$/)
+  })
+
+  it('of a version that is set aside as a wrong upload is explained by that', () => {
+    const { version } = plant.upload(raised)
+    voidVersion(plant.vault, plant.runa, version.id, 'file of another drive')
+    expect(readFinding(plant.vault, 1)).toMatchObject({ state: 'explained', explanations: [{ by: 'Runa Haldersen', text: 'Set aside as a wrong upload: file of another drive' }] })
   })
 
   it.each(['routine', 'as-found', 'as-left', 'commissioning'] as const)('whatever the occasion: %s', (occasion) => {

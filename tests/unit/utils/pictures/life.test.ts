@@ -6,7 +6,7 @@ import { extentOf } from '../../../../utils/pictures/scale'
 import { timeTicks } from '../../../../utils/pictures/time-scale'
 
 const event = (kind: LifeEvent['kind'], at: string, rest: Partial<LifeEvent> = {}): LifeEvent =>
-  ({ at, kind, versionId: null, number: null, by: 'Runa Haldersen', text: null, serial: null, changes: null, occasion: null, sightings: null, ...rest })
+  ({ at, kind, findingId: null, versionId: null, number: null, by: 'Runa Haldersen', text: null, serial: null, changes: null, occasion: null, sightings: null, ...rest })
 const version = (number: number, at: string) => event('version', at, { number })
 const mark = (number: number, at: string) => event('mark', at, { number })
 

@@ -16,24 +16,24 @@ describe('a person beside an upload', () => {
 
 describe('what travels with a file', () => {
   it('is taken by the wire shape, empty texts left away', () => {
-    const fields = fieldsFor(watched, words({}), people)
+    const fields = fieldsFor(watched, words({}), people, 2)
     expect(fields).toEqual({ occasion: 'routine', name: 'lid-01-z.json' })
     expect(uploadFields.parse(fields)).toEqual(fields)
   })
 
   it('carries the reason of its own axis', () => {
     const said = words({ reasons: { 'LID-01.Z': ' new lid ' }, workOrder: 'WO-4139', changedBy: 'Tobias Achterberg', allowedBy: 'shift lead' })
-    expect(fieldsFor(watched, said, people)).toMatchObject({ reason: 'new lid', workOrder: 'WO-4139', changedBy: 'person:2', allowedBy: 'shift lead' })
-    expect(fieldsFor(quiet, said, people).reason).toBeUndefined()
+    expect(fieldsFor(watched, said, people, 2)).toMatchObject({ reason: 'new lid', workOrder: 'WO-4139', changedBy: 'person:2', allowedBy: 'shift lead' })
+    expect(fieldsFor(quiet, said, people, 2).reason).toBeUndefined()
   })
 
   it('carries the common reason, to quiet ones too', () => {
     const said = words({ scope: 'together', reason: 'yearly check', reasons: { 'LID-01.Z': 'not this' } })
-    expect([watched, quiet].map(file => fieldsFor(file, said, people).reason)).toEqual(['yearly check', 'yearly check'])
+    expect([watched, quiet].map(file => fieldsFor(file, said, people, 2).reason)).toEqual(['yearly check', 'yearly check'])
   })
 
   it('carries the answer to the question of the decimal sign', () => {
-    expect(fieldsFor({ ...quiet, decimal: 'comma' }, noWords(), people).decimal).toBe('comma')
+    expect(fieldsFor({ ...quiet, decimal: 'comma' }, noWords(), people, 1).decimal).toBe('comma')
   })
 })
 
@@ -42,6 +42,8 @@ describe('axes without a word', () => {
     expect(unexplained([watched, quiet], noWords())).toEqual(['LID-01.Z'])
     expect(unexplained([watched], words({ reasons: { 'LID-01.Z': 'x' } }))).toEqual([])
     expect(unexplained([watched], words({ workOrder: 'WO-1' }))).toEqual([])
+    expect(unexplained([watched, quiet], words({ scope: 'together', reason: 'yearly check' }))).toEqual(['LID-01.Z'])
+    expect(unexplained([watched], words({ scope: 'together', reason: 'yearly check' }))).toEqual([])
     expect(unexplained([listed(placed('NEW-1', { base: null, changes: [change('harm')] }))], noWords())).toEqual([])
   })
 })

@@ -128,13 +128,14 @@ describe('sideBySide', () => {
 })
 
 describe('lifeLine', () => {
-  const event = (rest: Partial<LifeEvent>): LifeEvent => ({ at: '2026-11-30T05:12:00.000Z', kind: 'version', versionId: 15, number: 15, by: 'station 2', text: null, serial: null, changes: null, occasion: 'routine', sightings: null, ...rest })
+  const event = (rest: Partial<LifeEvent>): LifeEvent => ({ at: '2026-11-30T05:12:00.000Z', kind: 'version', findingId: null, versionId: 15, number: 15, by: 'station 2', text: null, serial: null, changes: null, occasion: 'routine', sightings: null, ...rest })
   it('tells a version by what it changed and how often it was seen', () => {
     expect(lifeLine(event({ changes: { harm: 6, motion: 2, text: 0 }, sightings: 1 }))).toEqual({ what: 'v15, routine', beside: '6 harm, 2 motion against the version before; seen the same 1 time since; station 2', state: 'off', label: 'changed: 6 harm, 2 motion' })
   })
   it('tells a first version, a mark, a unit taken out', () => {
     expect(lifeLine(event({})).state).toBe('new')
     expect(lifeLine(event({ kind: 'mark', text: 'approved' }))).toMatchObject({ what: 'v15 marked known-good', beside: 'station 2; approved' })
+    expect(lifeLine(event({ kind: 'finding', findingId: 3, number: null, text: 'thrust limit 38 → 55 %', by: '' }))).toMatchObject({ what: 'a finding was opened', beside: 'thrust limit 38 → 55 %', state: 'off' })
     expect(lifeLine(event({ kind: 'taken-out', number: null, serial: 'HL40-23-00392' }))).toMatchObject({ what: 'unit HL40-23-00392 taken out', state: 'never-read' })
   })
 })

@@ -39,6 +39,9 @@ const visits: readonly Visit[] = [
   { file: 'pages/interface.vue', address: () => '/interface', ready: /\d+ calls/ },
   { file: 'pages/help.vue', address: () => '/help#target-inside', ready: /\d+ rules judge an axis/ },
   { file: 'pages/people.vue', address: () => '/people', ready: /\d+ people/, as: 'admin' },
+  { file: 'pages/findings/index.vue', address: () => '/findings', ready: /findings? to be explained/ },
+  { file: 'pages/findings/[id].vue', address: async () => `/findings/${await idOf('/api/findings?axis=tag:LID-03.Z', item => item.cause === 'watched-change')}`, ready: /^LID-03\.Z thrust limit 38 → 55 %/ },
+  { file: 'pages/planned.vue', address: () => '/planned', ready: /announced/ },
   { file: 'pages/letters.vue', address: () => '/letters', ready: /letters? waits?|No letter waits/, as: 'admin' },
   { file: 'pages/me.vue', address: () => '/me', ready: /My letters/ },
   { file: 'pages/sign-in.vue', address: () => '/sign-in', ready: /Witnessmark/, as: 'nobody' },
@@ -150,6 +153,14 @@ const opened: readonly Opened[] = [
   { what: 'a new person with nothing said', file: 'pages/people.vue', as: 'admin', open: async (page) => {
     await press(page, 'Register a person')
     await press(page, 'Register the person')
+  } },
+  { what: 'an explanation with nothing said', file: 'pages/findings/[id].vue', open: async (page) => {
+    await press(page, 'Explain it')
+    await press(page, 'Put it under my name')
+  } },
+  { what: 'a change being announced', file: 'pages/planned.vue', open: async (page) => {
+    await press(page, 'Announce a change')
+    await press(page, 'Announce it')
   } },
   { what: 'the way to watch an axis', file: 'pages/me.vue', open: page => press(page, 'Watch an axis') },
   { what: 'a new token', file: 'pages/people.vue', as: 'admin', open: page => press(page, 'Make a token') },

@@ -27,7 +27,9 @@ export function plannedExplanations(db: VaultDb, axisId: number, changes: readon
   const plans = plannedChangeQueries(db).holding.all({ axisId, from, to }).map(({ plan }) => plan)
   const used = changes.map(change => plans.find(plan => covers(plan, change)))
   if (used.length === 0 || used.includes(undefined)) return []
-  return [...new Set(used)].flatMap(plan => plan === undefined ? [] : [{
-    byPerson: plan.madeBy, plannedChangeId: plan.id, text: `Announced before: ${plan.reason.replace(/\.$/, '')}. Allowed by ${namedPerson(db, plan.allowedBy) ?? plan.allowedBy}.`,
-  }])
+  return [...new Set(used)].flatMap(plan => plan === undefined
+    ? []
+    : [{
+        byPerson: plan.madeBy, plannedChangeId: plan.id, text: `Announced before: ${plan.reason.replace(/\.$/, '')}. Allowed by ${namedPerson(db, plan.allowedBy) ?? plan.allowedBy}.`,
+      }])
 }

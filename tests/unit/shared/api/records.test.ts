@@ -38,7 +38,7 @@ const board: Partial<BoardAxis> = {
   id: 2, tag: 'LID-02.Z', role: 'lid press', site: 'Larkfield Preserves', line: 'Jar line 1', machine: 'Lid press 2', machineId: 1, timeZone: 'Europe/Copenhagen', serial: null, model: null, status: 'off',
   off: counts, sense: 'more', lastUploadAt: null, overdueSince: null, knownGood: null, current: { versionId: 7, number: 4 }, checks: levels,
 }
-const attention: Partial<Attention> = { kind: 'off-known-good', count: 1, since: at, items: [{ axisId: 2, tag: 'LID-02.Z', versionId: 7, knownGoodId: null, text: 'Thrust limit 38 → 55 %', since: null }] }
+const attention: Partial<Attention> = { kind: 'off-known-good', count: 1, since: at, items: [{ axisId: 2, tag: 'LID-02.Z', versionId: 7, knownGoodId: null, findingId: null, text: 'Thrust limit 38 → 55 %', since: null }] }
 const me: Partial<Me> = { id: 1, name: 'Runa Haldersen', email: 'runa@larkfield.example', roles: ['planner'], sites: [{ id: 1, name: 'Larkfield Preserves', timeZone: 'UTC' }], plant: 'Larkfield Preserves', empty: false, shared: false }
 const person: Partial<Person> = { id: 1, rev: 1, name: 'Runa Haldersen', email: 'runa@larkfield.example', roles: ['planner'], siteIds: [], shared: false, endedAt: null, hasPassword: true, lastSignInAt: null }
 const token: Partial<Token> = { id: 1, name: 'Night export', scopes: ['upload'], siteIds: [], endsAt: at, endedAt: null, ownerId: 1, ownerName: 'Runa Haldersen', madeAt: at, lastUsedAt: null }

@@ -1,3 +1,11 @@
+import { readdirSync } from 'node:fs'
+import { fileURLToPath } from 'node:url'
+
+const fontFiles = ['inter', 'jetbrains-mono'].flatMap((family) => {
+  const folder = fileURLToPath(new URL(`./node_modules/@fontsource/${family}/files/`, import.meta.url))
+  return readdirSync(folder).filter(name => /-(400|600)-normal\.woff$/.test(name)).map(name => folder + name)
+})
+
 /*
  * No component islands, no `.server.vue`, no authorisation in route rules or route middleware, no runtime compiler:
  * later fixes of the framework concern those features, and the application does without them (tests/architecture).
@@ -31,7 +39,8 @@ export default defineNuxtConfig({
   runtimeConfig: { session: { name: 'witnessmark', password: '', maxAge: 7 * 24 * 60 * 60, cookie: { sameSite: 'lax', secure: false } } },
   srcDir: '.',
   compatibilityDate: '2026-12-01',
-  nitro: { esbuild: { options: { target: 'node20' } } },
+  // The fonts of sheets and labels: read at run time, so that the bundler does not see them.
+  nitro: { esbuild: { options: { target: 'node20' } }, externals: { traceInclude: fontFiles } },
   typescript: {
     tsConfig: { exclude: ['../tests/architecture', '../tests/crash', '../tests/e2e', '../tests/server', '../tests/support', '../tests/unit', '../fixtures', '../shared', '../bench', '../scripts', '../drizzle.config.ts', '../vitest.config.ts'] },
     sharedTsConfig: { include: ['../tests/unit/shared/**/*'] },

@@ -1,6 +1,7 @@
 import { spawnSync } from 'node:child_process'
 import { mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
 import { needChromium } from './chromium.mjs'
+import { needPaperTools } from './paper-tools.mjs'
 
 /*
  * All tests: unit and architecture, mounted pages, then the built server with a real file and a real browser. Counts come
@@ -12,6 +13,7 @@ const reportFile = `${folder}/vitest.json`
 mkdirSync(folder, { recursive: true })
 rmSync(reportFile, { force: true })
 
+needPaperTools()
 const environment = { ...process.env, CHROMIUM_PATH: needChromium() }
 const run = (command, ...args) => spawnSync(command, args, { stdio: 'inherit', env: environment }).status ?? 1
 

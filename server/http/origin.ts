@@ -1,3 +1,4 @@
+import type { H3Event } from 'h3'
 import type { IncomingMessage } from 'node:http'
 import { Refusal } from '#shared/errors/refusal'
 
@@ -24,3 +25,10 @@ function sameOrigin(origin: string, publicOrigin: string | null, host: string | 
 }
 
 const refused = () => new Refusal('origin', 'This came from a page of another site and was not carried out.')
+
+/** Where people reach the vault: PUBLIC_URL, else the address that this request came to. */
+export function originOf({ context, node: { req } }: H3Event): string {
+  const { publicOrigin } = context.server
+  if (publicOrigin !== null) return publicOrigin
+  return req.headers.host === undefined ? '' : `http://${req.headers.host}`
+}

@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { levels } from '../checks/types'
 import { sections, verdicts } from '../diff/types'
 import { axisFlags, axisKinds, weights } from '../settings/types'
+import { papers } from './places'
 import { readinessSchema } from './readiness'
 import { axisRef, idSchema, idText, instantSchema, passwordSchema, reasonSchema } from './common'
 
@@ -71,9 +72,9 @@ export type ChangesAnswer = z.infer<typeof changesAnswer>
 export const meanings = ['reviewed', 'approved', 'responsibility'] as const
 export const knownGoodBody = z.strictObject({ meaning: z.enum(meanings), note: z.string().max(2000).optional(), password: passwordSchema })
 export const voidBody = z.strictObject({ reason: reasonSchema, password: passwordSchema })
-/** `entry`: the drive's own list, by the entry table of the model that the kit is for. */
-export const kitForms = ['json', 'csv', 'entry'] as const
-export const kitBody = z.strictObject({ serial: z.string().max(64).optional(), form: z.enum(kitForms), cautionsRead: z.boolean() })
+/** `entry`: the drive's own list, by the entry table of the model that the kit is for; `pdf`: the restore sheet; `zip`: all of them, with the drive tool's own backup. */
+export const kitForms = ['json', 'csv', 'entry', 'pdf', 'zip'] as const
+export const kitBody = z.strictObject({ serial: z.string().max(64).optional(), form: z.enum(kitForms), paper: z.enum(papers).optional().describe('of the sheet; the site’s where it is not said'), cautionsRead: z.boolean() })
 
 export const axisStatuses = ['in-line', 'off', 'never-read', 'unmarked'] as const
 export const axisSchema = z.object({

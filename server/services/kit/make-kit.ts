@@ -3,66 +3,53 @@ import type { kitBody } from '#shared/api/versions'
 import { Refusal } from '#shared/errors/refusal'
 import type { PersonActor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
-import { judgingQueries } from '#server/database/judging/queries'
-import { knownGoodQueries } from '#server/database/known-good/queries'
-import type { VaultDb } from '#server/database/prepared'
-import type { NameplateRow, UnitRow, VersionRow } from '#server/database/schema'
-import { unitRows } from '#server/database/unit/queries'
-import { versionQueries } from '#server/database/version/queries'
-import { seesSite } from '#server/database/actor'
-import { fileOf, versionRow } from '../versions/read-version'
 import { fileEnds, mediaTypes, textOf, type HandedOut } from '../versions/version-file'
-import { asItStands, fitToUnit } from './fit'
-import { kitFile, kitNote, type KitSource } from './kit-file'
+import { drawKitSheet } from '../sheet/kit-sheet'
+import { kitParts, type KitParts } from './kit-parts'
+import { zipKit } from './zip-kit'
 
 export interface Kit extends Omit<HandedOut, 'etag'> {
   /** false: no version is known-good, the newest one is given out. */
   readonly released: boolean
 }
+type Wanted = z.output<typeof kitBody>
+type TextForm = Exclude<Wanted['form'], 'pdf' | 'zip'>
+/** A kit that is made and not yet taken. */
+export interface MadeKit { readonly kit: Kit, readonly parts: KitParts, readonly form: Wanted['form'] }
 
 /**
- * The values that an axis is restored to, as a file for a replacement unit: fitted to a registered one, as they stand for
- * another serial, with the serial to be written where none is named. Logged.
+ * The values that an axis is restored to, for a replacement unit: fitted to a registered one, as they stand for another serial,
+ * with the serial to be written where none is named. Logs nothing yet: a PDF takes longer than a write may. `origin` is where
+ * people reach the vault.
  */
-export function makeKit(vault: Vault, actor: PersonActor, axisId: number, { serial, form, cautionsRead }: z.output<typeof kitBody>): Kit {
+export async function makeKit(vault: Vault, actor: PersonActor, axisId: number, wanted: Wanted, origin: string): Promise<MadeKit> {
+  const { form, paper } = wanted
+  if (form !== 'pdf' && form !== 'zip') return makeTextKit(vault, actor, axisId, { ...wanted, form })
+  const parts = partsOf(vault, actor, axisId, wanted)
+  const draw = form === 'pdf' ? drawKitSheet : zipKit
+  return made(parts, form, { bytes: await draw(vault, parts, { origin, paper }), mediaType: form === 'pdf' ? 'application/pdf' : 'application/zip', name: `${nameOf(parts)}.${form}` })
+}
+
+/** As makeKit, in one of the forms that are read back. */
+export function makeTextKit(vault: Vault, actor: PersonActor, axisId: number, wanted: Wanted & { readonly form: TextForm }): MadeKit {
+  const parts = partsOf(vault, actor, axisId, wanted)
+  const { form } = wanted
+  return made(parts, form, { bytes: Buffer.from(textOf(vault.db, parts.file, form), 'utf8'), mediaType: mediaTypes[form], name: nameOf(parts) + fileEnds[form] })
+}
+
+function partsOf(vault: Vault, actor: PersonActor, axisId: number, { serial, cautionsRead }: Wanted): KitParts {
   if (!cautionsRead) throw new Refusal('cautions-unread', 'Read the cautions, then take the kit: these values move a machine.')
+  return kitParts(vault.db, actor, axisId, serial, vault.now())
+}
+
+const nameOf = ({ place, version }: KitParts) => `${place.axis.tag}-v${version.number}-kit`
+const made = (parts: KitParts, form: Wanted['form'], file: Omit<Kit, 'released'>): MadeKit => ({ parts, form, kit: { ...file, released: parts.mark !== null } })
+
+/** Logs that a kit was taken, and hands it out. */
+export function takeKit(vault: Vault, actor: PersonActor, { kit, parts: { place, version, serial, unit, fitted }, form }: MadeKit): Kit {
   return vault.write(actor, (write) => {
-    const { db } = vault
-    const place = judgingQueries(db).axis.get({ id: axisId })
-    if (!place) throw new Refusal('not-found', 'There is no such axis.')
-    const { version, mark } = toRestore(db, axisId)
-    const source = kitSource(db, version)
-    const registered = registeredUnit(db, actor, serial, version.file.unit.channel)
-    const fitted = registered ? fitToUnit(db, place, source, registered, write.now) : asItStands(source, version.file.unit, serial)
-    const note = kitNote({ tag: place.axis.tag, number: version.number, mark, left: fitted.left, warnings: fitted.warnings })
-    const file = kitFile(fitted.content, fitted.identity, note, write.now, actor.name)
-    write.log({ act: 'kit-taken', id: axisId, state: { axisId, versionId: version.id, serial: serial ?? null, unitId: registered?.id ?? null, form, released: mark !== null, left: [...fitted.left] } })
-    return { bytes: Buffer.from(textOf(db, file, form), 'utf8'), mediaType: mediaTypes[form], name: `${place.axis.tag}-v${version.number}-kit${fileEnds[form]}`, released: mark !== null }
+    const axisId = place.axis.id
+    write.log({ act: 'kit-taken', id: axisId, state: { axisId, versionId: version.id, serial, unitId: unit?.id ?? null, form, released: kit.released, left: [...fitted.left] } })
+    return kit
   })
-}
-
-/** The known-good in force, else the newest version that is not void. */
-function toRestore(db: VaultDb, axisId: number): { version: VersionRow, mark: { by: string, at: string } | null } {
-  const inForce = knownGoodQueries(db).inForce.get({ axisId })
-  if (inForce?.mark.versionId) return { version: versionRow(db, inForce.mark.versionId), mark: { by: inForce.by, at: inForce.mark.at } }
-  const newest = versionQueries(db).current.get({ axisId })
-  if (!newest) throw new Refusal('no-known-good', 'This axis was never read: there is nothing to restore. Upload a file of its unit first.')
-  return { version: newest, mark: null }
-}
-
-function kitSource(db: VaultDb, version: VersionRow): KitSource {
-  const nameplate = newestNameplate(db, unitRows(db).byId.get({ id: version.unitId })?.model ?? version.model)
-  const { axisKind, setup, zones, moves, extra } = fileOf(db, version)
-  return {
-    content: { axisKind, setup, zones, moves, extra }, model: version.model,
-    ...(version.firmware === null ? {} : { firmware: version.firmware }), ...(nameplate ? { nameplate: nameplate.nameplate } : {}),
-  }
-}
-
-const newestNameplate = (db: VaultDb, model: string): NameplateRow | undefined => judgingQueries(db).nameplate.get({ model })
-
-/** The unit of this serial, on the channel that the axis had; units of other sites are as unknown as those not registered. */
-function registeredUnit(db: VaultDb, actor: PersonActor, serial: string | undefined, channel: number | undefined): UnitRow | undefined {
-  const unit = serial === undefined ? undefined : unitRows(db).bySerial.get({ serial, channel: channel ?? 0 })
-  return unit && (unit.siteId === null || seesSite(actor, unit.siteId)) ? unit : undefined
 }

@@ -1,6 +1,6 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import type { PersonActor } from '../../../server/database/actor'
-import { makeKit } from '../../../server/services/kit/make-kit'
+import { makeTextKit, takeKit } from '../../../server/services/kit/make-kit'
 import { assignFromTray } from '../../../server/services/tray/assign'
 import { registerNameplate, reviseNameplate } from '../../../server/services/nameplates/nameplates'
 import { previewUpload } from '../../../server/services/uploads/preview-upload'
@@ -143,7 +143,7 @@ describe('a file in the drive’s own list', () => {
 })
 
 describe('a kit in the drive’s own list', () => {
-  const take = (to?: string) => makeKit(plant.vault, runa, axisId, { serial: to, form: 'entry', cautionsRead: true })
+  const take = (to?: string) => takeKit(plant.vault, runa, makeTextKit(plant.vault, runa, axisId, { serial: to, form: 'entry', cautionsRead: true }))
 
   it('has the values for the unit that it is for', () => {
     stored()

@@ -1,6 +1,6 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import type { PersonActor } from '../../../server/database/actor'
-import { makeKit } from '../../../server/services/kit/make-kit'
+import { makeTextKit, takeKit } from '../../../server/services/kit/make-kit'
 import { markKnownGood } from '../../../server/services/known-good/mark'
 import { storeUpload } from '../../../server/services/uploads/store-upload'
 import { readVersion } from '../../../server/services/versions/read-version'
@@ -33,7 +33,7 @@ function store(values: object = setup, extra: object = {}): number {
   if (outcome.outcome !== 'version') throw new Error(JSON.stringify(outcome))
   return outcome.answer.version.id
 }
-const take = (serial?: string, form: 'json' | 'csv' = 'json') => makeKit(plant.vault, tobias, axisId, { serial, form, cautionsRead: true })
+const take = (serial?: string, form: 'json' | 'csv' = 'json') => takeKit(plant.vault, tobias, makeTextKit(plant.vault, tobias, axisId, { serial, form, cautionsRead: true }))
 function read(bytes: Uint8Array): SettingsFile {
   const outcome = readSettings(bytes)
   if (!outcome.ok) throw new Error(JSON.stringify(outcome.errors))
@@ -145,7 +145,7 @@ describe('a kit', () => {
   })
 
   it('is refused with the cautions unread, and where there is nothing to restore; taken kits are logged', () => {
-    expect(() => makeKit(plant.vault, tobias, axisId, { form: 'json', cautionsRead: false })).toThrow(expect.objectContaining({ code: 'cautions-unread' }))
+    expect(() => makeTextKit(plant.vault, tobias, axisId, { form: 'json', cautionsRead: false })).toThrow(expect.objectContaining({ code: 'cautions-unread' }))
     expect(() => take()).toThrow(expect.objectContaining({ code: 'no-known-good' }))
     const versionId = store()
     const before = plant.rows().log ?? 0

@@ -129,6 +129,6 @@ describe('uploads and versions', () => {
   })
 
   it('a kit is taken in one of two forms, with the word that cautions were read', () => {
-    holds(kitBody, [{ form: 'json', cautionsRead: true }, { form: 'csv', cautionsRead: false, serial: 'A1' }], [{ form: 'pdf', cautionsRead: true }, { form: 'json' }, { form: 'json', cautionsRead: 'yes' }])
+    holds(kitBody, [{ form: 'json', cautionsRead: true }, { form: 'csv', cautionsRead: false, serial: 'A1' }, { form: 'pdf', paper: 'Letter', cautionsRead: true }, { form: 'zip', cautionsRead: true }], [{ form: 'docx', cautionsRead: true }, { form: 'pdf', paper: 'A3', cautionsRead: true }, { form: 'json' }, { form: 'json', cautionsRead: 'yes' }])
   })
 })

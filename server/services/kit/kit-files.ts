@@ -1,0 +1,48 @@
+import { CodedError } from '#shared/errors/coded'
+import { attachmentBytes } from '#server/database/attachment/queries'
+import type { Vault } from '#server/database/client'
+import { listAttachments } from '../attachments/read-attachments'
+import { textOf } from '../versions/version-file'
+import type { KitParts } from './kit-parts'
+
+/** One file of a kit, under a name that opens on every system. */
+export interface KitFile { readonly name: string, readonly bytes: Buffer, /** Packed already: zipping it again takes time for nothing. */ readonly packed: boolean }
+
+/** What the drive's own list would leave out is told, not passed over in silence. */
+export interface KitFiles { readonly files: readonly KitFile[], readonly without: readonly string[] }
+
+/**
+ * The files of a kit beside its sheet. The drive tool's own backups stand first where the unit's percentages mean the same
+ * newtons; else last, in a folder whose name says stop: they hold values of another unit.
+ */
+export function kitFiles(vault: Vault, { file, version, fitted, place, unit, source }: KitParts): KitFiles {
+  const name = `${safeName(place.axis.tag)}-v${version.number}`
+  const text = (form: 'json' | 'csv') => Buffer.from(textOf(vault.db, file, form), 'utf8')
+  const list = ownList(vault, file)
+  const values: KitFile[] = [
+    { name: `2-${name}-kit.json`, bytes: text('json'), packed: false },
+    { name: `3-${name}-kit.csv`, bytes: text('csv'), packed: false },
+    ...(list.bytes ? [{ name: `4-${name}-kit-list.csv`, bytes: list.bytes, packed: false }] : []),
+  ]
+  const otherModel = unit !== null && unit.model !== source.model
+  const attached = attachmentsOf(vault, version.id, otherModel ? `9-STOP-values-of-${safeName(version.model)}-mean-other-newtons` : `0-own-backup-of-${safeName(version.file.unit.serial)}`)
+  return { files: otherModel ? [...values, ...attached] : [...attached, ...values], without: [...(list.why === null ? [] : [list.why]), ...fitted.warnings] }
+}
+
+function ownList({ db }: Vault, file: KitParts['file']): { bytes: Buffer | null, why: string | null } {
+  try {
+    return { bytes: Buffer.from(textOf(db, file, 'entry'), 'utf8'), why: null }
+  }
+  catch (error) {
+    if (!(error instanceof CodedError) || (error.code !== 'no-entry-table' && error.code !== 'entry-table-unfit')) throw error
+    return { bytes: null, why: error.code === 'no-entry-table' ? null : error.message }
+  }
+}
+
+function attachmentsOf({ db }: Vault, versionId: number, folder: string): KitFile[] {
+  return listAttachments(db, versionId).items.filter(({ kind }) => kind === 'drive-backup')
+    .map(one => ({ name: `${folder}/${one.id}-${safeName(one.name)}`, bytes: Buffer.concat([...attachmentBytes(db, one)]), packed: true }))
+}
+
+/** A file name that opens on every system, old unpackers too: letters without their accents, the rest an underscore. */
+export const safeName = (text: string): string => text.normalize('NFKD').replaceAll(/\p{M}/gu, '').replaceAll(/[^A-Za-z0-9._-]/g, '_').replaceAll(/^\.+/g, '_').slice(0, 100) || '_'

@@ -1,0 +1,204 @@
+import PDFDocument from 'pdfkit'
+import { fontFile, scriptsOf, type Face, type Script } from './font-files'
+
+/*
+ * A sheet of paper to write on, over the PDF writer: points from the upper left corner, text by face and size on a base line.
+ * A sign that none of the shipped fonts has is written as its code point, U+4E2D, so that nothing is lost without a trace.
+ */
+
+export const millimetres = (value: number) => value * 72 / 25.4
+
+export type PaperSize = 'A4' | 'Letter' | { readonly width: number, readonly height: number }
+export interface TextStyle { readonly face?: Face, readonly size?: number, readonly align?: 'left' | 'right' | 'center', readonly colour?: string }
+
+/** The part of a font of the PDF writer's own library that is used here. */
+interface Glyph { readonly id: number, readonly advanceWidth: number, readonly codePoints: readonly number[] }
+interface Font {
+  readonly unitsPerEm: number
+  readonly hasGlyphForCodePoint: (code: number) => boolean
+  readonly glyphForCodePoint: (code: number) => Glyph
+  layout: (text: string) => { glyphs: Glyph[], positions: { xAdvance: number, yAdvance: number, xOffset: number, yOffset: number }[], advanceWidth: number }
+}
+interface Piece { readonly text: string, readonly name: string, readonly width: number }
+
+/** Signs that the fonts lack, by those that say the same. */
+const instead: Readonly<Record<string, string>> = { '→': '›', '←': '‹', '\u00a0': ' ', '\u202f': ' ', '\t': ' ' }
+
+const pointsOf = (size: PaperSize): readonly [number, number] => size === 'A4' ? [595.28, 841.89] : size === 'Letter' ? [612, 792] : [size.width, size.height]
+
+export class Paper {
+  readonly width: number
+  readonly height: number
+  private readonly document: PDFKit.PDFDocument
+  private readonly fonts = new Map<string, Font>()
+  private readonly chunks: Buffer[] = []
+  private pages = 0
+
+  constructor(size: PaperSize, { title, at }: { readonly title: string, readonly at: string }) {
+    [this.width, this.height] = pointsOf(size)
+    this.document = new PDFDocument({
+      size: [this.width, this.height], margin: 0, autoFirstPage: false, bufferPages: true, lang: 'en', pdfVersion: '1.7',
+      // Without a font of its own the writer would read one that is not shipped; its types do not say that null is allowed.
+      font: null as unknown as string,
+      info: { Title: title, Creator: 'Witnessmark', Producer: 'Witnessmark', CreationDate: new Date(at) },
+    })
+    this.document.on('data', (chunk: Buffer) => this.chunks.push(chunk))
+  }
+
+  /** How many pages there are so far. */
+  get pageCount(): number {
+    return this.pages
+  }
+
+  addPage(): void {
+    this.document.addPage()
+    this.pages += 1
+  }
+
+  /** Back to a page written before, counted from 0. */
+  turnTo(page: number): void {
+    this.document.switchToPage(page)
+  }
+
+  widthOf(text: string, { face = 'sans', size = 8.5 }: TextStyle = {}): number {
+    return this.pieces(text, face).reduce((sum, piece) => sum + piece.width, 0) * size
+  }
+
+  /** Writes one line; `x` is its left end, its right end or its middle as `align` says. Answers the x behind it. */
+  text(text: string, x: number, baseline: number, style: TextStyle = {}): number {
+    const { face = 'sans', size = 8.5, align = 'left', colour = '#000' } = style
+    const pieces = this.pieces(text, face)
+    const whole = align === 'left' ? 0 : pieces.reduce((sum, piece) => sum + piece.width, 0) * size
+    let at = align === 'right' ? x - whole : align === 'center' ? x - whole / 2 : x
+    this.document.fillColor(colour)
+    for (const piece of pieces) {
+      this.document.font(piece.name).fontSize(size).text(piece.text, at, baseline, { lineBreak: false, baseline: 'alphabetic' })
+      at += piece.width * size
+    }
+    return at
+  }
+
+  /** The text cut into lines that fit the width, at spaces; a word that is longer by itself is cut within. */
+  lines(text: string, width: number, style: TextStyle = {}): string[] {
+    const lines: string[] = []
+    let line = ''
+    for (const word of text.split(/\s+/).flatMap(each => this.cutWord(each, width, style))) {
+      const longer = line === '' ? word : `${line} ${word}`
+      if (line !== '' && this.widthOf(longer, style) > width) {
+        lines.push(line)
+        line = word
+      }
+      else {
+        line = longer
+      }
+    }
+    return line === '' ? lines : [...lines, line]
+  }
+
+  private cutWord(word: string, width: number, style: TextStyle): string[] {
+    if (this.widthOf(word, style) <= width) return [word]
+    const parts: string[] = []
+    let part = ''
+    for (const sign of word) {
+      if (part !== '' && this.widthOf(part + sign, style) > width) {
+        parts.push(part)
+        part = ''
+      }
+      part += sign
+    }
+    return [...parts, part]
+  }
+
+  line(x1: number, y1: number, x2: number, y2: number, { weight = 0.4, colour = '#000', dash = 0 }: { readonly weight?: number, readonly colour?: string, readonly dash?: number } = {}): void {
+    this.stroke(weight, colour, dash, () => this.document.moveTo(x1, y1).lineTo(x2, y2))
+  }
+
+  frame(x: number, y: number, width: number, height: number, { weight = 0.8, colour = '#000', dash = 0 }: { readonly weight?: number, readonly colour?: string, readonly dash?: number } = {}): void {
+    this.stroke(weight, colour, dash, () => this.document.rect(x, y, width, height))
+  }
+
+  private stroke(weight: number, colour: string, dash: number, draw: () => void): void {
+    this.document.lineWidth(weight).strokeColor(colour)
+    if (dash > 0) this.document.dash(dash, { space: dash })
+    else this.document.undash()
+    draw()
+    this.document.stroke()
+  }
+
+  fill(x: number, y: number, width: number, height: number, colour = '#000'): void {
+    this.document.rect(x, y, width, height).fill(colour)
+  }
+
+  triangle(x: number, y: number, width: number, height: number): void {
+    this.document.moveTo(x + width / 2, y).lineTo(x + width, y + height).lineTo(x, y + height).fill('#000')
+  }
+
+  /** Closes it; nothing can be written afterwards. */
+  bytes(): Promise<Buffer> {
+    return new Promise((resolve, reject) => {
+      this.document.on('end', () => resolve(Buffer.concat(this.chunks)))
+      this.document.on('error', reject)
+      this.document.end()
+    })
+  }
+
+  /** Cuts a text where the font changes; widths are in units of the size. */
+  private pieces(text: string, face: Face): Piece[] {
+    const pieces: { text: string, name: string, width: number }[] = []
+    for (const sign of text) {
+      const shown = instead[sign] ?? sign
+      const found = this.fontOf(shown, face)
+      for (const [each, name] of found === undefined ? [...codePoint(shown)].map(one => [one, this.nameOf(face, 'latin')] as const) : [[shown, found] as const]) {
+        const last = pieces.at(-1)
+        const width = this.advance(name, each)
+        if (last?.name === name) {
+          last.text += each
+          last.width += width
+        }
+        else {
+          pieces.push({ text: each, name, width })
+        }
+      }
+    }
+    return pieces
+  }
+
+  private advance(name: string, sign: string): number {
+    const font = this.fonts.get(name)
+    return font ? font.glyphForCodePoint(sign.codePointAt(0) ?? 0).advanceWidth / font.unitsPerEm : 0
+  }
+
+  private fontOf(sign: string, face: Face): string | undefined {
+    const code = sign.codePointAt(0) ?? 0
+    for (const script of scriptsOf(face)) {
+      const name = this.nameOf(face, script)
+      if (this.fonts.get(name)?.hasGlyphForCodePoint(code)) return name
+    }
+    return undefined
+  }
+
+  private nameOf(face: Face, script: Script): string {
+    const name = `${face} ${script}`
+    if (!this.fonts.has(name)) {
+      this.document.registerFont(name, fontFile(face, script))
+      this.document.font(name)
+      // The writer keeps its font under a name that its types do not show.
+      const { font } = (this.document as unknown as { _font: { font: Font } })._font
+      font.layout = text => plainLayout(font, text)
+      this.fonts.set(name, font)
+    }
+    return name
+  }
+}
+
+const codePoint = (sign: string) => `U+${(sign.codePointAt(0) ?? 0).toString(16).toUpperCase().padStart(4, '0')}`
+
+/**
+ * A glyph a sign, one after the other. The shaping of the library would draw `--` and `->` of a serial as one sign, and takes a
+ * millisecond a line; 2,000 rows are 10,000 lines.
+ */
+function plainLayout(font: Font, text: string): ReturnType<Font['layout']> {
+  const glyphs = Array.from(text, sign => font.glyphForCodePoint(sign.codePointAt(0) ?? 0))
+  const positions = glyphs.map(({ advanceWidth }) => ({ xAdvance: advanceWidth, yAdvance: 0, xOffset: 0, yOffset: 0 }))
+  return { glyphs, positions, advanceWidth: glyphs.reduce((sum, glyph) => sum + glyph.advanceWidth, 0) }
+}

@@ -1,0 +1,106 @@
+import { plain, quantity } from '#shared/checks/format'
+import type { papers } from '#shared/api/places'
+import { carryOf } from '#shared/settings/carry'
+import { cautions, cautionSources } from '#shared/settings/cautions'
+import { setupFieldNames } from '#shared/settings/fields'
+import { hashesOf } from '#shared/settings/hash'
+import type { Nameplate } from '#shared/settings/nameplate'
+import type { Content } from '#shared/settings/types'
+import { labelOf } from '#shared/sheet/labels'
+import { sheetMoves } from '#shared/sheet/moves'
+import { sheetTaught, sheetValues } from '#shared/sheet/values'
+import { firstMotion } from '#shared/swap/first-motion'
+import type { MotionItem } from '#shared/swap/types'
+import { formatExact } from '#shared/units/exact-time'
+import type { Vault } from '#server/database/client'
+import { judgingQueries } from '#server/database/judging/queries'
+import { logQueries } from '#server/database/log/queries'
+import { unitRows } from '#server/database/unit/queries'
+import { plantOf } from '../people/plant'
+import { sha256 } from '../uploads/ingest'
+import { withoutTaught } from '../kit/kit-file'
+import type { KitParts } from '../kit/kit-parts'
+import { drawSheet } from './draw-sheet'
+import type { MotionLine, SheetWords } from './sheet-words'
+
+export interface SheetOptions {
+  /** Where people reach the vault; '' = nobody said, and the QR code holds the tag alone. */
+  readonly origin: string
+  /** Of the site where it is not said. */
+  readonly paper?: (typeof papers)[number] | undefined
+  /** In the folder of a line nobody knows yet which unit will go in. */
+  readonly blankSerial?: boolean
+}
+
+/** How slow the first motion is. */
+const firstPercent = 10
+const day = 86_400_000
+
+/** The restore sheet of a kit. */
+export function drawKitSheet(vault: Vault, parts: KitParts, options: SheetOptions): Promise<Buffer> {
+  return drawSheet(sheetWords(vault, parts, options), options.paper ?? parts.place.site.paper, parts.now)
+}
+
+/** Where the label and the sheet of an axis lead. */
+export const axisAddress = (origin: string, tag: string): string => (origin === '' ? tag : `${origin}/axes/${tag}`)
+
+export function sheetWords(vault: Vault, parts: KitParts, { origin, blankSerial = false }: SheetOptions): SheetWords {
+  const { place: { axis, machine, line, site }, version, mark, fitted, unit, now } = parts
+  const nameplate = (unit ? judgingQueries(vault.db).nameplate.get({ model: unit.model })?.nameplate : parts.source.nameplate)
+  const { content, left } = unit ? fitted : forSomeUnit(parts)
+  const source = { content, ...(nameplate ? { nameplate } : {}), left, prove: provedOf(parts, content) }
+  const entries = (logQueries(vault.db).newest.get()?.seq ?? -1) + 1
+  return {
+    plant: plantOf(vault), tag: axis.tag, address: axisAddress(origin, axis.tag),
+    place: [axis.role, machine.name, line.name, site.name].filter(Boolean).join(', ') + (axis.flags.length === 0 ? '' : `. Flagged: ${axis.flags.join(', ')}.`),
+    code: hashesOf(content, sha256).scribeCode, facts: factsOf(vault, parts, blankSerial, nameplate),
+    notReleased: mark ? null : `Nobody has said that these values are good: no version of ${axis.tag} is known-good, and v${version.number} is the newest. Have a planner review it first, if that can wait.`,
+    warnings: unit ? fitted.warnings : [unknownUnit], cautions, cautionSources,
+    tableRows: nameplate?.maxMoves ?? null, order: nameplate?.entryTable ? 'in the order of the drive’s own list' : 'by group',
+    values: sheetValues(source), taught: sheetTaught(source), moves: sheetMoves(source),
+    creep: content.setup.homingCreepSpeed === undefined ? '' : `, ${plain(content.setup.homingCreepSpeed)} ${content.axisKind === 'linear' ? 'mm/s' : 'deg/s'}`,
+    prove: source.prove.filter(name => name !== 'homeOffset').map(name => labelOf(name).toLowerCase()),
+    motion: { title: `First motion at ${firstPercent} % of each move’s speed, nobody in reach`, lines: motionLines(parts, content, nameplate) },
+    subject: '', log: `log of ${entries} ${entries === 1 ? 'entry' : 'entries'}`,
+    printed: `printed ${formatExact(now, site.timeZone)}`, checkpoint: null,
+  }
+}
+
+const unknownUnit = 'Nobody has said which unit this is for. It is made as for one of the same model and firmware: on another, teach the tuning too, and have the percentages of force worked out for it.'
+
+/** What any unit must be taught is left empty, whoever it will be: a home offset of another encoder runs the axis into its end. */
+function forSomeUnit({ source }: KitParts): { content: Content, left: readonly string[] } {
+  return withoutTaught(source, { identity: { serial: '', model: source.model, ...(source.firmware === undefined ? {} : { firmware: source.firmware }) } })
+}
+
+/** What is copied to another unit and then proved at the machine. */
+function provedOf({ source, unit }: KitParts, content: Content): string[] {
+  const sameModelAndFirmware = unit !== null && unit.model === source.model && unit.firmware !== null && unit.firmware === source.firmware
+  return setupFieldNames.filter(name => content.setup[name] !== undefined && carryOf(name, { homingMethod: content.setup.homingMethod, replaced: 'unit', sameModelAndFirmware }) === 'prove')
+}
+
+function factsOf({ db }: Vault, { place, version, mark, unit, serial, now }: KitParts, blankSerial: boolean, nameplate: Nameplate | undefined): [string, string][] {
+  const out = judgingQueries(db).openAtAxis.get({ axisId: place.axis.id })?.unit ?? unitRows(db).byId.get({ id: version.unitId })
+  const thrust = nameplate?.ratedThrust === undefined ? [] : [quantity(nameplate.ratedThrust, place.axis.axisKind === 'linear' ? 'N' : 'N·m')]
+  const days = (from: string) => Math.floor((Date.parse(now) - Date.parse(from)) / day)
+  return [
+    ['Unit in', blankSerial ? '' : unit?.serial ?? serial ?? ''],
+    ['Its model, firmware, rated', unit ? [unit.model, unit.firmware ?? '', ...thrust].filter(Boolean).join(', ') : blankSerial ? '' : serial === null ? '' : 'not registered'],
+    ['Known-good', mark ? `v${version.number}, ${mark.by}, ${formatExact(mark.at, place.site.timeZone).replace(/ \d\d:.*$/, '')}, ${days(mark.at)} d old` : `none; v${version.number} is the newest`],
+    ['Unit out', out?.serial ?? 'none fitted'],
+    ['Its model, firmware', out ? [out.model, out.firmware ?? ''].filter(Boolean).join(', ') : ''],
+    [`Code of v${version.number}, read ${days(version.capturedAt)} d ago`, version.scribeCode],
+  ]
+}
+
+function motionLines({ place: { axis } }: KitParts, content: Content, nameplate: Nameplate | undefined): MotionLine[] {
+  const unit = content.axisKind === 'linear' ? 'mm' : 'deg'
+  return firstMotion({ content, flags: axis.flags, ...(nameplate ? { nameplate } : {}), speedPercent: firstPercent }).map(item => ({
+    call: callWords(item), words: item.words,
+    ends: item.end === null ? '' : `${plain(item.end)} ${unit}`,
+    takes: item.seconds === null ? '' : `${item.atLeast ? '≥ ' : ''}${item.seconds.toFixed(1)}`,
+  }))
+}
+
+const callNames: Readonly<Record<string, string>> = { 'jog': 'Jog', 'brake-hold': 'Brake', 'enable-loss': 'Enable', 'emergency-stop': 'Stop' }
+const callWords = ({ item, moves }: MotionItem) => callNames[item] ?? moves.join('›')

@@ -5,6 +5,7 @@ import { clearIncoming } from '#server/http/attachment-body'
 import type { ServerContext } from '#server/http/context'
 import { openPost } from '#server/mail/open-post'
 import { startLetters } from '#server/services/letters/worker'
+import { startFolders } from '#server/services/line-folder/nightly'
 import { firstStart } from '#server/services/people/first-start'
 import { makeLogger } from '#server/services/start/logger'
 import { publicOriginOf } from '#server/services/start/public-origin'
@@ -17,8 +18,10 @@ export default defineNitroPlugin((nitroApp) => {
     const server = start(logger)
     nitroApp.hooks.hook('request', (event) => { event.context.server = server })
     const letters = startLetters(server)
+    const folders = startFolders(server)
     nitroApp.hooks.hook('close', async () => {
       await letters.stop()
+      await folders.stop()
       server.vault.close()
     })
   }

@@ -7,6 +7,7 @@ import * as judging from './judging'
 import * as letters from './letters'
 import * as neighbours from './neighbours'
 import * as labels from './labels'
+import * as lineFolders from './line-folders'
 import * as people from './people'
 import * as places from './places'
 import * as uploads from './uploads'
@@ -80,6 +81,8 @@ export const routes = {
   'POST /api/lines': { may: planner, body: places.lineBody, answers: { 201: created }, says: 'Registers a line.' },
   'GET /api/lines/:id': { may: all, token: 'read', scope: 'line', params: idParams, answers: { 200: places.lineSchema }, says: 'One line.' },
   'PATCH /api/lines/:id': { may: planner, scope: 'line', params: idParams, body: places.linePatch, answers: { 200: places.lineSchema }, says: 'Changes a line.' },
+  'GET /api/lines/:id/folder': { may: all, token: 'read', scope: 'line', params: idParams, query: lineFolders.folderQuery, answers: { 200: 'file' }, says: 'A ZIP that restores its axes without the vault: made now, or kept=true for that of last night.' },
+  'GET /api/line-folders': { may: all, token: 'read', answers: { 200: lineFolders.folderList }, says: 'Each line with the folder that was kept last: when, how large, or why none.' },
   'GET /api/machines': { may: all, token: 'read', query: places.placeQuery, answers: { 200: pageOf(places.machineSchema) }, says: 'Machines.' },
   'POST /api/machines': { may: planner, body: places.machineBody, answers: { 201: created }, says: 'Registers a machine.' },
   'GET /api/machines/:id': { may: all, token: 'read', scope: 'machine', params: idParams, answers: { 200: places.machineSchema }, says: 'One machine.' },
@@ -98,6 +101,7 @@ export const routes = {
   'GET /api/axes/:id/fittings': { may: all, token: 'read', scope: 'axis', params: axisParams, answers: { 200: z.object({ items: z.array(places.fittingSchema) }) }, says: 'Which units sat there, newest first.' },
   'POST /api/axes/:id/known-good/none': { may: planner, scope: 'axis', sign: true, params: axisParams, body: versions.knownGoodBody, answers: { 201: created }, says: 'Says that no version is known-good; signed.' },
   'POST /api/axes/:id/kit': { may: uploaders, scope: 'axis', params: axisParams, body: versions.kitBody, answers: { 200: 'file' }, says: 'The known-good values as a file for a replacement unit; logged.' },
+  'GET /api/axes/:id/label': { may: all, token: 'read', scope: 'axis', params: axisParams, query: labels.labelQuery, answers: { 200: labels.labelList }, says: 'What stands on its label, or the label as PDF in true size.' },
   'POST /api/axes/:id/label': { may: uploaders, scope: 'axis', params: axisParams, body: labels.labelBody, answers: { 201: created }, says: 'Says that a label with its tag of today was printed; readiness counts it.' },
 
   'GET /api/units': { may: all, token: 'read', query: places.unitQuery, answers: { 200: pageOf(places.unitSchema) }, says: 'Units and spares.' },

@@ -3,13 +3,11 @@ import { attachmentBytes } from '#server/database/attachment/queries'
 import type { Vault } from '#server/database/client'
 import { listAttachments } from '../attachments/read-attachments'
 import { textOf } from '../versions/version-file'
+import type { ZipFile } from '../paper/zip'
 import type { KitParts } from './kit-parts'
 
-/** One file of a kit, under a name that opens on every system. */
-export interface KitFile { readonly name: string, readonly bytes: Buffer, /** Packed already: zipping it again takes time for nothing. */ readonly packed: boolean }
-
 /** What the drive's own list would leave out is told, not passed over in silence. */
-export interface KitFiles { readonly files: readonly KitFile[], readonly without: readonly string[] }
+export interface KitFiles { readonly files: readonly ZipFile[], readonly without: readonly string[] }
 
 /**
  * The files of a kit beside its sheet. The drive tool's own backups stand first where the unit's percentages mean the same
@@ -19,7 +17,7 @@ export function kitFiles(vault: Vault, { file, version, fitted, place, unit, sou
   const name = `${safeName(place.axis.tag)}-v${version.number}`
   const text = (form: 'json' | 'csv') => Buffer.from(textOf(vault.db, file, form), 'utf8')
   const list = ownList(vault, file)
-  const values: KitFile[] = [
+  const values: ZipFile[] = [
     { name: `2-${name}-kit.json`, bytes: text('json'), packed: false },
     { name: `3-${name}-kit.csv`, bytes: text('csv'), packed: false },
     ...(list.bytes ? [{ name: `4-${name}-kit-list.csv`, bytes: list.bytes, packed: false }] : []),
@@ -39,7 +37,7 @@ function ownList({ db }: Vault, file: KitParts['file']): { bytes: Buffer | null,
   }
 }
 
-function attachmentsOf({ db }: Vault, versionId: number, folder: string): KitFile[] {
+function attachmentsOf({ db }: Vault, versionId: number, folder: string): ZipFile[] {
   return listAttachments(db, versionId).items.filter(({ kind }) => kind === 'drive-backup')
     .map(one => ({ name: `${folder}/${one.id}-${safeName(one.name)}`, bytes: Buffer.concat([...attachmentBytes(db, one)]), packed: true }))
 }

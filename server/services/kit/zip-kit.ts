@@ -10,5 +10,5 @@ export async function zipKit(vault: Vault, parts: KitParts, options: SheetOption
   const sheet = await drawKitSheet(vault, parts, options)
   const tag = safeName(parts.place.axis.tag)
   const notes = without.length === 0 ? [] : [{ name: 'READ-THIS-FIRST.txt', bytes: Buffer.from(without.map(line => `${line}\r\n`).join(''), 'utf8'), packed: false }]
-  return Buffer.concat([...zipOf([...notes, { name: `1-${tag}-v${parts.version.number}-sheet.pdf`, bytes: sheet, packed: true }, ...files], parts.now)])
+  return zipOf([...notes, { name: `1-${tag}-v${parts.version.number}-sheet.pdf`, bytes: sheet, packed: true }, ...files], parts.now)
 }

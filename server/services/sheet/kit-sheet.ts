@@ -38,7 +38,12 @@ const day = 86_400_000
 
 /** The restore sheet of a kit. */
 export function drawKitSheet(vault: Vault, parts: KitParts, options: SheetOptions): Promise<Buffer> {
-  return drawSheet(sheetWords(vault, parts, options), options.paper ?? parts.place.site.paper, parts.now)
+  return drawWords(sheetWords(vault, parts, options), parts, options)
+}
+
+/** Words that are made already, on the paper that is asked for or that the site uses. */
+export function drawWords(words: SheetWords, { place, now }: KitParts, { paper }: Pick<SheetOptions, 'paper'>): Promise<Buffer> {
+  return drawSheet(words, paper ?? place.site.paper, now)
 }
 
 /** Where the label and the sheet of an axis lead. */

@@ -38,6 +38,8 @@ const doors = `
   POST /api/lines                        | p         |        |         |
   GET /api/lines/:id                     | tpaA      | read   | line    |
   PATCH /api/lines/:id                   | p         |        | line    |
+  GET /api/lines/:id/folder              | tpaA      | read   | line    |
+  GET /api/line-folders                  | tpaA      | read   |         |
   GET /api/machines                      | tpaA      | read   |         |
   POST /api/machines                     | p         |        |         |
   GET /api/machines/:id                  | tpaA      | read   | machine |
@@ -55,6 +57,7 @@ const doors = `
   GET /api/axes/:id/fittings             | tpaA      | read   | axis    |
   POST /api/axes/:id/known-good/none     | p         |        | axis    | signed
   POST /api/axes/:id/kit                 | tp        |        | axis    |
+  GET /api/axes/:id/label                | tpaA      | read   | axis    |
   POST /api/axes/:id/label               | tp        |        | axis    |
   GET /api/units                         | tpaA      | read   |         |
   POST /api/units                        | p         |        |         |

@@ -47,7 +47,7 @@ export function plannedWords({ fields, min, max }: Pick<PlannedChange, 'fields' 
   const known = fields.map(name => ruleField(name))
   const unit = known.length === 1 ? known[0]?.unit ?? '' : ''
   const range = min !== null && max !== null ? `${sayValue(min)} to ${sayValue(max, unit)}` : min !== null ? `at least ${sayValue(min, unit)}` : max !== null ? `at most ${sayValue(max, unit)}` : 'any value'
-  return `${fields.map((name, index) => known[index]?.label ?? name).join('; ')}: ${range}`
+  return `${fields.map((name, index) => known[index]?.label ?? name).join('; ')}, ${range}`
 }
 
 export type PlanState = 'called off' | 'to come' | 'holds' | 'over'

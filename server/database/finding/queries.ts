@@ -28,8 +28,8 @@ export const findingQueries = prepared((db) => {
     newestByCause: db.select({ id: finding.id, openedAt: finding.openedAt }).from(finding).where(eq(finding.causeKey, place('causeKey'))).orderBy(desc(finding.id)).limit(1).prepare(),
     /** Past their day since the first instant, and not closed. */
     overdue: standing().where(and(notClosed, gt(findingState.dueAt, place('since')), lte(findingState.dueAt, place('now')))).orderBy(asc(findingState.dueAt)).prepare(),
-    /** To be explained first, then to be closed; the longest waiting first. */
-    waiting: standing().where(and(notClosed, inBounds(finding.siteId))).orderBy(sql`${findingState.state} = 'explained'`, asc(findingState.dueAt), asc(finding.id)).limit(place('limit')).prepare(),
+    /** To be explained first, then to be closed; what can hurt first, then the longest waiting. */
+    waiting: standing().where(and(notClosed, inBounds(finding.siteId))).orderBy(sql`${findingState.state} = 'explained'`, sql`${finding.weight} <> 'harm'`, asc(findingState.dueAt), asc(finding.id)).limit(place('limit')).prepare(),
     countWaiting: db.select({ count: count(), since: sql<string | null>`min(${finding.openedAt})` }).from(findingState).innerJoin(finding, eq(finding.id, findingState.findingId)).where(and(notClosed, inBounds(finding.siteId))).prepare(),
     versions: db.select({ row: findingVersion, tag: axis.tag, number: version.number, capturedAt: version.capturedAt, baseNumber: base.number }).from(findingVersion)
       .innerJoin(axis, eq(axis.id, findingVersion.axisId)).leftJoin(version, eq(version.id, findingVersion.versionId)).leftJoin(base, eq(base.id, findingVersion.baseId))
@@ -37,7 +37,7 @@ export const findingQueries = prepared((db) => {
     countVersions: db.select({ count: count() }).from(findingVersion).where(eq(findingVersion.findingId, place('findingId'))).prepare(),
     hasVersion: db.select({ id: findingVersion.id }).from(findingVersion)
       .where(and(eq(findingVersion.findingId, place('findingId')), eq(findingVersion.axisId, place('axisId')), sql`${findingVersion.versionId} IS ${place('versionId')}`)).limit(1).prepare(),
-    openOfVersion: db.select({ id: findingState.findingId }).from(findingVersion).innerJoin(findingState, eq(findingState.findingId, findingVersion.findingId))
+    openOfVersion: db.select({ id: findingState.findingId, causeKey: findingState.causeKey }).from(findingVersion).innerJoin(findingState, eq(findingState.findingId, findingVersion.findingId))
       .where(and(eq(findingVersion.versionId, place('versionId')), eq(findingState.state, sql`'open'`))).orderBy(asc(findingState.findingId)).prepare(),
     axesOf: db.selectDistinct({ axisId: findingVersion.axisId }).from(findingVersion).where(eq(findingVersion.findingId, place('findingId'))).orderBy(asc(findingVersion.axisId)).prepare(),
     acts: db.select({ act: findingAct, by: person.name, tag: axis.tag, number: version.number }).from(findingAct).innerJoin(person, eq(person.id, findingAct.byPerson))

@@ -6,7 +6,7 @@ import type { PersonActor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
 import { waiverQueries, type NamedWaiver } from '#server/database/waiver/queries'
 import { refreshAxisState } from '../axes/axis-state'
-import { raiseStanding } from '../findings/standing'
+import { explainWaived, raiseStanding } from '../findings/standing'
 import { afterOf, limitOf, pageOf, type PageQuery } from '../page'
 import { assertPlace } from '../places/bounds'
 
@@ -24,6 +24,7 @@ export function giveWaiver(vault: Vault, actor: PersonActor, { axisId, rule, at,
     const id = waiverQueries(vault.db).insert(row)
     write.log({ act: 'waiver-given', id, state: { id, ...row, endedAt: null }, note: reason })
     refreshAxisState(vault.db, axisId)
+    explainWaived(vault.db, write, axisId, actor.id, `Accepted until ${untilAt.slice(0, 10)} by a waiver: ${reason}`)
     return { id }
   })
 }

@@ -77,6 +77,19 @@ describe('a waiver', () => {
     expect(raiseUnwaived(plant.vault)).toBe(0)
   })
 
+  it('given for a stop that is open explains it, by who signed', () => {
+    const { id } = makeRule(plant.vault, plant.runa, { scope: 'axis', scopeId: plant.axisId, field: 'thrustLimit', max: 45, reason: 'jars crack' })
+    plant.upload(raised)
+    const covers = (value: number) => giveWaiver(plant.vault, plant.runa, {
+      axisId: plant.axisId, rule: 'site-rule', at: ['/setup/thrustLimit'], reason: 'trial', until: '2026-06-01T00:00:00Z',
+      value: { level: 'stop', values: [{ place: 'ruleId', value: id }, { place: '/setup/thrustLimit', value }] },
+    })
+    covers(54)
+    expect(findings('stop-check')).toMatchObject([{ state: 'open' }])
+    covers(55)
+    expect(findings('stop-check')).toMatchObject([{ state: 'explained', explanations: [{ by: 'Runa Haldersen', text: 'Accepted until 2026-06-01 by a waiver: trial' }] }])
+  })
+
   it('that was taken back does so at once', () => {
     const id = give()
     plant.upload(raised)

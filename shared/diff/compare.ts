@@ -14,6 +14,8 @@ export interface CompareOptions {
   readonly sameUnit: boolean
   /** Setup values to be taught on this swap. */
   readonly taught?: readonly SetupFieldName[]
+  /** Keys of extra to be taught on this swap. */
+  readonly taughtExtra?: readonly string[]
   readonly context?: DiffContext
 }
 
@@ -36,7 +38,8 @@ export function compareContents(a: Content, b: Content, options: CompareOptions)
   return { verdict, differences, within, aside }
 }
 
-function isSetAside({ section, field }: FieldChange, { sameUnit, taught = [] }: CompareOptions): boolean {
+function isSetAside({ section, field }: FieldChange, { sameUnit, taught = [], taughtExtra = [] }: CompareOptions): boolean {
+  if (section === 'extra') return taughtExtra.includes(field)
   if (section !== 'setup') return false
   return (field === 'homeOffset' && !sameUnit) || taught.some(name => name === field)
 }

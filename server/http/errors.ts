@@ -43,6 +43,21 @@ const answers: Readonly<Record<RefusalCode | FileBodyCode | 'not-canonical', rea
   'finding-open': [409, 'Still open'],
   'not-explained': [409, 'Not explained yet'],
   'still-stands': [409, 'Not put right'],
+  'swap-open': [409, 'A swap is open'],
+  'swap-closed': [409, 'The swap has ended'],
+  'step-missing': [409, 'A step comes first'],
+  'already-safe': [409, 'The unit is in already'],
+  'forces-unconfirmed': [409, 'Forces not confirmed'],
+  'unfit': [409, 'The unit does not fit'],
+  'same-unit': [409, 'The unit that came out'],
+  'other-unit': [409, 'Another unit'],
+  'already-back': [409, 'Back already'],
+  'read-back-serial': [409, 'A file of another unit'],
+  'read-back-model': [409, 'A file of another model'],
+  'read-back-twice': [409, 'The same file again'],
+  'taught-missing': [409, 'Not taught yet'],
+  'motion-fault': [409, 'A fault stands'],
+  'read-back-differs': [409, 'The read-back differs'],
   'too-large': [413, 'Too large'],
   'media-type': [415, 'Not in this form'],
   'content-type': [415, 'Not in this form'],
@@ -72,13 +87,14 @@ const known = (code: string): code is keyof typeof answers => Object.hasOwn(answ
 /** Whether an error is a refusal with a status of its own; anything else is a fault to be logged. */
 export const isRefusal = (error: unknown): error is CodedError => error instanceof CodedError && known(error.code)
 
-/** Problem details (RFC 9457) of a coded error. `errors`, `more`, `tray` and `current` of its details travel, nothing else does. */
+/** Problem details (RFC 9457) of a coded error. `errors`, `more`, `tray`, `current` and `missing` of its details travel, nothing else does. */
 export function problemOf({ code, message, details }: CodedError): Problem {
   const [status, title] = known(code) ? answers[code] : answers.fault
   const problem: Problem = { type: `urn:witnessmark:problem:${code}`, title, status, detail: message, code }
   if (Array.isArray(details.errors)) problem.errors = details.errors as ProblemError[]
   if (typeof details.more === 'number') problem.more = details.more
   if (typeof details.tray === 'number') problem.tray = details.tray
+  if (Array.isArray(details.missing)) problem.missing = details.missing as string[]
   if (details.current !== undefined) problem.current = details.current
   return problem
 }

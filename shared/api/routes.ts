@@ -10,6 +10,7 @@ import * as labels from './labels'
 import * as lineFolders from './line-folders'
 import * as people from './people'
 import * as places from './places'
+import * as swaps from './swaps'
 import * as uploads from './uploads'
 import * as values from './values'
 import * as versions from './versions'
@@ -21,7 +22,7 @@ import * as waivers from './waivers'
  */
 
 /** Whose site must be among the caller's: found from `params.id`. Others answer 404, as if they were not there. */
-export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray' | 'waiver' | 'attachment' | 'finding'
+export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray' | 'waiver' | 'attachment' | 'finding' | 'swap'
 
 export interface RouteDeclaration {
   /** 'anyone' needs no sign-in; 'signed-in' any role. */
@@ -151,6 +152,22 @@ export const routes = {
   'POST /api/planned-changes': { may: planner, body: findings.plannedChangeBody, answers: { 201: created }, says: 'Announces a change: what it covers is explained when it is seen.' },
   'GET /api/planned-changes/:id': { may: all, token: 'read', params: idParams, answers: { 200: findings.plannedChangeSchema }, says: 'One of them.' },
   'POST /api/planned-changes/:id/end': { may: planner, params: idParams, body: findings.plannedChangeEndBody, answers: { 200: findings.plannedChangeSchema }, says: 'Calls it off; what came of it stays.' },
+  'GET /api/swaps': { may: all, token: 'read', query: swaps.swapQuery, answers: { 200: pageOf(swaps.swapLine) }, says: 'Swaps, newest first; of one axis, open ones, ended ones.' },
+  'POST /api/swaps': { may: uploaders, body: swaps.swapOpenBody, answers: { 201: swaps.swapSchema }, says: 'Begins a swap; 409 swap-open where the axis has one.' },
+  'GET /api/swaps/:id': { may: all, token: 'read', scope: 'swap', params: idParams, answers: { 200: swaps.swapSchema }, says: 'One swap, as it stands.' },
+  'GET /api/swaps/:id/spares': { may: all, token: 'read', scope: 'swap', params: idParams, answers: { 200: swaps.sparesAnswer }, says: 'Spares in stock for it, those that fit first.' },
+  'GET /api/swaps/:id/kit': { may: uploaders, scope: 'swap', params: idParams, query: swaps.swapKitQuery, answers: { 200: swaps.swapKitAnswer }, says: 'What goes into the new unit, what is taught and proved there, and the list of the first motion.' },
+  'POST /api/swaps/:id/source': { may: uploaders, scope: 'swap', params: idParams, body: swaps.swapSourceBody, answers: { 200: swaps.swapSchema }, says: 'Says which version goes to the new unit: the known-good, or the as-found one; until safe.' },
+  'POST /api/swaps/:id/unit-in': { may: uploaders, scope: 'swap', params: idParams, body: swaps.unitInBody, answers: { 200: swaps.swapSchema }, says: 'With which unit; answers whether it fits and what changes. May be sent again until safe.' },
+  'POST /api/swaps/:id/cautions': { may: uploaders, scope: 'swap', params: idParams, body: swaps.cautionsBody, answers: { 200: swaps.swapSchema }, says: 'The cautions were read: kits of this swap may be taken.' },
+  'POST /api/swaps/:id/safe': { may: uploaders, scope: 'swap', params: idParams, body: swaps.safeBody, answers: { 200: swaps.swapSchema }, says: 'Isolated, blocked, fitted and checked.' },
+  'POST /api/swaps/:id/read-back': { may: uploaders, scope: 'swap', params: idParams, query: swaps.readBackQuery, body: 'file', answers: { 200: swaps.readBackAnswer }, says: 'What the unit holds, against the kit; every attempt is kept, those turned away too.' },
+  'POST /api/swaps/:id/missing-keys': { may: uploaders, scope: 'swap', params: idParams, body: swaps.missingKeysBody, answers: { 200: swaps.swapSchema }, says: 'Accepts keys that this firmware has no place for, once for all units of the model and firmware.' },
+  'POST /api/swaps/:id/first-motion': { may: uploaders, scope: 'swap', params: idParams, body: swaps.firstMotionBody, answers: { 200: swaps.swapSchema }, says: 'Results of the first motion, any number at a time.' },
+  'POST /api/swaps/:id/running': { may: uploaders, scope: 'swap', params: idParams, body: swaps.runningBody, answers: { 200: swaps.swapSchema }, says: 'The axis runs, not released.' },
+  'POST /api/swaps/:id/release': { may: planner, scope: 'swap', sign: true, params: idParams, body: swaps.releaseBody, answers: { 200: swaps.swapSchema }, says: 'Released, and the mark carries over where the values are the same; signed, by another than who read back.' },
+  'POST /api/swaps/:id/abandon': { may: uploaders, scope: 'swap', params: idParams, body: swaps.abandonBody, answers: { 200: swaps.swapSchema }, says: 'Ends the swap without a release, and says which unit is truly fitted.' },
+  'POST /api/swaps/:id/put-back': { may: uploaders, scope: 'swap', params: idParams, body: swaps.putBackBody, answers: { 200: swaps.swapSchema }, says: 'The old unit goes back in; the same swap goes on.' },
 
   'GET /api/board': { may: all, token: 'read', answers: { 200: board.boardAnswer }, says: 'Every axis with its state, and what needs someone.' },
   'GET /api/log': { may: ['planner', 'auditor', 'admin'], token: 'read', query: listQuery, answers: { 200: pageOf(board.logEntrySchema) }, says: 'The log, entry by entry; only without site bounds.' },

@@ -23,6 +23,7 @@ import { changeSchema, contentSchema, meanings, unitOfFile, versionSchema, waiva
  *   swap-open            the axis has an open swap; `current` = { id, step }
  *   swap-closed          released or abandoned already
  *   step-missing         `missing` names the steps that come first
+ *   already-safe         another unit after /safe: put the old one back first, or abandon
  *   forces-unconfirmed   kit or safe before the rescaled percentages are confirmed
  *   cautions-unread      kit before anybody acknowledged the cautions of this swap
  *   unfit                kit or safe with a unit that does not fit; `errors` has the reasons
@@ -119,7 +120,7 @@ export const swapSchema = z.object({
   asFound: versionLine.extend({ compare: z.enum(verdicts).nullable().describe('against the known-good') }).nullable(),
   kit: z.object({
     scribeCode: z.string().describe('what the read-back must show'), values: z.int(), moves: z.int(), teach: z.array(z.string()), prove: z.array(z.string()),
-    attachmentFits: z.boolean().describe('both units have one force base: a drive tool’s own file means the same newtons'), taken: z.int().describe('how often'),
+    attachmentFits: z.boolean().describe('both units have one force base: a drive tool’s own file means the same newtons'),
   }).nullable(),
   cautions: z.object({ by: z.string(), at: instantSchema }).nullable(),
   safe: z.object({ by: z.string(), at: instantSchema, blocked: z.enum(blockings).nullable() }).nullable(),

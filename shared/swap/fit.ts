@@ -15,6 +15,8 @@ export interface FitInput extends CarryCase {
   readonly axis: { readonly axisKind: AxisKind, readonly flags: readonly AxisFlag[] }
   /** As the kit for the new unit has it. */
   readonly kit: KitContent
+  /** As the register has the new unit: `spare`, or why it should not go in. */
+  readonly state: 'spare' | 'failed' | 'repair' | 'scrapped'
   /** Of the kit's content on the new unit, accepted stops left out. */
   readonly checks: readonly CheckResult[]
 }
@@ -100,5 +102,6 @@ function otherReasons(input: FitInput): UnfitReason[] {
   const moves = most !== undefined && content.moves.length > most
     ? [soft('too-many-moves', `The table has ${content.moves.length} moves, and ${into.model} holds ${most}.`, ['/moves'])]
     : []
-  return [...missing, ...actuator, ...moves, ...checks.filter(({ level }) => level === 'stop').map(({ message, at }) => soft('stop-check', message, at))]
+  const state = input.state === 'spare' ? [] : [soft('unit-state', `The register has this unit as ${input.state === 'repair' ? 'in repair' : input.state}.`)]
+  return [...state, ...missing, ...actuator, ...moves, ...checks.filter(({ level }) => level === 'stop').map(({ message, at }) => soft('stop-check', message, at))]
 }

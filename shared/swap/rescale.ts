@@ -1,11 +1,10 @@
 import { quantity } from '../checks/format'
 import { forceBaseOf } from '../motion/force-base'
-import type { EntryTable, EntryValue } from '../settings/entry-table/schema'
+import { gridOf, roundDownToStep, type Place } from '../settings/entry-table/grid'
 import type { Nameplate } from '../settings/nameplate'
 import type { Content, Move, SetupFieldName } from '../settings/types'
 import { Exact } from '../units/exact'
 import { decimals } from '../units/number'
-import { findUnit } from '../units/units'
 import type { Adjustment, SwapSide } from './types'
 
 /** Setup values that are percentages of the force base. */
@@ -36,7 +35,7 @@ export function rescaled(content: Content, out: SwapSide, into: SwapSide): Resca
   const unit = content.axisKind === 'linear' ? 'N' : 'N·m'
   const meant = `100 % meant ${quantity(bases.from, unit)} on ${out.model} and means ${quantity(bases.to, unit)} on ${into.model}`
   const adjust = (place: Pick<Adjustment, 'at' | 'section' | 'row' | 'field'>, before: number): number => {
-    const { value, step } = rescaledPercent(before, bases, percentSteps(into.nameplate?.entryTable, place))
+    const { value, step } = rescaledPercent(before, bases, into, place)
     if (value !== before) {
       const why = step === undefined ? `${meant}.` : `${meant}; rounded down to steps of ${quantity(step, '%')}.`
       adjustments.push({ ...place, before, after: value, unit: '%', newtonsBefore: forceOf(before, bases.from), newtonsAfter: forceOf(value, bases.to), why })
@@ -54,34 +53,17 @@ export function rescaled(content: Content, out: SwapSide, into: SwapSide): Resca
   return { content: { ...content, setup: setup as Content['setup'], moves }, adjustments }
 }
 
-/** One percentage; `step` = the coarsest step that it was rounded down to, absent where none took anything. */
-function rescaledPercent(before: number, { from, to }: { from: number, to: number }, steps: readonly Exact[]): { value: number, step?: number } {
-  const exact = new Exact(before).times(from).div(to).toDecimalPlaces(decimals, Exact.ROUND_HALF_EVEN)
-  const stepped = steps.reduce((value, step) => value.div(step).toDecimalPlaces(0, Exact.ROUND_DOWN).times(step), exact)
-  if (stepped.eq(exact)) return { value: exact.toNumber() }
-  return { value: stepped.toDecimalPlaces(decimals, Exact.ROUND_DOWN).toNumber(), step: Exact.max(...steps).toNumber() }
+/** One percentage, and the step that it was rounded down to where that took anything. */
+function rescaledPercent(before: number, { from, to }: { from: number, to: number }, into: SwapSide, place: Place): { value: number, step?: number } {
+  const exact = new Exact(before).times(from).div(to).toDecimalPlaces(decimals, Exact.ROUND_HALF_EVEN).toNumber()
+  const value = into.nameplate ? roundDownToStep(exact, into.nameplate, place) : exact
+  const step = into.nameplate && gridOf(into.nameplate, place)?.step.toNumber()
+  return value === exact || step === undefined ? { value } : { value, step }
 }
 
 /** A force in N or N·m of a percentage, to six decimals. */
 function forceOf(percent: number, base: number): number {
   return new Exact(percent).times(base).div(100).toDecimalPlaces(decimals, Exact.ROUND_HALF_EVEN).toNumber()
-}
-
-/** In %: the entry's own step, and what its digits and factor leave. */
-function percentSteps(table: EntryTable | undefined, place: Pick<Adjustment, 'section' | 'row' | 'field'>): Exact[] {
-  const entry = table && entryFor(table, place)
-  if (!entry) return []
-  const unit = entry.unit === undefined ? undefined : findUnit(entry.unit, '%')
-  const inPercent = (step: Exact) => unit === undefined || typeof unit === 'string' ? step : step.times(unit.times).div(unit.over)
-  return [
-    ...entry.step === undefined ? [] : [inPercent(new Exact(entry.step))],
-    ...entry.digits === undefined ? [] : [inPercent(new Exact(10).pow(-entry.digits).times(entry.factor ?? 1))],
-  ]
-}
-
-function entryFor({ parameters, moves }: EntryTable, { section, row, field }: Pick<Adjustment, 'section' | 'row' | 'field'>): EntryValue | undefined {
-  const name = section === 'setup' ? field : `move:${row}:${field}`
-  return parameters.find(entry => entry.field === name) ?? (section === 'move' ? moves.find(entry => entry.field === field) : undefined)
 }
 
 /** Whether a drive tool's own file means the same newtons on both: one force base, or one model where no nameplate tells it. */

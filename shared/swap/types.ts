@@ -22,7 +22,7 @@ export const fits = ['same', 'adjust', 'unfit'] as const
 export type Fit = (typeof fits)[number]
 
 /** The first four are hard: nobody may go on with them. */
-export const unfitCodes = ['axis-kind', 'stroke-short', 'no-brake', 'force-outside', 'nameplate-missing', 'actuator-model', 'too-many-moves', 'stop-check'] as const
+export const unfitCodes = ['axis-kind', 'stroke-short', 'no-brake', 'force-outside', 'nameplate-missing', 'actuator-model', 'unit-state', 'too-many-moves', 'stop-check'] as const
 export type UnfitCode = (typeof unfitCodes)[number]
 
 export interface UnfitReason {

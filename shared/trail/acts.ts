@@ -56,6 +56,11 @@ export const acts = {
   'letter-sent-again': 'letter',
   'attachment-stored': 'attachment',
   'label-printed': 'label-print',
+  'swap-opened': 'swap',
+  'swap-moved': 'swap',
+  'swap-step': 'swap-step',
+  'read-back-received': 'read-back',
+  'firmware-gap-accepted': 'firmware-gap',
 } as const
 
 export type Act = keyof typeof acts

@@ -13,5 +13,7 @@ export const knownGood = sqliteTable('known_good', {
   byPerson: integer('by_person').notNull(),
   meaning: text('meaning').$type<Meaning>().notNull(),
   note: text('note'),
+  /** The version whose mark a swap carried over to this one. */
+  carriedFrom: integer('carried_from'),
 })
 export type KnownGoodRow = typeof knownGood.$inferSelect

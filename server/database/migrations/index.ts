@@ -4,6 +4,7 @@ import { lettersStep } from './0003-letters'
 import { controllerScanStep } from './0004-controller-scan'
 import { papersStep } from './0005-papers'
 import { findingsStep } from './0006-findings'
+import { swapsStep } from './0007-swaps'
 
 export interface Migration { readonly number: number, readonly name: string, readonly sql: string }
 
@@ -14,6 +15,7 @@ const steps: readonly Omit<Migration, 'number'>[] = [
   controllerScanStep,
   papersStep,
   findingsStep,
+  swapsStep,
 ]
 
 /** In order, numbered without gaps from 1. Text, not files, so that they reach the built server and the tests alike. */

@@ -8,6 +8,7 @@ import { line } from '../line/table'
 import { machine } from '../machine/table'
 import { prepared } from '../prepared'
 import { rule } from '../rule/table'
+import { swap } from '../swap/table'
 import { tray } from '../tray/table'
 import { unit } from '../unit/table'
 import { version } from '../version/table'
@@ -40,6 +41,8 @@ export const siteQueries = prepared((db) => {
     attachment: db.select({ id: attachment.id, siteId: line.siteId }).from(attachment).innerJoin(version, eq(version.id, attachment.versionId)).innerJoin(axis, eq(axis.id, version.axisId))
       .innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId)).where(eq(attachment.id, ref)).prepare(),
     finding: db.select({ id: finding.id, siteId: finding.siteId }).from(finding).where(eq(finding.id, ref)).prepare(),
+    swap: db.select({ id: swap.id, siteId: line.siteId }).from(swap).innerJoin(axis, eq(axis.id, swap.axisId))
+      .innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId)).where(eq(swap.id, ref)).prepare(),
     tray: db.select({ id: tray.id, siteId: tray.siteId }).from(tray).where(eq(tray.id, ref)).prepare(),
   }
   const tagged = axisSite(eq(axis.tag, ref)).prepare()

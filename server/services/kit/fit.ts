@@ -38,7 +38,8 @@ export function fitToUnit(db: VaultDb, place: AxisPlace, source: KitSource, row:
   return { content, left, identity: unit.identity, warnings: [...forceWarning(source, unit), ...stopWarnings(db, place, row, content, now)] }
 }
 
-function identityOf({ serial, channel, model, firmware, actuatorSerial, actuatorModel }: UnitRow): UnitIdentity {
+/** A registered unit as a file names it. */
+export function identityOf({ serial, channel, model, firmware, actuatorSerial, actuatorModel }: UnitRow): UnitIdentity {
   const optional = { channel, firmware, actuatorSerial, actuatorModel }
   return { serial, model, ...Object.fromEntries(Object.entries(optional).filter(([, value]) => value !== null && value !== '')) }
 }

@@ -27,13 +27,22 @@ export function markKnownGood(vault: Vault, actor: Actor, versionId: number, wor
     if (against.place.site.fourEyes) assertFourEyes(db, marker, version, file, against)
     if (versionQueries(db).voidOf.get({ versionId })) throw new Refusal('already-void', `Version ${version.number} is void: it cannot be what the axis is restored to.`)
     assertNoStops(db, write, version, today)
-    return putMark(db, write, { axisId: version.axisId, versionId, byPerson: marker }, words)
+    return putMark(db, write, { axisId: version.axisId, versionId, byPerson: marker, carriedFrom: null }, words)
   })
+}
+
+/** The mark goes over to the version that a swap left, which holds the same values on another unit; by the same rules as a new mark. */
+export function carryMarkOver(db: VaultDb, write: Write, version: VersionRow, carriedFrom: number, words: MarkWords): void {
+  const byPerson = markerOf(write.actor)
+  const today = judgeToday(db, version)
+  if (today.against.place.site.fourEyes) assertFourEyes(db, byPerson, version, today.file, today.against)
+  assertNoStops(db, write, version, today)
+  putMark(db, write, { axisId: version.axisId, versionId: version.id, byPerson, carriedFrom }, words)
 }
 
 /** Says that no version of the axis is known-good. */
 export function markNone(vault: Vault, actor: Actor, axisId: number, words: MarkWords): { id: number } {
-  return vault.write(actor, write => putMark(vault.db, write, { axisId, versionId: null, byPerson: markerOf(actor) }, words))
+  return vault.write(actor, write => putMark(vault.db, write, { axisId, versionId: null, byPerson: markerOf(actor), carriedFrom: null }, words))
 }
 
 function markerOf(actor: Actor): number {
@@ -53,7 +62,7 @@ function assertNoStops(db: VaultDb, write: Write, version: VersionRow, today: To
   if (differsFromKept(today, readJudgement(db, version.id))) keepJudgement(db, write, version.id, today)
 }
 
-function putMark(db: VaultDb, write: Write, mark: { axisId: number, versionId: number | null, byPerson: number }, { meaning, note }: MarkWords): { id: number } {
+function putMark(db: VaultDb, write: Write, mark: { axisId: number, versionId: number | null, byPerson: number, carriedFrom: number | null }, { meaning, note }: MarkWords): { id: number } {
   const row = { ...mark, at: write.now, meaning, note: note ?? null }
   const id = knownGoodQueries(db).insert(row)
   write.log({ act: mark.versionId === null ? 'known-good-none' : 'known-good-marked', id, state: { id, ...row }, note: row.note })

@@ -73,7 +73,8 @@ export function planUpload(db: VaultDb, actor: Actor, read: ReadOutcome, fields:
   return planVersion(db, placed, against, ingested)
 }
 
-function planVersion(db: VaultDb, placed: PlacedFile, against: ReadAgainst, ingested: Ingested): PlannedVersion {
+/** A version of a file whose place is known, against what the axis holds now. */
+export function planVersion(db: VaultDb, placed: PlacedFile, against: ReadAgainst, ingested: Ingested): PlannedVersion {
   const queries = versionQueries(db)
   const axisId = placed.place.axis.id
   const at = new Date(placed.times.orderAt).toISOString()

@@ -1,4 +1,5 @@
 import type { UploadFields, UploadSeen, UploadStored } from '#shared/api/uploads'
+import type { Occasion } from '#shared/api/versions'
 import type { Normalised } from '#shared/settings/types'
 import type { Actor } from '#server/database/actor'
 import { insertChanges } from '#server/database/change/queries'
@@ -17,8 +18,11 @@ import { engineVersion } from './ingest'
 import { layoutOf, type PlannedSighting, type PlannedVersion } from './plan-upload'
 import { storeContent, type Source } from './store-parts'
 
+/** What is stored beside a version; `read-back` is said by a swap alone. */
+export type VersionFields = Omit<UploadFields, 'occasion'> & { readonly occasion?: Occasion | undefined }
+
 /** Stores a planned version with its changes and its judgement. */
-export function storeVersion(db: VaultDb, write: Write, source: Source, fields: UploadFields, plan: PlannedVersion): UploadStored {
+export function storeVersion(db: VaultDb, write: Write, source: Source, fields: VersionFields, plan: PlannedVersion): UploadStored {
   const { placed, ingested, changes, judgement, against } = plan
   const axisId = placed.place.axis.id
   const id = insertVersion(db, write, source, fields, plan)
@@ -36,7 +40,7 @@ export function storeVersion(db: VaultDb, write: Write, source: Source, fields: 
   }
 }
 
-function insertVersion(db: VaultDb, write: Write, source: Source, fields: UploadFields, plan: PlannedVersion): number {
+function insertVersion(db: VaultDb, write: Write, source: Source, fields: VersionFields, plan: PlannedVersion): number {
   const { placed: { place, unit, times }, ingested: { file, hashes, normalised }, base } = plan
   const { exportedAt, exportedBy, note, readings } = file
   const row = {
@@ -54,7 +58,7 @@ function insertVersion(db: VaultDb, write: Write, source: Source, fields: Upload
 }
 
 /** A file in a drive's layout can be read again only by the revision that it was read by. */
-function engineOf(db: VaultDb, { layout }: UploadFields): string {
+function engineOf(db: VaultDb, { layout }: VersionFields): string {
   return layout === undefined ? engineVersion : `${engineVersion}, entry table of ${layout} revision ${layoutOf(db, layout).revision}`
 }
 

@@ -103,6 +103,22 @@ const doors = `
   POST /api/planned-changes              | p         |        |         |
   GET /api/planned-changes/:id           | tpaA      | read   |         |
   POST /api/planned-changes/:id/end      | p         |        |         |
+  GET /api/swaps                         | tpaA      | read   |         |
+  POST /api/swaps                        | tp        |        |         |
+  GET /api/swaps/:id                     | tpaA      | read   | swap    |
+  GET /api/swaps/:id/spares              | tpaA      | read   | swap    |
+  GET /api/swaps/:id/kit                 | tp        |        | swap    |
+  POST /api/swaps/:id/source             | tp        |        | swap    |
+  POST /api/swaps/:id/unit-in            | tp        |        | swap    |
+  POST /api/swaps/:id/cautions           | tp        |        | swap    |
+  POST /api/swaps/:id/safe               | tp        |        | swap    |
+  POST /api/swaps/:id/read-back          | tp        |        | swap    |
+  POST /api/swaps/:id/missing-keys       | tp        |        | swap    |
+  POST /api/swaps/:id/first-motion       | tp        |        | swap    |
+  POST /api/swaps/:id/running            | tp        |        | swap    |
+  POST /api/swaps/:id/release            | p         |        | swap    | signed
+  POST /api/swaps/:id/abandon            | tp        |        | swap    |
+  POST /api/swaps/:id/put-back           | tp        |        | swap    |
   GET /api/board                         | tpaA      | read   |         |
   GET /api/log                           | paA       | read   |         |
 `.trim().split('\n').map(line => line.split('|').map(cell => cell.trim()))

@@ -1,0 +1,4 @@
+import { defineRoute } from '#server/http/route'
+import { listSpares } from '#server/services/swaps/list-swaps'
+
+export default defineRoute('GET /api/swaps/:id/spares', ({ subject, vault }) => listSpares(vault, subject.id))

@@ -28,6 +28,8 @@ export const swapQueries = prepared((db) => {
   return {
     byId: db.select().from(swap).where(eq(swap.id, place('id'))).prepare(),
     openAtAxis: db.select().from(swap).where(and(eq(swap.axisId, place('axisId')), standsOpen)).prepare(),
+    /** Swaps that brought a unit to an axis, ended ones too. */
+    broughtTo: db.select({ facts: swap.facts }).from(swap).where(and(eq(swap.axisId, place('axisId')), eq(swap.unitInId, place('unitId')))).prepare(),
     open: listed().where(standsOpen).orderBy(asc(swap.id)).prepare(),
     /** Newest first, from below an id; open: 1, 0 or null for all. */
     page: listed().where(and(

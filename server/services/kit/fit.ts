@@ -4,12 +4,13 @@ import { forceBaseOf } from '#shared/motion/force-base'
 import { Refusal } from '#shared/errors/refusal'
 import { serialToBeWritten } from '#shared/settings/identity'
 import type { Content, UnitIdentity } from '#shared/settings/types'
-import { judgingQueries, type AxisPlace } from '#server/database/judging/queries'
+import { differingBases, holdsForces } from '#shared/swap/rescale'
+import type { AxisPlace } from '#server/database/judging/queries'
 import type { VaultDb } from '#server/database/prepared'
-import type { UnitRow } from '#server/database/schema'
+import type { UnitRow, VersionRow } from '#server/database/schema'
+import { kitCase, type SwapKitCase } from '../swaps/sides'
 import { judgeInputOf, readAgainst } from '../uploads/read-against'
 import { waived } from '../waivers/accepted'
-import { differingBases, holdsForces, withoutTaught, type KitSource, type KitUnit } from './kit-file'
 
 /** What goes into the kit, for whom, and what has to be said beside it. */
 export interface Fitted {
@@ -21,21 +22,31 @@ export interface Fitted {
 }
 
 /** For a serial that is not registered, or none yet: the values as they stand. Nothing is known of what the unit can bear. */
-export function asItStands({ content, model }: KitSource, { channel }: UnitIdentity, serial: string | undefined): Fitted {
+export function asItStands(content: Content, { channel, model }: UnitIdentity, serial: string | undefined): Fitted {
   return {
     content, left: [], identity: { serial: serial ?? serialToBeWritten, ...(channel === undefined ? {} : { channel }), model },
     warnings: ['The unit is not registered: values that it must be taught are still in here, and nothing was judged against its nameplate.'],
   }
 }
 
-/** For a registered unit: taught values left out, judged against its nameplate. Percentages that would mean other newtons are refused. */
-export function fitToUnit(db: VaultDb, place: AxisPlace, source: KitSource, row: UnitRow, now: string): Fitted {
-  const nameplate = judgingQueries(db).nameplate.get({ model: row.model })?.nameplate
-  const unit: KitUnit = { identity: identityOf(row), ...(nameplate ? { nameplate } : {}) }
-  if (nameplate && nameplate.axisKind !== place.axis.axisKind) throw new Refusal('axis-kind', `${row.model} is a ${nameplate.axisKind} unit, ${place.axis.tag} a ${place.axis.axisKind} axis.`)
-  assertSameForces(source, unit)
-  const { content, left } = withoutTaught(source, unit)
-  return { content, left, identity: unit.identity, warnings: [...forceWarning(source, unit), ...stopWarnings(db, place, row, content, now)] }
+/** For a registered unit outside of a swap: taught values left out, judged against its nameplate. Percentages that would mean other newtons are refused. */
+export function fitToUnit(db: VaultDb, place: AxisPlace, version: VersionRow, row: UnitRow, now: string): Fitted {
+  const goes = kitCase(db, place, version, row, { replaced: 'unit', putBack: false, facts: {} })
+  const { out, into } = goes.carry
+  if (into.nameplate && into.nameplate.axisKind !== place.axis.axisKind) throw new Refusal('axis-kind', `${row.model} is a ${into.nameplate.axisKind} unit, ${place.axis.tag} a ${place.axis.axisKind} axis.`)
+  const bases = holdsForces(goes.source) && !goes.carry.ownValues ? differingBases(out, into) : undefined
+  if (bases) {
+    const [from, to] = [bases.from, bases.to].map(base => `${base} ${goes.source.axisKind === 'linear' ? 'N' : 'N·m'}`)
+    throw new Refusal('forces-differ', `100 % means ${from} on ${out.model} and ${to} on ${into.model}: the same percentages would press with another force. Begin a swap: there they are rescaled, and confirmed in newtons.`)
+  }
+  return fittedTo(db, goes, now)
+}
+
+/** As a swap brings it to its unit in: percentages rescaled, taught values left out, both said beside it. */
+export function fittedTo(db: VaultDb, { place, unit, kit, carry, source }: SwapKitCase, now: string): Fitted {
+  const changed = kit.adjustments.length === 0 ? [] : [`Rescaled for ${unit.model}: ${kit.adjustments.map(({ section, row, field, before, after, unit: sign }) => `${section === 'move' ? `move ${row} ` : ''}${field} ${before} → ${after} ${sign}`).join(', ')}.`]
+  const proved = carry.ownValues || kit.prove.length === 0 ? [] : [`To be proved at the machine: ${kit.prove.join(', ')}.`]
+  return { content: kit.content, left: kit.teach, identity: identityOf(unit), warnings: [...changed, ...proved, ...forceWarning(source, carry), ...stopWarnings(db, place, unit, kit.content, now)] }
 }
 
 /** A registered unit as a file names it. */
@@ -44,18 +55,10 @@ export function identityOf({ serial, channel, model, firmware, actuatorSerial, a
   return { serial, model, ...Object.fromEntries(Object.entries(optional).filter(([, value]) => value !== null && value !== '')) }
 }
 
-function assertSameForces(source: KitSource, unit: KitUnit): void {
-  const bases = holdsForces(source.content) ? differingBases(source, unit) : undefined
-  if (!bases) return
-  const [from, to] = [bases.from, bases.to].map(base => `${base} ${source.content.axisKind === 'linear' ? 'N' : 'N·m'}`)
-  throw new Refusal('forces-differ', `100 % means ${from} on ${source.model} and ${to} on ${unit.identity.model}: the same percentages would press with another force. Take a unit with the same base, or work out the percentages by hand and upload the result.`)
-}
-
 /** Two models of which one does not say what 100 % means. */
-function forceWarning(source: KitSource, { identity, nameplate }: KitUnit): string[] {
-  if (!holdsForces(source.content) || identity.model === source.model) return []
-  const silent = [[source.model, source.nameplate], [identity.model, nameplate]] as const
-  const models = silent.filter(([, plate]) => forceBaseOf(plate) === undefined).map(([model]) => model)
+function forceWarning(content: Content, { out, into, ownValues }: SwapKitCase['carry']): string[] {
+  if (!holdsForces(content) || ownValues || into.model === out.model) return []
+  const models = [out, into].filter(side => forceBaseOf(side.nameplate) === undefined).map(({ model }) => model)
   return models.length === 0 ? [] : [`What 100 % of force means is not on the nameplate of ${models.join(' and ')}: check it before these percentages are written.`]
 }
 

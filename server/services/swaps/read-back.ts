@@ -41,7 +41,7 @@ export function readBackUnit(vault: Vault, actor: PersonActor, id: number, sent:
     const before = openSwapRow(db, write, id, query.rev, 'read-back')
     const goes = kitCaseOf(db, before)
     if (!goes) throw new Refusal('no-known-good', 'There is nothing to compare the unit with.')
-    const source = once(sourceOf(db, write, sent))
+    const source = once(sourceOf(db, write, sent, query))
     const attempts = swapQueries(db).readBacks.all({ swapId: id })
     const wrong = wrongWith(read, goes, attempts, source.sha256)
     if (!read.ok || wrong) return turnedAway(db, write, before, attempts, source, wrong ?? { problem: 'unreadable', code: 'settings-unreadable', words: 'The file cannot be read.' })

@@ -74,7 +74,7 @@ export function placeOf(db: VaultDb, axisId: number): AxisPlace {
 /** The kit judged on the new unit by all rules of today; the step from the old values is judged with it. */
 export function judgeKit(db: VaultDb, { place, source, unit, kit }: SwapKitCase): Judgement {
   const identity: Pick<UnitIdentity, 'model' | 'firmware'> = { model: unit.model, ...(unit.firmware === null ? {} : { firmware: unit.firmware }) }
-  return judge(judgeInputOf(readAgainst(db, place, unit), kit.content, identity, source))
+  return judge(judgeInputOf(readAgainst(db, place, unit), kit.content, identity, { content: source }))
 }
 
 /** Whether the unit fits: by both nameplates, the content, and the stops that no waiver of the axis covers. */

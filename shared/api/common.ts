@@ -56,6 +56,8 @@ export const problemSchema = z.object({
   tray: idSchema.optional(),
   /** Current state, for edited-meanwhile. */
   current: z.unknown().optional(),
+  /** Steps of a swap that come first, for step-missing. */
+  missing: z.array(z.string()).optional(),
 })
 export type Problem = z.infer<typeof problemSchema>
 export type ProblemError = z.infer<typeof problemErrorSchema>

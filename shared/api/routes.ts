@@ -23,7 +23,6 @@ import * as waivers from './waivers'
 
 /** Whose site must be among the caller's: found from `params.id`. Others answer 404, as if they were not there. */
 export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray' | 'waiver' | 'attachment' | 'finding' | 'swap'
-export type Scope = 'site' | 'line' | 'machine' | 'axis' | 'version' | 'unit' | 'fitting' | 'rule' | 'tray' | 'waiver' | 'attachment' | 'swap'
 
 export interface RouteDeclaration {
   /** 'anyone' needs no sign-in; 'signed-in' any role. */

@@ -46,7 +46,7 @@ export function fitToUnit(db: VaultDb, place: AxisPlace, version: VersionRow, ro
 export function fittedTo(db: VaultDb, { place, unit, kit, carry, source }: SwapKitCase, now: string): Fitted {
   const changed = kit.adjustments.length === 0 ? [] : [`Rescaled for ${unit.model}: ${kit.adjustments.map(({ section, row, field, before, after, unit: sign }) => `${section === 'move' ? `move ${row} ` : ''}${field} ${before} → ${after} ${sign}`).join(', ')}.`]
   const proved = carry.ownValues || kit.prove.length === 0 ? [] : [`To be proved at the machine: ${kit.prove.join(', ')}.`]
-  return { content: kit.content, left: kit.teach, identity: identityOf(unit), warnings: [...changed, ...proved, ...forceWarning(source, carry), ...stopWarnings(db, place, unit, kit.content, now)] }
+  return { content: kit.content, left: kit.teach, identity: identityOf(unit), warnings: [...changed, ...forceWarning(source, carry), ...stopWarnings(db, place, unit, kit.content, now), ...proved] }
 }
 
 /** A registered unit as a file names it. */

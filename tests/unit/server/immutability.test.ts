@@ -54,7 +54,7 @@ describe('tables that never change', () => {
 })
 
 describe('what is edited and never goes', () => {
-  it.each(['person', 'site', 'line', 'machine', 'axis', 'unit'])('%s refuses a delete and a replacement', (table) => {
+  it.each(['person', 'site', 'line', 'machine', 'axis', 'unit', 'swap'])('%s refuses a delete and a replacement', (table) => {
     expect(run(`DELETE FROM ${table}`)).toThrow(/never deleted/)
     expect(run(`INSERT OR REPLACE INTO ${table} SELECT * FROM ${table} LIMIT 1`)).toThrow(/never deleted/)
   })

@@ -51,7 +51,7 @@ describe('a kit', () => {
     expect(kit).toMatchObject({ released: true, name: 'LID-02.Z-v1-kit.json', mediaType: 'application/json' })
     expect(file.unit).toEqual({ serial: 'SN-0002', model: 'HL40-200V', firmware: '2.4' })
     expect(file.setup).toEqual({ thrustLimit: 38, homingMethod: 'absolute-encoder', positionGain: 40, nodeAddress: 7, softLimitMin: 0, softLimitMax: 180 })
-    expect(file.note).toBe('Kit for LID-02.Z: version 1, known-good by Runa Haldersen on 2026-03-01. To be taught on the new unit, left out here: homeOffset.')
+    expect(file.note).toBe('Kit for LID-02.Z: version 1, known-good by Runa Haldersen on 2026-03-01. To be taught on the new unit, left out here: homeOffset. To be proved at the machine: positionGain.')
     expect(file).toMatchObject({ exportedAt: iso(plant.now), exportedBy: 'Tobias Achterberg', readings: {} })
   })
 

@@ -29,18 +29,15 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     INSERT INTO attachment VALUES (1, 1, 'photo', 'plate.jpg', 'image/jpeg', NULL, 1, '${hash('d')}', '${at}', ${by}, NULL, '127.0.0.1');
     INSERT INTO attachment_chunk VALUES (1, 1, 0, x'00');
     INSERT INTO label_print VALUES (1, ${axisId}, 'LID-02.Z', '50x25', '${at}', ${by});
-<<<<<<< HEAD
     INSERT INTO finding VALUES (1, NULL, 'stop-check', 'k', 'LID-02.Z', 'harm', '${at}');
     INSERT INTO finding_version VALUES (1, 1, ${axisId}, 1, NULL, 's', '[]', '${at}');
     INSERT INTO planned_change VALUES (1, '[1]', '[]', NULL, NULL, '${at}', '2026-03-04T06:10:00.000Z', 'new lids', 'Marit', '${at}', ${by});
     INSERT INTO planned_change_end VALUES (1, '${at}', ${by}, 'old lids after all');
-    INSERT INTO finding_act (id, finding_id, kind, at, by_person, text) VALUES (1, 1, 'explained', '${at}', ${by}, 'new lids');`)
-=======
+    INSERT INTO finding_act (id, finding_id, kind, at, by_person, text) VALUES (1, 1, 'explained', '${at}', ${by}, 'new lids');
     INSERT INTO swap VALUES (1, 1, ${axisId}, 'unit', 'dead', NULL, 'unit-in', ${unitId}, NULL, 0, NULL, 1, 1, '{}', '${at}', ${by}, '${at}', NULL);
     INSERT INTO swap_step VALUES (1, 1, 1, 'opened', '${at}', ${by}, 'opened', '{}');
     INSERT INTO read_back VALUES (1, 1, 1, 1, 1, '${hash('e')}', NULL, 'serial', 'd', NULL, NULL, NULL, 0, '${at}', ${by});
     INSERT INTO firmware_gap VALUES (1, 'HL40-200V', '2.4', 'jerk', 1, '${at}', ${by}, NULL, 'r');`)
->>>>>>> dee9516 (swap: laws and worked numbers; the kit goes through the swap)
   return {
     nameplate_revision: { where: 'id = 1', column: 'nameplate' }, rule: { where: 'id = 1', column: 'reason' }, rule_end: { where: 'rule_id = 1', column: 'reason' },
     waiver: { where: 'id = 1', column: 'reason' }, waiver_end: { where: 'waiver_id = 1', column: 'reason' },
@@ -49,11 +46,8 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     check_set: { where: 'id = 1', column: 'rule_set' }, check_result: { where: 'check_set_id = 1', column: 'message' }, tray: { where: 'id = 1', column: 'detail' },
     tray_settled: { where: 'tray_id = 1', column: 'reason' }, known_good: { where: 'id = 1', column: 'note' }, log: { where: 'seq = 0', column: 'leaf' },
     attachment: { where: 'id = 1', column: 'name' }, attachment_chunk: { where: 'id = 1', column: 'seq' }, label_print: { where: 'id = 1', column: 'tag' },
-<<<<<<< HEAD
     finding: { where: 'id = 1', column: 'title' }, finding_version: { where: 'id = 1', column: 'says' }, finding_act: { where: 'id = 1', column: 'text' },
     planned_change: { where: 'id = 1', column: 'reason' }, planned_change_end: { where: 'planned_change_id = 1', column: 'reason' },
-=======
     swap_step: { where: 'id = 1', column: 'text' }, read_back: { where: 'id = 1', column: 'detail' }, firmware_gap: { where: 'id = 1', column: 'reason' },
->>>>>>> dee9516 (swap: laws and worked numbers; the kit goes through the swap)
   }
 }

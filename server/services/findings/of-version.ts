@@ -1,4 +1,3 @@
-import type { UploadFields } from '#shared/api/uploads'
 import { byWeight } from '#shared/diff/order'
 import { seesSite, type Actor } from '#server/database/actor'
 import { readAxisState } from '#server/database/axis-state/queries'
@@ -14,6 +13,7 @@ import { tellWatchers } from '../letters/queue'
 import { axisNamed } from '../uploads/axis-named'
 import type { PlannedVersion } from '../uploads/plan-upload'
 import type { Sender } from '../uploads/store-parts'
+import type { VersionFields } from '../uploads/version-fields'
 import { personName } from '../versions/summary'
 import { plannedExplanations } from './planned'
 import { addShowing, raiseFinding, type Explaining, type Raised } from './raise'
@@ -22,7 +22,7 @@ import { offKey } from './sweep'
 import { changeLine, changeTitle } from './words'
 
 /** What a stored version asks a person to explain; late ones ask nothing. Within the write that stores it, after the axis' state is derived. */
-export function findingsOfVersion(db: VaultDb, write: Write, sender: Sender, fields: UploadFields, plan: PlannedVersion, version: VersionRow): Raised[] {
+export function findingsOfVersion(db: VaultDb, write: Write, sender: Sender, fields: VersionFields, plan: PlannedVersion, version: VersionRow): Raised[] {
   if (plan.late) return []
   const { placed: { place }, ingested, judgement } = plan
   addToOff(db, write, version)
@@ -34,7 +34,7 @@ export function findingsOfVersion(db: VaultDb, write: Write, sender: Sender, fie
   ]
 }
 
-function watchedChange(db: VaultDb, write: Write, sender: Sender, fields: UploadFields, { placed: { place }, told, base }: PlannedVersion, version: VersionRow): Raised[] {
+function watchedChange(db: VaultDb, write: Write, sender: Sender, fields: VersionFields, { placed: { place }, told, base }: PlannedVersion, version: VersionRow): Raised[] {
   const changes = byWeight(told.filter(({ watched }) => watched))
   const [first] = changes
   if (base === null || first === undefined) return []
@@ -59,14 +59,14 @@ function lastSeen(db: VaultDb, base: VersionRow, version: VersionRow): string {
 }
 
 /** A reason or a work order that a named person gave for this axis alone; a script, a shared account and one reason for many files explain nothing. */
-function ownWords(db: VaultDb, { personId, tokenId }: Sender, { reason, workOrder, changedBy, together }: UploadFields): Explaining[] {
+function ownWords(db: VaultDb, { personId, tokenId }: Sender, { reason, workOrder, changedBy, together }: VersionFields): Explaining[] {
   if (tokenId !== null || together === 'yes' || !(reason || workOrder)) return []
   if (personQueries(db).byId.get({ id: personId })?.shared !== false) return []
   return [{ byPerson: personId, text: reason || `Work order ${workOrder}`, workOrder: workOrder || null, madeBy: changedBy || null }]
 }
 
 /** The file was sent for one axis and its serial sits at another. */
-export function otherAxis(db: VaultDb, write: Write, { axis, site }: Pick<AxisPlace, 'axis' | 'site'>, fields: UploadFields, version: Pick<VersionRow, 'id' | 'baseId'>): Raised[] {
+export function otherAxis(db: VaultDb, write: Write, { axis, site }: Pick<AxisPlace, 'axis' | 'site'>, fields: VersionFields, version: Pick<VersionRow, 'id' | 'baseId'>): Raised[] {
   const named = otherAxisNamed(db, write.actor, fields, axis.id)
   if (named === null) return []
   const says = `A file sent for ${named} holds the serial of the unit at ${axis.tag}: it was stored at ${axis.tag}`
@@ -76,7 +76,7 @@ export function otherAxis(db: VaultDb, write: Write, { axis, site }: Pick<AxisPl
 }
 
 /** The axis that a file was sent for, where its serial sits at another; by its tag if the sender may see it, else as it was sent. */
-export function otherAxisNamed(db: VaultDb, actor: Actor, { axis }: UploadFields, storedAt: number): string | null {
+export function otherAxisNamed(db: VaultDb, actor: Actor, { axis }: Pick<VersionFields, 'axis'>, storedAt: number): string | null {
   if (axis === undefined) return null
   const named = axisNamed(db, axis)
   if (named?.axis.id === storedAt) return null

@@ -18,13 +18,15 @@ export interface Fitted {
   readonly identity: UnitIdentity
   /** Names of what is to be taught. */
   readonly left: readonly string[]
+  /** Names of what is copied, and proved at the machine. */
+  readonly prove: readonly string[]
   readonly warnings: readonly string[]
 }
 
 /** For a serial that is not registered, or none yet: the values as they stand. Nothing is known of what the unit can bear. */
 export function asItStands(content: Content, { channel, model }: UnitIdentity, serial: string | undefined): Fitted {
   return {
-    content, left: [], identity: { serial: serial ?? serialToBeWritten, ...(channel === undefined ? {} : { channel }), model },
+    content, left: [], prove: [], identity: { serial: serial ?? serialToBeWritten, ...(channel === undefined ? {} : { channel }), model },
     warnings: ['The unit is not registered: values that it must be taught are still in here, and nothing was judged against its nameplate.'],
   }
 }
@@ -46,7 +48,7 @@ export function fitToUnit(db: VaultDb, place: AxisPlace, version: VersionRow, ro
 export function fittedTo(db: VaultDb, { place, unit, kit, carry, source }: SwapKitCase, now: string): Fitted {
   const changed = kit.adjustments.length === 0 ? [] : [`Rescaled for ${unit.model}: ${kit.adjustments.map(({ section, row, field, before, after, unit: sign }) => `${section === 'move' ? `move ${row} ` : ''}${field} ${before} → ${after} ${sign}`).join(', ')}.`]
   const proved = carry.ownValues || kit.prove.length === 0 ? [] : [`To be proved at the machine: ${kit.prove.join(', ')}.`]
-  return { content: kit.content, left: kit.teach, identity: identityOf(unit), warnings: [...changed, ...forceWarning(source, carry), ...stopWarnings(db, place, unit, kit.content, now), ...proved] }
+  return { content: kit.content, left: kit.teach, prove: kit.prove, identity: identityOf(unit), warnings: [...changed, ...forceWarning(source, carry), ...stopWarnings(db, place, unit, kit.content, now), ...proved] }
 }
 
 /** A registered unit as a file names it. */

@@ -3,6 +3,7 @@ import type { kitBody } from '#shared/api/versions'
 import { Refusal } from '#shared/errors/refusal'
 import type { PersonActor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
+import { swapQueries } from '#server/database/swap/queries'
 import { fileEnds, mediaTypes, textOf, type HandedOut } from '../versions/version-file'
 import { drawKitSheet } from '../sheet/kit-sheet'
 import { kitParts, type KitParts } from './kit-parts'
@@ -38,7 +39,7 @@ export function makeTextKit(vault: Vault, actor: PersonActor, axisId: number, wa
 }
 
 function partsOf(vault: Vault, actor: PersonActor, axisId: number, { serial, cautionsRead }: Wanted): KitParts {
-  if (!cautionsRead) throw new Refusal('cautions-unread', 'Read the cautions, then take the kit: these values move a machine.')
+  if (!cautionsRead && !swapQueries(vault.db).openAtAxis.get({ axisId })?.facts.cautions) throw new Refusal('cautions-unread', 'Read the cautions, then take the kit: these values move a machine.')
   return kitParts(vault.db, actor, axisId, serial, vault.now())
 }
 

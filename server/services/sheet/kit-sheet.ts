@@ -1,8 +1,6 @@
 import { plain, quantity } from '#shared/checks/format'
 import type { papers } from '#shared/api/places'
-import { carryOf } from '#shared/settings/carry'
 import { cautions, cautionSources } from '#shared/settings/cautions'
-import { setupFieldNames } from '#shared/settings/fields'
 import { hashesOf } from '#shared/settings/hash'
 import type { Nameplate } from '#shared/settings/nameplate'
 import type { Content } from '#shared/settings/types'
@@ -10,6 +8,7 @@ import { labelOf } from '#shared/sheet/labels'
 import { sheetMoves } from '#shared/sheet/moves'
 import { sheetTaught, sheetValues } from '#shared/sheet/values'
 import { firstMotion } from '#shared/swap/first-motion'
+import { kitOf } from '#shared/swap/kit'
 import type { MotionItem } from '#shared/swap/types'
 import { formatExact } from '#shared/units/exact-time'
 import type { Vault } from '#server/database/client'
@@ -18,7 +17,6 @@ import { logQueries } from '#server/database/log/queries'
 import { unitRows } from '#server/database/unit/queries'
 import { plantOf } from '../people/plant'
 import { sha256 } from '../uploads/ingest'
-import { withoutTaught } from '../kit/kit-file'
 import type { KitParts } from '../kit/kit-parts'
 import { drawSheet } from './draw-sheet'
 import type { MotionLine, SheetWords } from './sheet-words'
@@ -52,8 +50,8 @@ export const axisAddress = (origin: string, tag: string): string => (origin === 
 export function sheetWords(vault: Vault, parts: KitParts, { origin, blankSerial = false }: SheetOptions): SheetWords {
   const { place: { axis, machine, line, site }, version, mark, fitted, unit, now } = parts
   const nameplate = (unit ? judgingQueries(vault.db).nameplate.get({ model: unit.model })?.nameplate : parts.source.nameplate)
-  const { content, left } = unit ? fitted : forSomeUnit(parts)
-  const source = { content, ...(nameplate ? { nameplate } : {}), left, prove: provedOf(parts, content) }
+  const { content, left, prove } = unit ? fitted : forSomeUnit(parts)
+  const source = { content, ...(nameplate ? { nameplate } : {}), left, prove: prove.filter(name => !name.startsWith('extra:')) }
   const entries = (logQueries(vault.db).newest.get()?.seq ?? -1) + 1
   return {
     plant: plantOf(vault), tag: axis.tag, address: axisAddress(origin, axis.tag),
@@ -74,14 +72,9 @@ export function sheetWords(vault: Vault, parts: KitParts, { origin, blankSerial 
 const unknownUnit = 'Nobody has said which unit this is for. It is made as for one of the same model and firmware: on another, teach the tuning too, and have the percentages of force worked out for it.'
 
 /** What any unit must be taught is left empty, whoever it will be: a home offset of another encoder runs the axis into its end. */
-function forSomeUnit({ source }: KitParts): { content: Content, left: readonly string[] } {
-  return withoutTaught(source, { identity: { serial: '', model: source.model, ...(source.firmware === undefined ? {} : { firmware: source.firmware }) } })
-}
-
-/** What is copied to another unit and then proved at the machine. */
-function provedOf({ source, unit }: KitParts, content: Content): string[] {
-  const sameModelAndFirmware = unit !== null && unit.model === source.model && unit.firmware !== null && unit.firmware === source.firmware
-  return setupFieldNames.filter(name => content.setup[name] !== undefined && carryOf(name, { homingMethod: content.setup.homingMethod, replaced: 'unit', sameModelAndFirmware }) === 'prove')
+function forSomeUnit({ source }: KitParts): Pick<KitParts['fitted'], 'content' | 'left' | 'prove'> {
+  const { content, teach, prove } = kitOf(source.content, { replaced: 'unit', ownValues: false, out: source, into: source })
+  return { content, left: teach, prove }
 }
 
 function factsOf({ db }: Vault, { place, version, mark, unit, serial, now }: KitParts, blankSerial: boolean, nameplate: Nameplate | undefined): [string, string][] {

@@ -10,6 +10,7 @@ import type { Vault, Write } from '#server/database/client'
 import type { VaultDb } from '#server/database/prepared'
 import { swapQueries, type NamedReadBack } from '#server/database/swap/queries'
 import type { SwapRow } from '#server/database/swap/table'
+import { raiseReadBack } from '../findings/causes'
 import { timesOf } from '../uploads/clock'
 import { ingest, sha256 } from '../uploads/ingest'
 import { millisecondsOf } from '../uploads/place-file'
@@ -117,6 +118,7 @@ function compared(db: VaultDb, write: Write, before: SwapRow, goes: SwapKitCase,
   insertAttempt(db, write, before, { attempt, source, problem: null, detail: null, versionId: stored.version.id, verdict: comparison.verdict, compared: comparison, kitCode: hashesOf(kit.content, sha256).scribeCode })
   takeStep(db, write, before, {}, { act: 'read-back', text: `Read-back ${attempt}, version ${stored.version.number}: ${verdictWords(comparison)}`, said: { attempt, versionId: stored.version.id, verdict: comparison.verdict } })
   const { differences, aside, missingKeys, verdict } = comparison
+  if (verdict === 'differs') raiseReadBack(db, write, place, { swapId: before.id, attempt, versionId: stored.version.id, changes: differences })
   return {
     ok: true, answer: {
       ...readSwap(db, before.id, write.now), attempt, version: versionSummary(db, stored.version.id), compare: verdict,

@@ -9,6 +9,7 @@ import { knownGoodQueries } from '#server/database/known-good/queries'
 import type { UnitRow } from '#server/database/schema'
 import type { SwapFacts, SwapRow } from '#server/database/swap/table'
 import { unitRows } from '#server/database/unit/queries'
+import { raiseUnfit } from '../findings/causes'
 import { versionRow } from '../versions/read-version'
 import { fitAlone } from './fittings'
 import { keepPlate, namedUnit } from './named-unit'
@@ -39,6 +40,7 @@ export function takeUnitIn(vault: Vault, actor: PersonActor, id: number, body: B
       act: 'unit-in', text: words(unit, goes, answer, facts),
       said: { ...body, unitId: unit.id, fit: answer.fit, reasons: answer.reasons, adjustments: goes.kit.adjustments },
     })
+    if (facts.unfit && !before.facts.unfit) raiseUnfit(db, write, goes.place, { swapId: id, unitIn: unit.serial, why: answer.reasons.map(({ message }) => message) })
     return readSwap(db, id, write.now)
   })
 }

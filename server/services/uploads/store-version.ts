@@ -1,5 +1,4 @@
 import type { UploadFields, UploadSeen, UploadStored } from '#shared/api/uploads'
-import type { Occasion } from '#shared/api/versions'
 import type { Normalised } from '#shared/settings/types'
 import type { Actor } from '#server/database/actor'
 import { insertChanges } from '#server/database/change/queries'
@@ -17,9 +16,7 @@ import { changesOnWire } from '../wire'
 import { engineVersion } from './ingest'
 import { layoutOf, type PlannedSighting, type PlannedVersion } from './plan-upload'
 import { storeContent, type Source } from './store-parts'
-
-/** What is stored beside a version; `read-back` is said by a swap alone. */
-export type VersionFields = Omit<UploadFields, 'occasion'> & { readonly occasion?: Occasion | undefined }
+import type { VersionFields } from './version-fields'
 
 /** Stores a planned version with its changes and its judgement. */
 export function storeVersion(db: VaultDb, write: Write, source: Source, fields: VersionFields, plan: PlannedVersion): UploadStored {
@@ -65,7 +62,7 @@ function engineOf(db: VaultDb, { layout }: VersionFields): string {
 /** A log entry has no place for undefined. */
 const definedOnly = (value: object) => JSON.parse(JSON.stringify(value)) as object
 
-function disagreement(db: VaultDb, actor: Actor, fields: UploadFields, stored: { id: number, tag: string }): string | null {
+function disagreement(db: VaultDb, actor: Actor, fields: VersionFields, stored: { id: number, tag: string }): string | null {
   const named = otherAxisNamed(db, actor, fields, stored.id)
   return named === null ? null : `sent for ${named}; stored at ${stored.tag}, where its serial sits`
 }

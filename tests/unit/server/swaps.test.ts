@@ -1,6 +1,6 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import type { Swap } from '../../../shared/api/swaps'
-import { makeKit } from '../../../server/services/kit/make-kit'
+import { makeTextKit } from '../../../server/services/kit/make-kit'
 import { markKnownGood } from '../../../server/services/known-good/mark'
 import { listFittings, readAxis } from '../../../server/services/axes/read-axis'
 import { abandonSwap, putOldUnitBack } from '../../../server/services/swaps/ending'
@@ -32,7 +32,7 @@ const answered = (outcome: ReadBackOutcome) => {
 const refused = (outcome: ReadBackOutcome) => outcome.ok ? 'none' : outcome.refusal.code
 const sits = () => listFittings(here.plant.vault, here.axisId).items.filter(({ to }) => to === null).map(({ serial }) => serial)
 const release = (id: number, more: object = {}, actor = here.runa) => releaseSwap(here.plant.vault, actor, id, { meaning: 'approved', ...more })
-const take = (serial?: string) => makeKit(here.plant.vault, here.tobias, here.axisId, { serial, form: 'json', cautionsRead: true })
+const take = (serial?: string) => makeTextKit(here.plant.vault, here.tobias, here.axisId, { serial, form: 'json', cautionsRead: true }).kit
 /** Up to a read-back that is identical, with the spare of the same model. */
 function written(): Swap {
   const { id } = here.open()
@@ -443,7 +443,7 @@ describe('what stands before the steps', () => {
   it('the cautions are read once a swap, or with each kit', () => {
     const { id } = here.open()
     here.unitIn(id)
-    const unread = () => makeKit(here.plant.vault, here.tobias, here.axisId, { form: 'json', cautionsRead: false })
+    const unread = () => makeTextKit(here.plant.vault, here.tobias, here.axisId, { form: 'json', cautionsRead: false }).kit
     expect(codeOf(unread)).toBe('cautions-unread')
     expect(readCautions(here.plant.vault, here.tobias, id, { read: true })).toMatchObject({ cautions: { by: 'Tobias Achterberg' } })
     expect(unread().released).toBe(true)

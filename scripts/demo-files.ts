@@ -14,6 +14,8 @@ export interface Plant {
   readonly nameplates: readonly Nameplate[]
   readonly lines: readonly { readonly name: string, readonly controllerScanMs: number, readonly machines: readonly string[] }[]
   readonly axes: readonly { readonly tag: string, readonly role: string, readonly axisKind: AxisKind, readonly flags: AxisFlag[], readonly uploadEveryHours: number, readonly bus: string, readonly unit: { readonly serial: string, readonly model: string, readonly firmware: string } }[]
+  /** Tags of axes that have no printed label. */
+  readonly unlabelled: readonly string[]
   readonly spares: readonly { readonly serial: string, readonly model: string, readonly firmware: string, readonly location: string }[]
 }
 

@@ -6,6 +6,7 @@ import { openVault, type Vault } from '../server/database/client'
 import { findPerson, hashFor, registerPerson } from '../server/services/people/people'
 import { registerFirstAdmin } from '../server/services/people/first-start'
 import { findToken, makeToken } from '../server/services/people/tokens'
+import { recordLabel } from '../server/services/labels/print-label'
 import { registerAxis } from '../server/services/places/axes'
 import { registerLine } from '../server/services/places/lines'
 import { registerMachine } from '../server/services/places/machines'
@@ -93,6 +94,7 @@ function registerPlaces(vault: Vault, planner: PersonActor, plant: Plant) {
     axisIds[axis.tag] = registerAxis(vault, planner, { ...axis, machineId }).id
     const { id: unitId } = registerUnit(vault, planner, { ...unit, state: 'spare', siteId })
     openFitting(vault, planner, { axisId: axisIds[axis.tag] as number, unitId, at: vault.now() })
+    if (!plant.unlabelled.includes(axis.tag)) recordLabel(vault, planner, axisIds[axis.tag] as number, { size: '50x25' })
   }
   for (const spare of plant.spares) registerUnit(vault, planner, { ...spare, state: 'spare', siteId })
   return { axisIds, machineIds, siteId }

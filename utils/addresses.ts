@@ -4,6 +4,7 @@ export const addressOf = {
   signIn: (back?: string) => (back && back !== '/' ? `/sign-in?to=${encodeURIComponent(back)}` : '/sign-in'),
   machine: (id: number) => `/machines/${id}`,
   axis: (tag: string) => `/axes/${encodeURIComponent(tag)}`,
+  label: (tag: string) => `/axes/${encodeURIComponent(tag)}/label`,
   version: (tag: string, number: number) => `/axes/${encodeURIComponent(tag)}/versions/${number}`,
   /** a stands before, b after; both are ids of versions. */
   changes: (before: number, after: number) => `/changes?a=${before}&b=${after}`,

@@ -22,7 +22,8 @@ const idOf = async (path: string, wanted: (item: Record<string, unknown>) => boo
 const versions = (tag: string, number: number) => idOf(`/api/axes/tag:${tag}/versions`, item => item.number === number)
 
 const visits: readonly Visit[] = [
-  { file: 'pages/index.vue', address: () => '/', ready: /axes are in line with their known-good/ },
+  { file: 'pages/index.vue', address: () => '/', ready: /axes could not be restored tonight/ },
+  { file: 'pages/axes/[tag]/label.vue', address: () => '/axes/LID-02.Z/label', ready: /Label for LID-02\.Z/ },
   { file: 'pages/axes/[tag]/index.vue', address: () => '/axes/LID-02.Z', ready: /LID-02\.Z/ },
   { file: 'pages/axes/[tag]/versions/[n].vue', address: () => '/axes/LID-03.Z/versions/2', ready: /LID-03\.Z v2/ },
   { file: 'pages/changes.vue', address: async () => `/changes?a=${await versions('LID-03.Z', 1)}&b=${await versions('LID-03.Z', 2)}`, ready: /LID-03\.Z/ },

@@ -45,7 +45,7 @@ describe('finding an axis', () => {
   })
 
   it('counts what each filter would leave', () => {
-    expect(countFilters(plant)).toEqual({ 'all': 5, 'in-line': 2, 'off': 1, 'unmarked': 1, 'never-read': 1, 'overdue': 2, 'stop': 1 })
+    expect(countFilters(plant)).toEqual({ 'all': 5, 'in-line': 2, 'off': 1, 'unmarked': 1, 'never-read': 1, 'overdue': 2, 'stop': 1, 'not-ready': 0 })
     expect(tags(findAxes(rows, '', 'overdue'))).toEqual(['JAR-01.T', 'CAS-01.P'])
     expect(tags(findAxes(rows, 'jar', 'overdue'))).toEqual(['JAR-01.T'])
     expect(tags(findAxes(rows, '', 'stop'))).toEqual(['LID-02.Z'])
@@ -54,8 +54,8 @@ describe('finding an axis', () => {
   it('offers the filters as buttons that say whether they hold', async () => {
     const find = await mountSuspended(BoardFind, { props: { text: '', filter: 'all', counts: countFilters(plant) } })
     const buttons = find.findAll('button')
-    expect(buttons.map(button => button.text())).toEqual(['all 5', 'in line 2', 'off 1', 'no known-good 1', 'no upload 1', 'overdue 2', 'with a stop 1'])
-    expect(buttons.map(button => button.attributes('aria-pressed'))).toEqual(['true', ...Array.from({ length: 6 }, () => 'false')])
+    expect(buttons.map(button => button.text())).toEqual(['all 5', 'in line 2', 'off 1', 'no known-good 1', 'no upload 1', 'overdue 2', 'with a stop 1', 'not restorable 0'])
+    expect(buttons.map(button => button.attributes('aria-pressed'))).toEqual(['true', ...Array.from({ length: 7 }, () => 'false')])
     await buttons[2]?.trigger('click')
     expect(find.emitted('update:filter')).toEqual([['off']])
   })

@@ -1,17 +1,19 @@
 import type { BoardAxis } from '#shared/api/board'
+import { lackWords } from '~/utils/words/readiness'
 import { weightWords } from '~/utils/strip-words'
 
-export const filters = ['all', 'in-line', 'off', 'unmarked', 'never-read', 'overdue', 'stop'] as const
+export const filters = ['all', 'in-line', 'off', 'unmarked', 'never-read', 'overdue', 'stop', 'not-ready'] as const
 export type Filter = (typeof filters)[number]
 
 export const filterWords: Record<Filter, string> = {
-  'all': 'all', 'in-line': 'in line', 'off': 'off', 'unmarked': 'no known-good', 'never-read': 'no upload', 'overdue': 'overdue', 'stop': 'with a stop',
+  'all': 'all', 'in-line': 'in line', 'off': 'off', 'unmarked': 'no known-good', 'never-read': 'no upload', 'overdue': 'overdue', 'stop': 'with a stop', 'not-ready': 'not restorable',
 }
 
 /** Whether an axis belongs under a filter; the first four after `all` exclude one another. */
 export function fits(axis: BoardAxis, filter: Filter): boolean {
   if (filter === 'all') return true
   if (filter === 'overdue') return axis.overdueSince !== null
+  if (filter === 'not-ready') return axis.lacks.length > 0
   if (filter === 'stop') return axis.checks.stop > 0
   return axis.status === filter
 }
@@ -32,7 +34,7 @@ export function searchable(axes: readonly BoardAxis[]): Searchable[] {
 
 function wordsOf(axis: BoardAxis): string {
   const state = axis.status === 'off' ? `off ${weightWords(axis.off)}` : filterWords[axis.status]
-  return [axis.tag, axis.machine, axis.line, axis.site, axis.role, axis.serial, axis.model, state, axis.knownGood && `v${axis.knownGood.number}`].filter(Boolean).join('\n')
+  return [axis.tag, axis.machine, axis.line, axis.site, axis.role, axis.serial, axis.model, state, axis.knownGood && `v${axis.knownGood.number}`, ...axis.lacks.map(lack => lackWords[lack])].filter(Boolean).join('\n')
 }
 
 /** The axes under a filter whose row holds every word of the text, wherever it stands; words in quotes are one whole cell. */

@@ -4,7 +4,7 @@ import { AxisReadiness, BoardPlantAxes, BoardWhyNot, LabelsLabel } from '#compon
 import type { BoardAxis } from '#shared/api/board'
 import { lacks } from '#shared/api/readiness'
 import { findAxes, searchable } from '~/utils/board/filter'
-import { lackWords, unreadyOf, whyNot } from '~/utils/words/readiness'
+import { firstUnready, lackWords, whyNot } from '~/utils/words/readiness'
 import { axis as oneAxis } from '../support/axis-answers'
 
 let next = 1
@@ -31,7 +31,12 @@ describe('why an axis could not be restored', () => {
     ])
   })
 
-  it('puts those without a known-good first', () => expect(unreadyOf(plant).map(({ tag }) => tag)).toEqual(['JAR-01.T', 'CAS-01.P', 'LID-02.X']))
+  it('puts those without a known-good first', () => expect(firstUnready(plant).map(({ tag }) => tag)).toEqual(['JAR-01.T', 'CAS-01.P', 'LID-02.X']))
+
+  it('names four of thousands in one pass', () => {
+    const many = Array.from({ length: 20 }, (_, index) => axis(`A-${20 - index}`, { lacks: index % 2 === 0 ? ['no-spare'] : ['no-spare', 'no-label'] }))
+    expect(firstUnready(many).map(({ tag }) => tag)).toEqual(['A-1', 'A-3', 'A-5', 'A-7'])
+  })
 
   it('can be searched by its reason and filtered', () => {
     const rows = searchable(plant)
@@ -57,7 +62,7 @@ describe('the head of the board', () => {
 
   it('ties strokes to reasons by a ring, in words too', async () => {
     const page = await mountSuspended(BoardPlantAxes, { props: { axes: plant } })
-    expect(page.findAll('.ring').map(ring => ring.text())).toEqual(['2', '1', '3'])
+    expect(page.findAll('.balloon').map(ring => ring.text())).toEqual(['2', '1', '3'])
     expect(page.find('[aria-label*="JAR-01.T"]').attributes('aria-label')).toContain('could not be restored tonight')
   })
 })
@@ -65,7 +70,7 @@ describe('the head of the board', () => {
 describe('the page of an axis', () => {
   it('says why not, and that it is ready where it is', async () => {
     const not = await mountSuspended(AxisReadiness, { props: { axis: oneAxis } })
-    expect(not.findAll('li').map(item => item.text())).toEqual(['No spare in stock fits HL40-200V. See the units', 'No label with this tag was printed. Print the label'])
+    expect(not.findAll('li').map(item => item.text())).toEqual(['No spare in stock fits HL40-200V. See the units.', 'No label with this tag was printed. Print the label.'])
     const ready = await mountSuspended(AxisReadiness, { props: { axis: { ...oneAxis, readiness: { ready: true, lacks: [] } } } })
     expect(ready.text()).toContain('could be restored tonight')
   })

@@ -14,14 +14,14 @@ const sansOnly: readonly Script[] = ['greek-ext']
 
 export const scriptsOf = (face: Face): readonly Script[] => (face.startsWith('mono') ? scripts.filter(script => !sansOnly.includes(script)) : scripts)
 
-const require = createRequire(import.meta.url)
 const read = new Map<string, Buffer>()
 
 /** The OpenType font of a face and script, read once a process. Both families are under the SIL Open Font License 1.1 (public/licenses). */
 export function fontFile(face: Face, script: Script): Buffer {
   const family = face.startsWith('mono') ? 'jetbrains-mono' : 'inter'
   const path = `@fontsource/${family}/files/${family}-${script}-${face.endsWith('bold') ? 600 : 400}-normal.woff`
-  const known = read.get(path) ?? openTypeOf(readFileSync(require.resolve(path)))
+  // Found when it is asked for: the built server knows where it lies only after all its modules have begun.
+  const known = read.get(path) ?? openTypeOf(readFileSync(createRequire(import.meta.url).resolve(path)))
   read.set(path, known)
   return known
 }

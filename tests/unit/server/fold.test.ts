@@ -9,6 +9,7 @@ import { changePerson, registerPerson } from '../../../server/services/people/pe
 import { chooseLetter, watchPlace } from '../../../server/services/letters/own'
 import { makeToken, stopToken } from '../../../server/services/people/tokens'
 import { registerNameplate, reviseNameplate } from '../../../server/services/nameplates/nameplates'
+import { recordLabel } from '../../../server/services/labels/print-label'
 import { changeAxis } from '../../../server/services/places/axes'
 import { changeLine } from '../../../server/services/places/lines'
 import { changeMachine } from '../../../server/services/places/machines'
@@ -56,6 +57,7 @@ describe('each row equals the newest entry about it', async () => {
   watchPlace(vault, planner, { scope: 'axis', scopeId: ids.axisId, watched: false })
   chooseLetter(vault, planner, { kind: 'finding-opened', wanted: false })
 
+  recordLabel(vault, planner, ids.axisId, { size: '50x25' })
   const entries = vault.db.select().from(schema.log).all().map(({ leaf }) => parseLeaf(leaf))
   const newest = new Map<string, Entry>()
   for (const entry of entries) newest.set(`${entry.subject.kind} ${entry.subject.id}`, entry)
@@ -75,6 +77,7 @@ describe('each row equals the newest entry about it', async () => {
     ['nameplate', byId(vault.db.select().from(schema.nameplateRevision).all())],
     ['watch', byId(vault.db.select().from(schema.watch).all())],
     ['letter-choice', byId(vault.db.select().from(schema.letterChoice).all())],
+    ['label-print', byId(vault.db.select().from(schema.labelPrint).all())],
     ['setting', Object.fromEntries(vault.db.select().from(schema.setting).all().map(row => [row.key, row]))],
   ])('%s', (kind, rows) => {
     expect(Object.keys(rows).length).toBeGreaterThan(0)

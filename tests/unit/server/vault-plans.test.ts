@@ -1,8 +1,11 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { attachmentQueries } from '../../../server/database/attachment/queries'
 import { axisLists } from '../../../server/database/axis-state/list'
 import { judgingQueries } from '../../../server/database/judging/queries'
 import { knownGoodQueries } from '../../../server/database/known-good/queries'
+import { labelQueries } from '../../../server/database/label/queries'
 import { lifeQueries } from '../../../server/database/life/queries'
+import { stockQueries } from '../../../server/database/unit/queries'
 import { valueQueries } from '../../../server/database/value/queries'
 import { versionQueries } from '../../../server/database/version/queries'
 import { waiverQueries } from '../../../server/database/waiver/queries'
@@ -42,6 +45,9 @@ beforeAll(() => {
     ${upTo(2000)} INSERT INTO known_good (axis_id, version_id, at, by_person, meaning) SELECT i % 400 + 1, i, ${at}, 1, 'approved' FROM n;
     ${upTo(2000)} INSERT INTO waiver (axis_id, rule, places, covers, reason, until_at, given_at, given_by) SELECT i % 400 + 1, 'travel-span', '[]', '{}', 'r', ${at}, ${at}, i % 60 + 1 FROM n;
     ${upTo(500)} INSERT INTO waiver_end SELECT i * 4, ${at}, 1, 'r' FROM n;
+    ${upTo(2000)} INSERT INTO attachment (version_id, kind, name, media_type, size, sha256, received_at, person_id, peer) SELECT i, 'drive-backup', 'n', 'm', 1, printf('%064d', i), ${at}, i % 60 + 1, '' FROM n;
+    ${upTo(8000)} INSERT INTO attachment_chunk (attachment_id, seq, bytes) SELECT i / 4 + 1, i % 4, x'00' FROM n;
+    ${upTo(2000)} INSERT INTO label_print (axis_id, tag, size, at, by_person) SELECT i % 400 + 1, 'T', '50x25', ${at}, i % 60 + 1 FROM n;
     ${upTo(500)} INSERT INTO version_void SELECT i * 7, ${at}, 1, 'wrong' FROM n;
     ${upTo(400)} INSERT INTO axis_state (axis_id, status, off_harm, off_motion, off_text, current_version_id, known_good_version_id, fitting_id, versions, sightings, stop, warn, note, unknown)
       SELECT i, 'in-line', 0, 0, 0, i, i, i, 50, 100, 0, 0, 0, 0 FROM n;
@@ -52,13 +58,13 @@ afterAll(() => plant.close())
 interface Statement { readonly getQuery: () => { sql: string, params: unknown[] } }
 
 /** Nothing of a fleet's size is sorted here: the events, waivers and rules of one axis, the channels of one serial. */
-const maySort = ['life.voids', 'life.takenOut', 'judging.channels', 'judging.rules', 'values.rules', 'waivers.notEnded']
+const maySort = ['life.voids', 'life.takenOut', 'judging.channels', 'judging.rules', 'values.rules', 'waivers.notEnded', 'attachments.ofVersion', 'stock.spares']
 /** The board takes every axis. */
 const mayScan = ['axes.all']
 
 function statements(): [name: string, plan: string[]][] {
   const { db, sqlite } = plant.vault
-  const sets = { versions: versionQueries(db), life: lifeQueries(db), judging: judgingQueries(db), marks: knownGoodQueries(db), axes: axisLists(db), waivers: waiverQueries(db), values: valueQueries(db) }
+  const sets = { versions: versionQueries(db), life: lifeQueries(db), judging: judgingQueries(db), marks: knownGoodQueries(db), axes: axisLists(db), waivers: waiverQueries(db), values: valueQueries(db), attachments: attachmentQueries(db), labels: labelQueries(db), stock: stockQueries(db) }
   return Object.entries(sets).flatMap(([set, queries]) => Object.entries(queries).filter(([, query]) => typeof query !== 'function').map(([key, query]): [string, string[]] => {
     const { sql, params } = (query as unknown as Statement).getQuery()
     const plan = sqlite.prepare(`EXPLAIN QUERY PLAN ${sql}`).all(...params.map(param => (typeof param === 'object' ? 1 : param))) as { detail: string }[]

@@ -118,7 +118,11 @@ describe('papers', () => {
 
   it('the ZIP of a kit is logged and opened by unzip, and not made with cautions unread', async () => {
     const before = plant.rows().log ?? 0
-    expect(unzipped((await kit('zip')).bytes).has('2-LID-02.Z-v1-kit.json')).toBe(true)
+    const files = unzipped((await kit('zip')).bytes)
+    expect(files.has('2-LID-02.Z-v1-kit.json')).toBe(true)
+    // What the tests before damaged is left out and named; the rest is there.
+    expect(files.get('READ-THIS-FIRST.txt')?.toString('utf8')).toContain('are not those that came in')
+    expect([...files.keys()].filter(name => name.startsWith('0-own-backup-of-SN-0001/'))).toHaveLength(2)
     expect(plant.rows().log).toBe(before + 1)
     expect((await kit('zip', { cautionsRead: false })).status).toBe(409)
     expect(plant.rows().log).toBe(before + 1)

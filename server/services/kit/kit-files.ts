@@ -1,5 +1,5 @@
 import { CodedError } from '#shared/errors/coded'
-import { attachmentBytes } from '#server/database/attachment/queries'
+import { attachmentBytes, DamagedAttachment } from '#server/database/attachment/queries'
 import type { Vault } from '#server/database/client'
 import { listAttachments } from '../attachments/read-attachments'
 import { textOf } from '../versions/version-file'
@@ -24,7 +24,7 @@ export function kitFiles(vault: Vault, { file, version, fitted, place, unit, sou
   ]
   const otherModel = unit !== null && unit.model !== source.model
   const attached = attachmentsOf(vault, version.id, otherModel ? `9-STOP-values-of-${safeName(version.model)}-mean-other-newtons` : `0-own-backup-of-${safeName(version.file.unit.serial)}`)
-  return { files: otherModel ? [...values, ...attached] : [...attached, ...values], without: [...(list.why === null ? [] : [list.why]), ...fitted.warnings] }
+  return { files: otherModel ? [...values, ...attached.files] : [...attached.files, ...values], without: [...(list.why === null ? [] : [list.why]), ...attached.damaged, ...fitted.warnings] }
 }
 
 function ownList({ db }: Vault, file: KitParts['file']): { bytes: Buffer | null, why: string | null } {
@@ -37,9 +37,21 @@ function ownList({ db }: Vault, file: KitParts['file']): { bytes: Buffer | null,
   }
 }
 
-function attachmentsOf({ db }: Vault, versionId: number, folder: string): ZipFile[] {
-  return listAttachments(db, versionId).items.filter(({ kind }) => kind === 'drive-backup')
-    .map(one => ({ name: `${folder}/${one.id}-${safeName(one.name)}`, bytes: Buffer.concat([...attachmentBytes(db, one)]), packed: true }))
+/** Backups that are as they came in. One that was damaged is left out and named: at night the rest is needed all the same. */
+function attachmentsOf({ db }: Vault, versionId: number, folder: string): { files: ZipFile[], damaged: string[] } {
+  const files: ZipFile[] = []
+  const damaged: string[] = []
+  for (const one of listAttachments(db, versionId).items) {
+    if (one.kind !== 'drive-backup') continue
+    try {
+      files.push({ name: `${folder}/${one.id}-${safeName(one.name)}`, bytes: Buffer.concat([...attachmentBytes(db, one)]), packed: true })
+    }
+    catch (error) {
+      if (!(error instanceof DamagedAttachment)) throw error
+      damaged.push(`The attached ${one.name} is left out: ${error.message}`)
+    }
+  }
+  return { files, damaged }
 }
 
 /** A file name that opens on every system, old unpackers too: letters without their accents, the rest an underscore. */

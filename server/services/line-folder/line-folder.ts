@@ -2,7 +2,6 @@ import { setImmediate } from 'node:timers/promises'
 import { CodedError } from '#shared/errors/coded'
 import { Refusal } from '#shared/errors/refusal'
 import type { VaultActor } from '#server/database/actor'
-import { DamagedAttachment } from '#server/database/attachment/queries'
 import { readAxisPage, type AxisListRow } from '#server/database/axis-state/list'
 import type { Vault } from '#server/database/client'
 import { lineRows } from '#server/database/line/queries'
@@ -68,7 +67,7 @@ async function folderAxis(vault: Vault, row: AxisListRow, origin: string): Promi
     }
   }
   catch (error) {
-    if (!(error instanceof CodedError) && !(error instanceof DamagedAttachment)) throw error
+    if (!(error instanceof CodedError)) throw error
     return { files: [], axis: { ...known, code: '', knownGood: '', files: [], note: error.message } }
   }
 }

@@ -36,6 +36,23 @@ export interface Patch {
   readonly insert?: { readonly before: number, readonly move: Move }
 }
 
+/** A unit swapped at night: played from the first step to the last that it names, some minutes each. */
+export interface SwapAct {
+  readonly act: 'swap'
+  readonly axis: string
+  readonly by: string
+  readonly serial: string
+  readonly failure: string
+  readonly workOrder: string
+  readonly blocked: 'prop' | 'pin' | 'lowered'
+  readonly until: 'running' | 'released'
+  readonly note?: string
+  /** What was taught at the machine, and stands in the read-back. */
+  readonly taught: Record<string, number>
+  readonly releasedBy?: string
+  readonly oldUnitState?: 'repair' | 'scrapped' | 'spare'
+}
+
 interface When { readonly daysAgo: number, readonly time: string }
 export type Act = When & (
   | { readonly act: 'upload', readonly axis: string, readonly by: string, readonly occasion: 'commissioning' | 'routine' | 'as-found' | 'as-left', readonly reason?: string, readonly workOrder?: string, readonly changedBy?: string, readonly allowedBy?: string, readonly patch?: Patch, readonly undo?: boolean, readonly capturedDaysAgo?: number, /** Sent as the drive's own list, by the entry table of its model. */ readonly list?: boolean }
@@ -51,6 +68,7 @@ export type Act = When & (
   /** Watches the whole site. */
   | { readonly act: 'watch', readonly by: string }
   | { readonly act: 'plan', readonly by: string, readonly axes: readonly string[], readonly fields: readonly string[], readonly hours: number, readonly reason: string, readonly allowedBy: string }
+  | SwapAct
   | { readonly act: 'rule', readonly by: string, readonly rule: { readonly scope: 'machine', readonly machine: string, readonly field: string, readonly max: number, readonly reason: string } }
 )
 

@@ -17,6 +17,7 @@ import { coverOf } from '../shared/checks/waivers'
 import { readSettings } from '../shared/settings/read'
 import { writeEntryCsv } from '../shared/settings/entry-table/write-entry'
 import type { Content } from '../shared/settings/types'
+import { playSwap } from './demo-swap'
 import { fixtureBytes, settingsFile, type Act, type FileJson, type Patch, type Plant } from './demo-files'
 
 export interface Cast {
@@ -121,6 +122,13 @@ export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonl
       case 'plan': {
         const until = new Date(at + act.hours * 3_600_000).toISOString()
         announceChange(vault, person(cast, act.by), { axisIds: act.axes.map(axisId), fields: [...act.fields], from: new Date(at).toISOString(), until, reason: act.reason, allowedBy: act.allowedBy })
+        break
+      }
+      case 'swap': {
+        const { versions, file } = playSwap(vault, cast, axisId(act.axis), act, at, setClock)
+        told.versions += versions.length
+        newest[act.axis] = versions.at(-1) ?? fail(`nothing was read back of ${act.axis}`)
+        files[act.axis] = file
         break
       }
       case 'rule': {

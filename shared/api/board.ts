@@ -13,7 +13,7 @@ export const boardAxis = z.object({
 })
 export type BoardAxis = z.infer<typeof boardAxis>
 
-export const attentionKinds = ['finding', 'stop-check', 'off-known-good', 'unmarked', 'overdue', 'never-read', 'tray'] as const
+export const attentionKinds = ['swap-unreleased', 'finding', 'stop-check', 'off-known-good', 'unmarked', 'overdue', 'never-read', 'tray'] as const
 /** What needs someone now, worst first; `items` names up to five. */
 export const attentionSchema = z.object({
   kind: z.enum(attentionKinds), count: z.int(), since: instantSchema.nullable().describe('the oldest'),

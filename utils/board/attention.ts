@@ -4,6 +4,7 @@ import { addressOf } from '~/utils/addresses'
 interface Telling { readonly one: string, readonly many: string, readonly action: string }
 
 const tellings: Record<Attention['kind'], Telling> = {
+  'swap-unreleased': { one: 'swap not released', many: 'swaps not released', action: 'Release' },
   'finding': { one: 'open finding', many: 'open findings', action: 'Explain' },
   'stop-check': { one: 'stop check', many: 'stop checks', action: 'Judge' },
   'off-known-good': { one: 'axis off known-good', many: 'axes off known-good', action: 'Compare' },
@@ -42,6 +43,7 @@ export function needOf(attention: Attention): Need {
 }
 
 function whereTo({ kind, count, items: [first] }: Attention): string {
+  if (kind === 'swap-unreleased') return addressOf.swaps(count === 1 ? first?.tag : undefined)
   if (kind === 'finding') return count === 1 && first?.findingId ? addressOf.finding(first.findingId) : addressOf.findings()
   if (kind === 'tray') return addressOf.tray()
   if (kind === 'overdue' || kind === 'never-read' || !first) return addressOf.upload()

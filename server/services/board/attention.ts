@@ -10,6 +10,7 @@ import { countWaiting, waitingGroups } from '#server/database/tray/queries'
 import { againstKnownGood } from '../axes/axis-state'
 import { overdueSince } from '../axes/overdue'
 import { spokenPlace, valueWords } from '../change-words'
+import { overdueSwaps } from '../swaps/overdue'
 import { standingCounts, waived } from '../waivers/accepted'
 
 type Item = Attention['items'][number]
@@ -27,6 +28,7 @@ export function attention(db: VaultDb, sites: SiteBounds, rows: readonly AxisLis
     return { kind, count: needing.length, since: needing.map(each => each.since ?? '').sort()[0] || null, items: needing.slice(0, named).map(each => itemOf(each, text(each))) }
   }
   return [
+    swapGroup(db, sites, now),
     findingGroup(db, sites),
     group('stop-check', ({ state }) => standingCounts(state, now).stop > 0, ({ current }) => current?.receivedAt ?? null, ({ row }) => firstStop(db, row, now)),
     group('off-known-good', ({ state }) => state?.status === 'off', ({ state }) => state?.offSince ?? null, ({ row }) => offText(db, row), weightOff),
@@ -59,6 +61,15 @@ function offText(db: VaultDb, { axis, current, marked }: AxisListRow): string {
   const [first] = differences
   const more = differences.length > 1 ? `, and ${differences.length - 1} more` : ''
   return `${first ? `${spokenPlace(first)} ${valueWords(first)}${more}` : 'moves renumbered'}, against known-good v${marked?.number ?? '?'}`
+}
+
+function swapGroup(db: VaultDb, sites: SiteBounds, now: string): Attention {
+  const late = overdueSwaps(db, now).filter(({ site }) => sites === null || sites.includes(site.id))
+  const items = late.slice(0, named).map(({ swap, tag, serialIn }): Item => ({
+    axisId: swap.axisId, tag, versionId: null, knownGoodId: null, findingId: null, since: swap.runningAt ?? swap.openedAt,
+    text: swap.runningAt === null ? 'swap begun and not ended' : `runs with ${serialIn ?? 'another unit'}, not released`,
+  }))
+  return { kind: 'swap-unreleased', count: late.length, since: items[0]?.since ?? null, items }
 }
 
 function findingGroup(db: VaultDb, sites: SiteBounds): Attention {

@@ -2,6 +2,7 @@ import type { Logger } from 'pino'
 import type { Vault } from '#server/database/client'
 import type { Post } from '#server/mail/post'
 import { raiseOff, raiseUnwaived, tellOverdue } from '../findings/sweep'
+import { tellUnreleased } from '../swaps/overdue'
 import { queueOverdueDigests } from './overdue-digest'
 import { sendDue } from './send'
 
@@ -13,7 +14,7 @@ const looksARound = 12
 const lastWait = 5000
 
 /** What becomes due by the passing of time; each does it once, however often it is called. */
-const rounds: readonly ((vault: Vault) => number)[] = [raiseOff, raiseUnwaived, tellOverdue, queueOverdueDigests]
+const rounds: readonly ((vault: Vault) => number)[] = [raiseOff, raiseUnwaived, tellOverdue, tellUnreleased, queueOverdueDigests]
 
 interface WorkerOptions { readonly vault: Vault, readonly post: Post, readonly publicOrigin: string | null, readonly logger: Pick<Logger, 'error' | 'info'> }
 

@@ -9,6 +9,7 @@ import type { NamedReadBack } from '#server/database/swap/queries'
 import type { SwapRow } from '#server/database/swap/table'
 import { unitRows } from '#server/database/unit/queries'
 import { carryMarkOver } from '../known-good/mark'
+import { tellWatchers } from '../letters/queue'
 import { changeUnit } from '../units/units'
 import { versionRow } from '../versions/read-version'
 import { asLeftOf, attemptsOf, lastCompared } from './facts'
@@ -38,7 +39,12 @@ export function releaseSwap(vault: Vault, actor: PersonActor, id: number, { rev,
     const said = { by: takerOf(write), at: write.now, meaning, note: note ?? null, carriedOver, oldUnitState: left }
     const words = carriedOver ? `the mark names version ${asLeft?.number} now` : 'no mark carries over'
     takeStep(db, write, before, { facts: { ...before.facts, released: said } }, { act: 'released', text: `Released; ${words}.${note ? ` ${note}` : ''}`, said })
-    return readSwap(db, id, write.now)
+    const released = readSwap(db, id, write.now)
+    const mark = knownGoodQueries(db).inForce.get({ axisId: before.axisId })?.mark.versionId
+    tellWatchers(db, write, 'swap-released', before.axisId, {
+      swapId: id, at: write.now, by: actor.name, unitOut: released.unitOut?.serial ?? 'none', unitIn: released.unitIn?.serial ?? 'none', knownGood: mark ? versionRow(db, mark).number : null,
+    })
+    return released
   })
 }
 

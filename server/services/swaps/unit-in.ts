@@ -6,10 +6,12 @@ import type { PersonActor } from '#server/database/actor'
 import type { Vault, Write } from '#server/database/client'
 import { judgingQueries } from '#server/database/judging/queries'
 import { knownGoodQueries } from '#server/database/known-good/queries'
+import type { VaultDb } from '#server/database/prepared'
 import type { UnitRow } from '#server/database/schema'
 import type { SwapFacts, SwapRow } from '#server/database/swap/table'
 import { unitRows } from '#server/database/unit/queries'
 import { raiseUnfit } from '../findings/causes'
+import { tellWatchers } from '../letters/queue'
 import { versionRow } from '../versions/read-version'
 import { fitAlone } from './fittings'
 import { keepPlate, namedUnit } from './named-unit'
@@ -40,9 +42,16 @@ export function takeUnitIn(vault: Vault, actor: PersonActor, id: number, body: B
       act: 'unit-in', text: words(unit, goes, answer, facts),
       said: { ...body, unitId: unit.id, fit: answer.fit, reasons: answer.reasons, adjustments: goes.kit.adjustments },
     })
-    if (facts.unfit && !before.facts.unfit) raiseUnfit(db, write, goes.place, { swapId: id, unitIn: unit.serial, why: answer.reasons.map(({ message }) => message) })
+    if (facts.unfit && !before.facts.unfit) tellUnfit(db, write, id, goes, answer, facts.unfit)
     return readSwap(db, id, write.now)
   })
+}
+
+/** A finding for the auditor, a letter for those who watch the axis. */
+function tellUnfit(db: VaultDb, write: Write, swapId: number, { place, unit }: SwapKitCase, { reasons }: FitAnswer, { by, reason, at }: NonNullable<SwapFacts['unfit']>): void {
+  const told = { swapId, unitIn: unit.serial, why: reasons.map(({ message }) => message) }
+  raiseUnfit(db, write, place, told)
+  tellWatchers(db, write, 'unfit-gone-on', place.axis.id, { ...told, at, allowedBy: by, reason })
 }
 
 function assertNotSafe({ facts }: SwapRow): void {

@@ -3,6 +3,7 @@ import type { Swap } from '../../../shared/api/swaps'
 import { makeTextKit } from '../../../server/services/kit/make-kit'
 import { markKnownGood } from '../../../server/services/known-good/mark'
 import { listFittings, readAxis } from '../../../server/services/axes/read-axis'
+import { readBoard } from '../../../server/services/board/board'
 import { abandonSwap, putOldUnitBack } from '../../../server/services/swaps/ending'
 import { listSpares, listSwaps, swapOf } from '../../../server/services/swaps/list-swaps'
 import { makeSafe, readCautions } from '../../../server/services/swaps/make-safe'
@@ -97,8 +98,11 @@ describe('a swap from a dead unit to a released one', () => {
   it('is late on the board once it runs longer than the site allows', () => {
     const { id } = running()
     expect(listSwaps(here.plant.vault, here.runa, { open: 'true' }).items).toMatchObject([{ id, overdue: false, serialOut: 'SN-0001', serialIn: 'SN-0002' }])
+    const onBoard = () => readBoard(here.plant.vault, here.runa).attention.find(({ kind }) => kind === 'swap-unreleased')
+    expect(onBoard()).toBeUndefined()
     here.plant.now += 25 * hour
     expect(listSwaps(here.plant.vault, here.runa, {}).items).toMatchObject([{ id, overdue: true }])
+    expect(onBoard()).toMatchObject({ count: 1, items: [{ tag: 'LID-02.Z', text: 'runs with SN-0002, not released' }] })
     release(id)
     expect(listSwaps(here.plant.vault, here.runa, { open: 'true' }).items).toEqual([])
     expect(listSwaps(here.plant.vault, here.runa, { axis: 'tag:LID-02.Z', open: 'false' }).items).toMatchObject([{ id, step: 'released', releaseDueAt: null }])

@@ -29,10 +29,10 @@ export const unitRows = prepared((db) => {
   }
 })
 
-export const stockQueries = prepared(db => ({ spares: db.selectDistinct({ siteId: unit.siteId, model: unit.model }).from(unit).where(eq(unit.state, 'spare')).prepare() }))
+export const stockQueries = prepared(db => ({ spares: db.select().from(unit).where(eq(unit.state, 'spare')).prepare() }))
 
-/** Models of the units in stock, with the site where they lie; null = at none in particular. */
-export const stockRows = (db: VaultDb) => stockQueries(db).spares.all()
+/** The units in stock. */
+export const spareUnits = (db: VaultDb) => stockQueries(db).spares.all()
 
 export function insertUnit(db: VaultDb, values: typeof unit.$inferInsert): UnitRow {
   return db.insert(unit).values(values).returning().get()

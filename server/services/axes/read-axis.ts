@@ -33,13 +33,13 @@ export function axisOnWire(row: AxisListRow, stock: Stock, now: string): Axis {
 export function readAxis(vault: Vault, id: number): Axis {
   const row = readAxisRow(vault.db, id)
   if (!row) throw new Refusal('not-found', 'There is no such axis.')
-  return axisOnWire(row, readStock(vault.db), vault.now())
+  return axisOnWire(row, readStock(vault.db, vault.now()), vault.now())
 }
 
 /** Axes of the actor's sites, by id; of one site, line or machine where that is asked. */
 export function listAxes(vault: Vault, actor: Actor, query: PageQuery & AxisFilter): { items: Axis[], next: string | null } {
   const now = vault.now()
-  const stock = readStock(vault.db)
+  const stock = readStock(vault.db, now)
   const rows = readAxisPage(vault.db, actor.sites, query, afterOf(query), limitOf(query) + 1)
   return pageOf(rows, query, row => row.axis.id, row => axisOnWire(row, stock, now))
 }

@@ -13,7 +13,7 @@ import { attention } from './attention'
 /** Every axis of the actor's sites with its state, and what needs someone now. */
 export function readBoard(vault: Vault, actor: Actor): Board {
   const asOf = vault.now()
-  const stock = readStock(vault.db)
+  const stock = readStock(vault.db, asOf)
   const rows = readAllAxes(vault.db, actor.sites)
   return {
     asOf, plant: plantOf(vault), axes: rows.map(row => boardAxis(row, stock, asOf)), attention: attention(vault.db, actor.sites, rows, asOf),

@@ -9,7 +9,7 @@ export function readinessOf({ axis, state, site, mark, marked, current, unit }: 
     tag: axis.tag,
     markedAt: marked && mark?.at ? mark.at : null, knownGoodMonths: site.knownGoodMonths,
     lastHeardAt: state?.lastUploadAt ?? axis.madeAt, uploadEveryHours: axis.uploadEveryHours,
-    spare: stock.fits({ siteId: site.id, model: unit?.model ?? current?.model ?? null }),
+    spare: stock.fits({ axisId: axis.id, axisRev: axis.rev, siteId: site.id, model: unit?.model ?? current?.model ?? null, versionId: marked?.id ?? current?.id ?? null }),
     backups: state?.backups ?? 0, attachmentWanted: site.attachmentWanted,
     labelTag: state?.labelTag ?? null, labelWanted: site.labelWanted,
   }, now)

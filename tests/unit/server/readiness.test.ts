@@ -92,6 +92,8 @@ describe('on the plant', () => {
     return outcome.answer.version.id
   }
 
+  const markNewest = () => markKnownGood(plant.vault, runa, store(), { meaning: 'approved' })
+
   it('each thing that is put right goes from the list, and comes back with its time', () => {
     expect(lacks()).toEqual(['no-known-good', 'overdue', 'no-spare', 'no-label'])
     const versionId = store()
@@ -127,6 +129,22 @@ describe('on the plant', () => {
     expect(lacks()).toContain('no-spare')
     inserter(plant.vault.db, unit)({ rev: 1, serial: 'SN-0005', model: 'HL40-200V', location: '', state: 'spare', madeAt: iso(plant.now) })
     expect(lacks()).not.toContain('no-spare')
+  })
+
+  it('counts a spare of another model where it fits by the rules of a swap, rescaled or not', () => {
+    const plate = (model: string, ratedThrust: number, stroke = 200) => ({ model, axisKind: 'linear' as const, stroke, ratedThrust, peakThrust: 3 * ratedThrust })
+    plant.nameplate(plate('HL40-200V', 640))
+    markNewest()
+    const spare = plant.unit('SN-0009', { model: 'HL50-200V' })
+    expect(lacks()).toContain('no-spare')
+    plant.nameplate(plate('HL50-200V', 800))
+    expect(lacks()).not.toContain('no-spare')
+    changeUnit(plant.vault, runa, spare, { rev: 1, state: 'scrapped' })
+    expect(lacks()).toContain('no-spare')
+    // 38 % of 640 N are 243.2 N, which a unit of 60 N rated and 180 N peak cannot do.
+    plant.unit('SN-0010', { model: 'HL16-200V' })
+    plant.nameplate(plate('HL16-200V', 60))
+    expect(lacks()).toContain('no-spare')
   })
 
   it('is the same in a list, alone and on the board', () => {

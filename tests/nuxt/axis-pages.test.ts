@@ -77,7 +77,7 @@ describe('the page of an axis', () => {
   it('shows today against the known-good, and where to compare them', async () => {
     const page = await open(AxisPage, '/axes/LID-03.Z')
     expect(page.get('h1').text()).toBe('LID-03.Z')
-    expect(page.findAll('h2').map(head => head.text())).toEqual(['Its life', 'On the rail', 'Checks', 'Moves', 'Motion', 'Setup', 'A value over time'])
+    expect(page.findAll('h2').map(head => head.text())).toEqual(['It could not be restored tonight', 'Its life', 'On the rail', 'Checks', 'Moves', 'Motion', 'Setup', 'A value over time'])
     expect(page.findAll('a').some(link => link.attributes('href') === '/changes?a=14&b=15')).toBe(true)
     expect(words(page.get('dl').text())).toContain('v15, 30 Nov 2026 06:12 CET')
   })
@@ -85,7 +85,7 @@ describe('the page of an axis', () => {
   it('says how to begin where nothing was read', async () => {
     const page = await open(AxisPage, '/axes/NEW-01.X')
     expect(words(page.text())).toContain('Nothing has been uploaded for this axis.')
-    expect(page.findAll('h2').map(head => head.text())).toEqual(['Its life'])
+    expect(page.findAll('h2').map(head => head.text())).toEqual(['It could not be restored tonight', 'Its life'])
   })
 
   it('hands out a kit only after the cautions were read', async () => {

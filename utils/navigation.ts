@@ -15,8 +15,9 @@ export interface Entry {
 export const entries: readonly Entry[] = [
   { to: addressOf.board(), word: 'Board', first: true },
   { to: addressOf.upload(), word: 'Upload', first: true, for: ['technician', 'planner'] },
+  { to: addressOf.swaps(), word: 'Swaps', first: true },
   { to: addressOf.tray(), word: 'Tray', first: true, for: ['technician', 'planner'] },
-  { to: addressOf.units(), word: 'Units', first: true },
+  { to: addressOf.units(), word: 'Units' },
   { to: addressOf.findings(), word: 'Findings' },
   { to: addressOf.planned(), word: 'Planned', for: ['planner', 'auditor'] },
   { to: addressOf.places(), word: 'Places' },

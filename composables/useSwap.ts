@@ -12,6 +12,7 @@ const lookAgain = 6000
 /** One swap as the vault has it, what waits for it here, and what this device ticked. What was read last stays. */
 export function useSwap(id: () => number) {
   const api = useApi()
+  const session = useSession()
   const store = useOutboxStore()
   const outbox = useOutbox()
   const visibility = useDocumentVisibility()
@@ -46,7 +47,7 @@ export function useSwap(id: () => number) {
       store.heard(!toProblem(failure).unanswered)
     }
   }
-  watch(() => swap.value && [swap.value.unitIn?.id, swap.value.versionId, swap.value.forcesConfirmed?.at].join(' '), (now) => { if (now && swap.value?.unitIn) void readKits() })
+  watch(() => swap.value && [swap.value.unitIn?.id, swap.value.versionId, swap.value.forcesConfirmed?.at].join(' '), (now) => { if (now && swap.value?.unitIn && session.may('technician', 'planner')) void readKits() })
 
   const { data: axis } = useRead(async signal => swap.value ? api.get<Axis>(`/api/axes/${swap.value.axisId}`, { signal }) : undefined, [() => swap.value?.axisId])
   const { data: nameplate } = useRead(async (signal) => {

@@ -35,6 +35,12 @@ describe('the step that is open', () => {
     expect(open({ ...unfit, unfit: { by: 'Runa Haldersen', at: '2026-11-30T01:36:00.000Z', reason: 'no other in the house', enteredBy: 'Tobias Achterberg' } })).toBe(3)
   })
 
+  it('counts no read-back of a unit that went out again', () => {
+    const back = { ...safe, putBack: true, readBacks: [attempt(1)], log: [...begun.log, { rev: 8, at: '2026-11-30T09:00:00.000Z', by: 'Tobias Achterberg', act: 'put-back', text: 'HL40-23-00417 went back in.' }] }
+    expect(open(back)).toBe(5)
+    expect(open({ ...back, step: 'first-motion', readBacks: [attempt(1), attempt(2, { at: '2026-11-30T09:10:00.000Z' })] }, { wentOnFrom: 1 })).toBe(6)
+  })
+
   it('stays at the first motion while an item is untried or at fault', () => {
     const motion = movedAll.firstMotion!
     expect(open({ ...movedAll, firstMotion: { ...motion, untried: ['move-1'] } })).toBe(7)

@@ -1,4 +1,5 @@
 import type { Swap } from '#shared/api/swaps'
+import { attemptsOfUnit } from './attempts'
 import type { OutboxEntry } from './outbox'
 
 export type StepNumber = 1 | 2 | 3 | 4 | 5 | 6 | 7 | 8 | 9
@@ -43,8 +44,8 @@ export function unsettled({ adjustments, forcesConfirmed, fit, unfit, reasons }:
 }
 
 /** A read-back that nobody at this device has looked at yet, before the axis has moved. */
-function verdictUnread({ readBacks, firstMotion }: Swap, { wentOnFrom }: OwnTicks, waits: ReadonlySet<StepNumber>): boolean {
-  return firstMotion === null && !waits.has(7) && wentOnFrom < (readBacks.at(-1)?.attempt ?? 0)
+function verdictUnread(swap: Swap, { wentOnFrom }: OwnTicks, waits: ReadonlySet<StepNumber>): boolean {
+  return swap.firstMotion === null && !waits.has(7) && wentOnFrom < (attemptsOfUnit(swap).at(-1)?.attempt ?? 0)
 }
 
 /** Every item was tried, and the newest result of each is as it should be. */
@@ -61,7 +62,7 @@ export function standingOf(swap: Swap, ticks: OwnTicks, waiting: readonly Outbox
     if (swap.step === 'released' || swap.step === 'abandoned') return null
     if (swap.step === 'unit-in' || (swap.step === 'safe' && unsettled(swap))) return 2
     if (swap.step === 'safe' && !waits.has(4)) return ticks.kitFor === unit ? 4 : 3
-    if (swap.step === 'safe' || swap.step === 'read-back') return ticks.writtenFor === unit || swap.readBacks.length > 0 || waits.has(6) ? 6 : 5
+    if (swap.step === 'safe' || swap.step === 'read-back') return ticks.writtenFor === unit || attemptsOfUnit(swap).length > 0 || waits.has(6) ? 6 : 5
     if (swap.step !== 'release' && !waits.has(8)) return verdictUnread(swap, ticks, waits) ? 6 : ticks.ranOnFor === unit || motionDone(swap) ? 8 : 7
     return 9
   })()

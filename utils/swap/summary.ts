@@ -1,5 +1,6 @@
 import type { Swap } from '#shared/api/swaps'
 import { counted } from '~/utils/format'
+import { attemptsOfUnit } from './attempts'
 import type { StepNumber } from './steps'
 import { begun, replacedWords } from './words'
 
@@ -33,7 +34,8 @@ function fitWords({ fit, adjustments, forcesConfirmed, unfit }: Swap): string {
   return `${counted(adjustments.length, 'value', 'values')} rescaled${forcesConfirmed ? `, confirmed by ${forcesConfirmed.by}` : ''}.`
 }
 
-function readBackWords({ readBacks }: Swap, when: (iso: string) => string): string {
+function readBackWords(swap: Swap, when: (iso: string) => string): string {
+  const readBacks = attemptsOfUnit(swap)
   const last = readBacks.at(-1)
   if (!last) return ''
   return `${last.compare ? begun(last.compare) : 'Not taken'}, ${when(last.at)}, ${last.by}. ${counted(readBacks.length, 'attempt', 'attempts')}.`

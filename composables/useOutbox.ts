@@ -3,6 +3,9 @@ import { bytesOf, nextToSend, type OutboxEntry } from '~/utils/swap/outbox'
 /** Refusals of a read-back that the vault keeps as an attempt all the same: `current` is the swap with it. */
 const keptAttempts = new Set(['read-back-serial', 'read-back-model', 'read-back-twice', 'settings-unreadable'])
 
+/** Not signed in, too many calls, a door before the vault, the vault starting, its disk full: the same entry goes later. */
+const passing = new Set([401, 429, 502, 503, 504, 507])
+
 /** How often is tried again while something waits, in ms. */
 const again = 8000
 
@@ -46,8 +49,7 @@ export function useOutbox() {
       const problem = toProblem(failure)
       store.heard(!problem.unanswered)
       // Without reception, without a session, or while the vault is overrun or full it is tried again; the rest is an answer.
-      const { status } = problem.problem
-      const later = problem.unanswered || status === 401 || status === 429 || status >= 500
+      const later = problem.unanswered || passing.has(problem.problem.status)
       store.trouble = later && !problem.unanswered ? problem.problem : null
       if (!later && keptAttempts.has(problem.code) && problem.problem.current) store.settle(entry, problem.problem.current)
       else if (!later) store.refuse(entry.key, problem.problem)

@@ -33,6 +33,8 @@ export function useSwap(id: () => number) {
   const mine = computed(() => store.entries.filter(entry => entry.swapId === id()))
   const waiting = computed(() => mine.value.filter(({ refused }) => refused === null))
   const refused = computed(() => mine.value.find(entry => entry.refused !== null))
+  // A refusal brings along what the other device did.
+  watch(() => refused.value?.refused?.current, current => current && take(current as Swap))
   const ticks = useLocalStorage<OwnTicks>(() => `witnessmark-swap-${id()}`, noTicks, { mergeDefaults: true })
   const standing = computed(() => swap.value && standingOf(swap.value, ticks.value, waiting.value))
 

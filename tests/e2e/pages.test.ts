@@ -21,6 +21,16 @@ const idOf = async (path: string, wanted: (item: Record<string, unknown>) => boo
 }
 const versions = (tag: string, number: number) => idOf(`/api/axes/tag:${tag}/versions`, item => item.number === number)
 
+/** A swap of the demo plant, begun once by its technician. */
+let begunSwap: Promise<number> | undefined
+async function beginSwap(): Promise<number> {
+  const axisId = await idOf('/api/axes?limit=200', item => item.tag === 'LID-05.Z')
+  const { email, password } = demo.person('technician')
+  const { json } = await demo.server.call('POST', '/api/swaps', { as: await demo.server.signIn({ email, password }), body: { axisId, replaced: 'unit', failure: 'encoder fault' } })
+  return (json as unknown as { id: number }).id
+}
+const swapAt = () => begunSwap ??= beginSwap()
+
 const visits: readonly Visit[] = [
   { file: 'pages/index.vue', address: () => '/', ready: /axes could not be restored tonight/ },
   { file: 'pages/axes/[tag]/label.vue', address: () => '/axes/LID-02.Z/label', ready: /Label for LID-02\.Z/ },
@@ -30,6 +40,8 @@ const visits: readonly Visit[] = [
   { file: 'pages/changes.vue', address: () => '/changes', ready: /Changes/ },
   { file: 'pages/machines/[id].vue', address: async () => `/machines/${await idOf('/api/machines', item => item.name === 'LID-02')}`, ready: /LID-02/ },
   { file: 'pages/upload.vue', address: () => '/upload', ready: /Upload what the drives hold/ },
+  { file: 'pages/swaps/index.vue', address: async () => `/swaps?with=${await swapAt()}`, ready: /not released/ },
+  { file: 'pages/swaps/[id].vue', address: async () => `/swaps/${await swapAt()}`, ready: /LID-05\.Z/ },
   { file: 'pages/tray.vue', address: () => '/tray', ready: /files? waits? in the tray/ },
   { file: 'pages/units.vue', address: () => '/units', ready: /\d+ units?, \d+ spares?|Units and spares/ },
   { file: 'pages/places.vue', address: async () => `/places?site=1&machine=${await idOf('/api/machines', item => item.name === 'LID-02')}`, ready: /LID-02, / },
@@ -146,6 +158,14 @@ const opened: readonly Opened[] = [
     await page.getByRole('combobox', { name: /^Field/ }).fill('thrust')
     await page.getByRole('listbox').getByRole('option').first().waitFor()
   } },
+  { what: 'an axis to begin a swap at', file: 'pages/swaps/index.vue', open: async (page) => {
+    await press(page, 'Begin a swap')
+    await page.getByLabel('Three characters of the tag').fill('04z')
+    await page.getByRole('list', { name: 'Axes found' }).getByRole('button').first().click()
+    await page.getByRole('group', { name: /^Which unit sits there/ }).waitFor()
+  } },
+  { what: 'which unit is truly fitted', file: 'pages/swaps/[id].vue', open: page => press(page, 'Abandon the swap') },
+  { what: 'what the old unit tells', file: 'pages/swaps/[id].vue', open: page => press(page, /^Look at it: Which axis/) },
   { what: 'where a file of the tray belongs', file: 'pages/tray.vue', open: page => press(page, /say where it sits|Say where it belongs/) },
   { what: 'files that were read', file: 'pages/upload.vue', open: async (page) => {
     await drop(page, [jsonFile('known.json', lidPress({ serial: 'HL40-23-00392', setup: { thrustLimit: 70 } })), jsonFile('stranger.json', lidPress({ serial: 'HL40-26-09999' })), { name: 'torn.json', mimeType: 'application/json', buffer: Buffer.from('{') }])

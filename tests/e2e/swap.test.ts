@@ -152,14 +152,14 @@ describe('a whole swap, the network cut in the middle', () => {
   })
 
   it('moves slowly, item by item; a fault is told and repeated', async () => {
-    await button('Fault', open()).click()
+    await button(/^Fault$/, open()).click()
     await open().getByLabel('What happened').fill('went the other way')
     await button('Keep the fault', open()).click()
     await open().getByText('“went the other way”').waitFor()
     const items = (await kitOf(id)).firstMotion
     for (const _ of items) {
       const before = await open().innerText()
-      await button('As it should', open()).click()
+      await button(/^As it should$/, open()).click()
       await page.waitForFunction(text => document.querySelector<HTMLElement>('[aria-current="step"]')?.innerText !== text, before)
       if (await stepCalled('Running').isVisible()) break
     }
@@ -218,7 +218,7 @@ describe('only the drive', () => {
     const id = await begin('03z', 'LID-03.Z', 'drive dead', 'drive only')
     await open().getByRole('radio', { name: /^Another serial/ }).check()
     await open().getByLabel('Serial of the new unit').fill('HL40-26-03001')
-    await open().getByLabel('Model').fill('HL40-200V')
+    await open().getByRole('combobox', { name: 'Model' }).fill('HL40-200V')
     await open().getByLabel(/^Firmware/).fill('3.12')
     await button('Take HL40-26-03001').click()
     await stepCalled('Kit').waitFor()
@@ -236,7 +236,7 @@ describe('an unfit unit, and the way back', () => {
     id = await begin('04z', 'LID-04.Z', 'encoder fault')
     await open().getByRole('radio', { name: /^Another serial/ }).check()
     await open().getByLabel('Serial of the new unit').fill('XK-1')
-    await open().getByLabel('Model').fill('XK-200')
+    await open().getByRole('combobox', { name: 'Model' }).fill('XK-200')
     await button('Take XK-1').click()
     await open().getByText('does not fit.').waitFor()
     const go = button(/^go on with XK-1$|^Hold: go on with XK-1$/)

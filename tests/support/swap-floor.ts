@@ -1,3 +1,5 @@
+import { plantFile } from '../../scripts/demo-files'
+import type { Nameplate } from '../../shared/settings/nameplate'
 import { writeJson } from '../../shared/settings/write-json'
 import type { SwapKit } from '../../shared/api/swaps'
 import { schemaName, type Content, type SettingsFile } from '../../shared/settings/types'
@@ -12,16 +14,18 @@ export interface SwapPlant extends ServerPlant {
   readonly spare: (serial: string, model?: string) => Promise<number>
 }
 
-const plates = [
-  { model: 'HL40-200V', axisKind: 'linear', stroke: 200, hardMargin: 1, maxSpeed: 500, ratedThrust: 640, peakThrust: 1600, maxMoves: 64, brakeFitted: true, pressForceMin: 10, pressForceMax: 100 },
-  { model: 'HL50-200V', axisKind: 'linear', stroke: 200, hardMargin: 1, maxSpeed: 500, ratedThrust: 800, peakThrust: 2000, maxMoves: 64, brakeFitted: true, pressForceMin: 10, pressForceMax: 100 },
-  { model: 'HL25-100', axisKind: 'linear', stroke: 100, maxSpeed: 500, ratedThrust: 640, peakThrust: 1600, brakeFitted: true },
-]
+/** Of the demo plant; the third is the first with half its stroke. */
+const plateOf = (model: string): Nameplate => {
+  const found = plantFile().nameplates.find(plate => plate.model === model)
+  if (!found) throw new Error(`The demo plant has no ${model}.`)
+  return { maxOverloadTime: 1000, ...found }
+}
+const plates = () => [plateOf('HL40-200V'), plateOf('HL50-200V'), { ...plateOf('HL40-200V'), model: 'HL25-100', stroke: 100 }]
 
 /** The invented plant with nameplates of three models, for tests that swap units. */
 export async function swapPlantOn(server: TestServer): Promise<SwapPlant> {
   const plant = await plantOn(server)
-  for (const plate of plates) await plant.post('/api/nameplates', plate)
+  for (const plate of plates()) await plant.post('/api/nameplates', plate)
   return {
     ...plant,
     known: async (tag, serial) => {

@@ -33,7 +33,7 @@ export function playSwap(vault: Vault, cast: Cast, axisId: number, act: SwapAct,
   makeSafe(vault, technician, id, { confirmed: true, blocked: act.blocked })
   const file = (): FileJson => {
     const { content, unit } = readSwapKit(vault, id)
-    return { schema: 'witnessmark.axis-settings/1', ...content, setup: { ...content.setup, ...act.taught }, unit: unit as Record<string, string>, exportedAt: new Date(now - minute).toISOString(), moves: content.moves as unknown as FileJson['moves'] }
+    return { schema: 'witnessmark.axis-settings/1', ...content, setup: { ...content.setup, ...act.taught }, unit: unit as unknown as Record<string, string>, exportedAt: new Date(now - minute).toISOString(), moves: content.moves as unknown as FileJson['moves'] }
   }
   const readBack = (): number => {
     later(9 * minute)

@@ -109,11 +109,13 @@ describe('papers', () => {
   }
 
   it('the restore sheet comes as PDF with its fonts, from the built server', async () => {
+    // Both are fetched before the programs read them: while those run, the server closes an idle connection.
     const { status, headers, bytes } = await kit('pdf')
+    const letter = (await kit('pdf', { paper: 'Letter' })).bytes
     expect([status, headers.get('content-type'), headers.get('witnessmark-released')]).toEqual([200, 'application/pdf', 'no'])
     expect(pdfText(bytes)).toContain('LID-02.Z')
     expect(qrOf(bytes)).toBe('https://marks.example/axes/LID-02.Z')
-    expect(pageSizes((await kit('pdf', { paper: 'Letter' })).bytes)[0]?.map(Math.round)).toEqual([612, 792])
+    expect(pageSizes(letter)[0]?.map(Math.round)).toEqual([612, 792])
   })
 
   it('the ZIP of a kit is logged and opened by unzip, and not made with cautions unread', async () => {

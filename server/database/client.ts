@@ -6,6 +6,7 @@ import { entryActor, type Actor } from './actor'
 import { steadyClock } from './clock'
 import type { Instant } from './columns'
 import { lockFolder } from './lock'
+import { catchUpNodes } from './log/nodes'
 import { appendEntry, newestInstant, type NewEntry } from './log/queries'
 import { migrate } from './migrate'
 import { assertSqliteVersion, setPragmas } from './pragmas'
@@ -67,6 +68,7 @@ function opened(sqlite: Database.Database, folder: string, options: VaultOptions
   const clock = options.clock ?? Date.now
   const schemaNumber = migrate(sqlite, new Date(clock()).toISOString())
   const db = drizzle(sqlite, { schema })
+  sqlite.transaction(() => { catchUpNodes(db) }).immediate()
   const now = steadyClock(clock, newestInstant(db))
   return {
     db, sqlite, folder, now,

@@ -10,6 +10,7 @@ import { firstStart } from '#server/services/people/first-start'
 import { makeLogger } from '#server/services/start/logger'
 import { publicOriginOf } from '#server/services/start/public-origin'
 import { sessionSecret } from '#server/services/start/secret'
+import { keepTrail } from '#server/services/trail/daily'
 
 /** Opens the vault before the first request; where it must not run, the process ends with one plain line. */
 export default defineNitroPlugin((nitroApp) => {
@@ -19,7 +20,9 @@ export default defineNitroPlugin((nitroApp) => {
     nitroApp.hooks.hook('request', (event) => { event.context.server = server })
     const letters = startLetters(server)
     const folders = startFolders(server)
+    const endTrail = keepTrail(server.vault, logger)
     nitroApp.hooks.hook('close', async () => {
+      endTrail()
       await letters.stop()
       await folders.stop()
       server.vault.close()

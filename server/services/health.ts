@@ -3,14 +3,15 @@ import type { z } from 'zod'
 import type { healthSchema } from '#shared/api/board'
 import type { Vault } from '#server/database/client'
 import { readQueue } from './letters/letters'
+import { isVerified } from './trail/verification'
 
 /** With less free than this the next upload may find the disk full. */
 const leastFree = 32 * 1024 * 1024
 
-/** Whether the vault answers and could be written; nothing is written to find out. */
+/** Whether the vault answers, could be written, and was found sound within the last day; nothing is written to find out. */
 export function health(vault: Vault): z.infer<typeof healthSchema> {
-  const writable = isWritable(vault)
-  return { status: writable ? 'ok' : 'failing', schema: vault.schema, writable, lettersWaitingSince: readQueue(vault).waitingSince }
+  const [writable, verified] = [isWritable(vault), isVerified(vault)]
+  return { status: writable && verified ? 'ok' : 'failing', schema: vault.schema, writable, verified, lettersWaitingSince: readQueue(vault).waitingSince }
 }
 
 function isWritable({ sqlite, folder }: Vault): boolean {

@@ -24,4 +24,8 @@ export const boardAnswer = z.object({ asOf: instantSchema, plant: z.string(), ax
 export type Board = z.infer<typeof boardAnswer>
 
 export const logEntrySchema = z.object({ seq: z.int(), leaf: z.string().describe('the very string that is hashed'), hash: z.string().describe('SHA-256 of 0x00 and the leaf, lower-case hex') })
-export const healthSchema = z.object({ status: z.enum(['ok', 'failing']), schema: z.int(), writable: z.boolean(), lettersWaitingSince: instantSchema.nullable().describe('when the oldest letter that has not left was written') })
+export const healthSchema = z.object({
+  status: z.enum(['ok', 'failing']), schema: z.int(), writable: z.boolean(),
+  verified: z.boolean().describe('the last verification found the vault sound, and is not older than 26 h'),
+  lettersWaitingSince: instantSchema.nullable().describe('when the oldest letter that has not left was written'),
+})

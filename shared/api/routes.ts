@@ -11,6 +11,7 @@ import * as lineFolders from './line-folders'
 import * as people from './people'
 import * as places from './places'
 import * as swaps from './swaps'
+import * as trail from './trail'
 import * as uploads from './uploads'
 import * as values from './values'
 import * as versions from './versions'
@@ -45,6 +46,7 @@ const all = [...roles] as const
 const uploaders = ['technician', 'planner'] as const
 const planner = ['planner'] as const
 const admin = ['admin'] as const
+const trailReaders = ['planner', 'auditor', 'admin'] as const
 const none = z.object({})
 
 export const routes = {
@@ -170,7 +172,13 @@ export const routes = {
   'POST /api/swaps/:id/put-back': { may: uploaders, scope: 'swap', params: idParams, body: swaps.putBackBody, answers: { 200: swaps.swapSchema }, says: 'The old unit goes back in; the same swap goes on.' },
 
   'GET /api/board': { may: all, token: 'read', answers: { 200: board.boardAnswer }, says: 'Every axis with its state, and what needs someone.' },
-  'GET /api/log': { may: ['planner', 'auditor', 'admin'], token: 'read', query: listQuery, answers: { 200: pageOf(board.logEntrySchema) }, says: 'The log, entry by entry; only without site bounds.' },
+  'GET /api/log': { may: trailReaders, token: 'read', query: listQuery, answers: { 200: pageOf(board.logEntrySchema) }, says: 'The log, entry by entry; only without site bounds.' },
+  'GET /api/log/key': { may: trailReaders, token: 'read', answers: { 200: trail.keyAnswer }, says: 'The public key that checkpoints are signed with.' },
+  'GET /api/log/checkpoint': { may: trailReaders, token: 'read', answers: { 200: 'file' }, says: 'How long the log is now and what its root is, as a signed note.' },
+  'GET /api/log/proof': { may: trailReaders, token: 'read', query: trail.proofQuery, answers: { 200: trail.proofAnswer }, says: 'That an entry is in the log of a size.' },
+  'GET /api/log/consistency': { may: trailReaders, token: 'read', query: trail.consistencyQuery, answers: { 200: trail.consistencyAnswer }, says: 'That the log of a later size begins with that of an earlier one.' },
+  'GET /api/trail': { may: trailReaders, answers: { 200: trail.trailState }, says: 'How long the log is, and what the verifications found.' },
+  'POST /api/trail/verifications': { may: ['auditor', 'admin'], answers: { 201: trail.verificationSchema }, says: 'Recomputes the whole vault now and keeps what it found.' },
 } as const satisfies Readonly<Record<string, RouteDeclaration>>
 
 export type RouteName = keyof typeof routes

@@ -61,6 +61,8 @@ export const acts = {
   'swap-step': 'swap-step',
   'read-back-received': 'read-back',
   'firmware-gap-accepted': 'firmware-gap',
+  'checkpoint-taken': 'checkpoint',
+  'vault-verified': 'verification',
 } as const
 
 export type Act = keyof typeof acts

@@ -37,7 +37,10 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     INSERT INTO swap VALUES (1, 1, ${axisId}, 'unit', 'dead', NULL, 'unit-in', ${unitId}, NULL, 0, NULL, 1, 1, '{}', '${at}', ${by}, '${at}', NULL);
     INSERT INTO swap_step VALUES (1, 1, 1, 'opened', '${at}', ${by}, 'opened', '{}');
     INSERT INTO read_back VALUES (1, 1, 1, 1, 1, '${hash('e')}', NULL, 'serial', 'd', NULL, NULL, NULL, 0, '${at}', ${by});
-    INSERT INTO firmware_gap VALUES (1, 'HL40-200V', '2.4', 'jerk', 1, '${at}', ${by}, NULL, 'r');`)
+    INSERT INTO firmware_gap VALUES (1, 'HL40-200V', '2.4', 'jerk', 1, '${at}', ${by}, NULL, 'r');
+    INSERT INTO log_node VALUES (8, 0, zeroblob(32));
+    INSERT INTO checkpoint VALUES (1, 0, 'note', '${at}');
+    INSERT INTO verification VALUES (1, '${at}', '${at}', 'sound', 0, 0, '[]', 0);`)
   return {
     nameplate_revision: { where: 'id = 1', column: 'nameplate' }, rule: { where: 'id = 1', column: 'reason' }, rule_end: { where: 'rule_id = 1', column: 'reason' },
     waiver: { where: 'id = 1', column: 'reason' }, waiver_end: { where: 'waiver_id = 1', column: 'reason' },
@@ -49,5 +52,6 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     finding: { where: 'id = 1', column: 'title' }, finding_version: { where: 'id = 1', column: 'says' }, finding_act: { where: 'id = 1', column: 'text' },
     planned_change: { where: 'id = 1', column: 'reason' }, planned_change_end: { where: 'planned_change_id = 1', column: 'reason' },
     swap_step: { where: 'id = 1', column: 'text' }, read_back: { where: 'id = 1', column: 'detail' }, firmware_gap: { where: 'id = 1', column: 'reason' },
+    log_node: { where: 'level = 8', column: 'place' }, checkpoint: { where: 'id = 1', column: 'note' }, verification: { where: 'id = 1', column: 'faults' },
   }
 }

@@ -29,7 +29,7 @@ export interface StoredJudgement {
   readonly results: CheckResult[]
 }
 
-export function countByLevel(results: readonly CheckResult[]): Record<Level, number> {
+export function countByLevel(results: readonly Pick<CheckResult, 'level'>[]): Record<Level, number> {
   const counts: Record<Level, number> = { stop: 0, warn: 0, note: 0, unknown: 0 }
   for (const { level } of results) counts[level] += 1
   return counts

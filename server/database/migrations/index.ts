@@ -5,6 +5,7 @@ import { controllerScanStep } from './0004-controller-scan'
 import { papersStep } from './0005-papers'
 import { findingsStep } from './0006-findings'
 import { swapsStep } from './0007-swaps'
+import { trailStep } from './0008-trail'
 
 export interface Migration { readonly number: number, readonly name: string, readonly sql: string }
 
@@ -16,6 +17,7 @@ const steps: readonly Omit<Migration, 'number'>[] = [
   papersStep,
   findingsStep,
   swapsStep,
+  trailStep,
 ]
 
 /** In order, numbered without gaps from 1. Text, not files, so that they reach the built server and the tests alike. */

@@ -4,7 +4,7 @@ import { prepared } from '../prepared'
 import { setting } from './table'
 
 /** Everything that is set for the whole vault. */
-export type SettingKey = 'plant'
+export type SettingKey = 'plant' | 'trail-key'
 export type SettingValue = typeof setting.$inferSelect['value']
 
 const queries = prepared(db => ({ byKey: db.select().from(setting).where(eq(setting.key, sql.placeholder('key'))).prepare() }))

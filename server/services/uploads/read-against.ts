@@ -39,7 +39,8 @@ export function readAgainst(db: VaultDb, place: AxisPlace, unit: UnitRow): ReadA
   }
 }
 
-function ruleOf({ id, scope, field, min, max, fixed, reason }: { id: number, scope: SiteRule['scope'], field: string, min: number | null, max: number | null, fixed: number | string | boolean | null, reason: string }): SiteRule {
+/** A kept rule as the judge takes it. */
+export function ruleOf({ id, scope, field, min, max, fixed, reason }: { id: number, scope: SiteRule['scope'], field: string, min: number | null, max: number | null, fixed: number | string | boolean | null, reason: string }): SiteRule {
   return { id, scope, field, reason, ...(min === null ? {} : { min }), ...(max === null ? {} : { max }), ...(fixed === null ? {} : { fixed }) }
 }
 

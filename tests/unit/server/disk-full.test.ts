@@ -48,7 +48,7 @@ describe('on a full disk', () => {
 
 describe('health', () => {
   it('is failing where the vault cannot be written', () => {
-    expect(health(vault)).toEqual({ status: 'ok', schema: vault.schema, writable: true, lettersWaitingSince: null })
+    expect(health(vault)).toEqual({ status: 'ok', verified: true, schema: vault.schema, writable: true, lettersWaitingSince: null })
     const gone = { ...vault, folder: `${vault.folder}/gone` }
     expect(health(gone)).toMatchObject({ status: 'failing', writable: false })
   })

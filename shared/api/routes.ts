@@ -3,6 +3,7 @@ import * as attachments from './attachments'
 import * as board from './board'
 import { axisParams, created, idParams, listQuery, pageOf, roles, type Role } from './common'
 import * as findings from './findings'
+import * as history from './history'
 import * as judging from './judging'
 import * as letters from './letters'
 import * as neighbours from './neighbours'
@@ -170,6 +171,10 @@ export const routes = {
   'POST /api/swaps/:id/release': { may: planner, scope: 'swap', sign: true, params: idParams, body: swaps.releaseBody, answers: { 200: swaps.swapSchema }, says: 'Released, and the mark carries over where the values are the same; signed, by another than who read back.' },
   'POST /api/swaps/:id/abandon': { may: uploaders, scope: 'swap', params: idParams, body: swaps.abandonBody, answers: { 200: swaps.swapSchema }, says: 'Ends the swap without a release, and says which unit is truly fitted.' },
   'POST /api/swaps/:id/put-back': { may: uploaders, scope: 'swap', params: idParams, body: swaps.putBackBody, answers: { 200: swaps.swapSchema }, says: 'The old unit goes back in; the same swap goes on.' },
+
+  'GET /api/history': { may: all, token: 'read', query: history.historyQuery, answers: { 200: history.historyPage }, says: 'Who changed what, when, from what to what, why and allowed by whom, newest first.' },
+  'GET /api/history/acts': { may: ['planner', 'auditor', 'admin'], token: 'read', query: history.actsQuery, answers: { 200: history.actsPage }, says: 'Who changed sites and what they watch, nameplates, rules, roles and marks, newest first.' },
+  'GET /api/history/not-read': { may: all, token: 'read', query: history.notReadQuery, answers: { 200: history.notReadPage }, says: 'Axes that no file came from in a stretch of time.' },
 
   'GET /api/board': { may: all, token: 'read', answers: { 200: board.boardAnswer }, says: 'Every axis with its state, and what needs someone.' },
   'GET /api/log': { may: trailReaders, token: 'read', query: listQuery, answers: { 200: pageOf(board.logEntrySchema) }, says: 'The log, entry by entry; only without site bounds.' },

@@ -6,6 +6,7 @@ import { papersStep } from './0005-papers'
 import { findingsStep } from './0006-findings'
 import { swapsStep } from './0007-swaps'
 import { trailStep } from './0008-trail'
+import { historyStep } from './0008-history'
 
 export interface Migration { readonly number: number, readonly name: string, readonly sql: string }
 
@@ -18,6 +19,7 @@ const steps: readonly Omit<Migration, 'number'>[] = [
   findingsStep,
   swapsStep,
   trailStep,
+  historyStep,
 ]
 
 /** In order, numbered without gaps from 1. Text, not files, so that they reach the built server and the tests alike. */

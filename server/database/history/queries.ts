@@ -1,0 +1,53 @@
+import { and, asc, desc, eq, getTableColumns, gt, gte, lt, lte, notExists, sql } from 'drizzle-orm'
+import { alias } from 'drizzle-orm/sqlite-core'
+import { axis } from '../axis/table'
+import { axisState } from '../axis-state/table'
+import { ifGiven, inBounds } from '../bounds'
+import { change } from '../change/table'
+import { finding, findingState, findingVersion } from '../finding/table'
+import { line } from '../line/table'
+import { machine } from '../machine/table'
+import { person } from '../person/table'
+import { prepared } from '../prepared'
+import { sighting } from '../sighting/table'
+import { site } from '../site/table'
+import { token } from '../token/table'
+import { unit } from '../unit/table'
+import { version, versionVoid } from '../version/table'
+
+const place = sql.placeholder
+const base = alias(version, 'base')
+const { file: _, ...columns } = getTableColumns(version)
+
+export const historyQueries = prepared(db => ({
+  /** One change by its key, with all that its line says. */
+  item: db.select({
+    change, version: columns, tag: axis.tag, serial: unit.serial, storer: person.name, token: token.name, timeZone: site.timeZone,
+    base: { id: base.id, number: base.number, orderAt: base.orderAt }, voidAt: versionVoid.at,
+    findingId: sql<number | null>`(SELECT ${findingVersion.findingId} FROM ${findingVersion} INNER JOIN ${finding} ON ${finding.id} = ${findingVersion.findingId}
+      WHERE ${findingVersion.versionId} = ${version.id} AND ${finding.cause} = 'watched-change' AND ${change.watched} = 1 LIMIT 1)`,
+  }).from(change)
+    .innerJoin(version, eq(version.id, change.versionId)).innerJoin(axis, eq(axis.id, version.axisId)).innerJoin(machine, eq(machine.id, axis.machineId))
+    .innerJoin(line, eq(line.id, machine.lineId)).innerJoin(site, eq(site.id, line.siteId)).innerJoin(unit, eq(unit.id, version.unitId))
+    .innerJoin(person, eq(person.id, version.storedBy)).leftJoin(token, eq(token.id, version.storedByToken))
+    .leftJoin(base, eq(base.id, version.baseId)).leftJoin(versionVoid, eq(versionVoid.versionId, version.id))
+    .where(and(eq(change.versionId, place('versionId')), eq(change.seq, place('seq')))).prepare(),
+  findingState: db.select({ state: findingState.state }).from(findingState).where(eq(findingState.findingId, place('id'))).prepare(),
+  /** The versions of a stretch of time are a stretch of ids, since received-at never goes back. */
+  firstFrom: db.select({ id: version.id }).from(version).where(gte(version.receivedAt, place('from'))).orderBy(asc(version.receivedAt), asc(version.id)).limit(1).prepare(),
+  lastBefore: db.select({ id: version.id }).from(version).where(lt(version.receivedAt, place('to'))).orderBy(desc(version.receivedAt), desc(version.id)).limit(1).prepare(),
+  newest: db.select({ id: version.id }).from(version).orderBy(desc(version.id)).limit(1).prepare(),
+  axesOfMachine: db.select({ id: axis.id }).from(axis).where(eq(axis.machineId, place('machineId'))).orderBy(asc(axis.id)).prepare(),
+  peopleNamed: db.select({ id: person.id }).from(person).where(sql`${person.name} = ${place('name')} COLLATE NOCASE`).prepare(),
+  /** Axes of which no file came between two instants, by id from after one. */
+  notRead: db.select({ axis, machine: machine.name, line: line.name, site: site.name, timeZone: site.timeZone, status: axisState.status, lastUploadAt: axisState.lastUploadAt })
+    .from(axis).innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId)).innerJoin(site, eq(site.id, line.siteId))
+    .leftJoin(axisState, eq(axisState.axisId, axis.id))
+    .where(and(
+      gt(axis.id, place('after')), inBounds(site.id), ifGiven(axis.id, 'axisId'), ifGiven(machine.id, 'machineId'), ifGiven(line.id, 'lineId'), ifGiven(site.id, 'siteId'),
+      notExists(db.select({ id: version.id }).from(version).where(and(eq(version.axisId, axis.id), gte(version.id, place('first')), lte(version.id, place('last'))))),
+      notExists(db.select({ id: sighting.id }).from(sighting).where(and(eq(sighting.axisId, axis.id), gte(sighting.receivedAt, place('from')), lt(sighting.receivedAt, place('to'))))),
+    )).orderBy(asc(axis.id)).limit(place('limit')).prepare(),
+}))
+
+export type HistoryRow = NonNullable<ReturnType<ReturnType<typeof historyQueries>['item']['get']>>

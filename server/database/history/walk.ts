@@ -1,0 +1,127 @@
+import type Database from 'better-sqlite3'
+import type { Weight } from '#shared/settings/types'
+
+/*
+ * Walks over the changes of the vault, newest first: keys only, chunk by chunk, along one index that ends in the key of `change`.
+ * What else is asked for is looked up beside each key, so that no walk ever sorts. The plain join of all tables would walk every
+ * axis and sort instead.
+ */
+
+/** A field wherever it stands: its section and its name in the format. */
+export interface NamedField { readonly section: string, readonly field: string }
+
+/** The key of a change. */
+export interface ChangeKey { readonly versionId: number, readonly seq: number }
+export interface Walked extends ChangeKey { readonly hit: boolean }
+
+/** What one walk follows. `nobody`: versions that name nobody who changed them. */
+export type Way =
+  | ({ readonly by: 'field' } & NamedField)
+  | { readonly by: 'weight', readonly weight: Weight }
+  | { readonly by: 'axis' | 'unit' | 'storer', readonly id: number }
+  | { readonly by: 'changer', readonly text: string }
+  | { readonly by: 'nobody' }
+  | { readonly by: 'all' }
+
+/** What is looked up beside each key; null asks nothing. */
+export interface Asked {
+  readonly names: readonly NamedField[] | null
+  readonly section: string | null
+  readonly row: number | null
+  readonly weight: Weight | null
+  readonly axisIds: readonly number[] | null
+  readonly unitId: number | null
+  readonly lineId: number | null
+  readonly siteId: number | null
+  /** Sites that the actor sees. */
+  readonly sites: readonly number[] | null
+  /** Who changed or stored it: ids of people, and the texts that name them. */
+  readonly people: { readonly ids: readonly number[], readonly texts: readonly string[] } | null
+  readonly nobody: boolean
+}
+
+/** Versions of a stretch of the vault's own order, both included. */
+export interface Stretch { readonly first: number, readonly last: number }
+
+interface Condition { readonly sql: string, readonly needs: readonly Table[] }
+type Table = 'change' | 'version' | 'axis' | 'machine' | 'line'
+
+const among = (column: string, name: string) => `${column} IN (SELECT value FROM json_each(:${name}))`
+
+function conditionsOf(asked: Asked): Condition[] {
+  const given = (value: unknown, sql: string, ...needs: Table[]): Condition[] => (value === null || value === false ? [] : [{ sql, needs }])
+  return [
+    ...given(asked.names, among(`c.section || '.' || c.field`, 'names'), 'change'),
+    ...given(asked.section, 'c.section = :section', 'change'),
+    ...given(asked.row, 'c.row = :row', 'change'),
+    ...given(asked.weight, 'c.weight = :weight', 'change'),
+    ...given(asked.axisIds, among('v.axis_id', 'axisIds'), 'version'),
+    ...given(asked.unitId, 'v.unit_id = :unitId', 'version'),
+    ...given(asked.people, `(${among('v.stored_by', 'peopleIds')} OR ${among('v.changed_by', 'peopleTexts')})`, 'version'),
+    ...given(asked.nobody, 'v.changed_by IS NULL', 'version'),
+    ...given(asked.lineId, 'm.line_id = :lineId', 'version', 'axis', 'machine'),
+    ...given(asked.siteId, 'l.site_id = :siteId', 'version', 'axis', 'machine', 'line'),
+    ...given(asked.sites, among('l.site_id', 'sites'), 'version', 'axis', 'machine', 'line'),
+  ]
+}
+
+const joins: Readonly<Record<Table, string>> = {
+  change: 'CROSS JOIN change c ON c.version_id = w.version_id AND c.seq = w.seq',
+  version: 'CROSS JOIN version v ON v.id = w.version_id',
+  axis: 'CROSS JOIN axis a ON a.id = v.axis_id',
+  machine: 'CROSS JOIN machine m ON m.id = a.machine_id',
+  line: 'CROSS JOIN line l ON l.id = m.line_id',
+}
+
+const alongChange = (where: string) => `SELECT version_id, seq FROM change WHERE ${where} version_id >= :first AND (version_id, seq) < (:versionId, :seq) ORDER BY version_id DESC, seq DESC LIMIT :chunk`
+const alongVersion = (where: string) => `SELECT c.version_id, c.seq FROM version v CROSS JOIN change c ON c.version_id = v.id
+  WHERE ${where} AND v.id BETWEEN :first AND :versionId AND (v.id < :versionId OR c.seq < :seq) ORDER BY v.id DESC, c.seq DESC LIMIT :chunk`
+
+const ways: Readonly<Record<Way['by'], string>> = {
+  field: alongChange('section = :waySection AND field = :wayField AND'),
+  weight: alongChange('weight = :wayWeight AND'),
+  all: alongChange(''),
+  axis: alongVersion('v.axis_id = :wayId'),
+  unit: alongVersion('v.unit_id = :wayId'),
+  storer: alongVersion('v.stored_by = :wayId'),
+  changer: alongVersion('v.changed_by = :wayText'),
+  nobody: alongVersion('v.changed_by IS NULL'),
+}
+
+/** The statement of a walk along `way`, with what is asked beside it. */
+export function walkSql(way: Way['by'], asked: Asked): string {
+  const conditions = conditionsOf(asked)
+  const needed = (Object.keys(joins) as Table[]).filter(table => conditions.some(({ needs }) => needs.includes(table)))
+  const hit = conditions.length === 0 ? '1' : conditions.map(({ sql }) => `ifnull(${sql}, 0)`).join(' AND ')
+  return `SELECT w.version_id AS versionId, w.seq AS seq, ${hit} AS hit FROM (${ways[way]}) w ${needed.map(table => joins[table]).join(' ')}`
+}
+
+/** Every name that any of the statements has; those that one does not have are left out by the caller of `prepare`. */
+export function walkValues(way: Way, asked: Asked): Record<string, string | number | null> {
+  const list = (values: readonly unknown[] | null | undefined) => (values ? JSON.stringify(values) : null)
+  return {
+    waySection: way.by === 'field' ? way.section : null, wayField: way.by === 'field' ? way.field : null,
+    wayWeight: way.by === 'weight' ? way.weight : null, wayId: 'id' in way ? way.id : null, wayText: way.by === 'changer' ? way.text : null,
+    names: list(asked.names?.map(({ section, field }) => `${section}.${field}`)), section: asked.section, row: asked.row, weight: asked.weight,
+    axisIds: list(asked.axisIds), unitId: asked.unitId, lineId: asked.lineId, siteId: asked.siteId, sites: list(asked.sites),
+    peopleIds: list(asked.people?.ids), peopleTexts: list(asked.people?.texts),
+  }
+}
+
+const statements = new WeakMap<Database.Database, Map<string, Database.Statement>>()
+
+function statementOf(sqlite: Database.Database, sql: string): Database.Statement {
+  const made = statements.get(sqlite) ?? new Map<string, Database.Statement>()
+  statements.set(sqlite, made)
+  const statement = made.get(sql) ?? sqlite.prepare(sql)
+  made.set(sql, statement)
+  return statement
+}
+
+/** The next keys along a way below a key, newest first; fewer than `chunk` where the way ends. */
+export function walkOn(sqlite: Database.Database, way: Way, asked: Asked, { first }: Stretch, below: ChangeKey, chunk: number): Walked[] {
+  const rows = statementOf(sqlite, walkSql(way.by, asked)).all({ ...walkValues(way, asked), first, versionId: below.versionId, seq: below.seq, chunk }) as { versionId: number, seq: number, hit: number }[]
+  return rows.map(({ versionId, seq, hit }) => ({ versionId, seq, hit: hit === 1 })).sort(newestFirst)
+}
+
+export const newestFirst = (a: ChangeKey, b: ChangeKey): number => b.versionId - a.versionId || b.seq - a.seq

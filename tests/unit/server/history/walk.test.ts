@@ -1,0 +1,126 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import type { PersonActor } from '../../../../server/database/actor'
+import { historyQueries } from '../../../../server/database/history/queries'
+import { termQueries } from '../../../../server/database/history/terms'
+import { walkSql, walkValues, type Asked, type Way } from '../../../../server/database/history/walk'
+import { historyFilter } from '../../../../server/services/history/filter'
+import { findKeys, mostEntries } from '../../../../server/services/history/merge'
+import { iso, openPlant, start, type Plant } from '../../../support/vault-plant'
+
+let plant: Plant
+let ines: PersonActor
+
+/** 30,000 versions of 400 axes with three changes each, and statistics as ANALYZE makes them. */
+beforeAll(() => {
+  plant = openPlant()
+  ines = plant.person('Ines Morel', ['auditor'])
+  const { sqlite } = plant.vault
+  sqlite.pragma('foreign_keys = OFF')
+  const upTo = (most: number) => `WITH RECURSIVE n(i) AS (SELECT 1 UNION ALL SELECT i + 1 FROM n WHERE i < ${most})`
+  const at = `strftime('%Y-%m-%dT%H:%M:%fZ', '2025-01-01', '+' || i || ' minutes')`
+  sqlite.exec(`
+    ${upTo(60)} INSERT INTO person (name, email, roles, site_ids, made_at) SELECT 'P', 'p' || i || '@larkfield.example', '[]', '[]', ${at} FROM n;
+    ${upTo(5)} INSERT INTO site (name, time_zone, made_at) SELECT 'Site ' || i, 'UTC', ${at} FROM n;
+    ${upTo(20)} INSERT INTO line (site_id, name, made_at) SELECT i % 6 + 1, 'Line ' || i, ${at} FROM n;
+    ${upTo(80)} INSERT INTO machine (line_id, name, made_at) SELECT i % 20 + 1, 'Machine ' || i, ${at} FROM n;
+    ${upTo(400)} INSERT INTO axis (machine_id, tag, axis_kind, made_at) SELECT i % 80 + 1, 'A-' || i, 'linear', ${at} FROM n;
+    ${upTo(400)} INSERT INTO unit (serial, model, state, made_at) SELECT 'S-' || i, 'M-1', 'fitted', ${at} FROM n;
+    ${upTo(30000)} INSERT INTO version (axis_id, number, unit_id, upload_id, content_id, occasion, captured_at, received_at, changed_by, stored_by, engine, copy_hash, scribe_code, model, harm, motion, text, file)
+      SELECT i % 400 + 1, i / 400 + 1, i % 400 + 1, 1, i, 'routine', ${at}, ${at}, CASE i % 3 WHEN 0 THEN 'person:1' END, 1, 'e', 'c', 's', 'M-1', 0, 0, 0, '{}' FROM n;
+    ${upTo(90000)} INSERT INTO change (version_id, seq, section, field, at, weight, watched)
+      SELECT (i - 1) / 3 + 1, i % 3, 'setup', CASE i % 10 WHEN 0 THEN 'thrustLimit' ELSE 'field' || (i % 40) END, '/', CASE i % 2 WHEN 0 THEN 'harm' ELSE 'motion' END, 1 FROM n;
+    ${upTo(2000)} INSERT INTO log (seq, leaf) SELECT i - 1, json_object('subject', json_object('kind', CASE i % 20 WHEN 0 THEN 'site' ELSE 'version' END, 'id', i), 'at', ${at}) FROM n;
+    ANALYZE;`)
+})
+afterAll(() => plant.close())
+
+const nothing: Asked = { names: null, section: null, row: null, weight: null, axisIds: null, unitId: null, lineId: null, siteId: null, sites: null, people: null, nobody: false }
+const everything: Asked = { names: [{ section: 'setup', field: 'thrustLimit' }], section: 'setup', row: 1, weight: 'harm', axisIds: [1], unitId: 1, lineId: 1, siteId: 1, sites: [1], people: { ids: [1], texts: ['x'] }, nobody: true }
+const ways: Way[] = [
+  { by: 'field', section: 'setup', field: 'thrustLimit' }, { by: 'weight', weight: 'harm' }, { by: 'axis', id: 1 }, { by: 'unit', id: 1 }, { by: 'storer', id: 1 },
+  { by: 'changer', text: 'person:1' }, { by: 'nobody' }, { by: 'all' },
+]
+const plan = (sql: string, values: unknown) => (plant.vault.sqlite.prepare(`EXPLAIN QUERY PLAN ${sql}`).all(values as object) as { detail: string }[]).map(({ detail }) => detail)
+/** The keys that were read are walked as they come; a list handed in as JSON is no table. The primary key itself is walked for everything. */
+const slow = (lines: string[], all = false) => lines.filter(line => line.startsWith('USE TEMP B-TREE') || /^SCAN (?!w$|json_each)/.test(line)).filter(line => !(all && line.includes('SCAN change')))
+
+describe('walks on a fleet', () => {
+  it.each(ways.flatMap(way => [[way.by, way, nothing], [`${way.by}, with all that can be asked`, way, everything]] as const))('%s: walks an index and sorts nothing', (_name, way, asked) => {
+    const lines = plan(walkSql(way.by, asked), { ...walkValues(way, asked), first: 1, versionId: 20000, seq: 1, chunk: 64 })
+    expect(slow(lines)).toEqual([])
+    expect(lines.length).toBeGreaterThan(0)
+  })
+
+  it.each(['item', 'firstFrom', 'lastBefore', 'newest', 'axesOfMachine', 'notRead', 'findingState'] as const)('%s: looks up, and sorts nothing', (name) => {
+    const { sql, params } = (historyQueries(plant.vault.db)[name] as unknown as { getQuery: () => { sql: string, params: unknown[] } }).getQuery()
+    const lines = plan(sql, params.map(param => (typeof param === 'object' ? 1 : param)))
+    expect(slow(lines).filter(line => !(name === 'newest' && line === 'SCAN version'))).toEqual([])
+  })
+
+  it.each(['ofKind', 'before', 'at', 'revision', 'markBefore', 'versionNumber'] as const)('%s of the log: looks up, and sorts nothing', (name) => {
+    const { sql, params } = (termQueries(plant.vault.db)[name] as unknown as { getQuery: () => { sql: string, params: unknown[] } }).getQuery()
+    const lines = plan(sql, params.map(param => (typeof param === 'object' ? 1 : param)))
+    expect(slow(lines)).toEqual([])
+    if (name === 'ofKind' || name === 'before') expect(lines.join()).toContain('log_terms')
+  })
+})
+
+describe('what one request reads', () => {
+  const { first, last } = { first: 1, last: 30000 }
+  const start0 = { versionId: last + 1, seq: 0 }
+
+  it('ends at its bound with a short page that goes on; going on finds the rest', () => {
+    const asked = { ...nothing, lineId: 3, row: 7 }
+    const found = findKeys(plant.vault.sqlite, [{ by: 'all' }], asked, { first, last }, start0, 50)
+    expect(found.keys).toEqual([])
+    expect(found.next).not.toBeNull()
+    const read = 90000 - (found.next!.versionId - 1) * 3
+    expect(read).toBeGreaterThan(mostEntries - 1024)
+    expect(read).toBeLessThanOrEqual(mostEntries + 1024)
+    let next = found.next
+    let pages = 1
+    while (next !== null) {
+      const page = findKeys(plant.vault.sqlite, [{ by: 'all' }], asked, { first, last }, next, 50)
+      next = page.next
+      pages += 1
+    }
+    expect(pages).toBe(5)
+  })
+
+  it('law: the same keys come whichever way is walked', () => {
+    const { sqlite } = plant.vault
+    const asked: Asked = { ...nothing, names: [{ section: 'setup', field: 'thrustLimit' }], axisIds: [5, 9], weight: 'harm' }
+    const through = (along: Way[]) => {
+      const keys = []
+      for (let after: { versionId: number, seq: number } | null = start0; after !== null;) {
+        const page = findKeys(sqlite, along, asked, { first: 1000, last }, after, 7)
+        keys.push(...page.keys)
+        after = page.next
+      }
+      return keys
+    }
+    const expected = sqlite.prepare(`SELECT c.version_id AS versionId, c.seq FROM change c JOIN version v ON v.id = c.version_id WHERE c.field = 'thrustLimit' AND c.weight = 'harm' AND v.axis_id IN (5, 9) AND v.id >= 1000 ORDER BY 1 DESC, 2 DESC`).all()
+    expect(expected.length).toBeGreaterThan(5)
+    for (const along of [[{ by: 'axis', id: 5 }, { by: 'axis', id: 9 }], [{ by: 'field', section: 'setup', field: 'thrustLimit' }], [{ by: 'weight', weight: 'harm' }], [{ by: 'all' }], [{ by: 'storer', id: 1 }, { by: 'all' }]] as Way[][]) expect(through(along)).toEqual(expected)
+  })
+
+  it('chooses the way that reads least', () => {
+    const by = (query: Parameters<typeof historyFilter>[2]) => historyFilter(plant.vault, ines, query).ways.map(way => way.by)
+    expect(by({ axis: '5', field: 'thrustLimit' })).toEqual(['axis'])
+    expect(by({ machine: 4 })).toEqual(Array.from({ length: 5 }, () => 'axis'))
+    expect(by({ field: 'targets', line: 2 })).toEqual(['field', 'field', 'field'])
+    expect(by({ by: 'Ines Morel' })).toEqual(['storer', 'changer', 'changer'])
+    expect(by({ by: 'nobody', field: 'thrustLimit' })).toEqual(['field'])
+    expect(by({ by: 'nobody' })).toEqual(['nobody'])
+    expect(by({ weight: 'harm', line: 2 })).toEqual(['weight'])
+    expect(by({ from: iso(start) })).toEqual(['all'])
+  })
+
+  it('finds a stretch of time by the vault’s own order', () => {
+    const stretch = (from?: string, to?: string) => historyFilter(plant.vault, ines, { ...(from && { from }), ...(to && { to }) }).stretch
+    expect(stretch()).toEqual({ first: 1, last: 30000 })
+    expect(stretch('2025-01-01T01:00:00Z', '2025-01-01T02:00:00Z')).toEqual({ first: 60, last: 119 })
+    expect(stretch('2030-01-01T00:00:00Z')).toEqual({ first: 30001, last: 30000 })
+    expect(stretch(undefined, '2020-01-01T00:00:00Z')).toEqual({ first: 1, last: 0 })
+  })
+})

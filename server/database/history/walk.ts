@@ -15,13 +15,13 @@ export interface ChangeKey { readonly versionId: number, readonly seq: number }
 export interface Walked extends ChangeKey { readonly hit: boolean }
 
 /** What one walk follows. `nobody`: versions that name nobody who changed them. */
-export type Way =
-  | ({ readonly by: 'field' } & NamedField)
-  | { readonly by: 'weight', readonly weight: Weight }
-  | { readonly by: 'axis' | 'unit' | 'storer', readonly id: number }
-  | { readonly by: 'changer', readonly text: string }
-  | { readonly by: 'nobody' }
-  | { readonly by: 'all' }
+export type Way
+  = | ({ readonly by: 'field' } & NamedField)
+    | { readonly by: 'weight', readonly weight: Weight }
+    | { readonly by: 'axis' | 'unit' | 'storer', readonly id: number }
+    | { readonly by: 'changer', readonly text: string }
+    | { readonly by: 'nobody' }
+    | { readonly by: 'all' }
 
 /** What is looked up beside each key; null asks nothing. */
 export interface Asked {

@@ -165,6 +165,7 @@ describe('the first motion', () => {
     await step.setProps({ swap: faulty })
     expect(words(step.get('.now').text())).toContain('Jog positive')
     expect(step.text()).not.toContain('untried')
+    expect(words(step.get('.now').text())).toMatch(/“went the other way”.*As it should$/)
   })
 
   it('says the inputs that call a move, and draws a chain', async () => {

@@ -35,6 +35,7 @@ registerEndpoint('/api/axes/tag:LID-03.Z/values', (event) => {
   }
 })
 registerEndpoint('/api/machines/3', () => ({ id: 3, rev: 1, lineId: 1, name: 'LID-03' }))
+registerEndpoint('/api/findings', () => ({ items: [], next: null }))
 registerEndpoint('/api/me/letters', () => ({ choices: [], watches: [] }))
 registerEndpoint('/api/units', () => ({ items: [], next: null }))
 const signed: unknown[] = []

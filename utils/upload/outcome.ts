@@ -22,7 +22,7 @@ export function outcomeOf(body: unknown): Outcome {
   const read = answer.parse(body)
   if ('sighting' in read) return { kind: 'seen', tag: read.version.axisTag, number: read.version.number }
   if ('tray' in read) return { kind: 'tray', trayId: read.tray, detail: read.detail }
-  return { kind: 'version', versionId: read.version.id, tag: read.version.axisTag, number: read.version.number, findings: read.findings.length }
+  return { kind: 'version', versionId: read.version.id, tag: read.version.axisTag, number: read.version.number, findings: read.findings.filter(({ state }) => state === 'open').length }
 }
 
 const refusals: Readonly<Record<number, string>> = {

@@ -43,8 +43,8 @@ export function receipt(sent: readonly Sent[]): ReceiptLine[] {
   })
 }
 
-/** How many findings the sent files opened. */
-export function findingsOpened(sent: readonly Sent[]): string | null {
+/** How many findings of the sent files wait for an explanation. */
+export function findingsWaiting(sent: readonly Sent[]): string | null {
   const count = sent.reduce((sum, { outcome }) => sum + (outcome.kind === 'version' ? outcome.findings : 0), 0)
-  return count === 0 ? null : `${counted(count, 'finding', 'findings')} opened`
+  return count === 0 ? null : `${counted(count, 'finding waits', 'findings wait')} for an explanation`
 }

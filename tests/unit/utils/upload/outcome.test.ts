@@ -1,14 +1,14 @@
 import { describe, expect, it } from 'vitest'
 import type { Problem } from '../../../../shared/api/common'
 import { isKept, outcomeOf, refusedOutcome } from '../../../../utils/upload/outcome'
-import { findingsOpened, receipt, type Sent } from '../../../../utils/upload/receipt'
+import { findingsWaiting, receipt, type Sent } from '../../../../utils/upload/receipt'
 
 const version = { id: 412, axisTag: 'CAS-01.Z', number: 9 }
 const problem = (status: number, over: Partial<Problem> = {}): Problem => ({ type: 'about:blank', title: '', status, detail: 'said by the vault', code: 'x', ...over })
 
 describe('the answer to an upload', () => {
-  it('with findings is a version', () => {
-    expect(outcomeOf({ version, findings: [{ id: 33, state: 'open' }] })).toEqual({ kind: 'version', versionId: 412, tag: 'CAS-01.Z', number: 9, findings: 1 })
+  it('with findings is a version, and counts those that nobody has explained', () => {
+    expect(outcomeOf({ version, findings: [{ id: 33, state: 'open' }, { id: 34, state: 'explained' }] })).toEqual({ kind: 'version', versionId: 412, tag: 'CAS-01.Z', number: 9, findings: 1 })
   })
   it('with a sighting is one', () => {
     expect(outcomeOf({ version, sighting: { id: 1, at: '2026-12-01T07:00:00.000Z' } })).toEqual({ kind: 'seen', tag: 'CAS-01.Z', number: 9 })
@@ -54,7 +54,7 @@ describe('the receipt', () => {
   })
 
   it('counts findings', () => {
-    expect(findingsOpened(sent)).toBe('2 findings opened')
-    expect(findingsOpened([])).toBeNull()
+    expect(findingsWaiting(sent)).toBe('2 findings wait for an explanation')
+    expect(findingsWaiting([])).toBeNull()
   })
 })

@@ -38,7 +38,7 @@ export function needOf(attention: Attention): Need {
     words: count === 1 ? telling.one : telling.many,
     action: telling.action,
     to: whereTo(attention),
-    first: first && { tag: first.tag, to: first.findingId !== null ? addressOf.finding(first.findingId) : first.axisId !== null ? addressOf.axis(first.tag) : undefined, text: others ? `${first.text.replace(/\.$/, '')}; ${others}` : first.text },
+    first: first && { tag: first.tag, to: first.axisId !== null ? addressOf.axis(first.tag) : undefined, text: others ? `${first.text.replace(/\.$/, '')}; ${others}` : first.text },
   }
 }
 

@@ -22,10 +22,10 @@ export function raiseReadBack(db: VaultDb, write: Write, { axis, site }: At, { s
   })
 }
 
-/** A swap that goes on with a unit that does not fit; who allowed it by phone has explained nothing yet. */
-export function raiseUnfit(db: VaultDb, write: Write, { axis, site }: At, { swapId, unitIn, why }: { swapId: number, unitIn: string, why: readonly string[] }): Raised {
+/** A swap that goes on with a unit that does not fit; who allowed it by phone has explained nothing yet. `told`: who learns of it from another letter. */
+export function raiseUnfit(db: VaultDb, write: Write, { axis, site }: At, { swapId, unitIn, why }: { swapId: number, unitIn: string, why: readonly string[] }, told: () => readonly number[] = () => []): Raised {
   const says = `${axis.tag}: a swap goes on with unit ${unitIn}, which does not fit${why[0] ? `: ${why[0].replace(/\.$/, '')}${why.length > 1 ? ` and ${why.length - 1} more` : ''}` : ''}`
-  return raiseFinding(db, write, { cause: 'unfit', causeKey: `swap:${swapId}:unit:${unitIn}`, siteId: site.id, weight: 'harm', title: says, showings: [{ axisId: axis.id, versionId: null, says }] })
+  return raiseFinding(db, write, { cause: 'unfit', causeKey: `swap:${swapId}:unit:${unitIn}`, siteId: site.id, weight: 'harm', title: says, showings: [{ axisId: axis.id, versionId: null, says }], told })
 }
 
 /** Damage that a verification found; `record` names the first that is damaged, so that each is one finding until it is closed. */

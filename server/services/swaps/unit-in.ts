@@ -50,8 +50,7 @@ export function takeUnitIn(vault: Vault, actor: PersonActor, id: number, body: B
 /** A finding for the auditor, a letter for those who watch the axis. */
 function tellUnfit(db: VaultDb, write: Write, swapId: number, { place, unit }: SwapKitCase, { reasons }: FitAnswer, { by, reason, at }: NonNullable<SwapFacts['unfit']>): void {
   const told = { swapId, unitIn: unit.serial, why: reasons.map(({ message }) => message) }
-  raiseUnfit(db, write, place, told)
-  tellWatchers(db, write, 'unfit-gone-on', place.axis.id, { ...told, at, allowedBy: by, reason })
+  raiseUnfit(db, write, place, told, () => tellWatchers(db, write, 'unfit-gone-on', place.axis.id, { ...told, at, allowedBy: by, reason }))
 }
 
 function assertNotSafe({ facts }: SwapRow): void {

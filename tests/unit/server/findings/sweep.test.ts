@@ -142,6 +142,13 @@ describe('what others cause', () => {
     expect(findings('unfit')).toMatchObject([{ title: 'LID-02.Z: a swap goes on with unit A5502, which does not fit: Firmware 2.1 is older than 2.4 and 1 more', versions: [{ versionId: null, number: null }] }])
   })
 
+  it('tells who watches once, by the letter of whoever raised it', () => {
+    const maud = plant.person('Maud Verhagen', ['auditor'])
+    for (const who of [plant.ines, maud]) watchPlace(plant.vault, who, { scope: 'axis', scopeId: plant.axisId, watched: true })
+    raise(write => raiseUnfit(plant.vault.db, write, place(), { swapId: 4, unitIn: 'A5502', why: [] }, () => [plant.ines.id]))
+    expect(plant.vault.db.select().from(letter).all()).toMatchObject([{ personId: maud.id, kind: 'finding-opened' }])
+  })
+
   it('damage that a verification found, about the vault itself', () => {
     const damage = () => raise(write => raiseDamage(plant.vault.db, write, { record: 'version 7', says: 'is not what entry 12 says' }))
     expect(damage().id).toBe(damage().id)

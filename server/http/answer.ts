@@ -28,7 +28,8 @@ export const handOut = ({ bytes, mediaType, name, etag }: { bytes: Buffer, media
 export class StreamAnswer {
   constructor(
     readonly chunks: Iterable<Buffer> | AsyncIterable<Buffer>,
-    readonly size: number,
+    /** null = nobody knows beforehand; a stream that breaks then ends without its last chunk (RFC 9112, 7.1). */
+    readonly size: number | null,
     readonly mediaType: string,
     readonly name: string,
     readonly etag: string | null = null,

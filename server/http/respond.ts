@@ -36,12 +36,12 @@ function fileHead(event: H3Event, { mediaType, name, etag }: Pick<FileAnswer, 'm
   return fresh
 }
 
-/** The length is told beforehand: a stream that breaks leaves the caller short of it. */
+/** Where the length is told beforehand a stream that breaks leaves the caller short of it, else without its end. */
 async function sendStream(event: H3Event, answer: StreamAnswer): Promise<null> {
   const chunks = iteratorOf(answer.chunks)
   const first = await chunks.next()
   if (fileHead(event, answer)) return null
-  setResponseHeaders(event, { 'content-length': answer.size })
+  if (answer.size !== null) setResponseHeaders(event, { 'content-length': answer.size })
   if (event.node.req.method === 'HEAD') return null
   try {
     await pipeline(Readable.from(rest(first, chunks)), event.node.res)

@@ -10,7 +10,7 @@ const stretch = { from: instantSchema.optional(), to: instantSchema.optional() }
 const place = { axis: axisRef.optional(), machine: idText.optional(), line: idText.optional(), site: idText.optional() }
 const by = z.string().min(1).max(80).optional().describe('who changed or stored it: a name, person:ID, or nobody')
 
-export const historyForms = ['json'] as const
+export const historyForms = ['json', 'csv', 'pdf'] as const
 export const historyQuery = listQuery.extend({
   field: z.string().min(1).max(80).optional().describe('thrustLimit, move.target, extra:K-017, or a family: force-limits, limits, targets …'),
   section: z.enum(sections).optional(), row: z.coerce.number().int().min(0).max(65535).optional(),

@@ -172,7 +172,7 @@ export const routes = {
   'POST /api/swaps/:id/abandon': { may: uploaders, scope: 'swap', params: idParams, body: swaps.abandonBody, answers: { 200: swaps.swapSchema }, says: 'Ends the swap without a release, and says which unit is truly fitted.' },
   'POST /api/swaps/:id/put-back': { may: uploaders, scope: 'swap', params: idParams, body: swaps.putBackBody, answers: { 200: swaps.swapSchema }, says: 'The old unit goes back in; the same swap goes on.' },
 
-  'GET /api/history': { may: all, token: 'read', query: history.historyQuery, answers: { 200: history.historyPage }, says: 'Who changed what, when, from what to what, why and allowed by whom, newest first.' },
+  'GET /api/history': { may: all, token: 'read', query: history.historyQuery, answers: { 200: history.historyPage }, says: 'Who changed what, when, from what to what, why and allowed by whom, newest first; as CSV or PDF the whole result, for planners and auditors.' },
   'GET /api/history/acts': { may: ['planner', 'auditor', 'admin'], token: 'read', query: history.actsQuery, answers: { 200: history.actsPage }, says: 'Who changed sites and what they watch, nameplates, rules, roles and marks, newest first.' },
   'GET /api/history/not-read': { may: all, token: 'read', query: history.notReadQuery, answers: { 200: history.notReadPage }, says: 'Axes that no file came from in a stretch of time.' },
 

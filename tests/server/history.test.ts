@@ -2,6 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { HistoryAct, HistoryItem, NotReadAxis } from '../../shared/api/history'
 import { startServer, type TestServer } from '../support/server'
 import { plantOn, type ServerPlant } from '../support/server-plant'
+import { pdfText } from '../support/paper'
 import { iso, settingsFile } from '../support/vault-plant'
 
 let server: TestServer
@@ -55,5 +56,18 @@ describe('history', () => {
     expect((await get('/api/history/acts?kind=people', plant.as.technician)).status).toBe(403)
     expect((await items<NotReadAxis>('/api/history/not-read')).map(({ tag }) => tag)).toEqual(['LID-02.Z'])
     expect((await items<NotReadAxis>('/api/history/not-read?to=2021-01-01T00:00:00Z')).map(({ tag }) => tag)).toEqual(['LID-01.Z', 'LID-02.Z'])
+  })
+
+  it('is sent whole as CSV and PDF, with the checkpoint, to planners and auditors', async () => {
+    const fetched = async (form: string, as: string) => fetch(`${server.url}/api/history?field=thrustLimit&form=${form}`, { headers: { cookie: as } })
+    const csv = await fetched('csv', plant.as.auditor)
+    expect([csv.status, csv.headers.get('content-type'), csv.headers.get('content-disposition')]).toEqual([200, 'text/csv; charset=utf-8', expect.stringMatching(/^attachment; filename="history-.*\.csv"/)])
+    const text = await csv.text()
+    expect(text.match(/LID-01\.Z/g)).toHaveLength(2)
+    expect(text).toMatch(/# lines,2\r\n/)
+    expect(text).toMatch(/# checkpoint of the log,"[\s\S]+— /)
+    const pdf = Buffer.from(await (await fetched('pdf', plant.as.planner)).arrayBuffer())
+    expect(pdfText(pdf)).toMatch(/Who changed the thrust limit on every axis[\s\S]*2 changes[\s\S]*page 1 of 1/)
+    expect((await fetched('pdf', plant.as.technician)).status).toBe(403)
   })
 })

@@ -1,4 +1,11 @@
+import { StreamAnswer } from '#server/http/answer'
 import { defineRoute } from '#server/http/route'
+import { historyFile } from '#server/services/history/file'
 import { listHistory } from '#server/services/history/history'
 
-export default defineRoute('GET /api/history', ({ input, actor, vault }) => listHistory(vault, actor, input.query))
+export default defineRoute('GET /api/history', ({ input: { query }, actor, vault }) => {
+  const { form = 'json' } = query
+  if (form === 'json') return listHistory(vault, actor, query)
+  const { chunks, mediaType, name } = historyFile(vault, actor, query, form)
+  return new StreamAnswer(chunks, null, mediaType, name)
+})

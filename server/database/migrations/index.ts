@@ -6,7 +6,7 @@ import { papersStep } from './0005-papers'
 import { findingsStep } from './0006-findings'
 import { swapsStep } from './0007-swaps'
 import { trailStep } from './0008-trail'
-import { historyStep } from './0008-history'
+import { historyStep } from './0009-history'
 
 export interface Migration { readonly number: number, readonly name: string, readonly sql: string }
 

@@ -34,10 +34,11 @@ export class Paper {
   private readonly chunks: Buffer[] = []
   private pages = 0
 
-  constructor(size: PaperSize, { title, at }: { readonly title: string, readonly at: string }) {
+  /** `kept`: whether pages can be turned back to; without it each is written out when the next begins. */
+  constructor(size: PaperSize, { title, at, kept = true }: { readonly title: string, readonly at: string, readonly kept?: boolean }) {
     [this.width, this.height] = pointsOf(size)
     this.document = new PDFDocument({
-      size: [this.width, this.height], margin: 0, autoFirstPage: false, bufferPages: true, lang: 'en', pdfVersion: '1.7',
+      size: [this.width, this.height], margin: 0, autoFirstPage: false, bufferPages: kept, lang: 'en', pdfVersion: '1.7',
       // Without a font of its own the writer would read one that is not shipped; its types do not say that null is allowed.
       font: null as unknown as string,
       info: { Title: title, Creator: 'Witnessmark', Producer: 'Witnessmark', CreationDate: new Date(at) },
@@ -131,6 +132,11 @@ export class Paper {
 
   triangle(x: number, y: number, width: number, height: number): void {
     this.document.moveTo(x + width / 2, y).lineTo(x + width, y + height).lineTo(x, y + height).fill('#000')
+  }
+
+  /** What was written out since the last time; the next `taken` or `bytes` goes on behind it. */
+  taken(): Buffer {
+    return Buffer.concat(this.chunks.splice(0))
   }
 
   /** Closes it; nothing can be written afterwards. */

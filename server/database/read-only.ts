@@ -3,6 +3,7 @@ import { drizzle } from 'drizzle-orm/better-sqlite3'
 import { existsSync } from 'node:fs'
 import { join } from 'node:path'
 import { CodedError } from '#shared/errors/coded'
+import { migrations } from './migrations'
 import type { VaultDb } from './prepared'
 import * as schema from './schema'
 
@@ -14,13 +15,14 @@ export function openReadOnly(folder: string): { sqlite: Database.Database, db: V
   if (!existsSync(path)) throw new OpenError('no-vault', `There is no vault in ${folder}.`)
   const sqlite = new Database(path, { readonly: true, fileMustExist: true, timeout: 5000 })
   try {
-    sqlite.prepare('SELECT count(*) FROM log').get()
+    const number = sqlite.prepare('SELECT max(number) FROM migration').pluck().get()
+    if (number !== migrations.length) throw new OpenError('no-vault', `The vault in ${folder} has schema ${String(number)}; this version reads schema ${migrations.length}. Start this version on it once, or use the version that wrote it.`)
+    return { sqlite, db: drizzle(sqlite, { schema }) }
   }
   catch (error) {
     sqlite.close()
     throw openFault(error, folder)
   }
-  return { sqlite, db: drizzle(sqlite, { schema }) }
 }
 
 function openFault(error: unknown, folder: string): unknown {

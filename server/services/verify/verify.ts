@@ -6,6 +6,7 @@ import { deriveAgain, type Derived } from './derive'
 import { collectFaults } from './faults'
 import { foldRows } from './fold'
 import { passOverLog, type GivenCheckpoint } from './log-pass'
+import { rereadFiles, type Reread } from './reread'
 
 export interface Verified {
   readonly entries: number
@@ -16,6 +17,8 @@ export interface Verified {
   readonly found: readonly Fault[]
   /** Where changes and judgements were computed again. */
   readonly derived?: Derived
+  /** Where old bytes were read by today's reader. */
+  readonly reread?: Reread
 }
 
 export interface VerifyOptions {
@@ -23,6 +26,8 @@ export interface VerifyOptions {
   readonly checkpoints?: readonly GivenCheckpoint[]
   /** Also computes changes and judgements again. */
   readonly derived?: boolean
+  /** Also reads every kept file with today's reader. */
+  readonly reread?: boolean
   /** Called after each page: lets a server answer others meanwhile. */
   readonly pause?: () => Promise<void>
 }
@@ -31,7 +36,7 @@ export interface VerifyOptions {
  * Recomputes the vault in `folder` from the bytes up, on a read-only connection of its own and one moment of the file: the
  * log's tree and signatures, then every row against the log. Throws OpenError where there is no vault or it is locked.
  */
-export async function verifyVault(folder: string, { checkpoints = [], derived = false, pause = async () => {} }: VerifyOptions = {}): Promise<Verified> {
+export async function verifyVault(folder: string, { checkpoints = [], derived = false, reread = false, pause = async () => {} }: VerifyOptions = {}): Promise<Verified> {
   const { sqlite, db } = openReadOnly(folder)
   try {
     sqlite.exec('BEGIN')
@@ -39,12 +44,14 @@ export async function verifyVault(folder: string, { checkpoints = [], derived = 
     const newest = newestEntries(sqlite)
     const kept = trailQueries(db).checkpoints.all().map(({ id, note }) => ({ from: `checkpoint ${id}`, note }))
     const again = derived ? deriveAgain(db, faults) : null
+    const files = reread ? rereadFiles(db) : null
     const { entries } = await passOverLog(db, [...kept, ...checkpoints], faults, (entry) => {
       newest.note(entry.subject.kind, entry.subject.id, entry.seq)
       again?.read(entry)
+      files?.read(entry)
     }, pause)
     const rows = await foldRows(db, newest, faults, pause)
-    return { entries, rows, faults: faults.count(), found: faults.found, ...(again ? { derived: again.derived } : {}) }
+    return { entries, rows, faults: faults.count(), found: faults.found, ...(again ? { derived: again.derived } : {}), ...(files ? { reread: files.reread } : {}) }
   }
   finally {
     sqlite.close()

@@ -11,6 +11,7 @@ export const addressOf = {
   findings: () => '/findings',
   finding: (id: number) => `/findings/${id}`,
   planned: () => '/planned',
+  trail: () => '/trail',
   upload: () => '/upload',
   tray: () => '/tray',
   /** With a tag: to begin one there. */

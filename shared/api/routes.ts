@@ -180,6 +180,7 @@ export const routes = {
   'GET /api/log': { may: trailReaders, token: 'read', query: listQuery, answers: { 200: pageOf(board.logEntrySchema) }, says: 'The log, entry by entry; only without site bounds.' },
   'GET /api/log/key': { may: trailReaders, token: 'read', answers: { 200: trail.keyAnswer }, says: 'The public key that checkpoints are signed with.' },
   'GET /api/log/checkpoint': { may: trailReaders, token: 'read', answers: { 200: 'file' }, says: 'How long the log is now and what its root is, as a signed note.' },
+  'GET /api/log/file': { may: trailReaders, token: 'read', answers: { 200: 'file' }, says: 'The whole log, one entry a line, for a verifier that trusts nobody.' },
   'GET /api/log/proof': { may: trailReaders, token: 'read', query: trail.proofQuery, answers: { 200: trail.proofAnswer }, says: 'That an entry is in the log of a size.' },
   'GET /api/log/consistency': { may: trailReaders, token: 'read', query: trail.consistencyQuery, answers: { 200: trail.consistencyAnswer }, says: 'That the log of a later size begins with that of an earlier one.' },
   'GET /api/trail': { may: trailReaders, answers: { 200: trail.trailState }, says: 'How long the log is, and what the verifications found.' },

@@ -8,7 +8,9 @@ import { rootOf } from '#shared/trail/tree'
 import type { Actor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
 import { logSize, subtreesOf } from '#server/database/log/nodes'
+import { logBytes, logQueries } from '#server/database/log/queries'
 import { trailQueries } from '#server/database/trail/queries'
+import { tellVault } from '../letters/queue'
 import { sha256 } from '../uploads/ingest'
 import { trailActor, trailKeyOf } from './key'
 
@@ -32,6 +34,7 @@ export function takeCheckpoint(vault: Vault): { id: number, note: string, size: 
     const row = { size, note, takenAt: write.now }
     const id = trailQueries(vault.db).insertCheckpoint(row)
     write.log({ act: 'checkpoint-taken', id, state: { id, ...row } })
+    tellVault(vault.db, write, 'checkpoint', { date: write.now.slice(0, 10), note })
     return { id, note, size }
   })
 }
@@ -62,3 +65,18 @@ function assertWithin(db: Vault['db'], at: string, size: number): void {
 }
 
 const outside = (at: string, message: string) => new Refusal('input', `${at}: ${message}.`, { errors: [{ at, code: 'range', message }] })
+
+/** The log as a file, one leaf a line, as long as it is now; read page by page. `size` counts bytes. */
+export function logFile({ db }: Vault): { chunks: Iterable<Buffer>, size: number, name: string } {
+  const entries = logSize(db)
+  return { chunks: linesOf(db, entries), size: logBytes(db), name: `witnessmark-log-${entries}.jsonl` }
+}
+
+function* linesOf(db: Vault['db'], entries: number): Generator<Buffer> {
+  for (let seq = 0; seq < entries; seq += filePage) {
+    const rows = logQueries(db).from.all({ seq, limit: Math.min(filePage, entries - seq) })
+    yield Buffer.from(rows.map(({ leaf }) => `${leaf}\n`).join(''), 'utf8')
+  }
+}
+
+const filePage = 512

@@ -1,10 +1,12 @@
 import type { TrailState, Verification } from '#shared/api/trail'
 import { Refusal } from '#shared/errors/refusal'
-import type { Vault } from '#server/database/client'
+import type { Vault, Write } from '#server/database/client'
 import { logSize } from '#server/database/log/nodes'
 import { firstInstant } from '#server/database/log/queries'
 import type { VerificationRow } from '#server/database/schema'
 import { trailQueries } from '#server/database/trail/queries'
+import { raiseDamage } from '../findings/causes'
+import { tellVault } from '../letters/queue'
 import { verifyVault, type Verified } from '../verify/verify'
 import { trailActor } from './key'
 import { takeCheckpoint } from './trail'
@@ -75,6 +77,16 @@ function record(vault: Vault, begunAt: string, { outcome, entries, rows, faults,
     const row = { begunAt, endedAt: write.now, outcome, entries, rows, faults, found: found.map(fault => ({ ...fault })) }
     const id = trailQueries(vault.db).insertVerification(row)
     write.log({ act: 'vault-verified', id, state: { id, ...row } })
+    if (outcome !== 'sound') warn(vault, write, row)
     return { id, ...row }
   })
 }
+
+/** A finding for each record that is told, and a letter: nobody has to come and look. */
+function warn({ db }: Vault, write: Write, { begunAt, faults, found }: Pick<VerificationRow, 'begunAt' | 'faults' | 'found'>): void {
+  for (const { record, fault } of found.slice(0, mostFindings)) raiseDamage(db, write, { record, says: fault })
+  tellVault(db, write, 'verification-failed', { at: begunAt, says: `${faults} ${faults === 1 ? 'fault' : 'faults'}; the first: ${found[0]?.record ?? ''} ${found[0]?.fault ?? ''}` })
+}
+
+/** More would bury the others; the verification itself names a hundred. */
+const mostFindings = 10

@@ -1,0 +1,9 @@
+import { StreamAnswer } from '#server/http/answer'
+import { defineRoute } from '#server/http/route'
+import { assertReadsWhole, logFile } from '#server/services/trail/trail'
+
+export default defineRoute('GET /api/log/file', ({ actor, vault }) => {
+  assertReadsWhole(actor)
+  const { chunks, size, name } = logFile(vault)
+  return new StreamAnswer(chunks, size, 'application/x-ndjson', name)
+})

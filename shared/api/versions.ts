@@ -96,7 +96,7 @@ export type Axis = z.infer<typeof axisSchema>
 
 /** One event on the time line, newest first. */
 export const lifeEvent = z.object({
-  at: instantSchema, kind: z.enum(['version', 'mark', 'mark-none', 'void', 'fitted', 'taken-out', 'finding', 'finding-closed']),
+  at: instantSchema, kind: z.enum(['version', 'mark', 'mark-none', 'void', 'fitted', 'taken-out', 'finding', 'finding-closed', 'swap']),
   /** Of a finding: its id. */
   findingId: idSchema.nullable(),
   versionId: idSchema.nullable(), number: z.int().nullable(), by: z.string(), text: z.string().nullable(),

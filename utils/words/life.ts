@@ -30,6 +30,7 @@ const others: Readonly<Record<Exclude<LifeEvent['kind'], 'version'>, (event: Lif
   'fitted': event => ({ what: `unit ${event.serial ?? ''} fitted`, state: 'new', label: 'unit fitted' }),
   'finding': () => ({ what: 'a finding was opened', state: 'off', label: 'finding opened' }),
   'finding-closed': () => ({ what: 'the finding was closed', state: 'in-line', label: 'finding closed' }),
+  'swap': () => ({ what: 'unit swap', state: 'new', label: 'swap' }),
   'taken-out': event => ({ what: `unit ${event.serial ?? ''} taken out`, state: 'never-read', label: 'unit taken out' }),
 }
 

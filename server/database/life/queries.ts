@@ -1,9 +1,10 @@
-import { and, desc, eq, sql } from 'drizzle-orm'
+import { and, desc, eq, inArray, sql } from 'drizzle-orm'
 import { finding, findingAct, findingVersion } from '../finding/table'
 import { fitting } from '../fitting/table'
 import { knownGood } from '../known-good/table'
 import { person } from '../person/table'
 import { prepared } from '../prepared'
+import { swap, swapStep } from '../swap/table'
 import { token } from '../token/table'
 import { unit } from '../unit/table'
 import { version, versionVoid } from '../version/table'
@@ -34,6 +35,9 @@ export const lifeQueries = prepared(db => ({
     .where(and(eq(fitting.axisId, place('axisId')), before(fitting.fromAt, fitting.id))).orderBy(desc(fitting.fromAt), desc(fitting.id)).limit(place('limit')).prepare(),
   takenOut: db.select({ id: fitting.id, at: sql<string>`${fitting.toAt}`, serial: unit.serial }).from(fitting).innerJoin(unit, eq(unit.id, fitting.unitId))
     .where(and(eq(fitting.axisId, place('axisId')), before(fitting.toAt, fitting.id))).orderBy(desc(fitting.toAt), desc(fitting.id)).limit(place('limit')).prepare(),
+  /** What a swap means for the axis: begun, running, ended; its other steps stand on its own page. */
+  swaps: db.select({ id: swapStep.id, at: swapStep.at, text: swapStep.text, by: person.name }).from(swapStep).innerJoin(swap, eq(swap.id, swapStep.swapId)).innerJoin(person, eq(person.id, swapStep.byPerson))
+    .where(and(eq(swap.axisId, place('axisId')), inArray(swapStep.act, ['opened', 'put-back', 'running', 'released', 'abandoned']), before(swapStep.at, swapStep.id))).orderBy(desc(swapStep.at), desc(swapStep.id)).limit(place('limit')).prepare(),
   findings: db.select({ id: finding.id, at: finding.openedAt, title: finding.title }).from(finding)
     .where(and(ofAxis, before(finding.openedAt, finding.id))).orderBy(desc(finding.openedAt), desc(finding.id)).limit(place('limit')).prepare(),
   findingsClosed: db.select({ id: findingAct.id, findingId: finding.id, at: findingAct.at, title: finding.title, by: person.name }).from(findingAct)

@@ -5,7 +5,7 @@ import { lifeQueries } from '#server/database/life/queries'
 import { limitOf, type PageQuery } from '../page'
 
 /** At one instant events stand in this order, newest first: a swap takes the old unit out before it fits the new one. */
-const kinds = ['finding-closed', 'finding', 'void', 'mark', 'version', 'fitted', 'taken-out'] as const
+const kinds = ['finding-closed', 'finding', 'swap', 'void', 'mark', 'version', 'fitted', 'taken-out'] as const
 type Source = (typeof kinds)[number]
 
 /** An event with its key: instant, source, and number within the source. */
@@ -15,7 +15,7 @@ interface Cursor { readonly at: string, readonly source: Source, readonly key: n
 const most = Number.MAX_SAFE_INTEGER
 const nothing = { findingId: null, versionId: null, number: null, text: null, serial: null, changes: null, occasion: null, sightings: null }
 
-/** What happened to an axis, newest first: versions by their time in order, marks, voidings, fittings. */
+/** What happened to an axis, newest first: versions by their time in order, marks, voidings, fittings, swaps, findings. */
 export function axisLife({ db }: Vault, axisId: number, query: PageQuery): { items: LifeEvent[], next: string | null } {
   const cursor = cursorOf(query.cursor)
   const limit = limitOf(query) + 1
@@ -30,6 +30,7 @@ export function axisLife({ db }: Vault, axisId: number, query: PageQuery): { ite
       event: { at, kind: 'version' as const, findingId: null, versionId: id, number, by: token === null ? storedBy : `${token} (${storedBy})`, text: reason, serial, changes: { harm, motion, text }, occasion, sightings },
     })),
     ...queries.fitted.all(from('fitted')).map(row => ({ source: 'fitted' as const, key: row.id, event: { ...nothing, at: row.at, kind: 'fitted' as const, by: '', serial: row.serial } })),
+    ...queries.swaps.all(from('swap')).map(row => ({ source: 'swap' as const, key: row.id, event: { ...nothing, at: row.at, kind: 'swap' as const, by: row.by, text: row.text } })),
     ...queries.findings.all(from('finding')).map(row => ({ source: 'finding' as const, key: row.id, event: { ...nothing, at: row.at, kind: 'finding' as const, findingId: row.id, by: '', text: row.title } })),
     ...queries.findingsClosed.all(from('finding-closed')).map(row => ({ source: 'finding-closed' as const, key: row.id, event: { ...nothing, at: row.at, kind: 'finding-closed' as const, findingId: row.findingId, by: row.by, text: row.title } })),
   ].sort(newestFirst)

@@ -2,6 +2,7 @@ import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import type { Swap } from '../../../shared/api/swaps'
 import { makeTextKit } from '../../../server/services/kit/make-kit'
 import { markKnownGood } from '../../../server/services/known-good/mark'
+import { axisLife } from '../../../server/services/axes/life'
 import { listFittings, readAxis } from '../../../server/services/axes/read-axis'
 import { readBoard } from '../../../server/services/board/board'
 import { abandonSwap, putOldUnitBack } from '../../../server/services/swaps/ending'
@@ -70,6 +71,18 @@ describe('a swap from a dead unit to a released one', () => {
     expect(here.plant.vault.sqlite.prepare('SELECT version_id, carried_from FROM known_good ORDER BY id DESC').get()).toEqual({ version_id: left.version.id, carried_from: here.versionId })
     expect(readUnit(here.plant.vault, here.old).state).toBe('repair')
     expect(swapOf(here.plant.vault, id).log.map(({ act }) => act)).toEqual(['opened', 'unit-in', 'safe', 'read-back', 'first-motion', 'read-back', 'running', 'released'])
+  })
+
+  it('stands in the life of the axis: begun, running, released, between what was fitted and read', () => {
+    const { id } = running()
+    release(id)
+    const { items } = axisLife(here.plant.vault, here.axisId, { limit: 200 })
+    expect(items.filter(({ kind }) => kind === 'swap').map(({ by, text }) => `${by}: ${text}`)).toEqual([
+      'Runa Haldersen: Released; the mark names version 3 now.', 'Tobias Achterberg: Running, not released; as-left is version 3.', 'Tobias Achterberg: Swap opened: unit of SN-0001. following error, motor hot',
+    ])
+    const paged = [axisLife(here.plant.vault, here.axisId, { limit: 4 })]
+    while (paged.at(-1)?.next) paged.push(axisLife(here.plant.vault, here.axisId, { limit: 4, cursor: paged.at(-1)?.next ?? '' }))
+    expect(paged.flatMap(page => page.items)).toEqual(items)
   })
 
   it('leaves each row equal to the newest entry of the log about it', () => {

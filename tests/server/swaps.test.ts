@@ -1,0 +1,117 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import type { Swap } from '../../shared/api/swaps'
+import { admin, startServer, type TestServer } from '../support/server'
+import { plantOn, type ServerPlant } from '../support/server-plant'
+import { moves, plates, setup } from '../support/swap-plant'
+import { iso, settingsFile } from '../support/vault-plant'
+
+/*
+ * A swap through the routes alone: each shape that goes out is held against the table by the caller of the tests.
+ */
+
+let server: TestServer
+let plant: ServerPlant
+let axisId: number
+const { password } = admin
+let seconds = 0
+/** Each file a second newer than the one before, and all of them past. */
+const at = () => iso(Date.now() - 100_000 + 1000 * seconds++)
+
+beforeAll(async () => {
+  server = await startServer()
+  plant = await plantOn(server)
+  await plant.post('/api/nameplates', plates.press)
+  await plant.post('/api/nameplates', plates.stronger)
+  axisId = (await plant.axis('LID-02.Z', 'SN-0001', { firmware: '2.4' })).axisId
+  for (const [serial, model] of [['SN-0002', 'HL40-200V'], ['SN-0050', 'HL50-200V']]) await plant.post('/api/units', { serial, model, firmware: '2.4', siteId: plant.siteId, state: 'spare' })
+  const sent = await plant.upload(settingsFile({ setup, moves, exportedAt: at() }))
+  const { version } = sent.json as unknown as { version: { id: number } }
+  expect((await server.call('POST', `/api/versions/${version.id}/known-good`, { as: plant.as.planner, body: { meaning: 'approved', password } })).status).toBe(201)
+})
+afterAll(() => server.stop())
+
+const step = (id: number, name: string, body: object, as = plant.as.technician) => server.call('POST', `/api/swaps/${id}/${name}`, { as, body })
+const readBack = (id: number, parts: object, query = '', key?: string) => server.call('POST', `/api/swaps/${id}/read-back${query}`, {
+  as: plant.as.technician, raw: settingsFile({ serial: 'SN-0002', setup, moves, exportedAt: at(), ...parts }), headers: { 'content-type': 'application/json', ...(key === undefined ? {} : { 'idempotency-key': key }) },
+})
+const open = () => server.call('POST', '/api/swaps', { as: plant.as.technician, body: { axisId, replaced: 'unit', failure: 'following error, motor hot' } })
+const swapOf = (reply: { json: unknown }) => reply.json as Swap
+const kit = (body: object) => server.call('POST', `/api/axes/${axisId}/kit`, { as: plant.as.technician, body: { form: 'json', cautionsRead: true, ...body } })
+
+describe('a swap through the routes', () => {
+  let id: number
+
+  it('is opened once an axis, and tells which steps come first', async () => {
+    const opened = await open()
+    expect(opened).toMatchObject({ status: 201, json: { step: 'unit-in', rev: 1, unitOut: { serial: 'SN-0001' } } })
+    id = swapOf(opened).id
+    expect(await open()).toMatchObject({ status: 409, json: { code: 'swap-open', current: { id, step: 'unit-in' } } })
+    expect(await step(id, 'safe', { confirmed: true })).toMatchObject({ status: 409, json: { code: 'step-missing', missing: ['unit-in'] } })
+    expect(await readBack(id, {})).toMatchObject({ status: 409, json: { code: 'step-missing', missing: ['unit-in', 'safe'] } })
+    expect((await server.call('GET', `/api/swaps/${id}/spares`, { as: plant.as.auditor })).json).toMatchObject({ items: [{ unit: { serial: 'SN-0002' }, fit: 'same' }, { unit: { serial: 'SN-0050' }, fit: 'adjust', adjusted: 4 }] })
+  })
+
+  it('asks for the forces of another base before a kit leaves, and takes another unit until it is safe', async () => {
+    expect(await step(id, 'unit-in', { serial: 'SN-0050' })).toMatchObject({ status: 200, json: { fit: 'adjust', adjustments: [{ field: 'homingForceLimit' }, { field: 'thrustLimit', before: 60, after: 37.5, newtonsBefore: 240, newtonsAfter: 240 }, { field: 'overloadLevel' }, { field: 'forceLimit', row: 2 }] } })
+    expect(await kit({})).toMatchObject({ status: 409, json: { code: 'forces-unconfirmed' } })
+    expect(await step(id, 'unit-in', { serial: 'SN-0001' })).toMatchObject({ status: 409, json: { code: 'same-unit' } })
+    expect(await step(id, 'unit-in', { serial: 'SN-0009' })).toMatchObject({ status: 422, json: { errors: [{ at: '/model', code: 'serial-unknown' }] } })
+    expect(await step(id, 'unit-in', { serial: 'SN-0002' })).toMatchObject({ status: 200, json: { fit: 'same', step: 'safe', unitIn: { state: 'fitted' } } })
+    expect(await kit({ cautionsRead: false })).toMatchObject({ status: 409, json: { code: 'cautions-unread' } })
+    expect((await kit({})).json).toMatchObject({ unit: { serial: 'SN-0002' }, setup: { thrustLimit: 60 } })
+  })
+
+  it('refuses a device that read an older state, with what the other did', async () => {
+    const stale = await step(id, 'safe', { confirmed: true, rev: 1 })
+    expect(stale).toMatchObject({ status: 409, json: { code: 'edited-meanwhile', current: { step: 'safe', unitIn: { serial: 'SN-0002' } } } })
+    expect((stale.json as unknown as { detail: string }).detail).toContain('SN-0002 (HL40-200V) goes in.')
+    expect(await step(id, 'safe', { confirmed: true })).toMatchObject({ status: 200, json: { step: 'read-back' } })
+  })
+
+  it('keeps every attempt of a read-back, each turned away in its own words', async () => {
+    expect(await readBack(id, { serial: 'SN-0001' })).toMatchObject({ status: 409, json: { code: 'read-back-serial', current: { readBacks: [{ attempt: 1, problem: 'serial' }] } } })
+    expect(await readBack(id, { model: 'HL50-200V' })).toMatchObject({ status: 409, json: { code: 'read-back-model' } })
+    const cut = await server.call('POST', `/api/swaps/${id}/read-back`, { as: plant.as.technician, raw: '{"schema":', headers: { 'content-type': 'application/json' } })
+    expect(cut).toMatchObject({ status: 422, json: { code: 'settings-unreadable', errors: [{ code: 'json-syntax' }] } })
+    expect(await readBack(id, { moves: moves.slice(0, 2) })).toMatchObject({ status: 200, json: { compare: 'differs', attempt: 4, readBacks: [{}, {}, {}, { rowsMissing: [{ section: 'move', row: 2 }] }] } })
+    expect(await readBack(id, {}, '?rev=1')).toMatchObject({ status: 409, json: { code: 'edited-meanwhile' } })
+  })
+
+  it('answers a read-back that is sent again under its key once, and calls the same file without one the same file', async () => {
+    const bytes = settingsFile({ serial: 'SN-0002', setup, moves, exportedAt: at() })
+    const send = (key?: string) => server.call('POST', `/api/swaps/${id}/read-back`, { as: plant.as.technician, raw: bytes, headers: { 'content-type': 'application/json', ...(key === undefined ? {} : { 'idempotency-key': key }) } })
+    const first = await send('night-1')
+    expect(first).toMatchObject({ status: 200, json: { compare: 'identical', attempt: 5 } })
+    const again = await send('night-1')
+    expect([again.status, again.headers.get('idempotency-replayed'), again.text]).toEqual([200, 'true', first.text])
+    expect(await send()).toMatchObject({ status: 409, json: { code: 'read-back-twice' } })
+    const { readBacks, kit: made } = swapOf(await server.call('GET', `/api/swaps/${id}`, { as: plant.as.auditor }))
+    expect(readBacks.map(({ problem, compare }) => problem ?? compare)).toEqual(['serial', 'model', 'unreadable', 'differs', 'identical', 'twice'])
+    expect(readBacks[4]?.scribeCode).toBe(made?.scribeCode)
+  })
+
+  it('runs after the first motion, and is released by a planner who signs', async () => {
+    const results = ['jog', 'enable-loss', 'emergency-stop', 'move-0', 'chain-1'].map(item => ({ item, outcome: 'ok' }))
+    expect(await step(id, 'first-motion', { speedPercent: 10, results })).toMatchObject({ status: 200, json: { firstMotion: { untried: [] } } })
+    expect(await readBack(id, {})).toMatchObject({ status: 200, json: { asLeft: { compare: 'identical' } } })
+    expect(await step(id, 'running', {})).toMatchObject({ status: 200, json: { step: 'release' } })
+    const words = { meaning: 'approved', oldUnitState: 'scrapped' }
+    expect(await step(id, 'release', { ...words, password })).toMatchObject({ status: 403, json: { code: 'role' } })
+    expect(await step(id, 'release', { ...words, password: 'wrong' }, plant.as.planner)).toMatchObject({ status: 403, json: { code: 'signature' } })
+    expect(await step(id, 'release', { ...words, password }, plant.as.planner)).toMatchObject({ status: 200, json: { step: 'released', released: { carriedOver: true, oldUnitState: 'scrapped' } } })
+    expect(await step(id, 'running', {})).toMatchObject({ status: 409, json: { code: 'swap-closed' } })
+    expect((await server.call('GET', `/api/axes/${axisId}`, { as: plant.as.auditor })).json).toMatchObject({ status: 'in-line', unit: { serial: 'SN-0002' } })
+    expect((await server.call('GET', '/api/swaps?axis=tag:LID-02.Z&limit=5', { as: plant.as.auditor })).json).toMatchObject({ items: [{ id, step: 'released', overdue: false }], next: null })
+  })
+})
+
+describe('ways out through the routes', () => {
+  it('the old unit goes back, and the swap is abandoned with the unit that truly sits there', async () => {
+    const { id, unitOut } = swapOf(await open())
+    await step(id, 'unit-in', { serial: 'SN-0050', forcesConfirmed: true })
+    expect(await step(id, 'put-back', { reason: 'it was the cable' })).toMatchObject({ status: 200, json: { putBack: true, step: 'safe', unitIn: { serial: 'SN-0002' } } })
+    expect(await step(id, 'put-back', { reason: 'again' })).toMatchObject({ status: 409, json: { code: 'already-back' } })
+    expect(await step(id, 'abandon', { reason: 'nothing to swap', fittedUnitId: unitOut?.id })).toMatchObject({ status: 200, json: { step: 'abandoned' } })
+    expect(await server.call('GET', '/api/swaps?open=true', { as: plant.as.technician })).toMatchObject({ status: 200, json: { items: [] } })
+  })
+})

@@ -8,6 +8,12 @@ export const addressOf = {
   version: (tag: string, number: number) => `/axes/${encodeURIComponent(tag)}/versions/${number}`,
   /** a stands before, b after; both are ids of versions. */
   changes: (before: number, after: number) => `/changes?a=${before}&b=${after}`,
+  /** With a place: the history of that one value; `section`, `field` and `row` as changes have them. */
+  history: (of?: { readonly axis?: string, readonly section: string, readonly field: string, readonly row?: number | null | undefined }) => {
+    if (of === undefined) return '/history'
+    const field = of.section === 'setup' || of.section === 'file' ? of.field : of.section === 'extra' ? `extra:${of.field}` : `${of.section}.${of.field}`
+    return `/history?${new URLSearchParams({ field, ...(of.axis !== undefined && { axis: of.axis }), ...(typeof of.row === 'number' && { row: String(of.row) }) }).toString()}`
+  },
   findings: () => '/findings',
   finding: (id: number) => `/findings/${id}`,
   planned: () => '/planned',

@@ -4,6 +4,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { plantFile } from '../../scripts/demo-files'
 import { openWindow, signIn, startBrowser } from '../support/browser'
 import { csvFile, inserted, jsonFile, lidPress, type PickedFile } from '../support/lid-press'
+import { pdfText } from '../support/paper'
 import { admin, people, startServer, type TestServer } from '../support/server'
 import { plantOn } from '../support/server-plant'
 import { downloaded } from '../support/walk'
@@ -64,6 +65,26 @@ describe('what the auditor reads', () => {
     expect(await over.getByRole('table', { name: 'Known-good values and limits' }).innerText()).toMatch(/known-good v1[\s\S]*38 % of rated[\s\S]*nameplate[\s\S]*at most 250 % of rated/)
     await over.getByLabel('Where').selectOption('move 2')
     await over.getByText('Target of move 2: never changed in 2 versions').waitFor()
+  })
+
+  it('who changed the thrust limit on the night shift: found from the board in four actions, and taken away on paper', async () => {
+    await page.goto('/')
+    await page.getByRole('navigation', { name: 'Main' }).getByRole('link', { name: 'History' }).click()
+    await page.getByLabel('What', { exact: true }).selectOption('thrustLimit')
+    const row = page.getByRole('table', { name: 'Each change, newest first' }).getByRole('row').filter({ hasText: 'thrust limit' })
+    await row.getByText('Night shift').waitFor()
+    expect(await row.innerText()).toMatch(/LID-02\.Z[\s\S]*thrust limit[\s\S]*38[\s\S]*52[\s\S]*Night shift[\s\S]*stored by Tobias Achterberg[\s\S]*Nobody named[\s\S]*no reason given[\s\S]*finding \d+, open[\s\S]*v1 to v2/)
+    await row.getByRole('link', { name: 'thrust limit' }).click()
+    await page.getByRole('heading', { name: 'Thrust limit, LID-02.Z' }).waitFor()
+    expect(await page.getByRole('img', { name: /^Thrust limit of LID-02\.Z/ }).getAttribute('aria-label')).toContain('Known-good is 38 %')
+    const pdf = await downloaded(page, () => page.getByRole('link', { name: 'PDF for the binder' }).click())
+    const paper = pdfText(pdf.bytes)
+    expect(paper).toMatch(/Who changed the thrust limit on LID-02\.Z[\s\S]*Checkpoint of the log[\s\S]*Night shift[\s\S]*page 1 of 1/)
+    const csv = await downloaded(page, () => page.getByRole('link', { name: 'CSV', exact: true }).click())
+    expect(csv.bytes.toString()).toMatch(/setup,,thrustLimit,38,52,%[\s\S]*# lines,1/)
+    await page.goto('/')
+    await page.getByRole('link', { name: 'LID-02.Z', exact: true }).first().click()
+    await page.getByRole('heading', { level: 1, name: 'LID-02.Z' }).waitFor()
   })
 
   it('a version, and its file in both forms', async () => {
@@ -132,6 +153,6 @@ describe('what the auditor is not offered', () => {
     expect(await offered('/upload', 'You may read, not upload.')).toEqual([])
     expect(await offered('/tray', 'The tray is worked through by technicians and planners.')).toEqual([])
     expect(await offered('/people', 'People are kept by administrators.')).toEqual([])
-    expect(await page.getByRole('navigation', { name: 'Main' }).getByRole('link').allInnerTexts()).toEqual(['Board', 'Swaps', 'Units', 'Findings', 'Planned', 'Trail', 'Places', 'Nameplates', 'Rules', 'Format', 'Interface', 'Help'])
+    expect(await page.getByRole('navigation', { name: 'Main' }).getByRole('link').allInnerTexts()).toEqual(['Board', 'Swaps', 'Units', 'Findings', 'Planned', 'History', 'Trail', 'Places', 'Nameplates', 'Rules', 'Format', 'Interface', 'Help'])
   })
 })

@@ -54,6 +54,7 @@ const visits: readonly Visit[] = [
   { file: 'pages/people.vue', address: () => '/people', ready: /\d+ people/, as: 'admin' },
   { file: 'pages/findings/index.vue', address: () => '/findings', ready: /findings? to be explained/ },
   { file: 'pages/findings/[id].vue', address: async () => `/findings/${await idOf('/api/findings?axis=tag:LID-03.Z', item => item.cause === 'watched-change')}`, ready: /^LID-03\.Z thrust limit 38 → 55 %/ },
+  { file: 'pages/history.vue', address: () => '/history?field=thrustLimit&axis=LID-03.Z', ready: /^LID-03\.Z: \d+ changes?\./ },
   { file: 'pages/planned.vue', address: () => '/planned', ready: /announced/ },
   { file: 'pages/trail.vue', address: () => '/trail', ready: /\d+ entries, found sound/ },
   { file: 'pages/letters.vue', address: () => '/letters', ready: /letters? waits?|No letter waits/, as: 'admin' },

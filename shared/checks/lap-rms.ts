@@ -113,5 +113,5 @@ function loadsOf({ rows, cycle = 0 }: Lap, modulo: number | undefined, { effortO
 
 /** A dwell is waited only before the row that `next` names. */
 function waitingFor(move: Move, following: Row | undefined): Move {
-  return move.next === following?.move.move ? move : { ...move, dwell: undefined }
+  return move.dwell === undefined || move.next === following?.move.move ? move : { ...move, dwell: undefined }
 }

@@ -1,18 +1,19 @@
 import { isUnused } from '../settings/move-fields'
 import type { Move } from '../settings/types'
 import { plus } from './exact'
+import { onceFor } from './once'
 
 /** A used row and where it stands in the table. */
 export interface Row { readonly move: Move, readonly index: number }
 
-/** Rows that are in use, in the order of the table. */
-export function usedRows(moves: readonly Move[]): Row[] {
+/** Rows that are in use, in the order of the table; nearly every rule asks for them. */
+export const usedRows = onceFor((moves: readonly Move[]): readonly Row[] => {
   const rows: Row[] = []
   moves.forEach((move, index) => {
     if (!isUnused(move)) rows.push({ move, index })
   })
   return rows
-}
+})
 
 /** Numbers that a used row names in `next`: rows that start by themselves. */
 export function followers(rows: readonly Row[]): ReadonlySet<number> {
@@ -34,14 +35,14 @@ interface Reach { low: number, high: number, open: boolean }
  * can get. A row that nobody names has no entry. Relative rows pass on start + distance, and a loop that does not come
  * back to its place is gone round once.
  */
-export function knownStarts(rows: readonly Row[]): ReadonlyMap<number, Starts> {
+export const knownStarts = onceFor((rows: readonly Row[]): ReadonlyMap<number, Starts> => {
   const reached = new Map<number, Reach>([...followers(rows)].map(number => [number, { low: Infinity, high: -Infinity, open: false }]))
   const loops = endlessChains(rows)
   for (const { move } of leadingIn(rows, new Set(loops.flat()))) passOn(move, reached)
   for (const loop of loops) for (const { move } of onceRound(loop, reached)) passOn(move, reached)
   return new Map([...reached].map(([number, { low, high, open }]) =>
     [number, { positions: low > high ? [] : low === high ? [low] : [low, high], open }]))
-}
+})
 
 /** Tells the row that follows `move` where it starts. */
 function passOn(move: Move, reached: ReadonlyMap<number, Reach>): void {
@@ -84,7 +85,7 @@ function onceRound(loop: readonly Row[], reached: ReadonlyMap<number, Reach>): r
 }
 
 /** Rows that follow each other without end, each loop once, from its lowest number on. */
-export function endlessChains(rows: readonly Row[]): Row[][] {
+export const endlessChains = onceFor((rows: readonly Row[]): readonly (readonly Row[])[] => {
   const byNumber = new Map(rows.map(row => [row.move.move, row]))
   const settled = new Set<number>()
   const loops: Row[][] = []
@@ -101,7 +102,7 @@ export function endlessChains(rows: readonly Row[]): Row[][] {
     if (entry !== undefined) loops.push(fromLowest(path.slice(entry)))
   }
   return loops
-}
+})
 
 function fromLowest(loop: readonly Row[]): Row[] {
   const lowest = Math.min(...loop.map(row => row.move.move))

@@ -52,5 +52,7 @@ export function timeline(chain: readonly Move[], from: number, around: Surroundi
  * taken; any other chain ends at the same place wherever it began, whole turns of a modulo axis aside.
  */
 export function lapStart(chain: readonly Move[], modulo?: number): number {
-  return chain.reduce((place, move) => plus(place, distanceOf(move, place, modulo).distance), 0)
+  // What came before a move that ends at its target wherever it began counts for nothing.
+  const last = chain.findLastIndex(({ kind, turn = 'signed' }) => kind !== 'relative' && (modulo === undefined || turn === 'signed'))
+  return chain.slice(Math.max(0, last)).reduce((place, move) => plus(place, distanceOf(move, place, modulo).distance), 0)
 }

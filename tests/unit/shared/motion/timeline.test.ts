@@ -118,6 +118,12 @@ describe('lapStart', () => {
     expect(lapStart([relative(1, 20), relative(2, -5)])).toBe(15)
   })
 
+  it('goes by every move where one goes a way round: 350 forwards to 10, 20 on, from 30 back to 350', () => {
+    const chain = [absolute(1, 350), absolute(2, 10, { turn: 'positive' }), relative(3, 20), absolute(4, 350, { turn: 'negative' })]
+    expect(lapStart(chain, 360)).toBe(350)
+    expect(lapStart(chain)).toBe(350)
+  })
+
   it('is where the timeline from there ends again', () => {
     fc.assert(fc.property(anyChain, (chain) => {
       fc.pre(chain.some(({ kind }) => kind !== 'relative'))

@@ -13,7 +13,8 @@ import { fileOf } from './sample-file'
  * comes in: the first out of the canonical text that is stored, the second out of the file. microdiff's are what its users
  * have: plain objects of JSON.parse, absent keys left out; making either is not in the time. microdiff pairs rows by index and
  * knows no field. On an inserted row both it and the flat reading report every value behind it, a record each, and time goes
- * into making records; the renumbered reading says it in a run and a row.
+ * into making records; the renumbered reading says it in a run and a row, and is what is asked for there. That the flat list
+ * keep the aim of the other flat ones is an aim of our own.
  */
 
 type Table = readonly Move[]
@@ -70,7 +71,7 @@ export async function measureDiff(): Promise<Figure[]> {
       const [plainBefore, plainAfter] = [plainOf(before), plainOf(after)]
       const toMicrodiff = (work: (before: Content, after: Content) => unknown) =>
         ratioOf(() => work(before, after), () => microdiff(plainBefore, plainAfter), 15, Math.ceil(16000 / rows))
-      figures.push(atMost(`flat difference, ${rows} moves, ${name}`, toMicrodiff(diffContents), 0.15))
+      figures.push(atMost(change === inserted ? `flat list of a row inserted among ${rows}, an aim of our own` : `flat difference, ${rows} moves, ${name}`, toMicrodiff(diffContents), 0.15))
       if (rows === 256) figures.push(atMost(`renumbered difference, ${rows} moves, ${name}`, toMicrodiff(diffRenumbered), 2))
       if (change === inserted) figures.push(atMost(`said of a row inserted among ${rows}`, saidOf(before, after), 2, 'runs and rows'))
     }

@@ -2,6 +2,7 @@ import { neighboursTold, type Neighbours, type SisterGroup } from '#shared/api/n
 import { addressTwice } from '#shared/checks/live/address-twice'
 import { sistersHeld, type SisterRow } from '#shared/checks/live/sister-outlier'
 import type { LiveResult } from '#shared/checks/live/types'
+import { diffRenumbered } from '#shared/diff/renumber'
 import { Refusal } from '#shared/errors/refusal'
 import type { Content } from '#shared/settings/types'
 import type { Actor } from '#server/database/actor'
@@ -53,7 +54,7 @@ function sistersOnWire(db: VaultDb, { role, model, axes }: Sisters, contents: Co
     return content ? [{ row, tag: row.axis.tag, flags: row.axis.flags, content }] : []
   })
   const dictionary = judgingQueries(db).nameplate.get({ model })?.nameplate.dictionary
-  const { rows, results } = sistersHeld(alike, dictionary)
+  const { rows, results } = sistersHeld(alike, dictionary, (model, content) => diffRenumbered(model, content)?.pairs)
   const columns = columnsOf(alike.map(({ row }) => row.machine.id === machineId), rows)
   return {
     role, model, of: alike.length,

@@ -5,12 +5,15 @@ import type { Dictionary } from '../../settings/nameplate'
 import type { AxisFlag, Content, ExtraValue } from '../../settings/types'
 import { anyValue } from '../format'
 import { atExtra, atMove, atSetup, atZone } from '../pointers'
+import { byNumber, type NameOf } from './sister-rows'
 
 /** One harm value of an axis that its sisters may be held against. */
 export interface SisterValue {
   /** The same on every sister: `thrustLimit`, `move 5 forceLimit`, `zone 1 from`, `extra K-017`. */
   readonly key: string
   readonly words: string
+  /** Its words on this axis, where they are others: a move that has another number here. */
+  readonly here?: string
   /** In the axis' own content. */
   readonly at: string
   readonly value: ExtraValue
@@ -20,9 +23,9 @@ export interface SisterValue {
   readonly rowKey?: string
 }
 
-/** The values of an axis that weigh harm, without those that belong to its place or are taught to its unit. */
-export function harmValues(content: Content, flags: readonly AxisFlag[], dictionary: Dictionary = {}): SisterValue[] {
-  return [...ofSetup(content), ...ofZones(content), ...ofMoves(content, flags), ...ofExtra(content, dictionary)]
+/** The values of an axis that weigh harm, without those that belong to its place or are taught to its unit; moves go by `nameOf`. */
+export function harmValues(content: Content, flags: readonly AxisFlag[], dictionary: Dictionary = {}, nameOf: NameOf = byNumber): SisterValue[] {
+  return [...ofSetup(content), ...ofZones(content), ...ofMoves(content, flags, nameOf), ...ofExtra(content, dictionary)]
 }
 
 function ofSetup({ axisKind, setup }: Content): SisterValue[] {
@@ -45,18 +48,23 @@ function ofZones({ axisKind, zones }: Content): SisterValue[] {
 }
 
 /** On an axis with a flag the motion fields of its moves can hurt as well. */
-function ofMoves({ axisKind, moves }: Content, flags: readonly AxisFlag[]): SisterValue[] {
+function ofMoves({ axisKind, moves }: Content, flags: readonly AxisFlag[], nameOf: NameOf): SisterValue[] {
   const names = moveFieldNames.filter(name => moveFields[name].weight === 'harm' || (moveFields[name].weight === 'motion' && flags.length > 0))
-  return moves.flatMap((move, index) => isUnused(move)
-    ? []
-    : names.flatMap((name) => {
-        const value = move[name]
-        const field = moveFields[name]
-        const unit = 'unit' in field ? field.unit[axisKind] ?? '' : ''
-        return value === undefined
-          ? []
-          : [{ key: `move ${move.move} ${name}`, words: `move ${move.move} ${field.label}`, at: atMove({ move, index }, name), value, text: textOf(value, unit), rowKey: `move ${move.move} kind` }]
-      }))
+  return moves.flatMap((move, index) => {
+    if (isUnused(move)) return []
+    const { key, number, here } = nameOf(move.move)
+    return names.flatMap((name): SisterValue[] => {
+      const value = move[name]
+      const field = moveFields[name]
+      if (value === undefined) return []
+      const unit = 'unit' in field ? field.unit[axisKind] ?? '' : ''
+      const text = name === 'next' ? nameOf(Number(value)).number : textOf(value, unit)
+      return [{
+        key: `${key} ${name}`, words: `move ${number} ${field.label}`, ...here === undefined ? {} : { here: `${here} ${field.label}` },
+        at: atMove({ move, index }, name), value, text, rowKey: `${key} kind`,
+      }]
+    })
+  })
 }
 
 /** Words of the format stand as they are; anyValue would put them in quotes. */

@@ -4,6 +4,7 @@ import { answers } from '../answers'
 import { inWords } from '../format'
 import type { CheckResult } from '../types'
 import { harmValues, type SisterValue } from './sister-fields'
+import { rowNames, type PairsOf } from './sister-rows'
 import type { LiveResult } from './types'
 
 const { warn } = answers('sister-outlier')
@@ -33,12 +34,12 @@ export const sisterOutlier = {
   reason: 'Axes that do the same work with the same unit are set alike; the one that is not was changed by somebody, or forgotten.',
   formula: 'at least 4 sister axes (same role and model in a site) agree and at most 1 in 5 does not; harm weight only, place and taught values left out',
   levels: ['warn'],
-  judge: (sisters: readonly Sister[], dictionary?: Dictionary) => sistersHeld(sisters, dictionary).results,
+  judge: (sisters: readonly Sister[], dictionary?: Dictionary, pairsOf?: PairsOf) => sistersHeld(sisters, dictionary, pairsOf).results,
 } as const
 
-/** Matrix and results from one look at the sisters: of thousands, reading their values is what takes time. */
-export function sistersHeld(sisters: readonly Sister[], dictionary?: Dictionary): { readonly rows: SisterRow[], readonly results: LiveResult[] } {
-  const table = tableOf(sisters, dictionary)
+/** Matrix and results from one look at the sisters: of thousands, reading their values is what takes time. Rows of moves go by number where `pairsOf` pairs none. */
+export function sistersHeld(sisters: readonly Sister[], dictionary?: Dictionary, pairsOf: PairsOf = () => undefined): { readonly rows: SisterRow[], readonly results: LiveResult[] } {
+  const table = tableOf(sisters, dictionary, pairsOf)
   const rows = table.map(({ key, words, cells, odd }) => ({ key, words, values: cells.map(cell => cell?.value), texts: cells.map(cell => cell?.text ?? ''), odd }))
   return { rows, results: resultsOf(sisters, table) }
 }
@@ -67,9 +68,9 @@ function resultOf(tag: string, index: number, rows: readonly TableRow[]): CheckR
   const agreeing = Math.min(...rows.map(row => row.agreeing))
   const [row] = rows
   if (rows.length > 1 || !row) {
-    return warn(at, `${tag}: ${inWords(rows.map(({ words }) => words))} are not as on ${agreeing} sister axes.`, { fields, agreeing, axes: [tag] })
+    return warn(at, `${tag}: ${inWords(rows.map(({ words, cells }) => cells[index]?.here ?? words))} are not as on ${agreeing} sister axes.`, { fields, agreeing, axes: [tag] })
   }
-  return warn(at, `${tag}: ${row.words} is ${own[0]?.text ?? 'not set'}, while ${agreeing} sister axes have ${row.common?.text ?? 'none'}.`,
+  return warn(at, `${tag}: ${own[0]?.here ?? row.words} is ${own[0]?.text ?? 'not set'}, while ${agreeing} sister axes have ${row.common?.text ?? 'none'}.`,
     { fields, ...told('value', own[0]), ...told('common', row.common), agreeing, axes: [tag] })
 }
 
@@ -84,10 +85,11 @@ interface TableRow {
   readonly agreeing: number
 }
 
-function tableOf(sisters: readonly Sister[], dictionary?: Dictionary): TableRow[] {
+function tableOf(sisters: readonly Sister[], dictionary: Dictionary | undefined, pairsOf: PairsOf): TableRow[] {
   // What can hurt on one of them is looked at on all.
   const flags = sisters.flatMap(sister => sister.flags)
-  const columns = sisters.map(({ content }) => new Map(harmValues(content, flags, dictionary).map(value => [value.key, value])))
+  const names = rowNames(sisters.map(({ content }) => content), pairsOf)
+  const columns = sisters.map(({ content }, index) => new Map(harmValues(content, flags, dictionary, names[index]).map(value => [value.key, value])))
   const fields = new Map(columns.flatMap(column => [...column]))
   return [...fields.values()].map(({ key, words, rowKey }) => {
     const cells = columns.map(column => column.get(key))

@@ -1,6 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { sisterMatrix, sisterOutlier, type Sister } from '../../../../../shared/checks/live/sister-outlier'
+import { diffRenumbered } from '../../../../../shared/diff/renumber'
 import type { Content, Setup } from '../../../../../shared/settings/types'
 import { absolute, linear, press, tell } from '../../../../support/check-input'
 
@@ -54,6 +55,40 @@ describe('sister-outlier', () => {
     expect(sisterOutlier.judge(list)).toMatchObject([{
       at: ['/moves/0/forceLimit', '/moves/0/approach'], values: { fields: ['move 2 forceLimit', 'move 2 approach'], agreeing: 4, axes: ['LID-04.Z'] },
     }])
+  })
+
+  describe('where a row was put in', () => {
+    const flagged = (...contents: Content[]) => sisters(...contents).map((one): Sister => ({ ...one, flags: ['gravity'] }))
+    const pairsOf = (model: Content, content: Content) => diffRenumbered(model, content)?.pairs
+    const paired = (list: readonly Sister[]) => sisterOutlier.judge(list, {}, pairsOf).map(tell)
+    const table = [absolute(1, 10, { next: 2 }), absolute(2, 45, { next: 3 }), press(3, 100, 150, { next: 4 }), absolute(4, 0)]
+    const common = linear({}, table)
+    const put = (force: number) => linear({}, [absolute(1, 10, { next: 3 }), absolute(2, 77), absolute(3, 45, { next: 4 }), press(4, 100, 150, { next: 5, forceLimit: force }), absolute(5, 0)])
+
+    it('tells that row and not those that it moved on, whose followers moved with them', () => {
+      expect(paired(flagged(common, common, put(30), common, common))).toEqual(['warn: LID-03.Z: move 2 (added) kind is absolute, while 4 sister axes have none.'])
+    })
+
+    it('tells an edit behind it by both numbers', () => {
+      const list = flagged(common, common, put(45), common, common)
+      expect(paired(list)).toEqual([
+        'warn: LID-03.Z: move 4 (3 on the others) force is 45 %, while 4 sister axes have 30 %.',
+        'warn: LID-03.Z: move 2 (added) kind is absolute, while 4 sister axes have none.',
+      ])
+      expect(sisterOutlier.judge(list, {}, pairsOf).map(({ at }) => at)).toEqual([['/moves/3/forceLimit'], ['/moves/1/kind']])
+    })
+
+    it('tells as much wherever the axis stands in the list', () => {
+      expect(paired(flagged(put(30), common, common, common, common))).toEqual(['warn: LID-01.Z: move 2 (added) kind is absolute, while 4 sister axes have none.'])
+    })
+
+    it('tells the row that one of them lacks once, and the follower that is another therefore', () => {
+      const less = linear({}, [absolute(1, 10, { next: 2 }), press(2, 100, 150, { next: 3 }), absolute(3, 0)])
+      expect(paired(flagged(common, common, less, common, common))).toEqual([
+        'warn: LID-03.Z: move 1 then is 3, while 4 sister axes have 2.',
+        'warn: LID-03.Z: move 2 kind is not set, while 4 sister axes have absolute.',
+      ])
+    })
   })
 
   it('looks past place, taught and motion values', () => {

@@ -58,7 +58,7 @@ afterAll(() => plant.close())
 interface Statement { readonly getQuery: () => { sql: string, params: unknown[] } }
 
 /** Nothing of a fleet's size is sorted here: the events, waivers and rules of one axis, the channels of one serial. */
-const maySort = ['life.voids', 'life.takenOut', 'judging.channels', 'judging.rules', 'values.rules', 'waivers.notEnded', 'attachments.ofVersion']
+const maySort = ['life.voids', 'life.takenOut', 'life.findingsClosed', 'life.findings', 'life.swaps', 'judging.channels', 'judging.rules', 'values.rules', 'waivers.notEnded', 'attachments.ofVersion']
 /** The board takes every axis. */
 const mayScan = ['axes.all']
 

@@ -13,9 +13,9 @@ import type { MotionItem } from '#shared/swap/types'
 import { formatExact } from '#shared/units/exact-time'
 import type { Vault } from '#server/database/client'
 import { judgingQueries } from '#server/database/judging/queries'
-import { logQueries } from '#server/database/log/queries'
 import { unitRows } from '#server/database/unit/queries'
 import { plantOf } from '../people/plant'
+import { checkpointNow } from '../trail/trail'
 import { sha256 } from '../uploads/ingest'
 import type { KitParts } from '../kit/kit-parts'
 import { drawSheet } from './draw-sheet'
@@ -52,7 +52,7 @@ export function sheetWords(vault: Vault, parts: KitParts, { origin, blankSerial 
   const nameplate = (unit ? judgingQueries(vault.db).nameplate.get({ model: unit.model })?.nameplate : parts.source.nameplate)
   const { content, left, prove } = unit ? fitted : forSomeUnit(parts)
   const source = { content, ...(nameplate ? { nameplate } : {}), left, prove: prove.filter(name => !name.startsWith('extra:')) }
-  const entries = (logQueries(vault.db).newest.get()?.seq ?? -1) + 1
+  const { note, size: entries } = checkpointNow(vault)
   return {
     plant: plantOf(vault), tag: axis.tag, address: axisAddress(origin, axis.tag),
     place: [axis.role, machine.name, line.name, site.name].filter(Boolean).join(', ') + (axis.flags.length === 0 ? '' : `. Flagged: ${axis.flags.join(', ')}.`),
@@ -65,7 +65,7 @@ export function sheetWords(vault: Vault, parts: KitParts, { origin, blankSerial 
     prove: source.prove.filter(name => name !== 'homeOffset').map(name => labelOf(name).toLowerCase()),
     motion: { title: `First motion at ${firstPercent} % of each move’s speed, nobody in reach`, lines: motionLines(parts, content, nameplate) },
     subject: '', log: `log of ${entries} ${entries === 1 ? 'entry' : 'entries'}`,
-    printed: `printed ${formatExact(now, site.timeZone)}`, checkpoint: null,
+    printed: `printed ${formatExact(now, site.timeZone)}`, checkpoint: note.trimEnd().split('\n'),
   }
 }
 

@@ -33,6 +33,7 @@ describe('a comparison', () => {
     const body = await mountSuspended(DiffBody, { props: { view } })
     const row = body.findAll('.chg tbody tr').find(one => one.text().includes('thrust limit'))
     expect(words(row?.text() ?? '')).toMatch(/before 38.*after 55.*% of rated.*\+17 points.*243\.2 N became 352 N\..*stop.*jars crack above 300 N/)
+    expect(row?.get('th a').attributes('href')).toBe(`/history?field=thrustLimit&axis=${today.axisTag}`)
     expect(body.findAll('.chg tbody').map(group => group.attributes('aria-label'))).toEqual(['harm', 'motion', 'text'])
     expect(words(body.text())).toContain('9 rows, 8 before: 2 changed, 1 new, 5 under another number, 1 as before')
     expect(body.findAll('svg[role="img"]').map(picture => picture.attributes('aria-label')).filter(label => label?.includes('over time')).map(label => /Speed|Position|Thrust/.exec(label ?? '')?.[0])).toEqual(['Speed', 'Position', 'Thrust'])

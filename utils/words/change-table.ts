@@ -13,6 +13,8 @@ export interface ShownChange {
   readonly weight: Weight
   readonly label: string
   readonly place: string
+  /** The value whose history can be asked for; null for a row that came or went. */
+  readonly of: Pick<FieldChange, 'section' | 'field' | 'row'> | null
   readonly before: ExtraValue | undefined
   readonly after: ExtraValue | undefined
   readonly unit: string
@@ -37,7 +39,7 @@ function shownField(line: ChangeLine, context: MeansContext): Omit<ShownChange, 
   const numeric = values.every(value => value === undefined || typeof value === 'number')
   const [before, after] = numeric ? values : values.map(value => typeof value === 'number' ? sayValue(value, unit) : value)
   return {
-    key: line.key, weight: change.weight, label: words.label, place: placeWords(change), before, after, numeric, unit: numeric ? unit : '',
+    key: line.key, weight: change.weight, label: words.label, place: placeWords(change), of: change, before, after, numeric, unit: numeric ? unit : '',
     difference: differenceWords(change), means: meansOf(change, context),
   }
 }
@@ -51,7 +53,7 @@ function shownRow(line: ChangeLine, context: MeansContext): Omit<ShownChange, 'c
   const label = typeof values.label === 'string' ? `“${values.label}”. ` : ''
   const meaning = change.section === 'zone' ? 'The output is on in between.' : isNew ? 'Any call of this number now does this.' : 'Nothing answers to this number any more, or another move does.'
   return {
-    key: line.key, weight: change.weight, label: `${change.section} ${change.row ?? ''} is ${isNew ? 'new' : 'gone'}`, place: rowSummary(values, context),
+    key: line.key, weight: change.weight, label: `${change.section} ${change.row ?? ''} is ${isNew ? 'new' : 'gone'}`, place: rowSummary(values, context), of: null,
     before: isNew ? undefined : what, after: isNew ? what : undefined, unit: '', numeric: false,
     difference: isNew ? 'added' : 'removed', means: `${label}${meaning}`,
   }

@@ -28,11 +28,11 @@ describe('changeTable', () => {
   })
   it('puts newtons and the stop beside a raised thrust limit', () => {
     const line = find('thrust limit')
-    expect(line).toMatchObject({ before: 38, after: 55, unit: '% of rated', numeric: true, difference: '+17 points', means: '243.2 N became 352 N.' })
+    expect(line).toMatchObject({ before: 38, after: 55, unit: '% of rated', numeric: true, of: { section: 'setup', field: 'thrustLimit' }, difference: '+17 points', means: '243.2 N became 352 N.' })
     expect(line?.checks.map(check => [check.level, check.rule])).toEqual([['stop', 'site-rule']])
   })
   it('tells a new row as one line with what it does', () => {
-    expect(find('move 3 is new')).toMatchObject({ place: '98 to 104 mm, 36 % of rated', after: 'press', before: undefined, difference: 'added', numeric: false })
+    expect(find('move 3 is new')).toMatchObject({ place: '98 to 104 mm, 36 % of rated', after: 'press', before: undefined, difference: 'added', numeric: false, of: null })
   })
   it('says how long a changed move takes', () => {
     expect(find('speed', 'move 1')?.means).toBe('Move 1 takes at least 0.333 s, was 0.353 s.')

@@ -1,5 +1,5 @@
 import { mountSuspended } from '@nuxt/test-utils/runtime'
-import { describe, expect, it } from 'vitest'
+import { describe, expect, it, vi } from 'vitest'
 import { BoardAxisTable, BoardFind, BoardNeeds, BoardPlantMachines } from '#components'
 import type { Attention, BoardAxis } from '#shared/api/board'
 import { needOf } from '~/utils/board/attention'
@@ -99,6 +99,31 @@ describe('the table', () => {
     const table = await mountSuspended(BoardAxisTable, { props: { axes: many, none: '' } })
     expect(table.attributes('aria-rowcount')).toBe('10001')
     expect(table.findAll('tbody tr').length).toBeLessThan(200)
+  })
+
+  it('leaves those that were found, in the order in which all of them stand', async () => {
+    const table = await mountSuspended(BoardAxisTable, { props: { axes: plant, found: new Set([plant[0], plant[3], plant[1]]), none: '' } })
+    expect(order(table)).toEqual(['JAR-01.T', 'LID-02.X', 'LID-02.Z'])
+    expect(table.attributes('aria-rowcount')).toBe('4')
+    await table.setProps({ found: new Set([plant[4]]) })
+    expect(order(table)).toEqual(['CAS-01.P'])
+  })
+
+  it('follows a link of a row within the application, and leaves one that is to open elsewhere to the browser', async () => {
+    const table = await mount()
+    const link = table.findAll('tbody .tag')[2]?.element
+    expect(link?.getAttribute('href')).toBe('/axes/LID-02.X')
+    const pressed = (more: MouseEventInit) => {
+      const event = new MouseEvent('click', { bubbles: true, cancelable: true, ...more })
+      link?.dispatchEvent(event)
+      return event.defaultPrevented
+    }
+    const push = vi.spyOn(useRouter(), 'push').mockResolvedValue(undefined)
+    expect([pressed({ ctrlKey: true }), pressed({ shiftKey: true }), pressed({ button: 1 })]).toEqual([false, false, false])
+    expect(push).not.toHaveBeenCalled()
+    expect(pressed({})).toBe(true)
+    expect(push).toHaveBeenCalledExactlyOnceWith('/axes/LID-02.X')
+    push.mockRestore()
   })
 
   it('names the one next thing each axis waits for', () => {

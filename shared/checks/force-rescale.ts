@@ -61,7 +61,7 @@ function percentsOf({ setup, moves }: Content): Percent[] {
     const value = setup[field]
     return value === undefined ? [] : [{ at: atSetup(field), words: setupPercents[field], value }]
   })
-  const inMoves = usedRows(moves).sort((one, other) => one.move.move - other.move.move).flatMap((row) => {
+  const inMoves = usedRows(moves).toSorted((one, other) => one.move.move - other.move.move).flatMap((row) => {
     const { move, forceLimit } = row.move
     return forceLimit === undefined ? [] : [{ at: atMove(row, 'forceLimit'), words: `move ${move} force`, value: forceLimit }]
   })

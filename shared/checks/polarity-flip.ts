@@ -49,7 +49,7 @@ function mirrorOf({ setup: now }: Content, { setup: then }: Content): number | u
 }
 
 /** Rows of one number and kind in both tables that are no mirror image; all rows where no two can be held side by side. */
-function rowsAstray(content: Content, before: Content, centre: number): Row[] {
+function rowsAstray(content: Content, before: Content, centre: number): readonly Row[] {
   const then = new Map(usedRows(before.moves).map(({ move }) => [move.move, move]))
   const rows = usedRows(content.moves)
   const pairs = rows.flatMap((row) => {

@@ -40,7 +40,8 @@ export default defineNuxtConfig({
   srcDir: '.',
   compatibilityDate: '2026-12-01',
   // The fonts of sheets and labels: read at run time, so that the bundler does not see them.
-  nitro: { esbuild: { options: { target: 'node20' } }, externals: { traceInclude: fontFiles } },
+  // pdfkit brings an older @noble/hashes of its own: ours goes into the bundle, so that neither stands in the other's place.
+  nitro: { esbuild: { options: { target: 'node20' } }, externals: { traceInclude: fontFiles, inline: ['@noble/hashes', '@noble/curves'] } },
   typescript: {
     tsConfig: { exclude: ['../tests/architecture', '../tests/crash', '../tests/e2e', '../tests/server', '../tests/support', '../tests/unit', '../fixtures', '../shared', '../bench', '../scripts', '../drizzle.config.ts', '../vitest.config.ts'] },
     sharedTsConfig: { include: ['../tests/unit/shared/**/*'] },

@@ -181,6 +181,10 @@ const opened: readonly Opened[] = [
     await press(page, 'Explain it')
     await press(page, 'Put it under my name')
   } },
+  { what: 'axes that were not read', file: 'pages/history.vue', open: async (page) => {
+    await press(page, /^Which axes/)
+    await page.getByRole('heading', { name: 'Not read in that time' }).waitFor()
+  } },
   { what: 'a change being announced', file: 'pages/planned.vue', open: async (page) => {
     await press(page, 'Announce a change')
     await press(page, 'Announce it')

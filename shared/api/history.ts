@@ -39,7 +39,7 @@ export const actsQuery = listQuery.extend({ kind: z.enum(historyKinds), ...stret
 /** One act beside the settings of axes, from the log: what its subject was, and what it became. */
 export const historyAct = z.object({
   seq: z.int(), at: instantSchema, by: z.string(), act: z.string(), subject: z.string(),
-  changes: z.array(z.object({ field: z.string(), before: z.unknown(), after: z.unknown() })).describe('absent before: it is new'), note: z.string().nullable(),
+  changes: z.array(z.object({ field: z.string(), before: z.unknown().optional(), after: z.unknown().optional() })).describe('before absent: was not set; after absent: is not set'), note: z.string().nullable(),
 })
 export type HistoryAct = z.infer<typeof historyAct>
 export const actsPage = pageOf(historyAct)

@@ -18,15 +18,18 @@ const size = 7.5
 const step = size * 1.3
 const gap = mm(2.5)
 
+/** To the second and with its zone; the offset stands at the head of the file. */
+const timeText = (at: string, zone: string) => formatExact(at, zone).replace(/ \(.*\)$/, '')
+
 const columns: readonly { readonly head: string, readonly width: number, readonly style?: TextStyle, readonly of: (item: HistoryItem) => string }[] = [
-  { head: 'Captured, received by the vault', width: mm(47), style: { face: 'mono', size: 6.5 }, of: item => `${formatExact(item.capturedAt, item.timeZone)} ${formatExact(item.at, item.timeZone)}` },
+  { head: 'Captured, received by the vault', width: mm(40), style: { face: 'mono', size: 6.5 }, of: item => `${timeText(item.capturedAt, item.timeZone)}, ${timeText(item.at, item.timeZone)}` },
   { head: 'Axis', width: mm(22), style: { face: 'mono', size }, of: item => item.tag },
   { head: 'Value', width: mm(34), of: item => `${placeText(item)} (${item.weight})` },
   { head: 'Before', width: mm(24), style: { face: 'mono', size }, of: item => valueText(item.before, item.unit) || 'not set' },
   { head: 'After', width: mm(24), style: { face: 'mono-bold', size }, of: item => valueText(item.after, item.unit) || 'not set' },
   { head: 'Changed by, stored by', width: mm(36), of: item => `${changerText(item)}, ${item.storedBy}` },
   { head: 'Allowed by', width: mm(24), of: item => item.allowedBy ?? 'Nobody named' },
-  { head: 'Why', width: mm(40), of: item => whyText(item) },
+  { head: 'Why', width: mm(47), of: item => whyText(item) },
   { head: 'Versions', width: mm(19), style: { face: 'mono', size }, of: item => [`${item.baseNumber === null ? '' : `v${item.baseNumber} to `}v${item.number}`, marksText(item)].filter(Boolean).join(' ') },
 ]
 

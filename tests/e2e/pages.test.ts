@@ -167,7 +167,7 @@ const opened: readonly Opened[] = [
     await page.getByRole('group', { name: /^Which unit sits there/ }).waitFor()
   } },
   { what: 'which unit is truly fitted', file: 'pages/swaps/[id].vue', open: page => press(page, 'Abandon the swap') },
-  { what: 'what the old unit tells', file: 'pages/swaps/[id].vue', open: page => press(page, /^Look at it: Which axis/) },
+  { what: 'what the old unit tells', file: 'pages/swaps/[id].vue', open: page => press(page, /^Look at it ?: Which axis/) },
   { what: 'where a file of the tray belongs', file: 'pages/tray.vue', open: page => press(page, /say where it sits|Say where it belongs/) },
   { what: 'files that were read', file: 'pages/upload.vue', open: async (page) => {
     await drop(page, [jsonFile('known.json', lidPress({ serial: 'HL40-23-00392', setup: { thrustLimit: 70 } })), jsonFile('stranger.json', lidPress({ serial: 'HL40-26-09999' })), { name: 'torn.json', mimeType: 'application/json', buffer: Buffer.from('{') }])

@@ -38,6 +38,7 @@ export const historyQueries = prepared(db => ({
   lastBefore: db.select({ id: version.id }).from(version).where(lt(version.receivedAt, place('to'))).orderBy(desc(version.receivedAt), desc(version.id)).limit(1).prepare(),
   newest: db.select({ id: version.id }).from(version).orderBy(desc(version.id)).limit(1).prepare(),
   axesOfMachine: db.select({ id: axis.id }).from(axis).where(eq(axis.machineId, place('machineId'))).orderBy(asc(axis.id)).prepare(),
+  axesOfLine: db.select({ id: axis.id }).from(machine).innerJoin(axis, eq(axis.machineId, machine.id)).where(eq(machine.lineId, place('lineId'))).prepare(),
   peopleNamed: db.select({ id: person.id }).from(person).where(sql`${person.name} = ${place('name')} COLLATE NOCASE`).prepare(),
   /** Axes of which no file came between two instants, by id from after one. */
   notRead: db.select({ axis, machine: machine.name, line: line.name, site: site.name, timeZone: site.timeZone, status: axisState.status, lastUploadAt: axisState.lastUploadAt })

@@ -22,7 +22,7 @@ export function historyFilter({ db }: Vault, actor: Actor, query: Filters): Hist
   assertPlacesSeen(db, actor, query)
   const axisIds = axesAsked(db, query)
   const asked: Asked = {
-    names: namesAsked(query), section, row, weight, axisIds, unitId: unit, lineId: line, siteId: site, sites: actor.sites,
+    names: namesAsked(query), section, row, weight, axisIds, unitId: unit, lineId: query.axis === undefined && query.machine === undefined ? null : line, siteId: site, sites: actor.sites,
     people: by === undefined || by === 'nobody' ? null : peopleAsked(db, by), nobody: by === 'nobody',
   }
   return { asked, ways: waysFor(asked), stretch: stretchOf(db, query) }
@@ -45,11 +45,14 @@ function namesAsked({ field, section }: Filters): Asked['names'] {
   return wanted
 }
 
-function axesAsked(db: VaultDb, { axis, machine }: Filters): number[] | null {
-  const ofMachine = machine === undefined ? null : historyQueries(db).axesOfMachine.all({ machineId: machine }).map(({ id }) => id)
-  if (axis === undefined) return ofMachine
+/** A line is its axes: looked up once, and not again beside every key. */
+function axesAsked(db: VaultDb, { axis, machine, line }: Filters): number[] | null {
+  const queries = historyQueries(db)
+  const ofPlace = machine !== undefined ? queries.axesOfMachine.all({ machineId: machine }) : line !== undefined ? queries.axesOfLine.all({ lineId: line }) : null
+  const within = ofPlace?.map(({ id }) => id) ?? null
+  if (axis === undefined) return within
   const id = siteQueries(db).find('axis', axis)?.id
-  return id === undefined || (ofMachine !== null && !ofMachine.includes(id)) ? [] : [id]
+  return id === undefined || (within !== null && !within.includes(id)) ? [] : [id]
 }
 
 /** A name stands for everyone who bears it, and for the text as it was written. */

@@ -51,7 +51,7 @@ describe('walks on a fleet', () => {
     expect(lines.length).toBeGreaterThan(0)
   })
 
-  it.each(['item', 'firstFrom', 'lastBefore', 'newest', 'axesOfMachine', 'notRead', 'findingState'] as const)('%s: looks up, and sorts nothing', (name) => {
+  it.each(['item', 'firstFrom', 'lastBefore', 'newest', 'axesOfMachine', 'axesOfLine', 'notRead', 'findingState'] as const)('%s: looks up, and sorts nothing', (name) => {
     const { sql, params } = (historyQueries(plant.vault.db)[name] as unknown as { getQuery: () => { sql: string, params: unknown[] } }).getQuery()
     const lines = plan(sql, params.map(param => (typeof param === 'object' ? 1 : param)))
     expect(slow(lines).filter(line => !(name === 'newest' && line === 'SCAN version'))).toEqual([])
@@ -108,11 +108,12 @@ describe('what one request reads', () => {
     const by = (query: Parameters<typeof historyFilter>[2]) => historyFilter(plant.vault, ines, query).ways.map(way => way.by)
     expect(by({ axis: '5', field: 'thrustLimit' })).toEqual(['axis'])
     expect(by({ machine: 4 })).toEqual(Array.from({ length: 5 }, () => 'axis'))
-    expect(by({ field: 'targets', line: 2 })).toEqual(['field', 'field', 'field'])
+    expect(by({ field: 'targets', site: 1 })).toEqual(['field', 'field', 'field'])
+    expect(by({ field: 'targets', line: 2 })).toEqual(Array.from({ length: 20 }, () => 'axis'))
     expect(by({ by: 'Ines Morel' })).toEqual(['storer', 'changer', 'changer'])
     expect(by({ by: 'nobody', field: 'thrustLimit' })).toEqual(['field'])
     expect(by({ by: 'nobody' })).toEqual(['nobody'])
-    expect(by({ weight: 'harm', line: 2 })).toEqual(['weight'])
+    expect(by({ weight: 'harm', site: 1 })).toEqual(['weight'])
     expect(by({ from: iso(start) })).toEqual(['all'])
   })
 

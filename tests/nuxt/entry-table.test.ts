@@ -188,7 +188,7 @@ describe('the drive’s own list', () => {
 
   it('is no form of the kit where the model has no table', async () => {
     const { mounted, select } = await kit({}, { model: 'LT20', axisKind: 'linear', stroke: 200 })
-    expect([...select.options].map(option => option.value)).toEqual(['json', 'csv'])
+    expect([...select.options].map(option => option.value)).toEqual(['json', 'csv', 'pdf', 'zip'])
     mounted.unmount()
   })
 

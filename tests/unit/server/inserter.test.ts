@@ -20,7 +20,7 @@ afterAll(() => {
 describe('inserter', () => {
   it('answers the new id, and reads back what it wrote, JSON and flags too', () => {
     const insert = inserter(vault.db, site)
-    const row = { rev: 1, name: 'Larkfield', timeZone: 'Europe/Berlin', fourEyes: false, releaseHours: 24, knownGoodMonths: 12, watched: ['smoothingTime'], madeAt: '2026-01-01T00:00:00.000Z' }
+    const row = { rev: 1, name: 'Larkfield', timeZone: 'Europe/Berlin', fourEyes: false, releaseHours: 24, knownGoodMonths: 12, watched: ['smoothingTime'], attachmentWanted: true, labelWanted: false, paper: 'A4' as const, madeAt: '2026-01-01T00:00:00.000Z' }
     const id = insert(row)
     expect(vault.db.select().from(site).all()).toEqual([{ id, ...row }])
     expect(insert({ ...row, name: 'Larkfield West' })).toBe(id + 1)

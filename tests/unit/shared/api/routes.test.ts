@@ -119,8 +119,18 @@ const doors = `
   POST /api/swaps/:id/release            | p         |        | swap    | signed
   POST /api/swaps/:id/abandon            | tp        |        | swap    |
   POST /api/swaps/:id/put-back           | tp        |        | swap    |
+  GET /api/history                       | tpaA      | read   |         |
+  GET /api/history/acts                  | paA       | read   |         |
+  GET /api/history/not-read              | tpaA      | read   |         |
   GET /api/board                         | tpaA      | read   |         |
   GET /api/log                           | paA       | read   |         |
+  GET /api/log/key                       | paA       | read   |         |
+  GET /api/log/checkpoint                | paA       | read   |         |
+  GET /api/log/file                      | paA       | read   |         |
+  GET /api/log/proof                     | paA       | read   |         |
+  GET /api/log/consistency               | paA       | read   |         |
+  GET /api/trail                         | paA       |        |         |
+  POST /api/trail/verifications          | aA        |        |         |
 `.trim().split('\n').map(line => line.split('|').map(cell => cell.trim()))
 
 const letters = { technician: 't', planner: 'p', auditor: 'a', admin: 'A' } as const
@@ -135,9 +145,9 @@ describe('the doors', () => {
     expect(declared.map(doorOf)).toEqual(doors.map(([name = '', may = '', token = '', scope = '', signed = '']) => [name, may, token, scope, signed]))
   })
 
-  it('let an auditor read, work on findings, and nothing else', () => {
+  it('let an auditor read, work on findings, have the vault verified, and nothing else', () => {
     const auditors = declared.filter(([, { may }]) => Array.isArray(may) && may.includes('auditor'))
-    expect(auditors.map(([name]) => name).filter(name => methodOf(name) !== 'GET')).toEqual(['explain', 'close', 'reopen'].map(act => `POST /api/findings/:id/${act}`))
+    expect(auditors.map(([name]) => name).filter(name => methodOf(name) !== 'GET')).toEqual([...['explain', 'close', 'reopen'].map(act => `POST /api/findings/:id/${act}`), 'POST /api/trail/verifications'])
   })
 
   it('let a script read or upload, never sign, register or change', () => {
@@ -173,7 +183,7 @@ describe('what goes in', () => {
   })
 
   it('is a body where something is written, and never one where something is read', () => {
-    const bare = ['POST /api/sign-out', 'POST /api/letters/:id/send-again', 'POST /api/tokens/:id/end', 'POST /api/judging-runs', 'POST /api/versions/:id/judge']
+    const bare = ['POST /api/sign-out', 'POST /api/letters/:id/send-again', 'POST /api/tokens/:id/end', 'POST /api/judging-runs', 'POST /api/versions/:id/judge', 'POST /api/trail/verifications']
     for (const [name, { body }] of declared) expect(body !== undefined, name).toBe(methodOf(name) !== 'GET' && !bare.includes(name))
   })
 

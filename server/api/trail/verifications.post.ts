@@ -1,9 +1,10 @@
 import { answer } from '#server/http/answer'
 import { defineRoute } from '#server/http/route'
 import { assertReadsWhole } from '#server/services/trail/trail'
-import { verifyAndRecord } from '#server/services/trail/verification'
+import { keepVerification, verifyNow } from '#server/services/trail/verification'
 
-export default defineRoute('POST /api/trail/verifications', async ({ actor, vault }) => {
+export default defineRoute('POST /api/trail/verifications', async ({ actor, vault, once }) => {
   assertReadsWhole(actor)
-  return answer(201, await verifyAndRecord(vault))
+  const ended = await verifyNow(vault)
+  return once(() => answer(201, keepVerification(vault, ended)))
 })

@@ -50,5 +50,3 @@ export const historyQueries = prepared(db => ({
       notExists(db.select({ id: sighting.id }).from(sighting).where(and(eq(sighting.axisId, axis.id), gte(sighting.receivedAt, place('from')), lt(sighting.receivedAt, place('to'))))),
     )).orderBy(asc(axis.id)).limit(place('limit')).prepare(),
 }))
-
-export type HistoryRow = NonNullable<ReturnType<ReturnType<typeof historyQueries>['item']['get']>>

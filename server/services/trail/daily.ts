@@ -1,7 +1,7 @@
 import type { Logger } from 'pino'
 import type { Vault } from '#server/database/client'
 import { recordTrailKey } from './key'
-import { isDue, verifyAndRecord } from './verification'
+import { isDue, verifyAndKeep } from './verification'
 
 const tenMinutes = 600_000
 
@@ -10,7 +10,7 @@ export function keepTrail(vault: Vault, logger: Pick<Logger, 'info' | 'error'>):
   recordTrailKey(vault)
   const look = () => {
     if (!isDue(vault)) return
-    verifyAndRecord(vault)
+    verifyAndKeep(vault)
       .then(({ outcome, entries, faults }) => { logger[outcome === 'sound' ? 'info' : 'error']({ outcome, entries, faults }, 'vault verified') })
       .catch((error: unknown) => { logger.error({ err: error }, 'the verification could not be kept') })
   }

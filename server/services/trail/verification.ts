@@ -45,23 +45,27 @@ export function isVerified(vault: Vault): boolean {
 
 const ageOf = (vault: Vault, at: string) => Date.parse(vault.now()) - Date.parse(at)
 
-/** Keeps a checkpoint, recomputes the whole vault while others are served, and keeps what was found. Refuses while one runs. */
-export async function verifyAndRecord(vault: Vault): Promise<Verification> {
+/** A verification that has ended and is to be kept. */
+export interface Ended extends Verified, Pick<Verification, 'outcome' | 'begunAt'> {}
+
+/** Keeps a checkpoint and recomputes the whole vault while others are served. Refuses while one runs. */
+export async function verifyNow(vault: Vault): Promise<Ended> {
   if (running.has(vault)) throw new Refusal('taken', 'A verification runs already. Its outcome stands here when it has ended.')
   running.add(vault)
   try {
     takeCheckpoint(vault)
     const begunAt = vault.now()
-    return record(vault, begunAt, await outcomeOf(vault))
+    return { begunAt, ...await outcomeOf(vault) }
   }
   finally {
     running.delete(vault)
   }
 }
 
-type Outcome = Verified & Pick<Verification, 'outcome'>
+/** Verifies and keeps what was found; see both. */
+export const verifyAndKeep = async (vault: Vault): Promise<Verification> => keepVerification(vault, await verifyNow(vault))
 
-async function outcomeOf({ folder }: Vault): Promise<Outcome> {
+async function outcomeOf({ folder }: Vault): Promise<Omit<Ended, 'begunAt'>> {
   try {
     const verified = await verifyVault(folder, { pause: () => new Promise((resume) => { setImmediate(resume) }) })
     return { ...verified, outcome: verified.faults === 0 ? 'sound' : 'damage' }
@@ -72,7 +76,8 @@ async function outcomeOf({ folder }: Vault): Promise<Outcome> {
   }
 }
 
-function record(vault: Vault, begunAt: string, { outcome, entries, rows, faults, found }: Outcome): Verification {
+/** Keeps what a verification found, and raises findings and letters where that is damage. */
+export function keepVerification(vault: Vault, { begunAt, outcome, entries, rows, faults, found }: Ended): Verification {
   return vault.write(trailActor, (write) => {
     const row = { begunAt, endedAt: write.now, outcome, entries, rows, faults, found: found.map(fault => ({ ...fault })) }
     const id = trailQueries(vault.db).insertVerification(row)

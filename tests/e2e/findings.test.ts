@@ -21,7 +21,7 @@ async function as(key: 'planner' | 'technician' | 'auditor'): Promise<Page> {
   const { page } = await openWindow(browser, demo.server.url)
   const { email, password } = demo.person(key)
   await signIn(page, email, password)
-  await page.getByRole('heading', { level: 1, name: /axes are in line/ }).waitFor()
+  await page.getByRole('heading', { level: 1, name: /axes could not be restored tonight/ }).waitFor()
   return page
 }
 const clean = async (page: Page, name: string) => {

@@ -132,7 +132,7 @@ describe('every page', () => {
     await page.getByRole('heading', { level: 1, name: 'There is no page at this address' }).waitFor()
     expect(await violations(page)).toEqual([])
     await page.getByRole('button', { name: 'Open the board' }).click()
-    await page.getByRole('heading', { level: 1, name: /axes are in line/ }).waitFor()
+    await page.getByRole('heading', { level: 1, name: /axes could not be restored tonight/ }).waitFor()
   })
 })
 
@@ -231,13 +231,13 @@ describe('by keyboard alone', () => {
     await page.keyboard.press('Tab')
     await page.keyboard.type(password)
     await page.keyboard.press('Enter')
-    await page.getByRole('heading', { level: 1, name: /axes are in line/ }).waitFor()
+    await page.getByRole('heading', { level: 1, name: /axes could not be restored tonight/ }).waitFor()
   })
 
   it('finds an axis on the board, walks the rows and opens one', async () => {
     const { page } = await windowOf('planner')
     await page.setViewportSize(desk)
-    await arrive(page, '/', /axes are in line/)
+    await arrive(page, '/', /axes could not be restored tonight/)
     await page.getByLabel('Find an axis').focus()
     await page.keyboard.type('lid-02')
     await page.getByText('5 of 46').waitFor()

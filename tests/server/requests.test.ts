@@ -156,6 +156,6 @@ describe('answers', () => {
   it('of the table and of the format are there for programs', async () => {
     expect((await server.call('GET', '/api/openapi.json')).json).toMatchObject({ openapi: '3.1.0' })
     expect((await server.call('GET', '/api/format/schema.json')).text).toContain('json-schema.org/draft/2020-12')
-    expect((await server.call('GET', '/api/health')).json).toEqual({ status: 'ok', schema: expect.any(Number) as number, writable: true, lettersWaitingSince: null })
+    expect((await server.call('GET', '/api/health')).json).toEqual({ status: 'ok', schema: expect.any(Number) as number, writable: true, verified: true, lettersWaitingSince: null })
   })
 })

@@ -52,10 +52,10 @@ describe('the move table of a sheet', () => {
   })
 
   it('holds every value of every move of any content', () => {
-    fc.assert(fc.property(arbitraryContent(), (any) => {
-      const { columns, rows } = sheetMoves({ content: any })
-      expect(rows.map(row => row.move)).toEqual(any.moves.map(row => row.move))
-      any.moves.forEach((row, index) => {
+    fc.assert(fc.property(arbitraryContent(), (given) => {
+      const { columns, rows } = sheetMoves({ content: given })
+      expect(rows.map(row => row.move)).toEqual(given.moves.map(row => row.move))
+      given.moves.forEach((row, index) => {
         const texts = moveFieldNames.filter(name => name !== 'comment' && row[name] !== undefined)
         for (const name of texts) {
           const value = row[name]

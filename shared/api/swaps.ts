@@ -16,7 +16,7 @@ import { changeSchema, contentSchema, meanings, unitOfFile, versionSchema, waiva
  *   GET  /api/swaps?open=&axis=    a page of swapLine, newest first (the last five: limit=5)
  *   POST /api/swaps                201
  *   GET  /api/swaps/:id            the swap;  /spares  sparesAnswer;  /kit  swapKitAnswer
- *   POST /api/swaps/:id/source /unit-in /cautions /safe /read-back /missing-keys /first-motion /running /abandon /put-back
+ *   POST /api/swaps/:id/source /unit-in /cautions /ticks /safe /read-back /missing-keys /first-motion /note /running /abandon /put-back
  *   POST /api/swaps/:id/release    signed, planner
  *
  * Problem codes beside the usual ones, all 409 where nothing else is said:
@@ -73,7 +73,17 @@ export const missingKeysBody = z.strictObject({
 export const firstMotionBody = z.strictObject({
   ...rev, speedPercent: z.number().positive().max(100),
   results: z.array(z.strictObject({ item: z.string().min(1).max(40), outcome: z.enum(['ok', 'fault']), text: text(400).optional() })).min(1).max(1100),
-}).describe('any number of items at a time; the newest result of an item holds')
+}).describe('any number of items at a time; each is kept, the newest result of an item holds')
+/** What is ticked between two steps, one a call, so that another device goes on from it. */
+export const ticksBody = z.discriminatedUnion('tick', [
+  z.strictObject({ ...rev, tick: z.literal('kit').describe('the kit for the unit in is in hand') }),
+  z.strictObject({ ...rev, tick: z.literal('line'), line: z.string().min(1).max(100).describe('one thing to write, by a name of its own'), words: z.string().min(1).max(200).describe('as it stood on the page'), done: z.boolean().describe('false takes the tick back') }),
+  z.strictObject({ ...rev, tick: z.literal('written').describe('all of it is written: to the read-back') }),
+  z.strictObject({ ...rev, tick: z.literal('verdict').describe('a verdict was read: to first motion'), attempt: z.int().min(1) }),
+  z.strictObject({ ...rev, tick: z.literal('motion').describe('the first motion is left as it stands: to running') }),
+])
+export type SwapTick = z.infer<typeof ticksBody>
+export const noteBody = z.strictObject({ ...rev, note: text(2000) }).describe('the hand-over note as far as it is written; /running hands it over')
 export const runningBody = z.strictObject({ ...rev, note: text(2000).optional().describe('for who comes by day') })
 export const releaseBody = z.strictObject({
   ...rev, meaning: z.enum(meanings), note: text(2000).optional(), oldUnitState: z.enum(['repair', 'scrapped', 'spare']).optional().describe('absent: stays as it is'), password: passwordSchema,
@@ -107,6 +117,7 @@ export const readBackSchema = z.object({
 })
 export type ReadBack = z.infer<typeof readBackSchema>
 
+const done = z.object({ by: z.string(), at: instantSchema })
 export const swapSchema = z.object({
   id: idSchema, axisId: idSchema, tag: z.string(), machine: z.string(), line: z.string(), site: z.string(), timeZone: z.string(),
   rev: z.int(), step: z.enum(swapStates), replaced: z.enum(replacedParts), failure: z.string(), workOrder: z.string().nullable(),
@@ -126,9 +137,14 @@ export const swapSchema = z.object({
   safe: z.object({ by: z.string(), at: instantSchema, blocked: z.enum(blockings).nullable() }).nullable(),
   readBacks: z.array(readBackSchema).describe('oldest first'),
   firstMotion: z.object({
-    speedPercent: z.number(), results: z.array(z.object({ item: z.string(), outcome: z.enum(['ok', 'fault']), text: z.string().nullable(), by: z.string(), at: instantSchema })),
+    speedPercent: z.number(), results: z.array(z.object({ item: z.string(), outcome: z.enum(['ok', 'fault']), text: z.string().nullable(), by: z.string(), at: instantSchema })).describe('each as it was given, oldest first; the newest of an item holds'),
     untried: z.array(z.string()),
   }).nullable(),
+  ticks: z.object({
+    kit: done.nullable(), lines: z.array(done.extend({ line: z.string(), words: z.string() })), written: done.nullable(),
+    verdict: done.extend({ attempt: z.int() }).nullable(), motion: done.nullable(),
+  }).describe('what was ticked for the unit in, on whichever device'),
+  draft: done.extend({ note: z.string() }).nullable().describe('the hand-over note that was not handed over yet'),
   taughtMissing: z.array(z.string()).describe('to be taught, and not in the last read-back: first motion is not offered'),
   running: z.object({ by: z.string(), at: instantSchema, note: z.string().nullable() }).nullable(),
   asLeft: z.object({ versionId: idSchema, number: z.int(), compare: z.enum(verdicts) }).nullable().describe('the last read-back after first motion; without one nothing carries over'),

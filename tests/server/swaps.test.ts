@@ -90,6 +90,18 @@ describe('a swap through the routes', () => {
     expect(readBacks[4]?.scribeCode).toBe(made?.scribeCode)
   })
 
+  it('keeps what was ticked and the hand-over note for another device, each once under its key', async () => {
+    const headers = { 'idempotency-key': 'tick-1' }
+    const { rev } = swapOf(await server.call('GET', `/api/swaps/${id}`, { as: plant.as.auditor }))
+    const body = { tick: 'line', line: 'reset', words: 'Reset SN-0002', done: true, rev }
+    const ticked = await server.call('POST', `/api/swaps/${id}/ticks`, { as: plant.as.technician, body, headers })
+    expect(await server.call('POST', `/api/swaps/${id}/ticks`, { as: plant.as.technician, body, headers })).toMatchObject({ status: 200, json: { rev: swapOf(ticked).rev } })
+    expect(await step(id, 'ticks', { tick: 'line', line: 'reset' })).toMatchObject({ status: 422, json: { code: 'input' } })
+    expect(await step(id, 'ticks', body)).toMatchObject({ status: 409, json: { code: 'edited-meanwhile', current: { ticks: { lines: [{ line: 'reset', by: 'Tobias Achterberg' }] } } } })
+    expect(await step(id, 'note', { note: 'Lamp of X4 is dim.' }, plant.as.planner)).toMatchObject({ status: 200, json: { draft: { note: 'Lamp of X4 is dim.', by: 'Runa Haldersen' } } })
+    expect(await step(id, 'note', { note: 'x' }, plant.as.auditor)).toMatchObject({ status: 403 })
+  })
+
   it('runs after the first motion, and is released by a planner who signs', async () => {
     const results = ['jog', 'enable-loss', 'emergency-stop', 'move-0', 'chain-1'].map(item => ({ item, outcome: 'ok' }))
     expect(await step(id, 'first-motion', { speedPercent: 10, results })).toMatchObject({ status: 200, json: { firstMotion: { untried: [] } } })

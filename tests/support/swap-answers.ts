@@ -16,7 +16,7 @@ export const begun: Swap = {
   failure: 'encoder fault', workOrder: 'WO-4127', openedAt: '2026-11-30T01:19:00.000Z', openedBy: 'Tobias Achterberg', unitOut, unitIn: null, putBack: false, loadCanFall: true,
   fit: null, reasons: [], unfit: null, adjustments: [], forcesConfirmed: null, checks: [], versionId: 14,
   source: { versionId: 14, number: 11, capturedAt: '2026-05-03T05:00:00.000Z', scribeCode: 'TY8D7-BXY3D', serial: 'HL40-23-00417', released: true, mark: { by: 'Runa Haldersen', at: '2026-05-03T07:20:00.000Z' }, chosen: null },
-  asFound: null, kit: null, cautions: null, safe: null, readBacks: [], firstMotion: null, taughtMissing: [], running: null, asLeft: null, releaseDueAt: null, released: null, abandoned: null,
+  asFound: null, kit: null, cautions: null, safe: null, readBacks: [], firstMotion: null, ticks: { kit: null, lines: [], written: null, verdict: null, motion: null }, draft: null, taughtMissing: [], running: null, asLeft: null, releaseDueAt: null, released: null, abandoned: null,
   log: [{ rev: 1, at: '2026-11-30T01:19:00.000Z', by: 'Tobias Achterberg', act: 'swap-opened', text: 'began the swap: encoder fault' }],
 }
 

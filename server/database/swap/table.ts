@@ -9,6 +9,15 @@ import { flag, id, instant, json } from '../columns'
 /** A person by id, and when. */
 export interface By { readonly by: number, readonly at: string }
 
+/** What was ticked between two steps, for the unit now in. */
+export interface SwapTicks {
+  readonly kit?: By
+  readonly lines?: readonly (By & { readonly line: string, readonly words: string })[]
+  readonly written?: By
+  readonly verdict?: By & { readonly attempt: number }
+  readonly motion?: By
+}
+
 /** What the steps of a swap said and still holds; what belongs to one unit in ends when another comes in. */
 export interface SwapFacts {
   /** The rev with which the unit now in came in, and when: read-backs count from there. */
@@ -20,7 +29,9 @@ export interface SwapFacts {
   readonly forces?: By & { readonly adjustments: readonly Adjustment[] }
   readonly cautions?: By
   readonly safe?: By & { readonly blocked: Blocking | null }
-  readonly firstMotion?: { readonly speedPercent: number, /** Of the newest result. */ readonly rev: number, readonly results: readonly (By & { readonly item: string, readonly outcome: 'ok' | 'fault', readonly text: string | null })[] }
+  readonly ticks?: SwapTicks
+  readonly draft?: By & { readonly note: string }
+  readonly firstMotion?: { readonly speedPercent: number, /** Of the newest result. */ readonly rev: number, /** Each as it was given, oldest first. */ readonly results: readonly (By & { readonly item: string, readonly outcome: 'ok' | 'fault', readonly text: string | null })[] }
   readonly running?: By & { readonly note: string | null }
   readonly released?: By & { readonly meaning: (typeof meanings)[number], readonly note: string | null, readonly carriedOver: boolean, readonly oldUnitState: UnitState | null }
   readonly abandoned?: By & { readonly reason: string }

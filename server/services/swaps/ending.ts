@@ -45,7 +45,7 @@ export function putOldUnitBack(vault: Vault, actor: PersonActor, id: number, { r
     const { actuatorOut } = before.facts
     const unit = actuatorOut ? keepPlate(vault, write, old, { actuatorSerial: actuatorOut.serial, actuatorModel: actuatorOut.model }) : old
     fitAlone(vault, write, actor, before.axisId, unit.id, unitState ?? 'spare')
-    const { forces: _forces, unfit: _unfit, safe: _safe, firstMotion: _motion, running: _running, ...kept } = before.facts
+    const { forces: _forces, unfit: _unfit, safe: _safe, firstMotion: _motion, running: _running, ticks: _ticks, ...kept } = before.facts
     const facts: SwapFacts = { ...kept, since: { rev: before.rev + 1, at: write.now } }
     const goes = kitCase(db, placeOf(db, before.axisId), versionRow(db, before.sourceVersionId ?? 0), unit, { ...before, putBack: true, facts })
     // The unit sat here until tonight: that its values have stops is told, and keeps nobody from putting it back.

@@ -2,13 +2,13 @@ import type { z } from 'zod'
 import type { cautionsBody, safeBody, Swap } from '#shared/api/swaps'
 import { Refusal } from '#shared/errors/refusal'
 import type { PersonActor } from '#server/database/actor'
-import type { Vault, Write } from '#server/database/client'
+import type { Vault } from '#server/database/client'
 import type { VaultDb } from '#server/database/prepared'
 import type { SwapRow } from '#server/database/swap/table'
 import { forcesOpen, loadCanFall } from './facts'
 import { readSwap } from './read-swap'
 import { fitCase, judgeKit, kitCaseOf, type SwapKitCase } from './sides'
-import { openSwapRow, takerOf, takeStep } from './take-step'
+import { byNow, openSwapRow, takeStep } from './take-step'
 
 /** Nothing goes to a unit that does not fit without leave, or whose percentages mean other newtons and were not confirmed. */
 export function assertMayGoIn(db: VaultDb, swap: SwapRow, goes: SwapKitCase, now: string): void {
@@ -35,7 +35,7 @@ export function makeSafe(vault: Vault, actor: PersonActor, id: number, { rev, bl
       const message = 'A load can fall here: say how it is blocked. prop, pin or lowered.'
       throw new Refusal('input', message, { errors: [{ at: '/blocked', code: 'missing', message }] })
     }
-    const said = { by: takerOf(write), at: write.now, blocked: blocked ?? null }
+    const said = { ...byNow(write), blocked: blocked ?? null }
     takeStep(db, write, reached, { facts: { ...reached.facts, safe: said } }, { act: 'safe', text: `Made safe, fitted and checked${blocked ? `, the load ${blockedWords[blocked]}` : ''}.`, said })
     return readSwap(db, id, write.now)
   })
@@ -52,5 +52,3 @@ export function readCautions(vault: Vault, actor: PersonActor, id: number, { rev
     return readSwap(vault.db, id, write.now)
   })
 }
-
-const byNow = (write: Write) => ({ by: takerOf(write), at: write.now })

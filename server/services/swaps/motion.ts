@@ -1,17 +1,18 @@
 import type { z } from 'zod'
 import type { firstMotionBody, runningBody, Swap } from '#shared/api/swaps'
 import { Refusal } from '#shared/errors/refusal'
+import { standingResults } from '#shared/swap/motion-results'
 import type { PersonActor } from '#server/database/actor'
 import type { Vault, Write } from '#server/database/client'
 import type { SwapFacts, SwapRow } from '#server/database/swap/table'
 import { asLeftOf, attemptsOf, lastCompared } from './facts'
 import { motionItems, readSwap, taughtOf } from './read-swap'
 import { kitCaseOf } from './sides'
-import { openSwapRow, takerOf, takeStep } from './take-step'
+import { byNow, openSwapRow, takeStep, takerOf } from './take-step'
 
 type Results = NonNullable<SwapFacts['firstMotion']>['results']
 
-/** Results of the first motion, any number at a time; the newest of an item holds. Not offered while a value to be taught is missing. */
+/** Results of the first motion, any number at a time; each is kept, the newest of an item holds. Not offered while a value to be taught is missing. */
 export function recordMotion(vault: Vault, actor: PersonActor, id: number, { rev, speedPercent, results }: z.output<typeof firstMotionBody>): Swap {
   return vault.write(actor, (write) => {
     const { db } = vault
@@ -25,7 +26,7 @@ export function recordMotion(vault: Vault, actor: PersonActor, id: number, { rev
     const known = new Set(goes ? motionItems(goes, speedPercent).map(({ item }) => item) : [])
     const strange = results.flatMap(({ item }, index) => known.has(item) ? [] : [{ at: `/results/${index}/item`, code: 'not-found', message: `${item} is not on the list: ${[...known].slice(0, 12).join(', ')}${known.size > 12 ? ' …' : ''}` }])
     if (strange[0]) throw new Refusal('input', strange[0].message, { errors: strange })
-    takeStep(db, write, before, { facts: { ...before.facts, firstMotion: { speedPercent, rev: before.rev + 1, results: merged(before, write, results) } } }, {
+    takeStep(db, write, before, { facts: { ...before.facts, firstMotion: { speedPercent, rev: before.rev + 1, results: withResults(before, write, results) } } }, {
       act: 'first-motion', text: motionWords(speedPercent, results), said: { speedPercent, results },
     })
     return readSwap(db, id, write.now)
@@ -34,10 +35,8 @@ export function recordMotion(vault: Vault, actor: PersonActor, id: number, { rev
 
 type Sent = z.output<typeof firstMotionBody>['results']
 
-function merged({ facts }: SwapRow, write: Write, results: Sent): Results {
-  const newest = new Map((facts.firstMotion?.results ?? []).map(result => [result.item, result]))
-  for (const { item, outcome, text } of results) newest.set(item, { item, outcome, text: text ?? null, by: takerOf(write), at: write.now })
-  return [...newest.values()]
+function withResults({ facts }: SwapRow, write: Write, results: Sent): Results {
+  return [...facts.firstMotion?.results ?? [], ...results.map(({ item, outcome, text }) => ({ item, outcome, text: text ?? null, by: takerOf(write), at: write.now }))]
 }
 
 function motionWords(speedPercent: number, results: Sent): string {
@@ -51,15 +50,16 @@ export function sayRunning(vault: Vault, actor: PersonActor, id: number, { rev, 
   return vault.write(actor, (write) => {
     const { db } = vault
     const before = openSwapRow(db, write, id, rev, 'running')
-    const faults = (before.facts.firstMotion?.results ?? []).filter(({ outcome }) => outcome === 'fault')
+    const faults = standingResults(before.facts.firstMotion?.results ?? []).filter(({ outcome }) => outcome === 'fault')
     if (faults.length > 0) {
       const errors = faults.map(({ item, text }) => ({ at: '', code: item, message: text ?? 'fault' }))
       throw new Refusal('motion-fault', `A fault stands at ${faults.map(({ item }) => item).join(', ')}. Put it right and try it again; or put the old unit back.`, { errors })
     }
     const asLeft = asLeftOf(before, attemptsOf(db, before))
-    const said = { by: takerOf(write), at: write.now, note: note ?? null }
+    const said = { ...byNow(write), note: note ?? null }
+    const { draft: _draft, ...facts } = before.facts
     const left = asLeft ? `as-left is version ${asLeft.number}` : 'no read-back after first motion, so nothing carries over'
-    takeStep(db, write, before, { runningAt: before.runningAt ?? write.now, facts: { ...before.facts, running: said } }, {
+    takeStep(db, write, before, { runningAt: before.runningAt ?? write.now, facts: { ...facts, running: said } }, {
       act: 'running', text: `Running, not released; ${left}.${note ? ` ${note}` : ''}`, said: { ...said, asLeftVersionId: asLeft?.readBack.versionId ?? null },
     })
     return readSwap(db, id, write.now)

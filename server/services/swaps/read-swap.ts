@@ -42,6 +42,7 @@ export function readSwap(db: VaultDb, id: number, now: string): Swap {
     cautions: facts.cautions ? byOnWire(db, facts.cautions) : null,
     safe: facts.safe ? { ...byOnWire(db, facts.safe), blocked: facts.safe.blocked } : null,
     readBacks: swapQueries(db).readBacks.all({ swapId: id }).map(attempt => readBackOnWire(db, attempt)),
+    ticks: ticksOnWire(db, row), draft: facts.draft ? { ...byOnWire(db, facts.draft), note: facts.draft.note } : null,
     firstMotion: motionOnWire(db, row, goes), taughtMissing: goes ? taughtOf(db, goes, lastCompared(attempts)) : [],
     running: facts.running ? { ...byOnWire(db, facts.running), note: facts.running.note } : null,
     asLeft: asLeft ? { versionId: asLeft.readBack.versionId ?? 0, number: asLeft.number ?? 0, compare: verdictNow(db, asLeft) ?? 'differs' } : null,
@@ -112,6 +113,15 @@ function compareVersions(db: VaultDb, before: VersionRow, after: VersionRow): Ve
   const nameplate = unit && judgingQueries(db).nameplate.get({ model: unit.model })
   const context = unit ? diffContextOf(readAgainst(db, placeOf(db, after.axisId), unit)) : {}
   return compareContents(readContent(db, before.contentId), readContent(db, after.contentId), { sameUnit: before.unitId === after.unitId, context, ...(nameplate ? { nameplate: nameplate.nameplate } : {}) }).verdict
+}
+
+function ticksOnWire(db: VaultDb, { facts: { ticks = {} } }: SwapRow): Swap['ticks'] {
+  const { kit, lines = [], written, verdict, motion } = ticks
+  const named = (act: By | undefined) => act ? byOnWire(db, act) : null
+  return {
+    kit: named(kit), lines: lines.map(({ line, words, ...act }) => ({ line, words, ...byOnWire(db, act) })), written: named(written),
+    verdict: verdict ? { ...byOnWire(db, verdict), attempt: verdict.attempt } : null, motion: named(motion),
+  }
 }
 
 function motionOnWire(db: VaultDb, { facts }: SwapRow, goes: SwapKitCase | null): Swap['firstMotion'] {

@@ -44,6 +44,8 @@ export function takerOf({ actor }: Write): number {
   return person
 }
 
+export const byNow = (write: Write) => ({ by: takerOf(write), at: write.now })
+
 export interface Step {
   /** What was done, as the route says it. */
   readonly act: string

@@ -71,7 +71,7 @@ function unitOf(vault: Vault, write: Write, actor: PersonActor, swap: SwapRow, {
 
 function factsOf({ facts, unitInId, rev }: SwapRow, write: Write, { forcesConfirmed, unfit }: Body, { unit, kit }: SwapKitCase, answer: FitAnswer): SwapFacts {
   const same = unitInId === unit.id
-  const { forces, unfit: allowed, since, ...rest } = facts
+  const { forces, unfit: allowed, since, ticks, ...rest } = facts
   const hasForces = kit.adjustments.some(({ newtonsBefore }) => newtonsBefore !== null)
   const confirmed = forcesConfirmed ? { by: takerOf(write), at: write.now, adjustments: kit.adjustments } : forcesConfirmed === undefined && same ? forces : undefined
   const goesOn = answer.fit !== 'unfit' || answer.reasons.some(({ hard }) => hard)
@@ -79,7 +79,7 @@ function factsOf({ facts, unitInId, rev }: SwapRow, write: Write, { forcesConfir
     : unfit ? { ...unfit, at: pastInstant(unfit.at, write), enteredBy: takerOf(write) } : same ? allowed : undefined
   return {
     ...rest, since: same && since ? since : { rev: rev + 1, at: write.now },
-    ...(hasForces && confirmed ? { forces: confirmed } : {}), ...(goesOn ? { unfit: goesOn } : {}),
+    ...(hasForces && confirmed ? { forces: confirmed } : {}), ...(goesOn ? { unfit: goesOn } : {}), ...(same && ticks ? { ticks } : {}),
   }
 }
 
@@ -111,7 +111,7 @@ export function chooseSource(vault: Vault, actor: PersonActor, id: number, { rev
       throw new Refusal('input', message, { errors: [{ at: '/versionId', code: 'not-found', message }] })
     }
     const version = versionRow(db, versionId)
-    const { forces: _forces, unfit: _unfit, ...facts } = before.facts
+    const { forces: _forces, unfit: _unfit, ticks: _ticks, ...facts } = before.facts
     const moved: Moved = { sourceVersionId: versionId, sourceMarkId: versionId === mark?.versionId ? mark.id : null, facts: { ...facts, chosen: { decidedBy, reason } } }
     takeStep(db, write, before, { ...moved, fit: fitAgain(vault, write, { ...before, ...moved }) }, {
       act: 'source', text: `Version ${version.number} goes to the new unit: decided by ${decidedBy}. ${reason}`, said: { versionId, decidedBy, reason },

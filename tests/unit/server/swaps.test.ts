@@ -361,7 +361,7 @@ describe('first motion', () => {
     here.motion(id, ['jog'])
     recordMotion(here.plant.vault, here.tobias, id, { speedPercent: 10, results: [{ item: 'chain-1', outcome: 'fault', text: 'stops at 90' }] })
     expect(() => here.running(id)).toThrow(expect.objectContaining({ code: 'motion-fault' }))
-    expect(here.motion(id, ['chain-1'])).toMatchObject({ firstMotion: { results: [{ item: 'jog' }, { item: 'chain-1', outcome: 'ok', text: null }], untried: ['enable-loss', 'emergency-stop', 'move-0'] } })
+    expect(here.motion(id, ['chain-1'])).toMatchObject({ firstMotion: { results: [{ item: 'jog' }, { item: 'chain-1', outcome: 'fault', text: 'stops at 90' }, { item: 'chain-1', outcome: 'ok', text: null }], untried: ['enable-loss', 'emergency-stop', 'move-0'] } })
     expect(here.running(id).step).toBe('release')
     expect(codeOf(() => here.motion(id, ['move-9']))).toBe('input')
   })

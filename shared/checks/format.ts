@@ -34,9 +34,10 @@ export function quantity(value: number, unit: string): string {
   return unit === '' ? plain(value) : `${plain(value)} ${unit}`
 }
 
-/** A value with its unit, a text in quotes, true or false as they are. */
+/** A value with its unit, a text in quotes, a switch as on or off. */
 export function anyValue(value: number | string | boolean, unit: string): string {
-  return typeof value === 'number' ? quantity(value, unit) : typeof value === 'string' ? `“${value}”` : String(value)
+  if (typeof value === 'number') return quantity(value, unit)
+  return typeof value === 'string' ? `“${value}”` : value ? 'on' : 'off'
 }
 
 /** Canonical units of position, speed and acceleration on an axis. */

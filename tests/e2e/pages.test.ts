@@ -4,7 +4,7 @@ import { desk, openWindow, phone, picture, sidewaysScroll, signIn, startBrowser,
 import { serveDemo, type DemoPlant } from '../support/demo-plant'
 import { jsonFile, lidPress } from '../support/lid-press'
 import { sourceFiles } from '../support/source-tree'
-import { drop, watchTrouble, type Trouble } from '../support/walk'
+import { arrive, drop, watchTrouble, type Trouble } from '../support/walk'
 
 /* Every page on the invented plant: by day and by night, on a desk and on a phone, to be read and to be worked by all. */
 
@@ -71,13 +71,6 @@ async function windowOf(as: 'planner' | 'admin' | 'nobody'): Promise<{ page: Pag
   const made = { page, trouble: await watchTrouble(page) }
   windows.set(as, made)
   return made
-}
-
-/** The page is read: its answer stands at its head and nothing is being read any more. */
-async function arrive(page: Page, address: string, ready: RegExp): Promise<void> {
-  await page.goto(address)
-  await page.getByRole('heading', { level: 1, name: ready }).waitFor()
-  await page.getByRole('status').filter({ hasText: /^Reading/ }).first().waitFor({ state: 'detached' })
 }
 
 /** Draws the page for that light, as a device does that says so. */
@@ -218,65 +211,4 @@ describe('what opens on a page', () => {
       expect([...found, ...trouble.told()]).toEqual([])
     })
   }
-})
-
-describe('by keyboard alone', () => {
-  it('signs in', async () => {
-    const { page } = await openWindow(browser, demo.server.url)
-    const { email, password } = demo.person('technician')
-    await page.goto('/sign-in')
-    await page.getByLabel('E-mail').waitFor()
-    for (let step = 0; step < 5 && !await page.getByLabel('E-mail').evaluate(input => input === document.activeElement); step += 1) await page.keyboard.press('Tab')
-    await page.keyboard.type(email)
-    await page.keyboard.press('Tab')
-    await page.keyboard.type(password)
-    await page.keyboard.press('Enter')
-    await page.getByRole('heading', { level: 1, name: /axes could not be restored tonight/ }).waitFor()
-  })
-
-  it('finds an axis on the board, walks the rows and opens one', async () => {
-    const { page } = await windowOf('planner')
-    await page.setViewportSize(desk)
-    await arrive(page, '/', /axes could not be restored tonight/)
-    await page.getByLabel('Find an axis').focus()
-    await page.keyboard.type('lid-02')
-    await page.getByText('5 of 46').waitFor()
-    const tags = page.getByRole('table', { name: /^Every axis/ }).locator('a.tag')
-    expect(await tags.allInnerTexts()).toEqual(['LID-02.C', 'LID-02.G', 'LID-02.R', 'LID-02.X', 'LID-02.Z'])
-    for (let step = 0; step < 40 && !await tags.first().evaluate(link => link === document.activeElement); step += 1) await page.keyboard.press('Tab')
-    await page.keyboard.press('End')
-    await page.waitForFunction(() => document.activeElement?.textContent?.trim() === 'LID-02.Z')
-    await page.keyboard.press('Enter')
-    await page.getByRole('heading', { level: 1, name: 'LID-02.Z' }).waitFor()
-  })
-
-  it('a dialog keeps the focus while it is open, closes with Escape and gives it back', async () => {
-    const { page } = await windowOf('planner')
-    await arrive(page, '/axes/LID-02.Z', /LID-02\.Z/)
-    const opener = page.getByRole('button', { name: 'Take a kit' })
-    await opener.focus()
-    await page.keyboard.press('Enter')
-    const dialog = page.getByRole('dialog', { name: 'Take a kit' })
-    await dialog.waitFor()
-    const inside = () => dialog.evaluate(element => element.contains(document.activeElement))
-    for (let step = 0; step < 12; step += 1) {
-      expect(await inside()).toBe(true)
-      await page.keyboard.press(step < 8 ? 'Tab' : 'Shift+Tab')
-    }
-    expect(await violations(page)).toEqual([])
-    await page.keyboard.press('Escape')
-    await dialog.waitFor({ state: 'hidden' })
-    expect(await opener.evaluate(button => button === document.activeElement)).toBe(true)
-  })
-
-  it('the link to the content comes first and leads past the menu', async () => {
-    const { page } = await windowOf('planner')
-    await arrive(page, '/units', /units/i)
-    await page.evaluate(() => { (document.activeElement as HTMLElement | null)?.blur() })
-    await page.keyboard.press('Tab')
-    const skip = page.getByRole('link', { name: 'To the content' })
-    expect(await skip.evaluate(link => link === document.activeElement)).toBe(true)
-    await page.keyboard.press('Enter')
-    expect(await page.evaluate(() => document.activeElement?.id)).toBe('main')
-  })
 })

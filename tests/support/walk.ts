@@ -38,3 +38,10 @@ export async function watchTrouble(page: Page): Promise<Trouble> {
   })
   return { told: () => [...told], forget: () => { told.length = 0 } }
 }
+
+/** The page is read: its answer stands at its head and nothing is being read any more. */
+export async function arrive(page: Page, address: string, ready: RegExp): Promise<void> {
+  await page.goto(address)
+  await page.getByRole('heading', { level: 1, name: ready }).waitFor()
+  await page.getByRole('status').filter({ hasText: /^Reading/ }).first().waitFor({ state: 'detached' })
+}

@@ -31,7 +31,7 @@ describe('extra-range', () => {
   it('stops a value that is not among the allowed', () => {
     expect(held('B', { allowed: ['A', 'B'] })).toEqual([])
     expect(held('C', { allowed: ['A', 'B'] })).toEqual(['stop: K-017 “C” is none of the allowed “A” and “B”.'])
-    expect(held(true, { allowed: [false] })).toEqual(['stop: K-017 true is none of the allowed false.'])
+    expect(held(true, { allowed: [false] })).toEqual(['stop: K-017 on is none of the allowed off.'])
   })
 
   it('does not compare numbers of different units', () => {

@@ -26,8 +26,8 @@ describe('numbers in sentences', () => {
     expect(about(0.1500000000000001, 0.15)).not.toBe('0.15')
   })
 
-  it('prints texts in quotes and flags as they are', () => {
-    expect([anyValue('B', 'mm'), anyValue(true, ''), anyValue(3, 'counts')]).toEqual(['“B”', 'true', '3 counts'])
+  it('prints texts in quotes and switches as on or off', () => {
+    expect([anyValue('B', 'mm'), anyValue(true, ''), anyValue(3, 'counts')]).toEqual(['“B”', 'on', '3 counts'])
   })
 })
 

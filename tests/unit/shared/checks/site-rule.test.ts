@@ -29,7 +29,7 @@ describe('site-rule', () => {
   it('tells too little, and a value that is not the fixed one', () => {
     expect(asks('thrustLimit', { min: 60, scope: 'machine' })).toEqual(['stop: Thrust limit 55 % is below the 60 % asked on this machine: jars crack above 300 N.'])
     expect(asks('thrustLimit', { fixed: 50, scope: 'axis' })).toEqual(['stop: Thrust limit 55 % is not the 50 % set on this axis: jars crack above 300 N.'])
-    expect(asks('brakeFitted', { fixed: false })).toEqual(['stop: Brake fitted true is not the false set on this site: jars crack above 300 N.'])
+    expect(asks('brakeFitted', { fixed: false })).toEqual(['stop: Brake fitted on is not the off set on this site: jars crack above 300 N.'])
     expect(asks('onEnableLoss', { fixed: 'stop-and-hold' })).toEqual(['stop: On enable loss “release” is not the “stop-and-hold” set on this site: jars crack above 300 N.'])
     expect(asks('onEnableLoss', { fixed: 'release' })).toEqual([])
   })

@@ -31,7 +31,7 @@ describe('harmValues', () => {
     expect(harmValues(content, [])).toEqual([
       { key: 'thrustLimit', words: 'thrust limit', at: '/setup/thrustLimit', value: 38, text: '38 %' },
       { key: 'onEnableLoss', words: 'on enable loss', at: '/setup/onEnableLoss', value: 'release', text: 'release' },
-      { key: 'brakeFitted', words: 'brake fitted', at: '/setup/brakeFitted', value: false, text: 'false' },
+      { key: 'brakeFitted', words: 'brake fitted', at: '/setup/brakeFitted', value: false, text: 'off' },
       { key: 'zone 3 from', words: 'zone 3 from', at: '/zones/0/from', value: 5, text: '5 deg', rowKey: 'zone 3 from' },
       { key: 'zone 3 to', words: 'zone 3 to', at: '/zones/0/to', value: 20, text: '20 deg', rowKey: 'zone 3 from' },
       { key: 'move 4 kind', words: 'move 4 kind', at: '/moves/0/kind', value: 'absolute', text: 'absolute', rowKey: 'move 4 kind' },

@@ -1,10 +1,10 @@
 import { quantity } from '../checks/format'
 import { forceBaseOf } from '../motion/force-base'
 import { gridOf, roundDownToStep, type Place } from '../settings/entry-table/grid'
-import type { Nameplate } from '../settings/nameplate'
 import type { Content, Move, SetupFieldName } from '../settings/types'
 import { Exact } from '../units/exact'
 import { decimals } from '../units/number'
+import type { CarryCase } from './carried'
 import type { Adjustment, SwapSide } from './types'
 
 /** Setup values that are percentages of the force base. */
@@ -66,8 +66,11 @@ function forceOf(percent: number, base: number): number {
   return new Exact(percent).times(base).div(100).toDecimalPlaces(decimals, Exact.ROUND_HALF_EVEN).toNumber()
 }
 
-/** Whether a drive tool's own file means the same newtons on both: one force base, or one model where no nameplate tells it. */
-export function oneForceBase(out: SwapSide, into: SwapSide): boolean {
-  const base = (plate: Nameplate | undefined) => forceBaseOf(plate)
-  return out.model === into.model || (base(out.nameplate) !== undefined && base(out.nameplate) === base(into.nameplate))
+/**
+ * Whether a file that the drive's own tool saved on the old unit means the same newtons in the new one: it goes back where it
+ * came from, or both units have one force base. Models decide only where neither nameplate tells the base.
+ */
+export function ownFileFits({ ownValues, out, into }: Pick<CarryCase, 'ownValues' | 'out' | 'into'>): boolean {
+  const [from, to] = [forceBaseOf(out.nameplate), forceBaseOf(into.nameplate)]
+  return ownValues || (from === undefined && to === undefined ? out.model === into.model : from === to)
 }

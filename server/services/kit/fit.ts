@@ -4,6 +4,7 @@ import { forceBaseOf } from '#shared/motion/force-base'
 import { Refusal } from '#shared/errors/refusal'
 import { serialToBeWritten } from '#shared/settings/identity'
 import type { Content, UnitIdentity } from '#shared/settings/types'
+import type { CarryCase } from '#shared/swap/carried'
 import { differingBases, holdsForces } from '#shared/swap/rescale'
 import type { AxisPlace } from '#server/database/judging/queries'
 import type { VaultDb } from '#server/database/prepared'
@@ -16,6 +17,8 @@ import { waived } from '../waivers/accepted'
 export interface Fitted {
   readonly content: Content
   readonly identity: UnitIdentity
+  /** Between which units, and how; null: which unit it goes into is not known, and it is made as for one of the same model. */
+  readonly carry: CarryCase | null
   /** Names of what is to be taught. */
   readonly left: readonly string[]
   /** Names of what is copied, and proved at the machine. */
@@ -26,7 +29,7 @@ export interface Fitted {
 /** For a serial that is not registered, or none yet: the values as they stand. Nothing is known of what the unit can bear. */
 export function asItStands(content: Content, { channel, model }: UnitIdentity, serial: string | undefined): Fitted {
   return {
-    content, left: [], prove: [], identity: { serial: serial ?? serialToBeWritten, ...(channel === undefined ? {} : { channel }), model },
+    content, carry: null, left: [], prove: [], identity: { serial: serial ?? serialToBeWritten, ...(channel === undefined ? {} : { channel }), model },
     warnings: ['The unit is not registered: values that it must be taught are still in here, and nothing was judged against its nameplate.'],
   }
 }
@@ -48,7 +51,7 @@ export function fitToUnit(db: VaultDb, place: AxisPlace, version: VersionRow, ro
 export function fittedTo(db: VaultDb, { place, unit, kit, carry, source }: SwapKitCase, now: string): Fitted {
   const changed = kit.adjustments.length === 0 ? [] : [`Rescaled for ${unit.model}: ${kit.adjustments.map(({ section, row, field, before, after, unit: sign }) => `${section === 'move' ? `move ${row} ` : ''}${field} ${before} → ${after} ${sign}`).join(', ')}.`]
   const proved = carry.ownValues || kit.prove.length === 0 ? [] : [`To be proved at the machine: ${kit.prove.join(', ')}.`]
-  return { content: kit.content, left: kit.teach, prove: kit.prove, identity: identityOf(unit), warnings: [...changed, ...forceWarning(source, carry), ...stopWarnings(db, place, unit, kit.content, now), ...proved] }
+  return { content: kit.content, carry, left: kit.teach, prove: kit.prove, identity: identityOf(unit), warnings: [...changed, ...forceWarning(source, carry), ...stopWarnings(db, place, unit, kit.content, now), ...proved] }
 }
 
 /** A registered unit as a file names it. */

@@ -1,4 +1,8 @@
+import { quantity } from '#shared/checks/format'
 import { CodedError } from '#shared/errors/coded'
+import type { AxisKind } from '#shared/settings/types'
+import type { CarryCase } from '#shared/swap/carried'
+import { differingBases, ownFileFits } from '#shared/swap/rescale'
 import { attachmentBytes, DamagedAttachment } from '#server/database/attachment/queries'
 import type { Vault } from '#server/database/client'
 import { listAttachments } from '../attachments/read-attachments'
@@ -10,10 +14,10 @@ import type { KitParts } from './kit-parts'
 export interface KitFiles { readonly files: readonly ZipFile[], readonly without: readonly string[] }
 
 /**
- * The files of a kit beside its sheet. The drive tool's own backups stand first where the unit's percentages mean the same
- * newtons; else last, in a folder whose name says stop: they hold values of another unit.
+ * The files of a kit beside its sheet. The drive tool's own backups stand first where both units have one force base; else
+ * last, in a folder whose name says stop: their percentages mean other newtons.
  */
-export function kitFiles(vault: Vault, { file, version, fitted, place, unit, source }: KitParts): KitFiles {
+export function kitFiles(vault: Vault, { file, version, fitted, place }: KitParts): KitFiles {
   const name = `${safeName(place.axis.tag)}-v${version.number}`
   const text = (form: 'json' | 'csv') => Buffer.from(textOf(vault.db, file, form), 'utf8')
   const list = ownList(vault, file)
@@ -22,9 +26,21 @@ export function kitFiles(vault: Vault, { file, version, fitted, place, unit, sou
     { name: `3-${name}-kit.csv`, bytes: text('csv'), packed: false },
     ...(list.bytes ? [{ name: `4-${name}-kit-list.csv`, bytes: list.bytes, packed: false }] : []),
   ]
-  const otherModel = unit !== null && unit.model !== source.model
-  const attached = attachmentsOf(vault, version.id, otherModel ? `9-STOP-values-of-${safeName(version.model)}-mean-other-newtons` : `0-own-backup-of-${safeName(version.file.unit.serial)}`)
-  return { files: otherModel ? [...values, ...attached.files] : [...attached.files, ...values], without: [...(list.why === null ? [] : [list.why]), ...attached.damaged, ...fitted.warnings] }
+  const stop = fitted.carry && !ownFileFits(fitted.carry) ? stopOf(fitted.carry, place.axis.axisKind) : null
+  const attached = attachmentsOf(vault, version.id, stop ? stop.folder : `0-own-backup-of-${safeName(version.file.unit.serial)}`)
+  return {
+    files: stop ? [...values, ...attached.files] : [...attached.files, ...values],
+    without: [...(stop && attached.files.length > 0 ? [stop.words] : []), ...(list.why === null ? [] : [list.why]), ...attached.damaged, ...fitted.warnings],
+  }
+}
+
+/** Why the drive tool's own file must not go into the new unit, in a folder's name and in a sentence. */
+function stopOf({ out, into }: CarryCase, axisKind: AxisKind): { folder: string, words: string } {
+  const bases = differingBases(out, into)
+  const [from, to] = [bases?.from, bases?.to].map(base => (base === undefined ? '' : quantity(base, axisKind === 'linear' ? 'N' : 'N·m')))
+  return bases
+    ? { folder: `9-STOP-values-of-${safeName(out.model)}-mean-other-newtons`, words: `Do not load the drive tool’s own file: 100 % in it means ${from} on ${out.model}, and ${to} on ${into.model}. Write the kit instead.` }
+    : { folder: `9-STOP-values-of-${safeName(out.model)}-may-mean-other-newtons`, words: `Do not load the drive tool’s own file: it is of ${out.model}, and what 100 % of force means on ${into.model} is not known from both nameplates. Write the kit instead.` }
 }
 
 function ownList({ db }: Vault, file: KitParts['file']): { bytes: Buffer | null, why: string | null } {

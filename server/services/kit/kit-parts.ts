@@ -23,6 +23,8 @@ export interface KitSource extends SwapSide { readonly content: Content }
 export interface KitParts {
   readonly place: AxisPlace
   readonly version: VersionRow
+  /** The open swap that it is made for. */
+  readonly swap: SwapRow | null
   /** null: no version is known-good, the newest one is given out. */
   readonly mark: { readonly by: string, readonly at: string } | null
   readonly source: KitSource
@@ -39,14 +41,22 @@ export interface KitParts {
  * over, for its unit in. Reads only.
  */
 export function kitParts(db: VaultDb, actor: Actor, axisId: number, serial: string | undefined, now: string): KitParts {
+  return partsOf(db, actor, axisId, serial, now, swapQueries(db).openAtAxis.get({ axisId }))
+}
+
+/** As kitParts, for some night to come and a unit that nobody knows yet: whatever swap is open now. */
+export function partsToKeep(db: VaultDb, actor: Actor, axisId: number, now: string): KitParts {
+  return partsOf(db, actor, axisId, undefined, now, undefined)
+}
+
+function partsOf(db: VaultDb, actor: Actor, axisId: number, serial: string | undefined, now: string, swap: SwapRow | undefined): KitParts {
   const place = judgingQueries(db).axis.get({ id: axisId })
   if (!place) throw new Refusal('not-found', 'There is no such axis.')
-  const swap = swapQueries(db).openAtAxis.get({ axisId })
   const { version, mark } = swap?.sourceVersionId ? ofSwap(db, swap, swap.sourceVersionId) : toRestore(db, axisId)
   const source = { content: readContent(db, version.contentId), ...sideOfVersion(db, version) }
   const { unit, fitted } = swap?.unitInId ? inSwap(db, swap, serial, now) : alone(db, actor, place, version, source, serial, now)
   const note = kitNote({ tag: place.axis.tag, number: version.number, mark, left: fitted.left, warnings: fitted.warnings })
-  return { place, version, mark, source, unit, serial: unit?.serial ?? serial ?? null, fitted, now, file: kitFile(fitted.content, fitted.identity, note, now, actor.name) }
+  return { place, version, swap: swap ?? null, mark, source, unit, serial: unit?.serial ?? serial ?? null, fitted, now, file: kitFile(fitted.content, fitted.identity, note, now, actor.name) }
 }
 
 type For = Pick<KitParts, 'unit' | 'fitted'>

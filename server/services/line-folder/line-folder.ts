@@ -7,7 +7,7 @@ import type { Vault } from '#server/database/client'
 import { lineRows } from '#server/database/line/queries'
 import { siteRows } from '#server/database/site/queries'
 import { kitFiles, safeName } from '../kit/kit-files'
-import { kitParts } from '../kit/kit-parts'
+import { partsToKeep } from '../kit/kit-parts'
 import { GrowingZip, type ZipFile } from '../paper/zip'
 import { plantOf } from '../people/plant'
 import { drawWords, sheetWords } from '../sheet/kit-sheet'
@@ -52,8 +52,8 @@ async function folderAxis(vault: Vault, row: AxisListRow, origin: string): Promi
   const { axis: { id, tag, role }, machine, unit } = row
   const known = { tag, role, machine: machine.name, unit: unit?.serial ?? 'none fitted' }
   try {
-    const parts = kitParts(vault.db, maker, id, undefined, vault.now())
-    const words = sheetWords(vault, parts, { origin, blankSerial: true })
+    const parts = partsToKeep(vault.db, maker, id, vault.now())
+    const words = sheetWords(vault, parts, { origin })
     const { files, without } = kitFiles(vault, { ...parts, fitted: { ...parts.fitted, warnings: [] } })
     const folder = safeName(tag)
     const all = [{ name: 'sheet.pdf', bytes: await drawWords(words, parts, {}), packed: true }, ...files].map(file => ({ ...file, name: `${folder}/${file.name}` }))

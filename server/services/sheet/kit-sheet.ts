@@ -13,6 +13,8 @@ import type { MotionItem } from '#shared/swap/types'
 import { formatExact } from '#shared/units/exact-time'
 import type { Vault } from '#server/database/client'
 import { judgingQueries } from '#server/database/judging/queries'
+import type { VaultDb } from '#server/database/prepared'
+import type { UnitRow } from '#server/database/schema'
 import { unitRows } from '#server/database/unit/queries'
 import { plantOf } from '../people/plant'
 import { checkpointNow } from '../trail/trail'
@@ -26,8 +28,6 @@ export interface SheetOptions {
   readonly origin: string
   /** Of the site where it is not said. */
   readonly paper?: (typeof papers)[number] | undefined
-  /** In the folder of a line nobody knows yet which unit will go in. */
-  readonly blankSerial?: boolean
 }
 
 /** How slow the first motion is. */
@@ -44,19 +44,26 @@ export function drawWords(words: SheetWords, { place, now }: KitParts, { paper }
   return drawSheet(words, paper ?? place.site.paper, now)
 }
 
-/** Where the label and the sheet of an axis lead. */
+/** Where the label of an axis leads, and its sheet outside of a swap. */
 export const axisAddress = (origin: string, tag: string): string => (origin === '' ? tag : `${origin}/axes/${tag}`)
 
-export function sheetWords(vault: Vault, parts: KitParts, { origin, blankSerial = false }: SheetOptions): SheetWords {
+/** Where the QR code of a sheet leads, and in words: to the swap that it is made for, else to the axis. */
+function leadsTo({ place: { axis }, swap }: KitParts, { origin }: SheetOptions): Pick<SheetWords, 'address' | 'leadsTo'> {
+  return swap === null || origin === ''
+    ? { address: axisAddress(origin, axis.tag), leadsTo: `axis ${axis.tag}` }
+    : { address: `${origin}/swaps/${swap.id}`, leadsTo: `swap ${swap.id} of ${axis.tag}` }
+}
+
+export function sheetWords(vault: Vault, parts: KitParts, options: SheetOptions): SheetWords {
   const { place: { axis, machine, line, site }, version, mark, fitted, unit, now } = parts
   const nameplate = (unit ? judgingQueries(vault.db).nameplate.get({ model: unit.model })?.nameplate : parts.source.nameplate)
   const { content, left, prove } = unit ? fitted : forSomeUnit(parts)
   const source = { content, ...(nameplate ? { nameplate } : {}), left, prove: prove.filter(name => !name.startsWith('extra:')) }
   const { note, size: entries } = checkpointNow(vault)
   return {
-    plant: plantOf(vault), tag: axis.tag, address: axisAddress(origin, axis.tag),
+    plant: plantOf(vault), tag: axis.tag, ...leadsTo(parts, options),
     place: [axis.role, machine.name, line.name, site.name].filter(Boolean).join(', ') + (axis.flags.length === 0 ? '' : `. Flagged: ${axis.flags.join(', ')}.`),
-    code: hashesOf(content, sha256).scribeCode, facts: factsOf(vault, parts, blankSerial, nameplate),
+    code: hashesOf(content, sha256).scribeCode, facts: factsOf(vault, parts, nameplate),
     notReleased: mark ? null : `Nobody has said that these values are good: no version of ${axis.tag} is known-good, and v${version.number} is the newest. Have a planner review it first, if that can wait.`,
     warnings: unit ? fitted.warnings : [unknownUnit], cautions, cautionSources,
     tableRows: nameplate?.maxMoves ?? null, order: nameplate?.entryTable ? 'in the order of the drive’s own list' : 'by group',
@@ -77,13 +84,20 @@ function forSomeUnit({ source }: KitParts): Pick<KitParts['fitted'], 'content' |
   return { content, left: teach, prove }
 }
 
-function factsOf({ db }: Vault, { place, version, mark, unit, serial, now }: KitParts, blankSerial: boolean, nameplate: Nameplate | undefined): [string, string][] {
-  const out = judgingQueries(db).openAtAxis.get({ axisId: place.axis.id })?.unit ?? unitRows(db).byId.get({ id: version.unitId })
+/** The unit that comes out: in a swap as it was said there, since the new one counts as fitted by then; else the one that sits there. */
+function unitOut(db: VaultDb, { swap, place, version }: KitParts): UnitRow | undefined {
+  const id = swap ? swap.unitOutId : judgingQueries(db).openAtAxis.get({ axisId: place.axis.id })?.unit.id ?? version.unitId
+  return id === null ? undefined : unitRows(db).byId.get({ id })
+}
+
+function factsOf({ db }: Vault, parts: KitParts, nameplate: Nameplate | undefined): [string, string][] {
+  const { place, version, mark, unit, serial, now } = parts
+  const out = unitOut(db, parts)
   const thrust = nameplate?.ratedThrust === undefined ? [] : [quantity(nameplate.ratedThrust, place.axis.axisKind === 'linear' ? 'N' : 'N·m')]
   const days = (from: string) => Math.floor((Date.parse(now) - Date.parse(from)) / day)
   return [
-    ['Unit in', blankSerial ? '' : unit?.serial ?? serial ?? ''],
-    ['Its model, firmware, rated', unit ? [unit.model, unit.firmware ?? '', ...thrust].filter(Boolean).join(', ') : blankSerial ? '' : serial === null ? '' : 'not registered'],
+    ['Unit in', unit?.serial ?? serial ?? ''],
+    ['Its model, firmware, rated', unit ? [unit.model, unit.firmware ?? '', ...thrust].filter(Boolean).join(', ') : serial === null ? '' : 'not registered'],
     ['Known-good', mark ? `v${version.number}, ${mark.by}, ${formatExact(mark.at, place.site.timeZone).replace(/ \d\d:.*$/, '')}, ${days(mark.at)} d old` : `none; v${version.number} is the newest`],
     ['Unit out', out?.serial ?? 'none fitted'],
     ['Its model, firmware', out ? [out.model, out.firmware ?? ''].filter(Boolean).join(', ') : ''],

@@ -13,6 +13,8 @@ export interface SheetWords {
   readonly code: string
   /** Where the QR code leads. */
   readonly address: string
+  /** The same in words. */
+  readonly leadsTo: string
   /** Words and value, in reading order. */
   readonly facts: readonly (readonly [string, string])[]
   /** Why these values are not released; null where they are. */

@@ -5,7 +5,7 @@ import { Refusal } from '#shared/errors/refusal'
 import { hashesOf } from '#shared/settings/hash'
 import { firstMotion } from '#shared/swap/first-motion'
 import { taughtMissing } from '#shared/swap/read-back'
-import { oneForceBase } from '#shared/swap/rescale'
+import { ownFileFits } from '#shared/swap/rescale'
 import { readContent } from '#server/database/content/queries'
 import { judgingQueries } from '#server/database/judging/queries'
 import { knownGoodQueries } from '#server/database/known-good/queries'
@@ -78,7 +78,7 @@ function kitOnWire({ kit, carry }: SwapKitCase): Swap['kit'] {
   const { content, teach, prove } = kit
   return {
     scribeCode: hashesOf(content, sha256).scribeCode, values: Object.keys(content.setup).length + Object.keys(content.extra).length, moves: content.moves.length,
-    teach: [...teach], prove: [...prove], attachmentFits: carry.ownValues || oneForceBase(carry.out, carry.into),
+    teach: [...teach], prove: [...prove], attachmentFits: ownFileFits(carry),
   }
 }
 

@@ -146,12 +146,4 @@ describe('the ZIP of a kit', () => {
     expect(pdfText(files.get('1-LID-02.Z-v1-sheet.pdf') ?? Buffer.alloc(0))).toContain('LID-02.Z')
     expect(readSettings(files.get('2-LID-02.Z-v1-kit.json') ?? Buffer.alloc(0))).toMatchObject({ ok: false, errors: [{ at: '/unit/serial', code: 'missing' }] })
   })
-
-  it('says stop on the backup where the new unit is of another model', async () => {
-    attachTo(store({ setup: { softLimitMin: 0 } }))
-    plant.unit('SN-0002', { model: 'HL50-200V' })
-    const names = [...unzipped(await kit('zip', { serial: 'SN-0002' })).keys()]
-    expect(names).toContain('9-STOP-values-of-HL40-200V-mean-other-newtons/1-lid_02.drv')
-    expect(names.some(name => name.startsWith('0-'))).toBe(false)
-  })
 })

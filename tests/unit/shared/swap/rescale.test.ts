@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { emptyContent } from '../../../../shared/settings/content'
 import type { Nameplate } from '../../../../shared/settings/nameplate'
 import type { Content, Move } from '../../../../shared/settings/types'
-import { differingBases, holdsForces, oneForceBase, rescaled } from '../../../../shared/swap/rescale'
+import { differingBases, holdsForces, ownFileFits, rescaled } from '../../../../shared/swap/rescale'
 import type { SwapSide } from '../../../../shared/swap/types'
 
 const side = (model: string, plate: Partial<Nameplate> | null): SwapSide => ({ model, ...(plate ? { nameplate: { model, axisKind: 'linear', stroke: 200, ...plate } } : {}) })
@@ -75,10 +75,18 @@ describe('whether percentages matter', () => {
     expect([holdsForces(content()), holdsForces(content({ overloadLevel: 90 })), holdsForces(content({}, [press]))]).toEqual([false, true, true])
   })
 
-  it('a drive tool’s own file means the same newtons on one base, or on one model', () => {
-    expect(oneForceBase(side('A', { ratedThrust: 400 }), side('B', { ratedThrust: 400 }))).toBe(true)
-    expect(oneForceBase(side('A', { ratedThrust: 400 }), side('B', { ratedThrust: 640 }))).toBe(false)
-    expect(oneForceBase(side('A', null), side('A', null))).toBe(true)
-    expect(oneForceBase(side('A', null), side('B', null))).toBe(false)
+  const fits = (out: SwapSide, into: SwapSide, ownValues = false) => ownFileFits({ out, into, ownValues })
+  it.each<[string, boolean, SwapSide, SwapSide]>([
+    ['another model, the same base', true, side('A', { ratedThrust: 400 }), side('B', { ratedThrust: 400 })],
+    ['another model, the same base as a peak', true, side('A', { ratedThrust: 500 }), side('B', { ratedThrust: 300, peakThrust: 500, forceBase: 'peak-thrust' })],
+    ['another model, another base', false, side('A', { ratedThrust: 400 }), side('B', { ratedThrust: 640 })],
+    ['the same model, another base', false, side('A', { ratedThrust: 400 }), side('A', { ratedThrust: 640 })],
+    ['the same model, one base not told', false, side('A', { ratedThrust: 400 }), side('A', null)],
+    ['the same model, no base told', true, side('A', null), side('A', null)],
+    ['another model, no base told', false, side('A', null), side('B', null)],
+  ])('a drive tool’s own file and %s: %s', (_case, means, out, into) => expect(fits(out, into)).toBe(means))
+
+  it('a drive tool’s own file goes back into the unit that it was saved on, whatever its plate says by now', () => {
+    expect(fits(side('A', { ratedThrust: 400 }), side('A', { ratedThrust: 640 }), true)).toBe(true)
   })
 })

@@ -140,7 +140,7 @@ function axisOf(index: number, at: string): BoardAxis {
     site: `Larkfield ${line % 4}`, line: `Jar line ${line}`, machine: `Lid press ${machine}`, machineId: machine + 1, timeZone: 'Europe/Copenhagen',
     serial: index % 97 === 0 ? null : `LP-${index}`, model: index % 97 === 0 ? null : ['HL40-200V', 'HR16', 'HL25-100'][index % 3] ?? null,
     status, off: status === 'off' ? { harm: index % 3, motion: 2, text: 1 } : { harm: 0, motion: 0, text: 0 }, sense: status === 'off' ? 'more' : null,
-    lacks: [], lastUploadAt: read ? at : null, overdueSince: index % 40 === 0 ? at : null,
+    lacks: [], swap: null, lastUploadAt: read ? at : null, overdueSince: index % 40 === 0 ? at : null,
     knownGood: read && status !== 'unmarked' ? { versionId: index + 1, number: 3, at } : null, current: read ? { versionId: index + 2, number: 4 } : null,
     checks: { stop: index % 50 === 0 ? 1 : 0, warn: index % 9 === 0 ? 2 : 0, note: 0, unknown: 0 },
   }

@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { idSchema, instantSchema } from './common'
+import { openSwapSchema } from './open-swap'
 import { lacks } from './readiness'
 import { axisStatuses, levelCounts, weightCounts } from './versions'
 
@@ -10,6 +11,7 @@ export const boardAxis = z.object({
   knownGood: z.object({ versionId: idSchema, number: z.int(), at: instantSchema }).nullable(),
   current: z.object({ versionId: idSchema, number: z.int() }).nullable(), checks: levelCounts,
   lacks: z.array(z.enum(lacks)).describe('why it could not be restored tonight; empty = it could'),
+  swap: openSwapSchema.nullable(),
 })
 export type BoardAxis = z.infer<typeof boardAxis>
 

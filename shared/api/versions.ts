@@ -3,6 +3,7 @@ import { levels } from '../checks/types'
 import { sections, verdicts } from '../diff/types'
 import { axisFlags, axisKinds, weights } from '../settings/types'
 import { papers } from './places'
+import { openSwapSchema } from './open-swap'
 import { readinessSchema } from './readiness'
 import { axisRef, idSchema, idText, instantSchema, passwordSchema, reasonSchema } from './common'
 
@@ -90,6 +91,7 @@ export const axisSchema = z.object({
   lastUploadAt: instantSchema.nullable(), overdueSince: instantSchema.nullable(), checks: levelCounts,
   /** Whether it could be restored tonight, and why not. */
   readiness: readinessSchema,
+  swap: openSwapSchema.nullable().describe('open at this axis; there is one at most'),
   versions: z.int(), sightings: z.int(),
 })
 export type Axis = z.infer<typeof axisSchema>

@@ -11,6 +11,11 @@ import { after, axis, before, changesAnswer, knownGood, life, nameplate, today }
 const never = { ...axis, id: 8, tag: 'NEW-01.X', status: 'never-read', off: { harm: 0, motion: 0, text: 0 }, knownGood: null, current: null, versions: 0, sightings: 0 }
 registerEndpoint('/api/axes/tag:LID-03.Z', () => axis)
 registerEndpoint('/api/axes/tag:NEW-01.X', () => never)
+const openSwap = { id: 12, step: 'read-back', openedAt: '2026-11-30T20:10:00.000Z', openedBy: 'Tobias Achterberg', runningSince: null, releaseDueAt: '2026-12-01T20:10:00.000Z', overdue: false }
+const swapped = (tag: string, swap: object) => registerEndpoint(`/api/axes/tag:${tag}`, () => ({ ...never, id: 9, tag, swap }))
+swapped('OPEN-01.X', openSwap)
+swapped('RUNS-01.X', { ...openSwap, step: 'release', runningSince: '2026-11-30T22:40:00.000Z', overdue: true })
+for (const tag of ['OPEN-01.X', 'RUNS-01.X']) registerEndpoint(`/api/axes/tag:${tag}/life`, () => ({ items: [], next: null }))
 registerEndpoint('/api/axes/7', () => axis)
 registerEndpoint('/api/axes', () => ({ items: [axis, never], next: null }))
 registerEndpoint('/api/axes/tag:LID-03.Z/life', () => ({ items: life, next: null }))
@@ -87,6 +92,22 @@ describe('the page of an axis', () => {
     const page = await open(AxisPage, '/axes/NEW-01.X')
     expect(words(page.text())).toContain('Nothing has been uploaded for this axis.')
     expect(page.findAll('h2').map(head => head.text())).toEqual(['It could not be restored tonight', 'Its life'])
+  })
+
+  it('offers to begin a swap only where none is open, and leads to the one that is', async () => {
+    const offered = (page: Awaited<ReturnType<typeof open>>) => page.findAll('a').filter(link => words(link.text()) === 'Swap the unit').length
+    const links = (page: Awaited<ReturnType<typeof open>>) => page.findAll('a[href="/swaps/12"]').map(link => words(link.text()))
+    const none = await open(AxisPage, '/axes/NEW-01.X')
+    expect([offered(none), links(none)]).toEqual([1, []])
+    close()
+    const begun = await open(AxisPage, '/axes/OPEN-01.X')
+    expect([offered(begun), links(begun)]).toEqual([0, ['Go on with swap 12']])
+    expect(words(begun.text())).toMatch(/Swap open since Mon 30 Nov (2026 )?21:10 CET/)
+    expect(words(begun.text())).toContain('Tobias Achterberg: written, then read back.')
+    close()
+    const runs = await open(AxisPage, '/axes/RUNS-01.X')
+    expect([offered(runs), links(runs)]).toEqual([0, ['Release swap 12']])
+    expect(words(runs.text())).toMatch(/Swap running since Mon 30 Nov (2026 )?23:40 CET, not released .*, opened by Tobias Achterberg, late\./)
   })
 
   it('hands out a kit only after the cautions were read', async () => {

@@ -13,7 +13,7 @@ function axis(tag: string, more: Partial<BoardAxis> = {}): BoardAxis {
     id: next++, tag, role: 'press', site: 'North hall', line: 'Line 1', machine: tag.split('.')[0] ?? tag, machineId: Number(/\d+/.exec(tag)?.[0] ?? 1), timeZone: 'Europe/Berlin',
     serial: `HL25-24-${String(next).padStart(5, '0')}`, model: 'HL25-150', status: 'in-line', off: { harm: 0, motion: 0, text: 0 }, sense: null,
     lastUploadAt: '2026-12-01T03:10:00.000Z', overdueSince: null, knownGood: { versionId: 9, number: 9, at: '2026-04-06T06:00:00.000Z' }, current: { versionId: 10, number: 10 },
-    checks: { stop: 0, warn: 0, note: 0, unknown: 0 }, lacks: [], ...more,
+    checks: { stop: 0, warn: 0, note: 0, unknown: 0 }, lacks: [], swap: null, ...more,
   }
 }
 
@@ -130,6 +130,20 @@ describe('the table', () => {
     expect(plant.map(one => waitsFor(one)?.words)).toEqual(['judgement', undefined, 'review of v2', 'first upload', 'upload'])
     expect(waitsFor(axis('A.1', { serial: null }))?.words).toBe('a unit')
     expect(waitsFor(axis('A.1', { status: 'off', off: { harm: 0, motion: 1, text: 0 } }))).toEqual({ words: 'comparison', to: '/changes?a=9&b=10' })
+  })
+
+  it('puts an open swap before all else, and tells since when it runs without release', async () => {
+    const swap = { id: 12, step: 'read-back' as const, openedAt: '2026-11-30T20:10:00.000Z', openedBy: 'Tobias Achterberg', runningSince: null, releaseDueAt: '2026-12-01T20:10:00.000Z', overdue: false }
+    const open = axis('A.1', { serial: null, swap })
+    const runs = axis('A.2', { swap: { ...swap, id: 13, step: 'release', runningSince: '2026-11-30T22:40:00.000Z', overdue: true } })
+    expect([open, runs].map(waitsFor)).toEqual([{ words: 'swap, go on', to: '/swaps/12' }, { words: 'swap, release', to: '/swaps/13' }])
+    const table = await mountSuspended(BoardAxisTable, { props: { axes: [open, runs], none: '' } })
+    expect(table.findAll('.c-waits a').map(link => [link.attributes('href'), link.attributes('title')?.replace(' 2026', ''), link.text().replace(' 2026', '')])).toEqual([
+      ['/swaps/12', 'Swap open since 30 Nov 21:10, not ended', 'swap, go on of A.1: Swap open since 30 Nov 21:10, not ended'],
+      ['/swaps/13', 'Swap running since 30 Nov 23:40, not released, late', 'swap, release of A.2: Swap running since 30 Nov 23:40, not released, late'],
+    ])
+    expect(tags(findAxes(searchable([...plant, open, runs]), 'not released', 'all'))).toEqual(['A.2'])
+    expect(tags(findAxes(searchable([...plant, open, runs]), 'swap', 'all'))).toEqual(['A.1', 'A.2'])
   })
 })
 

@@ -11,7 +11,7 @@ let next = 1
 const axis = (tag: string, more: Partial<BoardAxis> = {}): BoardAxis => ({
   id: next++, tag, role: 'press', site: 'North hall', line: 'Line 1', machine: 'LID-02', machineId: 2, timeZone: 'Europe/Berlin', serial: 'HL25-24-00001', model: 'HL25-150', status: 'in-line',
   off: { harm: 0, motion: 0, text: 0 }, sense: null, lastUploadAt: '2026-12-01T03:10:00.000Z', overdueSince: null, knownGood: { versionId: 9, number: 9, at: '2026-04-06T06:00:00.000Z' }, current: { versionId: 10, number: 10 },
-  checks: { stop: 0, warn: 0, note: 0, unknown: 0 }, lacks: [], ...more,
+  checks: { stop: 0, warn: 0, note: 0, unknown: 0 }, lacks: [], swap: null, ...more,
 })
 const plant = [
   axis('LID-02.Z'), axis('CAS-01.P', { lacks: ['overdue', 'no-spare'] }), axis('JAR-01.T', { lacks: ['no-known-good'], knownGood: null, current: null }), axis('LID-02.X', { lacks: ['no-label'] }),

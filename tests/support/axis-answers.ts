@@ -89,7 +89,7 @@ export const axis: Axis = {
   knownGood: { versionId: 14, number: 14, by: 'Runa Haldersen', at: '2026-09-03T07:20:00.000Z', scribeCode: 'EJ26R-33XTH' },
   unit: { id: 5, serial: 'HL40-24-00817', channel: null, model: 'HL40-200V', firmware: '3.12', since: '2026-01-21T02:40:00.000Z' },
   current: { versionId: 15, number: 15, capturedAt: '2026-11-30T05:12:00.000Z', scribeCode: '2HAXQ-PEW44', firmware: '3.12' },
-  lastUploadAt: '2026-11-30T05:12:00.000Z', overdueSince: null, checks: { stop: 1, warn: 1, note: 2, unknown: 0 }, readiness: { ready: false, lacks: ['no-spare', 'no-label'] }, versions: 15, sightings: 611,
+  lastUploadAt: '2026-11-30T05:12:00.000Z', overdueSince: null, checks: { stop: 1, warn: 1, note: 2, unknown: 0 }, readiness: { ready: false, lacks: ['no-spare', 'no-label'] }, swap: null, versions: 15, sightings: 611,
 }
 
 const event = (kind: LifeEvent['kind'], at: string, rest: Partial<LifeEvent> = {}): LifeEvent =>

@@ -34,7 +34,7 @@ export function searchable(axes: readonly BoardAxis[]): Searchable[] {
 
 function wordsOf(axis: BoardAxis): string {
   const state = axis.status === 'off' ? `off ${weightWords(axis.off)}` : filterWords[axis.status]
-  return [axis.tag, axis.machine, axis.line, axis.site, axis.role, axis.serial, axis.model, state, axis.knownGood && `v${axis.knownGood.number}`, ...axis.lacks.map(lack => lackWords[lack])].filter(Boolean).join('\n')
+  return [axis.tag, axis.machine, axis.line, axis.site, axis.role, axis.serial, axis.model, state, axis.knownGood && `v${axis.knownGood.number}`, axis.swap && (axis.swap.runningSince ? 'swap not released' : 'swap open'), ...axis.lacks.map(lack => lackWords[lack])].filter(Boolean).join('\n')
 }
 
 /** The axes under a filter whose row holds every word of the text, wherever it stands; words in quotes are one whole cell. */

@@ -11,23 +11,27 @@ import { machine } from '../machine/table'
 import { person } from '../person/table'
 import { prepared, type VaultDb } from '../prepared'
 import { site } from '../site/table'
+import { standsOpen } from '../swap/queries'
+import { swap } from '../swap/table'
 import { unit } from '../unit/table'
 import { version } from '../version/table'
 import { axisState } from './table'
 
 const current = alias(version, 'current_version')
 const marked = alias(version, 'marked_version')
+const swapOpener = alias(person, 'swap_opener')
 const place = sql.placeholder
 
-/** Axes with their place, state, marked and current version and fitted unit: one row each, every join by a key. */
+/** Axes with their place, state, marked and current version, fitted unit and open swap: one row each, every join by a key. */
 const axisRowsOf = (db: VaultDb, ...where: (SQL | undefined)[]) => db.select({
   axis, state: axisState,
   machine: { id: machine.id, name: machine.name }, line: { id: line.id, name: line.name },
-  site: { id: site.id, name: site.name, timeZone: site.timeZone, knownGoodMonths: site.knownGoodMonths, attachmentWanted: site.attachmentWanted, labelWanted: site.labelWanted },
+  site: { id: site.id, name: site.name, timeZone: site.timeZone, knownGoodMonths: site.knownGoodMonths, attachmentWanted: site.attachmentWanted, labelWanted: site.labelWanted, releaseHours: site.releaseHours },
   current: { id: current.id, unitId: current.unitId, contentId: current.contentId, number: current.number, capturedAt: current.capturedAt, receivedAt: current.receivedAt, scribeCode: current.scribeCode, model: current.model, firmware: current.firmware },
   marked: { id: marked.id, number: marked.number, scribeCode: marked.scribeCode },
   mark: { at: knownGood.at, by: person.name },
   unit: { id: unit.id, serial: unit.serial, channel: unit.channel, model: unit.model, firmware: unit.firmware, since: fitting.fromAt },
+  swap: { id: swap.id, step: swap.step, openedAt: swap.openedAt, openedBy: swapOpener.name, runningAt: swap.runningAt },
 }).from(axis)
   .innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId)).innerJoin(site, eq(site.id, line.siteId))
   .leftJoin(axisState, eq(axisState.axisId, axis.id))
@@ -37,6 +41,7 @@ const axisRowsOf = (db: VaultDb, ...where: (SQL | undefined)[]) => db.select({
   .leftJoin(person, eq(person.id, knownGood.byPerson))
   .leftJoin(fitting, eq(fitting.id, axisState.fittingId))
   .leftJoin(unit, eq(unit.id, fitting.unitId))
+  .leftJoin(swap, and(eq(swap.axisId, axis.id), standsOpen)).leftJoin(swapOpener, eq(swapOpener.id, swap.openedBy))
   .where(and(...where)).orderBy(asc(axis.id))
 
 export const axisLists = prepared(db => ({

@@ -10,6 +10,7 @@ import { parseTimestamp } from '#shared/settings/time'
 import { afterOf, limitOf, pageOf, type PageQuery } from '../page'
 import { readinessOf } from '../readiness/readiness'
 import { readStock, type Stock } from '../readiness/stock'
+import { openSwapOf } from '../swaps/of-axis'
 import { versionSummary } from '../versions/summary'
 import { standingCounts } from '../waivers/accepted'
 import { overdueSince } from './overdue'
@@ -25,7 +26,7 @@ export function axisOnWire(row: AxisListRow, stock: Stock, now: string): Axis {
     unit: unit?.id && unit.since ? { id: unit.id, serial: unit.serial ?? '', channel: unit.channel, model: unit.model ?? '', firmware: unit.firmware, since: unit.since } : null,
     current: current && { versionId: current.id, number: current.number, capturedAt: current.capturedAt, scribeCode: current.scribeCode, firmware: current.firmware },
     lastUploadAt, overdueSince: overdueSince(lastUploadAt, axis.uploadEveryHours, now),
-    checks: standingCounts(state, now), readiness: readinessOf(row, stock, now),
+    checks: standingCounts(state, now), readiness: readinessOf(row, stock, now), swap: openSwapOf(row, now),
     versions: state?.versions ?? 0, sightings: state?.sightings ?? 0,
   }
 }

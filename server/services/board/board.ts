@@ -7,6 +7,7 @@ import { overdueSince } from '../axes/overdue'
 import { plantOf } from '../people/plant'
 import { readinessOf } from '../readiness/readiness'
 import { readStock, type Stock } from '../readiness/stock'
+import { openSwapOf } from '../swaps/of-axis'
 import { standingCounts } from '../waivers/accepted'
 import { attention } from './attention'
 
@@ -31,6 +32,6 @@ function boardAxis(row: AxisListRow, stock: Stock, now: string): BoardAxis {
     lastUploadAt, overdueSince: overdueSince(lastUploadAt, axis.uploadEveryHours, now),
     knownGood: marked && mark?.at ? { versionId: marked.id, number: marked.number, at: mark.at } : null,
     current: current && { versionId: current.id, number: current.number },
-    checks: standingCounts(state, now), lacks: readinessOf(row, stock, now).lacks,
+    checks: standingCounts(state, now), lacks: readinessOf(row, stock, now).lacks, swap: openSwapOf(row, now),
   }
 }

@@ -3,22 +3,23 @@
  * asked, so that a letter, a sheet and a screen say the same of the same instant.
  */
 
-/** Making a formatter costs more than a row of the board does, so each zone has one. */
+/** Making a formatter costs more than a row of the board does, so each is made once for a zone. */
 const formatters = new Map<string, Intl.DateTimeFormat>()
 
-function formatterOf(timeZone: string): Intl.DateTimeFormat {
-  const made = formatters.get(timeZone) ?? new Intl.DateTimeFormat('en-GB', {
-    timeZone, hourCycle: 'h23', weekday: 'short', day: 'numeric', month: 'short', year: 'numeric', hour: '2-digit', minute: '2-digit', second: '2-digit',
-  })
-  formatters.set(timeZone, made)
+function formatterOf(locale: string, options: Intl.DateTimeFormatOptions): Intl.DateTimeFormat {
+  const key = `${locale} ${options.timeZone} ${options.timeZoneName}`
+  const made = formatters.get(key) ?? new Intl.DateTimeFormat(locale, options)
+  formatters.set(key, made)
   return made
 }
 
+const clockOptions = { hourCycle: 'h23', weekday: 'short', day: 'numeric', month: 'short', year: 'numeric', hour: '2-digit', minute: '2-digit', second: '2-digit' } as const
+
 /** What a clock on the wall of that zone shows at an instant, by name of the part; throws RangeError on an unknown zone. */
-export const partsOfTime = (instant: Date, timeZone: string) => Object.fromEntries(formatterOf(timeZone).formatToParts(instant).map(part => [part.type, part.value]))
+export const partsOfTime = (instant: Date, timeZone: string) => Object.fromEntries(formatterOf('en-GB', { timeZone, ...clockOptions }).formatToParts(instant).map(part => [part.type, part.value]))
 
 function zonePart(instant: Date, timeZone: string, locale: string, timeZoneName: 'short' | 'shortOffset'): string {
-  const found = new Intl.DateTimeFormat(locale, { timeZone, timeZoneName }).formatToParts(instant).find(part => part.type === 'timeZoneName')
+  const found = formatterOf(locale, { timeZone, timeZoneName }).formatToParts(instant).find(part => part.type === 'timeZoneName')
   return found?.value ?? timeZone
 }
 

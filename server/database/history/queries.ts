@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, getTableColumns, gt, gte, lt, lte, notExists, sql } from 'drizzle-orm'
+import { and, asc, desc, eq, getTableColumns, gt, gte, lt, lte, notExists, sql, type SQL } from 'drizzle-orm'
 import { alias } from 'drizzle-orm/sqlite-core'
 import { axis } from '../axis/table'
 import { axisState } from '../axis-state/table'
@@ -8,7 +8,7 @@ import { finding, findingState, findingVersion } from '../finding/table'
 import { line } from '../line/table'
 import { machine } from '../machine/table'
 import { person } from '../person/table'
-import { prepared } from '../prepared'
+import { prepared, type VaultDb } from '../prepared'
 import { sighting } from '../sighting/table'
 import { site } from '../site/table'
 import { token } from '../token/table'
@@ -18,6 +18,10 @@ import { version, versionVoid } from '../version/table'
 const place = sql.placeholder
 const base = alias(version, 'base')
 const { file: _, ...columns } = getTableColumns(version)
+
+/** The axes of a place that lie within the others that were named and within the sites that the actor sees. Each is found by another index. */
+const axesWhere = (db: VaultDb, found: SQL) => db.select({ id: axis.id }).from(axis).innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId))
+  .where(and(found, ifGiven(machine.id, 'machineId'), ifGiven(line.id, 'lineId'), ifGiven(line.siteId, 'siteId'), inBounds(line.siteId))).limit(place('limit')).prepare()
 
 export const historyQueries = prepared(db => ({
   /** One change by its key, with all that its line says. */
@@ -37,8 +41,7 @@ export const historyQueries = prepared(db => ({
   firstFrom: db.select({ id: version.id }).from(version).where(gte(version.receivedAt, place('from'))).orderBy(asc(version.receivedAt), asc(version.id)).limit(1).prepare(),
   lastBefore: db.select({ id: version.id }).from(version).where(lt(version.receivedAt, place('to'))).orderBy(desc(version.receivedAt), desc(version.id)).limit(1).prepare(),
   newest: db.select({ id: version.id }).from(version).orderBy(desc(version.id)).limit(1).prepare(),
-  axesOfMachine: db.select({ id: axis.id }).from(axis).where(eq(axis.machineId, place('machineId'))).orderBy(asc(axis.id)).prepare(),
-  axesOfLine: db.select({ id: axis.id }).from(machine).innerJoin(axis, eq(axis.machineId, machine.id)).where(eq(machine.lineId, place('lineId'))).prepare(),
+  axesOf: { axis: axesWhere(db, eq(axis.id, place('axisId'))), machine: axesWhere(db, eq(axis.machineId, place('machineId'))), line: axesWhere(db, eq(machine.lineId, place('lineId'))), sites: axesWhere(db, sql`${line.siteId} IN (SELECT value FROM json_each(${place('siteIds')}))`) },
   peopleNamed: db.select({ id: person.id }).from(person).where(sql`${person.name} = ${place('name')} COLLATE NOCASE`).prepare(),
   /** Axes of which no file came between two instants, by id from after one. */
   notRead: db.select({ axis, machine: machine.name, line: line.name, site: site.name, timeZone: site.timeZone, status: axisState.status, lastUploadAt: axisState.lastUploadAt })

@@ -1,5 +1,7 @@
 import type Database from 'better-sqlite3'
 import type { Weight } from '#shared/settings/types'
+import { readAxes, versionsOfAxesSql, type Read } from './axes-walk'
+import { newestFirst, type ChangeKey } from './keys'
 
 /*
  * Walks over the changes of the vault, newest first: keys only, chunk by chunk, along one index that ends in the key of `change`.
@@ -10,15 +12,12 @@ import type { Weight } from '#shared/settings/types'
 /** A field wherever it stands: its section and its name in the format. */
 export interface NamedField { readonly section: string, readonly field: string }
 
-/** The key of a change. */
-export interface ChangeKey { readonly versionId: number, readonly seq: number }
-export interface Walked extends ChangeKey { readonly hit: boolean }
-
 /** What one walk follows. `nobody`: versions that name nobody who changed them. */
 export type Way
   = | ({ readonly by: 'field' } & NamedField)
     | { readonly by: 'weight', readonly weight: Weight }
     | { readonly by: 'axis' | 'unit' | 'storer', readonly id: number }
+    | { readonly by: 'axes', readonly ids: readonly number[] }
     | { readonly by: 'changer', readonly text: string }
     | { readonly by: 'nobody' }
     | { readonly by: 'all' }
@@ -31,7 +30,6 @@ export interface Asked {
   readonly weight: Weight | null
   readonly axisIds: readonly number[] | null
   readonly unitId: number | null
-  readonly lineId: number | null
   readonly siteId: number | null
   /** Sites that the actor sees. */
   readonly sites: readonly number[] | null
@@ -59,7 +57,6 @@ function conditionsOf(asked: Asked): Condition[] {
     ...given(asked.unitId, 'v.unit_id = :unitId', 'version'),
     ...given(asked.people, `(${among('v.stored_by', 'peopleIds')} OR ${among('v.changed_by', 'peopleTexts')})`, 'version'),
     ...given(asked.nobody, 'v.changed_by IS NULL', 'version'),
-    ...given(asked.lineId, 'm.line_id = :lineId', 'version', 'axis', 'machine'),
     ...given(asked.siteId, 'l.site_id = :siteId', 'version', 'axis', 'machine', 'line'),
     ...given(asked.sites, among('l.site_id', 'sites'), 'version', 'axis', 'machine', 'line'),
   ]
@@ -77,7 +74,9 @@ const alongChange = (where: string) => `SELECT version_id, seq FROM change WHERE
 const alongVersion = (where: string) => `SELECT c.version_id, c.seq FROM version v CROSS JOIN change c ON c.version_id = v.id
   WHERE ${where} AND v.id BETWEEN :first AND :versionId AND (v.id < :versionId OR c.seq < :seq) ORDER BY v.id DESC, c.seq DESC LIMIT :chunk`
 
-const ways: Readonly<Record<Way['by'], string>> = {
+type IndexWay = Exclude<Way['by'], 'axes'>
+
+const ways: Readonly<Record<IndexWay, string>> = {
   field: alongChange('section = :waySection AND field = :wayField AND'),
   weight: alongChange('weight = :wayWeight AND'),
   all: alongChange(''),
@@ -89,11 +88,20 @@ const ways: Readonly<Record<Way['by'], string>> = {
 }
 
 /** The statement of a walk along `way`, with what is asked beside it. */
-export function walkSql(way: Way['by'], asked: Asked): string {
+export function walkSql(way: IndexWay, asked: Asked): string {
   const conditions = conditionsOf(asked)
-  const needed = (Object.keys(joins) as Table[]).filter(table => conditions.some(({ needs }) => needs.includes(table)))
   const hit = conditions.length === 0 ? '1' : conditions.map(({ sql }) => `ifnull(${sql}, 0)`).join(' AND ')
-  return `SELECT w.version_id AS versionId, w.seq AS seq, ${hit} AS hit FROM (${ways[way]}) w ${needed.map(table => joins[table]).join(' ')}`
+  return `SELECT w.version_id AS versionId, w.seq AS seq, ${hit} AS hit FROM (${ways[way]}) w ${joinsFor(conditions)}`
+}
+
+const joinsFor = (conditions: readonly Condition[], ...but: Table[]) =>
+  (Object.keys(joins) as Table[]).filter(table => !but.includes(table) && conditions.some(({ needs }) => needs.includes(table))).map(table => joins[table]).join(' ')
+
+/** What is asked for among the changes of some versions, whose axes were asked for already. */
+export function hitsSql(asked: Asked): string {
+  const conditions = conditionsOf({ ...asked, axisIds: null })
+  return `SELECT c.version_id AS versionId, c.seq AS seq FROM json_each(:versionIds) i CROSS JOIN change c ON c.version_id = i.value ${joinsFor(conditions, 'change').replaceAll('w.version_id', 'c.version_id')}
+    WHERE ${['1', ...conditions.map(({ sql }) => sql)].join(' AND ')}`
 }
 
 /** Every name that any of the statements has; those that one does not have are left out by the caller of `prepare`. */
@@ -103,7 +111,7 @@ export function walkValues(way: Way, asked: Asked): Record<string, string | numb
     waySection: way.by === 'field' ? way.section : null, wayField: way.by === 'field' ? way.field : null,
     wayWeight: way.by === 'weight' ? way.weight : null, wayId: 'id' in way ? way.id : null, wayText: way.by === 'changer' ? way.text : null,
     names: list(asked.names?.map(({ section, field }) => `${section}.${field}`)), section: asked.section, row: asked.row, weight: asked.weight,
-    axisIds: list(asked.axisIds), unitId: asked.unitId, lineId: asked.lineId, siteId: asked.siteId, sites: list(asked.sites),
+    axisIds: list(asked.axisIds), unitId: asked.unitId, siteId: asked.siteId, sites: list(asked.sites),
     peopleIds: list(asked.people?.ids), peopleTexts: list(asked.people?.texts),
   }
 }
@@ -118,10 +126,30 @@ function statementOf(sqlite: Database.Database, sql: string): Database.Statement
   return statement
 }
 
-/** The next keys along a way below a key, newest first; fewer than `chunk` where the way ends. */
-export function walkOn(sqlite: Database.Database, way: Way, asked: Asked, { first }: Stretch, below: ChangeKey, chunk: number): Walked[] {
-  const rows = statementOf(sqlite, walkSql(way.by, asked)).all({ ...walkValues(way, asked), first, versionId: below.versionId, seq: below.seq, chunk }) as { versionId: number, seq: number, hit: number }[]
-  return rows.map(({ versionId, seq, hit }) => ({ versionId, seq, hit: hit === 1 })).sort(newestFirst)
+const firstChunk = 64
+const mostChunk = 1024
+
+/** Reads along a way, newest first, from below a key on; each call goes on where the last one ended. */
+export function walkAlong(sqlite: Database.Database, way: Way, asked: Asked, { first }: Stretch, after: ChangeKey): () => Read {
+  if (way.by !== 'axes') return readIndex(sqlite, way, asked, first, after)
+  const values = walkValues(way, asked)
+  return readAxes({
+    axisIds: way.ids,
+    versionsOf: (axisIds, low, high) => statementOf(sqlite, versionsOfAxesSql).all({ axisIds, low, high }).map(row => (row as { id: number }).id),
+    hitsAmong: versionIds => statementOf(sqlite, hitsSql(asked)).all({ ...values, versionIds }) as ChangeKey[],
+  }, first, after)
 }
 
-export const newestFirst = (a: ChangeKey, b: ChangeKey): number => b.versionId - a.versionId || b.seq - a.seq
+function readIndex(sqlite: Database.Database, way: Exclude<Way, { by: 'axes' }>, asked: Asked, first: number, after: ChangeKey): () => Read {
+  const statement = statementOf(sqlite, walkSql(way.by, asked))
+  const values = walkValues(way, asked)
+  let [below, chunk] = [after, firstChunk]
+  return () => {
+    const rows = statement.all({ ...values, first, versionId: below.versionId, seq: below.seq, chunk }) as { versionId: number, seq: number, hit: number }[]
+    const keys = rows.map(({ versionId, seq, hit }) => ({ versionId, seq, hit: hit === 1 })).sort(newestFirst)
+    const ended = keys.length < chunk
+    below = keys.at(-1) ?? below
+    chunk = Math.min(chunk * 2, mostChunk)
+    return { keys, entries: keys.length, ended }
+  }
+}

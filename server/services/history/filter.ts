@@ -2,30 +2,34 @@ import type { HistoryQuery } from '#shared/api/history'
 import { Refusal } from '#shared/errors/refusal'
 import { fieldsNamed } from '#shared/settings/families'
 import { seesSite, type Actor } from '#server/database/actor'
+import { boundsText } from '#server/database/bounds'
 import type { Vault } from '#server/database/client'
 import { historyQueries } from '#server/database/history/queries'
-import type { Asked, NamedField, Stretch, Way } from '#server/database/history/walk'
+import type { Asked, NamedField, Stretch } from '#server/database/history/walk'
 import type { VaultDb } from '#server/database/prepared'
 import { siteQueries } from '#server/database/site/scope'
 import { personIn } from '../versions/summary'
+import type { Plan } from './merge'
 
-/** With more ways than this the walks cost more than they save. */
-const mostWays = 64
+/** Sites with more axes than this are looked up beside each key: most keys are theirs. */
+const mostAxes = 1000
+/** With more people of one name than this the walks cost more than they save. */
+const mostPeople = 64
 
-export interface HistoryFilter { readonly ways: readonly Way[], readonly asked: Asked, readonly stretch: Stretch }
+export interface HistoryFilter { readonly plans: readonly Plan[], readonly asked: Asked, readonly stretch: Stretch }
 
 type Filters = Omit<HistoryQuery, 'limit' | 'cursor' | 'form'>
 
-/** What a query asks for, and the ways to walk that read the fewest entries for it. */
+/** What a query asks for, and the plans that may read the fewest entries for it. */
 export function historyFilter({ db }: Vault, actor: Actor, query: Filters): HistoryFilter {
-  const { section = null, row = null, weight = null, unit = null, line = null, site = null, by } = query
+  const { section = null, row = null, weight = null, unit = null, site = null, by } = query
   assertPlacesSeen(db, actor, query)
-  const axisIds = axesAsked(db, query)
+  const axisIds = axesAsked(db, actor, query)
   const asked: Asked = {
-    names: namesAsked(query), section, row, weight, axisIds, unitId: unit, lineId: query.axis === undefined && query.machine === undefined ? null : line, siteId: site, sites: actor.sites,
+    names: namesAsked(query), section, row, weight, axisIds, unitId: unit, siteId: axisIds === null ? site : null, sites: axisIds === null ? actor.sites : null,
     people: by === undefined || by === 'nobody' ? null : peopleAsked(db, by), nobody: by === 'nobody',
   }
-  return { asked, ways: waysFor(asked), stretch: stretchOf(db, query) }
+  return { asked, plans: plansFor(asked), stretch: stretchOf(db, query) }
 }
 
 /** A place that is not there, or lies outside the actor's sites, is answered alike. */
@@ -45,14 +49,18 @@ function namesAsked({ field, section }: Filters): Asked['names'] {
   return wanted
 }
 
-/** A line is its axes: looked up once, and not again beside every key. */
-function axesAsked(db: VaultDb, { axis, machine, line }: Filters): number[] | null {
-  const queries = historyQueries(db)
-  const ofPlace = machine !== undefined ? queries.axesOfMachine.all({ machineId: machine }) : line !== undefined ? queries.axesOfLine.all({ lineId: line }) : null
-  const within = ofPlace?.map(({ id }) => id) ?? null
-  if (axis === undefined) return within
-  const id = siteQueries(db).find('axis', axis)?.id
-  return id === undefined || (within !== null && !within.includes(id)) ? [] : [id]
+/** A place is its axes: looked up once, and not again beside every key. null: all axes, or those of sites that have too many. */
+function axesAsked(db: VaultDb, actor: Actor, { axis, machine = null, line = null, site = null }: Filters): number[] | null {
+  const { axesOf } = historyQueries(db)
+  const within = { machineId: machine, lineId: line, siteId: site, sites: boundsText(actor.sites), limit: -1 }
+  const idsOf = (rows: readonly { id: number }[]) => rows.map(({ id }) => id)
+  if (axis !== undefined) return idsOf(axesOf.axis.all({ ...within, axisId: siteQueries(db).find('axis', axis)?.id ?? 0 }))
+  if (machine !== null) return idsOf(axesOf.machine.all(within))
+  if (line !== null) return idsOf(axesOf.line.all(within))
+  const sites = site === null ? actor.sites : [site]
+  if (sites === null) return null
+  const ids = idsOf(axesOf.sites.all({ ...within, siteIds: JSON.stringify(sites), limit: mostAxes + 1 }))
+  return ids.length > mostAxes ? null : ids
 }
 
 /** A name stands for everyone who bears it, and for the text as it was written. */
@@ -62,14 +70,22 @@ function peopleAsked(db: VaultDb, by: string): NonNullable<Asked['people']> {
   return { ids, texts: [...new Set([by, ...ids.map(id => `person:${id}`)])] }
 }
 
-function waysFor(asked: Asked): Way[] {
-  const { axisIds, unitId, names, people, nobody, weight } = asked
-  if (axisIds !== null && axisIds.length <= mostWays) return axisIds.map(id => ({ by: 'axis', id }))
-  if (unitId !== null) return [{ by: 'unit', id: unitId }]
+/** Along the axes of the place, and along what else is asked for; the first alone where nothing else is. */
+function plansFor(asked: Asked): Plan[] {
+  const { axisIds, unitId } = asked
+  const [axisId] = axisIds ?? []
+  if (axisIds?.length === 1 && axisId !== undefined) return [[{ by: 'axis', id: axisId }]]
+  if (unitId !== null) return [[{ by: 'unit', id: unitId }]]
+  const along = planFor(asked)
+  if (axisIds === null) return [along ?? [{ by: 'all' }]]
+  return [[{ by: 'axes', ids: axisIds }], ...(along === null ? [] : [along])]
+}
+
+function planFor({ names, people, nobody, weight }: Asked): Plan | null {
   if (names !== null) return names.map(name => ({ by: 'field', ...name }))
-  if (people !== null && people.ids.length <= mostWays) return [...people.ids.map(id => ({ by: 'storer', id }) as const), ...people.texts.map(text => ({ by: 'changer', text }) as const)]
+  if (people !== null && people.ids.length <= mostPeople) return [...people.ids.map(id => ({ by: 'storer', id }) as const), ...people.texts.map(text => ({ by: 'changer', text }) as const)]
   if (nobody) return [{ by: 'nobody' }]
-  return [weight === null ? { by: 'all' } : { by: 'weight', weight }]
+  return weight === null ? null : [{ by: 'weight', weight }]
 }
 
 /** The ids of the versions that were received in a stretch of time; empty where the last lies before the first. */

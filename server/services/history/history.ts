@@ -4,7 +4,8 @@ import type { Actor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
 import { findingQueries } from '#server/database/finding/queries'
 import { historyQueries } from '#server/database/history/queries'
-import type { ChangeKey, Stretch } from '#server/database/history/walk'
+import type { ChangeKey } from '#server/database/history/keys'
+import type { Stretch } from '#server/database/history/walk'
 import type { VaultDb } from '#server/database/prepared'
 import { limitOf } from '../page'
 import { namedPerson } from '../versions/summary'
@@ -21,14 +22,14 @@ export function listHistory(vault: Vault, actor: Actor, query: HistoryQuery): { 
 export function* wholeHistory(vault: Vault, filter: HistoryFilter, size = 200): Generator<HistoryItem[]> {
   let after: ChangeKey | null = startOf(filter.stretch)
   while (after !== null) {
-    const { keys, next } = findKeys(vault.sqlite, filter.ways, filter.asked, filter.stretch, after, size)
+    const { keys, next } = findKeys(vault.sqlite, filter.plans, filter.asked, filter.stretch, after, size)
     yield itemsOf(vault.db, keys)
     after = next
   }
 }
 
-function pageOn({ sqlite, db }: Vault, { ways, asked, stretch }: HistoryFilter, after: ChangeKey, limit: number) {
-  const { keys, next } = findKeys(sqlite, ways, asked, stretch, after, limit)
+function pageOn({ sqlite, db }: Vault, { plans, asked, stretch }: HistoryFilter, after: ChangeKey, limit: number) {
+  const { keys, next } = findKeys(sqlite, plans, asked, stretch, after, limit)
   return { items: itemsOf(db, keys), next: next && `${next.versionId}.${next.seq}` }
 }
 

@@ -37,7 +37,8 @@ export function storeVersion(db: VaultDb, write: Write, source: Source, fields: 
   }
 }
 
-function insertVersion(db: VaultDb, write: Write, source: Source, fields: VersionFields, plan: PlannedVersion): number {
+/** The row of a planned version and its log entry, with the bytes and the content where they are not there yet. */
+export function insertVersion(db: VaultDb, write: Write, source: Source, fields: VersionFields, plan: PlannedVersion): number {
   const { placed: { place, unit, times }, ingested: { file, hashes, normalised }, base } = plan
   const { exportedAt, exportedBy, note, readings } = file
   const row = {

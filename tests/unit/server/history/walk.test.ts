@@ -1,10 +1,13 @@
+import fc from 'fast-check'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { PersonActor } from '../../../../server/database/actor'
 import { historyQueries } from '../../../../server/database/history/queries'
 import { termQueries } from '../../../../server/database/history/terms'
-import { walkSql, walkValues, type Asked, type Way } from '../../../../server/database/history/walk'
+import { versionsOfAxesSql } from '../../../../server/database/history/axes-walk'
+import type { ChangeKey } from '../../../../server/database/history/keys'
+import { hitsSql, walkSql, walkValues, type Asked, type Way } from '../../../../server/database/history/walk'
 import { historyFilter } from '../../../../server/services/history/filter'
-import { findKeys, mostEntries } from '../../../../server/services/history/merge'
+import { findKeys, mostEntries, type Plan } from '../../../../server/services/history/merge'
 import { iso, openPlant, start, type Plant } from '../../../support/vault-plant'
 
 let plant: Plant
@@ -34,9 +37,9 @@ beforeAll(() => {
 })
 afterAll(() => plant.close())
 
-const nothing: Asked = { names: null, section: null, row: null, weight: null, axisIds: null, unitId: null, lineId: null, siteId: null, sites: null, people: null, nobody: false }
-const everything: Asked = { names: [{ section: 'setup', field: 'thrustLimit' }], section: 'setup', row: 1, weight: 'harm', axisIds: [1], unitId: 1, lineId: 1, siteId: 1, sites: [1], people: { ids: [1], texts: ['x'] }, nobody: true }
-const ways: Way[] = [
+const nothing: Asked = { names: null, section: null, row: null, weight: null, axisIds: null, unitId: null, siteId: null, sites: null, people: null, nobody: false }
+const everything: Asked = { names: [{ section: 'setup', field: 'thrustLimit' }], section: 'setup', row: 1, weight: 'harm', axisIds: [1], unitId: 1, siteId: 1, sites: [1], people: { ids: [1], texts: ['x'] }, nobody: true }
+const ways: Exclude<Way, { by: 'axes' }>[] = [
   { by: 'field', section: 'setup', field: 'thrustLimit' }, { by: 'weight', weight: 'harm' }, { by: 'axis', id: 1 }, { by: 'unit', id: 1 }, { by: 'storer', id: 1 },
   { by: 'changer', text: 'person:1' }, { by: 'nobody' }, { by: 'all' },
 ]
@@ -51,10 +54,27 @@ describe('walks on a fleet', () => {
     expect(lines.length).toBeGreaterThan(0)
   })
 
-  it.each(['item', 'firstFrom', 'lastBefore', 'newest', 'axesOfMachine', 'axesOfLine', 'notRead', 'findingState'] as const)('%s: looks up, and sorts nothing', (name) => {
+  it.each(['item', 'firstFrom', 'lastBefore', 'newest', 'notRead', 'findingState'] as const)('%s: looks up, and sorts nothing', (name) => {
     const { sql, params } = (historyQueries(plant.vault.db)[name] as unknown as { getQuery: () => { sql: string, params: unknown[] } }).getQuery()
     const lines = plan(sql, params.map(param => (typeof param === 'object' ? 1 : param)))
     expect(slow(lines).filter(line => !(name === 'newest' && line === 'SCAN version'))).toEqual([])
+  })
+
+  it.each([['nothing', nothing], ['all that can be asked', everything]])('many axes, with %s: a range an axis, and what is asked for by the key of each change', (_name, asked) => {
+    const { sqlite } = plant.vault
+    const versions = plan(versionsOfAxesSql, { axisIds: '[1,2]', low: 1, high: 9 })
+    expect(versions).toEqual(['SCAN a VIRTUAL TABLE INDEX 1:', expect.stringMatching(/^SEARCH v USING COVERING INDEX version_axis \(axis_id=\? AND rowid>\? AND rowid<\?\)$/) as string])
+    const hits = plan(hitsSql(asked), { ...walkValues({ by: 'axes', ids: [1] }, asked), versionIds: '[1,2]' })
+    expect(hits.filter(line => /^(SCAN (?!i |json_each)|USE TEMP)/.test(line))).toEqual([])
+    expect(hits).toContain('SEARCH c USING PRIMARY KEY (version_id=?)')
+    expect(sqlite.prepare(hitsSql(asked)).all({ ...walkValues({ by: 'axes', ids: [1] }, asked), versionIds: '[1,2]' }).length).toBe(asked === nothing ? 6 : 0)
+  })
+
+  it.each(['axis', 'machine', 'line', 'sites'] as const)('the axes of %s are looked up', (by) => {
+    const { sql, params } = (historyQueries(plant.vault.db).axesOf[by] as unknown as { getQuery: () => { sql: string, params: unknown[] } }).getQuery()
+    const lines = plan(sql, params.map(() => 1))
+    expect(slow(lines)).toEqual([])
+    expect(lines.length).toBeGreaterThan(2)
   })
 
   it.each(['ofKind', 'before', 'at', 'revision', 'markBefore', 'versionNumber'] as const)('%s of the log: looks up, and sorts nothing', (name) => {
@@ -70,8 +90,8 @@ describe('what one request reads', () => {
   const start0 = { versionId: last + 1, seq: 0 }
 
   it('ends at its bound with a short page that goes on; going on finds the rest', () => {
-    const asked = { ...nothing, lineId: 3, row: 7 }
-    const found = findKeys(plant.vault.sqlite, [{ by: 'all' }], asked, { first, last }, start0, 50)
+    const asked = { ...nothing, siteId: 3, row: 7 }
+    const found = findKeys(plant.vault.sqlite, [[{ by: 'all' }]], asked, { first, last }, start0, 50)
     expect(found.keys).toEqual([])
     expect(found.next).not.toBeNull()
     const read = 90000 - (found.next!.versionId - 1) * 3
@@ -80,7 +100,7 @@ describe('what one request reads', () => {
     let next = found.next
     let pages = 1
     while (next !== null) {
-      const page = findKeys(plant.vault.sqlite, [{ by: 'all' }], asked, { first, last }, next, 50)
+      const page = findKeys(plant.vault.sqlite, [[{ by: 'all' }]], asked, { first, last }, next, 50)
       next = page.next
       pages += 1
     }
@@ -90,10 +110,10 @@ describe('what one request reads', () => {
   it('law: the same keys come whichever way is walked', () => {
     const { sqlite } = plant.vault
     const asked: Asked = { ...nothing, names: [{ section: 'setup', field: 'thrustLimit' }], axisIds: [5, 9], weight: 'harm' }
-    const through = (along: Way[]) => {
-      const keys = []
-      for (let after: { versionId: number, seq: number } | null = start0; after !== null;) {
-        const page = findKeys(sqlite, along, asked, { first: 1000, last }, after, 7)
+    const through = (plans: Plan[], limit: number) => {
+      const keys: ChangeKey[] = []
+      for (let after: ChangeKey | null = start0; after !== null;) {
+        const page = findKeys(sqlite, plans, asked, { first: 1000, last }, after, limit)
         keys.push(...page.keys)
         after = page.next
       }
@@ -101,20 +121,61 @@ describe('what one request reads', () => {
     }
     const expected = sqlite.prepare(`SELECT c.version_id AS versionId, c.seq FROM change c JOIN version v ON v.id = c.version_id WHERE c.field = 'thrustLimit' AND c.weight = 'harm' AND v.axis_id IN (5, 9) AND v.id >= 1000 ORDER BY 1 DESC, 2 DESC`).all()
     expect(expected.length).toBeGreaterThan(5)
-    for (const along of [[{ by: 'axis', id: 5 }, { by: 'axis', id: 9 }], [{ by: 'field', section: 'setup', field: 'thrustLimit' }], [{ by: 'weight', weight: 'harm' }], [{ by: 'all' }], [{ by: 'storer', id: 1 }, { by: 'all' }]] as Way[][]) expect(through(along)).toEqual(expected)
+    const axes: Plan = [{ by: 'axes', ids: [5, 9] }]
+    const field: Plan = [{ by: 'field', section: 'setup', field: 'thrustLimit' }]
+    const plans: Plan[] = [[{ by: 'axis', id: 5 }, { by: 'axis', id: 9 }], axes, field, [{ by: 'weight', weight: 'harm' }], [{ by: 'all' }], [{ by: 'storer', id: 1 }, { by: 'all' }]]
+    for (const limit of [7, 200]) {
+      for (const along of plans) expect(through([along], limit)).toEqual(expected)
+      expect(through([axes, field], limit)).toEqual(expected)
+      expect(through([field, [{ by: 'all' }], axes], limit)).toEqual(expected)
+    }
   })
 
-  it('chooses the way that reads least', () => {
-    const by = (query: Parameters<typeof historyFilter>[2]) => historyFilter(plant.vault, ines, query).ways.map(way => way.by)
+  it('law: many axes are walked like the join of their versions, from any key on', () => {
+    const { sqlite } = plant.vault
+    const asked: Asked = { ...nothing, names: [{ section: 'setup', field: 'field7' }] }
+    fc.assert(fc.property(fc.uniqueArray(fc.integer({ min: 1, max: 420 }), { minLength: 2, maxLength: 60 }), fc.integer({ min: 1, max: 30001 }), fc.integer({ min: 0, max: 4 }), fc.integer({ min: 1, max: 20000 }), (ids, versionId, seq, from) => {
+      const found = findKeys(sqlite, [[{ by: 'axes', ids }]], { ...asked, axisIds: ids }, { first: from, last }, { versionId, seq }, 40)
+      const expected = sqlite.prepare(`SELECT c.version_id AS versionId, c.seq FROM change c JOIN version v ON v.id = c.version_id
+        WHERE c.field = 'field7' AND v.axis_id IN (SELECT value FROM json_each(?)) AND v.id >= ? AND (c.version_id, c.seq) < (?, ?) ORDER BY 1 DESC, 2 DESC LIMIT 40`).all(JSON.stringify(ids), from, versionId, seq)
+      expect(found.keys).toEqual(expected)
+    }), { numRuns: 60 })
+  })
+
+  it('has a page of a rare field on a large place from the plan that reads least', () => {
+    const ids = Array.from({ length: 400 }, (_, index) => index + 1)
+    let read = 0
+    const counting = new Proxy(plant.vault.sqlite, {
+      get: (target, name) => name === 'prepare'
+        ? (sql: string) => {
+            const statement = target.prepare(sql)
+            return { all: (values: object) => {
+              const rows = statement.all(values)
+              read += rows.length
+              return rows
+            } }
+          }
+        : Reflect.get(target, name) as unknown,
+    })
+    const asked: Asked = { ...nothing, names: [{ section: 'setup', field: 'nobody changed it' }], axisIds: ids }
+    expect(findKeys(counting, [[{ by: 'axes', ids }], [{ by: 'field', section: 'setup', field: 'nobody changed it' }]], asked, { first, last }, start0, 50)).toEqual({ keys: [], next: null })
+    expect(read).toBeLessThan(5000)
+  })
+
+  it('chooses the plans that may read least', () => {
+    const by = (query: Parameters<typeof historyFilter>[2], actor = ines) => historyFilter(plant.vault, actor, query).plans.map(ways => ways.map(way => way.by).join(' '))
     expect(by({ axis: '5', field: 'thrustLimit' })).toEqual(['axis'])
-    expect(by({ machine: 4 })).toEqual(Array.from({ length: 5 }, () => 'axis'))
-    expect(by({ field: 'targets', site: 1 })).toEqual(['field', 'field', 'field'])
-    expect(by({ field: 'targets', line: 2 })).toEqual(Array.from({ length: 20 }, () => 'axis'))
-    expect(by({ by: 'Ines Morel' })).toEqual(['storer', 'changer', 'changer'])
+    expect(by({ axis: '5', machine: 9 })).toEqual(['axes'])
+    expect(by({ machine: 4 })).toEqual(['axes'])
+    expect(by({ field: 'targets', line: 2 })).toEqual(['axes', 'field field field'])
+    expect(by({ field: 'targets', site: 1 })).toEqual(['axes', 'field field field'])
+    expect(by({ field: 'targets' })).toEqual(['field field field'])
+    expect(by({ by: 'Ines Morel' })).toEqual(['storer changer changer'])
     expect(by({ by: 'nobody', field: 'thrustLimit' })).toEqual(['field'])
     expect(by({ by: 'nobody' })).toEqual(['nobody'])
-    expect(by({ weight: 'harm', site: 1 })).toEqual(['weight'])
+    expect(by({ weight: 'harm', site: 1 })).toEqual(['axes', 'weight'])
     expect(by({ from: iso(start) })).toEqual(['all'])
+    expect(by({ from: iso(start) }, { ...ines, sites: [1, 2] })).toEqual(['axes'])
   })
 
   it('finds a stretch of time by the vault’s own order', () => {

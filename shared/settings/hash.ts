@@ -19,11 +19,12 @@ export interface ContentHashes {
 export interface HashedContent { readonly text: string, readonly hashes: ContentHashes }
 
 const encoder = new TextEncoder()
+const hexOf = Array.from({ length: 256 }, (_, byte) => byte.toString(16).padStart(2, '0'))
 
 /** SHA-256 of bytes in lower-case hex, two digits a byte. */
 export function sha256Hex(bytes: Uint8Array, sha256: Sha256): string {
   let hex = ''
-  for (const byte of sha256(bytes)) hex += (byte < 16 ? '0' : '') + byte.toString(16)
+  for (const byte of sha256(bytes)) hex += hexOf[byte]
   return hex
 }
 
@@ -51,4 +52,17 @@ export function hashContent(content: Content, sha256: Sha256): HashedContent {
 /** Both hashes of a content and its scribe code; see hashContent where the text is needed as well. */
 export function hashesOf(content: Content, sha256: Sha256): ContentHashes {
   return hashContent(content, sha256).hashes
+}
+
+/**
+ * The copy hash of a canonical text, without reading it: its setup is flat, its zones hold numbers alone, and no text in either
+ * has a quotation mark, so that its member homeOffset can be cut out where it stands. undefined where there is no such setup.
+ */
+export function copyHashOfText(text: string, sha256: Sha256): string | undefined {
+  const end = text.lastIndexOf('},"zones":[')
+  const start = text.lastIndexOf(',"setup":{', end)
+  if (end < 0 || start < 0) return undefined
+  const setup = text.slice(start, end)
+  const copied = setup.replace(/(?<=\{)"homeOffset":[^,]+,?|,"homeOffset":[^,]+/, '')
+  return sha256Hex(encoder.encode(text.slice(0, start) + copied + text.slice(end)), sha256)
 }

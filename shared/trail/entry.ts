@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { CodedError } from '../errors/coded'
 import { canonicalJson } from '../settings/canonical'
+import { isCanonicalText } from '../settings/is-canonical'
 import { acts, isAct, type Act } from './acts'
 
 /*
@@ -60,7 +61,7 @@ export function formatLeaf(entry: Entry): string {
 export function parseLeaf(leaf: string): Entry {
   const entry = read(leaf)
   if (acts[entry.act] !== entry.subject.kind) throw new EntryError('entry-subject', `${entry.act} is about a ${acts[entry.act]}, not a ${entry.subject.kind}.`)
-  if (formatLeaf(entry) !== leaf) throw new EntryError('entry-not-canonical', `Entry ${entry.seq} is not in its canonical form.`, { seq: entry.seq })
+  if (!isCanonicalText(leaf, entry)) throw new EntryError('entry-not-canonical', `Entry ${entry.seq} is not in its canonical form.`, { seq: entry.seq })
   return entry
 }
 
@@ -72,7 +73,28 @@ function read(leaf: string): Entry {
   catch {
     throw new EntryError('entry-unreadable', 'The entry is not JSON.')
   }
+  if (isEntry(value)) return value
   const parsed = entrySchema.safeParse(value)
   if (!parsed.success) throw new EntryError('entry-unreadable', z.prettifyError(parsed.error))
   return parsed.data as Entry
+}
+
+/** What the schema says of a value that JSON.parse made, many times faster: a log of millions is read entry by entry. */
+function isEntry(value: unknown): value is Entry {
+  if (!isObject(value) || Object.keys(value).length !== 8) return false
+  const { v, seq, at, actor, act, subject, state, note } = value
+  return v === 1 && isCount(seq) && typeof at === 'string' && at.length === 24 && isActor(actor) && typeof act === 'string' && isAct(act)
+    && isObject(subject) && Object.keys(subject).length === 2 && kinds.has(subject.kind) && (isId(subject.id) || typeof subject.id === 'string')
+    && isObject(state) && (typeof note === 'string' || note === null)
+}
+
+const kinds: ReadonlySet<unknown> = new Set(subjectKinds)
+const isObject = (value: unknown): value is Readonly<Record<string, unknown>> => typeof value === 'object' && value !== null && !Array.isArray(value)
+const isCount = (value: unknown) => Number.isSafeInteger(value) && (value as number) >= 0
+const isId = (value: unknown) => isCount(value) && value !== 0
+const membersOfActor: Readonly<Record<string, number>> = { person: 3, token: 4, vault: 2 }
+
+function isActor(value: unknown): boolean {
+  if (!isObject(value) || typeof value.name !== 'string' || typeof value.kind !== 'string' || Object.keys(value).length !== membersOfActor[value.kind]) return false
+  return value.kind === 'vault' || (isId(value.id) && (value.kind === 'person' || isId(value.ownerId)))
 }

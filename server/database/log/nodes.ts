@@ -1,16 +1,13 @@
 import { and, asc, count, eq, gte, lt, sql } from 'drizzle-orm'
-import { createHash } from 'node:crypto'
-import type { Sha256 } from '#shared/settings/hash'
 import { growingTree, leafHash, type Hash, type SubtreeHash } from '#shared/trail/tree'
 import { prepared, type VaultDb } from '../prepared'
+import { sha256 } from '../sha256'
 import { log, logNode } from './table'
 
 /*
  * The tree over the log. A leaf is hashed from its row; of the inner nodes every eighth level is kept, so that a root or a
  * proof over millions of entries reads some hundreds of rows.
  */
-
-const sha256: Sha256 = bytes => createHash('sha256').update(bytes).digest()
 
 /** Levels whose complete subtrees are kept, lowest first. */
 export const keptLevels = [8, 16, 24] as const

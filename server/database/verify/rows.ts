@@ -1,4 +1,4 @@
-import { asc, getTableColumns, gt, inArray, sql, type AnyColumn } from 'drizzle-orm'
+import { asc, eq, getTableColumns, gt, sql, type AnyColumn, type SQL } from 'drizzle-orm'
 import type { SQLiteTable } from 'drizzle-orm/sqlite-core'
 import type { VaultDb } from '../prepared'
 import { stateOf, type Row, type SubjectTable } from './subjects'
@@ -12,44 +12,59 @@ const columnOf = (table: SQLiteTable, name: string): AnyColumn => {
   return column
 }
 
+type Key = number | string
 /** A row with what the log would say of it. */
-export interface ReadRow { readonly id: number | string, readonly row: Row, readonly state: Row }
+export interface ReadRow { readonly id: Key, readonly row: Row, readonly state: Row }
 /** A row that holds what no column of it can hold. */
-export interface UnreadableRow { readonly id: number | string, readonly row: null }
+export interface UnreadableRow { readonly id: Key, readonly row: null }
 
 /** All rows of a kind in pages, by key; never more than a page in memory. */
 export function* pagesOf(db: VaultDb, subject: SubjectTable): Generator<(ReadRow | UnreadableRow)[]> {
-  const key = columnOf(subject.table, subject.key)
-  let after: number | string | null = null
-  for (;;) {
-    const keys = db.select({ id: sql<number | string>`${key}` }).from(subject.table)
-    const ids: (number | string)[] = (after === null ? keys : keys.where(gt(key, after))).orderBy(asc(key)).limit(pageLength).all().map(({ id }) => id)
-    const last: number | string | undefined = ids.at(-1)
+  const read = readerOf(db, subject)
+  for (let after: Key | null = null; ;) {
+    const page = pageAfter(read, after)
+    const last: Key | undefined = page.at(-1)?.id
     if (last === undefined) return
-    yield readOf(db, subject, ids)
+    yield page
     after = last
   }
 }
 
-function readOf(db: VaultDb, subject: SubjectTable, ids: readonly (number | string)[]): (ReadRow | UnreadableRow)[] {
-  const key = columnOf(subject.table, subject.key)
+interface Reader { readonly page: (after: Key | null) => ReadRow[], readonly keys: (after: Key | null) => Key[], readonly one: (id: Key) => ReadRow[] }
+
+function pageAfter(read: Reader, after: Key | null): (ReadRow | UnreadableRow)[] {
+  const page = unlessDamaged(() => read.page(after))
+  // One of them holds damaged JSON or a flag that is neither: they are read one by one, so that it alone is named.
+  return page ?? read.keys(after).flatMap(id => unlessDamaged(() => read.one(id)) ?? [{ id, row: null }])
+}
+
+function unlessDamaged<Answer>(read: () => Answer): Answer | null {
   try {
-    const rows: Row[] = db.select().from(subject.table).where(inArray(key, [...ids])).orderBy(asc(key)).all()
-    const ends = endsOf(db, subject, rows)
-    return rows.map((row) => {
-      const id = row[subject.key] as number | string
-      return { id, row, state: stateOf(subject, row, ends.get(id)) }
-    })
+    return read()
   }
   catch (error) {
     if (!(error instanceof SyntaxError)) throw error
-    // One of them holds damaged JSON or a flag that is neither: they are read one by one, so that it alone is named.
-    return ids.length === 1 ? ids.map(id => ({ id, row: null })) : ids.flatMap(id => readOf(db, subject, [id]))
+    return null
   }
 }
 
-function endsOf(db: VaultDb, { end, key }: SubjectTable, rows: readonly Row[]): Map<number | string, Row> {
-  if (end === undefined) return new Map()
-  const found: Row[] = db.select().from(end.table).where(inArray(columnOf(end.table, end.key), rows.map(row => row[key]))).all()
-  return new Map(found.map(row => [row[end.key] as number | string, row]))
+/** The statements of a kind, built once: building them for each page costs more than the page. */
+function readerOf(db: VaultDb, subject: SubjectTable): Reader {
+  const { table, end } = subject
+  const key = columnOf(table, subject.key)
+  const placed = { after: sql.placeholder('after'), id: sql.placeholder('id') }
+  const rows = (where?: SQL) => db.select().from(table).where(where).orderBy(asc(key)).limit(pageLength).prepare()
+  const keys = (where?: SQL) => db.select({ id: sql<Key>`${key}` }).from(table).where(where).orderBy(asc(key)).limit(pageLength).prepare()
+  const [first, next, one] = [rows(), rows(gt(key, placed.after)), rows(eq(key, placed.id))]
+  const [firstKeys, nextKeys] = [keys(), keys(gt(key, placed.after))]
+  const ended = end && db.select().from(end.table).where(eq(columnOf(end.table, end.key), placed.id)).prepare()
+  const stated = (found: readonly Row[]) => found.map((row): ReadRow => {
+    const id = row[subject.key] as Key
+    return { id, row, state: stateOf(subject, row, ended?.get({ id })) }
+  })
+  return {
+    page: after => stated(after === null ? first.all() : next.all({ after })),
+    keys: after => (after === null ? firstKeys.all() : nextKeys.all({ after })).map(({ id }) => id),
+    one: id => stated(one.all({ id })),
+  }
 }

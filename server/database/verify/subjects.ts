@@ -1,15 +1,15 @@
-import { asc, eq, getTableColumns } from 'drizzle-orm'
+import { asc, eq, getTableColumns, sql } from 'drizzle-orm'
 import type { SQLiteTable } from 'drizzle-orm/sqlite-core'
-import { createHash } from 'node:crypto'
 import { inflateSync } from 'node:zlib'
-import { hashesOf, sha256Hex, type Sha256 } from '#shared/settings/hash'
-import type { Content } from '#shared/settings/types'
+import { copyHashOfText, sha256Hex } from '#shared/settings/hash'
+import { scribeCode } from '#shared/settings/scribe'
 import type { Entry } from '#shared/trail/entry'
 import { attachmentBytes, DamagedAttachment } from '../attachment/queries'
 import type { AttachmentRow } from '../attachment/table'
-import { readContent } from '../content/queries'
-import type { VaultDb } from '../prepared'
+import { prepared, type VaultDb } from '../prepared'
 import * as schema from '../schema'
+import { sha256 } from '../sha256'
+import type { CopyHashes } from './copy-hashes'
 
 /*
  * For each kind of subject that the log speaks of: the table of its rows, and how a row reads as the state that the newest
@@ -27,13 +27,11 @@ export interface SubjectTable {
   readonly without?: readonly string[]
   /** Rows that end by a row elsewhere. */
   readonly end?: { readonly table: SQLiteTable, readonly key: string }
-  /** What the row itself must hold besides; a sentence where it does not. */
-  readonly check?: (db: VaultDb, row: Row) => string | null
+  /** What the row itself must hold besides; a sentence where it does not. Rows of contents are looked at before those of versions. */
+  readonly check?: (db: VaultDb, row: Row, copies: CopyHashes) => string | null
   /** Rows that come with another act and have no entry of their own. */
   readonly unlogged?: (db: VaultDb, row: Row) => boolean
 }
-
-const sha256: Sha256 = bytes => createHash('sha256').update(bytes).digest()
 
 /** The bytes behind a compressed column; null where they cannot be unpacked. */
 function unpacked(value: unknown): Buffer | null {
@@ -46,25 +44,25 @@ function unpacked(value: unknown): Buffer | null {
   }
 }
 
-function bytesFault(value: unknown, hash: unknown, size: unknown): string | null {
-  const bytes = unpacked(value)
+function bytesFault(bytes: Buffer | null, { sha256: ofUpload, hash = ofUpload, size }: Row): string | null {
   if (bytes === null) return 'its bytes cannot be unpacked'
   if (sha256Hex(bytes, sha256) !== hash) return 'its bytes do not give its hash'
   return bytes.length === size ? null : `it has ${bytes.length} bytes and says ${String(size)}`
 }
 
+function contentFault(_: VaultDb, row: Row, copies: CopyHashes): string | null {
+  const bytes = unpacked(row.text)
+  const copyHash = bytes === null ? undefined : copyHashOfText(bytes.toString('utf8'), sha256)
+  if (copyHash !== undefined) copies.note(row.id as number, copyHash)
+  return bytesFault(bytes, row)
+}
+
 /** Copy hash and scribe code from the content; the content itself is looked at in its own row. */
-function versionFault(db: VaultDb, row: Row): string | null {
-  let content: Content
-  try {
-    content = readContent(db, row.contentId as number)
-  }
-  catch {
-    return `its content ${String(row.contentId)} cannot be read`
-  }
-  const { copyHash, scribeCode } = hashesOf(content, sha256)
+function versionFault(_: VaultDb, row: Row, copies: CopyHashes): string | null {
+  const copyHash = copies.of(row.contentId as number)
+  if (copyHash === undefined) return `its content ${String(row.contentId)} cannot be read`
   if (copyHash !== row.copyHash) return 'its copy hash is not that of its content'
-  return scribeCode === row.scribeCode ? null : 'its scribe code is not that of its content'
+  return scribeCode(copyHash) === row.scribeCode ? null : 'its scribe code is not that of its content'
 }
 
 function attachmentFault(db: VaultDb, row: Row): string | null {
@@ -96,8 +94,8 @@ export const subjects: Readonly<Record<SubjectKind, SubjectTable | null>> = {
   'nameplate': { table: schema.nameplateRevision, key: 'id' },
   'rule': { table: schema.rule, key: 'id', end: { table: schema.ruleEnd, key: 'ruleId' } },
   'waiver': { table: schema.waiver, key: 'id', end: { table: schema.waiverEnd, key: 'waiverId' } },
-  'upload': { table: schema.upload, key: 'id', without: ['bytes'], check: (_, { bytes, sha256: hash, size }) => bytesFault(bytes, hash, size) },
-  'content': { table: schema.content, key: 'id', without: ['text'], check: (_, { text, hash, size }) => bytesFault(text, hash, size) },
+  'upload': { table: schema.upload, key: 'id', without: ['bytes'], check: (_, row) => bytesFault(unpacked(row.bytes), row) },
+  'content': { table: schema.content, key: 'id', without: ['text'], check: contentFault },
   'version': { table: schema.version, key: 'id', without: ['orderAt'], check: versionFault },
   'version-void': { table: schema.versionVoid, key: 'versionId' },
   'check-set': { table: schema.checkSet, key: 'id', unlogged: firstOfItsVersion },
@@ -121,17 +119,21 @@ export const subjects: Readonly<Record<SubjectKind, SubjectTable | null>> = {
   'verification': { table: schema.verification, key: 'id' },
 }
 
+const queries = prepared(db => ({
+  firstSet: db.select({ id: schema.checkSet.id }).from(schema.checkSet).where(eq(schema.checkSet.versionId, sql.placeholder('versionId'))).orderBy(asc(schema.checkSet.id)).limit(1).prepare(),
+}))
+
 /** The judgement that a version came with is derived from it; later ones were an act. */
 function firstOfItsVersion(db: VaultDb, { id, versionId }: Row): boolean {
-  const [first] = db.select({ id: schema.checkSet.id }).from(schema.checkSet).where(eq(schema.checkSet.versionId, versionId as number)).orderBy(asc(schema.checkSet.id)).limit(1).all()
-  return first?.id === id
+  return queries(db).firstSet.get({ versionId })?.id === id
 }
 
 /** What a row would say to the log; values as JSON holds them. */
 export function stateOf({ without = [], end }: SubjectTable, row: Row, ended: Row | undefined): Row {
-  const kept = Object.fromEntries(Object.entries(row).filter(([name, value]) => !without.includes(name) && value !== undefined))
-  const closing = end === undefined ? {} : ended === undefined ? { endedAt: null } : { endedAt: ended.at, endedByPerson: ended.byPerson, endReason: ended.reason }
-  return JSON.parse(JSON.stringify({ ...kept, ...closing })) as Row
+  const state: Record<string, unknown> = {}
+  for (const name in row) if (row[name] !== undefined && !without.includes(name)) state[name] = row[name]
+  if (end === undefined) return state
+  return ended === undefined ? { ...state, endedAt: null } : { ...state, endedAt: ended.at, endedByPerson: ended.byPerson, endReason: ended.reason }
 }
 
 /** What a column holds where an entry is older than the column. */

@@ -50,7 +50,8 @@ function namesAsked({ field, section }: Filters): Asked['names'] {
 }
 
 /** A place is its axes: looked up once, and not again beside every key. null: all axes, or those of sites that have too many. */
-function axesAsked(db: VaultDb, actor: Actor, { axis, machine = null, line = null, site = null }: Filters): number[] | null {
+function axesAsked(db: VaultDb, actor: Actor, query: Filters): number[] | null {
+  const { axis, machine = null, line = null, site = null } = query
   const { axesOf } = historyQueries(db)
   const within = { machineId: machine, lineId: line, siteId: site, sites: boundsText(actor.sites), limit: -1 }
   const idsOf = (rows: readonly { id: number }[]) => rows.map(({ id }) => id)

@@ -5,7 +5,7 @@ import type { Vault } from '#server/database/client'
 import { logQueries } from '#server/database/log/queries'
 import { afterOf, limitOf, pageOf, type PageQuery } from '../page'
 import { assertReadsWhole } from '../trail/trail'
-import { sha256 } from '../uploads/ingest'
+import { sha256 } from '#server/database/sha256'
 
 /** The log from the cursor on, oldest first. Whole or not at all: only without site bounds. */
 export function listLog(vault: Vault, actor: Actor, query: PageQuery) {

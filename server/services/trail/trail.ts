@@ -11,7 +11,7 @@ import { logSize, subtreesOf } from '#server/database/log/nodes'
 import { logBytes, logQueries } from '#server/database/log/queries'
 import { trailQueries } from '#server/database/trail/queries'
 import { tellVault } from '../letters/queue'
-import { sha256 } from '../uploads/ingest'
+import { sha256 } from '#server/database/sha256'
 import { trailActor, trailKeyOf } from './key'
 
 /** The log is read whole or not at all: a part of it proves nothing. */

@@ -1,14 +1,12 @@
-import { createHash } from 'node:crypto'
 import { contentOf } from '#shared/settings/content'
-import { hashContent, type HashedContent, type Sha256 } from '#shared/settings/hash'
+import { hashContent, type HashedContent } from '#shared/settings/hash'
 import type { Dictionary } from '#shared/settings/nameplate'
 import { withoutReadings } from '#shared/settings/readings'
 import type { Content, Normalised, ReadSettings, SettingsFile } from '#shared/settings/types'
+import { sha256 } from '#server/database/sha256'
 
 /** Kept with each version: which reader and which difference made what is derived from its bytes. */
 export const engineVersion = 'reader 1, difference 1'
-
-export const sha256: Sha256 = bytes => createHash('sha256').update(bytes).digest()
 
 /** A file ready to be stored; pure, nothing of it has touched the vault yet. */
 export interface Ingested extends HashedContent {

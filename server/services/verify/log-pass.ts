@@ -6,7 +6,7 @@ import { growingTree, leafHash, type Hash } from '#shared/trail/tree'
 import { isKept, keptNode } from '#server/database/log/nodes'
 import { logQueries } from '#server/database/log/queries'
 import type { VaultDb } from '#server/database/prepared'
-import { sha256 } from '../uploads/ingest'
+import { sha256 } from '#server/database/sha256'
 import type { Faults } from './faults'
 
 /** A checkpoint to hold the log against, and where it was found. */

@@ -1,6 +1,7 @@
 import type { Fault } from '#shared/api/trail'
 import { openReadOnly } from '#server/database/read-only'
 import { trailQueries } from '#server/database/trail/queries'
+import { copyHashes } from '#server/database/verify/copy-hashes'
 import { newestEntries } from '#server/database/verify/newest'
 import { deriveAgain, type Derived } from './derive'
 import { collectFaults } from './faults'
@@ -50,7 +51,7 @@ export async function verifyVault(folder: string, { checkpoints = [], derived = 
       again?.read(entry)
       files?.read(entry)
     }, pause)
-    const rows = await foldRows(db, newest, faults, pause)
+    const rows = await foldRows(db, newest, copyHashes(sqlite), faults, pause)
     return { entries, rows, faults: faults.count(), found: faults.found, ...(again ? { derived: again.derived } : {}), ...(files ? { reread: files.reread } : {}) }
   }
   finally {

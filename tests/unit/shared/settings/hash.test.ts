@@ -4,7 +4,7 @@ import { describe, expect, it } from 'vitest'
 import { canonicalText } from '../../../../shared/settings/canonical'
 import { contentOf, emptyContent } from '../../../../shared/settings/content'
 import { exampleFiles, pressExample, turntableExample } from '../../../../shared/settings/examples'
-import { hashContent, hashesOf, sha256Hex } from '../../../../shared/settings/hash'
+import { copyHashOfText, hashContent, hashesOf, sha256Hex } from '../../../../shared/settings/hash'
 import { scribeCode } from '../../../../shared/settings/scribe'
 import { arbitraryContent } from '../../../support/arbitrary-content'
 
@@ -74,5 +74,24 @@ describe('the hashes of a content', () => {
     for (const file of exampleFiles) {
       expect(hashesOf(contentOf({ ...file, note: 'another', readings: {} }), sha256)).toEqual(hashesOf(contentOf(file), sha256))
     }
+  })
+})
+
+describe('the copy hash of a canonical text', () => {
+  it('law: is that of its content, wherever homeOffset stands', () => {
+    fc.assert(fc.property(arbitraryContent(), (content) => {
+      expect(copyHashOfText(canonicalText(content), sha256)).toBe(hashesOf(content, sha256).copyHash)
+    }), { numRuns: 300 })
+  })
+
+  it.each([
+    ['alone', { homeOffset: 3.5 }], ['first', { homeOffset: -1e-6, jerk: 2 }], ['last', { brakeFitted: true, homeOffset: 0 }], ['between', { brakeFitted: true, homeOffset: 12, thrustLimit: 40 }], ['nowhere', { thrustLimit: 40 }],
+  ])('leaves homeOffset out, %s', (_, setup) => {
+    const content = { ...emptyContent('linear'), setup, extra: { 'homeOffset': 7, '},"zones":[': 1, ',"setup":{': '{"homeOffset":1,' } }
+    expect(copyHashOfText(canonicalText(content), sha256)).toBe(hashesOf(content, sha256).copyHash)
+  })
+
+  it('is none where there is no setup', () => {
+    for (const text of ['', '{}', '{"setup":{}', 'a shopping list', '},"zones":[,"setup":{']) expect(copyHashOfText(text, sha256)).toBeUndefined()
   })
 })

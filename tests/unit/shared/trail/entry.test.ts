@@ -1,7 +1,8 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { acts, type Act } from '../../../../shared/trail/acts'
-import { formatLeaf, parseLeaf, type Entry, type Json } from '../../../../shared/trail/entry'
+import { entrySchema, formatLeaf, parseLeaf, type Entry, type Json } from '../../../../shared/trail/entry'
+import { canonicalJson } from '../../../../shared/settings/canonical'
 import { codeOf } from '../../../support/codes'
 
 const entry: Entry = {
@@ -36,6 +37,18 @@ describe('a log entry', () => {
       const text = formatLeaf(each)
       expect(formatLeaf(parseLeaf(text))).toBe(text)
     }))
+  })
+
+  it('law: one member put in the place of another is read as the schema says', () => {
+    const members = ['v', 'seq', 'at', 'actor', 'act', 'subject', 'state', 'note'] as const
+    const odd = fc.oneof(jsonValue, fc.constantFrom<Json>(0, 1, -1, 1.5, 2 ** 53, '', null, true, [], {}, { kind: 'vault', name: 'x' }, { kind: 'vault', name: 1 }, { kind: 'person', id: 2, name: 'x' }, { kind: 'site', id: 0 }, { kind: 'site', id: 'x' }, { kind: 'site' }, 'site-changed'))
+    fc.assert(fc.property(entries, fc.constantFrom(...members), odd, fc.boolean(), (each, member, value, more) => {
+      const text = canonicalJson({ ...each, [member]: value, ...(more ? {} : { x: 1 }) })
+      const parsed = entrySchema.safeParse(JSON.parse(text))
+      if (!parsed.success) expect(codeOf(() => parseLeaf(text))).toBe('entry-unreadable')
+      else if (acts[(parsed.data as Entry).act] === (parsed.data as Entry).subject.kind) expect(parseLeaf(text)).toEqual(parsed.data)
+      else expect(codeOf(() => parseLeaf(text))).toBe('entry-subject')
+    }), { numRuns: 500 })
   })
 
   it('is one text: keys in another order, white space and other spellings of a number are refused', () => {

@@ -4,7 +4,7 @@ import type { Move, Setup } from '../shared/settings/types'
  * A settings file like those that a plant sends every night: 40 setup values, 64 moves, pretty JSON of about 14 kB.
  */
 
-const setup: Setup = {
+export const sampleSetup: Setup = {
   positiveDirection: 'extend', softLimitsActive: true, softLimitMin: -2, softLimitMax: 198, homeOffset: 3.5, homingMethod: 'hard-stop',
   homingDirection: 'negative', homingSpeed: 20, homingCreepSpeed: 5, homingAcceleration: 500, homingForceLimit: 30, speedLimit: 600,
   accelerationLimit: 5000, decelerationLimit: 5000, quickStopDeceleration: 8000, jogSpeed: 30, pressSpeed: 8, smoothingTime: 4,
@@ -28,6 +28,6 @@ export function sampleFile(change: number, exportedAt?: string): Buffer {
 
 /** A file of the same unit with other moves, as bytes. */
 export function fileOf(moves: readonly Move[], exportedAt = '2026-11-30T08:15:00+01:00'): Buffer {
-  const file = { schema: 'witnessmark.axis-settings/1', unit: { serial: sampleSerial, model: 'HL40-200V', firmware: '2.4' }, exportedAt, axisKind: 'linear', setup, zones: [{ zone: 1, from: 10, to: 25 }], moves, extra: { 'K-017': 15, 'Filter': 'B' }, readings: { operatingHours: 8123 } }
+  const file = { schema: 'witnessmark.axis-settings/1', unit: { serial: sampleSerial, model: 'HL40-200V', firmware: '2.4' }, exportedAt, axisKind: 'linear', setup: sampleSetup, zones: [{ zone: 1, from: 10, to: 25 }], moves, extra: { 'K-017': 15, 'Filter': 'B' }, readings: { operatingHours: 8123 } }
   return Buffer.from(JSON.stringify(file, null, 1), 'utf8')
 }

@@ -35,7 +35,7 @@ interface Reader { readonly page: (after: Key | null) => ReadRow[], readonly key
 function pageAfter(read: Reader, after: Key | null): (ReadRow | UnreadableRow)[] {
   const page = unlessDamaged(() => read.page(after))
   // One of them holds damaged JSON or a flag that is neither: they are read one by one, so that it alone is named.
-  return page ?? read.keys(after).flatMap(id => unlessDamaged(() => read.one(id)) ?? [{ id, row: null }])
+  return page ?? read.keys(after).flatMap((id): (ReadRow | UnreadableRow)[] => unlessDamaged(() => read.one(id)) ?? [{ id, row: null }])
 }
 
 function unlessDamaged<Answer>(read: () => Answer): Answer | null {

@@ -19,31 +19,31 @@ export const accelerationLimit: Rule = {
   reason: 'An acceleration beyond the unit ends in lag and errors; one beyond the setup is clipped, and the cycle takes longer than it says.',
   formula: 'accelerations and decelerations of moves and homing, and the setup’s own limits, <= maxAcceleration; of moves <= accelerationLimit, decelerationLimit',
   levels: ['stop', 'warn', 'unknown'],
-  applies: ({ content }) => speedingUp(content).length + inSetup(content).length > 0,
+  applies: ({ content }) => usedRows(content.moves).length > 0 || inSetup(content, -Infinity).length > 0,
   judge,
 }
 
 function judge({ content, nameplate }: JudgeInput): CheckResult[] {
   const { acceleration } = axisUnits(content.axisKind)
-  const up = speedingUp(content)
-  const down = slowingDown(content)
-  const ownDown = down.filter(({ at }) => at.endsWith('/deceleration'))
+  const up = (limit: number) => speedingUp(content, limit)
+  const down = (limit: number) => slowingDown(content, limit)
+  const ownDown = (limit: number) => down(limit).filter(({ at }) => at.endsWith('/deceleration'))
   return [
-    ...aboveNameplate(say, 'Accelerations', [...up, ...ownDown, ...inSetup(content)], acceleration, 'maxAcceleration', nameplate?.maxAcceleration),
+    ...aboveNameplate(say, 'Accelerations', limit => [...up(limit), ...ownDown(limit), ...inSetup(content, limit)], acceleration, 'maxAcceleration', nameplate?.maxAcceleration),
     ...aboveSetup(say, up, acceleration, atSetup('accelerationLimit'), content.setup.accelerationLimit),
     ...aboveSetup(say, down, acceleration, atSetup('decelerationLimit'), content.setup.decelerationLimit),
   ]
 }
 
-function speedingUp({ moves }: Content): Asked[] {
-  return usedRows(moves).map(row => ({
+function speedingUp({ moves }: Content, limit: number): Asked[] {
+  return usedRows(moves).filter(({ move }) => move.acceleration > limit).map(row => ({
     at: atMove(row, 'acceleration'), words: `Move ${row.move.move}: an acceleration`, value: row.move.acceleration, move: row.move.move,
   }))
 }
 
 /** Without a deceleration of its own a move brakes as it accelerates. */
-function slowingDown({ moves }: Content): Asked[] {
-  return usedRows(moves).map((row) => {
+function slowingDown({ moves }: Content, limit: number): Asked[] {
+  return usedRows(moves).filter(({ move }) => (move.deceleration ?? move.acceleration) > limit).map((row) => {
     const { move, acceleration, deceleration } = row.move
     return {
       at: atMove(row, deceleration === undefined ? 'acceleration' : 'deceleration'),
@@ -52,9 +52,9 @@ function slowingDown({ moves }: Content): Asked[] {
   })
 }
 
-function inSetup({ setup }: Content): Asked[] {
+function inSetup({ setup }: Content, limit: number): Asked[] {
   return (Object.keys(setupAccelerations) as (keyof typeof setupAccelerations)[]).flatMap((field) => {
     const value = setup[field]
-    return value === undefined ? [] : [{ at: atSetup(field), words: setupAccelerations[field], value }]
+    return value === undefined || value <= limit ? [] : [{ at: atSetup(field), words: setupAccelerations[field], value }]
   })
 }

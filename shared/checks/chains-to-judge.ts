@@ -1,4 +1,4 @@
-import { endlessChains, followers, type Row } from '../motion/chains'
+import { endlessChains, followers, rowsByNumber, type Row } from '../motion/chains'
 
 /** Rows that run one after the other. */
 export interface Chain {
@@ -14,7 +14,7 @@ export interface Chain {
 export function chainsOf(rows: readonly Row[]): Chain[] {
   const loops = endlessChains(rows)
   const looping = new Set(loops.flat().map(({ move }) => move.move))
-  const byNumber = new Map(rows.map(row => [row.move.move, row]))
+  const byNumber = rowsByNumber(rows)
   const named = followers(rows)
   const ending = rows.filter(({ move }) => move.next !== undefined && !named.has(move.move)).flatMap((head): Chain[] => {
     const chain: Row[] = []
@@ -29,6 +29,6 @@ export function chainsOf(rows: readonly Row[]): Chain[] {
 
 /** Whether chainsOf tells any: so wherever a row names another that is in use, since it is then in a chain or leads into one. */
 export function hasChains(rows: readonly Row[]): boolean {
-  const numbers = new Set(rows.map(({ move }) => move.move))
-  return rows.some(({ move }) => move.next !== undefined && numbers.has(move.next))
+  const byNumber = rowsByNumber(rows)
+  return rows.some(({ move }) => move.next !== undefined && byNumber.has(move.next))
 }

@@ -26,6 +26,8 @@ export function about(value: number, against?: number): string {
 }
 
 function significant(value: number, digits: number): number {
+  // Most bounds are short, and exact arithmetic takes a hundred times as long as to see it.
+  if (String(value).length <= digits) return value
   return new Exact(value).toSignificantDigits(digits).toNumber()
 }
 

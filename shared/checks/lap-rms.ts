@@ -1,4 +1,4 @@
-import { usedRows, type Row } from '../motion/chains'
+import { rowsByNumber, usedRows, type Row } from '../motion/chains'
 import { isAbove } from '../motion/exact'
 import { loadsOver, rms, type Load } from '../motion/rms'
 import { sizeOf } from '../motion/thrust'
@@ -44,7 +44,7 @@ export function lapsOf(input: JudgeInput): { readonly laps: Lap[], readonly miss
 
 function dutyOf({ axis: { duty } }: JudgeInput, rows: readonly Row[]): { laps: Lap[], missing: string[] } {
   if (!duty) return { laps: [], missing: [] }
-  const byNumber = new Map(rows.map(row => [row.move.move, row]))
+  const byNumber = rowsByNumber(rows)
   const missing = [...new Set(duty.moves.filter(number => !byNumber.has(number)))].map(number => `move ${number}`)
   if (missing.length > 0) return { laps: [], missing }
   return { laps: [{ rows: duty.moves.flatMap(number => byNumber.get(number) ?? []), certain: true, words: () => 'The duty', cycle: duty.cycleTime / 1000 }], missing }

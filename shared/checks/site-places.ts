@@ -44,14 +44,16 @@ function isRefused(name: string, kind: AxisKind): boolean {
 }
 
 function movePlaces({ moves, setup }: Content, name: MoveFieldName, label: string): Place[] {
-  return usedRows(moves).flatMap((row) => {
+  const places: Place[] = []
+  for (const row of usedRows(moves)) {
     const { move } = row.move
     const value = row.move[name]
     const words = `move ${move} ${label}`
-    if (value !== undefined) return [{ at: atMove(row, name), words, value, row: { move } }]
-    const instead = takenInstead(row.move, name, setup)
-    return instead === undefined ? [] : [{ at: instead.own ? atMove(row, instead.own) : atSetup('pressSpeed'), words, value: instead.value, row: { move } }]
-  })
+    const instead = value === undefined ? takenInstead(row.move, name, setup) : undefined
+    if (value !== undefined) places.push({ at: atMove(row, name), words, value, row: { move } })
+    else if (instead) places.push({ at: instead.own ? atMove(row, instead.own) : atSetup('pressSpeed'), words, value: instead.value, row: { move } })
+  }
+  return places
 }
 
 /** What the drive goes by where a row leaves the field out. */

@@ -1,7 +1,7 @@
 import { usedRows, type Row } from '../motion/chains'
 import { endsByHardStop } from '../motion/hard-stops'
-import type { Profile } from '../motion/profile'
 import { furthestStop, thrustDeceleration } from '../motion/stopping'
+import type { Way } from '../motion/ways'
 import { answers } from './answers'
 import { bindingLimit } from './binding-limit'
 import { weigh, type Burden } from './burden'
@@ -32,11 +32,10 @@ function judge(input: JudgeInput): CheckResult[] {
   if (commanded === undefined) return [unknown('The room for a quick stop', ['quickStopDeceleration'], [at])]
   const { burden, missing } = weigh(input)
   const room = roomOf(input)
+  const braking = ([1, -1] as const).map(direction => ({ direction, deceleration: brakes(input, burden, commanded, direction) }))
   const lacking = new Set(missing)
   const results = drivenRows(input).flatMap(({ row, ways }) => {
-    const found = ways.filter(({ placed }) => placed).flatMap(({ profile }) => ([1, -1] as const).flatMap(direction =>
-      beyondRoom(profile, direction, brakes(input, burden, commanded, direction), room)))
-    const worst = found.reduce<Beyond | undefined>((one, other) => one && one.beyond >= other.beyond ? one : other, undefined)
+    const worst = furthestBeyond(ways, braking, room)
     if (!worst) return []
     if (room.certain) return [told(input, row, worst, burden)]
     lacking.add('place of the hard stops')
@@ -69,11 +68,21 @@ function roomOf({ content, nameplate }: JudgeInput): Room {
 
 interface Beyond { readonly stop: number, readonly hardStop: number, readonly beyond: number, readonly speed: number }
 
-function beyondRoom(profile: Profile, direction: 1 | -1, deceleration: number, { low, high }: Room): Beyond[] {
-  const stop = furthestStop(profile, deceleration, direction)
-  const hardStop = direction === 1 ? high : low
-  const beyond = direction * (stop - hardStop)
-  return beyond > finest ? [{ stop, hardStop, beyond, speed: profile.peakSpeed }] : []
+interface Braking { readonly direction: 1 | -1, readonly deceleration: number }
+
+/** Of all quick stops on the ways of a row the one that ends furthest beyond a hard stop; undefined where all end before. */
+function furthestBeyond(ways: readonly Way[], braking: readonly Braking[], { low, high }: Room): Beyond | undefined {
+  let worst: Beyond | undefined
+  for (const { profile, placed } of ways) {
+    if (!placed) continue
+    for (const { direction, deceleration } of braking) {
+      const stop = furthestStop(profile, deceleration, direction)
+      const hardStop = direction === 1 ? high : low
+      const beyond = direction * (stop - hardStop)
+      if (beyond > (worst?.beyond ?? finest)) worst = { stop, hardStop, beyond, speed: profile.peakSpeed }
+    }
+  }
+  return worst
 }
 
 function told({ content: { axisKind } }: JudgeInput, row: Row, { stop, hardStop, beyond, speed }: Beyond, burden: Burden | undefined): CheckResult {

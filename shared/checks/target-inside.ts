@@ -41,7 +41,11 @@ function judge({ content }: JudgeInput): CheckResult[] {
 function ends(moves: JudgeInput['content']['moves']): End[] {
   const rows = usedRows(moves)
   const starts = knownStarts(rows)
-  return rows.flatMap((row): End[] => row.move.kind === 'relative'
-    ? (starts.get(row.move.move)?.positions ?? []).map(start => ({ row, start, end: plus(start, row.move.target) }))
-    : [{ row, end: row.move.target }])
+  const found: End[] = []
+  for (const row of rows) {
+    const { move, kind, target } = row.move
+    if (kind !== 'relative') found.push({ row, end: target })
+    else for (const start of starts.get(move)?.positions ?? []) found.push({ row, start, end: plus(start, target) })
+  }
+  return found
 }

@@ -28,8 +28,10 @@ function judge(input: JudgeInput): CheckResult[] {
   const { burden, missing } = weigh(input)
   if (!burden) return [unknown('Thrust', missing, [atSetup(input.content.axisKind === 'linear' ? 'payloadMass' : 'payloadInertia')])]
   const open: Row[] = []
+  const ofAxis = limitsOf(input, burden)
   const results = drivenRows(input).flatMap((driven) => {
-    const needs = needsOf(input, burden, driven)
+    const limits = driven.row.move.forceLimit === undefined ? ofAxis : limitsOf(input, burden, driven.row)
+    const needs = needsOf(limits, burden, driven)
     if (needs.some(({ limit }) => limit === Infinity)) open.push(driven.row)
     return verdict(driven.row, needs, burden)
   })
@@ -39,17 +41,24 @@ function judge(input: JudgeInput): CheckResult[] {
 /** The worst of one phase. */
 interface Need { readonly phase: Phase, readonly sign: 1 | -1, readonly need: number, readonly limit: number, readonly at: readonly string[] }
 
-function needsOf(input: JudgeInput, { effortOf, base }: Burden, { row, ways }: Driven): Need[] {
-  const worst = new Map<Phase, Need>()
-  const limits = ([1, -1] as const).map((sign) => {
+/** What the thrust of one sign may be, N or N·m, and where that stands. */
+interface SignLimit { readonly sign: 1 | -1, readonly limit: number, readonly at: readonly string[] }
+
+/** The limits of both signs; of a row that may have a limit of its own, or of the axis. */
+function limitsOf(input: JudgeInput, { base }: Burden, row?: Row): SignLimit[] {
+  return ([1, -1] as const).map((sign) => {
     const { percent, at } = bindingLimit(input, sign, row)
     return { sign, limit: percent / 100 * base, at }
   })
+}
+
+function needsOf(limits: readonly SignLimit[], { effortOf }: Burden, { ways }: Driven): Need[] {
+  const worst: Partial<Record<Phase, Need>> = {}
   const ask = (phase: Phase, effort: Effort) => {
     for (const { sign, limit, at } of limits) {
       const need = needOf(effort, sign)
-      const other = worst.get(phase)
-      if (need > 0 && (!other || need * other.limit > other.need * limit)) worst.set(phase, { phase, sign, need, limit, at })
+      const other = worst[phase]
+      if (need > 0 && (!other || need * other.limit > other.need * limit)) worst[phase] = { phase, sign, need, limit, at }
     }
   }
   ask('hold', effortOf(0, 0))
@@ -59,7 +68,7 @@ function needsOf(input: JudgeInput, { effortOf, base }: Burden, { row, ways }: D
       if (phase) ask(phase, effortOf(segment.a, directionOf(segment)))
     }
   }
-  return phases.flatMap(phase => worst.get(phase) ?? [])
+  return phases.map(phase => worst[phase]).filter(need => need !== undefined)
 }
 
 function verdict(row: Row, needs: readonly Need[], { unit, without }: Burden): CheckResult[] {

@@ -1,4 +1,5 @@
 import { usedRows } from '../motion/chains'
+import { onceFor } from '../motion/once'
 import type { Content } from '../settings/types'
 import { answers } from './answers'
 import { axisUnits, plain, quantity } from './format'
@@ -40,12 +41,11 @@ function judge({ content, nameplate }: JudgeInput): CheckResult[] {
 }
 
 /** The setup's window and those that moves have of their own; a press ends by force, wherever that is. */
-function windows({ setup: { inPositionWindow }, moves }: Content): Window[] {
-  return [
-    ...inPositionWindow === undefined ? [] : [{ at: atSetup('inPositionWindow'), window: inPositionWindow }],
-    ...usedRows(moves).flatMap((row): Window[] => {
-      const { move, kind, window } = row.move
-      return window === undefined || kind === 'press' ? [] : [{ at: atMove(row, 'window'), window, move }]
-    }),
-  ]
-}
+const windows = onceFor(({ setup: { inPositionWindow }, moves }: Content): readonly Window[] => {
+  const given: Window[] = inPositionWindow === undefined ? [] : [{ at: atSetup('inPositionWindow'), window: inPositionWindow }]
+  for (const row of usedRows(moves)) {
+    const { move, kind, window } = row.move
+    if (window !== undefined && kind !== 'press') given.push({ at: atMove(row, 'window'), window, move })
+  }
+  return given
+})

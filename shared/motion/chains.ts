@@ -15,10 +15,15 @@ export const usedRows = onceFor((moves: readonly Move[]): readonly Row[] => {
   return rows
 })
 
+/** Rows by their numbers; of several with one number the last. */
+export const rowsByNumber = onceFor((rows: readonly Row[]): ReadonlyMap<number, Row> => new Map(rows.map(row => [row.move.move, row])))
+
 /** Numbers that a used row names in `next`: rows that start by themselves. */
-export function followers(rows: readonly Row[]): ReadonlySet<number> {
-  return new Set(rows.flatMap(({ move }) => move.next === undefined ? [] : [move.next]))
-}
+export const followers = onceFor((rows: readonly Row[]): ReadonlySet<number> => {
+  const named = new Set<number>()
+  for (const { move: { next } } of rows) if (next !== undefined) named.add(next)
+  return named
+})
 
 /** Where a row starts, as far as the rows that name it tell. */
 export interface Starts {
@@ -36,7 +41,9 @@ interface Reach { low: number, high: number, open: boolean }
  * back to its place is gone round once.
  */
 export const knownStarts = onceFor((rows: readonly Row[]): ReadonlyMap<number, Starts> => {
-  const reached = new Map<number, Reach>([...followers(rows)].map(number => [number, { low: Infinity, high: -Infinity, open: false }]))
+  const named = followers(rows)
+  if (named.size === 0) return new Map()
+  const reached = new Map<number, Reach>([...named].map(number => [number, { low: Infinity, high: -Infinity, open: false }]))
   const loops = endlessChains(rows)
   for (const { move } of leadingIn(rows, new Set(loops.flat()))) passOn(move, reached)
   for (const loop of loops) for (const { move } of onceRound(loop, reached)) passOn(move, reached)
@@ -57,7 +64,7 @@ function passOn(move: Move, reached: ReadonlyMap<number, Reach>): void {
 
 /** Rows outside loops, each behind all rows that name it. */
 function leadingIn(rows: readonly Row[], looping: ReadonlySet<Row>): Row[] {
-  const byNumber = new Map(rows.map(row => [row.move.move, row]))
+  const byNumber = rowsByNumber(rows)
   const waitingFor = new Map<number, number>()
   for (const { move: { next } } of rows) if (next !== undefined) waitingFor.set(next, (waitingFor.get(next) ?? 0) + 1)
   const ready = rows.filter(row => !waitingFor.has(row.move.move))
@@ -86,7 +93,8 @@ function onceRound(loop: readonly Row[], reached: ReadonlyMap<number, Reach>): r
 
 /** Rows that follow each other without end, each loop once, from its lowest number on. */
 export const endlessChains = onceFor((rows: readonly Row[]): readonly (readonly Row[])[] => {
-  const byNumber = new Map(rows.map(row => [row.move.move, row]))
+  if (followers(rows).size === 0) return []
+  const byNumber = rowsByNumber(rows)
   const settled = new Set<number>()
   const loops: Row[][] = []
   for (const start of rows) {

@@ -39,28 +39,32 @@ export function ramp(distance: number, drive: Drive, x: number, t: number): Ramp
   const peak = Math.max(enter, leave, Math.min(drive.speed, reachable))
   const up = (peak ** 2 - enter ** 2) / (2 * a)
   const down = (peak ** 2 - leave ** 2) / (2 * b)
-  const stretches = [
-    { time: (peak - enter) / a, v0: enter, a },
-    { time: peak < reachable ? Math.max(0, d - up - down) / peak : 0, v0: peak, a: 0 },
-    { time: (peak - leave) / b, v0: peak, a: -b },
-  ]
-  return { segments: strung(stretches, Math.sign(distance), x, t), leave, peak }
+  const road = new Road(Math.sign(distance), x, t)
+  road.add((peak - enter) / a, enter, a)
+  road.add(peak < reachable ? Math.max(0, d - up - down) / peak : 0, peak, 0)
+  road.add((peak - leave) / b, peak, -b)
+  return { segments: road.segments, leave, peak }
 }
 
 /** Not enough room for more than one stretch: only speeding up, or only braking. */
 function single(distance: number, enter: number, leave: number, a: number, x: number, t: number): Ramp {
-  const segments = strung([{ time: (leave - enter) / a, v0: enter, a }], Math.sign(distance), x, t)
-  return { segments, leave, peak: Math.max(enter, leave) }
+  const road = new Road(Math.sign(distance), x, t)
+  road.add((leave - enter) / a, enter, a)
+  return { segments: road.segments, leave, peak: Math.max(enter, leave) }
 }
 
-function strung(stretches: readonly { time: number, v0: number, a: number }[], sign: number, x: number, t: number): Segment[] {
-  const segments: Segment[] = []
-  let place = x, clock = t
-  for (const { time, v0, a } of stretches) {
-    if (!(time > 0)) continue
-    segments.push({ t0: clock, t1: clock + time, x0: place, v0: sign * v0, a: sign * a })
-    place += sign * (v0 * time + a * time ** 2 / 2)
-    clock += time
+/** Stretches strung one after the other from a place and a time on. */
+class Road {
+  readonly segments: Segment[] = []
+
+  constructor(private readonly sign: number, private place: number, private clock: number) {}
+
+  /** A stretch of so many seconds, speed and acceleration along the road; none where it takes no time. */
+  add(time: number, speed: number, acceleration: number): void {
+    if (!(time > 0)) return
+    const { sign, place, clock } = this
+    this.clock = clock + time
+    this.segments.push({ t0: clock, t1: this.clock, x0: place, v0: sign * speed, a: sign * acceleration })
+    this.place = place + sign * (speed * time + acceleration * time ** 2 / 2)
   }
-  return segments
 }

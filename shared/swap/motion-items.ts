@@ -1,4 +1,4 @@
-import { endlessChains, followers, usedRows, type Row } from '../motion/chains'
+import { endlessChains, followers, rowsByNumber, usedRows, type Row } from '../motion/chains'
 import type { Move } from '../settings/types'
 
 /** What a call sets going: the row that is called and those that follow by themselves. */
@@ -12,7 +12,7 @@ export interface Called {
 /** Every used row that a controller calls, with what follows it; a loop that nothing leads into from its lowest number on. */
 export function calledMoves(moves: readonly Move[]): Called[] {
   const rows = usedRows(moves)
-  const byNumber = new Map(rows.map(row => [row.move.move, row]))
+  const byNumber = rowsByNumber(rows)
   const led = followers(rows)
   const roots = rows.filter(({ move }) => !led.has(move.move))
   const reached = new Set<number>()

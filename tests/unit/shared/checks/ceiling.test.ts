@@ -1,9 +1,10 @@
 import { describe, expect, it } from 'vitest'
 import { answers } from '../../../../shared/checks/answers'
-import { aboveNameplate, aboveSetup } from '../../../../shared/checks/ceiling'
+import { aboveNameplate, aboveSetup, type Asked } from '../../../../shared/checks/ceiling'
 
 const say = answers('speed-limit')
-const asked = [{ at: '/a', words: 'Move 1: a speed', value: 100, move: 1 }, { at: '/a', words: 'The jog speed', value: 100.000001 }]
+const values: Asked[] = [{ at: '/a', words: 'Move 1: a speed', value: 100, move: 1 }, { at: '/a', words: 'The jog speed', value: 100.000001 }]
+const asked = (limit: number) => values.filter(({ value }) => value > limit)
 
 describe('ceilings', () => {
   it('count the bound itself as inside: 100 passes 100, 100.000001 does not', () => {

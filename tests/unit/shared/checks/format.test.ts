@@ -24,6 +24,8 @@ describe('numbers in sentences', () => {
     expect(about(0.15001, 0.15)).toBe('0.15001')
     expect(about(0.15, 0.15)).toBe('0.15')
     expect(about(0.1500000000000001, 0.15)).not.toBe('0.15')
+    expect([1234.5, 1235.5, -0.00012345].map(value => about(value))).toEqual(['1234', '1236', '−0.0001234'])
+    expect([2500, 0.25, -3, 1e21].map(value => about(value))).toEqual(['2500', '0.25', '−3', '1e+21'])
   })
 
   it('prints texts in quotes and switches as on or off', () => {

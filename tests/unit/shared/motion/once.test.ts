@@ -15,6 +15,17 @@ describe('onceFor', () => {
     expect(asked).toHaveLength(2)
   })
 
+  it('knows the last two that were asked about, in whatever order', () => {
+    const asked: string[] = []
+    const reckon = onceFor(({ name }: { readonly name: string }) => {
+      asked.push(name)
+      return [name]
+    })
+    const [one, two, three] = [{ name: 'one' }, { name: 'two' }, { name: 'three' }]
+    for (const given of [one, two, one, two, two, one, three, one, three, two]) expect(reckon(given)).toEqual([given.name])
+    expect(asked).toEqual(['one', 'two', 'three', 'two'])
+  })
+
   it('asks again after a failure: nothing is kept of it', () => {
     let fails = true
     const reckon = onceFor((given: object) => {

@@ -2,10 +2,9 @@ import { spawn, type ChildProcess } from 'node:child_process'
 import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs'
 import { createServer, type AddressInfo } from 'node:net'
 import { tmpdir } from 'node:os'
-import { join } from 'node:path'
-import { fileURLToPath } from 'node:url'
+import { join, resolve } from 'node:path'
 
-const entry = fileURLToPath(new URL('../.output/server/index.mjs', import.meta.url))
+const entry = resolve('.output/server/index.mjs')
 export const admin = { email: 'ines.okafor@larkfield.example', password: 'copper kettle under the stairs' }
 
 interface Reply { readonly status: number, readonly text: string, readonly cookie: string | undefined }

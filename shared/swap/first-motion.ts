@@ -1,11 +1,13 @@
 import { axisUnits, quantity } from '../checks/format'
-import { lapStart, timeline, type Timeline } from '../motion/timeline'
+import { remainder } from '../motion/exact'
+import { timeline, type Timeline } from '../motion/timeline'
 import { inputsOn, isCallable, selectCode, type Numbering } from '../motion/select-inputs'
 import type { Nameplate } from '../settings/nameplate'
 import type { AxisFlag, Content, Move } from '../settings/types'
 import { drivenBack } from './falls'
 import { calledMoves, type Called } from './motion-items'
 import { atReducedSpeed } from './reduced'
+import { startsOf } from './starts'
 import type { MotionItem } from './types'
 
 export interface FirstMotionCase {
@@ -38,37 +40,34 @@ function itemOf(called: Called, swap: FirstMotionCase): MotionItem {
   const [first] = called.moves
   if (!first) throw new RangeError('A call without a move.')
   const runs = runsOf(called, swap)
-  const end = called.endless ? null : onlyOne(runs.map(run => run.end))
-  const placed = first.kind !== 'relative'
+  const placed = called.moves.some(({ kind }) => kind !== 'relative')
+  const { modulo } = swap.content.setup
+  const end = placed && !called.endless ? onlyOne(runs.map(run => modulo === undefined ? run.end : remainder(run.end, modulo))) : null
   return {
     item: `${called.moves.length > 1 ? 'chain' : 'move'}-${first.move}`, kind: called.moves.length > 1 ? 'chain' : 'move',
-    words: wordsOf(called, end, swap.content), moves: called.moves.map(({ move }) => move), endless: called.endless, direction: directionOf(called, runs),
-    end: end !== null && (placed || called.moves.some(({ kind }) => kind !== 'relative')) ? end : null,
-    seconds: runs.length === 0 ? null : Math.max(...runs.map(run => run.seconds)), atLeast: runs.some(run => run.atLeast), inputs: inputsFor(first, swap),
+    words: wordsOf(called, end, swap.content), moves: called.moves.map(({ move }) => move), endless: called.endless, direction: directionOf(called, swap),
+    end, seconds: runs.length === 0 ? null : Math.max(...runs.map(run => run.seconds)), atLeast: runs.some(run => run.atLeast), inputs: inputsFor(first, swap),
   }
 }
 
-/** The chain from the places where it may begin: from either soft limit; relative moves alone from anywhere. */
-function runsOf({ moves, endless }: Called, { content, nameplate, speedPercent }: FirstMotionCase): Timeline[] {
+/** The chain from each of the places from which it may take longest. */
+function runsOf(called: Called, { content, nameplate, speedPercent }: FirstMotionCase): Timeline[] {
   const { setup } = atReducedSpeed(content, speedPercent)
   const around = { setup, stopsAtApproach: nameplate?.stopsAtApproach ?? false }
-  const { softLimitMin, softLimitMax, modulo } = content.setup
-  const anywhere = moves.every(({ kind }) => kind === 'relative')
-  const starts = anywhere || modulo !== undefined
-    ? [0]
-    : endless ? [lapStart(moves, modulo)] : softLimitMin === undefined || softLimitMax === undefined ? [] : [softLimitMin, softLimitMax]
-  return starts.map(from => timeline(moves, from, around))
+  return startsOf(called, content).map(from => timeline(called.moves, from, around))
 }
 
-const onlyOne = (ends: readonly number[]): number | null => ends.length > 0 && ends.every(end => end === ends[0]) ? ends[0] ?? null : null
+const onlyOne = (ends: readonly number[]): number | null => ends.every(end => end === ends[0]) ? ends[0] ?? null : null
 
 /** Which way the first movement goes, where that does not hang on where the axis stands. */
-function directionOf({ moves: [first] }: Called, runs: readonly Timeline[]): MotionItem['direction'] {
+function directionOf({ moves }: Called, swap: FirstMotionCase): MotionItem['direction'] {
+  const [first] = moves
   if (!first) return null
   if (first.kind === 'relative') return signWord(first.target)
   if (first.kind === 'press' && first.approach !== undefined) return signWord(first.target - first.approach)
   if (first.turn === 'positive' || first.turn === 'negative') return first.turn
-  const ways = runs.map(({ stretches: [begin] }) => begin ? Math.sign(begin.a) || Math.sign(begin.v0) : 0).filter(way => way !== 0)
+  // An endless chain too is called wherever the axis stands, not only where a lap of it ends.
+  const ways = runsOf({ moves, endless: false }, swap).map(({ stretches: [begin] }) => begin ? Math.sign(begin.a) || Math.sign(begin.v0) : 0).filter(way => way !== 0)
   return ways.length === 0 || ways.some(way => way !== ways[0]) ? 'either' : signWord(ways[0] ?? 0)
 }
 
@@ -80,7 +79,7 @@ function wordsOf({ moves, endless }: Called, end: number | null, content: Conten
   if (first && moves.length === 1 && !endless) return `Move ${oneMove(first, length)}.`
   const numbers = moves.map(({ move }) => move).join('→')
   if (endless) return `${numbers} runs by itself without end: stop it by calling another move.`
-  return `${numbers} runs by itself, ${moves.length} movements${end === null || moves.every(({ kind }) => kind === 'relative') ? '' : `, ends at ${quantity(end, length)}`}.`
+  return `${numbers} runs by itself, ${moves.length} movements${end === null ? '' : `, ends at ${quantity(end, length)}`}.`
 }
 
 function oneMove({ move, kind, target, approach, forceLimit }: Move, length: string): string {

@@ -3,6 +3,7 @@ import { compareContents } from '../diff/compare'
 import type { Comparison, DiffContext, FieldChange } from '../diff/types'
 import { hashesOf, type Sha256 } from '../settings/hash'
 import { moveFields, type MoveFieldName } from '../settings/move-fields'
+import { setEntries } from '../settings/move-row'
 import type { Nameplate } from '../settings/nameplate'
 import type { Content } from '../settings/types'
 import type { KitContent, MissingKey, ReadBackComparison } from './types'
@@ -63,7 +64,7 @@ function reckonedCode(kit: Content, differences: readonly FieldChange[], sha256:
 
 /** Names the key that a difference shows to be missing: gone from setup or extra, or a field that no row has any more. */
 function missingKeyOf(kit: Content, readBack: Content): (change: FieldChange) => string | undefined {
-  const fieldsThere = new Set(readBack.moves.flatMap(move => Object.keys(move)))
+  const fieldsThere = new Set(readBack.moves.flatMap(move => setEntries(move).map(([field]) => field)))
   const rowsThere = new Set(readBack.moves.map(({ move }) => move))
   return ({ section, field, row, after }) => {
     if (after !== undefined) return undefined

@@ -3,7 +3,7 @@ import { forceBaseOf } from '../motion/force-base'
 import { gridOf, roundDownToStep, type Place } from '../settings/entry-table/grid'
 import type { Content, Move, SetupFieldName } from '../settings/types'
 import { Exact } from '../units/exact'
-import { decimals } from '../units/number'
+import { decimals, largestNumber } from '../units/number'
 import type { CarryCase } from './carried'
 import type { Adjustment, SwapSide } from './types'
 
@@ -25,8 +25,8 @@ export interface Rescaled { readonly content: Content, readonly adjustments: rea
 
 /**
  * Every percentage of the force base as it has to be on the new unit: new = old · base old / base new, half-even to six
- * decimals, then down to the step of the new unit's entry table, so that no limit grows. Unchanged where the bases agree or
- * cannot be told.
+ * decimals and 1e9 at most, as the format has numbers, then down to the step of the new unit's entry table, so that no limit
+ * grows. Unchanged where the bases agree or cannot be told.
  */
 export function rescaled(content: Content, out: SwapSide, into: SwapSide): Rescaled {
   const bases = differingBases(out, into)
@@ -55,7 +55,7 @@ export function rescaled(content: Content, out: SwapSide, into: SwapSide): Resca
 
 /** One percentage, and the step that it was rounded down to where that took anything. */
 function rescaledPercent(before: number, { from, to }: { from: number, to: number }, into: SwapSide, place: Place): { value: number, step?: number } {
-  const exact = new Exact(before).times(from).div(to).toDecimalPlaces(decimals, Exact.ROUND_HALF_EVEN).toNumber()
+  const exact = Exact.min(new Exact(before).times(from).div(to).toDecimalPlaces(decimals, Exact.ROUND_HALF_EVEN), largestNumber).toNumber()
   const value = into.nameplate ? roundDownToStep(exact, into.nameplate, place) : exact
   const step = into.nameplate && gridOf(into.nameplate, place)?.step.toNumber()
   return value === exact || step === undefined ? { value } : { value, step }

@@ -79,6 +79,40 @@ describe('knownStarts', () => {
     }))
   })
 
+  it('of a runaway loop of three, from where it is entered and once round: 100, 110 and 115', () => {
+    const loop = [relative(1, 10, { next: 2 }), relative(2, 5, { next: 3 }), relative(3, 1, { next: 1 })]
+    const entered = (at: number) => [1, 2, 3].map(number => startsOf([absolute(0, 100, { next: at }), ...loop], number))
+    const one = (place: number) => ({ positions: [place], open: false })
+    expect(entered(1)).toEqual([one(100), one(110), one(115)])
+    expect(entered(2)).toEqual([one(106), one(100), one(105)])
+    expect(entered(3)).toEqual([one(101), one(111), one(100)])
+  })
+
+  it('is open all round a loop that is entered nobody knows where', () => {
+    const loop = [relative(1, 10, { next: 2 }), relative(2, 5, { next: 1 })]
+    for (const next of [1, 2]) for (const number of [1, 2]) expect(startsOf([relative(0, 3, { next }), ...loop], number), `${number} entered at ${next}`).toEqual({ positions: [], open: true })
+  })
+
+  it('of tables that branch and meet again waits for every row that leads in', () => {
+    // Only later rows are named, so that there is no loop; whole targets, so that sums are exact.
+    const row = (move: number) => fc.record({ kind: fc.constantFrom('absolute', 'relative'), target: fc.integer({ min: -20, max: 20 }), next: fc.integer({ min: move + 1, max: 8 }), names: fc.integer({ min: 0, max: 4 }) })
+      .map(({ kind, target, next, names }) => (kind === 'absolute' ? absolute : relative)(move, target, names === 0 || next > 7 ? {} : { next }))
+    fc.assert(fc.property(fc.tuple(...[0, 1, 2, 3, 4, 5, 6, 7].map(row)), fc.nat(), (moves, turn) => {
+      /** Every place that a row may begin at, and undefined for one that nobody knows. */
+      const begins = (number: number): (number | undefined)[] => moves.filter(({ next }) => next === number).flatMap((before) => {
+        if (before.kind === 'absolute') return [before.target]
+        const from = begins(before.move)
+        return from.length === 0 ? [undefined] : from.map(place => place === undefined ? undefined : place + before.target)
+      })
+      const shuffled = [...moves.slice(turn % 8), ...moves.slice(0, turn % 8)]
+      for (const { move } of moves) {
+        const all = begins(move), places = all.filter(place => place !== undefined)
+        const expected = all.length === 0 ? undefined : { positions: places.length === 0 ? [] : [...new Set([Math.min(...places), Math.max(...places)])], open: all.includes(undefined) }
+        expect(startsOf(shuffled, move), `move ${move}`).toEqual(expected)
+      }
+    }), { numRuns: 300 })
+  })
+
   it('goes round a loop once', () => {
     expect(startsOf([absolute(0, 100, { next: 1 }), relative(1, 10, { next: 1 })], 1)).toEqual({ positions: [100], open: false })
     expect(startsOf([absolute(3, 50, { next: 3 })], 3)).toEqual({ positions: [50], open: false })

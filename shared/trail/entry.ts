@@ -30,7 +30,8 @@ export type EntryActor = z.infer<typeof actorSchema>
 export const entrySchema = z.strictObject({
   v: z.literal(1),
   seq: z.int().nonnegative(),
-  at: z.string().length(24),
+  /** As Date writes it: RFC 3339 UTC with milliseconds, a real day. */
+  at: z.iso.datetime({ precision: 3 }),
   actor: actorSchema,
   act: z.string().refine(isAct, 'an act of the list'),
   subject: z.strictObject({ kind: z.enum(subjectKinds), id: z.union([z.int().positive(), z.string()]) }),

@@ -30,7 +30,6 @@ export type EntryActor = z.infer<typeof actorSchema>
 export const entrySchema = z.strictObject({
   v: z.literal(1),
   seq: z.int().nonnegative(),
-  /** As Date writes it: RFC 3339 UTC with milliseconds, a real day. */
   at: z.iso.datetime({ precision: 3 }),
   actor: actorSchema,
   act: z.string().refine(isAct, 'an act of the list'),
@@ -84,7 +83,7 @@ function read(leaf: string): Entry {
 function isEntry(value: unknown): value is Entry {
   if (!isObject(value) || Object.keys(value).length !== 8) return false
   const { v, seq, at, actor, act, subject, state, note } = value
-  return v === 1 && isCount(seq) && typeof at === 'string' && at.length === 24 && isActor(actor) && typeof act === 'string' && isAct(act)
+  return v === 1 && isCount(seq) && isInstant(at) && isActor(actor) && typeof act === 'string' && isAct(act)
     && isObject(subject) && Object.keys(subject).length === 2 && kinds.has(subject.kind) && (isId(subject.id) || typeof subject.id === 'string')
     && isObject(state) && (typeof note === 'string' || note === null)
 }
@@ -92,6 +91,10 @@ function isEntry(value: unknown): value is Entry {
 const kinds: ReadonlySet<unknown> = new Set(subjectKinds)
 const isObject = (value: unknown): value is Readonly<Record<string, unknown>> => typeof value === 'object' && value !== null && !Array.isArray(value)
 const isCount = (value: unknown) => Number.isSafeInteger(value) && (value as number) >= 0
+const instant = /^\d{4}-(?:0[1-9]|1[0-2])-(?:0[1-9]|[12]\d|3[01])T(?:[01]\d|2[0-3]):[0-5]\d:[0-5]\d\.\d{3}Z$/
+/** RFC 3339 UTC with milliseconds; every month has 28 days, and a Date makes of a day that there is not another one. */
+const isInstant = (value: unknown) => typeof value === 'string' && instant.test(value)
+  && (value.slice(8, 10) <= '28' || new Date(value).getUTCDate() === Number(value.slice(8, 10)))
 const isId = (value: unknown) => isCount(value) && value !== 0
 const membersOfActor: Readonly<Record<string, number>> = { person: 3, token: 4, vault: 2 }
 

@@ -150,6 +150,8 @@ const table = `
     rev? whole 1 - | keys list 1 200 of text 1 80 | reason text 1 2000 | allowedBy? text 1 80
   POST /api/swaps/:id/first-motion
     rev? whole 1 - | speedPercent number >0 100 | results list 1 1100 | results[].item text 1 40 | results[].outcome one ok/fault | results[].text? text 0 400
+  POST /api/swaps/:id/note
+    rev? whole 1 - | note text 0 2000
   POST /api/swaps/:id/running
     rev? whole 1 - | note? text 0 2000
   POST /api/swaps/:id/release

@@ -31,7 +31,7 @@ const unit: SwapUnit = { id: 3, serial: 'HL40-2231-0087', channel: null, model: 
 const swap: Partial<Swap> = {
   ...place, id: 1, line: 'Jar line 1', site: 'Larkfield Preserves', rev: 4, step: 'read-back', replaced: 'unit', failure: 'no encoder', workOrder: null, openedAt: at, openedBy: 'Tobias Achterberg', unitOut: unit, unitIn: null, putBack: false,
   loadCanFall: true, fit: 'adjust', reasons: [], unfit: null, adjustments: [], forcesConfirmed: null, checks: [], versionId: 7, source: null, asFound: null, kit: null, cautions: null, safe: { by: 'Tobias Achterberg', at, blocked: 'prop' },
-  readBacks: [], firstMotion: null, taughtMissing: ['homeOffset'], running: null, asLeft: null, releaseDueAt: null, released: null, abandoned: null, log: [{ rev: 4, at, by: 'Tobias Achterberg', act: 'safe', text: 'Made safe.' }],
+  readBacks: [], firstMotion: null, ticks: { kit: null, lines: [{ line: 'setup', words: 'Write the setup.', by: 'Tobias Achterberg', at }], written: null, verdict: null, motion: null }, draft: null, taughtMissing: ['homeOffset'], running: null, asLeft: null, releaseDueAt: null, released: null, abandoned: null, log: [{ rev: 4, at, by: 'Tobias Achterberg', act: 'safe', text: 'Made safe.' }],
 }
 const readBack: Partial<ReadBack> = {
   attempt: 2, at, by: 'Tobias Achterberg', byId: 2, file: null, sha256: hash, afterFirstMotion: false, problem: null, detail: null, version: { id: 9, number: 5 }, compare: 'differs', differences: [{ ...change, tolerance: 0.01 }], within: 1,
@@ -75,7 +75,7 @@ const context: Partial<JudgingContext> = { problem: null, registered: null, axis
 const records: readonly Travelling[] = [
   { what: 'a unit of a swap', schema: swapUnit, record: unit, nullable: ['channel', 'firmware', 'actuatorSerial', 'actuatorModel'] },
   { what: 'a swap', schema: swapSchema, record: swap, nullable: [
-    'workOrder', 'unitOut', 'unitIn', 'fit', 'unfit', 'forcesConfirmed', 'versionId', 'source', 'asFound', 'kit', 'cautions', 'safe', 'firstMotion', 'running', 'asLeft', 'releaseDueAt', 'released', 'abandoned'] },
+    'workOrder', 'unitOut', 'unitIn', 'fit', 'unfit', 'forcesConfirmed', 'versionId', 'source', 'asFound', 'kit', 'cautions', 'safe', 'firstMotion', 'draft', 'running', 'asLeft', 'releaseDueAt', 'released', 'abandoned'] },
   { what: 'a read-back', schema: readBackSchema, record: readBack, nullable: ['file', 'problem', 'detail', 'version', 'compare', 'scribeCode'] },
   { what: 'a line of the swaps', schema: swapLine, record: line, nullable: ['serialOut', 'serialIn', 'runningSince', 'releaseDueAt'] },
   { what: 'a kit', schema: swapKitAnswer, record: kit, nullable: [] },

@@ -111,10 +111,12 @@ const doors = `
   POST /api/swaps/:id/source             | tp        |        | swap    |
   POST /api/swaps/:id/unit-in            | tp        |        | swap    |
   POST /api/swaps/:id/cautions           | tp        |        | swap    |
+  POST /api/swaps/:id/ticks              | tp        |        | swap    |
   POST /api/swaps/:id/safe               | tp        |        | swap    |
   POST /api/swaps/:id/read-back          | tp        |        | swap    |
   POST /api/swaps/:id/missing-keys       | tp        |        | swap    |
   POST /api/swaps/:id/first-motion       | tp        |        | swap    |
+  POST /api/swaps/:id/note               | tp        |        | swap    |
   POST /api/swaps/:id/running            | tp        |        | swap    |
   POST /api/swaps/:id/release            | p         |        | swap    | signed
   POST /api/swaps/:id/abandon            | tp        |        | swap    |

@@ -4,6 +4,6 @@ import { assertReadsWhole, logFile } from '#server/services/trail/trail'
 
 export default defineRoute('GET /api/log/file', ({ actor, vault }) => {
   assertReadsWhole(actor)
-  const { chunks, size, name } = logFile(vault)
-  return new StreamAnswer(chunks, size, 'text/plain; charset=utf-8', name)
+  const { chunks, name } = logFile(vault)
+  return new StreamAnswer(chunks, null, 'text/plain; charset=utf-8', name)
 })

@@ -1,4 +1,4 @@
-import { and, asc, count, eq, gte, lt, sql } from 'drizzle-orm'
+import { and, asc, count, eq, gte, lt, max, sql } from 'drizzle-orm'
 import { growingTree, leafHash, type Hash, type SubtreeHash } from '#shared/trail/tree'
 import { prepared, type VaultDb } from '../prepared'
 import { sha256 } from '../sha256'
@@ -17,13 +17,13 @@ const queries = prepared(db => ({
   leaves: db.select({ leaf: log.leaf }).from(log).where(and(gte(log.seq, place('from')), lt(log.seq, place('to')))).orderBy(asc(log.seq)).prepare(),
   nodes: db.select({ hash: logNode.hash }).from(logNode)
     .where(and(eq(logNode.level, place('level')), gte(logNode.place, place('from')), lt(logNode.place, place('to')))).orderBy(asc(logNode.place)).prepare(),
-  size: db.select({ entries: count() }).from(log).prepare(),
+  newest: db.select({ seq: max(log.seq) }).from(log).prepare(),
   kept: db.select({ nodes: count() }).from(logNode).where(eq(logNode.level, place('level'))).prepare(),
   keep: db.insert(logNode).values({ level: place('level'), place: place('place'), hash: place('hash') }).prepare(),
 }))
 
-/** How many entries there are. */
-export const logSize = (db: VaultDb): number => queries(db).size.get()?.entries ?? 0
+/** How many entries there are: they are numbered from 0 without gaps, and counting them would read the whole log. */
+export const logSize = (db: VaultDb): number => (queries(db).newest.get()?.seq ?? -1) + 1
 
 /** Hashes of complete subtrees as the log has them; throws RangeError where the log is too short for one. */
 export function subtreesOf(db: VaultDb): SubtreeHash {

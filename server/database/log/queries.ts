@@ -9,7 +9,6 @@ export const logQueries = prepared(db => ({
   newest: db.select().from(log).orderBy(desc(log.seq)).limit(1).prepare(),
   append: db.insert(log).values({ seq: sql.placeholder('seq'), leaf: sql.placeholder('leaf') }).prepare(),
   at: db.select({ leaf: log.leaf }).from(log).where(eq(log.seq, sql.placeholder('seq'))).prepare(),
-  bytes: db.select({ bytes: sql<number | null>`sum(octet_length(${log.leaf}) + 1)` }).from(log).prepare(),
   from: db.select().from(log).where(gte(log.seq, sql.placeholder('seq'))).orderBy(asc(log.seq)).limit(sql.placeholder('limit')).prepare(),
 }))
 
@@ -39,6 +38,3 @@ export function firstInstant(db: VaultDb): string | null {
 
 /** The leaf text of an entry; undefined where there is none. */
 export const leafAt = (db: VaultDb, seq: number): string | undefined => logQueries(db).at.get({ seq })?.leaf
-
-/** How many bytes the log has as lines. */
-export const logBytes = (db: VaultDb): number => logQueries(db).bytes.get()?.bytes ?? 0

@@ -8,7 +8,7 @@ import { rootOf } from '#shared/trail/tree'
 import type { Actor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
 import { logSize, subtreesOf } from '#server/database/log/nodes'
-import { logBytes, logQueries } from '#server/database/log/queries'
+import { logQueries } from '#server/database/log/queries'
 import { trailQueries } from '#server/database/trail/queries'
 import { tellVault } from '../letters/queue'
 import { sha256 } from '#server/database/sha256'
@@ -66,10 +66,10 @@ function assertWithin(db: Vault['db'], at: string, size: number): void {
 
 const outside = (at: string, message: string) => new Refusal('input', `${at}: ${message}.`, { errors: [{ at, code: 'range', message }] })
 
-/** The log as a file, one leaf a line, as long as it is now; read page by page. `size` counts bytes. */
-export function logFile({ db }: Vault): { chunks: Iterable<Buffer>, size: number, name: string } {
+/** The log as a file, one leaf a line, as long as it is now; read page by page. How many bytes it has nobody knows before it is read. */
+export function logFile({ db }: Vault): { chunks: Iterable<Buffer>, name: string } {
   const entries = logSize(db)
-  return { chunks: linesOf(db, entries), size: logBytes(db), name: `witnessmark-log-${entries}.jsonl` }
+  return { chunks: linesOf(db, entries), name: `witnessmark-log-${entries}.jsonl` }
 }
 
 function* linesOf(db: Vault['db'], entries: number): Generator<Buffer> {

@@ -11,9 +11,14 @@ interface Reply { readonly status: number, readonly text: string, readonly cooki
 
 /** The built server on a vault of its own, and what a bench needs to have registered in it. */
 export class BuiltServer {
-  private readonly folder = mkdtempSync(join(tmpdir(), 'witnessmark-bench-'))
+  private readonly folder: string
   private child: ChildProcess | undefined
   private port = 0
+
+  /** On an empty vault that goes with it, or on one that is there and stays. */
+  constructor(private readonly kept?: string) {
+    this.folder = kept ?? mkdtempSync(join(tmpdir(), 'witnessmark-bench-'))
+  }
 
   async start(): Promise<void> {
     if (!existsSync(entry)) throw new Error('There is no built server: run npm run build first.')
@@ -24,11 +29,22 @@ export class BuiltServer {
     })
     let printed = ''
     this.child.stdout?.on('data', (chunk: Buffer) => { printed += chunk.toString('utf8') })
-    for (let attempt = 0; attempt < 400; attempt += 1) {
-      if (printed.includes('administrator registered')) return
-      await new Promise(resolve => setTimeout(resolve, 50))
+    const ready = () => this.kept === undefined ? printed.includes('administrator registered') : this.answers()
+    for (let attempt = 0; attempt < 2000; attempt += 1) {
+      if (await ready()) return
+      await new Promise(resolve => setTimeout(resolve, 10))
     }
     throw new Error(`The server did not come up: ${printed}`)
+  }
+
+  private async answers(): Promise<boolean> {
+    try {
+      return (await fetch(`${this.origin}/api/health`)).status > 0
+    }
+    catch {
+      // Nobody listens there yet.
+      return false
+    }
   }
 
   /** CPU time of the server so far, all its threads, in milliseconds; the kernel counts in steps of 10. */
@@ -73,8 +89,8 @@ export class BuiltServer {
   }
 
   stop(): void {
-    this.child?.kill('SIGKILL')
-    rmSync(this.folder, { recursive: true, force: true })
+    this.child?.kill(this.kept === undefined ? 'SIGKILL' : 'SIGTERM')
+    if (this.kept === undefined) rmSync(this.folder, { recursive: true, force: true })
   }
 }
 

@@ -41,21 +41,23 @@ async function on<Answer>(into: string, work: (vault: Vault, auditor: PersonActo
   }
 }
 
-await filled(folder, size)
 const figures: Figure[] = []
+function told(more: readonly Figure[]): void {
+  figures.push(...more)
+  for (const { name, value, unit, target, holds } of more) console.log(`${name.padEnd(90)}  ${value.toPrecision(3).padStart(8)} ${unit.padEnd(8)} at most ${target}  ${holds ? 'holds' : 'does not hold'}`)
+}
+
+await filled(folder, size)
 const plans: Plan[] = await on(folder, plansOf)
+for (const { name, plan } of plans.filter(({ holds }) => !holds)) console.log(`${name} walks or sorts: ${plan.join('; ')}`)
 const extent = await on(folder, extentOf)
-figures.push(...await on(folder, measureHistory))
-figures.push(...await on(await filled(folderOf(historyAgainstGit), historyAgainstGit), measureGit))
-figures.push(...(await measureVerify(await filled(folderOf(smallLog), smallLog))).figures)
+told(await on(folder, measureHistory))
+told(await on(await filled(folderOf(historyAgainstGit), historyAgainstGit), measureGit))
+told((await measureVerify(await filled(folderOf(smallLog), smallLog))).figures)
 const verified = await measureVerify(folder)
-figures.push(...verified.figures)
+told(verified.figures)
 // Kept as the server keeps one: it would begin one of its own when it starts, in the way of what is measured.
 await on(folder, vault => keepVerification(vault, { ...verified, outcome: 'sound', faults: 0, found: [] }))
-figures.push(...await measureHttp(folder, extent))
-
-const width = Math.max(...figures.map(figure => figure.name.length))
-for (const figure of figures) console.log(`${figure.name.padEnd(width)}  ${figure.value.toPrecision(3).padStart(8)} ${figure.unit.padEnd(8)} at most ${figure.target}  ${figure.holds ? 'holds' : 'does not hold'}`)
-for (const { name, plan } of plans.filter(({ holds }) => !holds)) console.log(`${name} walks or sorts: ${plan.join('; ')}`)
+told(await measureHttp(folder, extent))
 if (values.json) writeFileSync(values.json, `${JSON.stringify({ size, figures, plans }, null, 2)}\n`)
 if (plans.some(({ holds }) => !holds)) process.exitCode = 1

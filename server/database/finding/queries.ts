@@ -1,4 +1,4 @@
-import { and, asc, count, desc, eq, gt, lt, lte, ne, sql } from 'drizzle-orm'
+import { and, asc, count, desc, eq, gt, lt, lte, ne, sql, type SQL } from 'drizzle-orm'
 import { alias } from 'drizzle-orm/sqlite-core'
 import { axis } from '../axis/table'
 import { ifGiven, inBounds } from '../bounds'
@@ -16,13 +16,15 @@ const notClosed = ne(findingState.state, sql`'closed'`)
 export const findingQueries = prepared((db) => {
   const standing = () => db.select({ finding, state: findingState.state, dueAt: findingState.dueAt, timeZone: site.timeZone }).from(finding)
     .innerJoin(findingState, eq(findingState.findingId, finding.id)).leftJoin(site, eq(site.id, finding.siteId))
-  const atAxis = sql`(${place('axisId')} IS NULL OR EXISTS (SELECT 1 FROM ${findingVersion} WHERE ${findingVersion.findingId} = ${finding.id} AND ${findingVersion.axisId} = ${place('axisId')}))`
+  const page = (id: typeof finding.id | typeof findingState.findingId, ...where: SQL[]) => standing()
+    .where(and(lt(id, place('below')), ...where, inBounds(finding.siteId), ifGiven(finding.siteId, 'siteId'), ifGiven(finding.weight, 'weight'))).orderBy(desc(id)).limit(place('limit')).prepare()
   return {
     byId: db.select().from(finding).where(eq(finding.id, place('id'))).prepare(),
     one: standing().where(eq(finding.id, place('id'))).prepare(),
-    /** Newest first, from below an id. */
-    page: standing().where(and(lt(finding.id, place('below')), inBounds(finding.siteId), ifGiven(findingState.state, 'state'), ifGiven(finding.siteId, 'siteId'), ifGiven(finding.weight, 'weight'), atAxis))
-      .orderBy(desc(finding.id)).limit(place('limit')).prepare(),
+    /** Newest first, from below an id; by the index of what was asked for, since one finding in a thousand may be open, or of one axis. */
+    page: page(finding.id),
+    pageOfState: page(findingState.findingId, eq(findingState.state, place('state'))),
+    pageOfAxis: page(finding.id, sql`${finding.id} IN (SELECT ${findingVersion.findingId} FROM ${findingVersion} WHERE ${findingVersion.axisId} = ${place('axisId')})`, ifGiven(findingState.state, 'state')),
     /** The one of a cause that is not closed. */
     openByCause: db.select({ id: findingState.findingId, state: findingState.state }).from(findingState).where(and(eq(findingState.causeKey, place('causeKey')), notClosed)).prepare(),
     newestByCause: db.select({ id: finding.id, openedAt: finding.openedAt }).from(finding).where(eq(finding.causeKey, place('causeKey'))).orderBy(desc(finding.id)).limit(1).prepare(),
@@ -50,7 +52,12 @@ export const findingQueries = prepared((db) => {
 
 export type StandingFinding = NonNullable<ReturnType<ReturnType<typeof findingQueries>['one']['get']>>
 
+const putQueries = prepared((db) => {
+  const { findingId, causeKey, state, dueAt } = { findingId: place('findingId'), causeKey: place('causeKey'), state: place('state'), dueAt: place('dueAt') }
+  return { put: db.insert(findingState).values({ findingId, causeKey, state, dueAt }).onConflictDoUpdate({ target: findingState.findingId, set: { causeKey: sql`excluded.cause_key`, state: sql`excluded.state`, dueAt: sql`excluded.due_at` } }).prepare() }
+})
+
 /** Puts where a finding stands over where it stood. */
 export function putFindingState(db: VaultDb, row: typeof findingState.$inferInsert): void {
-  db.insert(findingState).values(row).onConflictDoUpdate({ target: findingState.findingId, set: row }).run()
+  putQueries(db).put.run(row)
 }

@@ -20,7 +20,9 @@ const mostVersions = 200
 export function listFindings(vault: Vault, actor: Actor, query: z.output<typeof findingQuery>): { items: Finding[], next: string | null } {
   const { state = null, site = null, weight = null, axis } = query
   const axisId = axis === undefined ? null : siteQueries(vault.db).find('axis', axis)?.id ?? 0
-  const rows = findingQueries(vault.db).page.all({ below: afterOf(query, Number.MAX_SAFE_INTEGER), limit: limitOf(query) + 1, sites: boundsText(actor.sites), state, siteId: site, weight, axisId })
+  const { page, pageOfState, pageOfAxis } = findingQueries(vault.db)
+  const statement = axisId !== null ? pageOfAxis : state !== null ? pageOfState : page
+  const rows = statement.all({ below: afterOf(query, Number.MAX_SAFE_INTEGER), limit: limitOf(query) + 1, sites: boundsText(actor.sites), state, siteId: site, weight, axisId })
   const now = vault.now()
   return pageOf(rows, query, ({ finding }) => finding.id, row => findingOnWire(vault.db, row, now))
 }

@@ -1,6 +1,7 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { attachmentQueries } from '../../../server/database/attachment/queries'
 import { axisLists } from '../../../server/database/axis-state/list'
+import { findingQueries } from '../../../server/database/finding/queries'
 import { judgingQueries } from '../../../server/database/judging/queries'
 import { knownGoodQueries } from '../../../server/database/known-good/queries'
 import { labelQueries } from '../../../server/database/label/queries'
@@ -51,20 +52,24 @@ beforeAll(() => {
     ${upTo(500)} INSERT INTO version_void SELECT i * 7, ${at}, 1, 'wrong' FROM n;
     ${upTo(400)} INSERT INTO axis_state (axis_id, status, off_harm, off_motion, off_text, current_version_id, known_good_version_id, fitting_id, versions, sightings, stop, warn, note, unknown)
       SELECT i, 'in-line', 0, 0, 0, i, i, i, 50, 100, 0, 0, 0, 0 FROM n;
+    ${upTo(6000)} INSERT INTO finding (site_id, cause, cause_key, title, weight, opened_at) SELECT i % 6 + 1, 'watched-change', 'key ' || i, 'changed', 'harm', ${at} FROM n;
+    ${upTo(6000)} INSERT INTO finding_version (finding_id, axis_id, version_id, says, changes, at) SELECT i, i % 400 + 1, i, 'changed', '[]', ${at} FROM n;
+    ${upTo(12000)} INSERT INTO finding_act (finding_id, kind, at, by_person, text, close_as) SELECT i % 6000 + 1, CASE i % 2 WHEN 0 THEN 'explained' ELSE 'closed' END, ${at}, 1, 'r', CASE i % 2 WHEN 1 THEN 'accepted' END FROM n;
+    ${upTo(6000)} INSERT INTO finding_state SELECT i, 'key ' || i, CASE i % 500 WHEN 0 THEN 'open' ELSE 'closed' END, ${at} FROM n;
     ANALYZE;`)
 })
 afterAll(() => plant.close())
 
 interface Statement { readonly getQuery: () => { sql: string, params: unknown[] } }
 
-/** Nothing of a fleet's size is sorted here: the events, waivers and rules of one axis, the channels of one serial. */
-const maySort = ['life.voids', 'life.takenOut', 'life.findingsClosed', 'life.findings', 'life.swaps', 'judging.channels', 'judging.rules', 'values.rules', 'waivers.notEnded', 'attachments.ofVersion']
-/** The board takes every axis. */
-const mayScan = ['axes.all']
+/** Nothing of a fleet's size is sorted here: the events, waivers and rules of one axis, the channels of one serial, the findings that wait, the axes of one. */
+const maySort = ['life.voids', 'life.takenOut', 'life.findingsClosed', 'life.findings', 'life.swaps', 'judging.channels', 'judging.rules', 'values.rules', 'waivers.notEnded', 'attachments.ofVersion', 'findings.waiting', 'findings.openOfVersion', 'findings.axesOf']
+/** The board takes every axis, and every finding that waits: those stand in an index of their own. */
+const mayScan = ['axes.all', 'findings.waiting', 'findings.countWaiting']
 
 function statements(): [name: string, plan: string[]][] {
   const { db, sqlite } = plant.vault
-  const sets = { versions: versionQueries(db), life: lifeQueries(db), judging: judgingQueries(db), marks: knownGoodQueries(db), axes: axisLists(db), waivers: waiverQueries(db), values: valueQueries(db), attachments: attachmentQueries(db), labels: labelQueries(db), stock: stockQueries(db) }
+  const sets = { versions: versionQueries(db), life: lifeQueries(db), judging: judgingQueries(db), marks: knownGoodQueries(db), axes: axisLists(db), waivers: waiverQueries(db), values: valueQueries(db), attachments: attachmentQueries(db), labels: labelQueries(db), stock: stockQueries(db), findings: findingQueries(db) }
   return Object.entries(sets).flatMap(([set, queries]) => Object.entries(queries).filter(([, query]) => typeof query !== 'function').map(([key, query]): [string, string[]] => {
     const { sql, params } = (query as unknown as Statement).getQuery()
     const plan = sqlite.prepare(`EXPLAIN QUERY PLAN ${sql}`).all(...params.map(param => (typeof param === 'object' ? 1 : param))) as { detail: string }[]

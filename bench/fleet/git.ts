@@ -9,7 +9,7 @@ import { readUploadBytes } from '../../server/database/upload/queries'
 import { listHistory } from '../../server/services/history/history'
 import type { HistoryItem, HistoryQuery } from '../../shared/api/history'
 import { atMost, median, type Figure } from '../figure'
-import { timesOf } from './times'
+import { elapsedOf } from './times'
 
 /*
  * The same history and the same questions put to git 2 as people keep such files there: one JSON file an axis, one value a line,
@@ -59,12 +59,12 @@ function questions(vault: Vault, actor: PersonActor, git: (...args: string[]) =>
   const ours = one.map(([axisId]) => all(vault, actor, { axis: String(axisId), field: 'frictionForce' }).length)
   same('one axis', ours.join(), one.map(([, tag]) => linesOf(tag)).join())
   same('all axes', all(vault, actor, { field: 'frictionForce' }).length, lines('-G"frictionForce"') - axes.length)
-  const onAxis = median(timesOf(200, at => all(vault, actor, { axis: String(axes[at % axes.length]?.[0]), field: 'frictionForce' })))
-  const gitOnAxis = median(timesOf(rounds, at => linesOf(axes[at % axes.length]?.[1] ?? '')))
-  const everywhere = median(timesOf(rounds, () => all(vault, actor, { field: 'frictionForce' })))
-  const gitEverywhere = median(timesOf(3, () => lines('-G"frictionForce"')))
-  const newest = median(timesOf(200, () => listHistory(vault, actor, { field: 'frictionForce' })))
-  const gitNewest = median(timesOf(rounds, () => lines('-G"frictionForce"', '-n', '50')))
+  const onAxis = median(elapsedOf(200, at => all(vault, actor, { axis: String(axes[at % axes.length]?.[0]), field: 'frictionForce' })))
+  const gitOnAxis = median(elapsedOf(rounds, at => linesOf(axes[at % axes.length]?.[1] ?? '')))
+  const everywhere = median(elapsedOf(rounds, () => all(vault, actor, { field: 'frictionForce' })))
+  const gitEverywhere = median(elapsedOf(3, () => lines('-G"frictionForce"')))
+  const newest = median(elapsedOf(200, () => listHistory(vault, actor, { field: 'frictionForce' })))
+  const gitNewest = median(elapsedOf(rounds, () => lines('-G"frictionForce"', '-n', '50')))
   return [
     atMost(`one field on one axis of ${uploads.length} uploads, to git log -G (${gitOnAxis.toPrecision(3)} ms)`, onAxis / gitOnAxis, 0.01),
     atMost(`one field on all axes, every hit, to git log -G (${gitEverywhere.toPrecision(3)} ms)`, everywhere / gitEverywhere, 0.01),

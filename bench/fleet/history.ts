@@ -7,7 +7,7 @@ import { keyName } from './chain'
 import { figuresOf, spread, timesOf } from './times'
 
 /*
- * What an auditor asks, by the service that answers the route, its answer written as JSON, in this process: the time in the
+ * What an auditor asks, by the service that answers the route, its answer written as JSON, in this process: the work in the
  * server without the way to it. Each asking is another one.
  */
 
@@ -51,5 +51,5 @@ function dayOf(at: number, { from, to }: Extent): { from: string, to: string } {
 export function measureHistory(vault: Vault, actor: PersonActor): Figure[] {
   const extent = extentOf(vault)
   return Object.entries(historyQuestions).flatMap(([name, question]) =>
-    figuresOf(`history in the server: ${name}`, timesOf(askings, at => JSON.stringify(listHistory(vault, actor, question(at, extent)))), aim))
+    figuresOf(`history in the server, CPU: ${name}`, timesOf(askings, at => JSON.stringify(listHistory(vault, actor, question(at, extent)))), aim))
 }

@@ -2,6 +2,7 @@ import type { Vault } from '../../server/database/client'
 import { axisLists } from '../../server/database/axis-state/list'
 import { findingQueries } from '../../server/database/finding/queries'
 import { versionsOfAxesSql } from '../../server/database/history/axes-walk'
+import { actsSql, itemsSql } from '../../server/database/history/items'
 import { historyQueries } from '../../server/database/history/queries'
 import { termQueries } from '../../server/database/history/terms'
 import { hitsSql, walkSql, walkValues, type Asked, type Way } from '../../server/database/history/walk'
@@ -21,7 +22,7 @@ const ways: readonly Exclude<Way, { by: 'axes' }>[] = [
 ]
 
 /** Keys that were read before, lists that were handed in, and the key itself, newest first, for what has no condition. */
-const mayWalk = /^SCAN (w|a VIRTUAL TABLE.*|i VIRTUAL TABLE.*|json_each VIRTUAL TABLE.*|log|change)$/
+const mayWalk = /^SCAN (w|[aik] VIRTUAL TABLE.*|json_each VIRTUAL TABLE.*|log|change)$/
 
 interface Prepared { readonly getQuery: () => { sql: string, params: unknown[] } }
 
@@ -41,8 +42,9 @@ export function plansOf({ sqlite, db }: Vault): Plan[] {
     planned('history of many axes, their versions', versionsOfAxesSql, { axisIds: '[1,2]', low: 1, high: 100 }),
     planned('history of many axes, their changes', hitsSql(axes), { ...walkValues({ by: 'axes', ids: [] }, axes), versionIds: '[1,2]' }),
     ...(['axis', 'machine', 'line', 'sites'] as const).map(by => statement(`axes of ${by}`, history.axesOf[by])),
-    ...(['item', 'firstFrom', 'lastBefore', 'notRead'] as const).map(name => statement(`history, ${name}`, history[name])),
+    planned('history, its lines', itemsSql, { keys: '[[1,0]]' }), planned('history, what was said of findings', actsSql, { ids: '[1]' }),
+    ...(['firstFrom', 'lastBefore', 'notRead'] as const).map(name => statement(`history, ${name}`, history[name])),
     statement('acts of a kind', termQueries(db).ofKind), statement('axes', axisLists(db).page), statement('versions of an axis', versionQueries(db).page),
-    statement('findings', findingQueries(db).page), statement('log', logQueries(db).from), statement('units', unitRows(db).page),
+    ...(['page', 'pageOfState', 'pageOfAxis'] as const).map(name => statement(`findings, ${name}`, findingQueries(db)[name])), statement('log', logQueries(db).from), statement('units', unitRows(db).page),
   ]
 }

@@ -14,17 +14,18 @@ const base = alias(version, 'base')
 const notClosed = ne(findingState.state, sql`'closed'`)
 
 export const findingQueries = prepared((db) => {
-  const standing = () => db.select({ finding, state: findingState.state, dueAt: findingState.dueAt, timeZone: site.timeZone }).from(finding)
-    .innerJoin(findingState, eq(findingState.findingId, finding.id)).leftJoin(site, eq(site.id, finding.siteId))
-  const page = (id: typeof finding.id | typeof findingState.findingId, ...where: SQL[]) => standing()
+  /** The plus keeps the join from being walked the other way round: by state, and then sorted. */
+  const standing = (joined: SQL = eq(findingState.findingId, finding.id)) => db.select({ finding, state: findingState.state, dueAt: findingState.dueAt, timeZone: site.timeZone }).from(finding)
+    .innerJoin(findingState, joined).leftJoin(site, eq(site.id, finding.siteId))
+  const page = (id: typeof finding.id | typeof findingState.findingId, from: ReturnType<typeof standing>, ...where: SQL[]) => from
     .where(and(lt(id, place('below')), ...where, inBounds(finding.siteId), ifGiven(finding.siteId, 'siteId'), ifGiven(finding.weight, 'weight'))).orderBy(desc(id)).limit(place('limit')).prepare()
   return {
     byId: db.select().from(finding).where(eq(finding.id, place('id'))).prepare(),
     one: standing().where(eq(finding.id, place('id'))).prepare(),
     /** Newest first, from below an id; by the index of what was asked for, since one finding in a thousand may be open, or of one axis. */
-    page: page(finding.id),
-    pageOfState: page(findingState.findingId, eq(findingState.state, place('state'))),
-    pageOfAxis: page(finding.id, sql`${finding.id} IN (SELECT ${findingVersion.findingId} FROM ${findingVersion} WHERE ${findingVersion.axisId} = ${place('axisId')})`, ifGiven(findingState.state, 'state')),
+    page: page(finding.id, standing(sql`${findingState.findingId} = +${finding.id}`)),
+    pageOfState: page(findingState.findingId, standing(), eq(findingState.state, place('state'))),
+    pageOfAxis: page(finding.id, standing(), sql`${finding.id} IN (SELECT ${findingVersion.findingId} FROM ${findingVersion} WHERE ${findingVersion.axisId} = ${place('axisId')})`, ifGiven(findingState.state, 'state')),
     /** The one of a cause that is not closed. */
     openByCause: db.select({ id: findingState.findingId, state: findingState.state }).from(findingState).where(and(eq(findingState.causeKey, place('causeKey')), notClosed)).prepare(),
     newestByCause: db.select({ id: finding.id, openedAt: finding.openedAt }).from(finding).where(eq(finding.causeKey, place('causeKey'))).orderBy(desc(finding.id)).limit(1).prepare(),

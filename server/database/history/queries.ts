@@ -1,42 +1,22 @@
-import { and, asc, desc, eq, getTableColumns, gt, gte, lt, lte, notExists, sql, type SQL } from 'drizzle-orm'
-import { alias } from 'drizzle-orm/sqlite-core'
+import { and, asc, desc, eq, gt, gte, lt, lte, notExists, sql, type SQL } from 'drizzle-orm'
 import { axis } from '../axis/table'
 import { axisState } from '../axis-state/table'
 import { ifGiven, inBounds } from '../bounds'
-import { change } from '../change/table'
-import { finding, findingState, findingVersion } from '../finding/table'
 import { line } from '../line/table'
 import { machine } from '../machine/table'
 import { person } from '../person/table'
 import { prepared, type VaultDb } from '../prepared'
 import { sighting } from '../sighting/table'
 import { site } from '../site/table'
-import { token } from '../token/table'
-import { unit } from '../unit/table'
-import { version, versionVoid } from '../version/table'
+import { version } from '../version/table'
 
 const place = sql.placeholder
-const base = alias(version, 'base')
-const { file: _, ...columns } = getTableColumns(version)
 
 /** The axes of a place that lie within the others that were named and within the sites that the actor sees. Each is found by another index. */
 const axesWhere = (db: VaultDb, found: SQL) => db.select({ id: axis.id }).from(axis).innerJoin(machine, eq(machine.id, axis.machineId)).innerJoin(line, eq(line.id, machine.lineId))
   .where(and(found, ifGiven(machine.id, 'machineId'), ifGiven(line.id, 'lineId'), ifGiven(line.siteId, 'siteId'), inBounds(line.siteId))).limit(place('limit')).prepare()
 
 export const historyQueries = prepared(db => ({
-  /** One change by its key, with all that its line says. */
-  item: db.select({
-    change, version: columns, tag: axis.tag, serial: unit.serial, storer: person.name, token: token.name, timeZone: site.timeZone,
-    base: { id: base.id, number: base.number, orderAt: base.orderAt }, voidAt: versionVoid.at,
-    findingId: sql<number | null>`(SELECT ${findingVersion.findingId} FROM ${findingVersion} INNER JOIN ${finding} ON ${finding.id} = ${findingVersion.findingId}
-      WHERE ${findingVersion.versionId} = ${version.id} AND ${finding.cause} = 'watched-change' AND ${change.watched} = 1 LIMIT 1)`,
-  }).from(change)
-    .innerJoin(version, eq(version.id, change.versionId)).innerJoin(axis, eq(axis.id, version.axisId)).innerJoin(machine, eq(machine.id, axis.machineId))
-    .innerJoin(line, eq(line.id, machine.lineId)).innerJoin(site, eq(site.id, line.siteId)).innerJoin(unit, eq(unit.id, version.unitId))
-    .innerJoin(person, eq(person.id, version.storedBy)).leftJoin(token, eq(token.id, version.storedByToken))
-    .leftJoin(base, eq(base.id, version.baseId)).leftJoin(versionVoid, eq(versionVoid.versionId, version.id))
-    .where(and(eq(change.versionId, place('versionId')), eq(change.seq, place('seq')))).prepare(),
-  findingState: db.select({ state: findingState.state }).from(findingState).where(eq(findingState.findingId, place('id'))).prepare(),
   /** The versions of a stretch of time are a stretch of ids, since received-at never goes back. */
   firstFrom: db.select({ id: version.id }).from(version).where(gte(version.receivedAt, place('from'))).orderBy(asc(version.receivedAt), asc(version.id)).limit(1).prepare(),
   lastBefore: db.select({ id: version.id }).from(version).where(lt(version.receivedAt, place('to'))).orderBy(desc(version.receivedAt), desc(version.id)).limit(1).prepare(),

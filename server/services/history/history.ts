@@ -2,8 +2,7 @@ import type { HistoryItem, HistoryQuery } from '#shared/api/history'
 import { Refusal } from '#shared/errors/refusal'
 import type { Actor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
-import { findingQueries } from '#server/database/finding/queries'
-import { historyQueries } from '#server/database/history/queries'
+import { readFindings, readItems, type ItemRow } from '#server/database/history/items'
 import type { ChangeKey } from '#server/database/history/keys'
 import type { Stretch } from '#server/database/history/walk'
 import type { VaultDb } from '#server/database/prepared'
@@ -23,14 +22,14 @@ export function* wholeHistory(vault: Vault, filter: HistoryFilter, size = 200): 
   let after: ChangeKey | null = startOf(filter.stretch)
   while (after !== null) {
     const { keys, next } = findKeys(vault.sqlite, filter.plans, filter.asked, filter.stretch, after, size)
-    yield itemsOf(vault.db, keys)
+    yield itemsOf(vault, keys)
     after = next
   }
 }
 
 function pageOn({ sqlite, db }: Vault, { plans, asked, stretch }: HistoryFilter, after: ChangeKey, limit: number) {
   const { keys, next } = findKeys(sqlite, plans, asked, stretch, after, limit)
-  return { items: itemsOf(db, keys), next: next && `${next.versionId}.${next.seq}` }
+  return { items: itemsOf({ sqlite, db }, keys), next: next && `${next.versionId}.${next.seq}` }
 }
 
 const startOf = ({ last }: Stretch): ChangeKey => ({ versionId: last + 1, seq: 0 })
@@ -43,35 +42,41 @@ function cursorOf({ cursor }: HistoryQuery, stretch: Stretch): ChangeKey {
   return key.versionId > stretch.last ? startOf(stretch) : key
 }
 
-function itemsOf(db: VaultDb, keys: readonly ChangeKey[]): HistoryItem[] {
-  const findings = new Map<number, FindingWords>()
-  return keys.map((key) => {
-    const row = historyQueries(db).item.get({ versionId: key.versionId, seq: key.seq })
-    if (!row) throw new TypeError(`change ${key.versionId}.${key.seq} is in an index and not in its table`)
-    const { change, version, base, findingId } = row
-    const words = findingId === null ? noFinding : findings.get(findingId) ?? findingWords(db, findingId)
-    if (findingId !== null) findings.set(findingId, words)
+function itemsOf({ sqlite, db }: Pick<Vault, 'sqlite' | 'db'>, keys: readonly ChangeKey[]): HistoryItem[] {
+  const rows = readItems(sqlite, keys)
+  if (rows.length !== keys.length) throw new TypeError('a change is in an index and not in its table')
+  const named = namesOf(db)
+  const words = findingWords(sqlite, rows, named)
+  return rows.map(({ findingId, receivedAt, storer, token, voidAt, changedBy, allowedBy, ...row }) => {
+    const said = words.get(findingId ?? 0) ?? noFinding
     return {
-      versionId: version.id, axisId: version.axisId, tag: row.tag, section: change.section, row: change.row, field: change.field,
-      before: change.before ?? null, after: change.after ?? null, unit: change.unit, delta: change.delta, points: change.points, weight: change.weight,
-      at: version.receivedAt, capturedAt: version.capturedAt,
-      changedBy: namedPerson(db, version.changedBy), storedBy: row.token === null ? row.storer : `${row.token} (${row.storer})`,
-      reason: version.reason, workOrder: version.workOrder, allowedBy: namedPerson(db, version.allowedBy) ?? words.allowedBy, findingId,
-      number: version.number, baseId: base?.id ?? null, baseNumber: base?.number ?? null, baseAt: base?.orderAt ?? null, seq: change.seq,
-      timeZone: row.timeZone, serial: row.serial, occasion: version.occasion, late: version.late, void: row.voidAt !== null,
-      findingState: words.state, explanation: words.explanation, explainedBy: words.explainedBy,
+      ...row, at: receivedAt, changedBy: named(changedBy), storedBy: token === null ? storer : `${token} (${storer})`,
+      allowedBy: named(allowedBy) ?? said.allowedBy, findingId, void: voidAt !== null, findingState: said.state, explanation: said.explanation, explainedBy: said.explainedBy,
     }
   })
+}
+
+/** Who changed or allowed something, each person looked up once a page. */
+function namesOf(db: VaultDb): (text: string | null) => string | null {
+  const names = new Map<string, string | null>()
+  return (text) => {
+    if (text === null) return null
+    const known = names.get(text) ?? namedPerson(db, text)
+    names.set(text, known)
+    return known
+  }
 }
 
 type FindingWords = Pick<HistoryItem, 'explanation' | 'explainedBy' | 'allowedBy'> & { readonly state: HistoryItem['findingState'] }
 const noFinding: FindingWords = { state: null, explanation: null, explainedBy: null, allowedBy: null }
 
-/** Where a finding stands, what was said of it last, and who allowed what was accepted. */
-function findingWords(db: VaultDb, id: number): FindingWords {
-  const acts = findingQueries(db).acts.all({ findingId: id })
-  const said = acts.findLast(({ act }) => act.kind === 'explained')
-  const state = historyQueries(db).findingState.get({ id })?.state ?? null
-  const closed = state === 'closed' ? acts.findLast(({ act }) => act.kind === 'closed') : undefined
-  return { state, explanation: said?.act.text ?? null, explainedBy: said?.by ?? null, allowedBy: namedPerson(db, closed?.act.allowedBy ?? null) }
+/** Where the findings of a page stand, what was said of each last, and who allowed what was accepted. */
+function findingWords(sqlite: Vault['sqlite'], rows: readonly ItemRow[], named: (text: string | null) => string | null): ReadonlyMap<number, FindingWords> {
+  const ids = [...new Set(rows.flatMap(({ findingId }) => findingId ?? []))]
+  if (ids.length === 0) return new Map()
+  return new Map([...readFindings(sqlite, ids)].map(([id, { state, acts }]) => {
+    const said = acts.findLast(({ kind }) => kind === 'explained')
+    const closed = state === 'closed' ? acts.findLast(({ kind }) => kind === 'closed') : undefined
+    return [id, { state, explanation: said?.text ?? null, explainedBy: said?.by ?? null, allowedBy: named(closed?.allowedBy ?? null) }]
+  }))
 }

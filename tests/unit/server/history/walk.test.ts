@@ -4,6 +4,7 @@ import type { PersonActor } from '../../../../server/database/actor'
 import { historyQueries } from '../../../../server/database/history/queries'
 import { termQueries } from '../../../../server/database/history/terms'
 import { versionsOfAxesSql } from '../../../../server/database/history/axes-walk'
+import { actsSql, itemsSql, statesSql } from '../../../../server/database/history/items'
 import type { ChangeKey } from '../../../../server/database/history/keys'
 import { hitsSql, walkSql, walkValues, type Asked, type Way } from '../../../../server/database/history/walk'
 import { historyFilter } from '../../../../server/services/history/filter'
@@ -54,7 +55,7 @@ describe('walks on a fleet', () => {
     expect(lines.length).toBeGreaterThan(0)
   })
 
-  it.each(['item', 'firstFrom', 'lastBefore', 'newest', 'notRead', 'findingState'] as const)('%s: looks up, and sorts nothing', (name) => {
+  it.each(['firstFrom', 'lastBefore', 'newest', 'notRead'] as const)('%s: looks up, and sorts nothing', (name) => {
     const { sql, params } = (historyQueries(plant.vault.db)[name] as unknown as { getQuery: () => { sql: string, params: unknown[] } }).getQuery()
     const lines = plan(sql, params.map(param => (typeof param === 'object' ? 1 : param)))
     expect(slow(lines).filter(line => !(name === 'newest' && line === 'SCAN version'))).toEqual([])
@@ -68,6 +69,13 @@ describe('walks on a fleet', () => {
     expect(hits.filter(line => /^(SCAN (?!i |json_each)|USE TEMP)/.test(line))).toEqual([])
     expect(hits).toContain('SEARCH c USING PRIMARY KEY (version_id=?)')
     expect(sqlite.prepare(hitsSql(asked)).all({ ...walkValues({ by: 'axes', ids: [1] }, asked), versionIds: '[1,2]' }).length).toBe(asked === nothing ? 6 : 0)
+  })
+
+  it.each([['items', itemsSql, { keys: '[[1,1]]' }], ['where findings stand', statesSql, { ids: '[1]' }], ['what was said of findings', actsSql, { ids: '[1]' }]])('%s of a page are looked up by the keys that were found, in their order', (_name, sql, values) => {
+    const lines = plan(sql, values)
+    expect(lines[0]).toMatch(/^SCAN [ki] VIRTUAL TABLE/)
+    expect(lines.slice(1).filter(line => /^(SCAN|USE TEMP)/.test(line))).toEqual([])
+    expect(lines.length).toBeGreaterThan(1)
   })
 
   it.each(['axis', 'machine', 'line', 'sites'] as const)('the axes of %s are looked up', (by) => {

@@ -18,11 +18,11 @@ export interface Plan { readonly name: string, readonly plan: readonly string[],
 
 const nothing: Asked = { names: null, section: null, row: null, weight: null, axisIds: null, unitId: null, siteId: null, sites: null, people: null, nobody: false }
 const ways: readonly Exclude<Way, { by: 'axes' }>[] = [
-  { by: 'field', section: 'setup', field: 'thrustLimit' }, { by: 'weight', weight: 'harm' }, { by: 'axis', id: 1 }, { by: 'unit', id: 1 }, { by: 'storer', id: 1 }, { by: 'changer', text: 'person:1' }, { by: 'nobody' }, { by: 'all' },
+  { by: 'field', section: 'setup', field: 'thrustLimit' }, { by: 'weight', weight: 'harm' }, { by: 'unit', id: 1 }, { by: 'storer', id: 1 }, { by: 'changer', text: 'person:1' }, { by: 'nobody' }, { by: 'all' },
 ]
 
 /** Keys that were read before, lists that were handed in, and the key itself, newest first, for what has no condition. */
-const mayWalk = /^SCAN (w|[aik] VIRTUAL TABLE.*|json_each VIRTUAL TABLE.*|log|change)$/
+const mayWalk = /^SCAN (w|[aikn] VIRTUAL TABLE.*|json_each VIRTUAL TABLE.*|log|change)$/
 
 interface Prepared { readonly getQuery: () => { sql: string, params: unknown[] } }
 

@@ -74,7 +74,7 @@ const valueOf = (text: string | null) => (text === null ? null : JSON.parse(text
 /** The changes of these keys, in their order; one that is in an index and not in its table is missing. */
 export function readItems(sqlite: Database.Database, keys: readonly ChangeKey[]): ItemRow[] {
   const rows = all(sqlite, itemsSql, { keys: JSON.stringify(keys.map(({ versionId, seq }) => [versionId, seq])) }) as StoredItem[]
-  return rows.map(row => ({ ...row, before: valueOf(row.before), after: valueOf(row.after), late: row.late === 1 }))
+  return rows.map(row => Object.assign(row, { before: valueOf(row.before), after: valueOf(row.after), late: row.late === 1 }))
 }
 
 /** What was said and decided about a finding. */

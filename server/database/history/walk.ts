@@ -16,7 +16,7 @@ export interface NamedField { readonly section: string, readonly field: string }
 export type Way
   = | ({ readonly by: 'field' } & NamedField)
     | { readonly by: 'weight', readonly weight: Weight }
-    | { readonly by: 'axis' | 'unit' | 'storer', readonly id: number }
+    | { readonly by: 'unit' | 'storer', readonly id: number }
     | { readonly by: 'axes', readonly ids: readonly number[] }
     | { readonly by: 'changer', readonly text: string }
     | { readonly by: 'nobody' }
@@ -80,16 +80,20 @@ const ways: Readonly<Record<IndexWay, string>> = {
   field: alongChange('section = :waySection AND field = :wayField AND'),
   weight: alongChange('weight = :wayWeight AND'),
   all: alongChange(''),
-  axis: alongVersion('v.axis_id = :wayId'),
   unit: alongVersion('v.unit_id = :wayId'),
   storer: alongVersion('v.stored_by = :wayId'),
   changer: alongVersion('v.changed_by = :wayText'),
   nobody: alongVersion('v.changed_by IS NULL'),
 }
 
+/** What a way answers to by itself: it is only walked where that is asked for. */
+const implied: Readonly<Record<IndexWay, Partial<Asked>>> = {
+  field: { names: null }, weight: { weight: null }, unit: { unitId: null }, storer: { people: null }, changer: { people: null }, nobody: { nobody: false }, all: {},
+}
+
 /** The statement of a walk along `way`, with what is asked beside it. */
 export function walkSql(way: IndexWay, asked: Asked): string {
-  const conditions = conditionsOf(asked)
+  const conditions = conditionsOf({ ...asked, ...implied[way] })
   const hit = conditions.length === 0 ? '1' : conditions.map(({ sql }) => `ifnull(${sql}, 0)`).join(' AND ')
   return `SELECT w.version_id AS versionId, w.seq AS seq, ${hit} AS hit FROM (${ways[way]}) w ${joinsFor(conditions)}`
 }
@@ -97,10 +101,17 @@ export function walkSql(way: IndexWay, asked: Asked): string {
 const joinsFor = (conditions: readonly Condition[], ...but: Table[]) =>
   (Object.keys(joins) as Table[]).filter(table => !but.includes(table) && conditions.some(({ needs }) => needs.includes(table))).map(table => joins[table]).join(' ')
 
+/** More fields than this are sought faster by reading all changes of a version than by looking each up. */
+const mostSought = 3
+
 /** What is asked for among the changes of some versions, whose axes were asked for already. */
 export function hitsSql(asked: Asked): string {
-  const conditions = conditionsOf({ ...asked, axisIds: null })
-  return `SELECT c.version_id AS versionId, c.seq AS seq FROM json_each(:versionIds) i CROSS JOIN change c ON c.version_id = i.value ${joinsFor(conditions, 'change').replaceAll('w.version_id', 'c.version_id')}
+  const sought = asked.names !== null && asked.names.length <= mostSought
+  const conditions = conditionsOf({ ...asked, axisIds: null, ...(sought ? { names: null } : {}) })
+  const changes = sought
+    ? `CROSS JOIN json_each(:fields) n CROSS JOIN change c INDEXED BY change_field ON c.section = n.value ->> 0 AND c.field = n.value ->> 1 AND c.version_id = i.value`
+    : 'CROSS JOIN change c ON c.version_id = i.value'
+  return `SELECT c.version_id AS versionId, c.seq AS seq FROM json_each(:versionIds) i ${changes} ${joinsFor(conditions, 'change').replaceAll('w.version_id', 'c.version_id')}
     WHERE ${['1', ...conditions.map(({ sql }) => sql)].join(' AND ')}`
 }
 
@@ -110,7 +121,7 @@ export function walkValues(way: Way, asked: Asked): Record<string, string | numb
   return {
     waySection: way.by === 'field' ? way.section : null, wayField: way.by === 'field' ? way.field : null,
     wayWeight: way.by === 'weight' ? way.weight : null, wayId: 'id' in way ? way.id : null, wayText: way.by === 'changer' ? way.text : null,
-    names: list(asked.names?.map(({ section, field }) => `${section}.${field}`)), section: asked.section, row: asked.row, weight: asked.weight,
+    names: list(asked.names?.map(({ section, field }) => `${section}.${field}`)), fields: list(asked.names?.map(({ section, field }) => [section, field])), section: asked.section, row: asked.row, weight: asked.weight,
     axisIds: list(asked.axisIds), unitId: asked.unitId, siteId: asked.siteId, sites: list(asked.sites),
     peopleIds: list(asked.people?.ids), peopleTexts: list(asked.people?.texts),
   }

@@ -74,8 +74,6 @@ function peopleAsked(db: VaultDb, by: string): NonNullable<Asked['people']> {
 /** Along the axes of the place, and along what else is asked for; the first alone where nothing else is. */
 function plansFor(asked: Asked): Plan[] {
   const { axisIds, unitId } = asked
-  const [axisId] = axisIds ?? []
-  if (axisIds?.length === 1 && axisId !== undefined) return [[{ by: 'axis', id: axisId }]]
   if (unitId !== null) return [[{ by: 'unit', id: unitId }]]
   const along = planFor(asked)
   if (axisIds === null) return [along ?? [{ by: 'all' }]]

@@ -47,11 +47,17 @@ function itemsOf({ sqlite, db }: Pick<Vault, 'sqlite' | 'db'>, keys: readonly Ch
   if (rows.length !== keys.length) throw new TypeError('a change is in an index and not in its table')
   const named = namesOf(db)
   const words = findingWords(sqlite, rows, named)
-  return rows.map(({ findingId, receivedAt, storer, token, voidAt, changedBy, allowedBy, ...row }) => {
-    const said = words.get(findingId ?? 0) ?? noFinding
+  return rows.map((row) => {
+    const said = words.get(row.findingId ?? 0) ?? noFinding
     return {
-      ...row, at: receivedAt, changedBy: named(changedBy), storedBy: token === null ? storer : `${token} (${storer})`,
-      allowedBy: named(allowedBy) ?? said.allowedBy, findingId, void: voidAt !== null, findingState: said.state, explanation: said.explanation, explainedBy: said.explainedBy,
+      versionId: row.versionId, axisId: row.axisId, tag: row.tag, section: row.section, row: row.row, field: row.field,
+      before: row.before, after: row.after, unit: row.unit, delta: row.delta, points: row.points, weight: row.weight,
+      at: row.receivedAt, capturedAt: row.capturedAt,
+      changedBy: named(row.changedBy), storedBy: row.token === null ? row.storer : `${row.token} (${row.storer})`,
+      reason: row.reason, workOrder: row.workOrder, allowedBy: named(row.allowedBy) ?? said.allowedBy, findingId: row.findingId,
+      number: row.number, baseId: row.baseId, baseNumber: row.baseNumber, baseAt: row.baseAt, seq: row.seq,
+      timeZone: row.timeZone, serial: row.serial, occasion: row.occasion, late: row.late, void: row.voidAt !== null,
+      findingState: said.state, explanation: said.explanation, explainedBy: said.explainedBy,
     }
   })
 }

@@ -126,7 +126,7 @@ function percentile(values: readonly number[], part: number): number {
 
 function plant(): Board {
   const at = '2026-11-30T07:15:00.000Z'
-  return { asOf: at, plant: 'Larkfield Preserves', axes: Array.from({ length: rows }, (_, index) => axisOf(index, at)), attention: [], log: { entries: 1_000_000 } }
+  return { asOf: at, plant: 'Larkfield Preserves', axes: Array.from({ length: rows }, (_, index) => axisOf(index, at)), attention: [], pending: 0, log: { entries: 1_000_000 } }
 }
 
 /** Four sites, 40 lines, 1,250 machines of eight axes, in every state. */

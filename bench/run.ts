@@ -5,6 +5,7 @@ import { measureDiff } from './diff'
 import type { Figure } from './figure'
 import { measureJudge } from './judge'
 import { measureRead } from './read'
+import { measureReadiness } from './readiness'
 import { measureUpload } from './upload'
 
 /*
@@ -13,7 +14,7 @@ import { measureUpload } from './upload'
 
 const { values } = parseArgs({ options: { json: { type: 'string' } } })
 
-const figures: Figure[] = [...await measureDiff(), ...await measureRead(), ...await measureJudge(), ...await measureUpload(), ...await measureBoard()]
+const figures: Figure[] = [...await measureDiff(), ...await measureRead(), ...await measureJudge(), ...await measureUpload(), ...await measureBoard(), ...await measureReadiness()]
 const width = Math.max(...figures.map(figure => figure.name.length))
 for (const figure of figures) {
   console.log(`${figure.name.padEnd(width)}  ${figure.value.toPrecision(3).padStart(8)} ${figure.unit.padEnd(8)} at most ${figure.target}  ${figure.holds ? 'holds' : 'does not hold'}`)

@@ -1,6 +1,7 @@
 export * from './attachment/table'
 export * from './axis/table'
 export * from './axis-state/table'
+export * from './spare-fit/table'
 export * from './change/table'
 export * from './check/table'
 export * from './content/table'

@@ -6,6 +6,7 @@ import type { ServerContext } from '#server/http/context'
 import { openPost } from '#server/mail/open-post'
 import { startLetters } from '#server/services/letters/worker'
 import { startFolders } from '#server/services/line-folder/nightly'
+import { startFits } from '#server/services/readiness/keep-fits'
 import { firstStart } from '#server/services/people/first-start'
 import { makeLogger } from '#server/services/start/logger'
 import { publicOriginOf } from '#server/services/start/public-origin'
@@ -20,11 +21,13 @@ export default defineNitroPlugin((nitroApp) => {
     nitroApp.hooks.hook('request', (event) => { event.context.server = server })
     const letters = startLetters(server)
     const folders = startFolders(server)
+    const fits = startFits(server)
     const endTrail = keepTrail(server.vault, logger)
     nitroApp.hooks.hook('close', async () => {
       endTrail()
       await letters.stop()
       await folders.stop()
+      await fits.stop()
       server.vault.close()
     })
   }

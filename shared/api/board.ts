@@ -22,7 +22,7 @@ export const attentionSchema = z.object({
   items: z.array(z.object({ axisId: idSchema.nullable(), tag: z.string(), versionId: idSchema.nullable(), knownGoodId: idSchema.nullable(), findingId: idSchema.nullable(), text: z.string(), since: instantSchema.nullable() })),
 })
 export type Attention = z.infer<typeof attentionSchema>
-export const boardAnswer = z.object({ asOf: instantSchema, plant: z.string(), axes: z.array(boardAxis), attention: z.array(attentionSchema), log: z.object({ entries: z.int() }) })
+export const boardAnswer = z.object({ asOf: instantSchema, plant: z.string(), axes: z.array(boardAxis), attention: z.array(attentionSchema), pending: z.int().describe('axes of which it is still being worked out whether a spare fits; what was known before stands so long, and nothing known as no spare'), log: z.object({ entries: z.int() }) })
 export type Board = z.infer<typeof boardAnswer>
 
 export const logEntrySchema = z.object({ seq: z.int(), leaf: z.string().describe('the very string that is hashed'), hash: z.string().describe('SHA-256 of 0x00 and the leaf, lower-case hex') })

@@ -16,7 +16,7 @@ const noEvidence: Readonly<Record<string, readonly string[]>> = {
   person: ['password_hash', 'last_sign_in_at'], token: ['secret_hash', 'last_used_at'],
 }
 /** Tables that are no evidence: sessions, throttling, replays, the state that is derived at every act, the bookkeeping of the schema. */
-const noEvidenceTables = new Set(['session', 'throttle', 'idempotency', 'axis_state', 'migration', 'letter', 'finding_state'])
+const noEvidenceTables = new Set(['session', 'throttle', 'idempotency', 'axis_state', 'spare_fit', 'migration', 'letter', 'finding_state'])
 
 export type Random = (below: number) => number
 /** xorshift32: the same seed gives the same changes, so that a failure can be looked at. */

@@ -20,16 +20,19 @@ import { axisState } from './table'
 const current = alias(version, 'current_version')
 const marked = alias(version, 'marked_version')
 const swapOpener = alias(person, 'swap_opener')
+const readFrom = alias(unit, 'read_from')
 const place = sql.placeholder
 
 /** Axes with their place, state, marked and current version, fitted unit and open swap: one row each, every join by a key. */
 const axisRowsOf = (db: VaultDb, ...where: (SQL | undefined)[]) => db.select({
   axis, state: axisState,
-  machine: { id: machine.id, name: machine.name }, line: { id: line.id, name: line.name },
+  machine: { id: machine.id, name: machine.name, rev: machine.rev }, line: { id: line.id, name: line.name },
   site: { id: site.id, name: site.name, timeZone: site.timeZone, knownGoodMonths: site.knownGoodMonths, attachmentWanted: site.attachmentWanted, labelWanted: site.labelWanted, releaseHours: site.releaseHours },
   current: { id: current.id, unitId: current.unitId, contentId: current.contentId, number: current.number, capturedAt: current.capturedAt, receivedAt: current.receivedAt, scribeCode: current.scribeCode, model: current.model, firmware: current.firmware },
   marked: { id: marked.id, number: marked.number, scribeCode: marked.scribeCode },
   mark: { at: knownGood.at, by: person.name },
+  /** The unit that the values were read from which the axis would be restored to. */
+  readFrom: { id: readFrom.id, model: readFrom.model, rev: readFrom.rev },
   unit: { id: unit.id, serial: unit.serial, channel: unit.channel, model: unit.model, firmware: unit.firmware, since: fitting.fromAt },
   swap: { id: swap.id, step: swap.step, openedAt: swap.openedAt, openedBy: swapOpener.name, runningAt: swap.runningAt },
 }).from(axis)
@@ -41,6 +44,7 @@ const axisRowsOf = (db: VaultDb, ...where: (SQL | undefined)[]) => db.select({
   .leftJoin(person, eq(person.id, knownGood.byPerson))
   .leftJoin(fitting, eq(fitting.id, axisState.fittingId))
   .leftJoin(unit, eq(unit.id, fitting.unitId))
+  .leftJoin(readFrom, eq(readFrom.id, sql`coalesce(${marked.unitId}, ${current.unitId})`))
   .leftJoin(swap, and(eq(swap.axisId, axis.id), standsOpen)).leftJoin(swapOpener, eq(swapOpener.id, swap.openedBy))
   .where(and(...where)).orderBy(asc(axis.id))
 

@@ -7,6 +7,7 @@ import { findingsStep } from './0006-findings'
 import { swapsStep } from './0007-swaps'
 import { trailStep } from './0008-trail'
 import { historyStep } from './0009-history'
+import { spareFitStep } from './0010-spare-fit'
 
 export interface Migration { readonly number: number, readonly name: string, readonly sql: string }
 
@@ -20,6 +21,7 @@ const steps: readonly Omit<Migration, 'number'>[] = [
   swapsStep,
   trailStep,
   historyStep,
+  spareFitStep,
 ]
 
 /** In order, numbered without gaps from 1. Text, not files, so that they reach the built server and the tests alike. */

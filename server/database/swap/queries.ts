@@ -8,7 +8,6 @@ import { machine } from '../machine/table'
 import { person } from '../person/table'
 import { prepared, type VaultDb } from '../prepared'
 import { site } from '../site/table'
-import { fitting } from '../fitting/table'
 import { unit } from '../unit/table'
 import { upload } from '../upload/table'
 import { version, versionVoid } from '../version/table'
@@ -47,9 +46,6 @@ export const swapQueries = prepared((db) => {
     asFound: db.select({ id: version.id }).from(version).leftJoin(versionVoid, eq(versionVoid.versionId, version.id))
       .where(and(eq(version.axisId, place('axisId')), eq(version.occasion, 'as-found'), gte(version.receivedAt, place('since')), isNull(versionVoid.versionId)))
       .orderBy(desc(version.id)).limit(1).prepare(),
-    /** Units in stock that the bounds see: on the shelf and fitted nowhere. */
-    spares: db.select({ unit }).from(unit).leftJoin(fitting, and(eq(fitting.unitId, unit.id), isNull(fitting.toAt)))
-      .where(and(eq(unit.state, 'spare'), isNull(fitting.id), sql`(${unit.siteId} IS NULL OR ${unit.siteId} = ${place('siteId')})`)).orderBy(asc(unit.id)).limit(500).prepare(),
     insert: inserter(db, swap),
     insertStep: inserter(db, swapStep),
     insertReadBack: inserter(db, readBack),

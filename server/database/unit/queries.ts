@@ -29,10 +29,13 @@ export const unitRows = prepared((db) => {
   }
 })
 
-export const stockQueries = prepared(db => ({ spares: db.select().from(unit).where(eq(unit.state, 'spare')).prepare() }))
+export const stockQueries = prepared(db => ({
+  spares: db.select({ unit }).from(unit).leftJoin(fitting, and(eq(fitting.unitId, unit.id), isNull(fitting.toAt)))
+    .where(and(eq(unit.state, 'spare'), isNull(fitting.id))).orderBy(asc(unit.id)).prepare(),
+}))
 
-/** The units in stock. */
-export const spareUnits = (db: VaultDb) => stockQueries(db).spares.all()
+/** The units in stock: on a shelf and fitted nowhere. */
+export const spareUnits = (db: VaultDb): UnitRow[] => stockQueries(db).spares.all().map(row => row.unit)
 
 export function insertUnit(db: VaultDb, values: typeof unit.$inferInsert): UnitRow {
   return db.insert(unit).values(values).returning().get()

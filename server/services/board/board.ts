@@ -18,6 +18,7 @@ export function readBoard(vault: Vault, actor: Actor): Board {
   const rows = readAllAxes(vault.db, actor.sites)
   return {
     asOf, plant: plantOf(vault), axes: rows.map(row => boardAxis(row, stock, asOf)), attention: attention(vault.db, actor.sites, rows, asOf),
+    pending: rows.filter(row => !stock.spareFor(row).settled).length,
     log: { entries: (logQueries(vault.db).newest.get()?.seq ?? -1) + 1 },
   }
 }

@@ -52,8 +52,8 @@ export async function largePlant(folder: string, axes: number): Promise<{ vault:
 
 /** Rows that an axis is told from, each with the columns that a copy has of its own. */
 const copied: readonly { readonly table: string, readonly of: string, readonly own: Readonly<Record<string, string>> }[] = [
-  { table: 'axis', of: 'id = :axis', own: { id: ':at', tag: "tag || ':' || CAST(:at AS INTEGER)" } },
-  { table: 'unit', of: 'id IN (SELECT unit_id FROM fitting WHERE axis_id = :axis)', own: { id: ':at', serial: "serial || ':' || CAST(:at AS INTEGER)" } },
+  { table: 'axis', of: 'id = :axis', own: { id: ':at', tag: 'tag || \':\' || CAST(:at AS INTEGER)' } },
+  { table: 'unit', of: 'id IN (SELECT unit_id FROM fitting WHERE axis_id = :axis)', own: { id: ':at', serial: 'serial || \':\' || CAST(:at AS INTEGER)' } },
   { table: 'fitting', of: 'axis_id = :axis', own: { id: ':at', axis_id: ':at', unit_id: ':at' } },
   { table: 'version', of: 'axis_id = :axis', own: { id: ':at', axis_id: ':at', unit_id: ':at' } },
   { table: 'known_good', of: 'axis_id = :axis', own: { id: ':at', axis_id: ':at', version_id: ':at' } },

@@ -1,16 +1,8 @@
 import { moveTime, profile, type Profile } from '#shared/motion/profile'
+import { startOf } from '#shared/motion/start-of'
 import { isUnused } from '#shared/settings/move-fields'
 import type { Nameplate } from '#shared/settings/nameplate'
 import type { Content, Move } from '#shared/settings/types'
-
-/**
- * The move whose end a move sets off from: the one that names it as its follower, else the one before it in the table.
- * Undefined where neither ends at a place of its own.
- */
-export function startOf(move: Move, moves: readonly Move[]): Move | undefined {
-  const places = moves.filter(other => other.kind !== 'relative' && !isUnused(other) && other.move !== move.move)
-  return places.find(other => other.next === move.move) ?? places.filter(other => other.move < move.move).at(-1)
-}
 
 export interface ShownMotion {
   readonly move: Move

@@ -14,6 +14,7 @@ const shared: Record<string, string[]> = {
   'shared/diff': ['shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
   'shared/checks': ['shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
   'shared/swap': ['shared/diff', 'shared/checks', 'shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
+  'shared/pictures': ['shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
   'shared/sheet': ['shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
   'shared/trail': ['shared/diff', 'shared/checks', 'shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],
   'shared/api': ['shared/swap', 'shared/diff', 'shared/checks', 'shared/motion', 'shared/settings', 'shared/units', 'shared/errors'],

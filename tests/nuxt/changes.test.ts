@@ -3,7 +3,7 @@ import { beforeAll, describe, expect, it, vi } from 'vitest'
 import { AxisHead, AxisLifeLine, AxisRail, AxisSignProblem, AxisStands, ChecksList, DiffBody, DiffMovesTable, DiffSummary, SettingsMovesTable, SettingsSetupGroups } from '#components'
 import { ApiProblem } from '~/utils/api-problem'
 import { moveColumns } from '~/utils/move-columns'
-import { railInputOf, railSideOf } from '~/utils/pictures/rail-input'
+import { railInputOf, railSideOf } from '#shared/pictures/rail-input'
 import { tellMoves } from '~/utils/words/moves-told'
 import { after, axis, before, changesAnswer, knownGood, life, nameplate, today } from '../support/axis-answers'
 

@@ -29,6 +29,13 @@ function inFolder<Answer>(work: (folder: string) => Answer): Answer {
 /** The text of a PDF as it stands on the paper, a form feed between pages. */
 export const pdfText = (pdf: Buffer): string => run('pdftotext', ['-layout', '-', '-'], pdf).toString('utf8')
 
+/** Each word of a page with the middle of its width and its lower edge, in points from the upper left corner. */
+export function pdfWords(pdf: Buffer, page: number): { text: string, x: number, y: number }[] {
+  const told = run('pdftotext', ['-bbox', '-f', String(page), '-l', String(page), '-', '-'], pdf).toString('utf8')
+  return [...told.matchAll(/<word xMin="([\d.]+)" yMin="[\d.]+" xMax="([\d.]+)" yMax="([\d.]+)">([^<]*)</g)]
+    .map(([, from, to, y, text = '']) => ({ text, x: (Number(from) + Number(to)) / 2, y: Number(y) }))
+}
+
 /** Width and height of each page in points. */
 export function pageSizes(pdf: Buffer): [number, number][] {
   return inFolder((folder) => {

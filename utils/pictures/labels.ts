@@ -1,4 +1,4 @@
-import { extentOf, type PlacedLabel } from './scale'
+import { extentOf, type PlacedLabel } from '#shared/pictures/scale'
 
 /* Texts of a picture where nothing else stands. */
 

@@ -1,5 +1,5 @@
 import type { LifeEvent } from '#shared/api/versions'
-import { textWidth, type Anchor } from './scale'
+import { textWidth, type Anchor } from '#shared/pictures/scale'
 import { timeTicks, type TimeTick } from './time-scale'
 
 /*

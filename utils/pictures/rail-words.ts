@@ -1,6 +1,6 @@
-import type { RailInput, RailMove, RailSide } from './rail-input'
+import { railUnit, type RailInput, type RailMove, type RailSide } from '#shared/pictures/rail-input'
 import { listWords } from '../words/lists'
-import { figure } from './scale'
+import { figure } from '#shared/pictures/scale'
 
 /** Moves by where they end, for people who read the picture instead of seeing it: "0 and 6 at 5, press 2 from 88 to 104". */
 function placesOf(moves: readonly RailMove[]): string {
@@ -25,8 +25,6 @@ function sideSentence(side: RailSide, unit: string): string {
   const zones = side.zones.length === 0 ? '' : ` Zones ${side.zones.map(zone => `${zone.zone} from ${figure(zone.from)} to ${figure(zone.to)}`).join(', ')}.`
   return `${limitsOf(side)}. ${moves} ${stepsOf(side, unit)}${zones}`.trim()
 }
-
-export const railUnit = (input: RailInput) => input.axisKind === 'rotary' ? 'deg' : 'mm'
 
 /** What the rail shows, in one paragraph; it is the picture's text equivalent. */
 export function railSentence(input: RailInput): string {

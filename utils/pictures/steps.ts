@@ -1,7 +1,7 @@
 import { clearOf, type PlacedText, type Spot } from './labels'
-import { balloonRadius, crowdBox, type CrowdBox } from './balloons'
-import { figure, scaleSteps, scaleTicks, textWidth } from './scale'
-import { stackBalloons } from './stack'
+import { balloonRadius, crowdBox, type CrowdBox } from '#shared/pictures/balloons'
+import { figure, scaleSteps, scaleTicks, textWidth } from '#shared/pictures/scale'
+import { stackBalloons } from '#shared/pictures/stack'
 import { round } from './time-chart'
 import { timeTicks, type TimeTick } from './time-scale'
 

@@ -1,4 +1,4 @@
-import { figure } from './scale'
+import { figure } from '#shared/pictures/scale'
 import { acrossTexts, chartHeight, endTexts, round, timeChart, type ChartTone, type CurveLayout } from './time-chart'
 
 /*

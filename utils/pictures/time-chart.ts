@@ -1,4 +1,4 @@
-import { figure, scaleSteps, scaleTicks, textWidth, type Anchor } from './scale'
+import { figure, scaleSteps, scaleTicks, textWidth, type Anchor } from '#shared/pictures/scale'
 
 /*
  * The ground of a picture over time: frame, values at the left, seconds below, end times dropped under the axis. Its height

@@ -1,4 +1,4 @@
-import { textWidth } from './scale'
+import { textWidth } from '#shared/pictures/scale'
 
 /*
  * A time axis in calendar steps of one zone: minor ticks never closer than 5 px, labels never closer than 46 px. Months

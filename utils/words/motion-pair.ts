@@ -1,7 +1,7 @@
 import { cruiseSeconds } from '../motion'
 import { percentOf, thrustDigits, worstOf, type Shown } from '../motion-runs'
 import type { RunPair } from '../motion-pairs'
-import { figure } from '../pictures/scale'
+import { figure } from '#shared/pictures/scale'
 
 const short = (value: number, digits = 3) => figure(Number(value.toFixed(digits)))
 

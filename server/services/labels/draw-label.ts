@@ -1,6 +1,6 @@
 import type { Label } from '#shared/api/labels'
 import type { LabelSize } from '#server/database/label/table'
-import { millimetres as mm, Paper } from '../paper/paper'
+import { millimetres as mm, Paper, type TextStyle } from '../paper/paper'
 import { drawQr } from '../paper/qr'
 
 /*
@@ -34,7 +34,7 @@ function drawLarge(paper: Paper, label: Label): void {
   const words = { face: 'sans-bold', size: mm(4.4) } as const
   const x = mm(14.5)
   const room = mm(47)
-  const lines = [label.role, `${label.machine}, ${label.line}`].filter(Boolean).flatMap(text => paper.lines(text, room, words)).slice(0, 4)
+  const lines = wordsOf(paper, label, room, words, label.falls ? 3 : 4)
   lines.forEach((line, index) => paper.text(line, x, mm(18.5) + index * mm(5.5), words))
   if (label.falls) {
     const y = mm(20.5) + lines.length * mm(5.5)
@@ -50,22 +50,34 @@ function drawSmall(paper: Paper, label: Label): void {
   drawQr(paper, label.address, mm(1.2), mm(11.2), mm(13), 1)
   drawMark(paper, mm(15.2), mm(11.4), mm(4), mm(12.6))
   const words = { face: 'sans-bold', size: mm(3.4) } as const
-  const lines = [label.role, `${label.machine}, ${label.line}`].filter(Boolean).flatMap(text => paper.lines(text, mm(28.5), words)).slice(0, 3)
+  const lines = wordsOf(paper, label, label.falls ? mm(24.3) : mm(28.5), words, 3)
   lines.forEach((line, index) => paper.text(line, mm(20.6), mm(15) + index * mm(4.1), words))
   if (label.falls) paper.triangle(mm(45.4), mm(20), mm(3.4), mm(3))
 }
 
-/** In 8 mm capitals as long as it fits the width, set smaller in proportion down to 5 mm, parted at its last dot or hyphen below that. */
+/** What it does and where it stands, in so many lines; what it does leaves at least one to the place. */
+function wordsOf(paper: Paper, { role, machine, line }: Label, width: number, style: TextStyle, most: number): string[] {
+  const does = role === '' ? [] : paper.linesOf(role, width, most - 1, style)
+  return [...does, ...paper.linesOf(`${machine}, ${line}`, width, most - does.length, style)]
+}
+
+/** In 8 mm capitals as long as it fits the width, set smaller in proportion down to 5 mm, parted at a dot or hyphen below that. */
 function drawTag(paper: Paper, tag: string, x: number, top: number, width: number): void {
   const size = fitting(paper, tag, width)
   if (size >= least) {
     spaced(paper, tag, x, top + size * capital, size)
     return
   }
-  const cut = Math.max(tag.lastIndexOf('.'), tag.lastIndexOf('-'), tag.lastIndexOf('_'))
-  const parts = cut > 0 ? [tag.slice(0, cut + 1), tag.slice(cut + 1)] : [tag.slice(0, 16), tag.slice(16)]
+  const parts = partedTag(tag)
   const both = Math.min(...parts.map(part => fitting(paper, part, width)), mm(4.2 / capital))
   parts.forEach((part, index) => spaced(paper, part, x, top + (index + 1) * both * capital + index * mm(0.7), both))
+}
+
+/** Where both parts can be written largest; without a dot or hyphen in the middle. */
+function partedTag(tag: string): [string, string] {
+  const cuts = [...tag.matchAll(/[-._]/g)].map(({ index }) => index + 1).filter(cut => cut < tag.length)
+  const cut = cuts.sort((a, b) => Math.max(a, tag.length - a) - Math.max(b, tag.length - b))[0] ?? 16
+  return [tag.slice(0, cut), tag.slice(cut)]
 }
 
 const fitting = (paper: Paper, text: string, width: number) => Math.min(tagSize, width / (paper.widthOf(text, { face: 'mono-bold', size: 1 }) + letterGap * (text.length - 1)))

@@ -11,6 +11,9 @@ export const millimetres = (value: number) => value * 72 / 25.4
 export type PaperSize = 'A4' | 'Letter' | { readonly width: number, readonly height: number }
 export interface TextStyle { readonly face?: Face, readonly size?: number, readonly align?: 'left' | 'right' | 'center', readonly colour?: string }
 
+/** Where a picture stands, and how many points one of its units takes. */
+export interface Picture { readonly x: number, readonly y: number, readonly scale: number }
+
 /** The part of a font of the PDF writer's own library that is used here. */
 interface Glyph { readonly id: number, readonly advanceWidth: number, readonly codePoints: readonly number[] }
 interface Font {
@@ -22,7 +25,7 @@ interface Font {
 interface Piece { readonly text: string, readonly name: string, readonly width: number }
 
 /** Signs that the fonts lack, by those that say the same. */
-const instead: Readonly<Record<string, string>> = { '→': '›', '←': '‹', '\u00a0': ' ', '\u202f': ' ', '\t': ' ' }
+const instead: Readonly<Record<string, string>> = { '→': '›', '←': '‹', '≥': '>=', '≤': '<=', '≈': '~', '∆': 'Δ', '⌀': 'Ø', '∅': 'Ø', '\u00a0': ' ', '\u202f': ' ', '\t': ' ' }
 
 const pointsOf = (size: PaperSize): readonly [number, number] => size === 'A4' ? [595.28, 841.89] : size === 'Letter' ? [612, 792] : [size.width, size.height]
 
@@ -79,7 +82,7 @@ export class Paper {
     return at
   }
 
-  /** The text cut into lines that fit the width, at spaces; a word that is longer by itself is cut within. */
+  /** The text cut into lines that fit the width, at spaces; a word that is longer by itself is cut at its hyphens, else within. */
   lines(text: string, width: number, style: TextStyle = {}): string[] {
     const lines: string[] = []
     let line = ''
@@ -98,16 +101,17 @@ export class Paper {
 
   private cutWord(word: string, width: number, style: TextStyle): string[] {
     if (this.widthOf(word, style) <= width) return [word]
-    const parts: string[] = []
-    let part = ''
-    for (const sign of word) {
-      if (part !== '' && this.widthOf(part + sign, style) > width) {
-        parts.push(part)
-        part = ''
-      }
-      part += sign
-    }
-    return [...parts, part]
+    const parts = word.split(/(?<=[-/_])/)
+    return packed(parts.length > 1 ? parts.flatMap(part => this.cutWord(part, width, style)) : [...word], part => this.widthOf(part, style) <= width)
+  }
+
+  /** At most so many lines; the last of those that are left ends in three dots where there were more. */
+  linesOf(text: string, width: number, most: number, style: TextStyle = {}): string[] {
+    const all = this.lines(text, width, style)
+    if (all.length <= most) return all
+    const cut = [...all[most - 1] ?? '']
+    while (cut.length > 0 && this.widthOf(`${cut.join('')}…`, style) > width) cut.pop()
+    return [...all.slice(0, most - 1), `${cut.join('').trimEnd()}…`]
   }
 
   line(x1: number, y1: number, x2: number, y2: number, { weight = 0.4, colour = '#000', dash = 0 }: { readonly weight?: number, readonly colour?: string, readonly dash?: number } = {}): void {
@@ -134,6 +138,29 @@ export class Paper {
     this.document.moveTo(x + width / 2, y).lineTo(x + width, y + height).lineTo(x, y + height).fill('#000')
   }
 
+  /** A path in the commands of SVG, in units of a picture whose corner stands at (x, y); filled where no weight is given. */
+  path(d: string, { x, y, scale, weight, dash = 0 }: Picture & { readonly weight?: number, readonly dash?: number }): void {
+    if (d === '') return
+    this.document.save().translate(x, y).scale(scale)
+    this.document.path(d)
+    if (weight === undefined) this.document.fill('#000')
+    else this.stroke(weight / scale, '#000', dash / scale, () => undefined)
+    this.document.restore()
+  }
+
+  /** A ring, white within. */
+  ring(x: number, y: number, radius: number, weight: number): void {
+    this.document.circle(x, y, radius).lineWidth(weight).undash().fillAndStroke('#fff', '#000')
+  }
+
+  /** Slanting lines within a rectangle. */
+  hatch(x: number, y: number, width: number, height: number, apart: number): void {
+    this.document.save()
+    this.document.rect(x, y, width, height).clip()
+    for (let from = x - height; from < x + width; from += apart) this.line(from, y + height, from + height, y, { weight: 0.4 })
+    this.document.restore()
+  }
+
   /** What was written out since the last time; the next `taken` or `bytes` goes on behind it. */
   taken(): Buffer {
     return Buffer.concat(this.chunks.splice(0))
@@ -151,8 +178,7 @@ export class Paper {
   /** Cuts a text where the font changes; widths are in units of the size. */
   private pieces(text: string, face: Face): Piece[] {
     const pieces: { text: string, name: string, width: number }[] = []
-    for (const sign of text) {
-      const shown = instead[sign] ?? sign
+    for (const shown of Array.from(text, sign => instead[sign] ?? sign).join('')) {
       const found = this.fontOf(shown, face)
       for (const [each, name] of found === undefined ? [...codePoint(shown)].map(one => [one, this.nameOf(face, 'latin')] as const) : [[shown, found] as const]) {
         const last = pieces.at(-1)
@@ -195,6 +221,17 @@ export class Paper {
     }
     return name
   }
+}
+
+/** Parts put together again as far as they fit. */
+function packed(parts: readonly string[], fits: (part: string) => boolean): string[] {
+  const whole: string[] = []
+  for (const part of parts) {
+    const last = whole.at(-1)
+    if (last !== undefined && fits(last + part)) whole[whole.length - 1] = last + part
+    else whole.push(part)
+  }
+  return whole
 }
 
 const codePoint = (sign: string) => `U+${(sign.codePointAt(0) ?? 0).toString(16).toUpperCase().padStart(4, '0')}`

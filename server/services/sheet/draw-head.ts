@@ -15,8 +15,7 @@ export function drawFirstHead(page: SheetPage, words: SheetWords): void {
   paper.text(`Witnessmark${words.plant === '' ? '' : `, ${words.plant}`}`, left + mm(6), page.y + mm(4.2))
   paper.text('Restore sheet', inner, page.y + mm(4.2), { face: 'sans-bold', size: 10, align: 'right' })
   drawQr(paper, words.address, page.right - qrSide, page.y + mm(4), qrSide)
-  const beside = { size: Math.min(7, 7 * qrSide / paper.widthOf(words.leadsTo, { size: 7 })) }
-  paper.text(words.leadsTo, page.right - qrSide / 2, page.y + mm(37.5), { ...beside, align: 'center' })
+  paper.text(words.leadsTo, page.right - qrSide / 2, page.y + mm(37.5), { size: 7, align: 'center' })
   const size = Math.min(tagSize, tagSize * (inner - left) / paper.widthOf(words.tag, { face: 'mono-bold', size: tagSize }))
   paper.text(words.tag, left, page.y + mm(18), { face: 'mono-bold', size })
   paper.lines(words.place, inner - left).slice(0, 2).forEach((line, index) => paper.text(line, left, page.y + mm(22.5) + index * mm(3.8)))

@@ -2,6 +2,7 @@ import { setImmediate } from 'node:timers/promises'
 import { millimetres as mm, Paper, type PaperSize } from '../paper/paper'
 import { drawFirstHead, drawNextHead } from './draw-head'
 import { drawMoves } from './draw-moves'
+import { drawRail } from './draw-rail'
 import { drawTaught, drawValues } from './draw-values'
 import { box, SheetPage } from './sheet-page'
 import type { SheetWords } from './sheet-words'
@@ -19,6 +20,7 @@ export async function drawSheet(words: SheetWords, size: PaperSize, at: string):
   // Other requests get their turn between the parts of a long sheet.
   await setImmediate()
   page.title(`3 Write the moves: ${words.moves.rows.length === 1 ? '1 row' : `${words.moves.rows.length} rows`}, none else`)
+  if (words.rail) drawRail(page, words.rail)
   drawMoves(page, words.moves)
   await setImmediate()
   page.steps(['4 Restart', `5 Home at creep speed${words.creep}`, `6 Prove: zero at the scribed mark${words.prove.length === 0 ? '' : `; ${words.prove.join(', ')}`}`, '7 Teach'])
@@ -45,8 +47,8 @@ function drawMotion(page: SheetPage, { motion }: SheetWords): void {
   page.need(mm(40))
   page.title(`9 ${motion.title}`)
   const { paper, left, right } = page
-  const ends = left + page.width * 0.55
-  const takes = left + page.width * 0.64
+  const ends = left + page.width * 0.52
+  const takes = left + page.width * 0.655
   const ticks = left + page.width * 0.7
   const fault = left + page.width * 0.75
   const head = () => {

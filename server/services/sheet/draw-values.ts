@@ -4,13 +4,14 @@ import { box, type SheetPage } from './sheet-page'
 
 const rowHeight = mm(5.3)
 const gutter = mm(7)
+const lineHeight = mm(3.3)
 const number = { face: 'mono', size: 8 } as const
 const label = { size: 8.2 } as const
 
 /** Signs of a coded word that stands in its line; a longer text goes below it. */
 const longestWord = 16
 
-type Item = { readonly group: string } | { readonly value: SheetValue, readonly lines: readonly string[] }
+type Item = { readonly group: string } | { readonly value: SheetValue, readonly names: readonly string[], readonly lines: readonly string[] }
 
 /** Where things stand within a column, from its left edge. */
 interface Columns { readonly width: number, readonly label: number, readonly point: number, readonly unit: number, readonly box: number }
@@ -64,15 +65,16 @@ function itemsOf(paper: Paper, values: readonly SheetValue[], columns: Columns):
   let group = ''
   return values.flatMap((value): Item[] => {
     const beside = [value.unit, value.beside].filter(Boolean).join('  ')
-    const item = { value, lines: paper.lines(beside, columns.box - columns.unit - mm(1), { size: 7.2 }) }
+    const item = { value, names: paper.lines(value.label, columns.point - columns.label - mm(9), label), lines: paper.lines(beside, columns.box - columns.unit - mm(1), { size: 7.2 }) }
     if (value.group === group) return [item]
     group = value.group
     return [{ group }, item]
   })
 }
 
-/** Rows that an item takes: a long word beside goes on below. */
-const heightOf = (item: Item) => ('group' in item ? 1 : Math.max(1, Math.ceil(item.lines.length / 1.5), longValue(item.value)))
+/** Rows that an item takes: a long name, and a long word beside, go on below. */
+const heightOf = (item: Item) => ('group' in item ? 1 : Math.max(rowsOf(item.names.length), rowsOf(item.lines.length), longValue(item.value)))
+const rowsOf = (lines: number) => Math.max(1, Math.ceil((lines * lineHeight + mm(1.2)) / rowHeight))
 const longValue = ({ value }: SheetValue) => (isNumber(value) || value.length <= longestWord ? 1 : Math.ceil(value.length / 34) + 1)
 const linesOf = (items: readonly Item[]) => items.reduce((sum, item) => sum + heightOf(item), 0)
 
@@ -110,14 +112,16 @@ function drawColumn({ paper, left }: SheetPage, items: readonly Item[], columns:
   return y
 }
 
-function drawValue(paper: Paper, { value, lines }: Extract<Item, { value: SheetValue }>, columns: Columns, x: number, y: number): void {
+function drawValue(paper: Paper, { value, names, lines }: Extract<Item, { value: SheetValue }>, columns: Columns, x: number, y: number): void {
   const base = y + mm(3.8)
   paper.text(value.number, x, base, number)
-  paper.text(fitted(paper, value.label, columns.point - columns.label - mm(9)), x + columns.label, base, label)
+  names.forEach((line, index) => paper.text(line, x + columns.label, base + index * lineHeight, label))
+  let unit = x + columns.unit
   if (isNumber(value.value)) {
     const whole = wholeOf(value.value)
     paper.text(whole, x + columns.point, base, { ...number, align: 'right' })
-    paper.text(value.value.slice(whole.length), x + columns.point, base, number)
+    // Where a number has more places than there is room for, its unit stands behind it.
+    unit = Math.max(unit, paper.text(value.value.slice(whole.length), x + columns.point, base, number) + mm(1))
   }
   else if (longValue(value) === 1) {
     paper.text(value.value, x + columns.unit - mm(1.2), base, { ...number, align: 'right' })
@@ -125,16 +129,8 @@ function drawValue(paper: Paper, { value, lines }: Extract<Item, { value: SheetV
   else {
     paper.lines(value.value, columns.box - columns.label, number).forEach((line, index) => paper.text(line, x + columns.label, base + rowHeight * 0.9 + index * mm(3.4), number))
   }
-  lines.forEach((line, index) => paper.text(line, x + columns.unit, base + index * mm(3.3), { size: 7.2 }))
+  lines.forEach((line, index) => paper.text(line, unit, base + index * lineHeight, { size: 7.2 }))
   paper.frame(x + columns.box, base - box + mm(0.5), box, box)
-}
-
-/** A label that is too long for its place ends in three dots: its number and the drive's list tell the rest. */
-function fitted(paper: Paper, text: string, width: number): string {
-  if (paper.widthOf(text, label) <= width) return text
-  let cut = text
-  while (cut.length > 1 && paper.widthOf(`${cut}…`, label) > width) cut = cut.slice(0, -1)
-  return `${cut}…`
 }
 
 /** Dashed and empty, never a zero: to be filled in by hand once they are taught. */

@@ -3,6 +3,7 @@ import type { papers } from '#shared/api/places'
 import { cautions, cautionSources } from '#shared/settings/cautions'
 import { hashesOf } from '#shared/settings/hash'
 import type { Nameplate } from '#shared/settings/nameplate'
+import { railInputOf, railSideOf, railUnit, type RailInput } from '#shared/pictures/rail-input'
 import type { Content } from '#shared/settings/types'
 import { labelOf } from '#shared/sheet/labels'
 import { sheetMoves } from '#shared/sheet/moves'
@@ -50,8 +51,8 @@ export const axisAddress = (origin: string, tag: string): string => (origin === 
 /** Where the QR code of a sheet leads, and in words: to the swap that it is made for, else to the axis. */
 function leadsTo({ place: { axis }, swap }: KitParts, { origin }: SheetOptions): Pick<SheetWords, 'address' | 'leadsTo'> {
   return swap === null || origin === ''
-    ? { address: axisAddress(origin, axis.tag), leadsTo: `axis ${axis.tag}` }
-    : { address: `${origin}/swaps/${swap.id}`, leadsTo: `swap ${swap.id} of ${axis.tag}` }
+    ? { address: axisAddress(origin, axis.tag), leadsTo: origin === '' ? 'holds the tag' : 'leads to the axis' }
+    : { address: `${origin}/swaps/${swap.id}`, leadsTo: `leads to swap ${swap.id}` }
 }
 
 export function sheetWords(vault: Vault, parts: KitParts, options: SheetOptions): SheetWords {
@@ -67,13 +68,21 @@ export function sheetWords(vault: Vault, parts: KitParts, options: SheetOptions)
     notReleased: mark ? null : `Nobody has said that these values are good: no version of ${axis.tag} is known-good, and v${version.number} is the newest. Have a planner review it first, if that can wait.`,
     warnings: unit ? fitted.warnings : [unknownUnit], cautions, cautionSources,
     tableRows: nameplate?.maxMoves ?? null, order: nameplate?.entryTable ? 'in the order of the drive’s own list' : 'by group',
-    values: sheetValues(source), taught: sheetTaught(source), moves: sheetMoves(source),
+    values: sheetValues(source), taught: sheetTaught(source), moves: sheetMoves(source), rail: railOf(content, nameplate),
     creep: content.setup.homingCreepSpeed === undefined ? '' : `, ${plain(content.setup.homingCreepSpeed)} ${content.axisKind === 'linear' ? 'mm/s' : 'deg/s'}`,
     prove: source.prove.filter(name => name !== 'homeOffset').map(name => labelOf(name).toLowerCase()),
     motion: { title: `First motion at ${firstPercent} % of each move’s speed, nobody in reach`, lines: motionLines(parts, content, nameplate) },
     subject: '', log: `log of ${entries} ${entries === 1 ? 'entry' : 'entries'}`,
     printed: `printed ${formatExact(now, site.timeZone)}`, checkpoint: note.trimEnd().split('\n'),
   }
+}
+
+/** Of the values as they go in: a home offset that is to be taught leaves the hard stops open. */
+function railOf(content: Content, nameplate: Nameplate | undefined): RailInput | null {
+  const { softLimitMin, softLimitMax } = content.setup
+  if (content.moves.length === 0 && content.zones.length === 0 && softLimitMin === undefined && softLimitMax === undefined) return null
+  const upper = railSideOf(content, railUnit(content))
+  return railInputOf({ upper: content }, { upper }, nameplate)
 }
 
 const unknownUnit = 'Nobody has said which unit this is for. It is made as for one of the same model and firmware: on another, teach the tuning too, and have the percentages of force worked out for it.'
@@ -110,7 +119,7 @@ function motionLines({ place: { axis } }: KitParts, content: Content, nameplate:
   return firstMotion({ content, flags: axis.flags, ...(nameplate ? { nameplate } : {}), speedPercent: firstPercent }).map(item => ({
     call: callWords(item), words: item.words,
     ends: item.end === null ? '' : `${plain(item.end)} ${unit}`,
-    takes: item.seconds === null ? '' : `${item.atLeast ? '≥ ' : ''}${item.seconds.toFixed(1)}`,
+    takes: item.seconds === null ? '' : `${item.atLeast ? 'at least ' : ''}${item.seconds.toFixed(1)}`,
   }))
 }
 

@@ -1,3 +1,4 @@
+import type { RailInput } from '#shared/pictures/rail-input'
 import type { SheetMoves, SheetTaught, SheetValue } from '#shared/sheet/types'
 
 /** One line of the first-motion list. */
@@ -29,6 +30,8 @@ export interface SheetWords {
   readonly values: readonly SheetValue[]
   readonly taught: readonly SheetTaught[]
   readonly moves: SheetMoves
+  /** Where the moves end, between what bounds them; null where there is nothing to draw. */
+  readonly rail: RailInput | null
   readonly creep: string
   readonly prove: readonly string[]
   readonly motion: { readonly title: string, readonly lines: readonly MotionLine[] }

@@ -31,13 +31,13 @@ describe('the QR code of a sheet', () => {
     here.unitIn(id)
     const sheet = await kit('pdf')
     expect(qrOf(sheet)).toBe(`${origin}/swaps/${id}`)
-    expect(words(sheet)).toContain(`swap ${id} of LID-02.Z`)
+    expect(words(sheet)).toContain(`leads to swap ${id}`)
     // The new unit counts as fitted by now; the one that came out is the old one all the same.
     expect(words(sheet)).toMatch(/Unit in .*SN-0002.*Unit out .*SN-0001/)
     abandonSwap(here.plant.vault, here.tobias, id, { reason: 'it was the cable', fittedUnitId: here.old })
     const later = await kit('pdf', 'SN-0002')
     expect(qrOf(later)).toBe(`${origin}/axes/LID-02.Z`)
-    expect(words(later)).toContain('axis LID-02.Z')
+    expect(words(later)).toContain('leads to the axis')
   })
 
   it('in the folder of a line leads to the axis, and its sheet stays blank, whatever swap is open that night', async () => {

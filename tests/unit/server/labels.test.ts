@@ -3,7 +3,7 @@ import type { Label } from '../../../shared/api/labels'
 import { drawLabels } from '../../../server/services/labels/draw-label'
 import { readLabels } from '../../../server/services/labels/read-labels'
 import { recordLabel } from '../../../server/services/labels/print-label'
-import { pageSizes, pdfText, qrOf } from '../../support/paper'
+import { pageSizes, pdfText, pdfWords, qrOf } from '../../support/paper'
 import { openPlant } from '../../support/vault-plant'
 
 const label = (tag: string, more: Partial<Label> = {}): Label => ({ axisId: 1, tag, role: 'seat lid', machine: 'LID-02', line: 'Line 1', falls: true, address: `https://marks.example/axes/${tag}`, printed: null, ...more })
@@ -36,6 +36,17 @@ describe('a label', () => {
   it('holds no value', async () => {
     const text = pdfText(await drawLabels([label('LID-02.Z')], '100x50', at)).replaceAll(/\s+/g, ' ').trim()
     expect(text).toBe('LID-02.Z seat lid LID-02, Line 1 load can fall: block it Scan before you take it apart.')
+  })
+
+  it.each(['100x50', '50x25'] as const)('of %s mm lets no line of long names meet another, and says where they were cut', async (size) => {
+    const long = label('SCHLIESSEINHEIT-LINIE-12.ACHSE-Z', { role: 'Schließkraft-Zustellung oben, gefedert, mit Überlastschutz', machine: 'Schließmaschine für Großgläser 12 (Südhalle)', line: 'Glaslinie Süd' })
+    const pdf = await drawLabels([long], size, at)
+    const lines = [...new Set(pdfWords(pdf, 1).map(({ y }) => Math.floor(y)))].toSorted((a, b) => a - b)
+    for (const [index, y] of lines.entries()) if (index > 0) expect(y - (lines[index - 1] ?? 0)).toBeGreaterThan(7)
+    const text = pdfText(pdf)
+    expect(text.match(/…/g)).toHaveLength(2)
+    // Parted where both halves can be written largest.
+    expect(text).toContain('SCHLIESSEINHEIT-\n')
   })
 
   it('is read for an axis or its machine, with the newest print', () => {

@@ -48,13 +48,28 @@ describe('a paper', () => {
     expect(sizes).toEqual([[595, 842], [612, 792], [283, 142]])
   })
 
+  it('cuts long words at their hyphens, and what is left over ends in three dots', () => {
+    const made = paper()
+    const width = made.widthOf('Zustellung')
+    expect(made.lines('Schließ-Zustellung oben', width)).toEqual(['Schließ-', 'Zustellung', 'oben'])
+    expect(made.lines('Zustellungen', width).join('')).toBe('Zustellungen')
+    expect(made.linesOf('oben', width, 1)).toEqual(['oben'])
+    const [first, last = '', ...rest] = made.linesOf('Schließ-Zustellung oben und unten', width, 2)
+    expect([first, rest]).toEqual(['Schließ-', []])
+    expect(last).toMatch(/^Zustell.*…$/)
+    expect(made.widthOf(last)).toBeLessThanOrEqual(width)
+  })
+
   it('writes every sign of the trade, other scripts, and the code point of what no font has', async () => {
     const made = paper()
     const words = 'mm/s² ± −90° 3×5 µm · N·m ’ … – Łódź Ελλάδα Жук Đặng'
     made.text(words, 40, 60)
     made.text(words, 40, 80, { face: 'mono-bold' })
     made.text('bolt 螺 end 3→4', 40, 100)
+    const after = made.text('≥ 3 K, ≤ ⌀ 5', 40, 120)
+    expect(after - 40).toBeCloseTo(made.widthOf('>= 3 K, <= Ø 5'), 6)
     const text = pdfText(await made.bytes())
+    expect(text).toContain('>= 3 K, <= Ø 5')
     expect(text.split('\n').filter(line => line.includes(words))).toHaveLength(2)
     expect(text).toContain('bolt U+87BA end 3›4')
   })

@@ -4,6 +4,8 @@ import { join } from 'node:path'
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import { cautions } from '../../../shared/settings/cautions'
 import { hashesOf } from '../../../shared/settings/hash'
+import { layoutRail } from '../../../shared/pictures/rail'
+import { railInputOf, railSideOf } from '../../../shared/pictures/rail-input'
 import { readSettings } from '../../../shared/settings/read'
 import { formatNumber } from '../../../shared/units/number'
 import type { PersonActor } from '../../../server/database/actor'
@@ -12,9 +14,11 @@ import { kitParts } from '../../../server/services/kit/kit-parts'
 import { makeKit } from '../../../server/services/kit/make-kit'
 import { markKnownGood } from '../../../server/services/known-good/mark'
 import { sha256 } from '../../../server/database/sha256'
+import { millimetres } from '../../../server/services/paper/paper'
+import { railPixels } from '../../../server/services/sheet/draw-rail'
 import { storeUpload } from '../../../server/services/uploads/store-upload'
 import { liftFile, liftPlate } from '../../support/entry-table'
-import { pageSizes, pdfText, qrOf, unzipped } from '../../support/paper'
+import { pageSizes, pdfText, pdfWords, qrOf, unzipped } from '../../support/paper'
 import { day, minute, openPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
@@ -79,6 +83,44 @@ describe('a restore sheet', () => {
     store()
     const text = words(pdfText(await kit('pdf')))
     for (const part of ['0 0 0 0 Top, rest absolute 5 250 2000', '3 0 1 1 Seat press 104.25 180 1500', 'slow, the lid is thin', '5 1 0 1 relative −2 20 200', '3 rows, none else', '3›5 runs by itself, 2 movements', 'First motion at 10 %']) expect(text, part).toContain(part)
+  })
+
+  it('draws the rail of the axis page: each move where its target stands, to scale, with the bounds in words', async () => {
+    plant.nameplate({ model: 'HL40-200V', axisKind: 'linear', stroke: 200 })
+    store({ setup: { softLimitMin: -2.5, softLimitMax: 184.25, homingMethod: 'hard-stop', homingDirection: 'negative', homeOffset: 5 }, zones: [{ zone: 1, from: 0, to: 12 }], moves: [
+      { move: 11, kind: 'absolute', target: 20, speed: 250, acceleration: 2000 }, { move: 12, kind: 'absolute', target: 80, speed: 250, acceleration: 2000 },
+      { move: 13, kind: 'press', target: 150, approach: 120, speed: 180, acceleration: 1500, forceLimit: 32 }, { move: 14, kind: 'relative', target: -2, speed: 20, acceleration: 200 },
+    ] })
+    const pdf = await kit('pdf')
+    const text = words(pdfText(pdf))
+    for (const part of ['Hard stops at −5 and 195 mm. Soft limits min −2.5, max 184.25 mm. Zone 1 from 0 to 12 mm.', 'soft −2.5', 'soft 184.25', 'thick with hatching outside: hard stop; dashed: soft limit; hatched within the rule: zone', 'a press from its approach']) expect(text, part).toContain(part)
+    const found = pdfWords(pdf, 1)
+    const bounds = found.find(({ text: word }) => word === 'Hard')?.y ?? 0
+    const title = found.find(({ text: word, y }) => word === 'Write' && y > bounds - 300 && y < bounds && found.some(other => other.text === 'moves:' && Math.abs(other.y - y) < 1))?.y ?? 0
+    const rings = ['11', '12', '13'].map(move => found.filter(({ text: word, y }) => word === move && y > title && y < bounds).toSorted((a, b) => a.y - b.y)[0]?.x ?? NaN)
+    const [first = NaN, second = NaN, third = NaN] = rings
+    expect((third - first) / (second - first)).toBeCloseTo((150 - 20) / (80 - 20), 1)
+    const rail = kitParts(plant.vault.db, tobias, axisId, undefined, plant.vault.now()).fitted.content
+    const layout = layoutRail(railInputOf({ upper: rail }, { upper: railSideOf(rail, 'mm') }, { model: 'HL40-200V', axisKind: 'linear', stroke: 200 }), railPixels)
+    const scale = (second - first) / ((layout.halves[0]?.balloons[1]?.x ?? 0) - (layout.halves[0]?.balloons[0]?.x ?? 0))
+    expect(scale * railPixels).toBeCloseTo(595.28 - millimetres(26), -1)
+  })
+
+  it('has no rail where there is nothing to draw, and explains only what is drawn', async () => {
+    store({ setup: { thrustLimit: 38 } })
+    expect(words(pdfText(await kit('pdf')))).not.toContain('Hard stops')
+    store({ setup: { softLimitMin: 0 } })
+    expect(words(pdfText(await kit('pdf')))).toContain('Hard stops not known: they take the stroke of the model and homing against a stop. Soft limits min 0 mm. Drawn: dashed: soft limit.')
+  })
+
+  it('cuts no name, puts a unit behind a number of many places, and says at least in words', async () => {
+    const name = 'Überlast-Schwelle der Schließkraft bei Übertemperatur am Motor'
+    store({ setup: { jerk: 60_000, softLimitMin: 0, softLimitMax: 100 }, moves: [5, 62].map((target, move) => ({ move, kind: 'absolute', target, speed: 250, acceleration: 2000 })), extra: { [name]: { value: 393.19000000000005, unit: 'mm/s²' } } })
+    const text = words(pdfText(await kit('pdf')))
+    for (const word of name.split(' ')) expect(text).toContain(word)
+    expect(text).toContain('393.19000000000005 mm/s²')
+    expect(text).toMatch(/at least \d+\.\d/)
+    expect(text).not.toMatch(/U\+[0-9A-F]{4}/)
   })
 
   it('counts its pages and repeats tag, code, log and time on each', async () => {

@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import type { LifeEvent } from '../../../../shared/api/versions'
 import { layoutLife, lifeSentence } from '../../../../utils/pictures/life'
-import { extentOf } from '../../../../utils/pictures/scale'
+import { extentOf } from '../../../../shared/pictures/scale'
 import { timeTicks } from '../../../../utils/pictures/time-scale'
 
 const event = (kind: LifeEvent['kind'], at: string, rest: Partial<LifeEvent> = {}): LifeEvent =>

@@ -1,8 +1,8 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { motionAt, profile } from '../../../../shared/motion/profile'
-import type { Content, Move } from '../../../../shared/settings/types'
-import { cruiseSeconds, motionOf, startOf } from '../../../../utils/motion'
+import type { Content } from '../../../../shared/settings/types'
+import { cruiseSeconds, motionOf } from '../../../../utils/motion'
 import { layoutMotion } from '../../../../utils/pictures/motion'
 import type { CurveLayout } from '../../../../utils/pictures/time-chart'
 import { after, before } from '../../../support/axis-answers'
@@ -23,12 +23,6 @@ describe('motionOf', () => {
     const unused: Content = { ...before, moves: before.moves.map(move => move.move === 1 ? { ...move, speed: 0, acceleration: 0 } : move) }
     expect([motionOf(unused, 1), motionOf(before, 99)]).toEqual([undefined, undefined])
     expect(motionOf({ ...before, moves: before.moves.slice(0, 1) }, 0)).toBeUndefined()
-  })
-  it('sets off from the row that names it rather than from the row above', () => {
-    const move = (number: number, target: number, next?: number): Move => ({ move: number, kind: 'absolute', target, speed: 100, acceleration: 1000, ...(next !== undefined && { next }) })
-    const moves = [move(0, 10, 3), move(1, 20), move(2, 30), move(3, 40)]
-    expect(startOf(move(3, 40), moves)?.move).toBe(0)
-    expect(startOf(move(2, 30), moves)?.move).toBe(1)
   })
 })
 

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { extentOf } from '../../../../utils/pictures/scale'
+import { extentOf } from '../../../../shared/pictures/scale'
 import { layoutSteps, nearLimits, type StepPoint, type StepsInput } from '../../../../utils/pictures/steps'
 
 const day = 86_400_000

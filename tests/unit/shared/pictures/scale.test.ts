@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { extentOf, figure, labelPixels, scaleLabels, scaleSteps, scaleTicks, tickPixels } from '../../../../utils/pictures/scale'
+import { extentOf, figure, labelPixels, scaleLabels, scaleSteps, scaleTicks, tickPixels } from '../../../../shared/pictures/scale'
 
 const kinds = fc.constantFrom('linear' as const, 'rotary' as const)
 

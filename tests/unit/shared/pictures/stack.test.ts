@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { laneIntervals, stackBalloons } from '../../../../utils/pictures/stack'
+import { laneIntervals, stackBalloons } from '../../../../shared/pictures/stack'
 
 const ball = fc.record({ move: fc.integer({ min: 0, max: 1023 }), px: fc.double({ min: 0, max: 1200, noNaN: true }), changed: fc.boolean() })
 const bar = fc.record({ move: fc.integer({ min: 0, max: 1023 }), from: fc.double({ min: 0, max: 900, noNaN: true }), to: fc.double({ min: 0, max: 900, noNaN: true }) })

@@ -1,8 +1,8 @@
-import { isUnused } from '#shared/settings/move-fields'
-import type { Nameplate } from '#shared/settings/nameplate'
-import type { AxisKind, Content, Move, Zone } from '#shared/settings/types'
-import { startOf } from '../motion'
-import { hardStopsOf } from './travel'
+import { endsByHardStop } from '../motion/hard-stops'
+import { startOf } from '../motion/start-of'
+import { isUnused } from '../settings/move-fields'
+import type { Nameplate } from '../settings/nameplate'
+import type { AxisKind, Content, Move, Zone } from '../settings/types'
 
 /** What one side of the rail shows: the rows that end at a place, and what bounds them. */
 export interface RailSide {
@@ -71,11 +71,20 @@ const placesOf = (side: RailSide) => [
   ...side.zones.flatMap(zone => [zone.from, zone.to]),
 ]
 
+/** mm or deg, as places on the rule are given. */
+export const railUnit = ({ axisKind }: Pick<RailInput, 'axisKind'>): 'mm' | 'deg' => axisKind === 'rotary' ? 'deg' : 'mm'
+
+/** Where the hard stops lie; undefined unless the axis homes against one of them and the stroke of its model is known. */
+function stopsOf({ setup }: Content, nameplate: Nameplate | undefined): RailInput['stops'] {
+  const ends = setup.homingMethod === 'hard-stop' ? endsByHardStop(setup, nameplate) : undefined
+  return ends && { low: ends.hardLow, high: ends.hardHigh }
+}
+
 /** The rule reaches over everything that stands on it, and over the travel of the unit where that is known. */
 export function railInputOf(contents: { readonly upper: Content, readonly lower?: Content }, sides: { readonly upper: RailSide, readonly lower?: RailSide }, nameplate?: Nameplate): RailInput {
   const today = contents.lower ?? contents.upper
   const places = [...placesOf(sides.upper), ...(sides.lower ? placesOf(sides.lower) : [])]
-  const stops = hardStopsOf(today, nameplate)
+  const stops = stopsOf(today, nameplate)
   const modulo = today.axisKind === 'rotary' ? today.setup.modulo : undefined
   const travel = stops ? [stops.low, stops.high] : modulo !== undefined ? [0, modulo] : places.length === 0 ? [0, nameplate?.stroke ?? 100] : []
   const low = Math.min(...travel, ...places)

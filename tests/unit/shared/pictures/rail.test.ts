@@ -1,10 +1,10 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import type { Content, Move } from '../../../../shared/settings/types'
-import { layoutRail, type RailText } from '../../../../utils/pictures/rail'
-import { railInputOf, railSideOf } from '../../../../utils/pictures/rail-input'
-import { railSentence } from '../../../../utils/pictures/rail-words'
-import { extentOf } from '../../../../utils/pictures/scale'
+import { layoutRail } from '../../../../shared/pictures/rail'
+import type { RailText } from '../../../../shared/pictures/rail-half'
+import { railInputOf, railSideOf } from '../../../../shared/pictures/rail-input'
+import { extentOf } from '../../../../shared/pictures/scale'
 
 const absolute = (move: number, target: number, rest: Partial<Move> = {}): Move => ({ move, kind: 'absolute', target, speed: 200, acceleration: 2000, ...rest })
 const press = (move: number, approach: number, target: number): Move => ({ move, kind: 'press', approach, target, speed: 100, acceleration: 1000, forceLimit: 30 })
@@ -100,16 +100,12 @@ describe('layoutRail', () => {
     const changed = new Set([1])
     const input = railInputOf({ upper: before, lower: after }, { upper: railSideOf(before, 'v14', changed), lower: railSideOf(after, 'v15', changed) }, plate)
     const [upper, lower] = layoutRail(input, 1376).halves
+    const { height, rule } = layoutRail(input, 1376)
+    // The lower side has its room below the rule, balloons and all.
+    expect(height).toBeGreaterThan(Math.max(...(lower?.balloons.map(balloon => balloon.y) ?? [])) + 10)
+    expect(rule.match(/M/g)).toHaveLength(2)
     expect(upper?.balloons.find(balloon => balloon.move === 1)).toMatchObject({ tone: 'before', filled: false })
     expect(lower?.balloons.find(balloon => balloon.move === 1)).toMatchObject({ tone: 'after', filled: true })
     expect(Math.max(...(upper?.balloons.map(balloon => balloon.y) ?? []))).toBeLessThan(Math.min(...(lower?.balloons.map(balloon => balloon.y) ?? [])))
-  })
-})
-
-describe('railSentence', () => {
-  it('says with numbers what the picture shows', () => {
-    expect(railSentence(inputOf(lid(usual), plate))).toBe(
-      'Rail between hard stops at 0 and 200 mm, soft limits 2 and 185. Moves: 0 at 5, 5 at 62, 1 at 70, 4 at 96.5, press 2 from 88 to 104, press 3 from 98 to 104. Move 8 steps by −2 mm. Zones 0 from 0 to 12.',
-    )
   })
 })

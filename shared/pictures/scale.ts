@@ -1,4 +1,5 @@
-import type { AxisKind } from '#shared/settings/types'
+import type { AxisKind } from '../settings/types'
+import { fromMillionths } from '../units/number'
 
 /*
  * Steps of a drawn scale, chosen from the pixels that one unit takes: ticks never closer than 5 px, labels never closer
@@ -24,10 +25,14 @@ function seriesOf(axisKind: AxisKind): number[] {
     : [...decades(powers(-6, -1)), ...angleSteps, ...decades(powers(0, 6)).map(turns => turns * 720)]
 }
 
-const isMultiple = (of: number, step: number) => Math.abs(of / step - Math.round(of / step)) < 1e-9
+const nearest = (value: number) => Math.floor(value + 0.5)
+/** A place on a picture: to a tenth of a pixel, halves up. */
+export const tenth = (value: number): number => nearest(value * 10) / 10
+
+const isMultiple = (of: number, step: number) => Math.abs(of / step - nearest(of / step)) < 1e-9
 
 /** A whole multiple of a step without the noise of binary fractions; six decimals are all that a value can have. */
-const multiple = (count: number, step: number) => Number((count * step).toFixed(6))
+const multiple = (count: number, step: number) => fromMillionths(nearest(count * step * 1e6))
 
 export function scaleSteps(pixelsPerUnit: number, axisKind: AxisKind, widestLabel: number = labelPixels): ScaleSteps {
   const series = seriesOf(axisKind)

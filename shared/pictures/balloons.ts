@@ -1,4 +1,4 @@
-import { textWidth } from './scale'
+import { tenth, textWidth } from './scale'
 import type { Crowd } from './stack'
 
 export const balloonRadius = 11.5
@@ -10,5 +10,5 @@ export interface CrowdBox { readonly x: number, readonly y: number, readonly wid
 export function crowdBox({ px, moves }: Crowd, y: number, left: number, right: number, radius = balloonRadius): CrowdBox {
   const text = `+${moves.length}`
   const width = textWidth(text) + 10
-  return { x: Number(Math.min(Math.max(px - width / 2, left), right - width).toFixed(1)), y: y - radius + 1, width: Number(width.toFixed(1)), height: 2 * radius - 2, text, moves }
+  return { x: tenth(Math.min(Math.max(px - width / 2, left), right - width)), y: y - radius + 1, width: tenth(width), height: 2 * radius - 2, text, moves }
 }

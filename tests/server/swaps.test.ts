@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { Swap } from '../../shared/api/swaps'
+import { kitForms } from '../../shared/api/versions'
 import { admin, startServer, type TestServer } from '../support/server'
 import { plantOn, type ServerPlant } from '../support/server-plant'
 import { moves, plates, setup } from '../support/swap-plant'
@@ -57,7 +58,8 @@ describe('a swap through the routes', () => {
     expect(await step(id, 'unit-in', { serial: 'SN-0001' })).toMatchObject({ status: 409, json: { code: 'same-unit' } })
     expect(await step(id, 'unit-in', { serial: 'SN-0009' })).toMatchObject({ status: 422, json: { errors: [{ at: '/model', code: 'serial-unknown' }] } })
     expect(await step(id, 'unit-in', { serial: 'SN-0002' })).toMatchObject({ status: 200, json: { fit: 'same', step: 'safe', unitIn: { state: 'fitted' } } })
-    expect(await kit({ cautionsRead: false })).toMatchObject({ status: 409, json: { code: 'cautions-unread' } })
+    // Every form is a way out of its own.
+    for (const form of kitForms) expect(await kit({ form, cautionsRead: false }), form).toMatchObject({ status: 409, json: { code: 'cautions-unread', detail: 'Read the cautions, then take the kit: these values move a machine.' } })
     expect((await kit({})).json).toMatchObject({ unit: { serial: 'SN-0002' }, setup: { thrustLimit: 60 } })
   })
 
@@ -125,5 +127,54 @@ describe('ways out through the routes', () => {
     expect(await step(id, 'put-back', { reason: 'again' })).toMatchObject({ status: 409, json: { code: 'already-back' } })
     expect(await step(id, 'abandon', { reason: 'nothing to swap', fittedUnitId: unitOut?.id })).toMatchObject({ status: 200, json: { step: 'abandoned' } })
     expect(await server.call('GET', '/api/swaps?open=true', { as: plant.as.technician })).toMatchObject({ status: 200, json: { items: [] } })
+  })
+})
+
+describe('what a tired technician might send', () => {
+  const told = (reply: { json: unknown }) => (reply.json as { detail: string }).detail
+  const results = ['jog', 'enable-loss', 'emergency-stop', 'move-0', 'chain-1'].map(item => ({ item, outcome: 'ok' }))
+  let id: number
+
+  it('a spare that sits at another axis, one of another model than is registered, a unit of another kind of axis', async () => {
+    await plant.axis('LID-03.Z', 'SN-0003')
+    id = swapOf(await open()).id
+    const elsewhere = await step(id, 'unit-in', { serial: 'SN-0003' })
+    expect(elsewhere).toMatchObject({ status: 409, json: { code: 'fitted' } })
+    expect(told(elsewhere)).toContain('SN-0003 sits at LID-03.Z')
+    const other = await step(id, 'unit-in', { serial: 'SN-0050', model: 'HL40-200V' })
+    expect([other.status, told(other)]).toMatchObject([422, expect.stringContaining('registered as HL50-200V')])
+    expect((await server.call('GET', `/api/axes/${axisId}`, { as: plant.as.auditor })).json).toMatchObject({ unit: { serial: 'SN-0001' }, swap: { id, step: 'unit-in', openedBy: 'Tobias Achterberg', overdue: false } })
+  })
+
+  it('a kit with the cautions unread, which are then read once for the swap, and logged', async () => {
+    await step(id, 'unit-in', { serial: 'SN-0050', forcesConfirmed: true })
+    expect(await kit({ cautionsRead: false })).toMatchObject({ status: 409, json: { code: 'cautions-unread' } })
+    expect(await step(id, 'cautions', { read: true })).toMatchObject({ status: 200, json: { cautions: { by: 'Tobias Achterberg' } } })
+    const before = plant.rows().log ?? 0
+    expect((await kit({ cautionsRead: false })).status).toBe(200)
+    expect(plant.rows().log).toBe(before + 1)
+    expect(await kit({ serial: 'SN-0001' })).toMatchObject({ status: 409, json: { code: 'other-unit' } })
+  })
+
+  it('the old file of the old unit, a table written in part, the same file twice, each told apart', async () => {
+    await step(id, 'safe', { confirmed: true })
+    const wrong = await readBack(id, { serial: 'SN-0001' })
+    expect([wrong.status, told(wrong)]).toMatchObject([409, expect.stringContaining('SN-0001')])
+    const model = await readBack(id, { serial: 'SN-0050' })
+    expect(model).toMatchObject({ status: 409, json: { code: 'read-back-model' } })
+    const half = await readBack(id, { serial: 'SN-0050', model: 'HL50-200V', moves: moves.slice(0, 1) })
+    expect(swapOf(half).log.at(-1)?.text).toContain('The table was written in part: 2 rows are missing.')
+  })
+
+  it('a release of a unit whose last read-back differs, by a technician, and by a planner', async () => {
+    expect(await step(id, 'first-motion', { speedPercent: 10, results })).toMatchObject({ status: 200 })
+    expect(await readBack(id, { serial: 'SN-0050', model: 'HL50-200V' })).toMatchObject({ status: 200, json: { compare: 'differs' } })
+    expect(await step(id, 'running', { note: 'old percentages' })).toMatchObject({ status: 200, json: { step: 'release' } })
+    expect((await server.call('GET', `/api/axes/${axisId}`, { as: plant.as.auditor })).json).toMatchObject({ swap: { id, step: 'release', runningSince: expect.any(String) as string } })
+    expect(await step(id, 'release', { meaning: 'approved', password })).toMatchObject({ status: 403, json: { code: 'role' } })
+    const differs = await step(id, 'release', { meaning: 'approved', password }, plant.as.planner)
+    expect(differs).toMatchObject({ status: 409, json: { code: 'read-back-differs' } })
+    expect(told(differs)).toMatch(/mark version \d+ known-good/)
+    expect(await step(id, 'abandon', { reason: 'put right tomorrow', fittedUnitId: null })).toMatchObject({ status: 200, json: { step: 'abandoned' } })
   })
 })

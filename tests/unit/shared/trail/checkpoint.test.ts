@@ -107,6 +107,16 @@ describe('a checkpoint', () => {
     ['a signature without a dash', note.replace('— ', '- ')],
     ['words after it', `${note}\nand more`],
   ])('cannot be read: %s', (_, text) => expect(codeOf(() => parseCheckpoint(text))).toBe('checkpoint-unreadable'))
+  it('cannot be read where a signature is no more than the id of a key', () => {
+    expect(codeOf(() => parseCheckpoint(`${checkpointBody(checkpoint)}\n— ${key.name} ${toBase64(keyId(key))}\n`))).toBe('checkpoint-unreadable')
+  })
+  it('is not signed by a key for which everything is signed', () => {
+    // The neutral point as key and as R, and S = 0: the equation R + k·A = S·B of RFC 8032, section 5.1.7, holds for any message. A key of small order is refused for it.
+    const neutral = new Uint8Array(32)
+    neutral[0] = 1
+    const anybody: VerifierKey = { name: key.name, publicKey: neutral }
+    expect(codeOf(() => openCheckpoint(formatCheckpoint(checkpoint, anybody, () => new Uint8Array([...neutral, ...new Uint8Array(32)])), anybody))).toBe('checkpoint-signature')
+  })
   it('without a signature is read, and not believed', () => {
     expect(parseCheckpoint(checkpointBody(checkpoint)).size).toBe(4711)
     expect(codeOf(() => openCheckpoint(checkpointBody(checkpoint), key))).toBe('checkpoint-unsigned')

@@ -1,7 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { consistencyPath, inclusionPath, provesConsistency, provesInclusion } from '../../../../shared/trail/proofs'
-import { growingTree, leafHash, type Hash, type SubtreeHash } from '../../../../shared/trail/tree'
+import { growingTree, leafHash, nodeHash, type Hash, type SubtreeHash } from '../../../../shared/trail/tree'
 import { bytes, hex, naivePath, naiveProof, naiveRoot, numberedLeaves, sha256 } from '../../../support/merkle'
 
 const leaves = numberedLeaves(1025)
@@ -121,5 +121,23 @@ describe('consistency', () => {
   })
   it('refuses to go back', () => {
     expect(() => consistencyPath(5, 4, subtree, sha256)).toThrow('A tree of 4 leaves does not begin with 5.')
+  })
+})
+
+describe('proofs made to deceive', () => {
+  it('a tree of one leaf has no path: a root that a longer one leads to is not its root', () => {
+    const [leaf, other] = hashes as [Hash, Hash]
+    expect(provesInclusion(leaf, 0, 1, [other], nodeHash(other, leaf, sha256), sha256)).toBe(false)
+    expect(provesInclusion(leaf, 0, 1, [other], nodeHash(leaf, other, sha256), sha256)).toBe(false)
+    expect(provesConsistency(1, 2, [other, other], leaf, nodeHash(other, nodeHash(leaf, other, sha256), sha256), sha256)).toBe(false)
+  })
+
+  it('a hash with a byte behind it is no hash, though as a left part it would hash the same', () => {
+    const longer = (path: readonly Hash[]) => path.map((hash, index) => index === path.length - 1 ? new Uint8Array([...hash, 7]) : hash)
+    const inclusion = inclusionPath(5, 8, subtree, sha256), consistency = consistencyPath(6, 8, subtree, sha256)
+    expect(provesInclusion(hashes[5]!, 5, 8, inclusion, root(8), sha256)).toBe(true)
+    expect(provesInclusion(hashes[5]!, 5, 8, longer(inclusion), root(8), sha256)).toBe(false)
+    expect(provesConsistency(6, 8, consistency, root(6), root(8), sha256)).toBe(true)
+    expect(provesConsistency(6, 8, longer(consistency), root(6), root(8), sha256)).toBe(false)
   })
 })

@@ -74,6 +74,16 @@ export function openPlant(options: { fourEyes?: boolean, watched?: string[] } = 
   })
 }
 
+/** The plant as most services are tried on: a planner, a technician, and the axis LID-02.Z with SN-0001 in for 300 days, or with `unit: null` none. */
+export function openLidPlant({ uploadEveryHours, unit = {} }: { uploadEveryHours?: number, unit?: { firmware?: string } | null } = {}) {
+  const plant = openPlant()
+  const runa = plant.person('Runa Haldersen')
+  const tobias = plant.person('Tobias Achterberg', ['technician'])
+  const axisId = plant.axis('LID-02.Z', uploadEveryHours === undefined ? {} : { uploadEveryHours })
+  if (unit) plant.fit(axisId, plant.unit('SN-0001', unit), start - 300 * day)
+  return { plant, runa, tobias, axisId }
+}
+
 function insertedMaker(db: Vault['db']): number {
   const known = db.select({ id: person.id }).from(person).limit(1).get()
   return known?.id ?? inserter(db, person)({ rev: 1, name: 'Vault', email: 'vault@larkfield.example', roles: ['planner'], siteIds: [], shared: false, madeAt: iso(start) })

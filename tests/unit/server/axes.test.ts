@@ -12,7 +12,7 @@ import { voidVersion } from '../../../server/services/versions/void-version'
 import { versionChanges, versionPatch, versionText } from '../../../server/services/versions/version-changes'
 import { versionFile } from '../../../server/services/versions/version-file'
 import { readSettings } from '../../../shared/settings/read'
-import { day, hour, iso, minute, openPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
+import { day, hour, iso, minute, openLidPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor
@@ -20,11 +20,7 @@ let tobias: PersonActor
 let axisId: number
 
 beforeEach(() => {
-  plant = openPlant()
-  runa = plant.person('Runa Haldersen')
-  tobias = plant.person('Tobias Achterberg', ['technician'])
-  axisId = plant.axis('LID-02.Z', { uploadEveryHours: 24 })
-  plant.fit(axisId, plant.unit('SN-0001'), start - 300 * day)
+  ({ plant, runa, tobias, axisId } = openLidPlant({ uploadEveryHours: 24 }))
 })
 afterEach(() => plant.close())
 

@@ -10,7 +10,7 @@ import { coverOf } from '../../../shared/checks/waivers'
 import { readSettings } from '../../../shared/settings/read'
 import type { Nameplate } from '../../../shared/settings/nameplate'
 import type { Content, SettingsFile } from '../../../shared/settings/types'
-import { day, iso, minute, openPlant, settingsFile, start, type Plant } from '../../support/vault-plant'
+import { day, iso, minute, openLidPlant, settingsFile, start, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor
@@ -18,11 +18,7 @@ let tobias: PersonActor
 let axisId: number
 
 beforeEach(() => {
-  plant = openPlant()
-  runa = plant.person('Runa Haldersen')
-  tobias = plant.person('Tobias Achterberg', ['technician'])
-  axisId = plant.axis('LID-02.Z')
-  plant.fit(axisId, plant.unit('SN-0001', { firmware: '2.4' }), start - 300 * day)
+  ({ plant, runa, tobias, axisId } = openLidPlant({ unit: { firmware: '2.4' } }))
 })
 afterEach(() => plant.close())
 

@@ -19,7 +19,7 @@ import { railPixels } from '../../../server/services/sheet/draw-rail'
 import { storeUpload } from '../../../server/services/uploads/store-upload'
 import { liftFile, liftPlate } from '../../support/entry-table'
 import { pageSizes, pdfText, pdfWords, qrOf, unzipped } from '../../support/paper'
-import { day, minute, openPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
+import { day, minute, openLidPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor
@@ -27,11 +27,7 @@ let tobias: PersonActor
 let axisId: number
 
 beforeEach(() => {
-  plant = openPlant()
-  runa = plant.person('Runa Haldersen')
-  tobias = plant.person('Tobias Achterberg', ['technician'])
-  axisId = plant.axis('LID-02.Z')
-  plant.fit(axisId, plant.unit('SN-0001', { firmware: '2.4' }), start - 300 * day)
+  ({ plant, runa, tobias, axisId } = openLidPlant({ unit: { firmware: '2.4' } }))
 })
 afterEach(() => plant.close())
 

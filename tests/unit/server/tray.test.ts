@@ -5,7 +5,7 @@ import { discardFromTray } from '../../../server/services/tray/discard'
 import { listTray, trayFile } from '../../../server/services/tray/list'
 import { storeUpload } from '../../../server/services/uploads/store-upload'
 import type { UploadFields } from '../../../shared/api/uploads'
-import { day, iso, minute, openPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
+import { day, iso, minute, openLidPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor
@@ -13,10 +13,7 @@ let tobias: PersonActor
 let axisId: number
 
 beforeEach(() => {
-  plant = openPlant()
-  runa = plant.person('Runa Haldersen')
-  tobias = plant.person('Tobias Achterberg', ['technician'])
-  axisId = plant.axis('LID-02.Z')
+  ({ plant, runa, tobias, axisId } = openLidPlant({ unit: null }))
 })
 afterEach(() => plant.close())
 

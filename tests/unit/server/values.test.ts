@@ -10,7 +10,7 @@ import { markKnownGood, markNone } from '../../../server/services/known-good/mar
 import { endRule } from '../../../server/services/rules/rules'
 import { storeUpload } from '../../../server/services/uploads/store-upload'
 import { voidVersion } from '../../../server/services/versions/void-version'
-import { day, iso, minute, openPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
+import { day, iso, minute, openLidPlant, openPlant, settingsFile, start, type FileParts, type Plant } from '../../support/vault-plant'
 
 let plant: Plant
 let runa: PersonActor
@@ -18,11 +18,7 @@ let tobias: PersonActor
 let axisId: number
 
 beforeEach(() => {
-  plant = openPlant()
-  runa = plant.person('Runa Haldersen')
-  tobias = plant.person('Tobias Achterberg', ['technician'])
-  axisId = plant.axis('LID-02.Z')
-  plant.fit(axisId, plant.unit('SN-0001'), start - 300 * day)
+  ({ plant, runa, tobias, axisId } = openLidPlant())
 })
 afterEach(() => plant.close())
 

@@ -19,9 +19,13 @@ export interface Change {
 }
 const given = <Values extends object>(values: Values) => Object.fromEntries(Object.entries(values).filter(([, value]) => value !== undefined))
 
-function levelsOf(rule: string, { setup, plate: changed, moves = [absolute(1, 100)], content, input }: Change): readonly Level[] | 'not applicable' {
-  const nameplate = changed === null ? {} : { nameplate: plate(given({ ...soundPlate, ...changed })) }
-  const all = judgeInput(linear(given({ ...soundSetup, ...setup }), moves, content), { ...nameplate, ...input })
+/** The axis that the rows change. */
+export interface Sound { readonly setup: Setup, readonly plate: Nameplate, readonly content: (setup: Setup, moves: readonly Move[], rest?: Partial<Content>) => Content }
+const soundLinear: Sound = { setup: soundSetup, plate: soundPlate, content: linear }
+
+function levelsOf(sound: Sound, rule: string, { setup, plate: changed, moves = [absolute(1, 100)], content, input }: Change): readonly Level[] | 'not applicable' {
+  const nameplate = changed === null ? {} : { nameplate: plate(given({ ...sound.plate, ...changed })) }
+  const all = judgeInput(sound.content(given({ ...sound.setup, ...setup }), moves, content), { ...nameplate, ...input })
   const found = ruleOf(rule)
   if (!found) throw new RangeError(`No such rule: ${rule}`)
   return found.applies(all) ? found.judge(all).map(({ level }) => level) : 'not applicable'
@@ -29,10 +33,11 @@ function levelsOf(rule: string, { setup, plate: changed, moves = [absolute(1, 10
 
 export type Case = readonly [words: string, change: Change, levels: readonly Level[] | 'not applicable']
 
-/** One rule held to its rows. */
-export function holdsCases(rule: string, list: readonly Case[]): void {
-  it.each(list)('%s', (_words, change, levels) => expect(levelsOf(rule, change)).toEqual(levels))
+/** One rule held to its rows, on the linear axis where none is given. */
+export const holdsCasesOn = (sound: Sound) => (rule: string, list: readonly Case[]): void => {
+  it.each(list)('%s', (_words, change, levels) => expect(levelsOf(sound, rule, change)).toEqual(levels))
 }
+export const holdsCases = holdsCasesOn(soundLinear)
 
 /** No level of a rule is left without a row, and none of the rules always stops or warns. */
 export function reachesItsLevels(cases: Readonly<Record<string, readonly Case[]>>): void {

@@ -1,3 +1,4 @@
+import { followers, usedRows } from '../motion/chains'
 import { selectCode, isCallable, type Numbering } from '../motion/select-inputs'
 import { rowKind } from '../settings/entry-table/address'
 import type { EntryColumn } from '../settings/entry-table/schema'
@@ -16,7 +17,8 @@ const always: ReadonlySet<MoveFieldName> = new Set(['kind', 'target', 'speed', '
 export function sheetMoves({ content, nameplate }: { readonly content: Content, readonly nameplate?: Nameplate }): SheetMoves {
   const fields = moveFieldNames.filter(name => name !== 'comment' && (always.has(name) || content.moves.some(move => move[name] !== undefined)))
   const own = new Map((nameplate?.entryTable?.moves ?? []).map(column => [column.field, column]))
-  const followers = new Set(content.moves.flatMap(({ next }) => next ?? []))
+  // A row that only follows itself still has to be called a first time.
+  const led = followers(usedRows(content.moves).filter(({ move }) => move.next !== move.move))
   const inputs = content.setup.selectInputs ?? 0
   const numbering: Numbering = { firstMove: nameplate?.firstMove ?? 0, allOff: nameplate?.allOff ?? 'first' }
   const sign = nameplate?.entryTable?.decimal ?? 'point'
@@ -31,7 +33,7 @@ export function sheetMoves({ content, nameplate }: { readonly content: Content, 
     inputs,
     columns: fields.map(field => columnOf(field, own.get(field), content)),
     rows: content.moves.map((move): SheetMove => ({
-      move: move.move, call: callOf(move, inputs, numbering, followers), unused: isUnused(move),
+      move: move.move, call: callOf(move, inputs, numbering, led), unused: isUnused(move),
       cells: fields.map(field => cellOf(move, field)), comment: move.comment ?? '',
     })),
   }
@@ -47,9 +49,9 @@ function columnOf(field: MoveFieldName, own: EntryColumn | undefined, { axisKind
   }
 }
 
-function callOf({ move }: Move, inputs: number, numbering: Numbering, followers: ReadonlySet<number>): MoveCall {
-  if (inputs === 0) return followers.has(move) ? { by: 'itself' } : { by: 'bus' }
+function callOf({ move }: Move, inputs: number, numbering: Numbering, led: ReadonlySet<number>): MoveCall {
+  if (inputs === 0) return led.has(move) ? { by: 'itself' } : { by: 'bus' }
   const code = selectCode(move, numbering)
-  if (!isCallable(code, inputs, numbering)) return { by: followers.has(move) ? 'itself' : 'nothing' }
+  if (!isCallable(code, inputs, numbering)) return { by: led.has(move) ? 'itself' : 'nothing' }
   return { by: 'inputs', on: Array.from({ length: inputs }, (_, index) => Math.floor(code / 2 ** (inputs - 1 - index)) % 2 === 1) }
 }

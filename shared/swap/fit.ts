@@ -7,7 +7,7 @@ import { isUnused } from '../settings/move-fields'
 import type { AxisFlag, AxisKind, Content } from '../settings/types'
 import type { CarryCase } from './carried'
 import { drivenBack } from './falls'
-import { longestStep, reachOf } from './reach'
+import { longestTravel, reachOf } from './reach'
 import { forceFields, holdsForces } from './rescale'
 import type { Fit, KitContent, SwapSide, UnfitReason } from './types'
 
@@ -49,11 +49,13 @@ function strokeShort(content: Content, { model, nameplate }: SwapSide): UnfitRea
   const stroke = nameplate?.stroke ?? Infinity
   const { length } = axisUnits(content.axisKind)
   const reach = reachOf(content)
-  const step = content.setup.modulo === undefined ? longestStep(content) : 0
+  const travel = content.setup.modulo === undefined ? longestTravel(content) : undefined
   if (reach && minus(reach.high, reach.low) > stroke) {
     return [hard('stroke-short', `The moves go from ${quantity(reach.low, length)} to ${quantity(reach.high, length)}, ${quantity(minus(reach.high, reach.low), length)} in all; ${model} has a stroke of ${quantity(stroke, length)}.`, ['/moves'])]
   }
-  return step > stroke ? [hard('stroke-short', `One move goes ${quantity(step, length)} at once; ${model} has a stroke of ${quantity(stroke, length)}.`, ['/moves'])] : []
+  if (!travel || travel.length <= stroke) return []
+  const went = travel.moves.length > 1 ? `Moves ${travel.moves.join('→')} go ${quantity(travel.length, length)} in one run` : `One move goes ${quantity(travel.length, length)} at once`
+  return [hard('stroke-short', `${went}; ${model} has a stroke of ${quantity(stroke, length)}.`, ['/moves'])]
 }
 
 /** Hard where the old unit had a brake, or may have had one; a job that never had one is told by the checks. */

@@ -1,6 +1,7 @@
 import { knownStarts, usedRows } from '../motion/chains'
-import { plus } from '../motion/exact'
+import { minus, plus } from '../motion/exact'
 import type { Content } from '../settings/types'
+import { calledMoves, type Called } from './motion-items'
 
 export interface Reach { readonly low: number, readonly high: number }
 
@@ -18,7 +19,26 @@ export function reachOf({ moves, setup }: Content): Reach | undefined {
   return places.length === 0 ? undefined : { low: Math.min(...places), high: Math.max(...places) }
 }
 
-/** The longest single step of a relative move, mm or deg; 0 without one. */
-export function longestStep({ moves }: Content): number {
-  return usedRows(moves).reduce((longest, { move }) => move.kind === 'relative' ? Math.max(longest, Math.abs(move.target)) : longest, 0)
+/** A way that is gone wherever it begins. */
+export interface Travel { readonly moves: readonly number[], readonly length: number }
+
+/**
+ * The longest way of relative moves that a call sets going, from its lowest to its highest place, mm or deg: where it begins
+ * nobody knows, and it takes so much room anywhere. Undefined where no call begins with a relative move.
+ */
+export function longestTravel({ moves }: Pick<Content, 'moves'>): Travel | undefined {
+  const ways = calledMoves(moves).map(travelOf).filter(({ length }) => length > 0)
+  return ways.reduce<Travel | undefined>((longest, way) => longest && longest.length >= way.length ? longest : way, undefined)
+}
+
+function travelOf({ moves }: Called): Travel {
+  const placed = moves.findIndex(({ kind }) => kind !== 'relative')
+  const run = placed < 0 ? moves : moves.slice(0, placed)
+  let place = 0, low = 0, high = 0
+  for (const { target } of run) {
+    place = plus(place, target)
+    low = Math.min(low, place)
+    high = Math.max(high, place)
+  }
+  return { moves: run.map(({ move }) => move), length: minus(high, low) }
 }

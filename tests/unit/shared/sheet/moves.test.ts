@@ -23,6 +23,12 @@ describe('the inputs of a move', () => {
   it('are none for what follows by itself out of reach, and for what no input reaches', () => expect(bits([move(1, { next: 9 }), move(9), move(8)], 3)).toEqual(['001', 'itself', 'nothing']))
   it('are none where moves are called over the bus', () => expect(bits([move(0), move(1, { next: 0 })], 0)).toEqual(['itself', 'bus']))
 
+  it('a row that only follows itself, or an empty one, is called like any other', () => {
+    expect(bits([move(3, { next: 3 })], 0)).toEqual(['bus'])
+    expect(bits([move(9, { next: 9 })], 3)).toEqual(['nothing'])
+    expect(bits([move(1, { next: 2, speed: 0, acceleration: 0 }), move(2)], 0)).toEqual(['bus', 'bus'])
+  })
+
   it('read as a binary number are the code again', () => {
     fc.assert(fc.property(fc.integer({ min: 0, max: 1023 }), fc.integer({ min: 1, max: 10 }), fc.constantFrom(0 as const, 1 as const), fc.constantFrom('first' as const, 'none' as const), (number, inputs, firstMove, allOff) => {
       const [word] = bits([move(number)], inputs, { firstMove, allOff })

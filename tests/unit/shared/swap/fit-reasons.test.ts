@@ -5,7 +5,7 @@ import type { CarryCase } from '../../../../shared/swap/carried'
 import { drivenBack, mayFall } from '../../../../shared/swap/falls'
 import { fitOf, type FitInput } from '../../../../shared/swap/fit'
 import { kitOf } from '../../../../shared/swap/kit'
-import { longestStep, reachOf } from '../../../../shared/swap/reach'
+import { longestTravel, reachOf } from '../../../../shared/swap/reach'
 import { absolute, linear, plate, press, relative, rotary, unused } from '../../../support/check-input'
 
 const strong = { ratedThrust: 400, peakThrust: 800, pressForceMin: 5, pressForceMax: 70, brakeFitted: true } as const
@@ -47,6 +47,16 @@ describe('hard: a stroke shorter than the moves', () => {
   it('one step that is longer than the stroke, where no place is known; just as long does', () => {
     expect(reasons({ content: moves(relative(1, -150.5)), into: newer({ stroke: 150 }) }).map(({ message }) => message)).toEqual(['One move goes 150.5 mm at once; B has a stroke of 150 mm.'])
     expect(codes({ content: moves(relative(1, -150)), into: newer({ stroke: 150 }) })).toEqual([])
+  })
+
+  it('relative moves that follow each other, from anywhere: 100 + 60 − 30 reach 160 mm from lowest to highest', () => {
+    const run = moves(relative(1, 100, { next: 2 }), relative(2, 60, { next: 3 }), relative(3, -30))
+    expect(reasons({ content: run, into: newer({ stroke: 159.9 }) }).map(({ message }) => message)).toEqual(['Moves 1→2→3 go 160 mm in one run; B has a stroke of 159.9 mm.'])
+    expect(codes({ content: run, into: newer({ stroke: 160 }) })).toEqual([])
+    // There and back takes the room of one way; a place of its own ends the run.
+    expect(longestTravel(moves(relative(1, 100, { next: 2 }), relative(2, -100)))).toEqual({ moves: [1, 2], length: 100 })
+    expect(longestTravel(moves(relative(1, 40, { next: 2 }), absolute(2, 0, { next: 3 }), relative(3, 90)))).toEqual({ moves: [1], length: 40 })
+    expect(longestTravel(moves(relative(1, 40, { next: 2 }), relative(2, 30, { next: 1 })))).toEqual({ moves: [1, 2], length: 70 })
   })
 
   it('a turning axis has no ends, and an empty row goes nowhere', () => {
@@ -196,7 +206,7 @@ describe('how far the moves go', () => {
   it('an approach counts, an empty row does not', () => {
     expect(reachOf(moves(press(1, 140, 120), absolute(2, 10), { ...unused(3), target: -50 }))).toEqual({ low: 10, high: 140 })
     expect(reachOf(moves(unused(1)))).toBeUndefined()
-    expect(longestStep(moves({ ...unused(1), kind: 'relative', target: 500 }, absolute(2, 90)))).toBe(0)
+    expect(longestTravel(moves({ ...unused(1), kind: 'relative', target: 500 }, absolute(2, 90)))).toBeUndefined()
   })
 
   it('a relative move from both ends of what leads to it, one that nobody names not at all', () => {

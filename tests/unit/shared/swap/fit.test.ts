@@ -5,7 +5,7 @@ import type { CarryCase } from '../../../../shared/swap/carried'
 import { drivenBack, mayFall } from '../../../../shared/swap/falls'
 import { fitOf, type FitInput } from '../../../../shared/swap/fit'
 import { kitOf } from '../../../../shared/swap/kit'
-import { longestStep, reachOf } from '../../../../shared/swap/reach'
+import { longestTravel, reachOf } from '../../../../shared/swap/reach'
 
 const plate = (model: string, more: Partial<Nameplate> = {}): Nameplate => ({ model, axisKind: 'linear', stroke: 200, ratedThrust: 400, peakThrust: 800, pressForceMin: 5, pressForceMax: 70, brakeFitted: true, ...more })
 const absolute = (move: number, target: number, more: Partial<Move> = {}): Move => ({ move, kind: 'absolute', target, speed: 100, acceleration: 1000, ...more })
@@ -62,7 +62,7 @@ describe('how far the moves go', () => {
     expect(reachOf(content([absolute(0, 20, { next: 1 }), { ...absolute(1, -35), kind: 'relative' }, press]))).toEqual({ low: -15, high: 150 })
     expect(reachOf(content([{ ...absolute(1, -35), kind: 'relative' }]))).toBeUndefined()
     expect(reachOf(content([absolute(0, 20)], { modulo: 360 }))).toBeUndefined()
-    expect(longestStep(content([{ ...absolute(1, -35), kind: 'relative' }, absolute(2, 90)]))).toBe(35)
+    expect(longestTravel(content([{ ...absolute(1, -35), kind: 'relative' }, absolute(2, 90)]))).toEqual({ moves: [1], length: 35 })
   })
 })
 

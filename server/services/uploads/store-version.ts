@@ -1,3 +1,4 @@
+import { ruleSetVersion } from '#shared/checks/table'
 import type { UploadFields, UploadSeen, UploadStored } from '#shared/api/uploads'
 import type { Normalised } from '#shared/settings/types'
 import type { Actor } from '#server/database/actor'
@@ -55,9 +56,10 @@ export function insertVersion(db: VaultDb, write: Write, source: Source, fields:
   return id
 }
 
-/** A file in a drive's layout can be read again only by the revision that it was read by. */
+/** With the rules that it was judged by, so that the log holds its first judgement to them. A file in a drive's layout can be read again only by the revision that it was read by. */
 function engineOf(db: VaultDb, { layout }: VersionFields): string {
-  return layout === undefined ? engineVersion : `${engineVersion}, entry table of ${layout} revision ${layoutOf(db, layout).revision}`
+  const engine = `${engineVersion}, rules ${ruleSetVersion}`
+  return layout === undefined ? engine : `${engine}, entry table of ${layout} revision ${layoutOf(db, layout).revision}`
 }
 
 /** A log entry has no place for undefined. */

@@ -29,6 +29,9 @@ export function deriveAgain(db: VaultDb, faults: Faults): { readonly read: (entr
   const derived: Derived = { versions: 0, judgements: 0, older: 0 }
   const judged = (record: string, against: ReadAgainst, version: VersionRow, kept: KeptJudgement | undefined) => {
     if (kept === undefined) return faults.add(record, 'its judgement is gone')
+    // Versions of before say nothing of their rules; those of now do, and the log with them.
+    const rules = record.startsWith('version') ? /, rules (\d+)/.exec(version.engine)?.[1] : undefined
+    if (rules !== undefined && rules !== kept.set.ruleSet) return faults.add(record, `its judgement names rules ${kept.set.ruleSet}, and the version was judged by rules ${rules}`)
     if (kept.set.ruleSet !== ruleSetVersion) {
       derived.older += 1
       return

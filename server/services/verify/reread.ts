@@ -27,8 +27,8 @@ export function rereadFiles(db: VaultDb): { readonly read: (entry: Entry) => voi
       const against = version && register.against(db, version.axisId, version.unitId)
       if (!version || !against) return
       const nameplate = against.nameplate?.nameplate
-      const ownLayout = version.engine !== engineVersion
-      if (ownLayout && !nameplate?.entryTable) {
+      const ownLayout = version.engine.includes(', entry table of ')
+      if (!version.engine.startsWith(engineVersion) || (ownLayout && !nameplate?.entryTable)) {
         reread.other += 1
         return
       }

@@ -1,3 +1,4 @@
+import { ruleSetVersion } from '../../../shared/checks/table'
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import type { PersonActor } from '../../../server/database/actor'
 import { makeTextKit, takeKit } from '../../../server/services/kit/make-kit'
@@ -55,7 +56,7 @@ describe('an upload in the layout of a model', () => {
   it('becomes a version with the neutral content, and says by which revision it was read', () => {
     const id = stored()
     const row = versionRow(plant.vault.db, id)
-    expect(row).toMatchObject({ axisId, number: 1, model, firmware: '1.4', engine: 'reader 1, difference 1, entry table of LT10-100 revision 1', capturedAt: iso(start) })
+    expect(row).toMatchObject({ axisId, number: 1, model, firmware: '1.4', engine: `reader 1, difference 1, rules ${ruleSetVersion}, entry table of LT10-100 revision 1`, capturedAt: iso(start) })
     expect(textOf(versionFile(plant.vault, id, 'original').bytes)).toBe(textOf(list()))
     expect(JSON.parse(textOf(versionFile(plant.vault, id, 'json').bytes))).toMatchObject({ setup: liftFile.setup, moves: liftFile.moves, zones: liftFile.zones })
   })

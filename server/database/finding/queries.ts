@@ -40,8 +40,9 @@ export const findingQueries = prepared((db) => {
     countVersions: db.select({ count: count() }).from(findingVersion).where(eq(findingVersion.findingId, place('findingId'))).prepare(),
     hasVersion: db.select({ id: findingVersion.id }).from(findingVersion)
       .where(and(eq(findingVersion.findingId, place('findingId')), eq(findingVersion.axisId, place('axisId')), sql`${findingVersion.versionId} IS ${place('versionId')}`)).limit(1).prepare(),
-    openOfVersion: db.select({ id: findingState.findingId, causeKey: findingState.causeKey }).from(findingVersion).innerJoin(findingState, eq(findingState.findingId, findingVersion.findingId))
-      .where(and(eq(findingVersion.versionId, place('versionId')), eq(findingState.state, sql`'open'`))).orderBy(asc(findingState.findingId)).prepare(),
+    /** Findings that a version shows, and that stand in a state. */
+    ofVersionIn: db.select({ id: findingState.findingId, causeKey: findingState.causeKey }).from(findingVersion).innerJoin(findingState, eq(findingState.findingId, findingVersion.findingId))
+      .where(and(eq(findingVersion.versionId, place('versionId')), eq(findingState.state, place('state')))).orderBy(asc(findingState.findingId)).prepare(),
     axesOf: db.selectDistinct({ axisId: findingVersion.axisId }).from(findingVersion).where(eq(findingVersion.findingId, place('findingId'))).orderBy(asc(findingVersion.axisId)).prepare(),
     acts: db.select({ act: findingAct, by: person.name, tag: axis.tag, number: version.number }).from(findingAct).innerJoin(person, eq(person.id, findingAct.byPerson))
       .leftJoin(version, eq(version.id, findingAct.versionId)).leftJoin(axis, eq(axis.id, version.axisId)).where(eq(findingAct.findingId, place('findingId'))).orderBy(asc(findingAct.id)).prepare(),

@@ -6,7 +6,7 @@ import type { PersonActor } from '#server/database/actor'
 import type { Vault } from '#server/database/client'
 import { waiverQueries, type NamedWaiver } from '#server/database/waiver/queries'
 import { refreshAxisState } from '../axes/axis-state'
-import { explainWaived, raiseStanding } from '../findings/standing'
+import { explainWaived, raiseStanding, reopenUnwaived } from '../findings/standing'
 import { afterOf, limitOf, pageOf, type PageQuery } from '../page'
 import { assertPlace } from '../places/bounds'
 
@@ -24,7 +24,7 @@ export function giveWaiver(vault: Vault, actor: PersonActor, { axisId, rule, at,
     const id = waiverQueries(vault.db).insert(row)
     write.log({ act: 'waiver-given', id, state: { id, ...row, endedAt: null }, note: reason })
     refreshAxisState(vault.db, axisId)
-    explainWaived(vault.db, write, axisId, actor.id, `Accepted until ${untilAt.slice(0, 10)} by a waiver: ${reason}`)
+    explainWaived(vault.db, write, row)
     return { id }
   })
 }
@@ -43,6 +43,7 @@ export function endWaiver(vault: Vault, actor: PersonActor, id: number, { reason
     waiverQueries(vault.db).insertEnd({ waiverId: id, at: write.now, byPerson: actor.id, reason })
     write.log({ act: 'waiver-ended', id, state: { ...before, endedAt: write.now, endedByPerson: actor.id, endReason: reason }, note: reason })
     refreshAxisState(vault.db, before.axisId)
+    reopenUnwaived(vault.db, write, before, actor.id, reason)
     raiseStanding(vault.db, write, before.axisId)
     return waiverOnWire(namedWaiver(vault, id))
   })

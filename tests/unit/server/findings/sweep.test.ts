@@ -90,6 +90,34 @@ describe('a waiver', () => {
     expect(findings('stop-check')).toMatchObject([{ state: 'explained', explanations: [{ by: 'Runa Haldersen', text: 'Accepted until 2026-06-01 by a waiver: trial' }] }])
   })
 
+  const underRule = () => {
+    const { id } = makeRule(plant.vault, plant.runa, { scope: 'axis', scopeId: plant.axisId, field: 'thrustLimit', max: 45, reason: 'jars crack' })
+    plant.upload(raised)
+    return giveWaiver(plant.vault, plant.runa, {
+      axisId: plant.axisId, rule: 'site-rule', at: ['/setup/thrustLimit'], reason: 'trial', until: '2026-06-01T00:00:00Z',
+      value: { level: 'stop', values: [{ place: 'ruleId', value: id }, { place: '/setup/thrustLimit', value: 55 }] },
+    }).id
+  }
+
+  it('that explained a finding and is taken back opens it again, with its words', () => {
+    const id = underRule()
+    plant.now += day
+    endWaiver(plant.vault, plant.runa, id, { reason: 'no trial any more' })
+    expect(findings('stop-check')).toMatchObject([{ state: 'open', acts: [
+      { kind: 'explained', text: 'Accepted until 2026-06-01 by a waiver: trial' },
+      { kind: 'reopened', by: 'Runa Haldersen', text: 'The waiver that explained it was taken back: no trial any more' },
+    ] }])
+  })
+
+  it('that is taken back leaves explained what another has explained too, and closed what is closed', () => {
+    const id = underRule()
+    explainFinding(plant.vault, plant.tobias, findings('stop-check')[0]!.id, { text: 'Lids stood proud.' })
+    endWaiver(plant.vault, plant.runa, id, { reason: 'no trial any more' })
+    expect(findings('stop-check')).toMatchObject([{ state: 'explained' }])
+    closeFinding(plant.vault, plant.ines, findings('stop-check')[0]!.id, { as: 'accepted', allowedBy: 'Marit Lund' })
+    expect(findings('stop-check')).toMatchObject([{ state: 'closed' }])
+  })
+
   it('that was taken back does so at once', () => {
     const id = give()
     plant.upload(raised)

@@ -43,11 +43,13 @@ export type Finding = z.infer<typeof findingSchema>
 const fieldName = z.string().min(1).max(80).describe('thrustLimit, move.speed, zone.from, extra:KEY')
 export const plannedChangeBody = z.strictObject({
   axisIds: z.array(idSchema).min(1).max(1000), fields: z.array(fieldName).min(1).max(100), min: z.number().optional(), max: z.number().optional(),
+  ranges: z.array(z.strictObject({ field: fieldName, min: z.number().optional(), max: z.number().optional() })).max(100).optional().describe('of fields that have a range of their own; min and max hold for the others'),
   from: instantSchema, until: instantSchema, reason: reasonSchema, allowedBy: personText,
 })
 export const plannedChangeEndBody = z.strictObject({ reason: reasonSchema })
 export const plannedChangeSchema = z.object({
   id: idSchema, axes: z.array(z.object({ id: idSchema, tag: z.string() })), fields: z.array(z.string()), min: z.number().nullable(), max: z.number().nullable(),
+  ranges: z.array(z.object({ field: z.string(), min: z.number().nullable(), max: z.number().nullable() })).describe('each field with the range that holds for it'),
   from: instantSchema, until: instantSchema, reason: z.string(), allowedBy: z.string(), announcedAt: instantSchema, announcedBy: z.string(), timeZone: z.string(),
   endedAt: instantSchema.nullable(), endedBy: z.string().nullable(), endReason: z.string().nullable(),
   /** The findings that it explained, oldest first. */

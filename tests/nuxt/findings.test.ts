@@ -30,7 +30,7 @@ registerEndpoint('/api/findings/4/explain', { method: 'POST', handler: async (ev
 } })
 registerEndpoint('/api/axes/7/versions', () => ({ items: [], next: null }))
 const plan: PlannedChange = {
-  id: 2, axes: [{ id: 7, tag: 'LID-02.Z' }], fields: ['thrustLimit'], min: 40, max: 60, from: at, until: '2999-01-01T00:00:00.000Z', reason: 'thicker lids', allowedBy: 'Marit Lund', announcedAt: at, announcedBy: 'Runa Haldersen', timeZone: 'Europe/Berlin',
+  id: 2, axes: [{ id: 7, tag: 'LID-02.Z' }], fields: ['thrustLimit'], min: 40, max: 60, ranges: [{ field: 'thrustLimit', min: 40, max: 60 }], from: at, until: '2999-01-01T00:00:00.000Z', reason: 'thicker lids', allowedBy: 'Marit Lund', announcedAt: at, announcedBy: 'Runa Haldersen', timeZone: 'Europe/Berlin',
   endedAt: null, endedBy: null, endReason: null, came: [{ findingId: 4, at, tag: 'LID-02.Z', versionId: 15, number: 8, title: 'LID-02.Z thrust limit 38 → 55 %', state: 'explained' }],
 }
 registerEndpoint('/api/planned-changes', () => ({ items: [plan], next: null }))

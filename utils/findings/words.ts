@@ -42,12 +42,14 @@ export function besideAct({ madeBy, madeAt, workOrder }: FindingAct, exact: (iso
   return parts.flatMap(([label, value]) => value === null ? [] : [{ label, value }])
 }
 
-/** `thrust limit, 40 to 60 %`: what an announced change may be. */
-export function plannedWords({ fields, min, max }: Pick<PlannedChange, 'fields' | 'min' | 'max'>): string {
-  const known = fields.map(name => ruleField(name))
-  const unit = known.length === 1 ? known[0]?.unit ?? '' : ''
-  const range = min !== null && max !== null ? `${sayValue(min)} to ${sayValue(max, unit)}` : min !== null ? `at least ${sayValue(min, unit)}` : max !== null ? `at most ${sayValue(max, unit)}` : 'any value'
-  return `${fields.map((name, index) => known[index]?.label ?? name).join('; ')}, ${range}`
+/** `thrust limit, 40 to 60 %; jog speed, at most 20 mm/s`: what an announced change may be. */
+export function plannedWords({ ranges }: Pick<PlannedChange, 'ranges'>): string {
+  return ranges.map(({ field, min, max }) => {
+    const known = ruleField(field)
+    const unit = known?.unit ?? ''
+    const range = min !== null && max !== null ? `${sayValue(min)} to ${sayValue(max, unit)}` : min !== null ? `at least ${sayValue(min, unit)}` : max !== null ? `at most ${sayValue(max, unit)}` : 'any value'
+    return `${known?.label ?? field}, ${range}`
+  }).join('; ')
 }
 
 export type PlanState = 'called off' | 'to come' | 'holds' | 'over'

@@ -14,6 +14,8 @@ export const plannedChange = sqliteTable('planned_change', {
   allowedBy: text('allowed_by').notNull(),
   madeAt: instant('made_at').notNull(),
   madeBy: integer('made_by').notNull(),
+  /** Fields with a range of their own; min and max hold for the others. */
+  ranges: json<{ field: string, min: number | null, max: number | null }[] | null>('ranges'),
 })
 export type PlannedChangeRow = typeof plannedChange.$inferSelect
 

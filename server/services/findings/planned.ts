@@ -2,6 +2,7 @@ import type { FieldChange } from '#shared/diff/types'
 import type { VaultDb } from '#server/database/prepared'
 import { plannedChangeQueries } from '#server/database/planned-change/queries'
 import type { PlannedChangeRow } from '#server/database/planned-change/table'
+import { rangesOf } from '../planned-changes/ranges'
 import { namedPerson } from '../versions/summary'
 import type { Explaining } from './raise'
 
@@ -11,9 +12,11 @@ export function fieldName({ section, field }: Pick<FieldChange, 'section' | 'fie
   return section === 'move' || section === 'zone' ? `${section}.${field}` : field
 }
 
-/** Whether a plan has the field, and the value lies in its range; a plan with a range covers numbers only. */
-export function covers({ fields, min, max }: Pick<PlannedChangeRow, 'fields' | 'min' | 'max'>, change: FieldChange): boolean {
-  if (!fields.includes(fieldName(change))) return false
+/** Whether a plan has the field, and the value lies in the range of that field; a field with a range covers numbers only. */
+export function covers(plan: Pick<PlannedChangeRow, 'fields' | 'min' | 'max' | 'ranges'>, change: FieldChange): boolean {
+  const range = rangesOf(plan).find(({ field }) => field === fieldName(change))
+  if (range === undefined) return false
+  const { min, max } = range
   if (min === null && max === null) return true
   const value = typeof change.after === 'object' ? change.after.value : change.after
   return typeof value === 'number' && (min === null || value >= min) && (max === null || value <= max)

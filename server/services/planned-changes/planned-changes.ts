@@ -12,6 +12,7 @@ import type { VaultDb } from '#server/database/prepared'
 import { afterOf, limitOf, pageOf } from '../page'
 import { assertPlace } from '../places/bounds'
 import { kindOf } from '../rules/rule-fits'
+import { rangesOf } from './ranges'
 import { namedPerson, personIn, personName } from '../versions/summary'
 
 /** Announces a change before it is made: what it covers will be explained when it is seen. */
@@ -25,7 +26,8 @@ export function announceChange(vault: Vault, actor: PersonActor, body: z.output<
     if (untilAt <= fromAt) throw unfit('/until', 'time-order', 'The window ends before it begins.')
     if (untilAt <= write.now) throw unfit('/until', 'time-order', 'The window lies in the past: what was not announced before is explained at its finding.')
     const row = {
-      axisIds: [...new Set(body.axisIds)], fields: [...new Set(body.fields)], min: body.min ?? null, max: body.max ?? null, fromAt, untilAt,
+      axisIds: [...new Set(body.axisIds)], fields: [...new Set(body.fields)], min: body.min ?? null, max: body.max ?? null,
+      ranges: body.ranges === undefined || body.ranges.length === 0 ? null : body.ranges.map(({ field, min = null, max = null }) => ({ field, min, max })), fromAt, untilAt,
       reason: body.reason, allowedBy: body.allowedBy, madeAt: write.now, madeBy: actor.id,
     }
     const id = plannedChangeQueries(vault.db).insert(row)
@@ -34,13 +36,23 @@ export function announceChange(vault: Vault, actor: PersonActor, body: z.output<
   })
 }
 
-function assertFields({ fields, min, max }: z.output<typeof plannedChangeBody>): void {
-  for (const [place, field] of fields.entries()) {
-    const kind = kindOf(field)
-    if (kind === undefined) throw unfit(`/fields/${place}`, 'field', `${field} is no field of the settings format.`)
-    if (kind === 'other' && (min !== undefined || max !== undefined)) throw unfit(`/fields/${place}`, 'field', `${field} holds no number: announce it without a range.`)
+function assertFields({ fields, min, max, ranges = [] }: z.output<typeof plannedChangeBody>): void {
+  for (const [place, { field }] of ranges.entries()) {
+    if (!fields.includes(field)) throw unfit(`/ranges/${place}/field`, 'field', `${field} is not among the fields of this change.`)
+    if (ranges.findIndex(other => other.field === field) !== place) throw unfit(`/ranges/${place}/field`, 'field', `${field} has a range already.`)
   }
-  if (min !== undefined && max !== undefined && min > max) throw unfit('/min', 'range', `The lower end ${min} lies above the upper end ${max}.`)
+  for (const [place, field] of fields.entries()) {
+    const own = ranges.findIndex(range => range.field === field)
+    assertRange(field, ranges[own] ?? { min, max }, own === -1 ? ['/fields', `/fields/${place}`] : [`/ranges/${own}`, `/ranges/${own}/field`])
+  }
+}
+
+/** `at`: where the range stands, and where its field does. */
+function assertRange(field: string, { min, max }: { min?: number | undefined, max?: number | undefined }, [range, named]: readonly [string, string]): void {
+  const kind = kindOf(field)
+  if (kind === undefined) throw unfit(named, 'field', `${field} is no field of the settings format.`)
+  if (kind === 'other' && (min !== undefined || max !== undefined)) throw unfit(named, 'field', `${field} holds no number: announce it without a range.`)
+  if (min !== undefined && max !== undefined && min > max) throw unfit(range === '/fields' ? '/min' : `${range}/min`, 'range', `The lower end ${min} lies above the upper end ${max}.`)
 }
 
 function assertAllower(db: VaultDb, allowedBy: string): void {
@@ -80,7 +92,7 @@ function planRow(vault: Vault, actor: Actor, id: number): NamedPlan {
 function planOnWire(db: VaultDb, { plan, announcer, end }: NamedPlan): PlannedChange {
   const queries = plannedChangeQueries(db)
   return {
-    id: plan.id, axes: queries.axes.all({ ids: JSON.stringify(plan.axisIds) }), fields: plan.fields, min: plan.min, max: plan.max, from: plan.fromAt, until: plan.untilAt,
+    id: plan.id, axes: queries.axes.all({ ids: JSON.stringify(plan.axisIds) }), fields: plan.fields, min: plan.min, max: plan.max, ranges: rangesOf(plan), from: plan.fromAt, until: plan.untilAt,
     reason: plan.reason, allowedBy: namedPerson(db, plan.allowedBy) ?? plan.allowedBy, announcedAt: plan.madeAt, announcedBy: announcer,
     timeZone: judgingQueries(db).axis.get({ id: plan.axisIds[0] ?? 0 })?.site.timeZone ?? 'UTC',
     endedAt: end?.at ?? null, endedBy: end?.by ?? null, endReason: end?.reason ?? null,

@@ -2,6 +2,7 @@ import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import type { z } from 'zod'
 import type { plannedChangeBody } from '../../../../shared/api/findings'
 import { closeFinding, readFinding } from '../../../../server/services/findings/findings'
+import { rangeWords } from '../../../../server/services/planned-changes/ranges'
 import { announceChange, endPlannedChange, listPlannedChanges, readPlannedChange } from '../../../../server/services/planned-changes/planned-changes'
 import { codeOf } from '../../../support/codes'
 import { openFindingsPlant, type FindingsPlant } from '../../../support/findings-plant'
@@ -63,6 +64,23 @@ describe('an announced change', () => {
     expect(readFinding(plant.vault, 2).explanations).toHaveLength(2)
   })
 
+  it.each([
+    ['both in their own ranges', { thrustLimit: 55, speedLimit: 600 }, 'explained'],
+    ['one outside its own', { thrustLimit: 61, speedLimit: 600 }, 'open'],
+    ['the other outside its own', { thrustLimit: 55, speedLimit: 601 }, 'open'],
+    ['a value that would fit the other field', { thrustLimit: 38, speedLimit: 55 }, 'open'],
+  ])('of several fields holds each to its own range: %s', (_, setup, expected) => {
+    announce({ fields: ['thrustLimit', 'speedLimit'], min: undefined, max: undefined, ranges: [{ field: 'thrustLimit', min: 40, max: 60 }, { field: 'speedLimit', min: 550, max: 600 }] })
+    expect(state(setup)).toBe(expected)
+  })
+
+  it('of several fields keeps min and max for those without a range of their own, and tells each', () => {
+    const id = announce({ fields: ['thrustLimit', 'overloadLevel', 'move.label'], min: undefined, max: undefined, ranges: [{ field: 'thrustLimit', max: 60 }] })
+    expect(readPlannedChange(plant.vault, plant.ines, id).ranges).toEqual([{ field: 'thrustLimit', min: null, max: 60 }, { field: 'overloadLevel', min: null, max: null }, { field: 'move.label', min: null, max: null }])
+    expect(rangeWords({ fields: ['thrustLimit', 'move.speed', 'extra:K-017'], min: 5, max: null, ranges: [{ field: 'thrustLimit', min: 40, max: 60 }] }, 'rotary'))
+      .toEqual(['thrust limit, 40 to 60 %', 'move speed, at least 5 deg/s', 'extra:K-017, at least 5'])
+  })
+
   it('called off covers nothing any more', () => {
     const id = announce()
     expect(endPlannedChange(plant.vault, plant.runa, id, { reason: 'old lids after all' })).toMatchObject({ endedBy: 'Runa Haldersen', endReason: 'old lids after all' })
@@ -75,6 +93,10 @@ describe('an announced change', () => {
     ['a field that is none', { fields: ['thrustLimt'] }, 'input'],
     ['a range on words', { fields: ['homingMethod', 'move.label'] }, 'input'],
     ['a range upside down', { min: 60, max: 40 }, 'input'],
+    ['a range of a field that it does not have', { ranges: [{ field: 'speedLimit', max: 9 }] }, 'input'],
+    ['two ranges of one field', { ranges: [{ field: 'thrustLimit', max: 9 }, { field: 'thrustLimit', max: 8 }] }, 'input'],
+    ['a range of its own upside down', { ranges: [{ field: 'thrustLimit', min: 60, max: 40 }] }, 'input'],
+    ['a range of its own on words', { fields: ['homingMethod'], min: undefined, max: undefined, ranges: [{ field: 'homingMethod', max: 4 }] }, 'input'],
     ['a window upside down', { until: '2026-02-01T00:00:00Z' }, 'time-order'],
     ['a window that is over', { from: '2026-01-01T00:00:00Z', until: '2026-02-01T00:00:00Z' }, 'time-order'],
     ['someone who is not there', { allowedBy: 'person:99' }, 'input'],

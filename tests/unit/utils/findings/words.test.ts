@@ -42,10 +42,10 @@ describe('what somebody did', () => {
 
 describe('an announced change', () => {
   it.each([
-    [{ fields: ['thrustLimit'], min: 40, max: 60 }, 'force: thrust limit, 40 to 60 %'],
-    [{ fields: ['thrustLimit'], min: null, max: 60 }, 'force: thrust limit, at most 60 %'],
-    [{ fields: ['extra:K-017'], min: 3, max: null }, 'the drive’s own K-017, at least 3'],
-    [{ fields: ['move.speed', 'unknownField'], min: null, max: null }, 'each move: speed; unknownField, any value'],
+    [{ ranges: [{ field: 'thrustLimit', min: 40, max: 60 }] }, 'force: thrust limit, 40 to 60 %'],
+    [{ ranges: [{ field: 'thrustLimit', min: null, max: 60 }] }, 'force: thrust limit, at most 60 %'],
+    [{ ranges: [{ field: 'extra:K-017', min: 3, max: null }] }, 'the drive’s own K-017, at least 3'],
+    [{ ranges: [{ field: 'thrustLimit', min: 40, max: 60 }, { field: 'unknownField', min: null, max: null }] }, 'force: thrust limit, 40 to 60 %; unknownField, any value'],
   ])('%o: %s', (plan, words) => expect(plannedWords(plan)).toBe(words))
 
   it('holds within its window, unless it was called off', () => {

@@ -27,11 +27,18 @@ export const historyItem = z.object({
   findingId: idSchema.nullable(),
   number: z.int(), baseId: idSchema.nullable(), baseNumber: z.int().nullable(), baseAt: instantSchema.nullable().describe('when the version before was captured: the change was made after that'),
   seq: z.int().describe('place among the changes of its version'), timeZone: z.string(), serial: z.string(), occasion: z.enum(occasions), late: z.boolean(), void: z.boolean(),
+  newtons: z.object({ before: z.string().nullable(), after: z.string().nullable() }).nullable().describe('the force that a percentage means by the nameplate of then, 243.2 N; null where it is no force, or nobody knows'),
   /** Of the finding: where it stands, and what was said last. */
   findingState: z.enum(findingStates).nullable(), explanation: z.string().nullable(), explainedBy: z.string().nullable(),
 })
 export type HistoryItem = z.infer<typeof historyItem>
-export const historyPage = pageOf(historyItem)
+export const historyPage = pageOf(historyItem).extend({ rests: z.string().optional().describe('what the answer rests on; with form=json') })
+/** What an answer rests on: a change that nobody read is in none. */
+export const historyRests = z.object({
+  versions: z.int(), notRead: z.int().describe('axes that no file came from in the time, counted up to 200'), notReadMore: z.boolean(), tags: z.array(z.string()).describe('the first five of them'),
+  verified: z.object({ at: instantSchema, entries: z.int(), outcome: z.enum(['sound', 'damage', 'failed']) }).nullable(), size: z.int().describe('entries of the log now'), says: z.string().describe('all of it in one sentence'),
+})
+export type HistoryRests = z.infer<typeof historyRests>
 
 export const historyKinds = ['settings', 'places', 'nameplates', 'rules', 'people', 'marks'] as const
 export type HistoryKind = (typeof historyKinds)[number]

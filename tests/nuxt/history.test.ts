@@ -11,7 +11,7 @@ import { soon } from '../support/soon'
 const item: HistoryItem = {
   versionId: 15, axisId: 7, tag: 'LID-03.Z', section: 'setup', row: null, field: 'thrustLimit', before: 38, after: 55, unit: '%', delta: 17, points: 17, weight: 'harm',
   at: '2026-11-30T05:12:00.000Z', capturedAt: '2026-11-30T05:12:00.000Z', changedBy: null, storedBy: 'station 2 (Tobias Achterberg)', reason: null, workOrder: null, allowedBy: null, findingId: 31,
-  number: 15, baseId: 14, baseNumber: 14, baseAt: '2026-11-29T05:10:00.000Z', seq: 0, timeZone: 'Europe/Berlin', serial: 'A4471', occasion: 'routine', late: false, void: false, findingState: 'open', explanation: null, explainedBy: null,
+  number: 15, baseId: 14, baseNumber: 14, baseAt: '2026-11-29T05:10:00.000Z', seq: 0, timeZone: 'Europe/Berlin', serial: 'A4471', occasion: 'routine', late: false, void: false, newtons: { before: '243.2 N', after: '352 N' }, findingState: 'open', explanation: null, explainedBy: null,
 }
 const named: HistoryItem = { ...item, versionId: 12, number: 12, baseId: 11, baseNumber: 11, before: 36, after: 38, changedBy: 'Tobias Achterberg', allowedBy: 'Runa Haldersen', reason: 'New liner supplier', workOrder: 'WO-3301', findingId: null, findingState: null, capturedAt: '2026-05-14T11:10:00.000Z' }
 let items: HistoryItem[] = []
@@ -27,6 +27,7 @@ registerEndpoint('/api/history', (event) => {
   return { items: items.slice(from, from + 200), next: from + 200 < items.length ? String(from + 200) : null }
 })
 registerEndpoint('/api/history/acts', () => ({ items: [{ seq: 40, at: item.at, by: 'Runa Haldersen', act: 'site-changed', subject: 'Larkfield', note: null, changes: [{ field: 'fourEyes', before: true, after: false }, { field: 'watched', before: [], after: ['jogSpeed', 'extra:K-017'] }] }], next: null }))
+registerEndpoint('/api/history/rests', () => ({ versions: 15, notRead: 1, notReadMore: false, tags: ['JAR-01.X'], verified: null, size: 90, says: 'Rests on 15 versions; 1 axis was not read in that time: JAR-01.X; the log was not verified yet; the log has 90 entries.' }))
 registerEndpoint('/api/history/not-read', () => ({ items: [{ axisId: 9, tag: 'JAR-01.X', machine: 'Jar feed', line: 'Jar line 1', site: 'Larkfield', timeZone: 'Europe/Berlin', status: 'never-read', uploadEveryHours: 24, lastUploadAt: null }], next: null }))
 registerEndpoint('/api/lines', () => ({ items: [{ id: 2, name: 'Jar line 1' }], next: null }))
 registerEndpoint('/api/machines', () => ({ items: [{ id: 5, name: 'Lid press 2' }], next: null }))
@@ -49,11 +50,13 @@ describe('the history', () => {
     await reads(page, 'LID-03.Z: 2 changes.')
     expect(textOf(page)).toContain('1 by nobody named.')
     const [first, second] = page.findAll('table.history tbody tr').map(row => row.text().replace(/\s+/g, ' '))
-    expect(first).toMatch(/^30 Nov 2026 06:12 CET ?after 29 Nov 2026 06:10 CET.*thrust limit.*before 38 ?%, after 55 ?%.*Nobody named ?stored by station 2.*Nobody named.*no reason given.*finding 31, open.*v14 to v15$/)
+    expect(first).toMatch(/^30 Nov 2026 06:12 CET ?after 29 Nov 2026 06:10 CET.*thrust limit.*before 38 ?%, after 55 ?%.*243.2 N to 352 N.*Nobody named ?stored by station 2.*Nobody named.*no reason given.*finding 31, open.*v14 to v15$/)
     expect(second).toMatch(/Tobias Achterberg.*Runa Haldersen.*New liner supplier WO-3301.*v11 to v12$/)
     expect(asked[0]).toEqual({ field: 'thrustLimit', axis: 'tag:LID-03.Z', from: '2024-11-30T23:00:00.000Z', to: '2026-12-01T23:00:00.000Z', limit: '200' })
     await reads(page, 'Thrust limit was never set on this axis.')
-    const files = page.findAll('a.file').map(link => link.attributes('href'))
+    await reads(page, 'Rests on 15 versions; 1 axis was not read in that time: JAR-01.X')
+    const files = page.findAll('a.file[href^="/api/"]').map(link => link.attributes('href'))
+    expect(page.findAll('a.file').at(-1)?.attributes('href')).toBe('/reports?place=axis%3A7&from=2024-11-30T23%3A00%3A00.000Z&to=2026-12-01T23%3A00%3A00.000Z')
     expect(files.map(address => new URLSearchParams(address?.split('?')[1]).get('form'))).toEqual(['csv', 'json', 'pdf'])
     expect(files[2]).toContain('axis=tag%3ALID-03.Z')
     await page.get('input[type=datetime-local]').setValue('2026-06-01T08:00')

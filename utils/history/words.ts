@@ -8,6 +8,12 @@ export function itemWords({ section, field, row, unit }: Pick<HistoryItem, 'sect
   return { label: words.label, unit: unit ?? '', place: row === null ? section === 'extra' ? 'the drive’s own value' : section : `${section} ${row}` }
 }
 
+/** `243.2 N to 352 N`: what both percentages mean; only one where the other is not set, or nobody knows. */
+export function forceSides({ before, after }: NonNullable<HistoryItem['newtons']>): string {
+  if (before === null) return after === null ? '' : `now ${after}`
+  return after === null ? `before ${before}` : `${before} to ${after}`
+}
+
 /** A value of a term in one line: lists by commas, what is not set as such. */
 export function termWords(value: unknown): string {
   if (value === undefined || value === null) return 'not set'

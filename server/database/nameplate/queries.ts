@@ -16,6 +16,9 @@ export const nameplateRows = prepared((db) => {
     byId: db.select().from(nameplateRevision).where(eq(nameplateRevision.id, placeholder('id'))).prepare(),
     /** The newest revision of a model. */
     newest: named().where(eq(nameplateRevision.model, placeholder('model'))).orderBy(desc(nameplateRevision.revision)).limit(1).prepare(),
+    /** As it was at an instant; the first one where the model was registered later. */
+    at: db.select({ nameplate: nameplateRevision.nameplate }).from(nameplateRevision).where(eq(nameplateRevision.model, placeholder('model')))
+      .orderBy(sql`${nameplateRevision.madeAt} > ${placeholder('at')}`, sql`iif(${nameplateRevision.madeAt} > ${placeholder('at')}, ${nameplateRevision.revision}, -${nameplateRevision.revision})`).limit(1).prepare(),
     ofModel: named().where(eq(nameplateRevision.model, placeholder('model'))).orderBy(desc(nameplateRevision.revision)).prepare(),
     /** Axes whose current version was read from a unit of the model. */
     axes: db.select({ axisId: axisState.axisId }).from(axisState).innerJoin(version, eq(version.id, axisState.currentVersionId))

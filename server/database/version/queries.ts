@@ -56,6 +56,7 @@ export const versionQueries = prepared((db) => {
   const standing = () => db.select(getTableColumns(version)).from(version).leftJoin(versionVoid, eq(versionVoid.versionId, version.id))
   const newestFirst = [desc(version.orderAt), desc(version.number)] as const
   return {
+    modelOf: db.select({ model: version.model }).from(version).where(eq(version.id, place('id'))).prepare(),
     byId: db.select().from(version).where(eq(version.id, place('id'))).prepare(),
     byNumber: db.select({ id: version.id }).from(version).where(and(eq(version.axisId, place('axisId')), eq(version.number, place('number')))).prepare(),
     summary: summarySelect(db).where(eq(version.id, place('id'))).prepare(),

@@ -7,7 +7,7 @@ import type { FileHead } from './file'
 const columns: readonly (readonly [string, (item: HistoryItem) => string | number | boolean | null])[] = [
   ['received at', item => item.at], ['captured at', item => item.capturedAt], ['version before captured at', item => item.baseAt], ['time zone', item => item.timeZone],
   ['axis', item => item.tag], ['unit serial', item => item.serial], ['section', item => item.section], ['row', item => item.row], ['field', item => item.field],
-  ['before', item => plain(item.before)], ['after', item => plain(item.after)], ['unit', item => item.unit ?? ownUnit(item)], ['difference', item => item.delta], ['points', item => item.points],
+  ['before', item => plain(item.before)], ['after', item => plain(item.after)], ['unit', item => item.unit ?? ownUnit(item)], ['force before', item => item.newtons?.before ?? null], ['force after', item => item.newtons?.after ?? null], ['difference', item => item.delta], ['points', item => item.points],
   ['weight', item => item.weight], ['changed by', item => item.changedBy], ['stored by', item => item.storedBy], ['reason', item => item.reason], ['work order', item => item.workOrder],
   ['allowed by', item => item.allowedBy], ['finding', item => item.findingId], ['finding state', item => item.findingState], ['explanation', item => item.explanation], ['explained by', item => item.explainedBy],
   ['version before', item => item.baseNumber], ['version', item => item.number], ['version id', item => item.versionId], ['occasion', item => item.occasion], ['late', item => item.late], ['void', item => item.void],
@@ -26,7 +26,7 @@ const lines = (rows: readonly (readonly (string | number | boolean | null)[])[])
  * The whole result as CSV (RFC 4180, UTF-8 with its mark, so that spreadsheets read the letters), chunk by chunk. Behind the last
  * change stand an empty line, the question, the count of lines and the checkpoint: a file without them was cut off.
  */
-export function* historyCsv(pages: Iterable<readonly HistoryItem[]>, { question, zone, madeAt, checkpoint }: FileHead): Generator<Buffer> {
+export function* historyCsv(pages: Iterable<readonly HistoryItem[]>, { question, zone, madeAt, rests, checkpoint }: FileHead): Generator<Buffer> {
   yield Buffer.from(`\uFEFF${lines([columns.map(([name]) => name)])}`, 'utf8')
   let count = 0
   for (const items of pages) {
@@ -34,5 +34,5 @@ export function* historyCsv(pages: Iterable<readonly HistoryItem[]>, { question,
     count += items.length
     yield Buffer.from(lines(items.map(item => columns.map(([, of]) => of(item)))), 'utf8')
   }
-  yield Buffer.from(`\r\n${lines([['# question', question], ['# lines', count], ['# zone of the question', zone], ['# made at', madeAt], ['# checkpoint of the log', checkpoint]])}`, 'utf8')
+  yield Buffer.from(`\r\n${lines([['# question', question], ['# lines', count], ['# zone of the question', zone], ['# made at', madeAt], ['# rests on', rests], ['# checkpoint of the log', checkpoint]])}`, 'utf8')
 }

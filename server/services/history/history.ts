@@ -1,11 +1,14 @@
 import type { HistoryItem, HistoryQuery } from '#shared/api/history'
 import { Refusal } from '#shared/errors/refusal'
 import type { Actor } from '#server/database/actor'
+import { axisRows } from '#server/database/axis/queries'
 import type { Vault } from '#server/database/client'
 import { readFindings, readItems, type ItemRow } from '#server/database/history/items'
 import type { ChangeKey } from '#server/database/history/keys'
 import type { Stretch } from '#server/database/history/walk'
 import type { VaultDb } from '#server/database/prepared'
+import { versionQueries } from '#server/database/version/queries'
+import { newtonsOf, type ReadBoth } from '../forces/newtons'
 import { limitOf } from '../page'
 import { namedPerson } from '../versions/summary'
 import { historyFilter, type HistoryFilter } from './filter'
@@ -57,6 +60,7 @@ function itemsOf({ sqlite, db }: Pick<Vault, 'sqlite' | 'db'>, keys: readonly Ch
       reason: row.reason, workOrder: row.workOrder, allowedBy: named(row.allowedBy) ?? said.allowedBy, findingId: row.findingId,
       number: row.number, baseId: row.baseId, baseNumber: row.baseNumber, baseAt: row.baseAt, seq: row.seq,
       timeZone: row.timeZone, serial: row.serial, occasion: row.occasion, late: row.late, void: row.voidAt !== null,
+      newtons: newtonsOf(db, row, () => readBoth(db, row)),
       findingState: said.state, explanation: said.explanation, explainedBy: said.explainedBy,
     }
   })
@@ -71,6 +75,12 @@ function namesOf(db: VaultDb): (text: string | null) => string | null {
     names.set(text, known)
     return known
   }
+}
+
+/** Of which models both sides of a change were read; their nameplates are those of when the version came in. */
+function readBoth(db: VaultDb, { versionId, axisId, baseId, receivedAt }: ItemRow): ReadBoth {
+  const read = (id: number) => ({ model: versionQueries(db).modelOf.get({ id })?.model ?? '', at: receivedAt })
+  return { axisKind: axisRows(db).byId.get({ id: axisId })?.axisKind ?? 'linear', before: baseId === null ? null : read(baseId), after: read(versionId) }
 }
 
 type FindingWords = Pick<HistoryItem, 'explanation' | 'explainedBy' | 'allowedBy'> & { readonly state: HistoryItem['findingState'] }

@@ -3,7 +3,7 @@ import type { HistoryItem } from '#shared/api/history'
 import { formatExact } from '#shared/units/exact-time'
 import { millimetres as mm, Paper, type TextStyle } from '../paper/paper'
 import type { FileHead } from './file'
-import { changerText, marksText, placeText, valueText, whyText } from './words'
+import { changerText, marksText, placeText, sideText, whyText } from './words'
 
 /*
  * The history for the binder, A4 across. It is laid out twice: first to count the lines of each page, so that "page x of y" is
@@ -25,8 +25,8 @@ const columns: readonly { readonly head: string, readonly width: number, readonl
   { head: 'Captured, received by the vault', width: mm(40), style: { face: 'mono', size: 6.5 }, of: item => `${timeText(item.capturedAt, item.timeZone)}, ${timeText(item.at, item.timeZone)}` },
   { head: 'Axis', width: mm(22), style: { face: 'mono', size }, of: item => item.tag },
   { head: 'Value', width: mm(34), of: item => `${placeText(item)} (${item.weight})` },
-  { head: 'Before', width: mm(24), style: { face: 'mono', size }, of: item => valueText(item.before, item.unit) || 'not set' },
-  { head: 'After', width: mm(24), style: { face: 'mono-bold', size }, of: item => valueText(item.after, item.unit) || 'not set' },
+  { head: 'Before', width: mm(24), style: { face: 'mono', size }, of: item => sideText(item, 'before') },
+  { head: 'After', width: mm(24), style: { face: 'mono-bold', size }, of: item => sideText(item, 'after') },
   { head: 'Changed by, stored by', width: mm(36), of: item => `${changerText(item)}, ${item.storedBy}` },
   { head: 'Allowed by', width: mm(24), of: item => item.allowedBy ?? 'Nobody named' },
   { head: 'Why', width: mm(47), of: item => whyText(item) },
@@ -86,7 +86,7 @@ function* lineFeed(paper: Paper, pages: Iterable<readonly HistoryItem[]>): Gener
 const linesOf = (paper: Paper, item: HistoryItem): Line => columns.map(({ width, style = { size }, of }) => paper.lines(of(item), width - gap, style))
 const heightOf = (line: Line) => Math.max(...line.map(column => column.length)) * step + mm(2.2)
 
-function drawHead(paper: Paper, { plant, question, zone, checkpoint, madeAt }: FileHead, lines: number | null): number {
+function drawHead(paper: Paper, { plant, question, zone, rests, checkpoint, madeAt }: FileHead, lines: number | null): number {
   let y = mm(14)
   paper.text(`History${plant === '' ? '' : `, ${plant}`}`, left, y, { face: 'sans-bold', size: 13 })
   const write = (text: string, style: TextStyle) => {
@@ -95,6 +95,7 @@ function drawHead(paper: Paper, { plant, question, zone, checkpoint, madeAt }: F
   write(question, { size: 9 })
   if (lines !== null) {
     write(`${lines} ${lines === 1 ? 'change' : 'changes'}, newest first by the vault’s own order. Made ${formatExact(madeAt, zone)}. Each line is told in the zone of its site.`, { size })
+    write(rests, { size })
     write(`Checkpoint of the log: ${checkpoint.trim().split('\n').filter(Boolean).join(' | ')}`, { face: 'mono', size: 6.5 })
   }
   y += mm(6)

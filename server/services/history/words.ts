@@ -9,6 +9,13 @@ export function valueText(value: ExtraValue | null, unit: string | null): string
   return unit === null ? String(value) : `${String(value)} ${unit}`
 }
 
+/** One side of a change, and beside it the force that a percentage means. */
+export function sideText({ unit, newtons, ...change }: Pick<HistoryItem, 'before' | 'after' | 'unit' | 'newtons'>, side: 'before' | 'after'): string {
+  const value = change[side]
+  const force = newtons?.[side] ?? null
+  return value === null ? 'not set' : `${valueText(value, unit)}${force === null ? '' : ` (${force})`}`
+}
+
 export const placeText = ({ section, row, field }: HistoryItem): string => spokenPlace({ section, field, ...(row === null ? {} : { row }) })
 
 /** Why, by whoever said it: the reason of the version, its work order, what was said of the finding. */

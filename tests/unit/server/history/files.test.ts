@@ -61,6 +61,7 @@ describe('the history as CSV', () => {
     expect(told.get('# question')).toMatch(/^Who changed any limit on every axis since the first version until now\?$/)
     expect(told.get('# checkpoint of the log')).toBe(checkpointNow(plant.vault).note)
     expect(told.get('# zone of the question')).toBe('Europe/Berlin')
+    expect(told.get('# rests on')).toMatch(/^Rests on 260 versions; every axis was read in that time; the log was not verified yet; the log has \d+ entries\.$/)
   })
 
   it('writes no cell that a spreadsheet takes for a formula, and loses nothing by it', async () => {
@@ -90,6 +91,7 @@ describe('the history as PDF', () => {
     for (const [index, page] of pages.entries()) expect(page).toContain(`page ${index + 1} of ${pages.length}`)
     expect(pages[0]).toMatch(/Who changed anything on LID-02\.Z from Sun 1 Mar 2026 07:00:00 CET \(UTC\+1\) until now\?/)
     expect(pages[0]).toContain(`${items.length} changes, newest first`)
+    expect(pages[0]).toContain('Rests on 140 versions; every axis was read in that time')
     expect(pages[0]!.replaceAll(/\s+/g, '')).toContain(checkpointNow(plant.vault).note.trim().split('\n').filter(Boolean).join('|').replaceAll(/\s+/g, ''))
     const text = pages.join('\n')
     expect(text.match(/LID-02\.Z/g)!.length).toBeGreaterThanOrEqual(items.length)

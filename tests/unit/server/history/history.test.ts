@@ -2,9 +2,12 @@ import fc from 'fast-check'
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import { historyPage, type HistoryItem, type HistoryQuery } from '../../../../shared/api/history'
 import type { PersonActor } from '../../../../server/database/actor'
+import { inserter } from '../../../../server/database/inserter'
+import { nameplateRevision } from '../../../../server/database/schema'
 import { explainFinding } from '../../../../server/services/findings/findings'
 import { historyFilter } from '../../../../server/services/history/filter'
 import { listHistory, wholeHistory } from '../../../../server/services/history/history'
+import { restsOn } from '../../../../server/services/history/rests'
 import { storeUpload } from '../../../../server/services/uploads/store-upload'
 import { voidVersion } from '../../../../server/services/versions/void-version'
 import { day, iso, openPlant, settingsFile, start, type FileParts, type Plant } from '../../../support/vault-plant'
@@ -70,6 +73,33 @@ describe('history', () => {
     expect(told(page.items)).toEqual(['LID-02.Z v3 thrustLimit 55→38', 'LID-02.Z v2 thrustLimit 38→55'])
     expect(page.items[0]).toMatchObject({ changedBy: 'Tobias Achterberg', allowedBy: 'Marit Lund', reason: 'lids stood proud', workOrder: 'WO-1', unit: '%', points: -17, baseNumber: 2, timeZone: 'Europe/Berlin', findingState: 'explained', serial: 'SN-0001' })
     expect(page.items[1]).toMatchObject({ changedBy: null, allowedBy: null, reason: null, storedBy: 'Tobias Achterberg', findingState: 'open', explanation: null, baseAt: iso(start + day) })
+  })
+
+  it('says in newtons what a percentage meant, by the nameplate of the unit as it was then', () => {
+    plant.nameplate({ model: 'HL40-200V', axisKind: 'linear', stroke: 200, forceBase: 'rated-thrust', ratedThrust: 640 })
+    story()
+    expect(list({ axis: 'tag:LID-02.Z', field: 'force-limits' }).items.map(({ row, newtons }) => [row, newtons])).toEqual([
+      [5, { before: '192 N', after: '224 N' }], [null, { before: '352 N', after: '243.2 N' }], [null, { before: '243.2 N', after: '352 N' }],
+    ])
+    expect(list({ axis: 'tag:LID-02.Z', field: 'speedLimit' }).items[0]?.newtons).toBeNull()
+    plant.now += day
+    inserter(plant.vault.db, nameplateRevision)({ model: 'HL40-200V', revision: 2, nameplate: { model: 'HL40-200V', axisKind: 'linear', stroke: 200, forceBase: 'rated-thrust', ratedThrust: 700 }, madeAt: iso(plant.now), madeBy: runa.id })
+    expect(list({ axis: 'tag:LID-02.Z', field: 'thrustLimit' }).items.at(-1)?.newtons).toEqual({ before: '243.2 N', after: '352 N' })
+    store({ setup: { thrustLimit: 40, speedLimit: 400 }, moves: [press(60, 35)], extra: { 'K-017': 5 } })
+    expect(list({ axis: 'tag:LID-02.Z', field: 'thrustLimit' }).items[0]?.newtons).toEqual({ before: '266 N', after: '280 N' })
+  })
+
+  it('says what an answer rests on: versions, axes that nobody read meanwhile, the log', () => {
+    story()
+    const rests = (query: Parameters<typeof restsOn>[2] = {}, as = ines) => restsOn(plant.vault, as, query, 'Europe/Berlin')
+    expect(rests()).toMatchObject({ versions: 5, notRead: 0, notReadMore: false, verified: null })
+    expect(rests({ axis: 'tag:LID-02.Z' })).toMatchObject({ versions: 3, notRead: 0 })
+    expect(rests({ site: farSite })).toMatchObject({ versions: 2 })
+    expect(rests({}, plant.person('Bound', ['auditor'], [farSite]))).toMatchObject({ versions: 2, notRead: 0 })
+    const first = { from: iso(start + day), to: iso(start + day + 1) }
+    expect(rests(first)).toMatchObject({ versions: 1, notRead: 1, tags: ['JAR-01.X'] })
+    expect(rests(first).says).toMatch(/^Rests on 1 version; 1 axis was not read in that time: JAR-01\.X; the log was not verified yet; the log has \d+ entries\.$/)
+    expect(rests({ from: iso(start + 90 * day) })).toMatchObject({ versions: 0, notRead: 2 })
   })
 
   it('names the finding of a change, with what was said of it', () => {

@@ -14,6 +14,12 @@ export const addressOf = {
     const field = of.section === 'setup' || of.section === 'file' ? of.field : of.section === 'extra' ? `extra:${of.field}` : `${of.section}.${of.field}`
     return `/history?${new URLSearchParams({ field, ...(of.axis !== undefined && { axis: of.axis }), ...(typeof of.row === 'number' && { row: String(of.row) }) }).toString()}`
   },
+  /** With a place: the form stands open for it; `from` and `to` are instants. */
+  reports: (of?: { readonly scope?: string, readonly scopeId?: number, readonly from?: string, readonly to?: string }) => {
+    if (of === undefined) return '/reports'
+    const { scope, scopeId, from, to } = of
+    return `/reports?${new URLSearchParams({ place: scope === undefined ? '' : `${scope}:${scopeId ?? ''}`, ...(from !== undefined && { from }), ...(to !== undefined && { to }) }).toString()}`
+  },
   findings: () => '/findings',
   finding: (id: number) => `/findings/${id}`,
   planned: () => '/planned',

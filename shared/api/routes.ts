@@ -11,6 +11,7 @@ import * as labels from './labels'
 import * as lineFolders from './line-folders'
 import * as people from './people'
 import * as places from './places'
+import * as reports from './reports'
 import * as swaps from './swaps'
 import * as trail from './trail'
 import * as uploads from './uploads'
@@ -47,6 +48,7 @@ const all = [...roles] as const
 const uploaders = ['technician', 'planner'] as const
 const planner = ['planner'] as const
 const admin = ['admin'] as const
+const binders = ['planner', 'auditor'] as const
 const trailReaders = ['planner', 'auditor', 'admin'] as const
 const none = z.object({})
 
@@ -176,7 +178,13 @@ export const routes = {
 
   'GET /api/history': { may: all, token: 'read', query: history.historyQuery, answers: { 200: history.historyPage }, says: 'Who changed what, when, from what to what, why and allowed by whom, newest first; as CSV or PDF the whole result, for planners and auditors.' },
   'GET /api/history/acts': { may: ['planner', 'auditor', 'admin'], token: 'read', query: history.actsQuery, answers: { 200: history.actsPage }, says: 'Who changed sites and what they watch, nameplates, rules, roles and marks, newest first.' },
+  'GET /api/history/rests': { may: all, token: 'read', query: history.notReadQuery, answers: { 200: history.historyRests }, says: 'What an answer of the history rests on: versions, axes not read, how far the log was verified.' },
   'GET /api/history/not-read': { may: all, token: 'read', query: history.notReadQuery, answers: { 200: history.notReadPage }, says: 'Axes that no file came from in a stretch of time.' },
+
+  'GET /api/reports': { may: binders, token: 'read', query: reports.reportQuery, answers: { 200: pageOf(reports.reportSchema) }, says: 'Audit reports that were asked for, newest first.' },
+  'POST /api/reports': { may: binders, body: reports.reportBody, answers: { 201: created }, says: 'Asks for the audit report of a place and a time; logged, with the checkpoint that it will bear.' },
+  'GET /api/reports/:id': { may: binders, token: 'read', params: idParams, answers: { 200: reports.reportSchema }, says: 'One of them, and how far its file has come while it is made.' },
+  'GET /api/reports/:id/file': { may: binders, token: 'read', params: idParams, query: reports.reportFileQuery, answers: { 200: 'file' }, says: 'The report as PDF or JSON, whole, of what the vault held when it was asked for.' },
 
   'GET /api/board': { may: all, token: 'read', answers: { 200: board.boardAnswer }, says: 'Every axis with its state, and what needs someone.' },
   'GET /api/log': { may: trailReaders, token: 'read', query: listQuery, answers: { 200: pageOf(board.logEntrySchema) }, says: 'The log, entry by entry; only without site bounds.' },

@@ -63,6 +63,7 @@ export const acts = {
   'firmware-gap-accepted': 'firmware-gap',
   'checkpoint-taken': 'checkpoint',
   'vault-verified': 'verification',
+  'report-asked': 'report',
 } as const
 
 export type Act = keyof typeof acts

@@ -2,7 +2,8 @@ import type { Browser, Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { desk, openWindow, phone, picture, sidewaysScroll, signIn, startBrowser, violations } from '../support/browser'
 import { serveDemo, type DemoPlant } from '../support/demo-plant'
-import { field, pick } from '../support/walk'
+import { pdfText } from '../support/paper'
+import { downloaded, field, pick } from '../support/walk'
 
 /* The story of the demo plant: a thrust limit raised on a night shift without a word. */
 
@@ -84,7 +85,7 @@ describe('the night shift’s change', () => {
     expect(await planner.getByRole('button', { name: 'Close it' }).count()).toBe(0)
   })
 
-  it('is closed by the auditor, signed, and stays readable; reopening keeps all that was said', async () => {
+  it('is closed by the auditor, signed, and stays readable', async () => {
     const page = await as('auditor')
     await page.goto('/findings')
     await page.getByRole('link', { name: title }).click()
@@ -99,6 +100,27 @@ describe('the night shift’s change', () => {
     await dialog.getByRole('button', { name: 'Sign and close' }).click()
     await page.getByText(/closed it as accepted, allowed by Runa Haldersen, by phone/).waitFor()
     expect(await clean(page, 'finding-closed')).toEqual([])
+  })
+
+  it('is printed for the binder: the axis’ audit report has the change, the words, and the signature', async () => {
+    const page = await as('auditor')
+    await page.goto('/axes/LID-03.Z')
+    await page.getByRole('link', { name: 'Audit report' }).click()
+    const form = page.getByRole('form', { name: 'Ask for an audit report' })
+    await form.getByRole('button', { name: 'Make the report' }).waitFor()
+    expect(await clean(page, 'reports')).toEqual([])
+    const { name, bytes } = await downloaded(page, () => form.getByRole('button', { name: 'Make the report' }).click())
+    expect(name).toBe('audit-report-1.pdf')
+    const text = pdfText(bytes)
+    for (const words of [/thrust limit +38 % \(243\.2 N\) +55 % \(352 N\)/, /Lids sat askew after midnight/, /closed as accepted, allowed by Runa Haldersen/, /Ines Vollrath +\d+ \w+ \d{4} [\d:]+ CES?T/, /page 1 of \d+/]) expect(text).toMatch(words)
+    await page.getByRole('row').filter({ hasText: 'LID-03.Z' }).getByText(/^Ines Vollrath, /).waitFor()
+  })
+
+  it('reopened keeps all that was said', async () => {
+    const page = await as('auditor')
+    await page.goto('/findings')
+    await page.getByRole('button', { name: 'Show what was closed' }).click()
+    await page.getByRole('link', { name: title }).click()
     await page.getByRole('button', { name: 'Reopen it' }).click()
     const form = page.getByRole('form', { name: 'Reopen the finding' })
     await field(form, 'Why it is not settled').fill('Runa was not asked')
@@ -125,14 +147,17 @@ describe('a planned change', () => {
     await page.getByRole('button', { name: 'Announce a change' }).click()
     const form = page.getByRole('form', { name: 'Announce a change' })
     await field(form, 'Axes').fill('LID-02.Z, lid-04.z')
-    await pick(form, /^Field/, 'thrust limit', /\(thrustLimit\)/)
+    await pick(form, /^Field \(needed\)/, 'thrust limit', /\(thrustLimit\)/)
     await field(form, 'At least').fill('40')
     await field(form, 'At most').fill('48')
+    await form.getByRole('button', { name: 'Another field with it' }).click()
+    await pick(form, /^Field 2/, 'jog speed', /\(jogSpeed\)/)
+    await field(form, 'At most of field 2').fill('20')
     await field(form, 'Why').fill('thicker lids from Monday on')
     await field(form, 'Allowed by').fill('Marit Lund')
     await form.getByRole('button', { name: 'Announce it' }).click()
     const row = page.getByRole('row').filter({ hasText: 'thicker lids from Monday on' })
-    await row.getByText('40 to 48 %').waitFor()
+    await row.getByText(/thrust limit, 40 to 48 %; .*jog speed, at most 20 mm\/s/).waitFor()
     expect(await row.getByRole('link').allInnerTexts()).toEqual(['LID-02.Z', 'LID-04.Z'])
     expect(await clean(page, 'planned')).toEqual([])
     await row.getByRole('button', { name: /^call planned change \d+ off$/ }).click()

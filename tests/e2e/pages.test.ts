@@ -55,6 +55,7 @@ const visits: readonly Visit[] = [
   { file: 'pages/findings/index.vue', address: () => '/findings', ready: /findings? to be explained/ },
   { file: 'pages/findings/[id].vue', address: async () => `/findings/${await idOf('/api/findings?axis=tag:LID-03.Z', item => item.cause === 'watched-change')}`, ready: /^LID-03\.Z thrust limit 38 → 55 %/ },
   { file: 'pages/history.vue', address: () => '/history?field=thrustLimit&axis=LID-03.Z', ready: /^LID-03\.Z: \d+ changes?\./ },
+  { file: 'pages/reports.vue', address: async () => `/reports?place=machine:${await idOf('/api/machines', item => item.name === 'LID-02')}`, ready: /Audit reports/ },
   { file: 'pages/planned.vue', address: () => '/planned', ready: /announced/ },
   { file: 'pages/trail.vue', address: () => '/trail', ready: /\d+ entries, found sound/ },
   { file: 'pages/letters.vue', address: () => '/letters', ready: /letters? waits?|No letter waits/, as: 'admin' },

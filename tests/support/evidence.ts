@@ -31,7 +31,7 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     INSERT INTO label_print VALUES (1, ${axisId}, 'LID-02.Z', '50x25', '${at}', ${by});
     INSERT INTO finding VALUES (1, NULL, 'stop-check', 'k', 'LID-02.Z', 'harm', '${at}');
     INSERT INTO finding_version VALUES (1, 1, ${axisId}, 1, NULL, 's', '[]', '${at}');
-    INSERT INTO planned_change VALUES (1, '[1]', '[]', NULL, NULL, '${at}', '2026-03-04T06:10:00.000Z', 'new lids', 'Marit', '${at}', ${by});
+    INSERT INTO planned_change VALUES (1, '[1]', '[]', NULL, NULL, '${at}', '2026-03-04T06:10:00.000Z', 'new lids', 'Marit', '${at}', ${by}, NULL);
     INSERT INTO planned_change_end VALUES (1, '${at}', ${by}, 'old lids after all');
     INSERT INTO finding_act (id, finding_id, kind, at, by_person, text) VALUES (1, 1, 'explained', '${at}', ${by}, 'new lids');
     INSERT INTO swap VALUES (1, 1, ${axisId}, 'unit', 'dead', NULL, 'unit-in', ${unitId}, NULL, 0, NULL, 1, 1, '{}', '${at}', ${by}, '${at}', NULL);
@@ -39,6 +39,7 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     INSERT INTO read_back VALUES (1, 1, 1, 1, 1, '${hash('e')}', NULL, 'serial', 'd', NULL, NULL, NULL, 0, '${at}', ${by});
     INSERT INTO firmware_gap VALUES (1, 'HL40-200V', '2.4', 'jerk', 1, '${at}', ${by}, NULL, 'r');
     INSERT INTO log_node VALUES (8, 0, zeroblob(32));
+    INSERT INTO report VALUES (1, 'axis', ${axisId}, NULL, NULL, NULL, 'A4', '${at}', ${by}, 7, 'n');
     INSERT INTO checkpoint VALUES (1, 0, 'note', '${at}');
     INSERT INTO verification VALUES (1, '${at}', '${at}', 'sound', 0, 0, '[]', 0);`)
   return {
@@ -52,6 +53,6 @@ export function oneOfEach(vault: Vault): Record<string, { where: string, column:
     finding: { where: 'id = 1', column: 'title' }, finding_version: { where: 'id = 1', column: 'says' }, finding_act: { where: 'id = 1', column: 'text' },
     planned_change: { where: 'id = 1', column: 'reason' }, planned_change_end: { where: 'planned_change_id = 1', column: 'reason' },
     swap_step: { where: 'id = 1', column: 'text' }, read_back: { where: 'id = 1', column: 'detail' }, firmware_gap: { where: 'id = 1', column: 'reason' },
-    log_node: { where: 'level = 8', column: 'place' }, checkpoint: { where: 'id = 1', column: 'note' }, verification: { where: 'id = 1', column: 'faults' },
+    log_node: { where: 'level = 8', column: 'place' }, checkpoint: { where: 'id = 1', column: 'note' }, verification: { where: 'id = 1', column: 'faults' }, report: { where: 'id = 1', column: 'size' },
   }
 }

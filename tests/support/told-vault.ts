@@ -12,6 +12,7 @@ import { changeAxis, registerAxis } from '../../server/services/places/axes'
 import { registerLine } from '../../server/services/places/lines'
 import { registerMachine } from '../../server/services/places/machines'
 import { changeSite, registerSite } from '../../server/services/places/sites'
+import { askReport } from '../../server/services/reports/reports'
 import { endRule, makeRule } from '../../server/services/rules/rules'
 import { recordTrailKey } from '../../server/services/trail/key'
 import { verifyAndKeep } from '../../server/services/trail/verification'
@@ -82,6 +83,7 @@ export async function tellAll(vault: Vault, wait: (milliseconds: number) => void
   endFitting(vault, planner, fittingId, { at: vault.now(), unitState: 'failed' })
   openFitting(vault, planner, { axisId, unitId: second, at: vault.now() })
   endRule(vault, planner, rule.id, { reason: 'new lids' })
+  askReport(vault, planner, { scope: 'axis', scopeId: axisId })
   await verifyAndKeep(vault)
   return { admin, planner, axisId }
 }

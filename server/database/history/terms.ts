@@ -14,7 +14,7 @@ export type TermKind = (typeof termKinds)[number]
 const kindOf = sql.raw(`json_extract(leaf, '$.subject.kind')`)
 const idOf = sql.raw(`json_extract(leaf, '$.subject.id')`)
 /** Word for word the condition of the index: without it a bound value would not be known to meet it. */
-const isTerm = sql`${kindOf} IN (${sql.raw(termKinds.map(kind => `'${kind}'`).join(', '))})`
+export const isTerm = sql`${kindOf} IN (${sql.raw(termKinds.map(kind => `'${kind}'`).join(', '))})`
 
 /** Entries of the log about terms, newest first, and what stood before each. */
 export const termQueries = prepared(db => ({

@@ -8,6 +8,7 @@ import { swapsStep } from './0007-swaps'
 import { trailStep } from './0008-trail'
 import { historyStep } from './0009-history'
 import { spareFitStep } from './0010-spare-fit'
+import { reportsStep } from './0011-reports'
 
 export interface Migration { readonly number: number, readonly name: string, readonly sql: string }
 
@@ -22,6 +23,7 @@ const steps: readonly Omit<Migration, 'number'>[] = [
   trailStep,
   historyStep,
   spareFitStep,
+  reportsStep,
 ]
 
 /** In order, numbered without gaps from 1. Text, not files, so that they reach the built server and the tests alike. */

@@ -117,6 +117,7 @@ export const subjects: Readonly<Record<SubjectKind, SubjectTable | null>> = {
   'firmware-gap': { table: schema.firmwareGap, key: 'id' },
   'checkpoint': { table: schema.checkpoint, key: 'id' },
   'verification': { table: schema.verification, key: 'id' },
+  'report': { table: schema.report, key: 'id' },
 }
 
 const queries = prepared(db => ({

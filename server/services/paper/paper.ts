@@ -34,6 +34,7 @@ export class Paper {
   readonly height: number
   private readonly document: PDFKit.PDFDocument
   private readonly fonts = new Map<string, Font>()
+  private readonly signs: Readonly<Record<Face, Map<string, readonly Piece[]>>> = { 'sans': new Map(), 'sans-bold': new Map(), 'mono': new Map(), 'mono-bold': new Map() }
   private readonly chunks: Buffer[] = []
   private pages = 0
 
@@ -178,20 +179,31 @@ export class Paper {
   /** Cuts a text where the font changes; widths are in units of the size. */
   private pieces(text: string, face: Face): Piece[] {
     const pieces: { text: string, name: string, width: number }[] = []
-    for (const shown of Array.from(text, sign => instead[sign] ?? sign).join('')) {
-      const found = this.fontOf(shown, face)
-      for (const [each, name] of found === undefined ? [...codePoint(shown)].map(one => [one, this.nameOf(face, 'latin')] as const) : [[shown, found] as const]) {
+    for (const sign of text) {
+      for (const each of this.signOf(sign, face)) {
         const last = pieces.at(-1)
-        const width = this.advance(name, each)
-        if (last?.name === name) {
-          last.text += each
-          last.width += width
+        if (last?.name === each.name) {
+          last.text += each.text
+          last.width += each.width
         }
         else {
-          pieces.push({ text: each, name, width })
+          pieces.push({ ...each })
         }
       }
     }
+    return pieces
+  }
+
+  /** What stands for a sign: looked up once a face, since a page has some thousands of them. */
+  private signOf(sign: string, face: Face): readonly Piece[] {
+    const known = this.signs[face].get(sign)
+    if (known !== undefined) return known
+    const pieces = [...instead[sign] ?? sign].flatMap((shown) => {
+      const found = this.fontOf(shown, face)
+      const parts = found === undefined ? [...codePoint(shown)].map(one => [one, this.nameOf(face, 'latin')] as const) : [[shown, found] as const]
+      return parts.map(([text, name]) => ({ text, name, width: this.advance(name, text) }))
+    })
+    this.signs[face].set(sign, pieces)
     return pieces
   }
 

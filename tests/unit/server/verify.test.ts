@@ -52,8 +52,20 @@ describe('a vault that nobody touched', () => {
       kinds.push(...sqlite.prepare(`SELECT DISTINCT json_extract(leaf, '$.subject.kind') FROM log`).pluck().all() as string[])
       return 'looked'
     })
-    expect(kinds).toHaveLength(27)
+    expect(kinds).toHaveLength(28)
   })
+})
+
+it('a first judgement that is given other rules than it was judged by is found, whichever version it is of', async () => {
+  for (const id of [1, 2, 3]) {
+    for (const rules of ['1', '2', '99', 'x', '']) {
+      const { verified } = await after((sqlite) => {
+        sqlite.prepare('UPDATE check_set SET rule_set = ? WHERE id = ?').run(rules, id)
+        return `rules ${rules}`
+      })
+      expect(verified.found, `${id} ${rules}`).toMatchObject([{ record: `version ${id}`, fault: expect.stringContaining('the version was judged by rules') as string }])
+    }
+  }
 })
 
 describe('plain SQL on a stopped vault', () => {

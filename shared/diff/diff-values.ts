@@ -1,7 +1,7 @@
 import { setupFieldNames } from '../settings/fields'
 import { zoneFieldNames } from '../settings/move-fields'
 import { step } from '../settings/reading'
-import type { Content, Move, Setup, Zone } from '../settings/types'
+import type { Content, ExtraValue, Move, Setup, Zone } from '../settings/types'
 import { changeOf } from './change'
 import { goByPressSpeed, sameMotionInSetup } from './defaults'
 import { sameValue } from './measure'
@@ -37,14 +37,14 @@ export function pushSetupChanges(out: FieldChange[], sides: Sides, partners: () 
   }
 }
 
-/** Equality of plain values whose keys come in one order, as a reader's do; the quick way out for sections that did not change. */
+/** Equality of values whose keys come in one order, as a reader's do; the quick way out for sections that did not change. */
 function sameEntries(a: Setup | Content['extra'], b: Setup | Content['extra']): boolean {
   const keys = Object.keys(b)
-  const values: unknown[] = Object.values(b)
+  const values: ExtraValue[] = Object.values(b)
   let index = 0
   // Read by for…in, since keyed reads of forty fields by name cost three times as much.
   for (const key in a) {
-    if (key !== keys[index] || (a as Content['extra'])[key] !== values[index]) return false
+    if (key !== keys[index] || !sameValue((a as Content['extra'])[key], values[index])) return false
     index += 1
   }
   return index === keys.length

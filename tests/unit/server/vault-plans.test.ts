@@ -57,7 +57,7 @@ beforeAll(() => {
     ${upTo(12000)} INSERT INTO finding_act (finding_id, kind, at, by_person, text, close_as) SELECT i % 6000 + 1, CASE i % 2 WHEN 0 THEN 'explained' ELSE 'closed' END, ${at}, 1, 'r', CASE i % 2 WHEN 1 THEN 'accepted' END FROM n;
     ${upTo(6000)} INSERT INTO finding_state SELECT i, 'key ' || i, CASE i % 500 WHEN 0 THEN 'open' ELSE 'closed' END, ${at} FROM n;
     ANALYZE;`)
-})
+}, 60_000)
 afterAll(() => plant.close())
 
 interface Statement { readonly getQuery: () => { sql: string, params: unknown[] } }

@@ -225,6 +225,8 @@ describe('whether a load can fall', () => {
     // 2 kg at 30°: 2 · 9.80665 · 0.5 = 9.80665 N; the sine of 30° comes out a hair below one half.
     const held = (frictionForce: number) => drivenBack([], linear({ mountingAngle: -30, payloadMass: 2, frictionForce }))
     expect([held(9.80665), held(9.80664)]).toEqual([false, true])
+    // An angle that is not given counts as level: at 1° 2 kg would pull with 0.34 N.
+    expect(drivenBack([], linear({ payloadMass: 2, frictionForce: 0.1 }))).toBe(false)
     expect(drivenBack([], linear({ mountingAngle: 90, frictionForce: 5 }))).toBe(false)
     expect(drivenBack([], linear({ mountingAngle: 90, frictionForce: 5 }), { movingMass: 0.6 })).toBe(true)
   })

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import type { z } from 'zod'
 import { columnSchema, entryTableSchema, parameterSchema } from '../../../../../shared/settings/entry-table/schema'
 import { liftTable } from '../../../../support/entry-table'
 
@@ -8,11 +9,10 @@ import { liftTable } from '../../../../support/entry-table'
  */
 
 const long = (length: number) => 'x'.repeat(length)
-type Schema = Pick<typeof entryTableSchema, 'safeParse'>
-const placesOf = (schema: Schema, value: unknown) => schema.safeParse(value).error?.issues.map(({ path }) => path.join('/')) ?? []
+const placesOf = (schema: z.ZodType, value: unknown) => schema.safeParse(value).error?.issues.map(({ path }) => path.join('/')) ?? []
 
 type Border = readonly [field: string, taken: readonly unknown[], refused: readonly unknown[]]
-function holds(schema: Schema, whole: object, [field, taken, refused]: Border): void {
+function holds(schema: z.ZodType, whole: object, [field, taken, refused]: Border): void {
   for (const value of taken) expect(placesOf(schema, { ...whole, [field]: value }), `takes ${JSON.stringify(value)?.slice(0, 60)}`).toEqual([])
   for (const value of refused) expect(placesOf(schema, { ...whole, [field]: value }).every(place => place.startsWith(field)) && !schema.safeParse({ ...whole, [field]: value }).success, `refuses ${JSON.stringify(value)?.slice(0, 60)}`).toBe(true)
 }

@@ -118,15 +118,6 @@ describe('papers', () => {
     expect(pageSizes(letter)[0]?.map(Math.round)).toEqual([612, 792])
   })
 
-  it('the sheet of a swap leads to the swap, and to the axis again when that has ended', async () => {
-    const { json } = await server.call('POST', '/api/swaps', { as: plant.as.technician, body: { axisId, replaced: 'unit', failure: 'dead' } })
-    const { id } = json as unknown as { id: number }
-    const [inSwap, unit] = [(await kit('pdf')).bytes, (await server.call('GET', `/api/axes/${axisId}`, { as: plant.as.auditor })).json as unknown as { unit: { id: number } }]
-    expect((await server.call('POST', `/api/swaps/${id}/abandon`, { as: plant.as.technician, body: { reason: 'it was the cable', fittedUnitId: unit.unit.id } })).status).toBe(200)
-    const after = (await kit('pdf')).bytes
-    expect([qrOf(inSwap), qrOf(after)]).toEqual([`https://marks.example/swaps/${id}`, 'https://marks.example/axes/LID-02.Z'])
-  })
-
   it('the ZIP of a kit is logged and opened by unzip, and not made with cautions unread', async () => {
     const before = plant.rows().log ?? 0
     const files = unzipped((await kit('zip')).bytes)
@@ -158,5 +149,15 @@ describe('papers', () => {
     expect(plant.rows()).toEqual(before)
     await expect.poll(() => readdirSync(server.folder).filter(name => name.endsWith('.part'))).toEqual([])
     expect((await server.call('GET', '/api/lines/1/folder?kept=true', { as: plant.as.auditor })).status).toBe(404)
+  })
+
+  // Last, since programs read both sheets: while those run, the server closes an idle connection.
+  it('the sheet of a swap leads to the swap, and to the axis again when that has ended', async () => {
+    const { json } = await server.call('POST', '/api/swaps', { as: plant.as.technician, body: { axisId, replaced: 'unit', failure: 'dead' } })
+    const { id } = json as unknown as { id: number }
+    const [inSwap, unit] = [(await kit('pdf')).bytes, (await server.call('GET', `/api/axes/${axisId}`, { as: plant.as.auditor })).json as unknown as { unit: { id: number } }]
+    expect((await server.call('POST', `/api/swaps/${id}/abandon`, { as: plant.as.technician, body: { reason: 'it was the cable', fittedUnitId: unit.unit.id } })).status).toBe(200)
+    const after = (await kit('pdf')).bytes
+    expect([qrOf(inSwap), qrOf(after)]).toEqual([`https://marks.example/swaps/${id}`, 'https://marks.example/axes/LID-02.Z'])
   })
 })

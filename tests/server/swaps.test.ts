@@ -143,7 +143,7 @@ describe('what a tired technician might send', () => {
     expect(told(elsewhere)).toContain('SN-0003 sits at LID-03.Z')
     const other = await step(id, 'unit-in', { serial: 'SN-0050', model: 'HL40-200V' })
     expect([other.status, told(other)]).toMatchObject([422, expect.stringContaining('registered as HL50-200V')])
-    expect((await server.call('GET', `/api/axes/${axisId}`, { as: plant.as.auditor })).json).toMatchObject({ unit: { serial: 'SN-0001' }, swap: { id, step: 'unit-in', openedBy: 'Tobias Achterberg', overdue: false } })
+    expect((await server.call('GET', `/api/axes/${axisId}`, { as: plant.as.auditor })).json).toMatchObject({ unit: { serial: 'SN-0002' }, swap: { id, step: 'unit-in', openedBy: 'Tobias Achterberg', overdue: false } })
   })
 
   it('a kit with the cautions unread, which are then read once for the swap, and logged', async () => {

@@ -2,6 +2,7 @@ import type { Browser, Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { desk, openWindow, signIn, startBrowser, violations } from '../support/browser'
 import { serveDemo, type DemoPlant } from '../support/demo-plant'
+import { pdfText } from '../support/paper'
 import { arrive } from '../support/walk'
 
 /* What stands around every page: the rule at the top at every width, and the way through it by keyboard alone. */
@@ -57,6 +58,20 @@ describe('the rule at the top', () => {
       expect(found).toEqual([])
     })
   }
+})
+
+describe('on paper', () => {
+  it('the board has every axis, and the head of its table on each page of it', async () => {
+    const page = await windowOf('planner')
+    await page.setViewportSize(desk)
+    await arrive(page, '/', /axes could not be restored tonight/)
+    const pages = pdfText(await page.pdf({ preferCSSPageSize: true })).split('\f')
+    const tagsOn = (text: string) => text.match(/^\s*[A-Z]{3}-\d\d\.[A-Z]\d?\s+(in line|no |\d).*$/gm) ?? []
+    const withRows = pages.filter(text => tagsOn(text).length > 0)
+    expect(withRows.length).toBeGreaterThan(1)
+    expect(withRows.flatMap(tagsOn)).toHaveLength(46)
+    for (const text of withRows) expect(text).toMatch(/Tag\W.*Against known-good.*Unit fitted/)
+  })
 })
 
 describe('by keyboard alone', () => {

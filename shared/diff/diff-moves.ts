@@ -35,8 +35,8 @@ export class MovePass {
   compare(before: Move | undefined, beforeIndex: number, after: Move | undefined, afterIndex: number): void {
     let fields = before && after ? differing(before, after) : present(before ?? after)
     if (this.nextAgrees) fields = this.nextAgrees(before?.next, after?.next) ? fields & ~follower : fields | follower
-    this.statements += before && after ? bitCount(fields) : 1
     if (fields === 0) return
+    this.statements += before && after ? bitCount(fields) : 1
     const defaults = before && after ? this.defaultsWrittenOut(fields, before, after) : 0
     const { harm, motion } = this.sides.is.moveWeights
     const heavy = bitCount(fields & harm & ~defaults)

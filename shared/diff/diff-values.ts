@@ -24,7 +24,7 @@ export function pushFileChanges(out: FieldChange[], { before, after, is }: Sides
 export function pushSetupChanges(out: FieldChange[], sides: Sides, partners: () => Iterable<readonly [Move, Move]>): void {
   const before = sides.before.setup
   const after = sides.after.setup
-  if (sameEntries(before, after)) return
+  if (sameSetup(before, after)) return
   for (const name of setupFieldNames) {
     const was = before[name]
     const is = after[name]
@@ -37,17 +37,27 @@ export function pushSetupChanges(out: FieldChange[], sides: Sides, partners: () 
   }
 }
 
-/** Equality of values whose keys come in one order, as a reader's do; the quick way out for sections that did not change. */
-function sameEntries(a: Setup | Content['extra'], b: Setup | Content['extra']): boolean {
+/** Equality of setups, whose keys a reader puts into one order; the quick way out where nothing changed. */
+function sameSetup(a: Setup, b: Setup): boolean {
   const keys = Object.keys(b)
   const values: ExtraValue[] = Object.values(b)
   let index = 0
   // Read by for…in, since keyed reads of forty fields by name cost three times as much.
   for (const key in a) {
-    if (key !== keys[index] || !sameValue((a as Content['extra'])[key], values[index])) return false
+    if (key !== keys[index] || (a as Content['extra'])[key] !== values[index]) return false
     index += 1
   }
   return index === keys.length
+}
+
+/** Equality of the drive's own values, in whatever order a file has them; the quick way out where nothing changed. */
+function sameExtra(a: Content['extra'], b: Content['extra']): boolean {
+  let count = 0
+  for (const key in a) {
+    if (!Object.hasOwn(b, key) || !sameValue(a[key], b[key])) return false
+    count += 1
+  }
+  return count === Object.keys(b).length
 }
 
 function movesByPressSpeed(partners: Iterable<readonly [Move, Move]>): number[] {
@@ -70,7 +80,7 @@ export function pushZoneChanges(out: FieldChange[], sides: Sides): void {
 
 /** Adds the changes of the drive's own values, keys by code unit. */
 export function pushExtraChanges(out: FieldChange[], { before, after, context }: Sides): void {
-  if (sameEntries(before.extra, after.extra)) return
+  if (sameExtra(before.extra, after.extra)) return
   const keys = Object.keys(after.extra).filter(key => !Object.hasOwn(before.extra, key) || !sameValue(before.extra[key], after.extra[key]))
   for (const key of Object.keys(before.extra)) if (!Object.hasOwn(after.extra, key)) keys.push(key)
   for (const key of keys.sort()) {

@@ -28,7 +28,10 @@ afterAll(async () => { await server.stop() })
 
 const send = (bytes: Buffer | FormData, query = '', headers: Record<string, string> = {}, as = plant.as.technician) =>
   server.call('POST', `/api/versions/${versionId}/attachments${query}`, { as, raw: bytes, headers: bytes instanceof FormData ? headers : { 'content-type': 'application/octet-stream', ...headers } })
+/** The programs that read papers hold this process up: what the server closed meanwhile is to be noticed before the next request. */
+const noticed = () => new Promise(resolve => setTimeout(resolve, 50))
 const bytesOf = async (path: string, as = plant.as.auditor) => {
+  await noticed()
   const answer = await fetch(server.url + path, { headers: { cookie: as } })
   return { status: answer.status, headers: answer.headers, bytes: Buffer.from(await answer.arrayBuffer()) }
 }
@@ -104,12 +107,12 @@ describe('an attachment', () => {
 
 describe('papers', () => {
   const kit = async (form: 'pdf' | 'zip', more: object = {}) => {
+    await noticed()
     const answer = await fetch(`${server.url}/api/axes/${axisId}/kit`, { method: 'POST', headers: { 'cookie': plant.as.technician, 'content-type': 'application/json' }, body: JSON.stringify({ form, cautionsRead: true, ...more }) })
     return { status: answer.status, headers: answer.headers, bytes: Buffer.from(await answer.arrayBuffer()) }
   }
 
   it('the restore sheet comes as PDF with its fonts, from the built server', async () => {
-    // Both are fetched before the programs read them: while those run, the server closes an idle connection.
     const { status, headers, bytes } = await kit('pdf')
     const letter = (await kit('pdf', { paper: 'Letter' })).bytes
     expect([status, headers.get('content-type'), headers.get('witnessmark-released')]).toEqual([200, 'application/pdf', 'no'])
@@ -151,8 +154,8 @@ describe('papers', () => {
     expect((await server.call('GET', '/api/lines/1/folder?kept=true', { as: plant.as.auditor })).status).toBe(404)
   })
 
-  // Last, since programs read both sheets: while those run, the server closes an idle connection.
   it('the sheet of a swap leads to the swap, and to the axis again when that has ended', async () => {
+    await noticed()
     const { json } = await server.call('POST', '/api/swaps', { as: plant.as.technician, body: { axisId, replaced: 'unit', failure: 'dead' } })
     const { id } = json as unknown as { id: number }
     const [inSwap, unit] = [(await kit('pdf')).bytes, (await server.call('GET', `/api/axes/${axisId}`, { as: plant.as.auditor })).json as unknown as { unit: { id: number } }]

@@ -31,7 +31,13 @@ registerEndpoint('/api/history/rests', () => ({ versions: 15, notRead: 1, notRea
 registerEndpoint('/api/history/not-read', () => ({ items: [{ axisId: 9, tag: 'JAR-01.X', machine: 'Jar feed', line: 'Jar line 1', site: 'Larkfield', timeZone: 'Europe/Berlin', status: 'never-read', uploadEveryHours: 24, lastUploadAt: null }], next: null }))
 registerEndpoint('/api/lines', () => ({ items: [{ id: 2, name: 'Jar line 1' }], next: null }))
 registerEndpoint('/api/machines', () => ({ items: [{ id: 5, name: 'Lid press 2' }], next: null }))
-registerEndpoint('/api/axes/tag:LID-03.Z/values', () => ({ section: 'setup', field: 'thrustLimit', row: null, steps: [], knownGood: [], bounds: [], versions: 15, leftOut: 0 }))
+const valuesOf = (value: number) => ({ section: 'setup', field: 'thrustLimit', row: null, knownGood: [], bounds: [], versions: 15, leftOut: 0, steps: [{ versionId: 1, number: 1, at: '2026-01-01T05:00:00.000Z', capturedAt: '2026-01-01T05:00:00.000Z', value, unit: '%', before: null, occasion: 'routine', changedBy: null, allowedBy: null, storedBy: 'station 2', reason: null, workOrder: null, serial: 'A4471', model: 'HL40-200V' }] })
+let everSet = false
+registerEndpoint('/api/axes/tag:LID-03.Z/values', () => everSet ? valuesOf(38) : { ...valuesOf(38), steps: [] })
+registerEndpoint('/api/axes/tag:LID-01.Z/values', () => valuesOf(38))
+registerEndpoint('/api/axes/tag:LID-04.Z/values', () => valuesOf(40))
+registerEndpoint('/api/axes/tag:LID-03.Z', () => ({ id: 7, tag: 'LID-03.Z', machine: { id: 5, name: 'Lid press 2' } }))
+registerEndpoint('/api/machines/5/neighbours', () => ({ sisters: [{ role: 'lid press', model: 'HL40-200V', of: 3, axes: [{ id: 5, tag: 'LID-01.Z', machineId: 3 }, { id: 7, tag: 'LID-03.Z', machineId: 5 }, { id: 9, tag: 'LID-04.Z', machineId: 6 }], rows: [], results: [], more: 0 }], buses: [] }))
 registerEndpoint('/api/axes/tag:LID-03.Z/fittings', () => ({ items: [] }))
 registerEndpoint('/api/axes/tag:LID-03.Z/as-of', () => ({ version: { number: 12, capturedAt: named.capturedAt } }))
 
@@ -40,11 +46,22 @@ const reads = (page: VueWrapper, words: string) => soon(() => expect(textOf(page
 beforeEach(() => {
   items = [item, named]
   fails = false
+  everSet = false
   asked.length = 0
   useSession().begin({ id: 3, name: 'Ines Morel', email: 'i@larkfield.example', roles: ['auditor'], sites: [{ id: 1, name: 'Larkfield', timeZone: 'Europe/Berlin' }], plant: 'Larkfield Preserves', empty: false, shared: false })
 })
 
 describe('the history', () => {
+  it('of one value is set beside its sister axes, on one scale, when that is asked for', async () => {
+    everSet = true
+    const page = await mountSuspended(HistoryPage, { route: '/history?field=thrustLimit&axis=LID-03.Z' })
+    await reads(page, 'Beside its sister axes')
+    expect(textOf(page)).not.toContain('Sister axes today')
+    await page.findAll('button').find(button => button.text() === 'Beside its sister axes')?.trigger('click')
+    await reads(page, 'Sister axes today: LID-01.Z 38 %; LID-04.Z 40 %.')
+    expect(page.find('.key').text()).toContain('sister axes')
+  })
+
   it('says who, when, from what to what, why and who allowed it; nobody named where nobody is', async () => {
     const page = await mountSuspended(HistoryPage, { route: '/history?field=thrustLimit&axis=LID-03.Z&from=2024-12-01&to=2026-12-01' })
     await reads(page, 'LID-03.Z: 2 changes.')

@@ -26,6 +26,8 @@ interface Lasting { readonly from: number, readonly to: number, readonly label: 
 export interface StepBand extends Lasting { readonly value: StepValue }
 /** A limit from outside the settings, dashed in harm. */
 export interface StepLimit extends Lasting { readonly at: number }
+/** The same value of an axis like it, as thin steps on the same scale and the same time. */
+export interface StepSister { readonly tag: string, readonly points: readonly Pick<StepPoint, 'at' | 'value'>[] }
 export interface StepsInput {
   /** Oldest first. */
   readonly points: readonly StepPoint[]
@@ -35,6 +37,7 @@ export interface StepsInput {
   readonly limits: readonly StepLimit[]
   /** Where another unit came in. */
   readonly cuts: readonly { readonly at: number, readonly label: string }[]
+  readonly sisters?: readonly StepSister[]
 }
 
 type Tone = 'line' | 'after' | 'harm'
@@ -47,6 +50,7 @@ export interface StepsLayout {
   readonly grid: string
   readonly ticks: readonly TimeTick[]
   readonly line: string
+  readonly sisters: string
   readonly bands: string
   readonly limits: string
   readonly cuts: string
@@ -89,9 +93,9 @@ function wordScale(values: readonly StepValue[], top: number): Scale {
 
 /** Lays the picture out for a width in pixels; the height follows from how many balloons stand over one another. */
 export function layoutSteps(input: StepsInput, width: number): StepsLayout {
-  const { points, until, zone, bands, cuts } = input
+  const { points, until, zone, bands, cuts, sisters = [] } = input
   const limits = nearLimits(input)
-  const held = [...points, ...bands].flatMap(({ value }) => value === null ? [] : [value])
+  const held = [...points, ...bands, ...sisters.flatMap(sister => sister.points)].flatMap(({ value }) => value === null ? [] : [value])
   const numbers = held.filter(value => typeof value === 'number')
   const numeric = numbers.length === held.length
   const sample = numeric ? numberScale([...numbers, ...limits.map(({ at }) => at)], 0).ticks : wordScale(held, 0).ticks
@@ -115,6 +119,7 @@ export function layoutSteps(input: StepsInput, width: number): StepsLayout {
     grid: ticks.filter(tick => tick.y < foot - 1).map(tick => `M${left} ${tick.y}H${right}`).join(''),
     ticks: timeTicks(from, until, left, right, zone),
     line: linePath(points, x, y, right),
+    sisters: sisters.map(sister => linePath(since(sister.points, first), x, y, right)).join(''),
     bands: bands.map(band => channelPath(x(band.from), x(band.to), y(band.value))).join(''),
     limits: limits.map(limit => `M${x(limit.from)} ${y(limit.at)}H${x(limit.to)}`).join(''),
     cuts: cuts.map(({ at }) => `M${x(at)} 4V${foot}`).join(''),
@@ -131,7 +136,13 @@ export function layoutSteps(input: StepsInput, width: number): StepsLayout {
 
 type Across = (at: number) => number
 
-function linePath(points: readonly StepPoint[], x: Across, y: Scale['y'], right: number): string {
+/** What happened before the picture begins stands as the one value that it led to. */
+function since(points: StepSister['points'], first: number): StepSister['points'] {
+  const begun = points.findLastIndex(({ at }) => at <= first)
+  return begun === -1 ? points : points.slice(begun)
+}
+
+function linePath(points: StepSister['points'], x: Across, y: Scale['y'], right: number): string {
   let joined = false
   return points.map(({ at, value }, index) => {
     const height = y(value)

@@ -3,7 +3,7 @@ import { setupField } from '#shared/settings/fields'
 import type { ExtraValue } from '#shared/settings/types'
 import type { ValuePlace } from '#shared/settings/value-place'
 import { counted, sayValue } from '../format'
-import { nearLimits, stepWord, type StepLimit, type StepsInput, type StepValue } from '../pictures/steps'
+import { nearLimits, stepWord, type StepLimit, type StepSister, type StepsInput, type StepValue } from '../pictures/steps'
 import { changeWords, valueWord, type FieldWords, type WordContext } from './fields'
 import { listWords } from './lists'
 
@@ -41,6 +41,20 @@ const lawgiver = { rule: 'site rule', nameplate: 'nameplate' } as const
 
 function limitsOf(bounds: readonly ValueBound[], until: number): StepLimit[] {
   return bounds.flatMap(bound => sides(bound).map(({ at, words }) => ({ at, from: Date.parse(bound.from), to: bound.to === null ? until : Date.parse(bound.to), label: `${lawgiver[bound.by]}, ${words}` })))
+}
+
+/** The steps of an axis that is like the one shown. */
+export const sisterOf = (tag: string, { field, steps }: ValuesAnswer): StepSister => ({ tag, points: steps.map(step => ({ at: Date.parse(step.at), value: plain(field, step.value) })) })
+
+/** `LID-01.Z, LID-02.Z 38 %; LID-04.Z 40 %`: what sister axes hold today, those alike together. */
+export function sistersToday(sisters: readonly StepSister[], unit: string): string {
+  const held = new Map<string, string[]>()
+  for (const { tag, points } of sisters) {
+    const value = points.at(-1)?.value ?? null
+    const word = typeof value === 'number' ? sayValue(value, unit) : stepWord(value)
+    held.set(word, [...held.get(word) ?? [], tag])
+  }
+  return [...held].map(([word, tags]) => `${tags.join(', ')} ${word}`).join('; ')
 }
 
 /** The picture of an answer; `cuts` where other units came in. */

@@ -53,6 +53,21 @@ describe('layoutSteps', () => {
     expect([...balloons.map(({ number }) => number), ...crowds.flatMap(({ moves }) => moves)].sort((a, b) => a - b)).toEqual(many.slice(1).map(({ balloon }) => balloon))
   })
 
+  it('draws sister axes on the same scale and the same time, and begins them with what they held then', () => {
+    const sisters = [{ tag: 'LID-01.Z', points: [{ at: at(-90), value: 20 }, { at: at(-30), value: 34 }, { at: at(300), value: 70 }] }, { tag: 'LID-04.Z', points: [{ at: at(400), value: 36 }] }]
+    const layout = layoutSteps({ ...base, sisters }, 1376)
+    const alone = layoutSteps(base, 1376)
+    expect(alone.sisters).toBe('')
+    expect(layout.sisters.match(/M/g)).toHaveLength(2)
+    const [, first = '', second = ''] = /^(M[^M]+)(M[^M]+)$/.exec(layout.sisters) ?? []
+    expect(first).toMatch(/^M[\d.]+ [\d.]+H[\d.]+V[\d.]+H[\d.]+$/)
+    const heights = (path: string) => [...path.matchAll(/(?:M[\d.]+ |V)([\d.]+)/g)].map(match => Number(match[1]))
+    expect(heights(first)[0]).toBe(heights(layout.line)[0])
+    expect(Math.min(...heights(first))).toBeLessThan(Math.min(...heights(layout.line)))
+    expect(numbersOf(second)[0]).toBeGreaterThan(numbersOf(layout.line)[0] ?? 0)
+    expect(layout.texts.map(({ text }) => text)).toContain('60')
+  })
+
   it('draws one value, and no value at all', () => {
     expect(layoutSteps({ ...base, points: [{ at: at(0), value: 0 }], bands: [], limits: [] }, 320).line).toMatch(/^M[\d.]+ [\d.]+H[\d.]+$/)
     expect(layoutSteps({ ...base, points: [], bands: [], limits: [], cuts: [] }, 320).line).toBe('')

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { ValuesAnswer, ValueStep } from '../../../../shared/api/values'
 import { firstPlace, valueChoices, whereChoices, whereKey, whereOf } from '../../../../utils/value-choices'
-import { farLimits, placeTitle, stepNumber, stepsOf, valuesCount, valuesSentence } from '../../../../utils/words/values'
+import { farLimits, placeTitle, sisterOf, sistersToday, stepNumber, stepsOf, valuesCount, valuesSentence } from '../../../../utils/words/values'
 import { diffContents } from '../../../../shared/diff/diff'
 import { after, before, nameplate } from '../../../support/axis-answers'
 
@@ -68,5 +68,15 @@ describe('what can be looked at over time', () => {
   it('has a title in the trade’s words', () => {
     const titles = [{ section: 'setup', field: 'thrustLimit' }, { section: 'setup', field: 'homingSpeed' }, { section: 'move', field: 'target', row: 5 }] as const
     expect(titles.map(place => placeTitle(place, context))).toEqual(['Thrust limit', 'Homing speed', 'Target of move 5'])
+  })
+})
+
+describe('sister axes', () => {
+  const answer = (value: ValueStep['value']): ValuesAnswer => ({ section: 'setup', field: 'thrustLimit', row: null, steps: [step(1, '2026-01-01T00:00:00.000Z', 36, { before: null }), step(2, '2026-02-01T00:00:00.000Z', value)], knownGood: [], bounds: [], versions: 2, leftOut: 0 })
+  it('are told by what they hold today, those alike together', () => {
+    const sisters = [sisterOf('LID-01.Z', answer(38)), sisterOf('LID-02.Z', answer(40)), sisterOf('LID-04.Z', answer(38)), sisterOf('LID-05.Z', answer(null))]
+    expect(sisters[0]?.points).toEqual([{ at: Date.parse('2026-01-01T00:00:00.000Z'), value: 36 }, { at: Date.parse('2026-02-01T00:00:00.000Z'), value: 38 }])
+    expect(sistersToday(sisters, '%')).toBe('LID-01.Z, LID-04.Z 38 %; LID-02.Z 40 %; LID-05.Z not set')
+    expect(sistersToday([], '%')).toBe('')
   })
 })

@@ -1,4 +1,4 @@
-import { and, asc, count, desc, eq, getTableColumns, gt, gte, isNull, lt, lte, max, or, sql } from 'drizzle-orm'
+import { and, asc, count, desc, eq, getTableColumns, gt, gte, isNull, lt, lte, max, notInArray, or, sql } from 'drizzle-orm'
 import { alias } from 'drizzle-orm/sqlite-core'
 import { axis } from '../axis/table'
 import { ifGiven, inBounds } from '../bounds'
@@ -70,9 +70,9 @@ export const toldQueries = prepared(db => ({
   /** Units that sat there at some time of the period. */
   fittings: db.select({ fitting, serial: unit.serial, model: unit.model }).from(fitting).innerJoin(unit, eq(unit.id, fitting.unitId))
     .where(and(eq(fitting.axisId, place('axisId')), lt(fitting.fromAt, place('until')), or(isNull(fitting.toAt), gt(fitting.toAt, place('from'))))).orderBy(asc(fitting.fromAt)).prepare(),
-  /** Wrong uploads that were set aside in the period, whenever they had come in. */
+  /** Wrong uploads that were set aside in the period, and those of the period that were set aside until the report was asked for. */
   voids: db.select({ versionId: version.id, axisId: version.axisId, number: version.number, at: versionVoid.at, by: person.name, reason: versionVoid.reason }).from(versionVoid)
-    .innerJoin(version, eq(version.id, versionVoid.versionId)).innerJoin(person, eq(person.id, versionVoid.byPerson)).where(and(within(versionVoid.at), named(version.axisId))).orderBy(asc(versionVoid.at)).prepare(),
+    .innerJoin(version, eq(version.id, versionVoid.versionId)).innerJoin(person, eq(person.id, versionVoid.byPerson)).where(and(lt(versionVoid.at, place('told')), or(within(versionVoid.at), within(version.receivedAt)), named(version.axisId))).orderBy(asc(versionVoid.at)).prepare(),
   /** Those that were opened before the end, and were open or acted on at some time since the beginning; the vault's own too. */
   findings: db.select({ finding, state: findingState.state }).from(finding).innerJoin(findingState, eq(findingState.findingId, finding.id)).where(and(
     gt(finding.id, place('after')), lt(finding.openedAt, place('until')),
@@ -89,7 +89,7 @@ export const toldQueries = prepared(db => ({
   waivers: db.select({ id: waiver.id }).from(waiver).where(and(gt(waiver.id, place('after')), lt(waiver.givenAt, place('until')), gt(waiver.untilAt, place('from')), named(waiver.axisId)))
     .orderBy(asc(waiver.id)).limit(place('limit')).prepare(),
   swaps: db.select({ swap, tag: axis.tag, serial: unit.serial, by: person.name }).from(swap).innerJoin(axis, eq(axis.id, swap.axisId)).innerJoin(person, eq(person.id, swap.openedBy)).leftJoin(unit, eq(unit.id, swap.unitOutId))
-    .where(and(gt(swap.id, place('after')), lt(swap.openedAt, place('until')), gte(swap.changedAt, place('from')), named(swap.axisId))).orderBy(asc(swap.id)).limit(place('limit')).prepare(),
+    .where(and(gt(swap.id, place('after')), lt(swap.openedAt, place('until')), or(gte(swap.changedAt, place('from')), notInArray(swap.step, ['released', 'abandoned'])), named(swap.axisId))).orderBy(asc(swap.id)).limit(place('limit')).prepare(),
   steps: db.select({ step: swapStep, by: person.name }).from(swapStep).innerJoin(person, eq(person.id, swapStep.byPerson))
     .where(and(eq(swapStep.swapId, place('swapId')), lt(swapStep.at, place('told')))).orderBy(asc(swapStep.rev)).prepare(),
   /** The entries of the log about a subject, oldest first: one each, but for waivers and plans that were ended. */

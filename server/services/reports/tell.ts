@@ -58,9 +58,9 @@ function signaturesOfFinding({ findingId, timeZone, acts }: FindingPart): Signat
   }))
 }
 
-function signaturesOfVoids({ db, from, until, axesText, axes }: Span): SignaturePart[] {
+function signaturesOfVoids({ db, from, until, told, axesText, axes }: Span): SignaturePart[] {
   const queries = toldQueries(db)
-  return queries.voids.all({ from, until, axes: axesText }).map(({ versionId, axisId, number, at, by: name, reason }) => {
+  return queries.voids.all({ from, until, told, axes: axesText }).map(({ versionId, axisId, number, at, by: name, reason }) => {
     const axis = axes.find(({ id }) => id === axisId)
     return { kind: 'signature', name, at, timeZone: axis?.timeZone ?? 'UTC', meaning: 'sets it aside as a wrong upload', of: `${axis?.tag ?? `axis ${axisId}`} v${number}`, words: reason, entry: queries.entriesOf.get({ kind: 'version-void', id: versionId })?.seq ?? null }
   })

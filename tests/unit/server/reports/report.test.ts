@@ -134,6 +134,17 @@ describe('an audit report', () => {
     expect(await paper({ scope: 'axis', scopeId: plant.axisId, to: iso(start + hour) })).toMatch(/No finding was open in that time\.[\s\S]*Nobody signed anything\.[\s\S]*No file came from this axis/)
   })
 
+  it('lists the signature under which a version of its period was set aside later', async () => {
+    const wrong = plant.upload({ thrustLimit: 90, speedLimit: 500 }).version
+    const to = iso(plant.now + minute)
+    plant.now += hour
+    voidVersion(plant.vault, plant.runa, wrong.id, 'the wrong drive was plugged in')
+    plant.now += hour
+    const told = await json({ from: iso(start + 90 * minute), to })
+    expect(ofKind(told, 'version').map(({ number, void: aside }) => [number, aside?.by])).toEqual([[2, 'Runa Haldersen']])
+    expect(ofKind(told, 'signature').map(({ of, name }) => [of, name])).toEqual([['LID-02.Z v2', 'Runa Haldersen']])
+  })
+
   it('holds what the vault held when it was asked for, whenever it is printed', async () => {
     plant.upload({ thrustLimit: 55, speedLimit: 500 })
     plant.now += minute

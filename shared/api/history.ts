@@ -52,6 +52,8 @@ export type HistoryAct = z.infer<typeof historyAct>
 export const actsPage = pageOf(historyAct)
 
 export const notReadQuery = listQuery.extend({ ...place, ...stretch })
+/** As that, and no page of it: the answer is one. */
+export const restsQuery = notReadQuery.omit({ limit: true, cursor: true })
 /** An axis that no file came from in a stretch of time. */
 export const notReadAxis = z.object({
   axisId: idSchema, tag: z.string(), machine: z.string(), line: z.string(), site: z.string(), timeZone: z.string(), status: z.enum(axisStatuses),

@@ -178,7 +178,7 @@ export const routes = {
 
   'GET /api/history': { may: all, token: 'read', query: history.historyQuery, answers: { 200: history.historyPage }, says: 'Who changed what, when, from what to what, why and allowed by whom, newest first; as CSV or PDF the whole result, for planners and auditors.' },
   'GET /api/history/acts': { may: ['planner', 'auditor', 'admin'], token: 'read', query: history.actsQuery, answers: { 200: history.actsPage }, says: 'Who changed sites and what they watch, nameplates, rules, roles and marks, newest first.' },
-  'GET /api/history/rests': { may: all, token: 'read', query: history.notReadQuery, answers: { 200: history.historyRests }, says: 'What an answer of the history rests on: versions, axes not read, how far the log was verified.' },
+  'GET /api/history/rests': { may: all, token: 'read', query: history.restsQuery, answers: { 200: history.historyRests }, says: 'What an answer of the history rests on: versions, axes not read, how far the log was verified.' },
   'GET /api/history/not-read': { may: all, token: 'read', query: history.notReadQuery, answers: { 200: history.notReadPage }, says: 'Axes that no file came from in a stretch of time.' },
 
   'GET /api/reports': { may: binders, token: 'read', query: reports.reportQuery, answers: { 200: pageOf(reports.reportSchema) }, says: 'Audit reports that were asked for, newest first.' },

@@ -47,7 +47,6 @@ describe('the tree', () => {
       'server/database/migrations/0001-first.ts': 'SQL of one migration, never edited once landed',
       'tests/e2e/first-axis.test.ts': 'the day of a planner in one vault, each step on what the one before left',
       'tests/e2e/swap.test.ts': 'one night at one machine, each step on what the one before left',
-      'tests/unit/server/swaps.test.ts': 'the ways through a swap, all by the same first steps',
     }
     const long = ['shared', 'server', 'components', 'pages', 'composables', 'stores', 'utils', 'tests'].flatMap(sourceFiles).filter(file => lines(file) > 300)
     expect(long.filter(file => !(file in reasons))).toEqual([])

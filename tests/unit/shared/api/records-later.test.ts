@@ -9,6 +9,7 @@ import { letterKindNames, letterKinds, letterOne, letterQueue, ownLetters, terms
 import { folderStatus, type FolderStatus } from '../../../../shared/api/line-folders'
 import { busGroup, sisterGroup, type SisterGroup } from '../../../../shared/api/neighbours'
 import { lacks, readinessSchema } from '../../../../shared/api/readiness'
+import { reportBody, reportScopes, reportSchema, type Report } from '../../../../shared/api/reports'
 import {
   adjustmentSchema, missingKey, motionItemSchema, readBackAnswer, readBackProblems, readBackSchema, sparesAnswer, swapKitAnswer, swapLine, swapSchema, swapUnit, unfitReason,
   type ReadBack, type Swap, type SwapKit, type SwapLine, type SwapUnit,
@@ -70,6 +71,7 @@ const verification: Verification = { id: 1, begunAt: at, endedAt: at, outcome: '
 const trail: TrailState = { size: 9, checkpoint: null, verifications: [verification], verifying: false }
 const values: ValuesAnswer = { section: 'setup', field: 'thrustLimit', row: null, steps: [], knownGood: [{ versionId: 7, number: 4, from: at, to: null, value: null }], bounds: [{ by: 'rule', max: 50, from: at, to: null, words: 'guard' }], versions: 3, leftOut: 0 }
 const attachment: Attachment = { id: 1, versionId: 7, kind: 'photo', name: 'plate.jpg', mediaType: 'image/jpeg', note: null, size: 12, sha256: hash, receivedAt: at, by: 'Tobias Achterberg', unit: { serial: 'HL40-2231-0087', model: 'HL40-200V' } }
+const report: Report = { id: 1, scope: null, scopeId: null, subject: 'every axis', timeZone: 'UTC', from: null, to: null, paper: 'A4', askedAt: at, askedBy: 'Ines', size: 41, making: null }
 const context: Partial<JudgingContext> = { problem: null, registered: null, axis: null, current: null, knownGood: null, broughtFrom: null, waivers: [], nextNumber: 1, nameplate: null, rules: [] }
 
 const records: readonly Travelling[] = [
@@ -107,6 +109,7 @@ const records: readonly Travelling[] = [
   { what: 'the key of the trail', schema: keyAnswer, record: { name: 'larkfield', publicKey: hash, verifierKey: 'x' }, nullable: [] },
   { what: 'the values of a field', schema: valuesAnswer, record: values, nullable: ['row'] },
   { what: 'an attachment', schema: attachmentSchema, record: attachment, nullable: ['note'] },
+  { what: 'a report', schema: reportSchema, record: report, nullable: ['scope', 'scopeId', 'from', 'to', 'making'] },
   { what: 'what a file is judged against', schema: judgingContext, record: context, nullable: ['problem', 'registered', 'axis', 'current', 'knownGood', 'broughtFrom', 'nameplate'] },
 ]
 
@@ -189,6 +192,15 @@ describe('letters', () => {
 
   it('about one axis reach those who watch it, whatever their part', () => {
     for (const kind of letterKindNames.filter(name => termsOf(name).reach === 'watchers')) expect(termsOf(kind).may).toEqual(['technician', 'planner', 'auditor', 'admin'])
+  })
+})
+
+describe('a report that is asked for', () => {
+  it('is of a place by its kind and its id, or of every axis: half of a place is refused at the other half', () => {
+    for (const body of [{}, { scope: 'line', scopeId: 1 }]) expect(takes(reportBody, body)).toBe(true)
+    for (const body of [{ scope: 'line' }, { scopeId: 1 }]) expect(reportBody.safeParse(body).error?.issues.map(({ path }) => path)).toEqual([['scopeId']])
+    each(reportBody, { scopeId: 1 }, 'scope', reportScopes, ['plant', 'unit', null])
+    each(reportBody, { scope: 'axis' }, 'scopeId', [1, Number.MAX_SAFE_INTEGER], [0, 1.5, '1', null])
   })
 })
 

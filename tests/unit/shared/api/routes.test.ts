@@ -123,7 +123,12 @@ const doors = `
   POST /api/swaps/:id/put-back           | tp        |        | swap    |
   GET /api/history                       | tpaA      | read   |         |
   GET /api/history/acts                  | paA       | read   |         |
+  GET /api/history/rests                 | tpaA      | read   |         |
   GET /api/history/not-read              | tpaA      | read   |         |
+  GET /api/reports                       | pa        | read   |         |
+  POST /api/reports                      | pa        |        |         |
+  GET /api/reports/:id                   | pa        | read   |         |
+  GET /api/reports/:id/file              | pa        | read   |         |
   GET /api/board                         | tpaA      | read   |         |
   GET /api/log                           | paA       | read   |         |
   GET /api/log/key                       | paA       | read   |         |
@@ -147,9 +152,9 @@ describe('the doors', () => {
     expect(declared.map(doorOf)).toEqual(doors.map(([name = '', may = '', token = '', scope = '', signed = '']) => [name, may, token, scope, signed]))
   })
 
-  it('let an auditor read, work on findings, have the vault verified, and nothing else', () => {
+  it('let an auditor read, work on findings, ask for reports, have the vault verified, and nothing else', () => {
     const auditors = declared.filter(([, { may }]) => Array.isArray(may) && may.includes('auditor'))
-    expect(auditors.map(([name]) => name).filter(name => methodOf(name) !== 'GET')).toEqual([...['explain', 'close', 'reopen'].map(act => `POST /api/findings/:id/${act}`), 'POST /api/trail/verifications'])
+    expect(auditors.map(([name]) => name).filter(name => methodOf(name) !== 'GET')).toEqual([...['explain', 'close', 'reopen'].map(act => `POST /api/findings/:id/${act}`), 'POST /api/reports', 'POST /api/trail/verifications'])
   })
 
   it('let a script read or upload, never sign, register or change', () => {

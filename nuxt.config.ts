@@ -67,6 +67,7 @@ export default defineNuxtConfig({
         'font-src': ['\'self\''],
         'img-src': ['\'self\'', 'data:', 'blob:'],
         'connect-src': ['\'self\''],
+        'worker-src': ['\'self\''],
         'form-action': ['\'self\''],
         'frame-ancestors': ['\'none\''],
         // A plant's own network often has no certificate; PUBLIC_URL with https sets Secure cookies instead.

@@ -1,4 +1,4 @@
-import { bytesOf, nextToSend, type OutboxEntry } from '~/utils/swap/outbox'
+import { nextToSend, type OutboxEntry } from '~/utils/swap/outbox'
 
 /** Refusals of a read-back that the vault keeps as an attempt all the same: `current` is the swap with it. */
 const keptAttempts = new Set(['read-back-serial', 'read-back-model', 'read-back-twice', 'settings-unreadable'])
@@ -17,24 +17,19 @@ export function useOutbox() {
   const session = useSession()
   const api = useApi()
 
-  /** Kept at once, sent as soon as it goes. False where this browser has no room to keep it. */
-  function enter(entry: ToSend): boolean {
+  /** Kept first, then sent as soon as it goes. */
+  async function enter(entry: ToSend): Promise<void> {
     const { me } = session
-    if (!me) return false
-    try {
-      store.add({ ...entry, key: newRequestKey(), personId: me.id, person: me.name, enteredAt: new Date().toISOString(), refused: null })
-    }
-    catch (failure) {
-      if (failure instanceof DOMException) return false
-      throw failure
-    }
+    if (!me) return
+    // A proxy of the page cannot be kept: what is told is data alone.
+    const body = entry.body.kind === 'json' ? { ...entry.body, value: JSON.parse(JSON.stringify(entry.body.value)) as Record<string, unknown> } : entry.body
+    await store.add({ ...entry, body, key: newRequestKey(), personId: me.id, person: me.name, enteredAt: new Date().toISOString(), refused: null })
     void send()
-    return true
   }
 
   function post({ path, body, rev, key }: OutboxEntry): Promise<unknown> {
     if (body.kind === 'json') return api.post(path, { ...body.value, rev }, { key })
-    return api.post(path, bytesOf(body.base64), { key, query: { rev, name: body.name }, headers: { 'content-type': body.mediaType } })
+    return api.post(path, body.bytes, { key, query: { rev, name: body.name }, headers: { 'content-type': body.mediaType } })
   }
 
   async function sendOne(entry: OutboxEntry): Promise<boolean> {
@@ -42,7 +37,7 @@ export function useOutbox() {
       const answer = await post(entry)
       store.heard(true)
       store.trouble = null
-      store.settle(entry, answer)
+      await store.settle(entry, answer)
       return true
     }
     catch (failure) {
@@ -51,17 +46,19 @@ export function useOutbox() {
       // Without reception, without a session, or while the vault is overrun or full it is tried again; the rest is an answer.
       const later = problem.unanswered || passing.has(problem.problem.status)
       store.trouble = later && !problem.unanswered ? problem.problem : null
-      if (!later && keptAttempts.has(problem.code) && problem.problem.current) store.settle(entry, problem.problem.current)
-      else if (!later) store.refuse(entry.key, problem.problem)
+      if (!later && keptAttempts.has(problem.code) && problem.problem.current) await store.settle(entry, problem.problem.current)
+      else if (!later) await store.refuse(entry.key, problem.problem)
       return !later
     }
   }
 
+  const next = () => session.me && nextToSend(store.toSend, session.me.id)
   async function send(): Promise<void> {
     if (store.sending || !session.me) return
     store.sending = true
     try {
-      for (let entry = nextToSend(store.entries, session.me.id); entry; entry = nextToSend(store.entries, session.me.id)) {
+      await store.ready
+      for (let entry = next(); entry; entry = next()) {
         if (!await sendOne(entry)) break
       }
     }
@@ -71,8 +68,8 @@ export function useOutbox() {
   }
 
   /** The same entry once more, following on what the other device did. */
-  function sendAgain(entry: OutboxEntry, rev: number): void {
-    store.replace(entry.key, { ...entry, key: newRequestKey(), rev, refused: null })
+  async function sendAgain(entry: OutboxEntry, rev: number): Promise<void> {
+    await store.replace(entry.key, { ...entry, key: newRequestKey(), rev, refused: null })
     void send()
   }
 

@@ -1,17 +1,23 @@
 import { useEventListener } from '@vueuse/core'
 import { defineStore } from 'pinia'
 import type { Problem } from '#shared/api/common'
-import { following, readOutbox, withRefusal, type OutboxEntry } from '~/utils/swap/outbox'
-
-const name = 'witnessmark-outbox'
+import { changeRows, rowsOf } from '~/utils/device/database'
+import { changesTo, following, readOutbox, withRefusal, type OutboxEntry } from '~/utils/swap/outbox'
 
 /**
- * Entries that wait for reception. They live in the browser's own store, written before anything else is done with them, so
- * that a reload or a flat battery loses none; windows of one browser share them.
+ * Entries that wait for reception. They lie in the browser's own database, written before they are sent, so that a reload or
+ * a flat battery loses none; windows of one browser share them. Where the browser has no room left an entry lives on this
+ * page alone (`loose`), which says so.
  */
 export const useOutboxStore = defineStore('outbox', () => {
-  const kept = () => readOutbox(localStorage.getItem(name) ?? '[]')
-  const entries = shallowRef<readonly OutboxEntry[]>(kept())
+  const kept = shallowRef<readonly OutboxEntry[]>([])
+  const loose = shallowRef<readonly OutboxEntry[]>([])
+  /** Being written this moment: shown, so that nobody enters it twice, and not sent yet. */
+  const coming = shallowRef<readonly OutboxEntry[]>([])
+  const toSend = computed(() => loose.value.length === 0 ? kept.value : [...kept.value, ...loose.value].sort((a, b) => (a.enteredAt < b.enteredAt ? -1 : 1)))
+  const entries = computed(() => [...toSend.value, ...coming.value])
+  /** What waited from before was read; until then nothing is said of where a swap stands. */
+  const loaded = ref(false)
   /** Since when nothing of the vault came through; undefined while it answers. */
   const silentSince = ref<string>()
   /** Why the vault, though it answers, takes nothing just now: its disk is full, too many calls. */
@@ -20,24 +26,68 @@ export const useOutboxStore = defineStore('outbox', () => {
   /** The entry that was taken last, with what the vault answered. */
   const taken = shallowRef<{ readonly entry: OutboxEntry, readonly answer: unknown }>()
 
-  useEventListener(window, 'storage', ({ key }: StorageEvent) => { if (key === name) entries.value = kept() })
-
-  /** Throws a DOMException where the browser has no room left. Another window may have written since: its entries stay. */
-  function change(next: (now: readonly OutboxEntry[]) => readonly OutboxEntry[]): void {
-    const after = next(kept())
-    localStorage.setItem(name, JSON.stringify(after))
-    entries.value = after
+  /** One change after another: each begins with what the one before it left. */
+  let turn: Promise<unknown> = Promise.resolve()
+  function inTurn<Answer>(work: () => Promise<Answer>): Promise<Answer> {
+    const mine = turn.then(work)
+    turn = mine.catch(() => undefined)
+    return mine
   }
+  const otherWindows = new BroadcastChannel('witnessmark-outbox')
+  const read = () => inTurn(async () => {
+    try {
+      kept.value = readOutbox(await rowsOf('outbox'))
+    }
+    catch (failure) {
+      // A browser that keeps nothing has nothing that waits.
+      if (!(failure instanceof DOMException)) throw failure
+    }
+    loaded.value = true
+  })
+  useEventListener(otherWindows, 'message', () => { void read() })
+  const ready = read()
+  useEventListener(window, 'beforeunload', (event: BeforeUnloadEvent) => { if (loose.value.length > 0) event.preventDefault() })
 
-  const add = (entry: OutboxEntry) => change(now => [...now, entry])
-  const replace = (key: string, by: OutboxEntry) => change(now => now.map(entry => entry.key === key ? by : entry))
+  const change = (next: (now: readonly OutboxEntry[]) => readonly OutboxEntry[]) => inTurn(async () => {
+    loose.value = next(loose.value)
+    try {
+      kept.value = readOutbox(await changeRows('outbox', (rows) => {
+        const now = readOutbox(rows)
+        return changesTo(now, next(now))
+      }))
+      otherWindows.postMessage('changed')
+    }
+    catch (failure) {
+      if (!(failure instanceof DOMException)) throw failure
+      // What the browser would not change there is sent once more after a reload, under the same key: it counts once.
+      kept.value = next(kept.value)
+    }
+  })
+
+  async function add(entry: OutboxEntry): Promise<void> {
+    coming.value = [...coming.value, entry]
+    try {
+      await inTurn(async () => {
+        kept.value = readOutbox(await changeRows('outbox', () => ({ put: [entry], drop: [] })))
+      })
+      otherWindows.postMessage('changed')
+    }
+    catch (failure) {
+      if (!(failure instanceof DOMException)) throw failure
+      loose.value = [...loose.value, entry]
+    }
+    finally {
+      coming.value = coming.value.filter(({ key }) => key !== entry.key)
+    }
+  }
+  const replace = (key: string, by: OutboxEntry) => change(now => now.map(entry => entry.key === key ? { ...by, order: entry.order } : entry))
   const drop = (key: string) => change(now => now.filter(entry => entry.key !== key))
   const refuse = (key: string, problem: OutboxEntry['refused']) => change(now => withRefusal(now, key, problem))
   /** Taken: it goes, and what was entered after it follows on the answer. */
-  function settle(entry: OutboxEntry, answer: unknown): void {
+  async function settle(entry: OutboxEntry, answer: unknown): Promise<void> {
     const rev = (answer as { rev?: unknown } | null)?.rev
-    change(now => following(now.filter(({ key }) => key !== entry.key), entry, typeof rev === 'number' ? rev : entry.rev))
     taken.value = { entry, answer }
+    await change(now => following(now.filter(({ key }) => key !== entry.key), entry, typeof rev === 'number' ? rev : entry.rev))
   }
   /** What the last call said of the reception. */
   function heard(answered: boolean): void {
@@ -45,5 +95,5 @@ export const useOutboxStore = defineStore('outbox', () => {
     else silentSince.value ??= new Date().toISOString()
   }
 
-  return { entries, silentSince, trouble, sending, taken, add, replace, drop, refuse, settle, heard }
+  return { entries, toSend, loose, loaded, ready, silentSince, trouble, sending, taken, add, replace, drop, refuse, settle, heard }
 })

@@ -3,7 +3,8 @@ import { flushPromises } from '@vue/test-utils'
 import { getQuery, getRequestHeader, readBody, readRawBody, setResponseStatus, type H3Event } from 'h3'
 import { beforeEach, describe, expect, it, vi } from 'vitest'
 import { SwapRefused, SwapWaiting } from '#components'
-import { bytesOf, fileBodyOf, following, nextToSend, readOutbox, type OutboxEntry } from '~/utils/swap/outbox'
+import { changesTo, fileBodyOf, following, nextToSend, readOutbox, withRefusal, type OutboxEntry } from '~/utils/swap/outbox'
+import { changeRows, rowsOf } from '~/utils/device/database'
 import { begun } from '../support/swap-answers'
 import { soon } from '../support/soon'
 
@@ -30,7 +31,13 @@ const safe = { swapId: 118, tag: 'LID-02.Z', path: '/api/swaps/118/safe', rev: 3
 const me = { id: 2, name: 'Tobias Achterberg', email: 'tobias@larkfield.example', roles: ['technician'], sites: [{ id: 1, name: 'Larkfield', timeZone: 'Europe/Berlin' }], plant: 'Larkfield Preserves', empty: false, shared: false }
 const signIn = (person: { id: number, name: string } = me) => useSession().begin({ ...me, ...person } as Parameters<ReturnType<typeof useSession>['begin']>[0])
 /** What a reload finds. */
-const kept = () => readOutbox(localStorage.getItem('witnessmark-outbox') ?? '')
+const kept = async () => readOutbox(await rowsOf('outbox'))
+const isKept = (check: (entries: OutboxEntry[]) => unknown) => soon(async () => check(await kept()))
+/** What all stores of rows of this browser have in common. */
+const rowsPrototype = () => new Promise<IDBObjectStore>((resolve) => {
+  const asked = indexedDB.open('witnessmark')
+  asked.onsuccess = () => resolve(Object.getPrototypeOf(asked.result.transaction('outbox').objectStore('outbox')) as IDBObjectStore)
+})
 const cut = () => { throw new TypeError('network is cut') }
 
 beforeEach(async () => {
@@ -39,7 +46,8 @@ beforeEach(async () => {
   received.length = 0
   answer = () => ({ rev: 4 })
   const store = useOutboxStore()
-  for (const { key } of store.entries) store.drop(key)
+  await store.ready
+  for (const { key } of store.entries) await store.drop(key)
   store.silentSince = undefined
   store.trouble = null
   store.sending = false
@@ -48,8 +56,10 @@ beforeEach(async () => {
 
 describe('what is entered', () => {
   it('is sent at once with the rev it follows on and a key of its own, and is gone when it was taken', async () => {
-    expect(useOutbox().enter(safe)).toBe(true)
-    await soon(() => expect(kept()).toEqual([]))
+    void useOutbox().enter(safe)
+    expect(useOutboxStore().entries).toMatchObject([{ says: 'made safe, pin' }])
+    await soon(() => expect(useOutboxStore().entries).toEqual([]))
+    expect(await kept()).toEqual([])
     expect(received).toMatchObject([{ body: { confirmed: true, rev: 3 }, key: expect.stringMatching(/^[0-9a-f]{32}$/) as string }])
     expect(useOutboxStore().taken?.answer).toEqual({ rev: 4 })
   })
@@ -57,45 +67,45 @@ describe('what is entered', () => {
   it('waits in the browser while nothing answers, and goes out under the same key, in order', async () => {
     const fetched = vi.spyOn(globalThis, '$fetch').mockImplementation(cut)
     const outbox = useOutbox()
-    outbox.enter(safe)
-    outbox.enter({ ...safe, says: 'running' })
+    await outbox.enter(safe)
+    await outbox.enter({ ...safe, says: 'running' })
     await soon(() => expect(useOutboxStore().silentSince).toBeDefined())
-    expect(kept().map(({ says, refused }) => [says, refused])).toEqual([['made safe, pin', null], ['running', null]])
-    const [first] = kept()
+    expect((await kept()).map(({ says, refused }) => [says, refused])).toEqual([['made safe, pin', null], ['running', null]])
+    const [first] = await kept()
     fetched.mockRestore()
     await outbox.send()
     expect(received.map(({ key, body }) => [key === first?.key, (body as { rev: number }).rev])).toEqual([[true, 3], [false, 4]])
-    expect(kept()).toEqual([])
+    expect(await kept()).toEqual([])
     expect(useOutboxStore().silentSince).toBeUndefined()
   })
 
   it('stays with the reason when the vault refuses it, and holds back what follows on it', async () => {
     answer = event => problem(event, 409, 'edited-meanwhile', { current: { ...begun, rev: 7 } })
     const outbox = useOutbox()
-    outbox.enter(safe)
-    outbox.enter({ ...safe, says: 'running' })
-    await soon(() => expect(kept()[0]?.refused?.code).toBe('edited-meanwhile'))
+    await outbox.enter(safe)
+    await outbox.enter({ ...safe, says: 'running' })
+    await isKept(([first]) => expect(first?.refused?.code).toBe('edited-meanwhile'))
     expect(received).toHaveLength(1)
     answer = () => ({ rev: 8 })
     const [first] = useOutboxStore().entries
-    outbox.sendAgain(first!, 7)
-    await soon(() => expect(kept()).toEqual([]))
+    await outbox.sendAgain(first!, 7)
+    await isKept(entries => expect(entries).toEqual([]))
     expect((received[1]?.body as { rev: number }).rev).toBe(7)
     expect(received[1]?.key).not.toBe(received[0]?.key)
   })
 
   it('waits on while the vault is full, and the person is told why', async () => {
     answer = event => problem(event, 507, 'disk-full')
-    useOutbox().enter(safe)
+    await useOutbox().enter(safe)
     await soon(() => expect(useOutboxStore().trouble?.code).toBe('disk-full'))
-    expect(kept().map(({ refused }) => refused)).toEqual([null])
+    expect((await kept()).map(({ refused }) => refused)).toEqual([null])
     const shown = await mountSuspended(SwapWaiting)
     expect(shown.text()).toContain('1 entry waits on this device. disk-full. It is tried again by itself.')
   })
 
   it('of another person waits until that person signs in here', async () => {
     const fetched = vi.spyOn(globalThis, '$fetch').mockImplementation(cut)
-    useOutbox().enter(safe)
+    await useOutbox().enter(safe)
     await soon(() => expect(useOutboxStore().silentSince).toBeDefined())
     fetched.mockRestore()
     signIn({ id: 9, name: 'Runa Haldersen' })
@@ -107,31 +117,51 @@ describe('what is entered', () => {
     await soon(() => expect(received).toHaveLength(1))
   })
 
-  it('is told that there is no room for it, and keeps what was there', async () => {
-    vi.spyOn(globalThis, '$fetch').mockImplementation(cut)
-    useOutbox().enter(safe)
-    const room = localStorage
-    vi.stubGlobal('localStorage', { getItem: (name: string) => room.getItem(name), setItem: () => { throw new DOMException('full', 'QuotaExceededError') } })
-    expect(useOutbox().enter({ ...safe, says: 'running' })).toBe(false)
-    vi.unstubAllGlobals()
-    expect(kept().map(({ says }) => says)).toEqual(['made safe, pin'])
+  it('lives on the page alone where the browser has no room, says so, and is sent all the same', async () => {
+    const fetched = vi.spyOn(globalThis, '$fetch').mockImplementation(cut)
+    await useOutbox().enter(safe)
+    const full = vi.spyOn(await rowsPrototype(), 'put').mockImplementation(() => { throw new DOMException('full', 'QuotaExceededError') })
+    await useOutbox().enter({ ...safe, says: 'running' })
+    full.mockRestore()
+    expect(useOutboxStore().entries.map(({ says }) => says)).toEqual(['made safe, pin', 'running'])
+    expect((await kept()).map(({ says }) => says)).toEqual(['made safe, pin'])
+    const shown = await mountSuspended(SwapWaiting)
+    expect(shown.text()).toContain('This device has no room left. 1 entry lives on this page alone: leave it open and do not reload it until it is sent.')
+    fetched.mockRestore()
+    await useOutbox().send()
+    expect(received.map(({ body }) => (body as { rev: number }).rev)).toEqual([3, 4])
+    expect(useOutboxStore().entries).toEqual([])
+    await soon(() => expect(shown.text()).toBe(''))
   })
 
-  it('a read-back waits with its bytes', async () => {
-    const bytes = Uint8Array.from([0xff, 0xfe, 0x7b, 0x00, 0x7d, 0x00])
-    const body = await fileBodyOf(new File([bytes], 'lid-02.z.json'), 'application/json')
-    expect(body.kind === 'file' && [...bytesOf(body.base64)]).toEqual([...bytes])
-    const text = await fileBodyOf(new File(['{"a":1}'], 'lid-02.z.json'), 'application/json')
-    useOutbox().enter({ ...safe, path: '/api/swaps/118/read-back', body: text, says: 'Read-back lid-02.z.json' })
-    await soon(() => expect(kept()).toEqual([]))
-    expect(received).toMatchObject([{ body: '{"a":1}', query: { rev: '3', name: 'lid-02.z.json' } }])
+  it('of two windows of one browser stands in both', async () => {
+    vi.spyOn(globalThis, '$fetch').mockImplementation(cut)
+    await useOutbox().enter(safe)
+    const other = new BroadcastChannel('witnessmark-outbox')
+    const [row] = await rowsOf('outbox') as { order: number }[]
+    await changeRows('outbox', () => ({ put: [], drop: [row!.order] }))
+    other.postMessage('changed')
+    await soon(() => expect(useOutboxStore().entries).toEqual([]))
+    other.close()
+  })
+
+  it('a read-back of 1.8 MiB waits with its bytes, and goes out as it was', async () => {
+    const fetched = vi.spyOn(globalThis, '$fetch').mockImplementation(cut)
+    const text = JSON.stringify({ filler: 'x'.repeat(1.8 * 1024 * 1024) })
+    await useOutbox().enter({ ...safe, path: '/api/swaps/118/read-back', body: await fileBodyOf(new File([text], 'lid-02.z.json'), 'application/json'), says: 'Read-back lid-02.z.json' })
+    const [waits] = await kept()
+    expect(waits?.body.kind === 'file' && waits.body.bytes.byteLength).toBe(text.length)
+    fetched.mockRestore()
+    await useOutbox().send()
+    expect(received).toMatchObject([{ query: { rev: '3', name: 'lid-02.z.json' } }])
+    expect(received[0]?.body === text).toBe(true)
   })
 
   it('a read-back that was turned away and kept is an answer, not a conflict', async () => {
     const current = { ...begun, rev: 9 }
     answer = event => problem(event, 409, 'read-back-serial', { current })
-    useOutbox().enter({ ...safe, path: '/api/swaps/118/read-back', body: { kind: 'file', name: 'x.json', mediaType: 'application/json', base64: btoa('{}') }, says: 'Read-back x.json' })
-    await soon(() => expect(kept()).toEqual([]))
+    await useOutbox().enter({ ...safe, path: '/api/swaps/118/read-back', body: await fileBodyOf(new File(['{}'], 'x.json'), 'application/json'), says: 'Read-back x.json' })
+    await isKept(entries => expect(entries).toEqual([]))
     expect(useOutboxStore().taken?.answer).toMatchObject({ id: 118, rev: 9 })
   })
 })
@@ -141,8 +171,13 @@ describe('the store of what waits', () => {
   const refusal = { type: 'about:blank', title: 'no', status: 409, code: 'step-missing', detail: 'no' }
 
   it('leaves out what it cannot read, and keeps the rest', () => {
-    expect(readOutbox(JSON.stringify([entry({ key: 'a' }), { key: 'old form' }, entry({ key: 'b' })])).map(({ key }) => key)).toEqual(['a', 'b'])
-    expect(readOutbox('{torn')).toEqual([])
+    expect(readOutbox([entry({ key: 'a' }), { key: 'old form' }, null, entry({ key: 'b' })]).map(({ key }) => key)).toEqual(['a', 'b'])
+  })
+
+  it('changes what was changed, drops what went, and leaves the rest where it lies', () => {
+    const now = [entry({ key: 'a', order: 1 }), entry({ key: 'b', order: 2 }), entry({ key: 'c', order: 4 })]
+    expect(changesTo(now, withRefusal(now.filter(({ key }) => key !== 'a'), 'c', refusal))).toEqual({ put: [{ ...now[2], refused: refusal }], drop: [1] })
+    expect(changesTo(now, now)).toEqual({ put: [], drop: [] })
   })
 
   it('sends a swap’s entries in order, and goes on with other swaps past one that is stuck', () => {

@@ -22,7 +22,7 @@ registerEndpoint('/api/nameplates', () => ({ items: [], next: null }))
 registerEndpoint('/api/judging-context', () => ({ nameplate }))
 registerEndpoint('/api/board', () => ({ axes: [{ id: 7, tag: 'LID-02.Z', role: 'seat lid', machine: 'LID-02', line: 'Line 1' }] }))
 let next: (body: unknown) => Swap = () => swap
-for (const step of ['unit-in', 'cautions', 'safe', 'running', 'first-motion', 'abandon', 'put-back']) {
+for (const step of ['unit-in', 'cautions', 'safe', 'running', 'first-motion', 'ticks', 'note', 'abandon', 'put-back']) {
   registerEndpoint(`/api/swaps/118/${step}`, { method: 'POST', handler: async (event) => {
     const body = await readBody<unknown>(event)
     sent.push({ path: step, body })
@@ -59,8 +59,9 @@ async function hold(page: VueWrapper, word: RegExp): Promise<void> {
   await flushPromises()
 }
 
-beforeEach(() => {
-  localStorage.clear()
+beforeEach(async () => {
+  // What the test before entered was answered, so that it moves nothing here.
+  await soon(() => expect(useOutboxStore().entries).toEqual([]))
   useOutboxStore().silentSince = undefined
   sent.length = 0
   next = () => swap
@@ -108,23 +109,33 @@ describe('a swap, step by step', () => {
 
   it('asks how the load is blocked before it can be confirmed', async () => {
     const page = await pageOf(fitted)
+    const inHand = { ...fitted, rev: 4, ticks: { ...fitted.ticks, kit: { by: 'Tobias Achterberg', at: '2026-11-30T01:41:00.000Z' } } }
+    next = () => inHand
     await button(page, 'I have the kit').trigger('click')
+    await soon(() => expect(sent).toEqual([{ path: 'ticks', body: { tick: 'kit', rev: 3 } }]))
+    sent.length = 0
     expect(button(page, 'Say first how it is blocked').attributes('disabled')).toBeDefined()
     await step(page).findAll('input[type="radio"]')[1]?.setValue()
-    next = () => safe
+    next = () => ({ ...safe, rev: 5 })
     await hold(page, /^Hold: all five are done$/)
-    await soon(() => expect(sent).toEqual([{ path: 'safe', body: { confirmed: true, blocked: 'pin', rev: 3 } }]))
+    await soon(() => expect(sent).toEqual([{ path: 'safe', body: { confirmed: true, blocked: 'pin', rev: 4 } }]))
     await soon(() => expect(step(page).get('h2').text()).toContain('Write'))
   })
 
-  it('lets nothing be called written while a line is open, and keeps the ticks of this device', async () => {
+  it('lets nothing be called written while a line is open, and shows what another device ticked', async () => {
     const page = await pageOf(safe)
     await soon(() => expect(step(page).findAll('input[type="checkbox"]').length).toBeGreaterThan(6))
     expect(button(page, /^Written, 8 lines to go$/).attributes('disabled')).toBeDefined()
+    const done = { line: 'clear', words: 'Clear the whole move table', by: 'Runa Haldersen', at: '2026-11-30T02:12:00.000Z' }
+    next = () => ({ ...safe, rev: 5, ticks: { ...safe.ticks, lines: [{ ...done, line: 'reset', by: 'Tobias Achterberg' }, done] } })
     await step(page).findAll('input[type="checkbox"]')[0]?.setValue(true)
+    await soon(() => expect(sent).toEqual([{ path: 'ticks', body: { tick: 'line', line: 'reset', words: 'Reset HL40-25-00958', done: true, rev: 4 } }]))
+    await soon(() => expect(words(step(page).text())).toContain('Written, 6 lines to go'))
+    expect(words(step(page).text())).toMatch(/Clear the whole move table ?done .*03:12 CET, Runa Haldersen/)
     page.unmount()
-    const again = await pageOf(safe)
-    await soon(() => expect(words(step(again).text())).toContain('Written, 7 lines to go'))
+    const again = await pageOf(swap)
+    await soon(() => expect(words(step(again).text())).toContain('Written, 6 lines to go'))
+    again.unmount()
   })
 
   it('goes on from a verdict only when it was read', async () => {
@@ -133,7 +144,9 @@ describe('a swap, step by step', () => {
     page.unmount()
     const same = await pageOf(readBack)
     expect(words(step(same).text())).toContain('Same as the kit.')
+    next = () => ({ ...readBack, rev: 6, ticks: { ...readBack.ticks, verdict: { by: 'Tobias Achterberg', at: '2026-11-30T08:10:00.000Z', attempt: 1 } } })
     await button(same, 'Go to first motion').trigger('click')
+    await soon(() => expect(sent).toEqual([{ path: 'ticks', body: { tick: 'verdict', attempt: 1, rev: 5 } }]))
     expect(step(same).get('h2').text()).toContain('First motion')
     expect(words(step(same).text())).toContain('Nobody in reach.')
   })
@@ -142,9 +155,13 @@ describe('a swap, step by step', () => {
     const page = await pageOf({ ...readBack, step: 'running', firstMotion: { speedPercent: 10, untried: [], results: [] } })
     expect(words(step(page).text())).toContain('Without one no known-good carries over')
     await step(page).get('textarea').setValue('Gains taught with empty tool.')
+    next = () => ({ ...swap, rev: 6, draft: { note: 'Gains taught with empty tool.', by: 'Tobias Achterberg', at: '2026-11-30T08:50:00.000Z' } })
+    await step(page).get('textarea').trigger('blur')
+    await soon(() => expect(words(step(page).text())).toContain('09:50 CET, Tobias Achterberg: another device finds it too.'))
+    expect(sent.splice(0)).toEqual([{ path: 'note', body: { note: 'Gains taught with empty tool.', rev: 5 } }])
     next = () => running
     await button(page, 'It runs: hand over without an as-left').trigger('click')
-    await soon(() => expect(sent).toEqual([{ path: 'running', body: { note: 'Gains taught with empty tool.', rev: 5 } }]))
+    await soon(() => expect(sent).toEqual([{ path: 'running', body: { note: 'Gains taught with empty tool.', rev: 6 } }]))
   })
 
   it('is released by a planner who did not send the read-back', async () => {

@@ -1,30 +1,46 @@
 import { describe, expect, it } from 'vitest'
 import type { BoardAxis } from '#shared/api/board'
+import type { Swap } from '#shared/api/swaps'
 import { axesByLetters } from '~/utils/swap/find'
 import { tagOfLabel } from '~/utils/swap/label'
 import { writeLines } from '~/utils/swap/lines'
+import { foldedLog } from '~/utils/swap/log'
 import { itemNow, listedItems, resultsOf, secondsWords } from '~/utils/swap/motion'
 import type { OutboxEntry } from '~/utils/swap/outbox'
-import { noTicks, standingOf } from '~/utils/swap/steps'
+import { noteOf, standingOf, ticksOf } from '~/utils/swap/steps'
 import { summaryOf } from '~/utils/swap/summary'
 import { listedName, valueName } from '~/utils/swap/words'
 import { formatWhen } from '~/utils/dates'
-import { attempt, begun, fitted, likeUnit, movedAll, readBack, rescaled, running, safe, swapKit } from '../support/swap-answers'
+import { attempt, begun, fitted, movedAll, readBack, rescaled, running, safe, swapKit } from '../support/swap-answers'
 
 const waiting = (step: string, value: Record<string, unknown> = {}): OutboxEntry => ({
   key: step, personId: 2, person: 'Tobias Achterberg', swapId: 118, tag: 'LID-02.Z', path: `/api/swaps/118/${step}`, rev: 3, body: { kind: 'json', value }, says: step, enteredAt: '2026-11-30T02:10:00.000Z', refused: null,
 })
-const open = (swap: typeof begun, ticks: Partial<typeof noTicks> = {}, entries: OutboxEntry[] = []) => standingOf(swap, { ...noTicks, ...ticks }, entries).open
+const by = { by: 'Tobias Achterberg', at: '2026-11-30T02:10:00.000Z' }
+const ticked = (swap: Swap, ticks: Partial<Swap['ticks']>): Swap => ({ ...swap, ticks: { ...swap.ticks, ...ticks } })
+const open = (swap: Swap, entries: OutboxEntry[] = []) => standingOf(swap, entries).open
 
 describe('the step that is open', () => {
-  it('goes by the vault, and between its steps by what was ticked here', () => {
-    expect([open(begun), open(rescaled), open(fitted), open(fitted, { kitFor: likeUnit.id }), open(safe), open(safe, { writtenFor: likeUnit.id })]).toEqual([2, 2, 3, 4, 5, 6])
-    expect([open(readBack), open(readBack, { wentOnFrom: 1 }), open(readBack, { wentOnFrom: 1, ranOnFor: likeUnit.id }), open(movedAll), open(running)]).toEqual([6, 7, 8, 8, 9])
+  it('goes by what the vault says was done and ticked, on whichever device', () => {
+    expect([open(begun), open(rescaled), open(fitted), open(ticked(fitted, { kit: by })), open(safe), open(ticked(safe, { written: by }))]).toEqual([2, 2, 3, 4, 5, 6])
+    const read = ticked(readBack, { verdict: { ...by, attempt: 1 } })
+    expect([open(readBack), open(read), open(ticked(read, { motion: by })), open(movedAll), open(running)]).toEqual([6, 7, 8, 8, 9])
     expect([open({ ...running, step: 'released' }), open({ ...safe, step: 'abandoned' })]).toEqual([null, null])
   })
 
-  it('asks for the kit anew when another unit goes in', () => {
-    expect(open({ ...fitted, unitIn: { ...likeUnit, id: 77 } }, { kitFor: likeUnit.id })).toBe(3)
+  it('counts what was ticked here and waits, and takes back what was taken back', () => {
+    expect([open(fitted, [waiting('ticks', { tick: 'kit' })]), open(safe, [waiting('ticks', { tick: 'written' })]), open(readBack, [waiting('ticks', { tick: 'verdict', attempt: 1 })])]).toEqual([4, 6, 7])
+    const { lines } = ticksOf(ticked(safe, { lines: [{ ...by, line: 'reset', words: 'Reset' }, { ...by, line: 'clear', words: 'Clear' }] }), [
+      waiting('ticks', { tick: 'line', line: 'reset', words: 'Reset', done: false }), waiting('ticks', { tick: 'line', line: 'values', words: 'Write', done: true }),
+    ])
+    expect([...lines]).toEqual([['clear', by], ['values', undefined]])
+    expect([...standingOf(fitted, [waiting('ticks', { tick: 'kit' })]).waits]).toEqual([3])
+  })
+
+  it('has the note that waits here before the one that the vault has', () => {
+    const draft = { ...by, note: 'Lamp of X4' }
+    expect([noteOf(movedAll, []), noteOf({ ...movedAll, draft }, []), noteOf({ ...movedAll, draft }, [waiting('note', { note: 'a' }), waiting('note', { note: '' })])]).toEqual(['', 'Lamp of X4', ''])
+    expect(open(movedAll, [waiting('note', { note: 'a' })])).toBe(8)
   })
 
   it('stays at the unit while newtons or an unfit unit want a name', () => {
@@ -38,7 +54,7 @@ describe('the step that is open', () => {
   it('counts no read-back of a unit that went out again', () => {
     const back = { ...safe, putBack: true, readBacks: [attempt(1)], log: [...begun.log, { rev: 8, at: '2026-11-30T09:00:00.000Z', by: 'Tobias Achterberg', act: 'put-back', text: 'HL40-23-00417 went back in.' }] }
     expect(open(back)).toBe(5)
-    expect(open({ ...back, step: 'first-motion', readBacks: [attempt(1), attempt(2, { at: '2026-11-30T09:10:00.000Z' })] }, { wentOnFrom: 1 })).toBe(6)
+    expect(open({ ...back, step: 'first-motion', readBacks: [attempt(1), attempt(2, { at: '2026-11-30T09:10:00.000Z' })], ticks: { ...back.ticks, verdict: { ...by, attempt: 1 } } })).toBe(6)
   })
 
   it('stays at the first motion while an item is untried or at fault', () => {
@@ -48,11 +64,11 @@ describe('the step that is open', () => {
   })
 
   it('goes on without reception as far as this device can tell', () => {
-    const cut = standingOf(fitted, { ...noTicks, kitFor: likeUnit.id }, [waiting('safe')])
+    const cut = standingOf(ticked(fitted, { kit: by }), [waiting('safe')])
     expect([cut.open, [...cut.waits]]).toEqual([5, [4]])
-    expect(open(fitted, { kitFor: likeUnit.id, writtenFor: likeUnit.id }, [waiting('safe')])).toBe(6)
-    expect(open(readBack, { wentOnFrom: 1 }, [waiting('first-motion')])).toBe(7)
-    expect(open(movedAll, {}, [waiting('running')])).toBe(9)
+    expect(open(fitted, [waiting('safe'), waiting('ticks', { tick: 'written' })])).toBe(6)
+    expect(open(readBack, [waiting('first-motion')])).toBe(7)
+    expect(open(movedAll, [waiting('running')])).toBe(9)
   })
 })
 
@@ -72,6 +88,14 @@ describe('what is written', () => {
   it('leaves a drive that stays alone', () => {
     expect(keys({ ...fitted, replaced: 'actuator' }, { ...swapKit, prove: [] })).toEqual(['values', 'restart', 'home', 'zero'])
     expect(writeLines({ ...fitted, replaced: 'actuator' }, swapKit)[0]?.label).toBe('The drive keeps its values')
+  })
+})
+
+describe('what was done', () => {
+  const line = (rev: number, act: string, who = 'Tobias Achterberg') => ({ rev, at: '2026-11-30T02:10:00.000Z', by: who, act, text: `${act} ${rev}` })
+  it('stands newest first, ticks of one person in a row as one', () => {
+    const log = [line(1, 'opened'), line(2, 'ticked'), line(3, 'ticked'), line(4, 'ticked', 'Runa Haldersen'), line(5, 'ticked', 'Runa Haldersen'), line(6, 'read-back'), line(7, 'read-back'), line(8, 'note')]
+    expect(foldedLog(log).map(({ newest, before }) => [newest.rev, ...before.map(({ rev }) => rev)])).toEqual([[8], [7], [6], [5, 4], [3, 2], [1]])
   })
 })
 

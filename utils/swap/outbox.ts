@@ -3,14 +3,16 @@ import { z } from 'zod'
 
 /*
  * What was entered without reception waits in this browser, in the order in which it was entered, each under the
- * Idempotency-Key it was first tried with: sent twice it counts once.
+ * Idempotency-Key it was first tried with: sent twice it counts once. `order` is its place there; an entry for which the
+ * browser had no room has none, and lives as long as the page.
  */
 
 const jsonBody = z.object({ kind: z.literal('json'), value: z.record(z.string(), z.unknown()) })
-/** A file by its bytes, base 64. */
-const fileBody = z.object({ kind: z.literal('file'), name: z.string(), mediaType: z.string(), base64: z.string() })
+const bytes = z.custom<Uint8Array<ArrayBuffer>>(value => ArrayBuffer.isView(value))
+const fileBody = z.object({ kind: z.literal('file'), name: z.string(), mediaType: z.string(), bytes })
 
 const entrySchema = z.object({
+  order: z.int().optional(),
   key: z.string(),
   /** Whose entry: sent only while that person is signed in here. */
   personId: z.int(), person: z.string(),
@@ -26,24 +28,19 @@ const entrySchema = z.object({
   refused: problemSchema.nullable(),
 })
 export type OutboxEntry = z.infer<typeof entrySchema>
-export type OutboxBody = OutboxEntry['body']
 
 /** What a browser kept; entries that this version cannot read are left out rather than sent wrong. */
-export function readOutbox(text: string): OutboxEntry[] {
-  const list = z.array(z.unknown()).safeParse(jsonOf(text))
-  return (list.data ?? []).flatMap((one) => {
-    const read = entrySchema.safeParse(one)
+export function readOutbox(rows: readonly unknown[]): OutboxEntry[] {
+  return rows.flatMap((row) => {
+    const read = entrySchema.safeParse(row)
     return read.success ? [read.data] : []
   })
 }
 
-function jsonOf(text: string): unknown {
-  try {
-    return JSON.parse(text)
-  }
-  catch {
-    return undefined
-  }
+/** What is to be put and dropped so that the entries of `now` become those of `next`; rows that were not read stay. */
+export function changesTo(now: readonly OutboxEntry[], next: readonly OutboxEntry[]): { put: OutboxEntry[], drop: number[] } {
+  const stays = new Set(next.map(({ key }) => key))
+  return { put: next.filter(entry => !now.includes(entry)), drop: now.flatMap(({ key, order }) => stays.has(key) || order === undefined ? [] : [order]) }
 }
 
 /** The entry to be sent next: the oldest of this person whose swap has none before it that was refused. */
@@ -61,16 +58,6 @@ export function following(entries: readonly OutboxEntry[], { swapId, rev }: Outb
   return entries.map(entry => entry.swapId === swapId && entry.rev === rev ? { ...entry, rev: to } : entry)
 }
 
-/** Largest file that is kept for later, in bytes: a browser keeps about five million characters in all. */
-export const keptFileLimit = 1024 * 1024
-
-export async function fileBodyOf(file: File, mediaType: string): Promise<OutboxBody> {
-  const bytes = new Uint8Array(await file.arrayBuffer())
-  let binary = ''
-  for (let at = 0; at < bytes.length; at += 0x8000) binary += String.fromCharCode(...bytes.subarray(at, at + 0x8000))
-  return { kind: 'file', name: file.name, mediaType, base64: btoa(binary) }
-}
-
-export function bytesOf(base64: string): Uint8Array<ArrayBuffer> {
-  return Uint8Array.from(atob(base64), letter => letter.charCodeAt(0))
+export async function fileBodyOf(file: File, mediaType: string): Promise<OutboxEntry['body']> {
+  return { kind: 'file', name: file.name, mediaType, bytes: new Uint8Array(await file.arrayBuffer()) }
 }

@@ -69,11 +69,16 @@ export function useOutbox() {
 
   /** The same entry once more, following on what the other device did. */
   async function sendAgain(entry: OutboxEntry, rev: number): Promise<void> {
-    await store.replace(entry.key, { ...entry, key: newRequestKey(), rev, refused: null })
+    await store.decide(entry, rev, { ...entry, key: newRequestKey(), rev, refused: null })
+    void send()
+  }
+  /** It is left out; what was entered after it goes on without it. */
+  async function leaveOut(entry: OutboxEntry, rev: number): Promise<void> {
+    await store.decide(entry, rev)
     void send()
   }
 
-  return { enter, send, sendAgain, leaveOut: store.drop }
+  return { enter, send, sendAgain, leaveOut }
 }
 
 /** Tries again while something waits; once for the whole application, in its frame. */

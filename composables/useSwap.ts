@@ -81,7 +81,7 @@ export function useSwap(id: () => number) {
   }
   /** A note that was not sent yet gives way to the newer one. */
   async function enterNote(note: string, rev: number): Promise<void> {
-    for (const { key } of waiting.value.filter(entry => entry.path === path('/note'))) await outbox.leaveOut(key)
+    for (const { key } of waiting.value.filter(entry => entry.path === path('/note'))) await store.drop(key)
     await enter('note', { note }, note === '' ? 'hand-over note emptied' : `hand-over note “${note.length > 80 ? `${note.slice(0, 80)}…` : note}”`, rev)
   }
 

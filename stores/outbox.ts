@@ -80,7 +80,10 @@ export const useOutboxStore = defineStore('outbox', () => {
       coming.value = coming.value.filter(({ key }) => key !== entry.key)
     }
   }
-  const replace = (key: string, by: OutboxEntry) => change(now => now.map(entry => entry.key === key ? { ...by, order: entry.order } : entry))
+  /** The person has seen what another device did and decided: what was entered after it follows on the swap as it stands. */
+  const decide = (refused: OutboxEntry, rev: number, again?: OutboxEntry) => change(now => following(
+    now.flatMap(entry => entry.key !== refused.key ? [entry] : again ? [{ ...again, order: entry.order }] : []), refused, rev,
+  ))
   const drop = (key: string) => change(now => now.filter(entry => entry.key !== key))
   const refuse = (key: string, problem: OutboxEntry['refused']) => change(now => withRefusal(now, key, problem))
   /** Taken: it goes, and what was entered after it follows on the answer. */
@@ -95,5 +98,5 @@ export const useOutboxStore = defineStore('outbox', () => {
     else silentSince.value ??= new Date().toISOString()
   }
 
-  return { entries, toSend, loose, loaded, ready, silentSince, trouble, sending, taken, add, replace, drop, refuse, settle, heard }
+  return { entries, toSend, loose, loaded, ready, silentSince, trouble, sending, taken, add, decide, drop, refuse, settle, heard }
 })

@@ -92,6 +92,20 @@ describe('what is entered', () => {
     await isKept(entries => expect(entries).toEqual([]))
     expect((received[1]?.body as { rev: number }).rev).toBe(7)
     expect(received[1]?.key).not.toBe(received[0]?.key)
+    // What was entered after it follows on the answer, and asks nothing of its own.
+    expect(received.map(({ body }) => (body as { rev: number }).rev)).toEqual([3, 7, 8])
+  })
+
+  it('left out, lets what was entered after it go on from where the swap stands', async () => {
+    answer = event => problem(event, 409, 'edited-meanwhile', { current: { ...begun, rev: 7 } })
+    const outbox = useOutbox()
+    await outbox.enter(safe)
+    await outbox.enter({ ...safe, says: 'running' })
+    await isKept(([first]) => expect(first?.refused?.code).toBe('edited-meanwhile'))
+    answer = () => ({ rev: 8 })
+    await outbox.leaveOut(useOutboxStore().entries[0]!, 7)
+    await isKept(entries => expect(entries).toEqual([]))
+    expect(received.map(({ body }) => (body as { rev: number }).rev)).toEqual([3, 7])
   })
 
   it('waits on while the vault is full, and the person is told why', async () => {

@@ -168,6 +168,17 @@ describe('the first motion', () => {
     expect(words(step.get('.now').text())).toMatch(/“went the other way”.*As it should$/)
   })
 
+  it('shows each result of an item that was repeated, the newest first, those of one moment too', async () => {
+    const at = '2026-11-30T08:40:00.000Z'
+    const told = (outcome: 'ok' | 'fault', text: string | null, when = at) => ({ item: 'jog', outcome, text, by: 'Tobias Achterberg', at: when })
+    const results = [told('fault', 'went the other way'), told('fault', 'still the other way'), told('ok', null, '2026-11-30T08:52:00.000Z')]
+    const step = await mountSuspended(SwapStepMotion, { props: { ...props, swap: { ...readBack, firstMotion: { speedPercent: 10, untried: ['brake-hold', 'move-0', 'chain-3'], results } } } })
+    expect(step.findAll('.result').map(each => words(each.text()).replace(/^(fault|as it should) .*?(\d\d:\d\d)/, '$1 $2'))).toEqual([
+      'as it should 09:52 CET, Tobias Achterberg', 'fault 09:40 CET, Tobias Achterberg: “still the other way”', 'fault 09:40 CET, Tobias Achterberg: “went the other way”',
+    ])
+    expect(words(step.get('.now').text())).toContain('Enable off')
+  })
+
   it('says the inputs that call a move, and draws a chain', async () => {
     const ok = (item: string) => ({ item, outcome: 'ok' as const, text: null, by: 'Tobias Achterberg', at: '2026-11-30T08:40:00.000Z' })
     const step = await mountSuspended(SwapStepMotion, { props: { ...props, swap: { ...readBack, firstMotion: { speedPercent: 10, untried: ['move-0', 'chain-3'], results: [ok('jog'), ok('brake-hold')] } } } })

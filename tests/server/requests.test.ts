@@ -153,6 +153,19 @@ describe('answers', () => {
     expect(features.map(([name]) => name)).not.toContain('web-share')
   })
 
+  it('of the worker that keeps the swap pages name each file of the page, and the policy lets none but ours run', async () => {
+    const worker = await fetch(`${server.url}/service-worker.js`)
+    expect(worker.headers.get('content-type')).toMatch(/javascript/)
+    const { release, files } = JSON.parse(/^const shell = (.*)$/m.exec(await worker.text())?.[1] ?? '{}') as { release: string, files: string[] }
+    expect(release).toMatch(/^[0-9a-f]{16}$/)
+    expect(files.length).toBeGreaterThan(10)
+    const statuses = await Promise.all(files.map(async path => [path, (await fetch(server.url + path)).status]))
+    expect(statuses.filter(([, status]) => status !== 200)).toEqual([])
+    expect(files.filter(path => !path.startsWith('/_nuxt/'))).toEqual(['/favicon.svg'])
+    const policy = (await fetch(`${server.url}/swaps`)).headers.get('content-security-policy') ?? ''
+    expect(policy).toContain('worker-src \'self\'')
+  })
+
   it('of the table and of the format are there for programs', async () => {
     expect((await server.call('GET', '/api/openapi.json')).json).toMatchObject({ openapi: '3.1.0' })
     expect((await server.call('GET', '/api/format/schema.json')).text).toContain('json-schema.org/draft/2020-12')

@@ -150,6 +150,7 @@ describe('words', () => {
     expect(done(running, 1)).toBe('02:19 CET, Tobias Achterberg. Whole unit HL40-23-00417, encoder fault.')
     expect(done({ ...rescaled, forcesConfirmed: { by: 'Tobias Achterberg', at: '2026-11-30T01:36:00.000Z' } }, 2)).toBe('HL50-25-01203, 2 values rescaled, confirmed by Tobias Achterberg.')
     expect(done(running, 4)).toBe('03:05 CET, Tobias Achterberg. Blocked: pin.')
+    expect([done(running, 5), done(ticked(running, { written: by, lines: [{ ...by, line: 'reset', words: 'Reset' }] }), 5)]).toEqual(['Written, line by line.', '1 line written, 03:10 CET, Tobias Achterberg.'])
     expect(done({ ...running, readBacks: [attempt(1, { compare: null, problem: 'serial' })] }, 6)).toBe('Not taken, 09:02 CET, Tobias Achterberg. 1 attempt.')
     expect(done(running, 7)).toBe('4 items at 10 %, all as they should.')
     expect(summaryOf(running, 9, false, when)).toBe('A planner signs, by day')

@@ -25,7 +25,7 @@ export function writeLines(swap: Swap, kit: SwapKit | undefined, nameplate?: Nam
     ...kit.prove.filter(name => name !== 'homeOffset').map((name) => {
       const { label, unit } = listedName(name, axisKind, nameplate)
       const value = setup[name] ?? kit.content.extra[name.replace(/^extra:/, '')]
-      return { key: `prove ${name}`, label: `Prove ${label.toLowerCase()}, ${bareValue(value)} ${unit}`.trim(), hint: 'copied; look whether it holds on this unit' }
+      return { key: `prove ${name}`, label: `Prove ${label.toLowerCase()}, ${bareValue(value)} ${unit === 'drive’s own' ? 'in the drive’s own unit' : unit}`.trim(), hint: 'copied; look whether it holds on this unit' }
     }),
   ]
 }

@@ -20,7 +20,7 @@ function doneWords(swap: Swap, step: StepNumber, when: (iso: string) => string):
     case 2: return `${swap.unitIn?.serial ?? ''}, ${fitWords(swap)}`
     case 3: return swap.kit ? `${swap.kit.scribeCode}. ${stamp(swap.cautions) && `Cautions read ${stamp(swap.cautions)}`}` : ''
     case 4: return `${stamp(swap.safe)}${swap.safe?.blocked ? ` Blocked: ${swap.safe.blocked}.` : ''}`
-    case 5: return 'Written, line by line.'
+    case 5: return swap.ticks.written ? `${counted(swap.ticks.lines.length, 'line', 'lines')} written, ${stamp(swap.ticks.written)}` : 'Written, line by line.'
     case 6: return readBackWords(swap, when)
     case 7: return motionWords(swap)
     case 8: return stamp(swap.running)

@@ -18,6 +18,8 @@ import { readSwap } from './read-swap'
 import { placeOf } from './sides'
 import { logStep, takerOf } from './take-step'
 
+const replacedWords = { unit: 'the whole unit', drive: 'the drive alone', actuator: 'the actuator alone' } as const
+
 /** Begins a swap. What goes to the new unit is the known-good in force, else the newest version, which is then not released. */
 export function openSwap(vault: Vault, actor: PersonActor, body: z.output<typeof swapOpenBody>): Swap {
   return vault.write(actor, (write) => {
@@ -35,7 +37,7 @@ export function openSwap(vault: Vault, actor: PersonActor, body: z.output<typeof
     }
     if (body.replaced === 'actuator' && !unitOut) throw new Refusal('not-fitted', 'No unit sits at this axis: which drive keeps its place?')
     const id = swapQueries(db).insert(row)
-    const text = `Swap opened: ${body.replaced} of ${unitOut?.serial ?? 'an axis without a unit'}. ${body.failure}`
+    const text = `Swap opened: ${unitOut?.serial ?? 'an axis without a unit'}, ${replacedWords[body.replaced]}. ${body.failure}`
     logStep(db, write, swapQueries(db), { swapId: id, rev: 1, act: 'opened', text, said: { replaced: body.replaced, failure: body.failure, unitOutId: row.unitOutId, ...source } })
     write.log({ act: 'swap-opened', id, state: { id, ...row }, note: text })
     refreshAxisState(db, body.axisId)

@@ -50,7 +50,7 @@ describe('a swap from a dead unit to a released one', () => {
     release(here, id)
     const { items } = axisLife(here.plant.vault, here.axisId, { limit: 200 })
     expect(items.filter(({ kind }) => kind === 'swap').map(({ by, text }) => `${by}: ${text}`)).toEqual([
-      'Runa Haldersen: Released; the mark names version 3 now.', 'Tobias Achterberg: Running, not released; as-left is version 3.', 'Tobias Achterberg: Swap opened: unit of SN-0001. following error, motor hot',
+      'Runa Haldersen: Released; the mark names version 3 now.', 'Tobias Achterberg: Running, not released; as-left is version 3.', 'Tobias Achterberg: Swap opened: SN-0001, the whole unit. following error, motor hot',
     ])
     const paged = [axisLife(here.plant.vault, here.axisId, { limit: 4 })]
     while (paged.at(-1)?.next) paged.push(axisLife(here.plant.vault, here.axisId, { limit: 4, cursor: paged.at(-1)?.next ?? '' }))

@@ -44,7 +44,9 @@ async function openPage(request) {
   const kept = await (await caches.open(mine)).match(page)
   if (!kept) return fetch(request)
   const late = new Promise((resolve) => { setTimeout(resolve, patience, kept) })
-  return Promise.race([fetch(request).catch(() => kept), late])
+  // A door before a vault that is down answers too, with a page of its own.
+  const answer = fetch(request).then(given => given.status < 500 ? given : kept, () => kept)
+  return Promise.race([answer, late])
 }
 
 /** A hashed file never changes: kept is as good as sent. */

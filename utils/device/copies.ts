@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { changeRows, putRow, rowOf, rowsOf } from './database'
+import { changeRows, putRow, rowOf } from './database'
 
 /*
  * Copies of what a page read last, so that a reload without reception shows it again. The vault's answers say `no-store`, and
@@ -47,11 +47,6 @@ export async function copyOf(name: string, now: number, personId?: number): Prom
 }
 
 const isShown = ({ readAt }: Copy, now: number) => now - Date.parse(readAt) < shownFor
-
-/** Every copy of a person that is still shown, the newest first. */
-export async function copiesOfPerson(personId: number, now: number): Promise<Copy[]> {
-  return copiesOf(await orElse(rowsOf('copies'), [])).filter(copy => copy.personId === personId && isShown(copy, now)).sort(newestFirst)
-}
 
 /** Takes away what is too old, and of the rest all but the newest. */
 export async function trimCopies(now: number): Promise<void> {

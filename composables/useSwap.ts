@@ -40,11 +40,11 @@ export function useSwap(id: () => number) {
   watch(() => store.taken, taken => taken?.entry.swapId === id() && answered(taken.answer), { flush: 'sync' })
   useIntervalFn(() => { if (visibility.value === 'visible') void reload() }, lookAgain)
 
-  const mine = computed(() => store.entries.filter(entry => entry.swapId === id()))
+  const mine = computed(() => store.entries.filter(entry => entry.swapId === id() && entry.personId === session.me?.id))
   const waiting = computed(() => mine.value.filter(({ refused }) => refused === null))
   const refused = computed(() => mine.value.find(entry => entry.refused !== null))
-  // A refusal brings along what the other device did.
-  watch(() => refused.value?.refused?.current, current => current && take(current as Swap))
+  // What the other device did is shown beside what was refused.
+  watch(() => refused.value?.key, key => key && reload())
   const standing = computed(() => swap.value && store.loaded ? standingOf(swap.value, waiting.value) : undefined)
 
   /** What is in, and by which values: what was read for it holds until that changes. */

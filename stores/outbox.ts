@@ -85,7 +85,8 @@ export const useOutboxStore = defineStore('outbox', () => {
     now.flatMap(entry => entry.key !== refused.key ? [entry] : again ? [{ ...again, order: entry.order }] : []), refused, rev,
   ))
   const drop = (key: string) => change(now => now.filter(entry => entry.key !== key))
-  const refuse = (key: string, problem: OutboxEntry['refused']) => change(now => withRefusal(now, key, problem))
+  /** Why it was not taken, in words about the entry: what the vault answered of the swap does not stay with it on the device. */
+  const refuse = (key: string, { current: _current, detail, ...problem }: Problem) => change(now => withRefusal(now, key, { ...problem, detail: problem.code === 'edited-meanwhile' ? '' : detail }))
   /** Taken: it goes, and what was entered after it follows on the answer. */
   async function settle(entry: OutboxEntry, answer: unknown): Promise<void> {
     const rev = (answer as { rev?: unknown } | null)?.rev

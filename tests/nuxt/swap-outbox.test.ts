@@ -86,6 +86,9 @@ describe('what is entered', () => {
     await outbox.enter({ ...safe, says: 'running' })
     await isKept(([first]) => expect(first?.refused?.code).toBe('edited-meanwhile'))
     expect(received).toHaveLength(1)
+    // What the vault answered of the swap is not left on the device.
+    expect((await kept())[0]?.refused).toMatchObject({ detail: '' })
+    expect((await kept())[0]?.refused).not.toHaveProperty('current')
     answer = () => ({ rev: 8 })
     const [first] = useOutboxStore().entries
     await outbox.sendAgain(first!, 7)

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import type { BoardAxis } from '#shared/api/board'
 import type { Swap } from '#shared/api/swaps'
 import { axesByLetters } from '~/utils/swap/find'
-import { tagOfLabel } from '~/utils/swap/label'
+import { swapOfCode, tagOfLabel } from '~/utils/swap/label'
 import { writeLines } from '~/utils/swap/lines'
 import { foldedLog } from '~/utils/swap/log'
 import { itemNow, listedItems, resultsOf, secondsWords } from '~/utils/swap/motion'
@@ -129,6 +129,8 @@ describe('three characters of a tag', () => {
 describe('a label', () => {
   it('says its tag by address or bare; anything else is none of ours', () => {
     expect(['https://vault.example/axes/LID-02.Z', 'http://10.0.0.4:3000/axes/A%2E1/?x=1#y', 'LID-02.Z'].map(tagOfLabel)).toEqual(['LID-02.Z', 'A.1', 'LID-02.Z'])
+    expect(['https://vault.example/swaps/118', '/swaps/9/?x=1#y'].map(swapOfCode)).toEqual([118, 9])
+    expect(['https://vault.example/axes/LID-02.Z', '/swaps/', '/swaps/0', '/swaps/9x', '118'].map(swapOfCode)).toEqual([undefined, undefined, undefined, undefined, undefined])
     expect(['https://vault.example/units/7', 'WIFI:S:plant;;', '/axes/%E0%A4%A', ''].map(tagOfLabel)).toEqual([undefined, undefined, undefined, undefined])
   })
 })

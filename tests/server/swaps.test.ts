@@ -67,6 +67,8 @@ describe('a swap through the routes', () => {
     const stale = await step(id, 'safe', { confirmed: true, rev: 1 })
     expect(stale).toMatchObject({ status: 409, json: { code: 'edited-meanwhile', current: { step: 'safe', unitIn: { serial: 'SN-0002' } } } })
     expect((stale.json as unknown as { detail: string }).detail).toContain('SN-0002 (HL40-200V) goes in.')
+    expect(await step(id, 'safe', { confirmed: true })).toMatchObject({ status: 409, json: { code: 'cautions-unread', detail: 'Read the cautions first; then make the axis safe.' } })
+    expect((await step(id, 'cautions', { read: true })).status).toBe(200)
     expect(await step(id, 'safe', { confirmed: true })).toMatchObject({ status: 200, json: { step: 'read-back' } })
   })
 

@@ -5,7 +5,8 @@ import type { PersonActor } from '../../server/database/actor'
 import { markKnownGood } from '../../server/services/known-good/mark'
 import { recordMotion, sayRunning } from '../../server/services/swaps/motion'
 import { openSwap } from '../../server/services/swaps/open-swap'
-import { makeSafe } from '../../server/services/swaps/make-safe'
+import { makeSafe, readCautions } from '../../server/services/swaps/make-safe'
+import { readSwap } from '../../server/services/swaps/read-swap'
 import { readBackUnit } from '../../server/services/swaps/read-back'
 import { takeUnitIn } from '../../server/services/swaps/unit-in'
 import { storeUpload } from '../../server/services/uploads/store-upload'
@@ -60,7 +61,11 @@ function actsOf(plant: Plant, tobias: PersonActor, axisId: number) {
     file,
     open: (replaced: 'unit' | 'drive' | 'actuator' = 'unit') => openSwap(vault, tobias, { axisId, replaced, failure: 'following error, motor hot' }),
     unitIn: (id: number, serial = 'SN-0002', more: Partial<z.output<typeof unitInBody>> = {}) => takeUnitIn(vault, tobias, id, { serial, ...more }),
-    safe: (id: number) => makeSafe(vault, tobias, id, { confirmed: true }),
+    cautions: (id: number) => readCautions(vault, tobias, id, { read: true }),
+    safe: (id: number) => {
+      if (!readSwap(vault.db, id, iso(plant.now)).cautions) readCautions(vault, tobias, id, { read: true })
+      return makeSafe(vault, tobias, id, { confirmed: true })
+    },
     readBack: (id: number, bytes: Buffer, actor: PersonActor = tobias) => readBackUnit(vault, actor, id, { bytes, name: 'back.json' }, {}),
     motion: (id: number, items: readonly string[] = ['jog', 'enable-loss', 'emergency-stop', 'move-0', 'chain-1']) =>
       recordMotion(vault, tobias, id, { speedPercent: 10, results: items.map(item => ({ item, outcome: 'ok' as const })) }),

@@ -17,6 +17,12 @@ export async function labelReader(): Promise<Detector | undefined> {
 
 const tagForm = /^[A-Za-z0-9._-]{1,32}$/
 
+/** The swap that a restore sheet leads to; undefined for every other code. */
+export function swapOfCode(text: string): number | undefined {
+  const [, id] = /\/swaps\/([1-9]\d{0,14})\/?(?:[?#].*)?$/.exec(text.trim()) ?? []
+  return id === undefined ? undefined : Number(id)
+}
+
 /** The tag that a label carries: the end of the address of its axis, or the bare tag; undefined where it is no label of ours. */
 export function tagOfLabel(text: string): string | undefined {
   const [, inAddress] = /\/axes\/([^/?#]+)\/?(?:[?#].*)?$/.exec(text.trim()) ?? []

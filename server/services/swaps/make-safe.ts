@@ -31,6 +31,7 @@ export function makeSafe(vault: Vault, actor: PersonActor, id: number, { rev, bl
     const goes = kitCaseOf(db, before)
     if (goes) assertMayGoIn(db, before, goes, write.now)
     const reached = openSwapRow(db, write, id, rev, 'safe')
+    if (reached.facts.cautions === undefined) throw new Refusal('cautions-unread', 'Read the cautions first; then make the axis safe.')
     if (goes && loadCanFall(goes.place, goes.kit) && blocked === undefined) {
       const message = 'A load can fall here: say how it is blocked. prop, pin or lowered.'
       throw new Refusal('input', message, { errors: [{ at: '/blocked', code: 'missing', message }] })

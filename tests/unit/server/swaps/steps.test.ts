@@ -42,7 +42,7 @@ describe('a swap from a dead unit to a released one', () => {
     expect(readAxis(here.plant.vault, here.axisId)).toMatchObject({ status: 'in-line', knownGood: { number: 3, by: 'Runa Haldersen' } })
     expect(here.plant.vault.sqlite.prepare('SELECT version_id, carried_from FROM known_good ORDER BY id DESC').get()).toEqual({ version_id: left.version.id, carried_from: here.versionId })
     expect(readUnit(here.plant.vault, here.old).state).toBe('repair')
-    expect(swapOf(here.plant.vault, id).log.map(({ act }) => act)).toEqual(['opened', 'unit-in', 'safe', 'read-back', 'first-motion', 'read-back', 'running', 'released'])
+    expect(swapOf(here.plant.vault, id).log.map(({ act }) => act)).toEqual(['opened', 'unit-in', 'cautions', 'safe', 'read-back', 'first-motion', 'read-back', 'running', 'released'])
   })
 
   it('stands in the life of the axis: begun, running, released, between what was fitted and read', () => {
@@ -138,7 +138,8 @@ describe('two devices', () => {
       expect([code, message]).toEqual(['edited-meanwhile', 'Another device went on meanwhile. Tobias Achterberg: SN-0002 (HL40-200V) goes in.'])
       expect(details.current).toMatchObject({ rev: 2, step: 'safe' })
     }
-    expect(makeSafe(here.plant.vault, here.tobias, id, { rev: 2, confirmed: true })).toMatchObject({ rev: 3, step: 'read-back' })
+    here.cautions(id)
+    expect(makeSafe(here.plant.vault, here.tobias, id, { rev: 3, confirmed: true })).toMatchObject({ rev: 4, step: 'read-back' })
   })
 })
 
@@ -150,6 +151,14 @@ describe('what stands before the steps', () => {
     expect(swapOf(here.plant.vault, id).loadCanFall).toBe(true)
     expect(codeOf(() => here.safe(id))).toBe('input')
     expect(makeSafe(here.plant.vault, here.tobias, id, { confirmed: true, blocked: 'pin' })).toMatchObject({ safe: { blocked: 'pin' } })
+  })
+
+  it('nobody goes to the machine with the cautions unread', () => {
+    const { id } = here.open()
+    here.unitIn(id)
+    expect(codeOf(() => makeSafe(here.plant.vault, here.tobias, id, { confirmed: true }))).toBe('cautions-unread')
+    here.cautions(id)
+    expect(makeSafe(here.plant.vault, here.tobias, id, { confirmed: true })).toMatchObject({ step: 'read-back' })
   })
 
   it('the cautions are read once a swap, or with each kit', () => {

@@ -16,6 +16,7 @@ import { swap } from '../swap/table'
 import { unit } from '../unit/table'
 import { version } from '../version/table'
 import { axisState } from './table'
+import { touchedSince } from './touched'
 
 const current = alias(version, 'current_version')
 const marked = alias(version, 'marked_version')
@@ -62,14 +63,25 @@ const kept = new WeakMap<VaultDb, { readonly logSeq: number, readonly rows: read
 
 /**
  * Every axis of the sites, by id. Nothing about an axis changes without a log entry, so that the rows of the newest entry stand
- * for all who look until the next one: at 10,000 axes reading them takes a quarter of a second.
+ * for all who look until the next one; then those are read again that entries since speak of. At 10,000 axes reading all of them
+ * takes a quarter of a second, and in the night a file comes in every few seconds.
  */
 export function readAllAxes(db: VaultDb, sites: SiteBounds): readonly AxisListRow[] {
   const logSeq = logQueries(db).newest.get()?.seq ?? -1
-  const known = kept.get(db)
-  const rows = known?.logSeq === logSeq ? known.rows : axisLists(db).all.all()
+  const rows = rowsAt(db, logSeq)
   kept.set(db, { logSeq, rows })
   return sites === null ? rows : rows.filter(row => sites.includes(row.site.id))
+}
+
+function rowsAt(db: VaultDb, logSeq: number): readonly AxisListRow[] {
+  const known = kept.get(db)
+  if (known?.logSeq === logSeq) return known.rows
+  const touched = known && touchedSince(db, known.logSeq, logSeq)
+  if (!touched) return axisLists(db).all.all()
+  const again = new Map([...touched].map(id => [id, readAxisRow(db, id)]))
+  const last = known.rows.at(-1)?.axis.id ?? 0
+  const added = [...again].flatMap(([id, row]) => row !== undefined && id > last ? [row] : []).sort((a, b) => a.axis.id - b.axis.id)
+  return [...known.rows.map(row => again.get(row.axis.id) ?? row), ...added]
 }
 
 export interface AxisFilter { readonly siteId?: number | undefined, readonly lineId?: number | undefined, readonly machineId?: number | undefined }

@@ -21,8 +21,8 @@ const ways: readonly Exclude<Way, { by: 'axes' }>[] = [
   { by: 'field', section: 'setup', field: 'thrustLimit' }, { by: 'weight', weight: 'harm' }, { by: 'unit', id: 1 }, { by: 'storer', id: 1 }, { by: 'changer', text: 'person:1' }, { by: 'nobody' }, { by: 'all' },
 ]
 
-/** Keys that were read before, lists that were handed in, and the key itself, newest first, for what has no condition. */
-const mayWalk = /^SCAN (w|[aikn] VIRTUAL TABLE.*|json_each VIRTUAL TABLE.*|log|change)$/
+/** Keys that were read before, lists that were handed in, the key itself, newest first, for what has no condition; and the tokens, of which this plant has one. */
+const mayWalk = /^SCAN (w|[aikn] VIRTUAL TABLE.*|json_each VIRTUAL TABLE.*|log|change|t(oken)? LEFT-JOIN)$/
 
 interface Prepared { readonly getQuery: () => { sql: string, params: unknown[] } }
 

@@ -1,7 +1,7 @@
 import { newestFirst, type ChangeKey, type Walked } from './keys'
 
 /*
- * The changes of many axes, newest first: stretch by stretch of the vault's order, each twice as long as the one before. In a
+ * The changes of many axes, newest first: stretch by stretch of the vault's order, each four times as long as the one before. In a
  * stretch every axis is one range of an index, and the few versions found there are put in order here; a walk along each axis
  * would read ahead on all of them, a join would sort all that they ever had.
  */
@@ -19,8 +19,8 @@ export interface AxesWalk {
   readonly axisIds: readonly number[]
   /** Versions of these axes from `low` to `high`. */
   readonly versionsOf: (axisIds: string, low: number, high: number) => number[]
-  /** What is asked for among the changes of these versions. */
-  readonly hitsAmong: (versionIds: string) => ChangeKey[]
+  /** What is asked for among the changes of these versions, lowest first. */
+  readonly hitsAmong: (versionIds: readonly number[]) => readonly ChangeKey[]
 }
 
 /** Each call reads on below what the last one read. A key that is no hit says how far it came. */
@@ -35,11 +35,11 @@ export function readAxes({ axisIds, versionsOf, hitsAmong }: AxesWalk, first: nu
       found.push(...versionsOf(axes, low, high).sort((a, b) => a - b))
       entries += axisIds.length
       high = low - 1
-      width *= 2
+      width *= 4
     }
     const taken = found.splice(-batch)
     batch = Math.min(batch * 2, mostBatch)
-    const keys = hitsAmong(JSON.stringify(taken)).filter(key => newestFirst(below, key) < 0).map(key => ({ ...key, hit: true })).sort(newestFirst)
+    const keys = hitsAmong(taken).filter(key => newestFirst(below, key) < 0).map(key => ({ ...key, hit: true })).sort(newestFirst)
     const end = { versionId: taken[0] ?? first, seq: 0, hit: false }
     const last = keys.at(-1)
     const came = last !== undefined && newestFirst(last, end) === 0 ? keys : [...keys, end]

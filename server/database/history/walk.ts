@@ -106,24 +106,24 @@ const mostSought = 3
 
 /** What is asked for among the changes of some versions, whose axes were asked for already. */
 export function hitsSql(asked: Asked): string {
-  const sought = asked.names !== null && asked.names.length <= mostSought
+  const sought = asked.names !== null && asked.names.length <= mostSought ? asked.names.map((_, at) => ` INDEXED BY change_field ON c.section = :section${at} AND c.field = :field${at} AND`) : null
   const conditions = conditionsOf({ ...asked, axisIds: null, ...(sought ? { names: null } : {}) })
-  const changes = sought
-    ? `CROSS JOIN json_each(:fields) n CROSS JOIN change c INDEXED BY change_field ON c.section = n.value ->> 0 AND c.field = n.value ->> 1 AND c.version_id = i.value`
-    : 'CROSS JOIN change c ON c.version_id = i.value'
-  return `SELECT c.version_id AS versionId, c.seq AS seq FROM json_each(:versionIds) i ${changes} ${joinsFor(conditions, 'change').replaceAll('w.version_id', 'c.version_id')}
-    WHERE ${['1', ...conditions.map(({ sql }) => sql)].join(' AND ')}`
+  return (sought ?? [' ON']).map(along => `SELECT c.version_id AS versionId, c.seq AS seq FROM json_each(:versionIds) i CROSS JOIN change c${along} c.version_id = i.value
+    ${joinsFor(conditions, 'change').replaceAll('w.version_id', 'c.version_id')} WHERE ${['1', ...conditions.map(({ sql }) => sql)].join(' AND ')}`).join(' UNION ALL ')
 }
 
+type Values = Record<string, string | number | null>
+
 /** Every name that any of the statements has; those that one does not have are left out by the caller of `prepare`. */
-export function walkValues(way: Way, asked: Asked): Record<string, string | number | null> {
+export function walkValues(way: Way, asked: Asked): Values {
   const list = (values: readonly unknown[] | null | undefined) => (values ? JSON.stringify(values) : null)
   return {
     waySection: way.by === 'field' ? way.section : null, wayField: way.by === 'field' ? way.field : null,
     wayWeight: way.by === 'weight' ? way.weight : null, wayId: 'id' in way ? way.id : null, wayText: way.by === 'changer' ? way.text : null,
-    names: list(asked.names?.map(({ section, field }) => `${section}.${field}`)), fields: list(asked.names?.map(({ section, field }) => [section, field])), section: asked.section, row: asked.row, weight: asked.weight,
+    names: list(asked.names?.map(({ section, field }) => `${section}.${field}`)), section: asked.section, row: asked.row, weight: asked.weight,
     axisIds: list(asked.axisIds), unitId: asked.unitId, siteId: asked.siteId, sites: list(asked.sites),
     peopleIds: list(asked.people?.ids), peopleTexts: list(asked.people?.texts),
+    ...Object.fromEntries((asked.names ?? []).slice(0, mostSought).flatMap(({ section, field }, at) => [[`section${at}`, section], [`field${at}`, field]])),
   }
 }
 
@@ -147,8 +147,20 @@ export function walkAlong(sqlite: Database.Database, way: Way, asked: Asked, { f
   return readAxes({
     axisIds: way.ids,
     versionsOf: (axisIds, low, high) => statementOf(sqlite, versionsOfAxesSql).all({ axisIds, low, high }).map(row => (row as { id: number }).id),
-    hitsAmong: versionIds => statementOf(sqlite, hitsSql(asked)).all({ ...values, versionIds }) as ChangeKey[],
+    hitsAmong: versionIds => rareAmong(sqlite, asked, values, versionIds) ?? statementOf(sqlite, hitsSql(asked)).all({ ...values, versionIds: JSON.stringify(versionIds) }) as ChangeKey[],
   }, first, after)
+}
+
+export const rareSql = 'SELECT version_id AS versionId, seq FROM change INDEXED BY change_field WHERE section = :section0 AND field = :field0 AND version_id BETWEEN :low AND :high LIMIT :limit'
+
+/** Where one field is all that is asked for, and it changed seldom, its changes in the whole stretch are fewer than the versions; null where not. */
+function rareAmong(sqlite: Database.Database, asked: Asked, values: Values, versionIds: readonly number[]): ChangeKey[] | null {
+  const [low, high] = [versionIds[0], versionIds.at(-1)]
+  if (asked.names?.length !== 1 || low === undefined || conditionsOf({ ...asked, axisIds: null, names: null }).length > 0) return null
+  const limit = versionIds.length * 2
+  const keys = statementOf(sqlite, rareSql).all({ ...values, low, high, limit }) as ChangeKey[]
+  const among = new Set(versionIds)
+  return keys.length === limit ? null : keys.filter(({ versionId }) => among.has(versionId))
 }
 
 function readIndex(sqlite: Database.Database, way: Exclude<Way, { by: 'axes' }>, asked: Asked, first: number, after: ChangeKey): () => Read {

@@ -13,6 +13,8 @@ import type { Plan } from './merge'
 
 /** Sites with more axes than this are looked up beside each key: most keys are theirs. */
 const mostAxes = 1000
+/** As many as a machine has: all their versions are soon looked through. */
+const fewAxes = 8
 /** With more people of one name than this the walks cost more than they save. */
 const mostPeople = 64
 
@@ -77,7 +79,7 @@ function plansFor(asked: Asked): Plan[] {
   if (unitId !== null) return [[{ by: 'unit', id: unitId }]]
   const along = planFor(asked)
   if (axisIds === null) return [along ?? [{ by: 'all' }]]
-  return [[{ by: 'axes', ids: axisIds }], ...(along === null ? [] : [along])]
+  return [[{ by: 'axes', ids: axisIds }], ...(along === null || axisIds.length <= fewAxes ? [] : [along])]
 }
 
 function planFor({ names, people, nobody, weight }: Asked): Plan | null {

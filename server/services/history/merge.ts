@@ -4,7 +4,8 @@ import { walkAlong, type Asked, type Stretch, type Way } from '#server/database/
 
 /** A request reads no more entries of an index than this for each plan; its page is then short and still has a next one. */
 export const mostEntries = 20_000
-const firstEntries = 512
+const firstEntries = 64
+const turns = [8000, mostEntries] as const
 
 export interface Found { readonly keys: readonly ChangeKey[], /** After which key to go on; null = that was all. */ readonly next: ChangeKey | null }
 
@@ -64,16 +65,18 @@ class Search {
 
 /**
  * The newest keys below `after` that are asked for. Every plan leads to the same page; which of them reads least depends on how
- * often the field changed and how many axes the place has, which nobody knows beforehand. So all go on in turns, each turn as
- * long as all before it: the best one has the page before the others have read more than it twice over.
+ * often the field changed and how many axes the place has, which nobody knows beforehand. The last one has a first short turn:
+ * what is rare in the whole vault ends there. Then they go on in turns, the first one with a long one: its entries cost least.
  */
 export function findKeys(sqlite: Database.Database, plans: readonly Plan[], asked: Asked, stretch: Stretch, after: ChangeKey, limit: number): Found {
   const searches = plans.map(ways => new Search(ways.map(way => new Walk(walkAlong(sqlite, way, asked, stretch, after))), limit))
-  for (let entries = firstEntries; ; entries = Math.min(entries * 2, mostEntries)) {
+  const rare = searches.at(-1)?.upTo(firstEntries)
+  if (rare) return rare
+  for (const entries of turns) {
     for (const search of searches) {
       const found = search.upTo(entries)
       if (found !== null) return found
     }
-    if (entries === mostEntries) return searches.map(search => search.page()).reduce((best, page) => (newestFirst(best.next, page.next) < 0 ? page : best))
   }
+  return searches.map(search => search.page()).reduce((best, page) => (newestFirst(best.next, page.next) < 0 ? page : best))
 }

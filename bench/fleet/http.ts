@@ -13,7 +13,7 @@ import { figuresOf, spread, timesOfAsync } from './times'
 const askings = 100
 const auditor = 'ines.morel@larkfield.example'
 
-export async function measureHttp(folder: string, extent: Extent): Promise<Figure[]> {
+export async function measureHttp(folder: string, extent: Extent, tell: (figures: readonly Figure[]) => void): Promise<void> {
   mkdirSync(folder, { recursive: true })
   const server = new BuiltServer(folder)
   const begun = performance.now()
@@ -27,16 +27,16 @@ export async function measureHttp(folder: string, extent: Extent): Promise<Figur
       if (answer.status !== 200) throw new Error(`${path} answered ${answer.status}: ${text.slice(0, 300)}`)
       return text
     }
-    const asked = async (name: string, aim: number, path: (at: number) => string, times = askings) => figuresOf(`over HTTP: ${name}`, await timesOfAsync(times, at => get(path(at))), aim)
-    const figures = [atMost('start of the server until it answers', started, 5000, 'ms')]
+    const asked = async (name: string, aim: number, path: (at: number) => string, times = askings) => { tell(figuresOf(`over HTTP: ${name}`, await timesOfAsync(times, at => get(path(at))), aim)) }
+    tell([atMost('start of the server until it answers', started, 5000, 'ms')])
     for (const [name, question] of Object.entries(historyQuestions)) {
-      figures.push(...await asked(`history, ${name}`, 20, at => `/api/history?${new URLSearchParams(Object.entries(question(at, extent)).map(([key, value]) => [key, String(value)])).toString()}`))
+      await asked(`history, ${name}`, 20, at => `/api/history?${new URLSearchParams(Object.entries(question(at, extent)).map(([key, value]) => [key, String(value)])).toString()}`)
     }
     const axis = (at: number) => 1 + spread(at, extent.axes)
     const paths: Readonly<Record<string, readonly [aim: number, path: (at: number) => string]>> = {
       'board, whole': [20, () => '/api/board'],
       'axes, first page': [20, () => '/api/axes'],
-      'axes of a machine': [20, at => `/api/axes?machine=${1 + spread(at, extent.axes / 8)}`],
+      'axes of a machine': [20, at => `/api/axes?machineId=${1 + spread(at, extent.axes / 8)}`],
       'units, search': [20, at => `/api/units?search=LP-00${at % 90}`],
       'axis': [20, at => `/api/axes/${axis(at)}`],
       'versions of an axis': [20, at => `/api/axes/${axis(at)}/versions`],
@@ -52,9 +52,8 @@ export async function measureHttp(folder: string, extent: Extent): Promise<Figur
       'checkpoint of now': [20, () => '/api/log/checkpoint'],
       'proof of an entry': [20, at => `/api/log/proof?entry=${spread(at, extent.versions)}`],
     }
-    for (const [name, [aim, path]] of Object.entries(paths)) figures.push(...await asked(name, aim, path, name === 'board, whole' ? 20 : askings))
-    figures.push(...await uploads(server, await server.signIn('runa.haldersen@larkfield.example'), extent, get))
-    return figures
+    for (const [name, [aim, path]] of Object.entries(paths)) await asked(name, aim, path, name === 'board, whole' ? 20 : askings)
+    tell(await uploads(server, await server.signIn('runa.haldersen@larkfield.example'), extent, get))
   }
   finally {
     server.stop()

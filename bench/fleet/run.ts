@@ -58,6 +58,6 @@ const verified = await measureVerify(folder)
 told(verified.figures)
 // Kept as the server keeps one: it would begin one of its own when it starts, in the way of what is measured.
 await on(folder, vault => keepVerification(vault, { ...verified, outcome: 'sound', faults: 0, found: [] }))
-told(await measureHttp(folder, extent))
+await measureHttp(folder, extent, told)
 if (values.json) writeFileSync(values.json, `${JSON.stringify({ size, figures, plans }, null, 2)}\n`)
 if (plans.some(({ holds }) => !holds)) process.exitCode = 1

@@ -9,7 +9,7 @@ const touches: Readonly<Record<Kind, 'none' | 'itself' | 'its axis' | 'any'>> = 
   'axis': 'itself',
   'fitting': 'its axis', 'version': 'its axis', 'sighting': 'its axis', 'known-good': 'its axis', 'waiver': 'its axis', 'label-print': 'its axis', 'swap': 'its axis',
   'vault': 'none', 'setting': 'none', 'token': 'none', 'upload': 'none', 'content': 'none', 'tray': 'none', 'tray-settled': 'none', 'kit': 'none', 'letter': 'none', 'letter-choice': 'none', 'watch': 'none',
-  'finding': 'none', 'finding-version': 'none', 'finding-act': 'none', 'planned-change': 'none', 'checkpoint': 'none', 'verification': 'none', 'rule': 'none',
+  'finding': 'none', 'finding-version': 'none', 'finding-act': 'none', 'planned-change': 'none', 'report': 'none', 'checkpoint': 'none', 'verification': 'none', 'rule': 'none',
   'person': 'any', 'site': 'any', 'line': 'any', 'machine': 'any', 'unit': 'any', 'nameplate': 'any', 'version-void': 'any', 'check-set': 'any', 'attachment': 'any', 'swap-step': 'any', 'read-back': 'any', 'firmware-gap': 'any',
 }
 

@@ -60,6 +60,20 @@ describe('the rule at the top', () => {
   }
 })
 
+describe('the open menu', () => {
+  it('lets nothing beneath it be hit, and closes where the page is clicked', async () => {
+    const page = await windowOf('planner')
+    await page.setViewportSize(desk)
+    await arrive(page, '/format', /The settings file/)
+    await page.getByRole('button', { name: 'Menu' }).click()
+    await page.getByRole('link', { name: 'Nameplates' }).waitFor()
+    expect(await page.locator('main').evaluate(main => (main as HTMLElement).inert)).toBe(true)
+    await page.mouse.click(300, 700)
+    await page.getByRole('link', { name: 'Nameplates' }).waitFor({ state: 'detached' })
+    expect(await page.locator('main').evaluate(main => (main as HTMLElement).inert)).toBe(false)
+  })
+})
+
 describe('on paper', () => {
   it('the board has every axis, and the head of its table on each page of it', async () => {
     const page = await windowOf('planner')

@@ -47,7 +47,7 @@ export function useOutbox() {
       const later = problem.unanswered || passing.has(problem.problem.status)
       store.trouble = later && !problem.unanswered ? problem.problem : null
       if (!later && keptAttempts.has(problem.code) && problem.problem.current) await store.settle(entry, problem.problem.current)
-      else if (!later) await store.refuse(entry.key, problem.problem)
+      else if (!later) await store.refuse(entry, problem.problem)
       return !later
     }
   }

@@ -43,8 +43,8 @@ export function useSwap(id: () => number) {
   const mine = computed(() => store.entries.filter(entry => entry.swapId === id() && entry.personId === session.me?.id))
   const waiting = computed(() => mine.value.filter(({ refused }) => refused === null))
   const refused = computed(() => mine.value.find(entry => entry.refused !== null))
-  // What the other device did is shown beside what was refused.
-  watch(() => refused.value?.key, key => key && reload())
+  // What the other device did stands beside what was refused at once.
+  watch(() => store.overtaken, told => told?.swapId === id() && take(told.current as Swap), { flush: 'sync' })
   const standing = computed(() => swap.value && store.loaded ? standingOf(swap.value, waiting.value) : undefined)
 
   /** What is in, and by which values: what was read for it holds until that changes. */

@@ -25,6 +25,8 @@ export const useOutboxStore = defineStore('outbox', () => {
   const sending = ref(false)
   /** The entry that was taken last, with what the vault answered. */
   const taken = shallowRef<{ readonly entry: OutboxEntry, readonly answer: unknown }>()
+  /** The swap as another device left it, told with the newest refusal. */
+  const overtaken = shallowRef<{ readonly swapId: number, readonly current: unknown }>()
 
   /** One change after another: each begins with what the one before it left. */
   let turn: Promise<unknown> = Promise.resolve()
@@ -85,8 +87,11 @@ export const useOutboxStore = defineStore('outbox', () => {
     now.flatMap(entry => entry.key !== refused.key ? [entry] : again ? [{ ...again, order: entry.order }] : []), refused, rev,
   ))
   const drop = (key: string) => change(now => now.filter(entry => entry.key !== key))
-  /** Why it was not taken, in words about the entry: what the vault answered of the swap does not stay with it on the device. */
-  const refuse = (key: string, { current: _current, detail, ...problem }: Problem) => change(now => withRefusal(now, key, { ...problem, detail: problem.code === 'edited-meanwhile' ? '' : detail }))
+  /** Why it was not taken, in words about the entry: what the vault answered of the swap is shown, and does not stay on the device. */
+  function refuse({ key, swapId }: OutboxEntry, { current, detail, ...problem }: Problem): Promise<void> {
+    if (current) overtaken.value = { swapId, current }
+    return change(now => withRefusal(now, key, { ...problem, detail: problem.code === 'edited-meanwhile' ? '' : detail }))
+  }
   /** Taken: it goes, and what was entered after it follows on the answer. */
   async function settle(entry: OutboxEntry, answer: unknown): Promise<void> {
     const rev = (answer as { rev?: unknown } | null)?.rev
@@ -99,5 +104,5 @@ export const useOutboxStore = defineStore('outbox', () => {
     else silentSince.value ??= new Date().toISOString()
   }
 
-  return { entries, toSend, loose, loaded, ready, silentSince, trouble, sending, taken, add, decide, drop, refuse, settle, heard }
+  return { entries, toSend, loose, loaded, ready, silentSince, trouble, sending, taken, overtaken, add, decide, drop, refuse, settle, heard }
 })

@@ -89,6 +89,7 @@ describe('what is entered', () => {
     // What the vault answered of the swap is not left on the device.
     expect((await kept())[0]?.refused).toMatchObject({ detail: '' })
     expect((await kept())[0]?.refused).not.toHaveProperty('current')
+    expect(useOutboxStore().overtaken).toMatchObject({ swapId: 118, current: { rev: 7 } })
     answer = () => ({ rev: 8 })
     const [first] = useOutboxStore().entries
     await outbox.sendAgain(first!, 7)

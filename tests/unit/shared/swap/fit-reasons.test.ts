@@ -125,6 +125,12 @@ describe('hard: a force outside the new unit’s range', () => {
     expect(going(150.1)).toEqual(['force-outside'])
   })
 
+  it('a press as light as one likes where the plate names no least force', () => {
+    const { pressForceMin: _least, ...light } = newer()
+    expect(codes({ content: moves(press(1, 50, 60, { forceLimit: 0.1 })), into: light })).toEqual([])
+    expect(reasons({ content: moves(press(1, 50, 60, { forceLimit: 71 })), into: light })[0]?.message).toBe('Move 1 would push with 71 % (284 N), and B does up to 70 % (280 N).')
+  })
+
   it('points at the row as it stands in the table, and leaves empty rows out', () => {
     const content = moves(absolute(3, 1), { ...unused(5), forceLimit: 900 }, absolute(9, 1, { forceLimit: 151 }))
     expect(reasons({ content, into: weak })).toEqual([{ code: 'force-outside', hard: true, message: 'Move 9 would push with 151 % (604 N), and B does up to 150 % (600 N).', at: ['/moves/2/forceLimit'] }])

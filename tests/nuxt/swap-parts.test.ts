@@ -1,8 +1,9 @@
 import { mountSuspended } from '@nuxt/test-utils/runtime'
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
-import { BaseChoices, SwapAttempt, SwapChainCard, SwapHoldButton, SwapMissingKeys, SwapScan, SwapStepMotion, SwapTwoCodes } from '#components'
+import { BaseChoices, SwapAsFound, SwapAttempt, SwapChainCard, SwapHoldButton, SwapMissingKeys, SwapScan, SwapStepMotion, SwapTwoCodes } from '#components'
 import { storedContent } from '~/utils/stored-content'
-import { attempt, differing, readBack, swapKit } from '../support/swap-answers'
+import { axis } from '../support/axis-answers'
+import { attempt, begun, differing, readBack, swapKit } from '../support/swap-answers'
 import { soon } from '../support/soon'
 
 vi.setConfig({ testTimeout: 30_000 })
@@ -193,6 +194,19 @@ describe('the first motion', () => {
     expect(words(step.text())).toContain('Not yet: 2 values are still to be taught.')
     expect(step.findAll('[role="img"][aria-label="empty"]')).toHaveLength(2)
     expect(step.find('.now').exists()).toBe(false)
+  })
+})
+
+describe('a file as found that differs', () => {
+  const asFound = { versionId: 20, number: 15, capturedAt: '2026-11-30T01:10:00.000Z', scribeCode: 'TM112-VD2HP', serial: 'HL40-23-00417', compare: 'differs' as const }
+  const chosen = { decidedBy: 'Runa Haldersen', reason: 'the new lids are lower' }
+  const offered = async (source: typeof begun.source) => {
+    const shown = await mountSuspended(SwapAsFound, { props: { swap: { ...begun, asFound, source }, axis, axisKind: 'linear', nameplate: undefined, settled: false, busy: false } })
+    return shown.getComponent(BaseChoices).findAll('label').map(label => words(label.text()).replace(/, .*$/, ''))
+  }
+  it('leaves both to be chosen, also once the other was decided for', async () => {
+    expect(await offered(begun.source)).toEqual(['v14', 'v15'])
+    expect(await offered({ ...asFound, released: false, mark: null, chosen })).toEqual(['v14', 'v15'])
   })
 })
 

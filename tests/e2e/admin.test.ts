@@ -4,7 +4,7 @@ import { openWindow, signIn, startBrowser } from '../support/browser'
 import { jsonFile, lidPress } from '../support/lid-press'
 import { admin, people, startServer, type TestServer } from '../support/server'
 import { plantOn } from '../support/server-plant'
-import { field } from '../support/walk'
+import { field, goTo } from '../support/walk'
 
 let server: TestServer
 let browser: Browser
@@ -18,7 +18,7 @@ beforeAll(async () => {
   await (await plantOn(server)).axis('LID-02.Z', 'HL40-23-00417');
   ({ page } = await openWindow(browser, server.url))
   await signIn(page, admin.email, admin.password)
-  await page.getByRole('link', { name: 'People' }).first().click()
+  await goTo(page, 'People')
 })
 afterAll(async () => {
   await browser?.close()

@@ -4,7 +4,7 @@ import type { SettingsFile } from '../../shared/settings/types'
 import { openWindow, signIn, startBrowser } from '../support/browser'
 import { csvFile, inserted, jsonFile, lidPress, readOrFail } from '../support/lid-press'
 import { admin, startServer, type TestServer } from '../support/server'
-import { downloaded, drop, field, pick } from '../support/walk'
+import { downloaded, drop, field, goTo, pick } from '../support/walk'
 
 /*
  * The whole job of a planner, from an empty vault to the kit for a replacement unit, in the order of the day. Each step goes
@@ -78,7 +78,7 @@ describe('an empty vault', () => {
   })
 
   it('the administrator registers people, and what is wrong stands at the field', async () => {
-    await page.getByRole('link', { name: 'People' }).first().click()
+    await goTo(page, 'People')
     for (const person of [runa, asta]) {
       await page.getByRole('button', { name: 'Register a person' }).click()
       const form = page.getByRole('form', { name: 'A new person' })
@@ -139,7 +139,7 @@ describe('the plant is registered', () => {
   })
 
   it('a nameplate and two units of the model', async () => {
-    await page.getByRole('link', { name: 'Nameplates' }).click()
+    await goTo(page, 'Nameplates')
     await page.getByRole('button', { name: 'Register a model' }).click()
     const plate = page.getByRole('form', { name: 'A new nameplate' })
     await field(plate, 'Model').fill('HL40-200V')
@@ -199,7 +199,7 @@ describe('what the drive holds comes in', () => {
   })
 
   it('a rule of the site is made', async () => {
-    await page.getByRole('link', { name: 'Rules' }).click()
+    await goTo(page, 'Rules')
     await page.getByRole('button', { name: 'Make a rule' }).click()
     const form = page.getByRole('form', { name: 'A new rule' })
     await field(form, 'Site').selectOption({ label: 'Larkfield Preserves' })
@@ -262,7 +262,7 @@ describe('known-good', () => {
   })
 
   it('is marked by another planner once the rule holds no more; a wrong password signs nothing', async () => {
-    await other.getByRole('link', { name: 'Rules' }).click()
+    await goTo(other, 'Rules')
     await other.getByRole('row', { name: /at most 40 %/ }).getByRole('button', { name: 'end' }).click()
     const form = other.getByRole('form', { name: /^End the rule/ })
     await field(form, 'Why it holds no more').fill('The new lids bear 320 N, test report 44')

@@ -3,7 +3,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { desk, openWindow, phone, picture, signIn, sidewaysScroll, startBrowser, violations } from '../support/browser'
 import { admin, people, startServer, type TestServer } from '../support/server'
 import { plantOn, type ServerPlant } from '../support/server-plant'
-import { downloaded, drop, field } from '../support/walk'
+import { downloaded, drop, field, goTo } from '../support/walk'
 
 /*
  * A planner who was never here before has a new model, and a list as its drive gives it out: own numbers, decimal commas,
@@ -51,7 +51,7 @@ const cell = (section: 'Parameters' | 'Columns of the moves', name: string) => p
 
 describe('a new model', () => {
   it('is registered with a list of its own, begun from a sample', async () => {
-    await page.getByRole('link', { name: 'Nameplates' }).click()
+    await goTo(page, 'Nameplates')
     await page.getByRole('button', { name: 'Register a model' }).click()
     const form = page.getByRole('form', { name: 'A new nameplate' })
     await field(form, 'Model').fill('KT20')
@@ -115,7 +115,7 @@ describe('a file in the drive’s own layout', () => {
 
   it('breaks a new rule: every axis judged again is one list, and the stop is accepted until a day', async () => {
     await plant.post('/api/rules', { scope: 'machine', scopeId: plant.machineId, field: 'thrustLimit', max: 50, reason: 'Cartons crush' })
-    await page.getByRole('link', { name: 'Rules' }).click()
+    await goTo(page, 'Rules')
     await page.getByRole('button', { name: 'Judge every axis again' }).click()
     await page.getByRole('row', { name: /PSH-01\.X v1 0 → 1 .*Cartons crush/ }).getByRole('link').click()
     await page.getByRole('button', { name: 'Accept with a reason' }).first().click()

@@ -45,3 +45,12 @@ export async function arrive(page: Page, address: string, ready: RegExp): Promis
   await page.getByRole('heading', { level: 1, name: ready }).waitFor()
   await page.getByRole('status').filter({ hasText: /^Reading/ }).first().waitFor({ state: 'detached' })
 }
+
+/** Opens a page by its word in the rule at the top, or in the menu where it does not fit the rule. */
+export async function goTo(page: Page, word: string): Promise<void> {
+  const rule = page.getByRole('navigation', { name: 'Main' })
+  await rule.getByRole('link', { name: 'Board', exact: true }).waitFor()
+  const link = rule.getByRole('link', { name: word, exact: true }).filter({ visible: true })
+  if (await link.count() === 0) await page.getByRole('button', { name: 'Menu' }).click()
+  await link.click()
+}

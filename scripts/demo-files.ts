@@ -69,7 +69,7 @@ export type Act = When & (
   | { readonly act: 'watch', readonly by: string }
   | { readonly act: 'plan', readonly by: string, readonly axes: readonly string[], readonly fields: readonly string[], readonly hours: number, readonly reason: string, readonly allowedBy: string }
   | SwapAct
-  | { readonly act: 'rule', readonly by: string, readonly rule: { readonly scope: 'machine', readonly machine: string, readonly field: string, readonly max: number, readonly reason: string } }
+  | { readonly act: 'rule', readonly by: string, readonly rule: { readonly scope: 'axis', readonly axis: string, readonly field: string, readonly max: number, readonly reason: string } }
 )
 
 const larkfield = (name: string) => fileURLToPath(new URL(`../fixtures/larkfield/${name}`, import.meta.url))

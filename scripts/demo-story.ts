@@ -25,7 +25,6 @@ export interface Cast {
   /** What the script of the engineering station sends with; made anew each year, as tokens end. */
   readonly station: () => TokenActor
   readonly axisIds: Record<string, number>
-  readonly machineIds: Record<string, number>
   readonly siteId: number
 }
 
@@ -132,8 +131,8 @@ export function tellStory(vault: Vault, cast: Cast, plant: Plant, story: readonl
         break
       }
       case 'rule': {
-        const { machine, ...rule } = act.rule
-        makeRule(vault, person(cast, act.by), { ...rule, scopeId: cast.machineIds[machine] ?? fail(`no machine ${machine}`) })
+        const { axis, ...rule } = act.rule
+        makeRule(vault, person(cast, act.by), { ...rule, scopeId: axisId(axis) })
         break
       }
     }

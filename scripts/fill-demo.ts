@@ -63,8 +63,8 @@ async function register(vault: Vault, plant: Plant): Promise<Cast> {
   }
   const planner = people.planner
   if (!planner || !people.admin) throw new Error('the plant has no planner')
-  const { axisIds, machineIds, siteId } = registerPlaces(vault, planner, plant)
-  return { people, station: stationOf(vault, people.admin, plant), axisIds, machineIds, siteId }
+  const { axisIds, siteId } = registerPlaces(vault, planner, plant)
+  return { people, station: stationOf(vault, people.admin, plant), axisIds, siteId }
 }
 
 /** The station's token, made anew when it has ended. */
@@ -97,7 +97,7 @@ function registerPlaces(vault: Vault, planner: PersonActor, plant: Plant) {
     if (!plant.unlabelled.includes(axis.tag)) recordLabel(vault, planner, axisIds[axis.tag] as number, { size: '50x25' })
   }
   for (const spare of plant.spares) registerUnit(vault, planner, { ...spare, state: 'spare', siteId })
-  return { axisIds, machineIds, siteId }
+  return { axisIds, siteId }
 }
 
 function actorOf(id: number, name: string, roles: readonly Role[]): PersonActor {

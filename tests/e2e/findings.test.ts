@@ -55,7 +55,7 @@ describe('the night shift’s change', () => {
     await page.getByRole('heading', { level: 2, name: 'What changed' }).waitFor()
     const changes = page.getByRole('table').filter({ hasText: 'thrust limit' }).first()
     expect((await changes.innerText()).replaceAll(/\s+/g, ' ')).toMatch(/38.*55/)
-    await page.getByText(/at most 45 %.*by a rule of the machine\. Jars crack above 300 N/).waitFor()
+    await page.getByText(/at most 45 %.*by a rule of the axis\. Jars crack above 300 N/).waitFor()
     const allowed = page.getByRole('region', { name: 'What was allowed' }).or(page.locator('section', { has: page.getByRole('heading', { name: 'What was allowed' }) }))
     expect(await allowed.first().innerText()).toMatch(/Allowed by\s+nobody named/)
     await page.getByRole('heading', { level: 2, name: /^Move \d/ }).waitFor()

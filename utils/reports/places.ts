@@ -30,7 +30,7 @@ export function scopeOf(value: unknown): { scope?: ReportScope, scopeId?: number
   return known === undefined || !/^[1-9]\d*$/.test(id) ? {} : { scope: known, scopeId: Number(id) }
 }
 
-/** `since the first version until now`; `exact` writes an instant. */
+/** From when to when, at the latest when it was asked for; `exact` writes an instant. */
 export function periodWords({ from, to, askedAt }: Pick<Report, 'from' | 'to' | 'askedAt'>, exact: (iso: string) => string): string {
   return `${from === null ? 'from the first version' : exact(from)} to ${exact(to === null || to > askedAt ? askedAt : to)}`
 }

@@ -38,11 +38,11 @@ const everyRule = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best
 /** The rules whose answer hangs on colours: all that another light can change on a page that stays the same. */
 const colourRules = ['color-contrast', 'link-in-text-block']
 
-/** What axe finds against WCAG 2.2 A and AA and its best practices, one line a violation. */
-export async function violations(page: Page, rules: 'all' | 'colours' = 'all'): Promise<string[]> {
+/** What axe finds against WCAG 2.2 A and AA and its best practices, one line a violation; on the whole page, or within one part of it. */
+export async function violations(page: Page, rules: 'all' | 'colours' = 'all', within?: string): Promise<string[]> {
   // Without frames of other origins the older way says the same and takes half the time.
   const axe = new AxeBuilder({ page }).setLegacyMode(true).options({ resultTypes: ['violations'], runOnly: rules === 'all' ? everyRule : { type: 'rule', values: colourRules } })
-  const found = await axe.analyze()
+  const found = await (within === undefined ? axe : axe.include(within)).analyze()
   return found.violations.map(violation => `${violation.id}: ${violation.nodes.map(node => node.target.join(' ')).slice(0, 3).join(' | ')}`)
 }
 
